@@ -1,0 +1,13 @@
+import { bigint, check, pgTable, text, timestamp } from 'drizzle-orm/pg-core';
+import { sql } from 'drizzle-orm';
+
+/** Files in storage, by content: the same bytes are stored once in the studio. */
+export const blobs = pgTable(
+  'blobs',
+  {
+    sha256: text('sha256').primaryKey(),
+    byteSize: bigint('byte_size', { mode: 'number' }).notNull(),
+    createdAt: timestamp('created_at', { withTimezone: true }).notNull().defaultNow(),
+  },
+  (t) => [check('blobs_sha256_shape', sql`${t.sha256} ~ '^[0-9a-f]{64}$'`), check('blobs_size', sql`${t.byteSize} >= 0`)],
+);

@@ -1,0 +1,56 @@
+import { sql } from 'drizzle-orm';
+import { bigint, check, index, integer, pgTable, text, timestamp, uniqueIndex, uuid, type AnyPgColumn } from 'drizzle-orm/pg-core';
+import { IMPORT_FILE_STATES } from '../../lib/rules/states';
+import { assetVersions } from './asset-versions';
+import { assets } from './assets';
+import { blobs } from './blobs';
+import { oneOf } from './checks';
+import { imports } from './imports';
+
+/** One file of an import, from its upload to its end. Ends once: done or failed. */
+export const importFiles = pgTable(
+  'import_files',
+  {
+    id: uuid('id').primaryKey().defaultRandom(),
+    importId: uuid('import_id')
+      .notNull()
+      .references(() => imports.id, { onDelete: 'restrict' }),
+    /** Path as it was dropped, with forward slashes. */
+    name: text('name').notNull(),
+    state: text('state', { enum: IMPORT_FILE_STATES }).notNull().default('queued'),
+    sha256: text('sha256')
+      .notNull()
+      .references(() => blobs.sha256, { onDelete: 'restrict' }),
+    byteSize: bigint('byte_size', { mode: 'number' }).notNull(),
+    /** What the script or the person said instead of the name pattern. */
+    assetOverride: text('asset_override'),
+    versionOverride: integer('version_override'),
+    outsideIdOverride: text('outside_id_override'),
+    categoryOverride: text('category_override'),
+    assetId: uuid('asset_id').references(() => assets.id, { onDelete: 'restrict' }),
+    versionId: uuid('version_id').references((): AnyPgColumn => assetVersions.id, { onDelete: 'restrict' }),
+    parts: integer('parts'),
+    problems: integer('problems'),
+    /** Warnings of the version rules: another take, a gap, unchanged. */
+    remark: text('remark'),
+    errorCode: text('error_code'),
+    errorMessage: text('error_message'),
+    errorLine: integer('error_line'),
+    errorColumn: integer('error_column'),
+    attempts: integer('attempts').notNull().default(0),
+    /** A worker holds the file until then; past it another may take it. */
+    leaseUntil: timestamp('lease_until', { withTimezone: true }),
+    leaseBy: uuid('lease_by'),
+    uploadedAt: timestamp('uploaded_at', { withTimezone: true }).notNull().defaultNow(),
+    endedAt: timestamp('ended_at', { withTimezone: true }),
+  },
+  (t) => [
+    uniqueIndex('import_files_import_name_key').on(t.importId, t.name),
+    index('import_files_open_idx')
+      .on(t.importId, t.state)
+      .where(sql`state in ('queued', 'reading', 'measuring')`),
+    check('import_files_state', oneOf(t.state, IMPORT_FILE_STATES)),
+    check('import_files_end', sql`(${t.state} in ('done', 'failed')) = (${t.endedAt} is not null)`),
+    check('import_files_error', sql`(${t.state} = 'failed') = (${t.errorCode} is not null)`),
+  ],
+);

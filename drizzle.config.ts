@@ -1,0 +1,9 @@
+import { defineConfig } from 'drizzle-kit';
+
+export default defineConfig({
+  dialect: 'postgresql',
+  schema: './db/schema/*.ts',
+  out: './drizzle',
+  strict: true,
+  verbose: false,
+});

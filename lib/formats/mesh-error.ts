@@ -1,0 +1,59 @@
+/** Where in a text file something was found: line and column count from 1, the column in characters. */
+export interface TextPlace {
+  line: number;
+  column: number;
+  /** The whole line as text; cut to a window around the column for display. */
+  text: string;
+}
+
+export interface MeshErrorFields {
+  code: string;
+  /** What was wrong, as a clause without place: "expected a number, found \"abc\"". */
+  detail: string;
+  /** What should have stood there, for a caller that lists expectations; null where the error is not about one word. */
+  expected?: string | null;
+  found?: string | null;
+  place?: TextPlace | null;
+}
+
+const EXCERPT_BEFORE = 48;
+const EXCERPT_AFTER = 32;
+
+/**
+ * A mesh file that cannot be read. `message` carries the place ("line 812, column 9: expected …, found …"),
+ * `detail` is the same without it, `excerpt` the line with a caret under the column (null where the whole file is meant).
+ */
+export class MeshError extends Error {
+  readonly code: string;
+  readonly detail: string;
+  readonly line: number | null;
+  readonly column: number | null;
+  readonly expected: string | null;
+  readonly found: string | null;
+  readonly excerpt: string | null;
+
+  constructor(fields: MeshErrorFields) {
+    const place = fields.place ?? null;
+    super(place ? `line ${place.line}, column ${place.column}: ${fields.detail}` : fields.detail);
+    this.name = 'MeshError';
+    this.code = fields.code;
+    this.detail = fields.detail;
+    this.line = place?.line ?? null;
+    this.column = place?.column ?? null;
+    this.expected = fields.expected ?? null;
+    this.found = fields.found ?? null;
+    this.excerpt = place ? caretExcerpt(place) : null;
+  }
+}
+
+/** The line, cut to a window around the column, and a caret below it. Tabs become one blank so that the caret stays in step. */
+function caretExcerpt(place: TextPlace): string {
+  const characters = Array.from(place.text.replaceAll('\t', ' '));
+  const at = Math.min(place.column - 1, characters.length);
+  const from = Math.max(0, at - EXCERPT_BEFORE);
+  const to = Math.min(characters.length, at + EXCERPT_AFTER);
+  const head = from > 0 ? '… ' : '';
+  const tail = to < characters.length ? ' …' : '';
+  const shown = head + characters.slice(from, to).join('') + tail;
+  return `${shown}\n${' '.repeat(head.length + at - from)}^`;
+}
