@@ -7,6 +7,13 @@ import type { WarningList } from './warning-list';
 /** Tags that change nothing that is measured: they act on texture coordinates only. */
 const FACE_VARYING = new Set(['facevaryinginterpolateboundary', 'facevaryingpropagatecorners']);
 
+/** How many whole numbers and decimals follow, and where that was said. */
+interface TagCounts {
+  ints: number;
+  floats: number;
+  at: number;
+}
+
 /**
  * The sharpness tags of an OBJ file, as the shapes of OpenSubdiv's regression suite carry them:
  * `t name ints/floats/strings …`, vertex indices from 0, `interpolateboundary` 0 none, 1 edge and corner, 2 edge only.
@@ -34,16 +41,16 @@ export class ObjTags {
     }
     const counts = this.counts(cursor);
     if (name === 'interpolateboundary') this.readBoundary(cursor, counts.ints);
-    else if (name === 'crease') this.readCrease(cursor, counts.ints, counts.floats, vertices);
-    else this.readCorner(cursor, counts.ints, counts.floats, vertices);
+    else if (name === 'crease') this.readCrease(cursor, counts, vertices);
+    else this.readCorner(cursor, counts, vertices);
   }
 
-  private counts(cursor: LineCursor): { ints: number; floats: number } {
+  private counts(cursor: LineCursor): TagCounts {
     if (!cursor.nextWord()) throw cursor.fail('bad_tag', 'argument counts such as 2/1/0');
     const at = cursor.at;
     const match = /^(\d{1,7})\/(\d{1,7})\/(\d{1,7})$/.exec(cursor.word());
     if (!match) throw cursor.fail('bad_tag', 'argument counts such as 2/1/0', at);
-    return { ints: Number(match[1]), floats: Number(match[2]) };
+    return { ints: Number(match[1]), floats: Number(match[2]), at };
   }
 
   private readBoundary(cursor: LineCursor, ints: number): void {
@@ -60,9 +67,9 @@ export class ObjTags {
   }
 
   /** A chain of n vertices tags n − 1 edges, with one sharpness for all or one for each. */
-  private readCrease(cursor: LineCursor, ints: number, floats: number, vertices: number): void {
+  private readCrease(cursor: LineCursor, { ints, floats, at }: TagCounts, vertices: number): void {
     if (ints < 2 || (floats !== 1 && floats !== ints - 1)) {
-      throw cursor.fail('bad_tag', 'a crease of at least two vertices with one sharpness, or one for each edge (counts such as 2/1/0)');
+      throw cursor.fail('bad_tag', 'a crease of at least two vertices with one sharpness, or one for each edge (counts such as 2/1/0)', at);
     }
     const chain = Array.from({ length: ints }, () => this.vertex(cursor, vertices));
     let sharpness = 0;
@@ -74,9 +81,9 @@ export class ObjTags {
     }
   }
 
-  private readCorner(cursor: LineCursor, ints: number, floats: number, vertices: number): void {
+  private readCorner(cursor: LineCursor, { ints, floats, at }: TagCounts, vertices: number): void {
     if (ints < 1 || (floats !== 1 && floats !== ints)) {
-      throw cursor.fail('bad_tag', 'at least one corner vertex with one sharpness, or one for each (counts such as 1/1/0)');
+      throw cursor.fail('bad_tag', 'at least one corner vertex with one sharpness, or one for each (counts such as 1/1/0)', at);
     }
     const corners = Array.from({ length: ints }, () => this.vertex(cursor, vertices));
     let sharpness = 0;
