@@ -1,0 +1,150 @@
+import type { Cage } from '../cage';
+import type { Place } from '../measured';
+import { counted, placeOf, type FindingList } from './findings';
+import { halfEdgeEnds } from './match-edges';
+import type { Bodies } from './partition';
+import { findTurnedFaces } from './turned-faces';
+import { nextHalfEdge, previousHalfEdge, type EdgeDefects, type Topology } from './topology';
+
+/** Area of a face relative to the square of its perimeter below which it counts as none. */
+const NO_AREA = 1e-14;
+
+/** Finds what forbids a number. Returns the faces that stand in a structural problem (1), for their bodies to be left out. */
+export function diagnoseStructure(cage: Cage, mesh: Topology, defects: EdgeDefects, bodies: Bodies, findings: FindingList): Uint8Array {
+  const bad = new Uint8Array(mesh.faces);
+  const at = (face: number, fields: Partial<Place>): Place => {
+    const vertex = fields.vertex ?? fields.edge?.[0] ?? mesh.vertexOf[mesh.starts[face]];
+    const position = vertex === undefined ? null : positionOf(cage, vertex);
+    return placeOf({ face, position, line: cage.faceLines === null ? null : cage.faceLines[face], ...fields });
+  };
+  const partName = (face: number): string => bodies.partNames[bodies.partOf[face]];
+
+  for (const h of defects.nonManifold) {
+    const face = mesh.faceOf[h];
+    bad[face] = 1;
+    findings.add('non_manifold_edge', 'problem', partName(face), at(face, { edge: halfEdgeEnds(mesh, h) }),
+      (n) => `${counted(n, 'edge has', 'edges have')} more than two faces; separate the surfaces there so that every edge has at most two.`);
+  }
+  if (defects.turned.length > 0) {
+    const turned = findTurnedFaces(mesh, cage);
+    for (const h of defects.turned) bad[mesh.faceOf[h]] = 1;
+    for (const face of turned) {
+      bad[face] = 1;
+      findings.add('flipped_face', 'problem', partName(face), at(face, {}),
+        (n) => `${counted(n, 'face is', 'faces are')} turned against the neighbours; reverse ${n === 1 ? 'it' : 'them'} so that all faces look outwards.`);
+    }
+  }
+  diagnoseFaces(cage, mesh, bad, findings, at, partName);
+  diagnoseVertices(cage, mesh, bad, findings, at, partName);
+  for (const tag of defects.strayCreases) {
+    const edge: [number, number] = [cage.creaseVertices[2 * tag], cage.creaseVertices[2 * tag + 1]];
+    findings.add('crease_without_edge', 'warning', null, placeOf({ edge, position: positionOf(cage, edge[0]) }),
+      (n) => `${counted(n, 'crease tag names', 'crease tags name')} an edge that does not exist and was left out; set the crease again on an edge of the cage.`);
+  }
+  return bad;
+}
+
+export function positionOf(cage: Cage, vertex: number): [number, number, number] | null {
+  if (3 * vertex + 2 >= cage.positions.length) return null;
+  return [cage.positions[3 * vertex], cage.positions[3 * vertex + 1], cage.positions[3 * vertex + 2]];
+}
+
+type PlaceAt = (face: number, fields: Partial<Place>) => Place;
+
+function diagnoseFaces(cage: Cage, mesh: Topology, bad: Uint8Array, findings: FindingList, at: PlaceAt, partName: (face: number) => string): void {
+  const p = cage.positions;
+  const seenAt = new Int32Array(mesh.vertices).fill(-1);
+  const crowded: number[] = [];
+  for (let face = 0; face < mesh.faces; face++) {
+    const start = mesh.starts[face];
+    const end = mesh.starts[face + 1];
+    let repeated = end - start < 3;
+    let nx = 0, ny = 0, nz = 0, perimeter = 0;
+    const o = 3 * mesh.vertexOf[start];
+    for (let h = start; h < end; h++) {
+      const v = mesh.vertexOf[h];
+      if (seenAt[v] === face) repeated = true;
+      seenAt[v] = face;
+      const a = 3 * v;
+      const b = 3 * mesh.vertexOf[h + 1 === end ? start : h + 1];
+      const ax = p[a] - p[o], ay = p[a + 1] - p[o + 1], az = p[a + 2] - p[o + 2];
+      const bx = p[b] - p[o], by = p[b + 1] - p[o + 1], bz = p[b + 2] - p[o + 2];
+      nx += ay * bz - az * by;
+      ny += az * bx - ax * bz;
+      nz += ax * by - ay * bx;
+      perimeter += Math.sqrt((bx - ax) ** 2 + (by - ay) ** 2 + (bz - az) ** 2);
+    }
+    if (repeated) {
+      bad[face] = 1;
+      findings.add('degenerate_face', 'problem', partName(face), at(face, {}),
+        (n) => `${counted(n, 'face has', 'faces have')} fewer than three different vertices or one vertex twice; delete or rebuild ${n === 1 ? 'it' : 'them'}.`);
+    } else if (!(Math.sqrt(nx * nx + ny * ny + nz * nz) > NO_AREA * perimeter * perimeter)) {
+      findings.add('degenerate_face', 'warning', partName(face), at(face, {}),
+        (n) => `${counted(n, 'face has', 'faces have')} no area; merge the vertices that lie on each other.`);
+    }
+    if (bad[face] === 1) crowded.push(face);
+  }
+  for (let i = 0; i < mesh.faces && crowded.length > 0; i++) if (bad[i] === 0 && touchesBad(mesh, bad, i)) crowded.push(i);
+  reportDuplicates(mesh, crowded, bad, findings, at, partName);
+}
+
+/** Whether a face has an edge without twin that might belong to a crowded edge; only such faces can be duplicates. */
+function touchesBad(mesh: Topology, bad: Uint8Array, face: number): boolean {
+  for (let h = mesh.starts[face]; h < mesh.starts[face + 1]; h++) {
+    if (mesh.twin[h] < 0) return true;
+    if (bad[mesh.faceOf[mesh.twin[h]]] === 1) return true;
+  }
+  return false;
+}
+
+function reportDuplicates(mesh: Topology, faces: number[], bad: Uint8Array, findings: FindingList, at: PlaceAt, partName: (face: number) => string): void {
+  const known = new Set<string>();
+  for (const face of faces.sort((a, b) => a - b)) {
+    const key = Array.from(mesh.vertexOf.subarray(mesh.starts[face], mesh.starts[face + 1])).sort((a, b) => a - b).join(' ');
+    if (known.has(key)) {
+      bad[face] = 1;
+      findings.add('duplicate_face', 'problem', partName(face), at(face, {}),
+        (n) => `${counted(n, 'face lies', 'faces lie')} on another face with the same vertices; delete ${n === 1 ? 'it' : 'them'}.`);
+    }
+    known.add(key);
+  }
+}
+
+function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, findings: FindingList, at: PlaceAt, partName: (face: number) => string): void {
+  const corners = new Int32Array(mesh.vertices);
+  const visited = new Uint8Array(mesh.vertices);
+  for (const v of mesh.vertexOf) corners[v]++;
+  for (let h = 0; h < mesh.vertexOf.length; h++) {
+    const v = mesh.vertexOf[h];
+    if (visited[v] === 1) continue;
+    visited[v] = 1;
+    if (countFan(mesh, h, corners[v]) === corners[v]) continue;
+    const face = mesh.faceOf[h];
+    if (bad[face] === 1) continue;
+    bad[face] = 1;
+    findings.add('non_manifold_vertex', 'problem', partName(face), at(face, { vertex: v }),
+      (n) => `${counted(n, 'vertex joins', 'vertices join')} surfaces that touch in that point only; split ${n === 1 ? 'it' : 'them'} so that each surface has its own.`);
+  }
+  for (let v = 0; v < mesh.vertices; v++) {
+    if (corners[v] > 0) continue;
+    findings.add('isolated_vertex', 'note', null, placeOf({ vertex: v, position: positionOf(cage, v) }),
+      (n) => `${counted(n, 'vertex belongs', 'vertices belong')} to no face and ${n === 1 ? 'was' : 'were'} ignored; delete ${n === 1 ? 'it' : 'them'} if that was not meant.`);
+  }
+}
+
+/** Faces met by turning about the start of `h`, both ways from it. */
+function countFan(mesh: Topology, h: number, limit: number): number {
+  let count = 1;
+  let at = mesh.twin[previousHalfEdge(mesh, h)];
+  while (at >= 0 && at !== h && count < limit) {
+    count++;
+    at = mesh.twin[previousHalfEdge(mesh, at)];
+  }
+  if (at === h || count >= limit) return count;
+  let back = mesh.twin[h];
+  while (back >= 0 && count < limit) {
+    count++;
+    back = mesh.twin[nextHalfEdge(mesh, back)];
+  }
+  return count;
+}
