@@ -1,0 +1,22 @@
+import path from 'node:path';
+import { localUrl } from './bootstrap.mjs';
+import { startCluster } from './cluster.mjs';
+import { localSecrets } from './local-secrets.mjs';
+
+/**
+ * Starts a cluster of the checkout's own and names its three addresses: superuser (bootstrap only), owner (migrates),
+ * application.
+ * @param {{ folder: string, secretsFolder: string, preferredPort?: number, throwAway?: boolean }} options
+ */
+export async function startCheckoutCluster({ folder, secretsFolder, preferredPort, throwAway = false }) {
+  const secrets = localSecrets(secretsFolder);
+  const cluster = await startCluster({ folder: path.resolve(folder), superuserPassword: secrets.superuserPassword, preferredPort, throwAway });
+  const { port } = cluster;
+  return {
+    ...cluster,
+    secrets,
+    superuserUrl: localUrl({ user: 'postgres', password: secrets.superuserPassword, port, database: 'postgres' }),
+    ownerUrl: localUrl({ user: 'weighhouse_owner', password: secrets.ownerPassword, port, database: 'weighhouse' }),
+    appUrl: localUrl({ user: 'weighhouse_app', password: secrets.appPassword, port, database: 'weighhouse' }),
+  };
+}

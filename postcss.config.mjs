@@ -1,0 +1,3 @@
+const postcssConfig = { plugins: { '@tailwindcss/postcss': {} } };
+
+export default postcssConfig;
