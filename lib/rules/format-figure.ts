@@ -25,7 +25,9 @@ export function formatFixed(value: number, decimals = 4, digits = SCREEN_DIGITS)
 export function formatEngineering(value: number, digits = SCREEN_DIGITS): ShownFigure {
   if (!Number.isFinite(value)) return { text: '–', exponent: 0 };
   if (value === 0) return { text: (0).toFixed(digits - 1), exponent: 0 };
-  const [mantissa, power] = Math.abs(value).toExponential(digits - 1).split('e');
+  const [mantissa, power] = Math.abs(value)
+    .toExponential(digits - 1)
+    .split('e');
   const exponent = Math.floor(Number(power) / 3) * 3;
   const shift = Number(power) - exponent;
   const figures = mantissa.replace('.', '');

@@ -1,0 +1,50 @@
+'use client';
+
+import { X } from 'lucide-react';
+import { Dialog as Primitive } from 'radix-ui';
+import type { ReactNode } from 'react';
+import { cn } from './cn';
+
+interface DialogProps {
+  open: boolean;
+  onOpenChange: (open: boolean) => void;
+  title: string;
+  description?: ReactNode;
+  children: ReactNode;
+  className?: string;
+  /** Where the focus goes when the dialog opens; the first control otherwise. */
+  onOpenAutoFocus?: (event: Event) => void;
+}
+
+/** A modal task. On a phone it fills the lower edge of the screen. */
+export function Dialog({ open, onOpenChange, title, description, children, className, onOpenAutoFocus }: DialogProps) {
+  return (
+    <Primitive.Root open={open} onOpenChange={onOpenChange}>
+      <Primitive.Portal>
+        <Primitive.Overlay className="fixed inset-0 z-40 animate-[fade-in_120ms] bg-veil" />
+        <Primitive.Content
+          onOpenAutoFocus={onOpenAutoFocus}
+          {...(description === undefined ? { 'aria-describedby': undefined } : {})}
+          className={cn(
+            'fixed inset-x-0 bottom-0 z-50 max-h-[92dvh] overflow-y-auto rounded border border-edge bg-raised p-5 sm:inset-x-auto sm:top-1/2 sm:bottom-auto sm:left-1/2 sm:w-[30rem] sm:-translate-x-1/2 sm:-translate-y-1/2',
+            className,
+          )}
+        >
+          <div className="flex items-start justify-between gap-4">
+            <Primitive.Title className="text-16 font-medium">{title}</Primitive.Title>
+            <Primitive.Close
+              aria-label="Close"
+              className="-mt-1 -mr-1 inline-flex size-8 items-center justify-center rounded text-ink-2 hover:text-ink pointer-coarse:size-11"
+            >
+              <X aria-hidden className="size-4" />
+            </Primitive.Close>
+          </div>
+          {description === undefined ? null : (
+            <Primitive.Description className="mt-1 text-14 text-ink-2">{description}</Primitive.Description>
+          )}
+          <div className="mt-4">{children}</div>
+        </Primitive.Content>
+      </Primitive.Portal>
+    </Primitive.Root>
+  );
+}

@@ -1,0 +1,48 @@
+import { alignOnPoint, formatEngineering, formatFixed, formatFull } from '@/lib/rules/format-figure';
+import { cn } from './cn';
+
+interface FigureProps {
+  /** In the unit that the header or label names. */
+  value: number | null;
+  /** `fixed` for lengths and coordinates, `engineering` for what spans magnitudes: its exponent stands apart. */
+  notation?: 'fixed' | 'engineering';
+  /** Characters kept before and behind the point in a column; without it the figure takes its own width. */
+  align?: { before: number; after: number };
+  decimals?: number;
+  className?: string;
+}
+
+/** Widths of a column's figures, sign included; the exponent has its own place behind them. */
+export const ENGINEERING_WIDTHS = { before: 3, after: 4 };
+export const LENGTH_WIDTHS = { before: 5, after: 4 };
+
+/** A number: four significant digits to read, all of them when copied (see copy-full). */
+export function Figure({ value, notation = 'fixed', align, decimals, className }: FigureProps) {
+  const shown =
+    value === null
+      ? { text: '–', exponent: 0 }
+      : notation === 'engineering'
+        ? formatEngineering(value)
+        : { text: formatFixed(value, decimals), exponent: 0 };
+  const text = align === undefined ? shown.text : alignOnPoint(shown.text, align.before, align.after);
+  return (
+    <span
+      data-full={value === null ? undefined : formatFull(value)}
+      className={cn('font-mono text-13 whitespace-pre', value === null && 'text-ink-3', className)}
+    >
+      {text}
+      {notation === 'engineering' ? <Exponent power={shown.exponent} apart={align !== undefined} /> : null}
+    </span>
+  );
+}
+
+function Exponent({ power, apart }: { power: number; apart: boolean }) {
+  if (power === 0) return apart ? <span className="inline-block w-8" /> : null;
+  return (
+    <span className={cn('text-12 text-ink-3', apart && 'inline-block w-8')}>
+      <span aria-hidden>·10</span>
+      <span className="sr-only"> times ten to the power </span>
+      <sup className="text-[0.6875rem] leading-none">{power < 0 ? `\u2212${-power}` : power}</sup>
+    </span>
+  );
+}
