@@ -1,0 +1,180 @@
+import { checkMassFrame } from './inertia/check-mass-frame';
+import { inertiaOfSecondMoments, shiftInertia } from './inertia/inertia-matrix';
+import { FREE_AXES_GAP, principalAxes, type FreeAxes } from './inertia/principal-axes';
+import type { Six, SolidMoments, SurfaceMoments, Three } from './measured';
+
+export const CONSTRUCTIONS = ['solid', 'hollow', 'sheet'] as const;
+export type Construction = (typeof CONSTRUCTIONS)[number];
+
+/** What a mass needs of a measured component; a MeasuredComponent fits, and so does a stored geometry record. */
+export interface MassComponent {
+  solid: SolidMoments;
+  surface: SurfaceMoments;
+  hollow: Float64Array | null;
+  errorEstimate: number;
+  surfaceErrorEstimate: number;
+}
+
+export interface MassInput {
+  components: readonly MassComponent[];
+  metresPerUnit: number;
+  /** Uniform scale of the asset; acts on the geometry only. */
+  scale: number;
+  construction: Construction;
+  densityKgPerM3?: number | null;
+  /** Wins over density and areal density, which then follow from it. */
+  targetMassKg?: number | null;
+  arealDensityKgPerM2?: number | null;
+  wallM?: number | null;
+}
+
+export interface MassProperties {
+  ok: true;
+  massKg: number;
+  /** Volume of material: of the enclosed set for solids, of the wall for hollow parts, null for sheets. */
+  volumeM3: number | null;
+  areaM2: number;
+  densityKgPerM3: number | null;
+  arealDensityKgPerM2: number | null;
+  comM: Three;
+  /** Matrix entries ixx, iyy, izz, ixy, ixz, iyz about the centre of mass, in the asset's axes; ixy = −∫ρxy. */
+  inertiaKgM2: Six;
+  principalKgM2: Three;
+  quatWxyz: [number, number, number, number];
+  freeAxes: FreeAxes;
+  /** Of the integration alone, max |Δ| / (|V|·L^k); coordinates taken as exact. */
+  numericError: number;
+}
+
+export type MassFailureCode = 'no_mass' | 'no_geometry' | 'bad_input' | 'inside_out' | 'no_wall' | 'wall_too_thick' | 'not_hollow_yet' | 'check_failed';
+
+export interface MassFailure {
+  ok: false;
+  code: MassFailureCode;
+  message: string;
+}
+
+export function massFailure(code: MassFailureCode, message: string): MassFailure {
+  return { ok: false, code, message };
+}
+
+/** Measure (volume or area), centroid and central second moments of several pieces together, in file units. */
+interface Gathered {
+  measure: number;
+  centroid: Three;
+  second: Six;
+  error: number;
+}
+
+interface Piece {
+  measure: number;
+  centroid: Three;
+  centralSecond: Six;
+  error: number;
+}
+
+function gather(pieces: readonly Piece[]): Gathered {
+  const measure = pieces.reduce((sum, piece) => sum + piece.measure, 0);
+  const weight = (axis: number): number => {
+    // About the first centroid, so that a part far from the origin loses no digits.
+    const from = pieces[0].centroid[axis];
+    return from + pieces.reduce((sum, piece) => sum + piece.measure * (piece.centroid[axis] - from), 0) / measure;
+  };
+  const centroid: Three = [weight(0), weight(1), weight(2)];
+  const second: Six = [0, 0, 0, 0, 0, 0];
+  for (const piece of pieces) {
+    const d: Three = [piece.centroid[0] - centroid[0], piece.centroid[1] - centroid[1], piece.centroid[2] - centroid[2]];
+    const outer = [d[0] * d[0], d[1] * d[1], d[2] * d[2], d[0] * d[1], d[0] * d[2], d[1] * d[2]];
+    for (let i = 0; i < 6; i++) second[i] += piece.centralSecond[i] + piece.measure * outer[i];
+  }
+  const error = pieces.reduce((sum, piece) => sum + Math.abs(piece.measure) * piece.error, 0) / Math.abs(measure);
+  return { measure, centroid, second, error };
+}
+
+function given(value: number | null | undefined): value is number {
+  return value !== null && value !== undefined;
+}
+
+/**
+ * Mass properties of a part from its geometry, setting and scale; the one function that server, browser and command line use.
+ * Lengths come in file units and go out in metres: L = metresPerUnit · scale, mass ∝ L³ (sheets L²) at fixed density, inertia ∝ mass · L².
+ */
+export function massProperties(input: MassInput): MassProperties | MassFailure {
+  const { components, construction } = input;
+  if (components.length === 0) return massFailure('no_geometry', 'The part has no measured geometry.');
+  if (!(input.metresPerUnit > 0) || !(input.scale > 0) || !Number.isFinite(input.metresPerUnit * input.scale)) {
+    return massFailure('bad_input', 'Unit and scale must be positive numbers.');
+  }
+  for (const value of [input.densityKgPerM3, input.targetMassKg, input.arealDensityKgPerM2, input.wallM]) {
+    if (given(value) && (!(value > 0) || !Number.isFinite(value))) return massFailure('bad_input', 'Density, weight per area, wall and target mass must be positive numbers.');
+  }
+  const length = input.metresPerUnit * input.scale;
+  const surface = gather(components.map((c) => ({ measure: c.surface.area, centroid: c.surface.centroid, centralSecond: c.surface.centralSecond, error: c.surfaceErrorEstimate })));
+  if (construction === 'hollow') return massFailure('not_hollow_yet', 'Hollow parts cannot be weighed yet; choose solid or sheet.');
+  const areaM2 = surface.measure * length * length;
+  if (construction === 'sheet') {
+    const areal = given(input.targetMassKg) ? input.targetMassKg / areaM2 : input.arealDensityKgPerM2;
+    if (!given(areal)) return massFailure('no_mass', 'Set a weight per area or a target mass.');
+    return finish(surface, length, areal * length * length, { volumeM3: null, areaM2, densityKgPerM3: null, arealDensityKgPerM2: areal });
+  }
+  const solid = gather(components.map((c) => ({ measure: c.solid.volume, centroid: c.solid.centroid, centralSecond: c.solid.centralSecond, error: c.errorEstimate })));
+  if (!(solid.measure > 0)) return massFailure('inside_out', 'The part encloses no positive volume; reverse its faces or make it a sheet.');
+  const volumeM3 = solid.measure * length ** 3;
+  const density = given(input.targetMassKg) ? input.targetMassKg / volumeM3 : input.densityKgPerM3;
+  if (!given(density)) return massFailure('no_mass', 'Set a density or a target mass.');
+  return finish(solid, length, density * length ** 3, { volumeM3, areaM2, densityKgPerM3: density, arealDensityKgPerM2: null });
+}
+
+/** `massPerMeasure` is the mass of one file unit cubed (or squared, for sheets). */
+function finish(
+  body: Gathered, length: number, massPerMeasure: number,
+  amounts: Pick<MassProperties, 'volumeM3' | 'areaM2' | 'densityKgPerM3' | 'arealDensityKgPerM2'>,
+): MassProperties | MassFailure {
+  const massKg = massPerMeasure * body.measure;
+  const comM: Three = [body.centroid[0] * length, body.centroid[1] * length, body.centroid[2] * length];
+  const factor = massPerMeasure * length * length;
+  const inertiaKgM2 = inertiaOfSecondMoments(body.second.map((value) => value * factor) as Six).map((value) => value + 0) as Six;
+  return framed({ massKg, comM, inertiaKgM2, numericError: body.error, ...amounts });
+}
+
+type Unframed = Omit<MassProperties, 'ok' | 'principalKgM2' | 'quatWxyz' | 'freeAxes'>;
+
+function framed(values: Unframed): MassProperties | MassFailure {
+  if (!values.inertiaKgM2.every(Number.isFinite)) return massFailure('check_failed', 'The inertia matrix is not finite.');
+  const freeGap = Math.max(FREE_AXES_GAP, 100 * values.numericError);
+  const frame = principalAxes(values.inertiaKgM2, freeGap);
+  const contradiction = checkMassFrame(values.massKg, values.comM, values.inertiaKgM2, frame, freeGap);
+  if (contradiction !== null) return massFailure('check_failed', contradiction);
+  return { ok: true, ...values, principalKgM2: frame.principal, quatWxyz: frame.quatWxyz, freeAxes: frame.freeAxes };
+}
+
+/** What a merge needs of each member. Areas and volumes add where all members have them. */
+export type MassMember = Pick<MassProperties, 'massKg' | 'comM' | 'inertiaKgM2'> & Partial<Pick<MassProperties, 'volumeM3' | 'areaM2' | 'numericError'>>;
+
+/** Several bodies as one rigid body, in one frame: masses add, inertia about the common centre of mass by the parallel-axis theorem. */
+export function mergeMassProperties(members: readonly MassMember[]): MassProperties | MassFailure {
+  if (members.length === 0) return massFailure('no_geometry', 'There is nothing to merge.');
+  const massKg = members.reduce((sum, member) => sum + member.massKg, 0);
+  const axis = (i: number): number => {
+    const from = members[0].comM[i];
+    return from + members.reduce((sum, member) => sum + member.massKg * (member.comM[i] - from), 0) / massKg;
+  };
+  const comM: Three = [axis(0), axis(1), axis(2)];
+  let inertiaKgM2: Six = [0, 0, 0, 0, 0, 0];
+  for (const member of members) {
+    const moved = shiftInertia(member.inertiaKgM2, member.massKg, [member.comM[0] - comM[0], member.comM[1] - comM[1], member.comM[2] - comM[2]]);
+    inertiaKgM2 = inertiaKgM2.map((value, i) => value + moved[i]) as Six;
+  }
+  let volumeM3: number | null = 0;
+  for (const member of members) volumeM3 = volumeM3 === null || !given(member.volumeM3) ? null : volumeM3 + member.volumeM3;
+  return framed({
+    massKg,
+    volumeM3,
+    areaM2: members.reduce((sum, member) => sum + (member.areaM2 ?? 0), 0),
+    densityKgPerM3: volumeM3 !== null && volumeM3 > 0 ? massKg / volumeM3 : null,
+    arealDensityKgPerM2: null,
+    comM,
+    inertiaKgM2,
+    numericError: members.reduce((worst, member) => Math.max(worst, member.numericError ?? 0), 0),
+  });
+}
