@@ -1,5 +1,5 @@
 import { sql } from 'drizzle-orm';
-import { bigint, check, doublePrecision, index, integer, pgTable, text, timestamp, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
+import { bigint, check, doublePrecision, index, integer, jsonb, pgTable, text, timestamp, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
 import { CATEGORIES, CONSTRUCTIONS, MASS_SOURCES, ORIGINS, ROW_KINDS, VALUE_STATES } from '../../lib/rules/states';
 import { assets } from './assets';
 import { assetVersions } from './asset-versions';
@@ -8,6 +8,12 @@ import { geometryParts } from './geometry-parts';
 import { parts } from './parts';
 import { settings } from './settings';
 import { shows } from './shows';
+
+export interface ValueFinding {
+  code: string;
+  severity: 'problem' | 'warning';
+  message: string;
+}
 
 /**
  * The finished numbers of every part as they are now, one row each with all CSV columns (SI, the asset's axes, inertia about
@@ -82,6 +88,8 @@ export const partCurrent = pgTable(
     changedRevision: bigint('changed_revision', { mode: 'number' }).notNull(),
     /** Severity problem only, for filters and the counts. */
     problemCodes: text('problem_codes').array().notNull().default([]),
+    /** What the setting itself brings up (a wall too thick, a check not passed): code, severity, message. The record's findings are apart. */
+    valueFindings: jsonb('value_findings').$type<ValueFinding[]>().notNull().default([]),
     massSource: text('mass_source', { enum: MASS_SOURCES }),
     setBy: text('set_by'),
     setFrom: text('set_from', { enum: ORIGINS }),
@@ -94,7 +102,8 @@ export const partCurrent = pgTable(
     updatedAt: timestamp('updated_at', { withTimezone: true }).notNull().defaultNow(),
   },
   (t) => [
-    index('part_current_order_idx').on(t.showId, t.asset, t.part),
+    // Collation C: the same order on every server, whatever its language.
+    index('part_current_order_c_idx').on(t.showId, sql`${t.asset} collate "C"`, sql`${t.part} collate "C"`),
     index('part_current_state_idx').on(t.showId, t.state),
     index('part_current_asset_idx').on(t.assetId),
     index('part_current_changed_idx').on(t.showId, t.changedRevision),
