@@ -5,6 +5,8 @@ const nextConfig = {
   compress: true,
   agentRules: false,
   experimental: { agentUpgrade: false },
+  // Types are checked by `npm test`; a first start need not wait for them.
+  typescript: { ignoreBuildErrors: true },
   // Native or worker-loading packages stay outside the server bundle.
   serverExternalPackages: ['@node-rs/argon2', 'pg', 'pg-boss', 'pino', 'piscina', 'nodemailer', 'flydrive'],
 };

@@ -1,6 +1,7 @@
 import path from 'node:path';
 import { localUrl } from './bootstrap.mjs';
 import { startCluster } from './cluster.mjs';
+import { withLock } from './file-lock.mjs';
 import { localSecrets } from './local-secrets.mjs';
 
 /**
@@ -9,8 +10,10 @@ import { localSecrets } from './local-secrets.mjs';
  * @param {{ folder: string, secretsFolder: string, preferredPort?: number, throwAway?: boolean }} options
  */
 export async function startCheckoutCluster({ folder, secretsFolder, preferredPort, throwAway = false }) {
-  const secrets = localSecrets(secretsFolder);
-  const cluster = await startCluster({ folder: path.resolve(folder), superuserPassword: secrets.superuserPassword, preferredPort, throwAway });
+  const [secrets, cluster] = await withLock(path.join(secretsFolder, 'pg.lock'), async () => {
+    const made = localSecrets(secretsFolder);
+    return [made, await startCluster({ folder: path.resolve(folder), superuserPassword: made.superuserPassword, preferredPort, throwAway })];
+  });
   const { port } = cluster;
   return {
     ...cluster,

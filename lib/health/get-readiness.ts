@@ -1,0 +1,56 @@
+import { randomUUID } from 'node:crypto';
+import { mkdir, rm, writeFile } from 'node:fs/promises';
+import path from 'node:path';
+import { sql } from 'drizzle-orm';
+import { database } from '@/db/client';
+import { config } from '@/lib/config';
+
+/** `down` names what does not work; the queue's age is that of the oldest job that could run and waits, in seconds. */
+export type Readiness = {
+  status: 'ready' | 'down';
+  database: 'ok' | 'down';
+  storage: 'ok' | 'down';
+  queue: 'ok' | 'down';
+  oldest_waiting_job_s: number | null;
+};
+
+async function works<T>(act: () => Promise<T>): Promise<{ ok: true; value: T } | { ok: false }> {
+  try {
+    return { ok: true, value: await act() };
+  } catch {
+    // The reason may hold addresses and names: an open door tells nothing but that it is so.
+    return { ok: false };
+  }
+}
+
+async function oldestWaitingJob(): Promise<number | null> {
+  const { rows } = await database().execute<{ age: number | null }>(
+    sql`select extract(epoch from now() - min(greatest(created_on, start_after)))::float8 as age from pgboss.job
+        where state < 'active' and start_after <= now() and name not like '\\_\\_pgboss%'`,
+  );
+  return rows[0].age === null ? null : Math.max(0, Math.round(rows[0].age * 10) / 10);
+}
+
+async function storageTakesBytes(): Promise<void> {
+  const { filesFolder } = config();
+  await mkdir(/* turbopackIgnore: true */ filesFolder, { recursive: true });
+  const probe = path.join(/* turbopackIgnore: true */ filesFolder, `.probe-${randomUUID()}`);
+  await writeFile(probe, '');
+  await rm(probe);
+}
+
+/** Whether the program can do its work: database, storage and queue, each tried. */
+export async function getReadiness(): Promise<Readiness> {
+  const [db, storage, queue] = await Promise.all([
+    works(() => database().execute(sql`select 1`)),
+    works(storageTakesBytes),
+    works(oldestWaitingJob),
+  ]);
+  return {
+    status: db.ok && storage.ok && queue.ok ? 'ready' : 'down',
+    database: db.ok ? 'ok' : 'down',
+    storage: storage.ok ? 'ok' : 'down',
+    queue: queue.ok ? 'ok' : 'down',
+    oldest_waiting_job_s: queue.ok ? queue.value : null,
+  };
+}
