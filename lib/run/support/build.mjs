@@ -35,7 +35,7 @@ function refuseWhileServing() {
 
 /** The worker process and its threads, each bundled to one file under dist/worker. */
 async function bundleWorker() {
-  const { build } = await import('esbuild');
+  const { build, stop } = await import('esbuild');
   const jobs = inRoot('lib/jobs');
   const entries = readdirSync(jobs, { recursive: true }).filter((name) => name === 'worker.ts' || /(^|[-/])thread\.ts$/.test(name) || /^threads\/[^/]+\.ts$/.test(name));
   rmSync(inRoot('dist/worker'), { recursive: true, force: true });
@@ -53,6 +53,8 @@ async function bundleWorker() {
     sourcemap: true,
     logLevel: 'error',
   });
+  // Its helper process would otherwise live as long as this one.
+  await stop();
 }
 
 /** Bundles worker and threads when the sources changed. */
