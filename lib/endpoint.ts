@@ -38,7 +38,7 @@ export function route<Input, Output>(
   return async (request: Request, { params }: RouteContext): Promise<Response> => {
     const requestId = randomUUID();
     try {
-      const actor = await findActor(database(), request.headers.get('authorization'));
+      const actor = await findActor(database(), request.headers);
       const isWrite = request.method !== 'GET' && request.method !== 'HEAD';
       if (isWrite && actor?.via !== 'token') refuseForeignOrigin(request);
       const context: Context = { db: database(), actor, origin: actor?.via === 'token' ? 'api' : 'hand', requestId };
@@ -65,8 +65,7 @@ export function action<Input, Output>(schema: ZodType<Input>, verb: Verb<Input, 
   return async (input: unknown): Promise<ActionResult<Output>> => {
     const requestId = randomUUID();
     try {
-      await headers();
-      const actor = await findSessionActor(database());
+      const actor = await findSessionActor(database(), await headers());
       const context: Context = { db: database(), actor, origin: 'hand', requestId };
       return { ok: true, data: await verb(context, parseInput(schema, input)) };
     } catch (error) {

@@ -1,26 +1,26 @@
 import { and, eq, gt, isNull, or, sql } from 'drizzle-orm';
-import { getServerSession } from 'next-auth';
 import type { Database } from '@/db/client';
 import { apiTokens } from '@/db/schema/api-tokens';
 import { users } from '@/db/schema/users';
 import type { Actor } from '@/lib/context';
-import { authOptions } from './options';
+import { findSession } from './find-session';
 import { secretHash } from './secret-hash';
 
 /** Who sends the request: the bearer token's user, else the signed-in one, else null. A bad token never falls back to the session. */
-export async function findActor(db: Database, authorization: string | null): Promise<Actor | null> {
+export async function findActor(db: Database, headers: Pick<Headers, 'get'>): Promise<Actor | null> {
+  const authorization = headers.get('authorization');
   if (authorization !== null) return findTokenActor(db, authorization);
-  return findSessionActor(db);
+  return findSessionActor(db, headers);
 }
 
 /** The signed-in user as the database knows them now; null when nobody is, or when the session was ended. */
-export async function findSessionActor(db: Database): Promise<Actor | null> {
-  const session = await getServerSession(authOptions());
-  if (!session?.user.id) return null;
+export async function findSessionActor(db: Database, headers: Pick<Headers, 'get'>): Promise<Actor | null> {
+  const session = await findSession(headers.get('cookie'));
+  if (!session) return null;
   const [user] = await db
     .select()
     .from(users)
-    .where(and(eq(users.id, session.user.id), eq(users.sessionEpoch, session.user.sessionEpoch), isNull(users.disabledAt)));
+    .where(and(eq(users.id, session.userId), eq(users.sessionEpoch, session.sessionEpoch), isNull(users.disabledAt)));
   if (!user) return null;
   return { userId: user.id, email: user.email, name: user.name, isAdmin: user.isAdmin, via: 'session', tokenId: null };
 }

@@ -2,12 +2,10 @@ import type { NextAuthOptions } from 'next-auth';
 import CredentialsProvider from 'next-auth/providers/credentials';
 import { database } from '@/db/client';
 import { config } from '@/lib/config';
+import { sessionCookie } from './session-cookie';
 import { verifyCredentials } from './verify-credentials';
 
 declare module 'next-auth' {
-  interface Session {
-    user: { id: string; name: string; email: string; sessionEpoch: number };
-  }
   interface User {
     id: string;
     sessionEpoch: number;
@@ -31,11 +29,22 @@ export function authOptions(): NextAuthOptions {
     secret: config().authSecret ?? undefined,
     session: { strategy: 'jwt', maxAge: TWELVE_HOURS_S },
     pages: { signIn: '/sign-in', error: '/sign-in' },
+    cookies: {
+      sessionToken: {
+        name: sessionCookie().name,
+        options: { httpOnly: true, sameSite: 'lax', path: '/', secure: sessionCookie().secure },
+      },
+    },
     providers: [
       CredentialsProvider({
         name: 'E-mail and password',
         credentials: { email: { type: 'email' }, password: { type: 'password' } },
-        authorize: (credentials) => verifyCredentials(database(), credentials?.email ?? '', credentials?.password ?? ''),
+        authorize: async (credentials) => {
+          const outcome = await verifyCredentials(database(), credentials?.email ?? '', credentials?.password ?? '');
+          // next-auth hands an error's message to the form: a code, which the form turns into a sentence.
+          if (outcome.state === 'too_many') throw new Error(`too_many_attempts:${outcome.until.getTime()}`);
+          return outcome.state === 'fits' ? outcome.user : null;
+        },
       }),
     ],
     callbacks: {
@@ -45,11 +54,6 @@ export function authOptions(): NextAuthOptions {
           token.sessionEpoch = user.sessionEpoch;
         }
         return token;
-      },
-      session({ session, token }) {
-        session.user.id = token.userId ?? '';
-        session.user.sessionEpoch = token.sessionEpoch ?? -1;
-        return session;
       },
     },
   };

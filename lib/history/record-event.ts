@@ -1,6 +1,7 @@
 import type { Transaction } from '@/db/client';
 import { auditEvents } from '@/db/schema/audit-events';
 import { auditItems } from '@/db/schema/audit-items';
+import { SYSTEM_USER_ID } from '@/lib/auth/system-context';
 import type { ActorContext } from '@/lib/context';
 
 export interface ChangedField {
@@ -21,7 +22,7 @@ export async function recordEvent(
     .insert(auditEvents)
     .values({
       showId: event.showId,
-      actorId: context.actor.userId,
+      actorId: context.actor.userId === SYSTEM_USER_ID ? null : context.actor.userId,
       act: event.act,
       origin: context.origin,
       subject: event.subject,

@@ -1,0 +1,12 @@
+import type { Transaction } from '@/db/client';
+import { mails } from '@/db/schema/mails';
+import { config } from '@/lib/config';
+import type { Message } from './message';
+
+/**
+ * Writes a message within the change's own transaction, so that neither is there without the other. The worker sends what
+ * waits; where no mail server is set, it stays in the mailbox that an admin reads in the product.
+ */
+export async function queueMail(tx: Transaction, toEmail: string, message: Message): Promise<void> {
+  await tx.insert(mails).values({ toEmail, ...message, state: config().smtpUrl ? 'waiting' : 'local' });
+}

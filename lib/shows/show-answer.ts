@@ -1,0 +1,18 @@
+import type { Show } from './get-show-access';
+
+/** A show as the API shows it. */
+export function showAnswer(show: Show) {
+  return {
+    code: show.code,
+    title: show.title,
+    linear_unit: show.linearUnit,
+    up_axis: show.upAxis,
+    scheme: show.scheme,
+    boundary: show.boundary,
+    parts_by: show.partsBy,
+    self_approval: show.selfApproval,
+    frozen: show.frozenAt !== null,
+    archived: show.archivedAt !== null,
+    created_at: show.createdAt.toISOString(),
+  };
+}
