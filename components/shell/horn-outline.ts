@@ -2,20 +2,16 @@ type Point = readonly [number, number];
 
 /** Control polygon of a tapered horn lying along x, closed, clockwise on screen (y down); arbitrary lengths. */
 export const HORN_CAGE: readonly Point[] = [
-  [0, -46],
-  [0, 46],
-  [70, 58],
-  [170, 52],
-  [280, 30],
-  [380, -6],
-  [452, -62],
-  [474, -78],
-  [470, -84],
-  [432, -80],
-  [350, -44],
-  [250, -34],
-  [150, -50],
-  [64, -60],
+  [0, -50],
+  [0, 62],
+  [150, 84],
+  [310, 62],
+  [430, -30],
+  [486, -176],
+  [470, -184],
+  [380, -78],
+  [270, -22],
+  [140, -40],
 ];
 
 /** Cubic Bézier corners of the uniform cubic B-spline of a closed polygon: the limit curve of its subdivision. */
@@ -60,36 +56,40 @@ export function cagePath(cage: readonly Point[]): string {
   return `M${cage.map(([x, y]) => `${x} ${y}`).join('L')}Z`;
 }
 
-/** Centroid's x, radius of gyration along x and extent along x of the area inside the limit curve. */
-export function balanceOf(
-  cage: readonly Point[],
-  samples = 24,
-): { centre: number; gyration: number; from: number; to: number } {
+/**
+ * Centroid, radius of gyration along x and extent along x of the area inside the limit curve, rounded to hundredths
+ * so that server and browser write the same digits.
+ */
+export function balanceOf(cage: readonly Point[], samples = 24) {
   const outline = pieces(cage).flatMap(([a, b, c, d]) =>
     Array.from({ length: samples }, (_, k): Point => {
       const t = k / samples;
       const s = 1 - t;
       const value = (axis: 0 | 1) =>
-        s ** 3 * a[axis] + 3 * s * s * t * b[axis] + 3 * s * t * t * c[axis] + t ** 3 * d[axis];
+        s * s * s * a[axis] + 3 * s * s * t * b[axis] + 3 * s * t * t * c[axis] + t * t * t * d[axis];
       return [value(0), value(1)];
     }),
   );
   let area = 0;
-  let first = 0;
-  let second = 0;
+  let firstX = 0;
+  let firstY = 0;
+  let secondX = 0;
   outline.forEach(([x, y], i) => {
     const [u, v] = outline[(i + 1) % outline.length];
     const cross = x * v - u * y;
     area += cross / 2;
-    first += (cross * (x + u)) / 6;
-    second += (cross * (x * x + x * u + u * u)) / 12;
+    firstX += (cross * (x + u)) / 6;
+    firstY += (cross * (y + v)) / 6;
+    secondX += (cross * (x * x + x * u + u * u)) / 12;
   });
-  const centre = first / area;
+  const centre = firstX / area;
   const abscissas = outline.map(([x]) => x);
+  const rounded = (value: number) => Math.round(value * 100) / 100;
   return {
-    centre,
-    gyration: Math.sqrt(second / area - centre * centre),
-    from: Math.min(...abscissas),
-    to: Math.max(...abscissas),
+    centre: rounded(centre),
+    height: rounded(firstY / area),
+    gyration: rounded(Math.sqrt(secondX / area - centre * centre)),
+    from: rounded(Math.min(...abscissas)),
+    to: rounded(Math.max(...abscissas)),
   };
 }

@@ -12,7 +12,7 @@ export function SignInFrame({ title, children }: { title: string; children: Reac
           Weighhouse
         </p>
         <WeighBeam className="mx-auto w-full max-w-72 sm:max-w-md lg:max-w-2xl" />
-        <p className="max-w-md text-14 text-ink-2 max-lg:hidden">
+        <p className="text-14 text-ink-2 max-lg:hidden">
           How heavy each part of a show is, where it balances, and how it resists turning.
         </p>
       </div>

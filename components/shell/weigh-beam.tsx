@@ -1,6 +1,8 @@
 import { HORN_CAGE, balanceOf, cagePath, limitPath } from './horn-outline';
 
-const { centre, gyration, from, to } = balanceOf(HORN_CAGE);
+const { centre, height, gyration, from, to } = balanceOf(HORN_CAGE);
+/** Of the cage's own zero above the beam. */
+const LIFT = -88;
 const TICKS = Array.from({ length: 49 }, (_, index) => index);
 
 function tickPath(): string {
@@ -14,7 +16,7 @@ function tickPath(): string {
  */
 export function WeighBeam({ className }: { className?: string }) {
   return (
-    <svg viewBox="-40 -190 560 330" aria-hidden fill="none" className={className}>
+    <svg viewBox="-30 -330 560 430" aria-hidden fill="none" className={className}>
       <path d={`M${centre} 12 ${centre + 22} 74H${centre - 22}Z`} fill="var(--brass)" />
       <path d={`M${centre - 96} 74H${centre + 96}`} stroke="var(--edge)" />
       <path d={`M${centre - 96} 74v6M${centre + 96} 74v6`} stroke="var(--edge)" />
@@ -22,7 +24,7 @@ export function WeighBeam({ className }: { className?: string }) {
         className="animate-[beam-settle_3.4s_ease-in-out]"
         style={{ transformOrigin: `${centre}px 12px`, transformBox: 'view-box' }}
       >
-        <g transform="translate(0 -62)">
+        <g transform={`translate(0 ${LIFT})`}>
           <path d={cagePath(HORN_CAGE)} stroke="var(--edge)" strokeDasharray="3 4" />
           {HORN_CAGE.map(([x, y]) => (
             <rect
@@ -44,8 +46,8 @@ export function WeighBeam({ className }: { className?: string }) {
         </g>
         <path d={`M${from} 8H${to}M${from} -2V18M${to} -2V18`} stroke="var(--ink)" strokeWidth="2" />
         <path d={tickPath()} transform="translate(0 9)" stroke="var(--edge)" />
-        <path d={`M${centre - gyration} -158v-10H${centre + gyration}v10`} stroke="var(--ink-3)" />
-        <circle cx={centre} cy="-62" r="3.5" fill="var(--brass)" />
+        <path d={`M${centre - gyration} -292v-10H${centre + gyration}v10`} stroke="var(--ink-3)" />
+        <circle cx={centre} cy={LIFT + height} r="3.5" fill="var(--brass)" />
       </g>
     </svg>
   );

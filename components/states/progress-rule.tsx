@@ -12,7 +12,7 @@ const FILL: Record<RowState, string> = {
   outdated: 'bg-ink',
   unset: 'border border-dotted border-edge',
   blocked: 'bg-wrong',
-  left_out: 'bg-rule',
+  left_out: 'border border-edge',
 };
 
 /** Parts between two ticks: six, or the first six times a power of ten that leaves room between them. */

@@ -42,7 +42,7 @@ function Exponent({ power, apart }: { power: number; apart: boolean }) {
     <span className={cn('text-12 text-ink-3', apart && 'inline-block w-8')}>
       <span aria-hidden>·10</span>
       <span className="sr-only"> times ten to the power </span>
-      <sup className="text-[0.6875rem] leading-none">{power < 0 ? `\u2212${-power}` : power}</sup>
+      <span className="relative -top-1 text-[0.6875rem]">{power < 0 ? `\u2212${-power}` : power}</span>
     </span>
   );
 }
