@@ -1,0 +1,3 @@
+import { freePort } from './support/free-port.mjs';
+
+console.log(await freePort());
