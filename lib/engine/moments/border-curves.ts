@@ -1,0 +1,47 @@
+/**
+ * Pieces of the limit curves over the border edges of bodies: cubics in powers of t − ½, oriented along the cage's half-edge they belong to.
+ * `weight` closes sequences of pieces towards an extraordinary point; `share` is the piece's part of its cage edge's parameter range.
+ */
+export class BorderCurves {
+  readonly edges: number[] = [];
+  readonly weights: number[] = [];
+  readonly shares: number[] = [];
+  /** Twelve numbers per piece: [power · 3 + axis]. */
+  readonly powers: number[] = [];
+
+  /** Adds the side `side` (0 … 3, counter-clockwise from corner (1,1) to (2,1)) of a bicubic net laid out as `bicubicMoments` wants it. */
+  addSide(net: Float64Array, side: number, edge: number, weight: number, share: number): void {
+    this.edges.push(edge);
+    this.weights.push(weight);
+    this.shares.push(share);
+    const alongRows = side === 0 || side === 2;
+    const reversed = side >= 2;
+    // Across the side the B-spline's values at the knot are (1, 4, 1)/6.
+    const first = side === 0 || side === 3 ? 0 : 1;
+    const control = [0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0];
+    for (let i = 0; i < 4; i++) {
+      const along = reversed ? 3 - i : i;
+      for (let axis = 0; axis < 3; axis++) {
+        const at = (across: number): number => net[3 * (alongRows ? 4 * along + across : 4 * across + along) + axis];
+        control[3 * i + axis] = (at(first) + 4 * at(first + 1) + at(first + 2)) / 6;
+      }
+    }
+    for (let axis = 0; axis < 3; axis++) {
+      const c0 = control[axis], c1 = control[3 + axis], c2 = control[6 + axis], c3 = control[9 + axis];
+      const s0 = c0 + c3, s1 = c1 + c2, d0 = c3 - c0, d1 = c2 - c1;
+      control[axis] = (s0 + 23 * s1) / 48;
+      control[3 + axis] = (d0 + 5 * d1) / 8;
+      control[6 + axis] = (s0 - s1) / 4;
+      control[9 + axis] = (d0 - 3 * d1) / 6;
+    }
+    this.powers.push(...control);
+  }
+
+  /** Adds the straight line from (px, py, pz) to (qx, qy, qz) as the whole of an edge's curve. */
+  addLine(px: number, py: number, pz: number, qx: number, qy: number, qz: number, edge: number): void {
+    this.edges.push(edge);
+    this.weights.push(1);
+    this.shares.push(1);
+    this.powers.push((px + qx) / 2, (py + qy) / 2, (pz + qz) / 2, qx - px, qy - py, qz - pz, 0, 0, 0, 0, 0, 0);
+  }
+}

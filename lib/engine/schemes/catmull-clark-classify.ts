@@ -1,0 +1,138 @@
+import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
+import { isSharpForGood, type LevelMesh } from './level-mesh';
+
+/** What a vertex is to one of its faces. Kinds from INNER to TIP are regular: the face's patch is a plain bicubic there. */
+export const UNSETTLED = 0;
+export const INNER = 1;
+export const RIM = 2;
+export const TIP = 3;
+export const EXTRAORDINARY = 4;
+
+/** How the point in the middle of a fan moves under refinement. */
+export const SMOOTH_CENTRE = 0;
+export const CREASE_CENTRE = 1;
+export const CORNER_CENTRE = 2;
+
+/** Fans around extraordinary vertices, each bounded by creases or closed: n faces, counter-clockwise, by their corners at the centre. */
+export interface Fans {
+  /** Fan i has the corners `corners[starts[i] .. starts[i + 1])`. */
+  starts: number[];
+  corners: number[];
+  closed: boolean[];
+  /** For closed fans: the first spoke is infinitely sharp (a dart, or a corner with one sharp edge). Open fans are sharp at both ends. */
+  sharpFirst: boolean[];
+  centre: number[];
+}
+
+export interface Classified {
+  /** Kind of each corner; only set at vertices of live faces. */
+  kinds: Uint8Array;
+  fans: Fans;
+}
+
+function isQuad(mesh: LevelMesh, face: number): boolean {
+  return mesh.starts[face + 1] - mesh.starts[face] === 4;
+}
+
+/** Reads the rule at each vertex of the live faces [Biermann, Levin & Zorin 2000, sectors] and sorts its corners. */
+export function classifyVertices(mesh: LevelMesh): Classified {
+  const kinds = new Uint8Array(mesh.vertexOf.length);
+  const fans: Fans = { starts: [0], corners: [], closed: [], sharpFirst: [], centre: [] };
+  const seen = new Uint8Array(mesh.vertices);
+  const ring: number[] = [];
+  for (let face = 0; face < mesh.faces; face++) {
+    if (mesh.live[face] === 0) continue;
+    for (let h = mesh.starts[face]; h < mesh.starts[face + 1]; h++) {
+      const vertex = mesh.vertexOf[h];
+      if (seen[vertex] === 1) continue;
+      seen[vertex] = 1;
+      const closed = collectRing(mesh, h, ring);
+      classifyRing(mesh, vertex, ring, closed, kinds, fans);
+    }
+  }
+  return { kinds, fans };
+}
+
+/** The corners around the start of `h`, counter-clockwise; from the border on where there is one (then false). */
+export function collectRing(mesh: LevelMesh, h: number, ring: number[]): boolean {
+  let first = h;
+  let closed = false;
+  for (let t = mesh.twin[first]; t >= 0; t = mesh.twin[first]) {
+    first = nextHalfEdge(mesh, t);
+    if (first === h) {
+      closed = true;
+      break;
+    }
+  }
+  ring.length = 0;
+  let corner = first;
+  do {
+    ring.push(corner);
+    corner = mesh.twin[previousHalfEdge(mesh, corner)];
+  } while (corner >= 0 && corner !== first);
+  return closed;
+}
+
+function classifyRing(mesh: LevelMesh, vertex: number, ring: number[], closed: boolean, kinds: Uint8Array, fans: Fans): void {
+  const n = ring.length;
+  const vertexSharpness = mesh.vertexSharpness[vertex];
+  let sharp = closed ? 0 : 1;
+  let firstSharp = -1;
+  let settled = vertexSharpness === 0 || vertexSharpness === Infinity;
+  let quads = true;
+  for (let j = 0; j < n; j++) {
+    if (isSharpForGood(mesh, ring[j])) {
+      sharp++;
+      if (firstSharp < 0) firstSharp = j;
+    } else if (mesh.edgeSharpness[ring[j]] > 0) settled = false;
+    if (!isQuad(mesh, mesh.faceOf[ring[j]])) quads = false;
+  }
+  if (!settled) return;
+  const corner = vertexSharpness > 0 || sharp > 2;
+  if (sharp < 2) {
+    if (!quads) return;
+    if (sharp === 0 && !corner && n === 4) {
+      for (let j = 0; j < 4; j++) kinds[ring[j]] = INNER;
+      return;
+    }
+    pushFan(ring, Math.max(firstSharp, 0), n, true, sharp === 1, corner ? CORNER_CENTRE : SMOOTH_CENTRE, kinds, fans);
+    return;
+  }
+  for (let from = 0; from < n; ) {
+    const start = (firstSharp + from) % n;
+    let size = 1;
+    while (from + size < n && !isSharpForGood(mesh, ring[(firstSharp + from + size) % n])) size++;
+    classifySector(mesh, ring, start, size, corner, kinds, fans);
+    from += size;
+  }
+}
+
+/** A sector of `size` faces between two creases. */
+function classifySector(mesh: LevelMesh, ring: number[], start: number, size: number, corner: boolean, kinds: Uint8Array, fans: Fans): void {
+  for (let j = 0; j < size; j++) if (!isQuad(mesh, mesh.faceOf[ring[(start + j) % ring.length]])) return;
+  if (size === (corner ? 1 : 2)) {
+    for (let j = 0; j < size; j++) kinds[ring[(start + j) % ring.length]] = corner ? TIP : RIM;
+    return;
+  }
+  pushFan(ring, start, size, false, true, corner ? CORNER_CENTRE : CREASE_CENTRE, kinds, fans);
+}
+
+function pushFan(ring: number[], start: number, size: number, closed: boolean, sharpFirst: boolean, centre: number, kinds: Uint8Array, fans: Fans): void {
+  for (let j = 0; j < size; j++) {
+    const corner = ring[(start + j) % ring.length];
+    kinds[corner] = EXTRAORDINARY;
+    fans.corners.push(corner);
+  }
+  fans.starts.push(fans.corners.length);
+  fans.closed.push(closed);
+  fans.sharpFirst.push(sharpFirst);
+  fans.centre.push(centre);
+}
+
+/** Whether all corners of a quad but `except` (pass -1 for none) are regular. */
+export function isRegularFace(mesh: LevelMesh, kinds: Uint8Array, face: number, except: number): boolean {
+  const start = mesh.starts[face];
+  if (mesh.starts[face + 1] - start !== 4) return false;
+  for (let h = start; h < start + 4; h++) if (h !== except && (kinds[h] < INNER || kinds[h] > TIP)) return false;
+  return true;
+}

@@ -1,0 +1,172 @@
+import type { CreasingRule, TriangleRule } from '../cage';
+import type { BorderCurves } from '../moments/border-curves';
+import { MOMENTS, type MomentSums } from '../moments/sums';
+import { bicubicMoments } from '../patches/bicubic';
+import { gaussRule } from '../patches/gauss-rule';
+import { classifyVertices, isRegularFace, type Fans } from './catmull-clark-classify';
+import { fillChildNet, makeFanState, refineFan, type FanState } from './catmull-clark-fan';
+import { fillNet } from './catmull-clark-net';
+import { refineAround } from './catmull-clark-refine';
+import { fanTable } from './catmull-clark-tables';
+import type { LevelMesh } from './level-mesh';
+
+/** Refinements after which a cage that still is not resolved is given up; sharpness below 10 needs at most 12. */
+const MOST_LEVELS = 16;
+
+/** Gauss nodes a direction for the level sequence of a fan: finer levels are flatter, so fewer do. */
+const LEVEL_NODES = [7, 7, 7, 6, 5, 5, 4];
+
+/** Sums that the integration fills; about each body's origin. */
+export interface LimitSums {
+  solid: MomentSums;
+  surface: MomentSums;
+  /** Per body and moment: sum over the fans of the difference between two closings of the tail. */
+  tailError: Float64Array;
+  curves: BorderCurves;
+}
+
+export interface RefinementRules {
+  triangles: TriangleRule;
+  creasing: CreasingRule;
+}
+
+const net = new Float64Array(48);
+const solid = new Float64Array(MOMENTS);
+const surface = new Float64Array(MOMENTS);
+
+/**
+ * Integrates the Catmull-Clark limit surface of the live faces of `cage` about the bodies' origins (x, y, z each, in the cage's frame).
+ * Regular faces are exact bicubics, extraordinary fans closed level sequences; the rest is refined locally until nothing is left.
+ * Returns false where the cage could not be resolved.
+ */
+export function integrateCatmullClark(cage: LevelMesh, rules: RefinementRules, origins: Float64Array, sums: LimitSums): boolean {
+  let mesh = cage;
+  for (let level = 0; level <= MOST_LEVELS; level++) {
+    const { kinds, fans } = classifyVertices(mesh);
+    let left = 0;
+    for (let face = 0; face < mesh.faces; face++) {
+      if (mesh.live[face] === 0) continue;
+      if (isRegularFace(mesh, kinds, face, -1)) {
+        addRegularFace(mesh, face, origins, sums);
+        mesh.live[face] = 0;
+      } else left++;
+    }
+    for (let fan = 0; fan < fans.centre.length && left > 0; fan++) {
+      if (!isIsolated(mesh, kinds, fans, fan)) continue;
+      addFan(mesh, fans, fan, origins, sums);
+      for (let i = fans.starts[fan]; i < fans.starts[fan + 1]; i++) mesh.live[mesh.faceOf[fans.corners[i]]] = 0;
+      left -= fans.starts[fan + 1] - fans.starts[fan];
+    }
+    if (left === 0) return true;
+    mesh = refineAround(mesh, rules);
+  }
+  return false;
+}
+
+function isIsolated(mesh: LevelMesh, kinds: Uint8Array, fans: Fans, fan: number): boolean {
+  for (let i = fans.starts[fan]; i < fans.starts[fan + 1]; i++) {
+    const face = mesh.faceOf[fans.corners[i]];
+    if (mesh.live[face] === 0 || !isRegularFace(mesh, kinds, face, fans.corners[i])) return false;
+  }
+  return true;
+}
+
+function addRegularFace(mesh: LevelMesh, face: number, origins: Float64Array, sums: LimitSums): void {
+  const body = mesh.bodyOf[face];
+  const start = mesh.starts[face];
+  fillNet(mesh, start, false, net);
+  bicubicMoments(net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2], gaussRule(7), solid, surface);
+  sums.solid.add(body, solid, 0, 1);
+  sums.surface.add(body, surface, 0, 1);
+  for (let side = 0; side < 4; side++) {
+    const edge = mesh.borderOf[start + side];
+    if (edge >= 0) sums.curves.addSide(net, side, edge, 1, 2 ** -mesh.level);
+  }
+}
+
+function readFan(mesh: LevelMesh, fans: Fans, index: number): FanState {
+  const from = fans.starts[index];
+  const fan = makeFanState(fans.starts[index + 1] - from, fans.closed[index], fans.sharpFirst[index], fans.centre[index]);
+  for (let j = 0; j < fan.sectors; j++) {
+    fillNet(mesh, fans.corners[from + j], true, net);
+    fan.centre.set(net.subarray(15, 18));
+    const before = 9 * j;
+    const after = fan.closed && j + 1 === fan.sectors ? 0 : 9 * (j + 1);
+    for (let a = 1; a < 3; a++) {
+      fan.spokes.set(net.subarray(3 * (4 * (a + 1) + 1), 3 * (4 * (a + 1) + 1) + 3), before + 3 * (a - 1));
+      fan.spokes.set(net.subarray(3 * (4 + a + 1), 3 * (4 + a + 1) + 3), after + 3 * (a - 1));
+      for (let b = 1; b < 3; b++) {
+        const at = 3 * (4 * (a + 1) + b + 1);
+        fan.inner.set(net.subarray(at, at + 3), 27 * j + 9 * (a - 1) + 3 * (b - 1));
+      }
+    }
+  }
+  return fan;
+}
+
+/** Which sides of the three child nets lie on the sides 0 … 3 of their sector's face (side 0 along spoke j, side 3 along spoke j + 1). */
+const OUTER_SIDES: readonly (readonly [child: number, side: number, faceSide: number])[] = [[0, 1, 1], [1, 1, 1], [1, 2, 2], [2, 2, 2]];
+
+function addFan(mesh: LevelMesh, fans: Fans, index: number, origins: Float64Array, sums: LimitSums): void {
+  let state = readFan(mesh, fans, index);
+  let finer = makeFanState(state.sectors, state.closed, state.sharpFirst, state.centreRule);
+  const { weights, check, curveWeights } = fanTable(state);
+  const from = fans.starts[index];
+  const n = state.sectors;
+  const closedSolid = new Float64Array(MOMENTS * n);
+  const closedSurface = new Float64Array(MOMENTS * n);
+  const checkSolid = new Float64Array(MOMENTS * n);
+  let bordered = false;
+  for (let j = 0; j < n; j++) for (let side = 0; side < 4; side++) if (borderAt(mesh, fans.corners[from + j], side) >= 0) bordered = true;
+  const levels = bordered ? Math.max(weights.length, curveWeights.length) : weights.length;
+  for (let k = 0; k < levels; k++) {
+    refineFan(state, finer);
+    [state, finer] = [finer, state];
+    const rule = gaussRule(LEVEL_NODES[Math.min(k, LEVEL_NODES.length - 1)]);
+    const weight = k < weights.length ? weights[k] : 0;
+    const checkWeight = k < check.length ? check[k] : 0;
+    for (let j = 0; j < n; j++) {
+      const corner = fans.corners[from + j];
+      const body = mesh.bodyOf[mesh.faceOf[corner]];
+      for (let child = 0; child < 3; child++) {
+        fillChildNet(state, j, child, net);
+        if (bordered) addFanCurves(mesh, corner, child, k, k < curveWeights.length ? curveWeights[k] : 0, sums.curves);
+        if (weight === 0) continue;
+        bicubicMoments(net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2], rule, solid, surface);
+        for (let i = 0; i < MOMENTS; i++) {
+          closedSolid[MOMENTS * j + i] += weight * solid[i];
+          checkSolid[MOMENTS * j + i] += checkWeight * solid[i];
+          closedSurface[MOMENTS * j + i] += weight * surface[i];
+        }
+      }
+    }
+  }
+  for (let j = 0; j < n; j++) {
+    const body = mesh.bodyOf[mesh.faceOf[fans.corners[from + j]]];
+    sums.solid.add(body, closedSolid, MOMENTS * j, 1);
+    sums.surface.add(body, closedSurface, MOMENTS * j, 1);
+    for (let i = 0; i < MOMENTS; i++) sums.tailError[MOMENTS * body + i] += Math.abs(closedSolid[MOMENTS * j + i] - checkSolid[MOMENTS * j + i]);
+  }
+}
+
+/** The cage border under side `side` of the face with corner 0 at `corner`; -1 where there is none. */
+function borderAt(mesh: LevelMesh, corner: number, side: number): number {
+  const start = mesh.starts[mesh.faceOf[corner]];
+  return mesh.borderOf[start + ((corner - start + side) & 3)];
+}
+
+/** Adds the border curves that the child net in `net` holds at level k of a fan. */
+function addFanCurves(mesh: LevelMesh, corner: number, child: number, k: number, weight: number, curves: BorderCurves): void {
+  const share = 2 ** (-mesh.level - 1 - k);
+  const spokeSide = child === 0 ? 0 : 3;
+  if (child !== 1) {
+    const edge = borderAt(mesh, corner, spokeSide);
+    if (edge >= 0 && weight !== 0) curves.addSide(net, spokeSide, edge, weight, share);
+  }
+  if (k > 0) return;
+  for (const [outerChild, side, faceSide] of OUTER_SIDES) {
+    if (outerChild !== child) continue;
+    const edge = borderAt(mesh, corner, faceSide);
+    if (edge >= 0) curves.addSide(net, side, edge, 1, share);
+  }
+}
