@@ -1,0 +1,33 @@
+import { count, eq } from 'drizzle-orm';
+import type { Executor } from '@/db/client';
+import { importFiles } from '@/db/schema/import-files';
+import { users } from '@/db/schema/users';
+import type { ImportAnswer, ImportCounts } from '@/lib/rules/import-answer';
+import type { ImportRow } from './get-import-row';
+
+/** An import as the API answers it, without its files. */
+export async function describeImport(db: Executor, row: ImportRow): Promise<ImportAnswer> {
+  const counts: ImportCounts = { queued: 0, reading: 0, measuring: 0, done: 0, failed: 0, total: 0 };
+  const states = await db.select({ state: importFiles.state, files: count() }).from(importFiles).where(eq(importFiles.importId, row.id)).groupBy(importFiles.state);
+  for (const { state, files } of states) {
+    counts[state] = files;
+    counts.total += files;
+  }
+  const [creator] = await db.select({ name: users.name }).from(users).where(eq(users.id, row.createdBy));
+  return answerOf(row, counts, creator?.name ?? '');
+}
+
+export function answerOf(row: ImportRow, counts: ImportCounts, createdBy: string): ImportAnswer {
+  return {
+    id: row.id,
+    state: row.state,
+    scheme: row.scheme,
+    boundary: row.boundary,
+    parts_by: row.partsBy,
+    created_by: createdBy,
+    created_at: row.createdAt.toISOString(),
+    submitted_at: row.submittedAt?.toISOString() ?? null,
+    ended_at: row.endedAt?.toISOString() ?? null,
+    counts,
+  };
+}

@@ -1,0 +1,50 @@
+import { and, eq, inArray, sql } from 'drizzle-orm';
+import type { Transaction } from '@/db/client';
+import { importFiles } from '@/db/schema/import-files';
+import { imports } from '@/db/schema/imports';
+import type { ImportFileError } from '@/lib/rules/import-answer';
+import type { ImportFile } from './lease';
+import { notifyImport } from './notify-import';
+
+export type FileEnd =
+  | { state: 'done'; assetId: string; versionId: string; parts: number; problems: number; remark: string | null }
+  | { state: 'failed'; error: ImportFileError };
+
+/** Locks a file that this holder may still end; null when it ended, was cancelled or went to another worker meanwhile. */
+export async function lockHeldFile(tx: Transaction, fileId: string, holder: string): Promise<ImportFile | null> {
+  const [file] = await tx
+    .select()
+    .from(importFiles)
+    .where(and(eq(importFiles.id, fileId), eq(importFiles.leaseBy, holder), inArray(importFiles.state, ['reading', 'measuring'])))
+    .for('no key update');
+  return file ?? null;
+}
+
+/** Ends a locked file, and with the last one its import, in the transaction of what the file brought. */
+export async function endFile(tx: Transaction, file: ImportFile, end: FileEnd): Promise<void> {
+  const fields =
+    end.state === 'done'
+      ? { assetId: end.assetId, versionId: end.versionId, parts: end.parts, problems: end.problems, remark: end.remark }
+      : { errorCode: end.error.code, errorMessage: end.error.message, errorLine: end.error.line, errorColumn: end.error.column };
+  await tx.update(importFiles).set({ state: end.state, ...fields, endedAt: sql`now()`, leaseBy: null, leaseUntil: null }).where(eq(importFiles.id, file.id));
+  await endImportWhenOver(tx, file.importId);
+  await notifyImport(tx, file.importId);
+}
+
+/**
+ * Ends the import when no file is left. Its row is locked first, so that of two last files that end side by side the later
+ * one sees the other's end. Lock order everywhere: files, asset, show, import.
+ */
+export async function endImportWhenOver(tx: Transaction, importId: string): Promise<void> {
+  await tx.select({ id: imports.id }).from(imports).where(eq(imports.id, importId)).for('no key update');
+  await tx
+    .update(imports)
+    .set({ state: 'done', endedAt: sql`now()` })
+    .where(
+      and(
+        eq(imports.id, importId),
+        inArray(imports.state, ['queued', 'running']),
+        sql`not exists (select 1 from import_files where import_id = ${importId} and state in ('queued', 'reading', 'measuring'))`,
+      ),
+    );
+}

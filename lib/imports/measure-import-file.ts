@@ -1,0 +1,121 @@
+import { randomUUID } from 'node:crypto';
+import { eq } from 'drizzle-orm';
+import type { Database, Transaction } from '@/db/client';
+import { shows } from '@/db/schema/shows';
+import type { Actor } from '@/lib/context';
+import type { MeasuredCage, MeasureOptions } from '@/lib/engine/measured';
+import { recordEvent } from '@/lib/history/record-event';
+import type { EnginePool } from '@/lib/jobs/engine-pool';
+import { log } from '@/lib/log';
+import { LARGEST_ASSET_M, SMALLEST_ASSET_M, type ImportFileError, type Remark } from '@/lib/rules/import-answer';
+import type { PlannedFile } from '@/lib/rules/import-plan';
+import { METRES_PER } from '@/lib/rules/units';
+import { refreshAssetValues } from '@/lib/values/refresh-asset-values';
+import { endFile, lockHeldFile } from './end-file';
+import { findGeometryRecord, summariseRecord, writeGeometryRecord } from './geometry-record';
+import type { ImportRow } from './get-import-row';
+import { markMeasuring, startFile } from './lease';
+import { writeVersion } from './write-version';
+
+/** A file that was begun this often and never ended is given up. */
+const MOST_ATTEMPTS = 5;
+
+export interface FileWork {
+  db: Database;
+  engine: Pick<EnginePool, 'measure'>;
+  holder: string;
+  importRow: ImportRow;
+  /** Who submitted the import: versions are in their name. */
+  actor: Actor;
+}
+
+/**
+ * Takes one held file to its end: read, measured (or found measured before), and put under its asset with values, history
+ * and its own end in one transaction. A file that cannot be read ends as failed. Throws only what may pass: storage or
+ * database out of reach.
+ */
+export async function measureImportFile(work: FileWork, fileId: string, plan: PlannedFile): Promise<void> {
+  const { db, holder, importRow } = work;
+  const file = await startFile(db, fileId, holder);
+  if (!file) return;
+  if (file.attempts > MOST_ATTEMPTS) return failFile(work, fileId, giveUp(file.name));
+  if (plan.asset === null) return failFile(work, fileId, { code: 'name_not_matched', message: 'The name does not match the show’s pattern. Give an asset, or change the pattern.', line: null, column: null });
+  const { scheme, boundary, triangles, creasing, partsBy } = importRow;
+  const key = { sha256: file.sha256, options: { scheme, boundary, triangles, creasing, partsBy } satisfies MeasureOptions };
+  const known = await findGeometryRecord(db, key);
+  let cage: MeasuredCage | null = null;
+  if (known === null) {
+    const outcome = await work.engine.measure({ name: file.name, ...key }, () => void markMeasuring(db, fileId, holder).catch(() => undefined));
+    if (!outcome.ok) return failFile(work, fileId, errorOf(file.name, outcome));
+    cage = outcome.cage;
+  }
+  try {
+    await db.transaction((tx) => endMeasured(tx, work, fileId, { ...plan, asset: plan.asset! }, key, known, cage));
+  } catch (error) {
+    const reference = refusedNumbers(error);
+    if (reference === null) throw error;
+    log.error({ err: error, reference, file: file.name, sha256: file.sha256 }, 'a measurement was refused by the database');
+    await failFile(work, fileId, { code: 'numbers_refused', message: `A measured number did not pass the check before it is stored. Reference ${reference}.`, line: null, column: null });
+  }
+}
+
+async function endMeasured(
+  tx: Transaction,
+  work: FileWork,
+  fileId: string,
+  plan: PlannedFile & { asset: string },
+  key: { sha256: string; options: MeasureOptions },
+  known: string | null,
+  cage: MeasuredCage | null,
+): Promise<void> {
+  const held = await lockHeldFile(tx, fileId, work.holder);
+  if (!held) return;
+  const { showId, createdBy } = work.importRow;
+  const recordId = known ?? (await writeGeometryRecord(tx, key, cage!));
+  const version = await writeVersion(tx, { showId, plan, outsideId: held.outsideIdOverride, recordId, ...key, importFileId: fileId, createdBy });
+  const summary = await summariseRecord(tx, recordId);
+  const remarks = [...version.remarks, ...(await unitRemarks(tx, showId, summary.size))];
+  if (version.changed) {
+    await recordEvent(tx, { actor: work.actor, origin: 'import' }, { showId, act: 'import-version', subject: version.asset, items: [{ field: 'version', before: version.before, after: version.label }] });
+    await refreshAssetValues(tx, { assetId: version.assetId });
+  }
+  await endFile(tx, held, { state: 'done', assetId: version.assetId, versionId: version.versionId, parts: summary.parts, problems: summary.problems, remark: remarks.join(' ') || null });
+}
+
+/** An asset far too small or large for what a show films was most likely written in another unit. */
+async function unitRemarks(tx: Transaction, showId: string, size: [number, number, number] | null): Promise<Remark[]> {
+  if (!size) return [];
+  const [show] = await tx.select({ unit: shows.linearUnit }).from(shows).where(eq(shows.id, showId));
+  const largest = Math.max(...size) * METRES_PER[show.unit];
+  return largest < SMALLEST_ASSET_M ? ['unit_too_small'] : largest > LARGEST_ASSET_M ? ['unit_too_large'] : [];
+}
+
+async function failFile(work: FileWork, fileId: string, error: ImportFileError): Promise<void> {
+  await work.db.transaction(async (tx) => {
+    const held = await lockHeldFile(tx, fileId, work.holder);
+    if (held) await endFile(tx, held, { state: 'failed', error });
+  });
+}
+
+function giveUp(name: string): ImportFileError {
+  const reference = randomUUID();
+  log.error({ reference, file: name }, 'a file was begun again and again without an end');
+  return { code: 'gave_up', message: `This file was tried ${MOST_ATTEMPTS} times and never came to an end. Reference ${reference}.`, line: null, column: null };
+}
+
+function errorOf(name: string, outcome: { code: string; message: string; line: number | null; column: number | null }): ImportFileError {
+  const { code, line, column } = outcome;
+  if (code !== 'measuring_failed') return { code, message: sentence(outcome.message), line, column };
+  const reference = randomUUID();
+  log.error({ reference, file: name, fault: outcome.message }, 'the engine failed on a file');
+  return { code, message: `Measuring this file failed on our side. Reference ${reference}.`, line, column };
+}
+
+const sentence = (clause: string): string => `${clause.charAt(0).toUpperCase()}${clause.slice(1)}${/[.!?]$/.test(clause) ? '' : '.'}`;
+
+/** A reference for the log when a constraint or a type of the database refused a row: trying again would change nothing. */
+function refusedNumbers(error: unknown): string | null {
+  const cause = error instanceof Error && error.cause instanceof Error ? error.cause : error;
+  const code = cause instanceof Error && 'code' in cause && typeof cause.code === 'string' ? cause.code : '';
+  return /^(22|23)/.test(code) ? randomUUID() : null;
+}

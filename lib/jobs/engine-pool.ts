@@ -1,0 +1,47 @@
+import { availableParallelism } from 'node:os';
+import { fileURLToPath } from 'node:url';
+import { MessageChannel } from 'node:worker_threads';
+import { Piscina } from 'piscina';
+import { config } from '@/lib/config';
+import type { MeasureOptions } from '@/lib/engine/measured';
+import type { MeasureOutcome, MeasureTask } from './engine-thread';
+
+/** What measures files beside the event loop, so that heartbeats go on during a long solve. */
+export interface EnginePool {
+  threads: number;
+  measure(file: { name: string; sha256: string; options: MeasureOptions }, onMeasuring?: () => void): Promise<MeasureOutcome>;
+  close(): Promise<void>;
+}
+
+/** A thread whose memory ran out takes its task down with it: no fault that passes. */
+const isOutOfMemory = (error: unknown): boolean => error instanceof Error && 'code' in error && error.code === 'ERR_WORKER_OUT_OF_MEMORY';
+
+/** Starts threads on demand; they end when they are idle for a while. */
+export function startEnginePool(threads = config().engineThreads ?? availableParallelism()): EnginePool {
+  // Beside this module as source, beside the worker's bundle in production: the ending is the same as our own.
+  const extension = import.meta.url.endsWith('.ts') ? '.ts' : '.mjs';
+  const pool = new Piscina<MeasureTask, MeasureOutcome>({
+    filename: fileURLToPath(new URL(`./engine-thread${extension}`, import.meta.url)),
+    minThreads: 0,
+    maxThreads: threads,
+    idleTimeout: 30_000,
+    execArgv: extension === '.ts' ? ['--import', 'tsx'] : [],
+  });
+  return {
+    threads,
+    async measure(file, onMeasuring) {
+      const { port1, port2 } = new MessageChannel();
+      port1.on('message', () => onMeasuring?.());
+      port1.unref();
+      try {
+        return await pool.run({ ...file, port: port2 }, { transferList: [port2] });
+      } catch (error) {
+        if (!isOutOfMemory(error)) throw error;
+        return { ok: false, code: 'too_complex', message: 'the file needs more memory than a measuring thread may have', line: null, column: null, excerpt: null };
+      } finally {
+        port1.close();
+      }
+    },
+    close: () => pool.destroy(),
+  };
+}

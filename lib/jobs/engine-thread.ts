@@ -1,0 +1,43 @@
+import type { MessagePort } from 'node:worker_threads';
+import { measureCage } from '@/lib/engine/measure';
+import type { MeasuredCage, MeasureOptions } from '@/lib/engine/measured';
+import { MeshError } from '@/lib/formats/mesh-error';
+import { readCage } from '@/lib/imports/cage-formats';
+import { readBlob } from '@/lib/storage/read-blob';
+
+export interface MeasureTask {
+  name: string;
+  sha256: string;
+  options: MeasureOptions;
+  /** Told `measuring` once the file is read. */
+  port: MessagePort | null;
+}
+
+/** A measured cage, or why the file cannot be one: then it is the file's fault, and trying again changes nothing. */
+export type MeasureOutcome =
+  | { ok: true; cage: MeasuredCage }
+  | { ok: false; code: string; message: string; line: number | null; column: number | null; excerpt: string | null };
+
+/** Reads and measures one file. Throws only where storage fails, which may pass. */
+export default async function measureFile(task: MeasureTask): Promise<MeasureOutcome> {
+  try {
+    const cage = await readCage(task.name, await readBlob(task.sha256));
+    task.port?.postMessage('measuring');
+    const measured = measureCage(cage, task.options);
+    const notes = cage.warnings.map((warning) => ({
+      code: warning.code,
+      severity: 'note' as const,
+      message: warning.message,
+      part: null,
+      count: 1,
+      places: warning.line === null ? [] : [{ face: null, edge: null, vertex: null, position: null, line: warning.line }],
+    }));
+    return { ok: true, cage: { ...measured, findings: [...measured.findings, ...notes] } };
+  } catch (error) {
+    if (error instanceof MeshError) return { ok: false, code: error.code, message: error.detail, line: error.line, column: error.column, excerpt: error.excerpt };
+    if (error instanceof Error && 'syscall' in error) throw error;
+    return { ok: false, code: 'measuring_failed', message: error instanceof Error ? error.message : 'unknown fault', line: null, column: null, excerpt: null };
+  } finally {
+    task.port?.close();
+  }
+}

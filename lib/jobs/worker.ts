@@ -1,0 +1,32 @@
+import { closeDatabase, database } from '@/db/client';
+import { config } from '@/lib/config';
+import { log } from '@/lib/log';
+import { sweepUploads } from '@/lib/storage/sweep-uploads';
+import { startEnginePool } from './engine-pool';
+import { runQueues } from './run-queues';
+
+/** The worker process: takes jobs from the queue until it is told to end. */
+async function main(): Promise<void> {
+  const url = config().appDatabaseUrl;
+  if (!url) throw new Error('No database: set DATABASE_URL, or start with npm start.');
+  const engine = startEnginePool();
+  const queues = await runQueues({ db: database(), url, engine });
+  log.info({ threads: engine.threads }, 'worker is ready');
+  void sweepUploads().catch((error: unknown) => log.warn({ err: error }, 'old uploads could not be removed'));
+  let isEnding = false;
+  const end = async (signal: string) => {
+    if (isEnding) return;
+    isEnding = true;
+    log.info({ signal }, 'worker ends');
+    await queues.stop();
+    await engine.close();
+    await closeDatabase();
+    process.exit(0);
+  };
+  for (const signal of ['SIGTERM', 'SIGINT'] as const) process.on(signal, () => void end(signal));
+}
+
+main().catch((error: unknown) => {
+  log.fatal({ err: error }, 'worker could not start');
+  process.exit(1);
+});

@@ -1,0 +1,94 @@
+import type { BoundaryWord, PartitionWord, SchemeWord } from './measure-words';
+import type { Category, ImportFileState, ImportState } from './states';
+
+/** What happened to a file beside its end. Codes as the API has them, with their sentences. */
+export const REMARKS = {
+  unchanged: 'The same bytes and options as the current version: nothing changed.',
+  next_take: 'Another file has this number already, so this one is its next take.',
+  gap: 'Versions between the last one and this one are not here.',
+  no_number: 'The name has no version, so it got the next number.',
+  not_current: 'A later version stays the current one.',
+  qualified: 'The same name came from another folder too, so the folder is part of the asset’s code.',
+  unit_too_small: 'The whole asset measures less than 5 mm. The file’s unit does not look like the show’s.',
+  unit_too_large: 'The whole asset measures more than 200 m. The file’s unit does not look like the show’s.',
+} as const;
+export type Remark = keyof typeof REMARKS;
+
+/** Remarks that deserve a look; the others are for the record. */
+export const LOUD_REMARKS: readonly Remark[] = ['unit_too_small', 'unit_too_large', 'next_take', 'gap', 'qualified'];
+
+/** Largest dimension of an asset, metres, outside which its unit is doubted. */
+export const SMALLEST_ASSET_M = 0.005;
+export const LARGEST_ASSET_M = 200;
+
+export interface ImportFileError {
+  code: string;
+  message: string;
+  line: number | null;
+  column: number | null;
+}
+
+/** One file of an import. `size_m` is the box of the whole asset in its own axes, metres: x, y, z. */
+export interface ImportFileAnswer {
+  name: string;
+  state: ImportFileState;
+  asset: string | null;
+  version: string | null;
+  parts: number | null;
+  problems: number | null;
+  remarks: Remark[];
+  size_m: [number, number, number] | null;
+  sha256: string;
+  bytes: number;
+  error: ImportFileError | null;
+}
+
+/** Files by state; `total` of them. */
+export type ImportCounts = Record<ImportFileState, number> & { total: number };
+
+export interface ImportAnswer {
+  id: string;
+  state: ImportState;
+  scheme: SchemeWord;
+  boundary: BoundaryWord;
+  parts_by: PartitionWord;
+  created_by: string;
+  created_at: string;
+  submitted_at: string | null;
+  ended_at: string | null;
+  counts: ImportCounts;
+}
+
+/** Answer of GET …/imports/{id}; an event of …/events has the files that changed alone. */
+export interface ImportDetail extends ImportAnswer {
+  files: ImportFileAnswer[];
+}
+
+export interface ImportPage {
+  items: ImportAnswer[];
+  next_cursor: string | null;
+}
+
+/** Answer of PUT …/files/{name}. `stored` is false when these bytes were there under this name already. */
+export interface StoredFileAnswer {
+  name: string;
+  sha256: string;
+  bytes: number;
+  stored: boolean;
+}
+
+/** What the import page knows before anything goes up. */
+export interface ImportPreparation {
+  show: string;
+  name_pattern: string | null;
+  scheme: SchemeWord;
+  boundary: BoundaryWord;
+  parts_by: PartitionWord;
+  linear_unit: string;
+  up_axis: 'y' | 'z';
+  frozen: boolean;
+  extensions: string[];
+  max_file_bytes: number;
+  max_files: number;
+  assets: { asset: string; category: Category; versions: number[] }[];
+}

@@ -1,0 +1,14 @@
+import { z } from 'zod';
+import { showRef } from '../fields';
+import { BOUNDARY_WORDS, CREASING_WORDS, PARTITION_WORDS, SCHEME_WORDS, TRIANGLE_WORDS } from '../measure-words';
+
+/** A new import; what is left out is as the show has it. */
+export const openImportInput = z.strictObject({
+  show: showRef,
+  scheme: z.enum(SCHEME_WORDS, `scheme is one of ${SCHEME_WORDS.join(', ')}.`).optional(),
+  boundary: z.enum(BOUNDARY_WORDS, `boundary is one of ${BOUNDARY_WORDS.join(', ')}.`).optional(),
+  triangles: z.enum(TRIANGLE_WORDS, `triangles is one of ${TRIANGLE_WORDS.join(', ')}.`).optional(),
+  creasing: z.enum(CREASING_WORDS, `creasing is one of ${CREASING_WORDS.join(', ')}.`).optional(),
+  parts_by: z.enum(PARTITION_WORDS, `parts_by is one of ${PARTITION_WORDS.join(', ')}.`).optional(),
+});
+export type OpenImportInput = z.infer<typeof openImportInput>;
