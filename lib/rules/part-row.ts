@@ -122,5 +122,7 @@ export interface PartPage {
   items: PartRow[];
   assets: AssetTotal[];
   counts: PartCounts | null;
+  /** The show's revision that the page was read at: what to hand in as changed_since the next time. */
+  revision: number;
   next_cursor: string | null;
 }

@@ -1,0 +1,8 @@
+import { route } from '@/lib/endpoint';
+import { listParts } from '@/lib/parts/list-parts';
+import { listPartsInput } from '@/lib/rules/inputs/list-parts';
+import { setValuesInput } from '@/lib/rules/inputs/set-values';
+import { setValues } from '@/lib/settings/set-values';
+
+export const GET = route(listPartsInput, listParts);
+export const PATCH = route(setValuesInput, setValues);
