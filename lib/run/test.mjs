@@ -1,7 +1,7 @@
 import { chmodSync, existsSync, mkdirSync, mkdtempSync, rmSync } from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
-import { announceServing, buildWebWhenChanged, bundleWorkerWhenChanged } from './support/build.mjs';
+import { buildWebWhenChanged, bundleWorkerWhenChanged } from './support/build.mjs';
 import { chromium } from './support/chromium.mjs';
 import { command, endCommands } from './support/command.mjs';
 import { installDependencies } from './support/dependencies.mjs';
@@ -16,7 +16,7 @@ const scratch = mkdtempSync(path.join(os.tmpdir(), 'weighhouse-npm-test-'));
 const counts = { passed: 0, failed: 0 };
 let isEnding = false;
 
-const module = (...parts) => inRoot('node_modules', ...parts);
+const inModules = (...parts) => inRoot('node_modules', ...parts);
 
 /** Everything the run makes lies in one folder, so that one removal leaves nothing behind. */
 function testEnvironment() {
@@ -47,14 +47,14 @@ async function step(name, act, { isShown = false } = {}) {
 const node = (env, args) => command(process.execPath, args, { env }).then(({ code, output, errors }) => ({ code, output: output + errors }));
 
 async function typecheck(env) {
-  const generated = await node(env, [module('next/dist/bin/next'), 'typegen']);
-  return generated.code === 0 ? node(env, [module('typescript/bin/tsc'), '--noEmit']) : generated;
+  const generated = await node(env, [inModules('next/dist/bin/next'), 'typegen']);
+  return generated.code === 0 ? node(env, [inModules('typescript/bin/tsc'), '--noEmit']) : generated;
 }
 
 async function vitest(env) {
   const file = path.join(scratch, 'vitest.json');
   const projects = ['unit', 'components', 'reference', 'database', 'api', ...(isLong ? ['long'] : [])].flatMap((name) => ['--project', name]);
-  const ran = await node(env, [module('vitest/vitest.mjs'), 'run', '--passWithNoTests', '--reporter=default', '--reporter=json', `--outputFile.json=${file}`, ...projects]);
+  const ran = await node(env, [inModules('vitest/vitest.mjs'), 'run', '--passWithNoTests', '--reporter=default', '--reporter=json', `--outputFile.json=${file}`, ...projects]);
   return { ...ran, ...vitestCounts(file, ran.code) };
 }
 
@@ -71,7 +71,7 @@ async function build(env) {
 
 async function playwright(env) {
   const file = path.join(scratch, 'playwright.json');
-  const ran = await node({ ...env, PLAYWRIGHT_JSON_OUTPUT_NAME: file }, [module('@playwright/test/cli.js'), 'test', '--reporter=list,json', '--pass-with-no-tests']);
+  const ran = await node({ ...env, PLAYWRIGHT_JSON_OUTPUT_NAME: file }, [inModules('@playwright/test/cli.js'), 'test', '--reporter=list,json', '--pass-with-no-tests']);
   return { ...ran, ...playwrightCounts(file, ran.code) };
 }
 
@@ -82,7 +82,7 @@ async function test() {
   // Two lanes for two processors. The types are checked before the build, which writes into what the check reads.
   await Promise.all([
     step('type check', () => typecheck(env)).then(() => step('production build', () => build(env))),
-    step('tests in Node', () => vitest(env)).then(() => step('lint', () => node(env, [module('eslint/bin/eslint.js'), '--max-warnings=0', '.']))),
+    step('tests in Node', () => vitest(env)).then(() => step('lint', () => node(env, [inModules('eslint/bin/eslint.js'), '--max-warnings=0', '.']))),
   ]);
   if (existsSync(inRoot('tests/browser'))) await step('tests in the browser', () => playwright(env));
 }

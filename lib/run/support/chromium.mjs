@@ -6,7 +6,7 @@ const program = '/usr/bin/chromium';
 /** The system's Chromium, installed from Debian's packages where missing. */
 export async function chromium() {
   if (existsSync(program)) return program;
-  console.log('Installing Chromium from the system packages');
+  console.error('Installing Chromium from the system packages');
   await installDebianPackages(['chromium', 'fonts-liberation'], { why: 'Chromium for the browser tests is not installed' });
   return program;
 }

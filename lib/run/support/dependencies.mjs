@@ -18,7 +18,7 @@ function isInstalled() {
 /** Installs the packages of the lock file when they are not there. */
 export async function installDependencies() {
   if (isInstalled()) return;
-  console.log('Installing packages (npm ci)');
+  console.error('Installing packages (npm ci)');
   // A start in production still builds, so it wants the development packages too.
   const { code, errors } = await command('npm', ['ci', '--include=dev', '--no-audit', '--no-fund', '--loglevel=error']);
   if (code !== 0) throw new Stop(`npm ci failed: ${errors.trim() || 'see its log'}\nCheck the network or the registry that npm is set to, then start again.`);

@@ -18,7 +18,7 @@ export function findPostgresPrograms(version = null) {
 export async function postgresPrograms() {
   const found = findPostgresPrograms();
   if (found) return found;
-  console.log('Installing PostgreSQL from the system packages');
+  console.error('Installing PostgreSQL from the system packages');
   await installDebianPackages(['postgresql'], {
     why: 'PostgreSQL is not installed',
     // Only the programs are wanted: no cluster of the system's own, and so no service that starts with it.
