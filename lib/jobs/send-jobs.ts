@@ -19,13 +19,14 @@ function inExecutor(executor: Executor, onCount?: (rows: number) => void): PgBos
   };
 }
 
-function sender(executor: Executor): PgBoss {
+/** The queue within a database or a transaction of ours: to send, fetch and complete, not to work. */
+export function queueOf(executor: Executor): PgBoss {
   return new PgBoss({ db: inExecutor(executor), migrate: false, supervise: false, schedule: false });
 }
 
 /** Makes the queues that are not there yet. Outside a transaction: it changes the schema of the queue's tables. */
 export async function ensureQueues(db: Database): Promise<void> {
-  const boss = sender(db);
+  const boss = queueOf(db);
   for (const name of QUEUE_NAMES) await boss.createQueue(name, { name, ...QUEUES[name].options });
 }
 
@@ -36,6 +37,6 @@ export async function ensureQueues(db: Database): Promise<void> {
 export async function sendJobs<Name extends QueueName>(tx: Executor, name: Name, payloads: readonly Payload<Name>[]): Promise<void> {
   if (payloads.length === 0) return;
   let sent = 0;
-  await sender(tx).insert(payloads.map((data) => ({ name, data })), { db: inExecutor(tx, (rows) => (sent = rows)) });
+  await queueOf(tx).insert(payloads.map((data) => ({ name, data })), { db: inExecutor(tx, (rows) => (sent = rows)) });
   if (sent !== payloads.length) throw new Error(`The queue ${name} took ${sent} of ${payloads.length} jobs.`);
 }
