@@ -1,4 +1,4 @@
-import { existsSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { existsSync, readFileSync, readlinkSync, rmSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
 import { setTimeout as wait } from 'node:timers/promises';
 import { isAlive, tryLock } from './file-lock.mjs';
@@ -17,11 +17,10 @@ function readRecord(data) {
   }
 }
 
-/** Whether a process with this number is one of this checkout's: numbers are given out again. */
+/** Whether a process with this number is one of this checkout's: numbers are given out again, and Next.js renames itself. */
 function isOurs(pid) {
   try {
-    const isFromHere = readFileSync(`/proc/${pid}/cmdline`, 'utf8').includes(root);
-    return isFromHere && isAlive(pid);
+    return isAlive(pid) && readlinkSync(`/proc/${pid}/cwd`) === root;
   } catch {
     return false;
   }

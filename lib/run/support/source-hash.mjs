@@ -6,8 +6,11 @@ import { inRoot } from './paths.mjs';
 const sources = ['app', 'components', 'hooks', 'lib', 'db', 'public', 'fonts'];
 const files = ['package-lock.json', 'tsconfig.json', 'next.config.mjs', 'tailwind.config.ts', 'postcss.config.mjs', 'proxy.ts', 'instrumentation.ts'];
 
+/** What runs from source and is in no build. */
+const unbuilt = new Set(['lib/run', 'db/seed', 'db/bootstrap'].map((name) => inRoot(name)));
+
 function* walk(place) {
-  if (!existsSync(place)) return;
+  if (!existsSync(place) || unbuilt.has(place)) return;
   if (!statSync(place).isDirectory()) return void (yield place);
   for (const name of readdirSync(place).sort()) yield* walk(path.join(place, name));
 }
