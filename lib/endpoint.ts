@@ -10,8 +10,9 @@ import { problemResponse } from '@/lib/http/problem-response';
 import { readInput } from '@/lib/http/read-input';
 import { refuseForeignOrigin } from '@/lib/http/refuse-foreign-origin';
 import { log } from '@/lib/log';
+import type { ActionResult } from '@/lib/rules/action-result';
 import { parseInput } from '@/lib/rules/parse-input';
-import { StudioError, type ItemError } from '@/lib/rules/studio-error';
+import { StudioError } from '@/lib/rules/studio-error';
 
 /** A verb of the product: parsed input in, plain data (or a Response of its own, for downloads) out. */
 export type Verb<Input, Output> = (context: Context, input: Input) => Promise<Output>;
@@ -55,10 +56,6 @@ export function route<Input, Output>(
     }
   };
 }
-
-export type ActionResult<Output> =
-  | { ok: true; data: Output }
-  | { ok: false; code: string; message: string; field: string | null; errors: ItemError[] };
 
 /** The plumbing of a server action: the same verb, for a form of ours. Never throws to the page, but for Next's own signals. */
 export function action<Input, Output>(schema: ZodType<Input>, verb: Verb<Input, Output>) {
