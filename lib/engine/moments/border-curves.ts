@@ -8,9 +8,11 @@ export class BorderCurves {
   readonly shares: number[] = [];
   /** Twelve numbers per piece: [power · 3 + axis]. */
   readonly powers: number[] = [];
+  /** Limit points at the ends of edges, by 2 · edge + end. */
+  readonly ends = new Map<number, [number, number, number]>();
 
-  /** Adds the side `side` (0 … 3, counter-clockwise from corner (1,1) to (2,1)) of a bicubic net laid out as `bicubicMoments` wants it. */
-  addSide(net: Float64Array, side: number, edge: number, weight: number, share: number): void {
+  /** Adds the side `side` (0 … 3, counter-clockwise from corner (1,1) to (2,1)) of a bicubic net laid out as `bicubicMoments` wants it. The piece covers [from, from + share] of the edge. */
+  addSide(net: Float64Array, side: number, edge: number, weight: number, from: number, share: number): void {
     this.edges.push(edge);
     this.weights.push(weight);
     this.shares.push(share);
@@ -35,6 +37,8 @@ export class BorderCurves {
       control[9 + axis] = (d0 - 3 * d1) / 6;
     }
     this.powers.push(...control);
+    if (from === 0) this.ends.set(2 * edge, pointAt(control, -0.5));
+    if (from + share === 1) this.ends.set(2 * edge + 1, pointAt(control, 0.5));
   }
 
   /** Adds the straight line from (px, py, pz) to (qx, qy, qz) as the whole of an edge's curve. */
@@ -43,5 +47,12 @@ export class BorderCurves {
     this.weights.push(1);
     this.shares.push(1);
     this.powers.push((px + qx) / 2, (py + qy) / 2, (pz + qz) / 2, qx - px, qy - py, qz - pz, 0, 0, 0, 0, 0, 0);
+    this.ends.set(2 * edge, [px, py, pz]);
+    this.ends.set(2 * edge + 1, [qx, qy, qz]);
   }
+}
+
+function pointAt(powers: number[], t: number): [number, number, number] {
+  const at = (axis: number): number => powers[axis] + t * (powers[3 + axis] + t * (powers[6 + axis] + t * powers[9 + axis]));
+  return [at(0), at(1), at(2)];
 }

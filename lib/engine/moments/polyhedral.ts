@@ -5,11 +5,11 @@ const values = new Float64Array(MOMENTS);
 
 /**
  * The ten moments of the tetrahedron (0, a, b, c), signed by det(a, b, c) [Mirtich 1996]: V; V/4 · Σv; V/20 · (Σ v vᵀ + (Σv)(Σv)ᵀ).
- * Written to `out`.
+ * Written to `out`; returns the magnitude that the volume's rounding error is relative to.
  */
 export function tetrahedronMoments(
   ax: number, ay: number, az: number, bx: number, by: number, bz: number, cx: number, cy: number, cz: number, out: Float64Array,
-): void {
+): number {
   const volume = (ax * (by * cz - bz * cy) + ay * (bz * cx - bx * cz) + az * (bx * cy - by * cx)) / 6;
   const sx = ax + bx + cx;
   const sy = ay + by + cy;
@@ -26,6 +26,7 @@ export function tetrahedronMoments(
   out[7] = second * (ax * ay + bx * by + cx * cy + sx * sy);
   out[8] = second * (ax * az + bx * bz + cx * cz + sx * sz);
   out[9] = second * (ay * az + by * bz + cy * cz + sy * sz);
+  return (Math.abs(ax * (by * cz - bz * cy)) + Math.abs(ay * (bz * cx - bx * cz)) + Math.abs(az * (bx * cy - by * cx))) / 6;
 }
 
 /** Ten surface moments of the triangle a, b, c times its area: ∫ 1, x … yz dA, exact. Written to `out`. */
@@ -61,11 +62,11 @@ export function addPolyhedralMoments(
     const ax = p[a] - ox, ay = p[a + 1] - oy, az = p[a + 2] - oz;
     const bx = p[b] - ox, by = p[b + 1] - oy, bz = p[b + 2] - oz;
     const mx = m[0] - ox, my = m[1] - oy, mz = m[2] - oz;
-    tetrahedronMoments(mx, my, mz, ax, ay, az, bx, by, bz, values);
-    solid.add(body, values, 0, 1);
+    solid.magnitudes[body] += tetrahedronMoments(mx, my, mz, ax, ay, az, bx, by, bz, values);
+    solid.add(body, values, 0);
     if (surface === null) return;
     triangleSurfaceMoments(mx, my, mz, ax, ay, az, bx, by, bz, values);
-    surface.add(body, values, 0, 1);
+    surface.add(body, values, 0);
   };
   const p: number[] = [];
   for (let face = 0; face < mesh.faces; face++) {

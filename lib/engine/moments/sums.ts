@@ -3,30 +3,29 @@ import type { Six, SolidMoments, Three } from '../measured';
 /** Ten moments of each body: 1, x, y, z, xx, yy, zz, xy, xz, yz. */
 export const MOMENTS = 10;
 
-/** Compensated sums [Neumaier 1974] of ten moments per body, with the sum of magnitudes that a rounding estimate needs. */
+/** Compensated sums [Neumaier 1974] of ten moments per body. */
 export class MomentSums {
-  readonly sums: Float64Array;
+  private readonly sums: Float64Array;
   private readonly carries: Float64Array;
+  /** Per body, the sum of the magnitudes of all products that went into the first moment of the ten: what its rounding error is relative to. */
   readonly magnitudes: Float64Array;
 
-  constructor(readonly bodies: number) {
+  constructor(bodies: number) {
     this.sums = new Float64Array(bodies * MOMENTS);
     this.carries = new Float64Array(bodies * MOMENTS);
-    this.magnitudes = new Float64Array(bodies * MOMENTS);
+    this.magnitudes = new Float64Array(bodies);
   }
 
-  /** Adds `sign` times the ten values that start at `offset`. */
-  add(body: number, values: Float64Array, offset: number, sign: number): void {
-    const { sums, carries, magnitudes } = this;
+  /** Adds the ten values that start at `offset`. */
+  add(body: number, values: Float64Array, offset: number): void {
+    const { sums, carries } = this;
     let at = body * MOMENTS;
     for (let i = offset; i < offset + MOMENTS; i++, at++) {
-      const value = sign * values[i];
+      const value = values[i];
       const sum = sums[at];
       const total = sum + value;
-      const size = value < 0 ? -value : value;
-      carries[at] += (sum < 0 ? -sum : sum) >= size ? sum - total + value : value - total + sum;
+      carries[at] += (sum < 0 ? -sum : sum) >= (value < 0 ? -value : value) ? sum - total + value : value - total + sum;
       sums[at] = total;
-      magnitudes[at] += size;
     }
   }
 

@@ -17,9 +17,9 @@ function toPowers(values: Float64Array, at: number, stride: number): void {
  * Ten solid and ten surface moments of a bicubic B-spline patch over its unit square.
  * `net` holds 4 × 4 control points as [(4 row + column) · 3 + axis]; rows run along u, columns along v, and X_u × X_v points outwards.
  * Solid moments are those of the cone from (ox, oy, oz) to the patch, about that point: ∫_V f = 1/(3 + deg f) ∮ f(X) det(X, X_u, X_v) du dv,
- * exact with 7 nodes a direction. Surface moments (∫ f dA, about the same point) hold a root and are as good as the rule.
+ * exact with 7 nodes a direction. Returns ∮ (|x n_x| + |y n_y| + |z n_z|)/3, which the volume's rounding error is relative to. Surface moments (∫ f dA, about the same point) hold a root and are as good as the rule.
  */
-export function bicubicMoments(net: Float64Array, ox: number, oy: number, oz: number, rule: GaussRule, solid: Float64Array, surface: Float64Array): void {
+export function bicubicMoments(net: Float64Array, ox: number, oy: number, oz: number, rule: GaussRule, solid: Float64Array, surface: Float64Array): number {
   const p = powers;
   p.set(net);
   for (let axis = 0; axis < 3; axis++) {
@@ -32,6 +32,7 @@ export function bicubicMoments(net: Float64Array, ox: number, oy: number, oz: nu
   const { nodes, weights } = rule;
   const count = nodes.length;
   let m = 0, mx = 0, my = 0, mz = 0, mxx = 0, myy = 0, mzz = 0, mxy = 0, mxz = 0, myz = 0;
+  let magnitude = 0;
   let s = 0, sx = 0, sy = 0, sz = 0, sxx = 0, syy = 0, szz = 0, sxy = 0, sxz = 0, syz = 0;
   for (let i = 0; i < count; i++) {
     const u = nodes[i];
@@ -69,7 +70,9 @@ export function bicubicMoments(net: Float64Array, ox: number, oy: number, oz: nu
       const nx = yu * zv - zu * yv;
       const ny = zu * xv - xu * zv;
       const nz = xu * yv - yu * xv;
-      const d = w * (x * nx + y * ny + z * nz);
+      const px = x * nx, py = y * ny, pz = z * nz;
+      const d = w * (px + py + pz);
+      magnitude += w * ((px < 0 ? -px : px) + (py < 0 ? -py : py) + (pz < 0 ? -pz : pz));
       const dx = d * x, dy = d * y, dz = d * z;
       m += d;
       mx += dx;
@@ -115,4 +118,5 @@ export function bicubicMoments(net: Float64Array, ox: number, oy: number, oz: nu
   surface[7] = sxy;
   surface[8] = sxz;
   surface[9] = syz;
+  return magnitude / 3;
 }

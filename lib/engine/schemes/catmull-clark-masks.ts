@@ -1,7 +1,7 @@
 import type { CreasingRule } from '../cage';
 import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
-import type { RefinementRules } from './catmull-clark';
 import type { LevelMesh } from './level-mesh';
+import type { RefinementRules } from './refinement-rules';
 import { childEdgeSharpness, decayed, type SemiSharpAround } from './sharpness-decay';
 
 /** Weight of each triangle beside an edge in the first step of the triangle rule "smooth"; quads have ¼. */

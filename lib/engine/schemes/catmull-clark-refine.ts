@@ -1,7 +1,7 @@
 import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
-import type { RefinementRules } from './catmull-clark';
 import { edgePoint, facePoint, vertexPoint, VertexStars } from './catmull-clark-masks';
 import type { LevelMesh } from './level-mesh';
+import type { RefinementRules } from './refinement-rules';
 import { childEdgeSharpness, countSemiSharp, decayed } from './sharpness-decay';
 
 /**
@@ -33,6 +33,8 @@ export function refineAround(mesh: LevelMesh, rules: RefinementRules): LevelMesh
   const bodyOf = new Int32Array(children);
   const live = new Uint8Array(children);
   const borderOf = new Int32Array(4 * children).fill(-1);
+  const borderFrom = new Float32Array(4 * children);
+  const half = 2 ** (-mesh.level - 1);
   const childTwin = (corner: number, side: number): number => (corner < 0 || childOf[corner] < 0 ? -1 : 4 * childOf[corner] + side);
   for (let child = 0; child < children; child++) {
     const c = corners[child];
@@ -57,11 +59,13 @@ export function refineAround(mesh: LevelMesh, rules: RefinementRules): LevelMesh
     edgeSharpness[at + 3] = childEdgeSharpness(rules.creasing, mesh.edgeSharpness[p], mesh.vertexOf[c], semiSharp);
     borderOf[at] = mesh.borderOf[c];
     borderOf[at + 3] = mesh.borderOf[p];
+    borderFrom[at] = mesh.borderFrom[c];
+    borderFrom[at + 3] = mesh.borderFrom[p] + half;
   }
   const { positions, vertexSharpness } = points.finish();
   return {
     faces: children, vertices: vertexSharpness.length, starts, vertexOf, faceOf, twin, edgeSharpness, vertexSharpness,
-    positions, bodyOf, live, level: mesh.level + 1, borderOf,
+    positions, bodyOf, live, level: mesh.level + 1, borderOf, borderFrom,
   };
 }
 

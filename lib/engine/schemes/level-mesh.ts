@@ -1,4 +1,5 @@
 import type { Boundary } from '../cage';
+import { borderEdgeOf } from '../mesh/border-loops';
 import type { Topology } from '../mesh/topology';
 
 /**
@@ -15,6 +16,8 @@ export interface LevelMesh extends Topology {
   level: number;
   /** The cage's half-edge that this half-edge is a piece of where that is a border of a body; else -1. */
   borderOf: Int32Array;
+  /** Where on that half-edge (0 … 1) the piece starts; it covers 2^−level of it. */
+  borderFrom: Float32Array;
 }
 
 /** Whether the surface is creased for good along this half-edge's edge: a border, or infinitely sharp. */
@@ -30,7 +33,9 @@ export function levelZero(mesh: Topology, positions: Float64Array, bodyOf: Int32
   const cornersAt = new Uint8Array(mesh.vertices);
   for (let h = 0; h < mesh.twin.length; h++) {
     const twin = mesh.twin[h];
-    if (twin < 0 || bodyOf[mesh.faceOf[twin]] !== bodyOf[mesh.faceOf[h]]) borderOf[h] = h;
+    const bordered = twin < 0 || bodyOf[mesh.faceOf[twin]] !== bodyOf[mesh.faceOf[h]];
+    // One side's curve stands for both, so that what one body gains the other loses to the last bit.
+    if (bordered && borderEdgeOf(mesh, bodyOf, blocked, h) === h) borderOf[h] = h;
     if (cornersAt[mesh.vertexOf[h]] < 2) cornersAt[mesh.vertexOf[h]]++;
   }
   let vertexSharpness = mesh.vertexSharpness;
@@ -38,5 +43,5 @@ export function levelZero(mesh: Topology, positions: Float64Array, bodyOf: Int32
     vertexSharpness = vertexSharpness.slice();
     for (let h = 0; h < mesh.twin.length; h++) if (mesh.twin[h] < 0 && cornersAt[mesh.vertexOf[h]] === 1) vertexSharpness[mesh.vertexOf[h]] = Infinity;
   }
-  return { ...mesh, positions, bodyOf, live, level: 0, borderOf, vertexSharpness };
+  return { ...mesh, positions, bodyOf, live, level: 0, borderOf, borderFrom: new Float32Array(mesh.twin.length), vertexSharpness };
 }

@@ -1,0 +1,98 @@
+import type { MeasuredComponent, MeasuredPart, SolidMoments, Three } from './measured';
+import type { Frames } from './mesh/frames';
+import type { Bodies } from './mesh/partition';
+import type { Topology } from './mesh/topology';
+import type { CapAmounts } from './moments/caps';
+import { largestRuleDefect, solidErrorEstimate } from './moments/error-estimate';
+import type { Integrated } from './moments/integrate-limit';
+import { centralMoments, MOMENTS } from './moments/sums';
+
+/** Volume relative to the cube of a body's size below which a centroid would be rounding only. */
+const NO_VOLUME = 1e-13;
+
+/** From this share of caps in the closed area, or below this roundness, an open part is taken for a sheet. */
+const SHEET_CAP_SHARE = 0.25;
+const SHEET_ROUNDNESS = 0.02;
+
+/** Puts the sums into parts and components. */
+export function assembleParts(
+  mesh: Topology, bodies: Bodies, blocked: Uint8Array, frames: Frames, limit: Integrated, ownCage: Integrated, caps: CapAmounts,
+): MeasuredPart[] {
+  const parts = emptyParts(mesh, bodies);
+  const faces = new Int32Array(bodies.bodies);
+  for (let face = 0; face < mesh.faces; face++) faces[bodies.bodyOf[face]]++;
+  const capArea = new Float64Array(parts.length);
+  const capVolume = new Float64Array(parts.length);
+  const defect = largestRuleDefect();
+  for (let body = 0; body < bodies.bodies; body++) {
+    const index = bodies.partOfBody[body];
+    const part = parts[index];
+    part.faces += faces[body];
+    for (let axis = 0; axis < 3; axis++) {
+      part.bounds[axis] = Math.min(part.bounds[axis], frames.boxes[6 * body + axis]);
+      part.bounds[3 + axis] = Math.max(part.bounds[3 + axis], frames.boxes[6 * body + 3 + axis]);
+    }
+    if (blocked[body] === 1) continue;
+    part.components.push(makeComponent(body, faces[body], frames, limit, ownCage, defect));
+    capArea[index] += caps.area[body];
+    capVolume[index] += caps.volume[body];
+  }
+  for (let i = 0; i < parts.length; i++) describeCaps(parts[i], capArea[i], capVolume[i]);
+  return parts;
+}
+
+function emptyParts(mesh: Topology, bodies: Bodies): MeasuredPart[] {
+  const parts: MeasuredPart[] = bodies.partNames.map((name) => ({
+    name, faces: 0, maxValence: 0, components: [], bounds: [Infinity, Infinity, Infinity, -Infinity, -Infinity, -Infinity],
+    capAreaShare: 0, capVolumeShare: 0, openEdges: 0, looksLikeSheet: false,
+  }));
+  const valence = new Int32Array(mesh.vertices);
+  for (let h = 0; h < mesh.vertexOf.length; h++) {
+    valence[mesh.vertexOf[h]]++;
+    if (mesh.twin[h] >= 0) continue;
+    const face = mesh.faceOf[h];
+    parts[bodies.partOf[face]].openEdges++;
+    valence[mesh.vertexOf[h + 1 === mesh.starts[face + 1] ? mesh.starts[face] : h + 1]]++;
+  }
+  for (let h = 0; h < mesh.vertexOf.length; h++) {
+    const part = parts[bodies.partOf[mesh.faceOf[h]]];
+    part.maxValence = Math.max(part.maxValence, valence[mesh.vertexOf[h]]);
+  }
+  return parts;
+}
+
+function makeComponent(body: number, faces: number, frames: Frames, limit: Integrated, ownCage: Integrated, defect: number): MeasuredComponent {
+  const at = 3 * body;
+  const origin: Three = [0, 1, 2].map((axis) => frames.pieceCentres[at + axis] + frames.origins[at + axis]) as Three;
+  const box = frames.boxes.subarray(6 * body, 6 * body + 6);
+  const size = Math.hypot(box[3] - box[0], box[4] - box[1], box[5] - box[2]) / 2;
+  const area = limit.surface.total(body);
+  const areaCentre: Three = area[0] > 0 ? [0, 1, 2].map((axis) => origin[axis] + area[1 + axis] / area[0]) as Three : origin;
+  const none = NO_VOLUME * size ** 3;
+  const moments = limit.solid.total(body);
+  const solid = centralMoments(moments, origin, areaCentre, none);
+  const cage: SolidMoments = limit === ownCage ? solid : centralMoments(ownCage.solid.total(body), origin, areaCentre, none);
+  const surface = centralMoments(area, origin, areaCentre, 0);
+  return {
+    faces,
+    solid,
+    surface: { area: surface.volume, centroid: surface.centroid, centralSecond: surface.centralSecond },
+    cage,
+    hollow: null,
+    errorEstimate: solidErrorEstimate(moments[0], limit.solid.magnitudes[body], limit.closingError, MOMENTS * body, size, defect),
+    surfaceErrorEstimate: 2 ** -48,
+  };
+}
+
+function describeCaps(part: MeasuredPart, capArea: number, capVolume: number): void {
+  const area = part.components.reduce((sum, component) => sum + component.surface.area, 0);
+  const volume = Math.abs(part.components.reduce((sum, component) => sum + component.solid.volume, 0));
+  if (capArea > 0) {
+    part.capAreaShare = capArea / (area + capArea);
+    part.capVolumeShare = volume > 0 ? Math.min(1, capVolume / volume) : 1;
+  }
+  if (part.openEdges === 0) return;
+  // 36 π V² / A³ is 1 for a sphere.
+  const roundness = (36 * Math.PI * volume * volume) / (area + capArea) ** 3;
+  part.looksLikeSheet = part.capAreaShare > SHEET_CAP_SHARE || !(roundness > SHEET_ROUNDNESS);
+}

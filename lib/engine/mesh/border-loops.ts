@@ -1,0 +1,84 @@
+import { nextHalfEdge, previousHalfEdge, type Topology } from './topology';
+
+/** Loop number of the far side where nothing lies there is never this; used before loops are numbered. */
+const NO_LOOP = -1;
+
+/** One border edge: `edge` is the half-edge whose curve stands for both sides, with its own body on the left. */
+export interface BorderSegment {
+  edge: number;
+  left: number;
+  right: number;
+}
+
+/** A closed walk along a body's (or the outside's) border with it on the left; entries are segment · 2 + (1 where walked backwards). */
+export interface BorderLoop {
+  /** Body on the left; -1 for the outside along a hole. */
+  body: number;
+  steps: number[];
+}
+
+export interface Borders {
+  segments: BorderSegment[];
+  loops: BorderLoop[];
+}
+
+/** The half-edge that stands for an edge: the one whose body is measured, the lower one where both are. */
+export function borderEdgeOf(mesh: Topology, bodyOf: Int32Array, blocked: Uint8Array, h: number): number {
+  const twin = mesh.twin[h];
+  if (twin < 0) return h;
+  const own = blocked[bodyOf[mesh.faceOf[h]]];
+  const other = blocked[bodyOf[mesh.faceOf[twin]]];
+  if (own !== other) return own === 0 ? h : twin;
+  return Math.min(h, twin);
+}
+
+/** Finds all borders of bodies and walks them loop by loop. Where bodies touch in a vertex, the body's own fan of faces says which edge comes next. */
+export function findBorders(mesh: Topology, bodyOf: Int32Array, blocked: Uint8Array): Borders {
+  const isBorder = (h: number): boolean => mesh.twin[h] < 0 || bodyOf[mesh.faceOf[mesh.twin[h]]] !== bodyOf[mesh.faceOf[h]];
+  const segmentOf = new Map<number, number>();
+  const segments: BorderSegment[] = [];
+  const loops: BorderLoop[] = [];
+  for (let h = 0; h < mesh.twin.length; h++) {
+    if (!isBorder(h) || borderEdgeOf(mesh, bodyOf, blocked, h) !== h) continue;
+    segmentOf.set(h, segments.length);
+    if (mesh.twin[h] >= 0) segmentOf.set(mesh.twin[h], segments.length);
+    segments.push({ edge: h, left: NO_LOOP, right: NO_LOOP });
+  }
+  const walked = new Set<number>();
+  for (const start of segmentOf.keys()) {
+    if (walked.has(start)) continue;
+    const loop: BorderLoop = { body: bodyOf[mesh.faceOf[start]], steps: [] };
+    let h = start;
+    do {
+      walked.add(h);
+      const segment = segmentOf.get(h) ?? 0;
+      const backwards = segments[segment].edge !== h;
+      if (backwards) segments[segment].right = loops.length;
+      else segments[segment].left = loops.length;
+      loop.steps.push(2 * segment + (backwards ? 1 : 0));
+      h = nextHalfEdge(mesh, h);
+      while (!isBorder(h)) h = nextHalfEdge(mesh, mesh.twin[h]);
+    } while (h !== start);
+    loops.push(loop);
+  }
+  addOutsideLoops(mesh, segments, segmentOf, loops);
+  return { segments, loops };
+}
+
+/** The outside along holes: it walks the edges without a second face backwards. */
+function addOutsideLoops(mesh: Topology, segments: BorderSegment[], segmentOf: Map<number, number>, loops: BorderLoop[]): void {
+  for (const { edge: start, right } of segments) {
+    if (mesh.twin[start] >= 0 || right !== NO_LOOP) continue;
+    const loop: BorderLoop = { body: -1, steps: [] };
+    let h = start;
+    do {
+      const segment = segmentOf.get(h) ?? 0;
+      if (segments[segment].right !== NO_LOOP) break;
+      segments[segment].right = loops.length;
+      loop.steps.push(2 * segment + 1);
+      h = previousHalfEdge(mesh, h);
+      while (mesh.twin[h] >= 0) h = previousHalfEdge(mesh, mesh.twin[h]);
+    } while (h !== start);
+    loops.push(loop);
+  }
+}

@@ -1,0 +1,54 @@
+import type { Bodies } from './partition';
+import { floodFaces } from './partition';
+import type { Topology } from './topology';
+
+/** Local frames: all work happens about the box centres of connected pieces and bodies, so that a far origin costs no digits. */
+export interface Frames {
+  /** The cage's positions less the box centre of their piece. */
+  positions: Float64Array;
+  /** x, y, z per body: box centre of its piece in the file's frame. */
+  pieceCentres: Float64Array;
+  /** x, y, z per body: box centre of the body in its piece's frame; the apex of its cones. */
+  origins: Float64Array;
+  /** Min x, y, z, max x, y, z per body: box of its control points in the file's frame. */
+  boxes: Float64Array;
+}
+
+function boxesOf(mesh: Topology, positions: Float64Array, groupOf: Int32Array, groups: number): Float64Array {
+  const boxes = new Float64Array(6 * groups);
+  for (let group = 0; group < groups; group++) boxes.fill(Infinity, 6 * group, 6 * group + 3).fill(-Infinity, 6 * group + 3, 6 * group + 6);
+  for (let h = 0; h < mesh.vertexOf.length; h++) {
+    const at = 6 * groupOf[mesh.faceOf[h]];
+    for (let axis = 0; axis < 3; axis++) {
+      const value = positions[3 * mesh.vertexOf[h] + axis];
+      if (value < boxes[at + axis]) boxes[at + axis] = value;
+      if (value > boxes[at + 3 + axis]) boxes[at + 3 + axis] = value;
+    }
+  }
+  return boxes;
+}
+
+/** Makes the local frames of a cage. */
+export function makeFrames(mesh: Topology, positions: Float64Array, bodies: Bodies): Frames {
+  const pieces = floodFaces(mesh, null);
+  const pieceBoxes = boxesOf(mesh, positions, pieces.of, pieces.count);
+  const boxes = boxesOf(mesh, positions, bodies.bodyOf, bodies.bodies);
+  const pieceOfBody = new Int32Array(bodies.bodies);
+  const local = new Float64Array(positions.length);
+  const centre = (all: Float64Array, group: number, axis: number): number => all[6 * group + axis] / 2 + all[6 * group + 3 + axis] / 2;
+  for (let h = 0; h < mesh.vertexOf.length; h++) {
+    const face = mesh.faceOf[h];
+    pieceOfBody[bodies.bodyOf[face]] = pieces.of[face];
+    const v = 3 * mesh.vertexOf[h];
+    for (let axis = 0; axis < 3; axis++) local[v + axis] = positions[v + axis] - centre(pieceBoxes, pieces.of[face], axis);
+  }
+  const pieceCentres = new Float64Array(3 * bodies.bodies);
+  const origins = new Float64Array(3 * bodies.bodies);
+  for (let body = 0; body < bodies.bodies; body++) {
+    for (let axis = 0; axis < 3; axis++) {
+      pieceCentres[3 * body + axis] = centre(pieceBoxes, pieceOfBody[body], axis);
+      origins[3 * body + axis] = centre(boxes, body, axis) - pieceCentres[3 * body + axis];
+    }
+  }
+  return { positions: local, pieceCentres, origins, boxes };
+}

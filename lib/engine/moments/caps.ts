@@ -1,0 +1,200 @@
+import type { Borders } from '../mesh/border-loops';
+import { addCubicChain, noMoments, type CurveTable } from './curve-table';
+import type { MomentSums } from './sums';
+
+/** How much of each body its caps are: their area and the volume between them and the body's origin. */
+export interface CapAmounts {
+  area: Float64Array;
+  volume: Float64Array;
+}
+
+/** A border edge's curve or a straight spoke of an earlier cap, with the loop on each side. */
+interface Segment {
+  /** Border edge, or -1 for a spoke. */
+  edge: number;
+  /** Power coefficients of a spoke. */
+  line: Float64Array | null;
+  left: number;
+  right: number;
+}
+
+/** Lengths closer than this, relatively, count as equal, so that rounding does not choose which loop is peeled first. */
+const SAME_LENGTH = 1e-9;
+
+/**
+ * Closes all bodies by cones over their border loops and subtracts the chains [O, s, C] from `sums`. The apex s of a loop is the mean over its
+ * edges of ∫₀¹ C dt, which refinement does not change. Where borders branch, the shortest loop that bounds one body is coned from its own mean and
+ * replaced in its neighbours' loops by spokes from its junctions to the apex, until none is left; so each cap bounds two bodies and parts stay additive.
+ */
+export function addCaps(borders: Borders, curves: CurveTable, origins: Float64Array, sums: MomentSums, bodies: number): CapAmounts {
+  const amounts: CapAmounts = { area: new Float64Array(bodies), volume: new Float64Array(bodies) };
+  const segments: Segment[] = borders.segments.map((s) => ({ edge: s.edge, line: null, left: s.left, right: s.right }));
+  const loops = borders.loops.map((loop) => ({ body: loop.body, steps: loop.steps }));
+  const lengths = new Map<number, number>();
+  const lengthOf = (segment: Segment): number => (segment.line !== null ? Math.hypot(segment.line[3], segment.line[4], segment.line[5]) : curves.length(segment.edge));
+  const measureLoop = (loop: number): void => {
+    let sum = 0;
+    for (const step of loops[loop].steps) sum += lengthOf(segments[step >> 1]);
+    lengths.set(loop, sum);
+  };
+  for (let loop = 0; loop < loops.length; loop++) measureLoop(loop);
+
+  const close = (loop: number): void => {
+    const { steps } = loops[loop];
+    const apex = apexOf(steps, segments, curves);
+    coneLoop(loop, apex);
+    replaceBySpokes(loop, apex);
+    lengths.delete(loop);
+  };
+
+  /** Subtracts the cap's chains on both sides of the loop. */
+  const coneLoop = (loop: number, apex: number[]): void => {
+    const own = noMoments();
+    const perSide = new Map<number, Float64Array>();
+    for (const step of loops[loop].steps) {
+      const segment = segments[step >> 1];
+      const backwards = (step & 1) === 1;
+      const other = backwards ? segment.left : segment.right;
+      const body = loops[loop].body;
+      if (body >= 0) addArea(body, chain(segment, origins.subarray(3 * body, 3 * body + 3), apex, backwards ? 1 : -1, own));
+      const otherBody = loops[other].body;
+      if (otherBody < 0) continue;
+      const side = perSide.get(otherBody) ?? noMoments();
+      perSide.set(otherBody, side);
+      addArea(otherBody, chain(segment, origins.subarray(3 * otherBody, 3 * otherBody + 3), apex, backwards ? -1 : 1, side));
+    }
+    if (loops[loop].body >= 0) addSide(loops[loop].body, own);
+    for (const [body, side] of perSide) addSide(body, side);
+  };
+  const addArea = (body: number, area: number): void => {
+    amounts.area[body] += area;
+  };
+  const addSide = (body: number, moments: Float64Array): void => {
+    sums.add(body, moments, 0);
+    sums.magnitudes[body] += Math.abs(moments[0]);
+    amounts.volume[body] += Math.abs(moments[0]);
+  };
+  const chain = (segment: Segment, origin: Float64Array, apex: number[], sign: number, out: Float64Array): number =>
+    segment.line !== null ? addCubicChain(segment.line, 0, origin, apex, sign, out) : curves.addChain(segment.edge, origin, apex, sign, out);
+
+  /** Takes the loop out of its neighbours: runs of its segments along one neighbour become two spokes over the apex. */
+  const replaceBySpokes = (loop: number, apex: number[]): void => {
+    const runs = runsOf(loops[loop].steps, segments);
+    const touched = new Set<number>();
+    const spokes = new Map<number, number>();
+    if (runs.length > 1) {
+      for (let i = 0; i < runs.length; i++) {
+        const before = runs[(i + runs.length - 1) % runs.length];
+        // Spoke from the junction where run i starts to the apex: the neighbour of run i lies to its right, that of the run before to its left.
+        const start = startPoint(runs[i].steps[0], segments, curves);
+        spokes.set(i, segments.length);
+        segments.push({ edge: -1, line: straight(start, apex), left: before.other, right: runs[i].other });
+      }
+    }
+    for (let i = 0; i < runs.length; i++) {
+      const { other, steps } = runs[i];
+      touched.add(other);
+      // The neighbour walks the run the other way round: it comes from the run's end and leaves at its start.
+      const reversed = steps.map((step) => step ^ 1).reverse();
+      const into = spokes.get((i + 1) % runs.length);
+      const outOf = spokes.get(i);
+      const replacement = into === undefined || outOf === undefined ? [] : [2 * into, 2 * outOf + 1];
+      splice(loops[other].steps, reversed, replacement);
+    }
+    loops[loop].steps = [];
+    for (const other of touched) {
+      cancelSpikes(loops[other].steps);
+      if (loops[other].steps.length === 0) lengths.delete(other);
+      else measureLoop(other);
+    }
+  };
+
+  while (lengths.size > 0) {
+    let shortest = -1;
+    let best = Infinity;
+    for (const [loop, length] of lengths) {
+      if (length < best * (1 - SAME_LENGTH)) {
+        best = length;
+        shortest = loop;
+      }
+    }
+    if (shortest < 0) break;
+    close(shortest);
+  }
+  return amounts;
+}
+
+interface Run {
+  other: number;
+  steps: number[];
+}
+
+/** Cuts a loop where the neighbour changes; one run where there is one neighbour only. */
+function runsOf(steps: number[], segments: Segment[]): Run[] {
+  const otherOf = (step: number): number => ((step & 1) === 1 ? segments[step >> 1].left : segments[step >> 1].right);
+  let first = 0;
+  while (first < steps.length && otherOf(steps[first]) === otherOf(steps[(first + steps.length - 1) % steps.length])) first++;
+  if (first === steps.length) return [{ other: otherOf(steps[0]), steps: steps.slice() }];
+  const runs: Run[] = [];
+  for (let i = 0; i < steps.length; i++) {
+    const step = steps[(first + i) % steps.length];
+    const other = otherOf(step);
+    const last = runs[runs.length - 1];
+    if (last !== undefined && last.other === other) last.steps.push(step);
+    else runs.push({ other, steps: [step] });
+  }
+  return runs;
+}
+
+/** Replaces the entries of `run`, which follow each other around the cyclic list, by `replacement`. Entries that do not follow each other are taken out one by one. */
+function splice(steps: number[], run: number[], replacement: number[]): void {
+  const at = steps.indexOf(run[0]);
+  const rotated = steps.slice(at).concat(steps.slice(0, at));
+  const gone = new Set(run);
+  const rest = rotated.filter((step) => !gone.has(step));
+  steps.length = 0;
+  steps.push(...replacement, ...rest);
+}
+
+/** Takes out pairs of steps that go along a segment and straight back. */
+function cancelSpikes(steps: number[]): void {
+  for (let i = 0; i < steps.length && steps.length > 0; ) {
+    const next = (i + 1) % steps.length;
+    if (steps.length > 1 && steps[next] === (steps[i] ^ 1)) {
+      steps.splice(Math.max(i, next), 1);
+      steps.splice(Math.min(i, next), 1);
+      i = Math.max(0, Math.min(i, next) - 1);
+    } else i++;
+  }
+}
+
+function straight(from: ArrayLike<number>, to: ArrayLike<number>): Float64Array {
+  const line = new Float64Array(12);
+  for (let axis = 0; axis < 3; axis++) {
+    line[axis] = (from[axis] + to[axis]) / 2;
+    line[3 + axis] = to[axis] - from[axis];
+  }
+  return line;
+}
+
+/** Where a step begins. */
+function startPoint(step: number, segments: Segment[], curves: CurveTable): ArrayLike<number> {
+  const segment = segments[step >> 1];
+  const end = (step & 1) === 1 ? 1 : 0;
+  if (segment.line === null) return curves.end(segment.edge, end);
+  const t = end - 0.5;
+  return [0, 1, 2].map((axis) => (segment.line === null ? 0 : segment.line[axis] + t * segment.line[3 + axis]));
+}
+
+/** Mean of ∫₀¹ C dt over a loop's real edges; over its spokes where it has no real edge. */
+function apexOf(steps: number[], segments: Segment[], curves: CurveTable): number[] {
+  const apex = [0, 0, 0];
+  const real = steps.filter((step) => segments[step >> 1].line === null);
+  const counted = real.length > 0 ? real : steps;
+  for (const step of counted) {
+    const { edge, line } = segments[step >> 1];
+    const mean: ArrayLike<number> = line ?? curves.mean(edge);
+    for (let axis = 0; axis < 3; axis++) apex[axis] += mean[axis] / counted.length;
+  }
+  return apex;
+}

@@ -1,0 +1,52 @@
+import type { MeasureOptions } from '../measured';
+import { findBorders } from '../mesh/border-loops';
+import type { Frames } from '../mesh/frames';
+import type { Bodies } from '../mesh/partition';
+import type { Topology } from '../mesh/topology';
+import { integrateCatmullClark, type LimitSums } from '../schemes/catmull-clark';
+import { levelZero } from '../schemes/level-mesh';
+import { BorderCurves } from './border-curves';
+import { addCaps, type CapAmounts } from './caps';
+import { curveTable } from './curve-table';
+import { addPolyhedralMoments } from './polyhedral';
+import { MOMENTS, MomentSums } from './sums';
+
+/** Moments of all bodies about their origins, caps not yet added. */
+export interface Integrated extends LimitSums {
+  /** False where local refinement did not end; the numbers are then worthless. */
+  resolved: boolean;
+}
+
+/** Integrates the cage's own faces about the bodies' origins; border curves are the cage's edges. */
+export function integrateCage(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array): Integrated {
+  const sums = emptySums(bodies.bodies);
+  addPolyhedralMoments(mesh, frames.positions, bodies.bodyOf, frames.origins, sums.solid, sums.surface);
+  const p = frames.positions;
+  const level = levelZero(mesh, p, bodies.bodyOf, blocked, 'edge-only');
+  for (let h = 0; h < mesh.twin.length; h++) {
+    if (level.borderOf[h] < 0) continue;
+    const face = mesh.faceOf[h];
+    const a = 3 * mesh.vertexOf[h];
+    const b = 3 * mesh.vertexOf[h + 1 === mesh.starts[face + 1] ? mesh.starts[face] : h + 1];
+    sums.curves.addLine(p[a], p[a + 1], p[a + 2], p[b], p[b + 1], p[b + 2], h);
+  }
+  return { ...sums, resolved: true };
+}
+
+/** Integrates the limit surface about the bodies' origins. */
+export function integrateLimit(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array, options: MeasureOptions): Integrated {
+  const sums = emptySums(bodies.bodies);
+  const level = levelZero(mesh, frames.positions, bodies.bodyOf, blocked, options.boundary);
+  const resolved = integrateCatmullClark(level, options, frames.origins, sums);
+  return { ...sums, resolved };
+}
+
+/** Closes the bodies by caps over their borders. */
+export function capBodies(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array, integrated: Integrated): CapAmounts {
+  const borders = findBorders(mesh, bodies.bodyOf, blocked);
+  return addCaps(borders, curveTable(integrated.curves), frames.origins, integrated.solid, bodies.bodies);
+}
+
+function emptySums(bodies: number): LimitSums {
+  return { solid: new MomentSums(bodies), surface: new MomentSums(bodies), closingError: new Float64Array(MOMENTS * bodies), curves: new BorderCurves() };
+}
