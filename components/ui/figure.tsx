@@ -9,6 +9,8 @@ interface FigureProps {
   /** Characters kept before and behind the point in a column; without it the figure takes its own width. */
   align?: { before: number; after: number };
   decimals?: number;
+  /** What copying takes where the shown number is scaled. */
+  full?: number | null;
   className?: string;
 }
 
@@ -17,7 +19,7 @@ export const ENGINEERING_WIDTHS = { before: 3, after: 4 };
 export const LENGTH_WIDTHS = { before: 5, after: 4 };
 
 /** A number: four significant digits to read, all of them when copied (see copy-full). */
-export function Figure({ value, notation = 'fixed', align, decimals, className }: FigureProps) {
+export function Figure({ value, notation = 'fixed', align, decimals, full = value, className }: FigureProps) {
   const shown =
     value === null
       ? { text: '–', exponent: 0 }
@@ -27,7 +29,7 @@ export function Figure({ value, notation = 'fixed', align, decimals, className }
   const text = align === undefined ? shown.text : alignOnPoint(shown.text, align.before, align.after);
   return (
     <span
-      data-full={value === null ? undefined : formatFull(value)}
+      data-full={value === null ? undefined : formatFull(full)}
       className={cn('font-mono text-13 whitespace-pre', value === null && 'text-ink-3', className)}
     >
       {text}

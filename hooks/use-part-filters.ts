@@ -1,0 +1,37 @@
+'use client';
+
+import { parseAsArrayOf, parseAsBoolean, parseAsString, parseAsStringLiteral, useQueryStates } from 'nuqs';
+import { CATEGORIES, VALUE_STATES } from '@/lib/rules/states';
+
+export const PART_COLUMNS = [
+  'name',
+  'version',
+  'construction',
+  'source',
+  'mass',
+  'beam',
+  'x',
+  'y',
+  'z',
+  'i1',
+  'i2',
+  'i3',
+  'volume',
+  'problems',
+  'state',
+] as const;
+export type PartColumn = (typeof PART_COLUMNS)[number];
+
+const parsers = {
+  q: parseAsString.withDefault(''),
+  state: parseAsArrayOf(parseAsStringLiteral([...VALUE_STATES, 'locked'] as const)).withDefault([]),
+  category: parseAsStringLiteral(CATEGORIES),
+  sort: parseAsStringLiteral(PART_COLUMNS),
+  down: parseAsBoolean.withDefault(false),
+  flat: parseAsBoolean.withDefault(false),
+};
+
+/** Filters, order and grouping of the parts table; they live in the address, so a link shows what its sender saw. */
+export function usePartFilters() {
+  return useQueryStates(parsers, { history: 'replace', throttleMs: 150 });
+}
