@@ -1,4 +1,4 @@
-import type { Client } from 'pg';
+import { Client } from 'pg';
 
 /** What a start has already done to this database, e.g. `demo`; kept beside the migrations' own journal. */
 export async function readMarks(client: Client): Promise<Set<string>> {
@@ -10,7 +10,17 @@ export async function readMarks(client: Client): Promise<Set<string>> {
   return new Set(rows.map((row) => row.name));
 }
 
-/** Remembers that a start did this. */
-export async function setMark(client: Client, name: string): Promise<void> {
-  await client.query('insert into drizzle.bootstrap_marks (name) values ($1) on conflict do nothing', [name]);
+/**
+ * Remembers that a start did this.
+ * @param replaces marks that begin so are forgotten in its place
+ */
+export async function setMark(ownerUrl: string, name: string, replaces?: string): Promise<void> {
+  const client = new Client({ connectionString: ownerUrl });
+  await client.connect();
+  try {
+    if (replaces) await client.query('delete from drizzle.bootstrap_marks where starts_with(name, $1)', [replaces]);
+    await client.query('insert into drizzle.bootstrap_marks (name) values ($1) on conflict do nothing', [name]);
+  } finally {
+    await client.end();
+  }
 }

@@ -1,5 +1,4 @@
 import { text } from 'node:stream/consumers';
-import { Client } from 'pg';
 import { z } from 'zod';
 import { bootstrapDatabase } from './bootstrap-database';
 import { setMark } from './marks';
@@ -13,24 +12,23 @@ const orders = z.strictObject({
   migrations: z.string(),
   /** The owner may make databases: for test servers. */
   mayCreateDatabases: z.boolean().default(false),
+  /** Names what this run does, to be found done by the next start. */
+  fingerprint: z.string().optional(),
   /** Only set this mark. */
   mark: z.string().optional(),
 });
 
 async function run(): Promise<unknown> {
-  const { superuserUrl, ownerUrl, appUrl, migrations, mark, mayCreateDatabases } = orders.parse(JSON.parse(await text(process.stdin)));
-  if (mark) {
-    const client = new Client({ connectionString: ownerUrl });
-    await client.connect();
-    await setMark(client, mark).finally(() => client.end());
-    return {};
-  }
+  const { superuserUrl, ownerUrl, appUrl, migrations, fingerprint, mark, mayCreateDatabases } = orders.parse(JSON.parse(await text(process.stdin)));
+  if (mark) return setMark(ownerUrl, mark);
   if (superuserUrl) await prepareOwnCluster(superuserUrl, ownerUrl, appUrl, mayCreateDatabases);
-  return bootstrapDatabase(ownerUrl, appUrl, migrations);
+  const report = await bootstrapDatabase(ownerUrl, appUrl, migrations);
+  if (fingerprint && report.hasApplicationRole) await setMark(ownerUrl, `done:${fingerprint}`, 'done:');
+  return report;
 }
 
 try {
-  console.log(JSON.stringify(await run()));
+  console.log(JSON.stringify((await run()) ?? {}));
 } catch (error) {
   const { code, message } = error as Error & { code?: string };
   console.log(JSON.stringify({ failed: message || String(error), code: code ?? null }));

@@ -10,9 +10,9 @@ async function devDatabase() {
   const cluster = await startCheckoutCluster({ folder: path.join(data, 'pg'), secretsFolder: data });
   if (process.argv.includes('stop')) return void (await cluster.stop());
   const { ownerUrl, appUrl, superuserUrl } = cluster;
-  const { applied } = await bootstrap({ superuserUrl, ownerUrl, appUrl });
+  await bootstrap({ superuserUrl, ownerUrl, appUrl });
   console.log(`DATABASE_URL=${ownerUrl}\nWEIGHHOUSE_APP_DATABASE_URL=${appUrl}`);
-  console.error(`${applied} migrations are applied. "node lib/run/dev-database.mjs stop" ends the cluster.`);
+  console.error('"node lib/run/dev-database.mjs stop" ends the cluster.');
 }
 
 await runMain(devDatabase);

@@ -1,5 +1,9 @@
+import { createHash } from 'node:crypto';
+import { readFileSync } from 'node:fs';
+import path from 'node:path';
 import { command } from './command.mjs';
 import { inRoot } from './paths.mjs';
+import { filesUnder } from './source-hash.mjs';
 import { Stop } from './stop.mjs';
 
 /** A PostgreSQL address on the loopback interface. */
@@ -17,11 +21,47 @@ function sentence({ code, failed }, url) {
   return `The database could not be prepared: ${failed}`;
 }
 
+/** Names what a bootstrap does: the migrations, its own code, the queue's version (by the lock file) and the roles. */
+function fingerprintOf({ ownerUrl, appUrl }) {
+  // The port may change from start to start.
+  const roles = [ownerUrl, appUrl].map((url) => Object.assign(new URL(url), { port: '' }).href);
+  const hash = createHash('sha256').update(JSON.stringify(roles));
+  const places = ['drizzle', 'db/bootstrap', 'db/migrate.ts', 'package-lock.json'];
+  for (const place of places) for (const file of filesUnder(inRoot(place))) hash.update(`${path.relative(inRoot(), file)}\0`).update(readFileSync(file));
+  return hash.digest('hex');
+}
+
+/** The marks of a database to which exactly this was done before, or null: then there is something to do, or to say. */
+async function marksWhenDone(ownerUrl, fingerprint) {
+  const { Client } = (await import('pg')).default;
+  const client = new Client({ connectionString: ownerUrl });
+  try {
+    await client.connect();
+    const { rows } = await client.query('select name from drizzle.bootstrap_marks');
+    const marks = rows.map((row) => row.name);
+    return marks.includes(`done:${fingerprint}`) ? marks : null;
+  } catch {
+    return null;
+  } finally {
+    await client.end().catch(() => undefined);
+  }
+}
+
 /**
- * Runs db/bootstrap: roles, migrations, rights.
- * @returns {Promise<{ applied: number, expected: number, hasApplicationRole: boolean, marks: string[] }>}
+ * Runs db/bootstrap (roles, migrations, rights), unless exactly that was done to this database before.
+ * @returns {Promise<{ hasApplicationRole: boolean, marks: string[] }>}
  */
 export async function bootstrap(orders) {
+  const fingerprint = fingerprintOf(orders);
+  const marks = await marksWhenDone(orders.ownerUrl, fingerprint);
+  if (marks) return { hasApplicationRole: true, marks };
+  return runBootstrap({ ...orders, fingerprint });
+}
+
+/** Remembers in the database that this was done to it. */
+export const markDatabase = (ownerUrl, mark) => runBootstrap({ ownerUrl, appUrl: ownerUrl, mark });
+
+async function runBootstrap(orders) {
   const input = JSON.stringify({ migrations: inRoot('drizzle'), ...orders });
   const { output, errors } = await command(process.execPath, ['--import', 'tsx', inRoot('db/bootstrap/run.ts')], { input });
   let report;

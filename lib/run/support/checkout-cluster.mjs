@@ -7,12 +7,12 @@ import { localSecrets } from './local-secrets.mjs';
 /**
  * Starts a cluster of the checkout's own and names its three addresses: superuser (bootstrap only), owner (migrates),
  * application.
- * @param {{ folder: string, secretsFolder: string, preferredPort?: number, throwAway?: boolean }} options
+ * @param {{ folder: string, secretsFolder: string, throwAway?: boolean }} options
  */
-export async function startCheckoutCluster({ folder, secretsFolder, preferredPort, throwAway = false }) {
+export async function startCheckoutCluster({ folder, secretsFolder, throwAway = false }) {
   const [secrets, cluster] = await withLock(path.join(secretsFolder, 'pg.lock'), async () => {
     const made = localSecrets(secretsFolder);
-    return [made, await startCluster({ folder: path.resolve(folder), superuserPassword: made.superuserPassword, preferredPort, throwAway })];
+    return [made, await startCluster({ folder: path.resolve(folder), superuserPassword: made.superuserPassword, throwAway })];
   });
   const { port } = cluster;
   return {

@@ -68,11 +68,11 @@ async function initialise(programs, folder, superuserPassword, throwAway) {
 
 /**
  * Makes (once) and starts a PostgreSQL cluster of our own that listens on the loopback address alone.
- * @param {{ folder: string, superuserPassword: string, preferredPort?: number, throwAway?: boolean }} options
+ * @param {{ folder: string, superuserPassword: string, throwAway?: boolean }} options
  *   throwAway: speed before safety, for test data
  * @returns {Promise<{ port: number, stop: () => Promise<void>, wasRunning: boolean, folder: string }>}
  */
-export async function startCluster({ folder: wished, superuserPassword, preferredPort, throwAway = false }) {
+export async function startCluster({ folder: wished, superuserPassword, throwAway = false }) {
   await postgresPrograms();
   const folder = await reachableFolder(wished);
   const data = path.join(folder, 'data');
@@ -93,13 +93,18 @@ export async function startCluster({ folder: wished, superuserPassword, preferre
   if (!isMade) await initialise(programs, folder, superuserPassword, throwAway);
   const already = runningPort(data);
   if (already) return { port: already, stop, wasRunning: true, folder };
-  const port = await freePort(preferredPort);
   const log = path.join(folder, 'log');
-  // Its output goes to the log file: a pipe would stay open for as long as the server runs.
-  const { code } = await asClusterUser(pgCtl, ['start', '-D', data, '-w', '-t', '120', '-s', '-l', log, '-o', `-p ${port}`], { silent: true });
-  if (code !== 0) {
-    const last = existsSync(log) ? readFileSync(log, 'utf8').trim().split('\n').pop() : 'no log was written';
-    throw new Stop(`PostgreSQL did not start: ${last} (log: ${log})`);
+  const portFile = path.join(folder, 'port');
+  let port = await freePort(existsSync(portFile) ? Number(readFileSync(portFile, 'utf8')) : undefined);
+  for (let attempt = 1; ; attempt += 1) {
+    // Its output goes to the log file: a pipe would stay open for as long as the server runs.
+    const { code } = await asClusterUser(pgCtl, ['start', '-D', data, '-w', '-t', '120', '-s', '-l', log, '-o', `-p ${port}`], { silent: true });
+    if (code === 0) break;
+    const last = existsSync(log) ? readFileSync(log, 'utf8').trim().split('\n').slice(-5).join('\n') : 'no log was written';
+    // Somebody may have taken the port since it was found free.
+    if (attempt === 3 || !/address already in use|could not bind/i.test(last)) throw new Stop(`PostgreSQL did not start (log: ${log}):\n${last}`);
+    port = await freePort();
   }
+  writeFileSync(portFile, String(port));
   return { port, stop, wasRunning: false, folder };
 }

@@ -1,6 +1,6 @@
 import { existsSync, readFileSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
-import { bootstrap } from './bootstrap.mjs';
+import { markDatabase } from './bootstrap.mjs';
 import { command } from './command.mjs';
 import { inRoot } from './paths.mjs';
 import { Stop } from './stop.mjs';
@@ -16,7 +16,7 @@ export async function isDemoWanted(marks, ownerUrl) {
   if (marks.includes('demo') || !existsSync(entry)) return false;
   const wish = process.env.WEIGHHOUSE_DEMO;
   if (wish === '0') {
-    if (!marks.includes('without-demo')) await bootstrap({ ownerUrl, appUrl: ownerUrl, mark: 'without-demo' });
+    if (!marks.includes('without-demo')) await markDatabase(ownerUrl, 'without-demo');
     return false;
   }
   return wish === '1' || !marks.includes('without-demo');
@@ -28,7 +28,7 @@ export async function seedDemo({ data, env, ownerUrl }) {
   const { code, output, errors } = await command(process.execPath, ['--import', 'tsx', entry], { env });
   if (code !== 0) throw new Stop(`The demo show could not be made (WEIGHHOUSE_DEMO=0 starts without it):\n${(errors || output).trim()}`);
   writeFileSync(accountsFile(data), output, { mode: 0o600 });
-  await bootstrap({ ownerUrl, appUrl: ownerUrl, mark: 'demo' });
+  await markDatabase(ownerUrl, 'demo');
 }
 
 /** The demo's accounts as the seed printed them, or nothing. */
