@@ -6,8 +6,8 @@ import { log } from '@/lib/log';
 import { notifyImport } from './notify-import';
 
 /** How long a worker may be silent before another takes its files, and how often it speaks. */
-export const LEASE_S = 12;
-const HEARTBEAT_MS = 3_000;
+export const LEASE_S = 10;
+const HEARTBEAT_MS = 2_500;
 
 export type ImportFile = typeof importFiles.$inferSelect;
 

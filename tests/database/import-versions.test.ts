@@ -118,8 +118,8 @@ test('a file that cannot be read makes no version, says where, and stops no othe
 
 test('a version with problems is a version, and its parts are blocked', async () => {
   const cast = await createCast();
-  const inside = cubeObj().replace(/^f (\d+) (\d+) (\d+) (\d+)$/gm, 'f $4 $3 $2 $1');
-  const answer = await bring(cast, { 'rat_v002.obj': inside });
+  const turned = cubeObj().replace(/^f (\d+) (\d+) (\d+) (\d+)$/m, 'f $4 $3 $2 $1');
+  const answer = await bring(cast, { 'rat_v002.obj': turned });
   expect(answer.files[0]).toMatchObject({ state: 'done', version: 'v002', parts: 1 });
   expect(answer.files[0].problems).toBeGreaterThan(0);
   expect(await asOwner('select state from part_current where show_id = $1', [cast.show.id])).toEqual([{ state: 'blocked' }]);
