@@ -114,3 +114,18 @@ export function nearEnd(trunk: Trunk): HalfRing {
 export function forkTrunk(draft: CageDraft, ring: HalfRing, bulge: Vec): Ring {
   return [...ring, ...capMiddle(draft, ring, bulge).reverse()];
 }
+
+/**
+ * A point on a trunk's surface: `row` counts stations and may lie between two, `angle` runs from −90° below over 0° on the left to 90° above
+ * and on over the right side; `lift` is the distance outside. For what is worn.
+ */
+export function pointOnTrunk(stations: readonly TrunkStation[], row: number, angle: number, lift: number): Vec {
+  const i = Math.min(Math.floor(row), stations.length - 2);
+  const t = row - i;
+  const path = stations.map((station): Vec => [0, station.y, station.z]);
+  const direction = unit(mix(tangentAt(path, i), tangentAt(path, i + 1), t));
+  const up = cross(direction, [1, 0, 0]);
+  const radius = (axis: 0 | 1) => stations[i].radii[axis] + (stations[i + 1].radii[axis] - stations[i].radii[axis]) * t + lift;
+  const turned = (angle * Math.PI) / 180;
+  return add(mix(path[i], path[i + 1], t), add([radius(0) * Math.cos(turned), 0, 0], times(up, radius(1) * Math.sin(turned))));
+}

@@ -16,8 +16,29 @@ export interface OxBuild {
 /** A draught ox, 150 cm at the shoulder, on one skin: trunk, neck and head, four legs, horns, ears and tail. */
 export function ox(build: OxBuild): CageDraft {
   const draft = new CageDraft();
-  const hump = (share: number) => ({ 6: [0, build.hump * share], 5: [build.hump * share * 0.1, build.hump * share * 0.55] }) as const;
-  const stations: TrunkStation[] = [
+  const trunk = layTrunk(draft, oxTrunk(build.hump), SIDES, [
+    { rows: [1, 3], columns: [1, 3] },
+    { rows: [5, 7], columns: [1, 3] },
+    { rows: [10, 11], columns: [4, 5] },
+    { rows: [10, 11], columns: [3, 4] },
+    { rows: [0, 1], columns: [5, 6] },
+  ]);
+  const [hind, fore, horn, ear, tail] = trunk.openings;
+  closeTrunk(draft, 'torso', nearEnd(trunk), [0, 0, -2]);
+  closeTrunk(draft, 'muzzle', trunk.rows[trunk.rows.length - 1], [0, -1, 1.5]);
+  growLimb(draft, fore, foreleg(build.legs), { hint: [0, 0, 1] });
+  growLimb(draft, hind, hindleg(build.legs), { hint: [0, 0, 1] });
+  growLimb(draft, horn, hornStations(build.horns), { hint: [0, 0, 1], bulge: 0.3 });
+  growLimb(draft, ear, EAR, { hint: [0, 1, 0] });
+  growTail(draft, tail);
+  draft.mirror();
+  return draft;
+}
+
+/** Cross-sections from rump to muzzle; harness and barding lie on the same ones. */
+export function oxTrunk(height: number): TrunkStation[] {
+  const hump = (share: number) => ({ 6: [0, height * share], 5: [height * share * 0.1, height * share * 0.55] }) as const;
+  return [
     { z: -97, y: 113, radii: [13, 17], part: 'torso', towards: [0.05, 1] },
     { z: -88, y: 113, radii: [24, 28], part: 'torso', towards: [0.05, 1] },
     { z: -68, y: 111, radii: [31, 33], part: 'torso', square: 1.1 },
@@ -36,23 +57,6 @@ export function ox(build: OxBuild): CageDraft {
     { z: 152, y: 104, radii: [9.5, 9.5], part: 'muzzle', towards: [-1, 1], square: 1.15 },
     { z: 157, y: 98, radii: [7.5, 7.5], part: 'muzzle', towards: [-1, 1], square: 1.15 },
   ];
-  const trunk = layTrunk(draft, stations, SIDES, [
-    { rows: [1, 3], columns: [1, 3] },
-    { rows: [5, 7], columns: [1, 3] },
-    { rows: [10, 11], columns: [4, 5] },
-    { rows: [10, 11], columns: [3, 4] },
-    { rows: [0, 1], columns: [5, 6] },
-  ]);
-  const [hind, fore, horn, ear, tail] = trunk.openings;
-  closeTrunk(draft, 'torso', nearEnd(trunk), [0, 0, -2]);
-  closeTrunk(draft, 'muzzle', trunk.rows[trunk.rows.length - 1], [0, -1, 1.5]);
-  growLimb(draft, fore, foreleg(build.legs), { hint: [0, 0, 1] });
-  growLimb(draft, hind, hindleg(build.legs), { hint: [0, 0, 1] });
-  growLimb(draft, horn, hornStations(build.horns), { hint: [0, 0, 1], bulge: 0.3 });
-  growLimb(draft, ear, EAR, { hint: [0, 1, 0] });
-  growTail(draft, tail);
-  draft.mirror();
-  return draft;
 }
 
 function foreleg(length: number): LimbStation[] {

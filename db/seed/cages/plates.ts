@@ -1,4 +1,5 @@
 import type { CageDraft } from './cage-draft';
+import { cageRadius, crossFrame } from './rings';
 import { add, cross, subtract, times, unit, type Vec } from './vector';
 
 export interface PlateOptions {
@@ -62,4 +63,34 @@ function gridNormal(grid: readonly (readonly Vec[])[], r: number, c: number, aro
   const alongColumn = subtract(grid[r][after], grid[r][before]);
   const alongRow = subtract(grid[Math.min(r + 1, rows - 1)][c], grid[Math.max(r - 1, 0)][c]);
   return unit(cross(alongColumn, alongRow));
+}
+
+export interface HoopShape {
+  centre: Vec;
+  axis: Vec;
+  /** Direction of the first radius, square to the axis or nearly. */
+  hint: Vec;
+  radii: readonly [number, number];
+  width: number;
+  thickness: number;
+  /** Radii at the far end of the axis beside those at the near end. */
+  flare?: number;
+}
+
+const HOOP_SIDES = 16;
+
+/** A crisp band around an axis: a strap, a tyre, a cuff. */
+export function layHoop(draft: CageDraft, part: string, { centre, axis, hint, radii, width, thickness, flare = 1 }: HoopShape): void {
+  const direction = unit(axis);
+  const [e1, e2] = crossFrame(direction, hint);
+  const grow = cageRadius(HOOP_SIDES);
+  const grid = [-0.5, 0, 0.5].map((step) => {
+    const widen = 1 + (flare - 1) * (step + 0.5);
+    return Array.from({ length: HOOP_SIDES }, (_, i): Vec => {
+      const angle = (2 * Math.PI * (i + 0.5)) / HOOP_SIDES;
+      const across = add(times(e1, radii[0] * grow * widen * Math.cos(angle)), times(e2, radii[1] * grow * widen * Math.sin(angle)));
+      return add(add(centre, times(direction, step * width)), across);
+    });
+  });
+  layPlate(draft, part, grid, thickness, { around: true, sharpRim: true });
 }
