@@ -10,6 +10,7 @@ export function showAnswer(show: Show) {
     scheme: show.scheme,
     boundary: show.boundary,
     parts_by: show.partsBy,
+    name_pattern: show.namePattern,
     self_approval: show.selfApproval,
     frozen: show.frozenAt !== null,
     archived: show.archivedAt !== null,

@@ -1,0 +1,40 @@
+/** Acts of the history as what somebody did. An act that is not here is shown by its own name. */
+const ACT_WORDS: Record<string, string> = {
+  'create-show': 'made the show',
+  'edit-show': 'changed the show’s settings',
+  'set-member': 'gave a role',
+  'remove-member': 'took out of the show',
+  'open-import': 'opened an import',
+  'submit-import': 'submitted an import',
+  'cancel-import': 'cancelled an import',
+  'retry-import': 'tried failed files again',
+  'import-version': 'imported a version',
+  'set-values': 'set values',
+  'add-material': 'added a material',
+  'edit-material': 'changed a material',
+};
+
+export function actWords(act: string): string {
+  return ACT_WORDS[act] ?? act.replaceAll('-', ' ');
+}
+
+/** Where a change came from, said only where it was not made by hand. */
+export const ORIGIN_WORDS = { hand: '', rule: 'by a rule', spreadsheet: 'by spreadsheet', api: 'by script', import: 'by import' } as const;
+
+const FIELD_WORDS: Record<string, string> = {
+  target_mass_kg: 'target mass, kg',
+  density_kg_m3: 'density, kg/m³',
+  areal_density_kg_m2: 'weight per area, kg/m²',
+  wall_m: 'wall thickness, m',
+  linear_unit: 'unit',
+  up_axis: 'up axis',
+  parts_by: 'parts by',
+  boundary: 'boundary rule',
+  name_pattern: 'name pattern',
+  self_approval: 'own values may be approved',
+  left_out: 'left out',
+};
+
+export function fieldWords(field: string): string {
+  return FIELD_WORDS[field] ?? field.replaceAll('_', ' ');
+}
