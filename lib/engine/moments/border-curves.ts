@@ -11,8 +11,8 @@ export class BorderCurves {
   /** Limit points at the ends of edges, by 2 · edge + end. */
   readonly ends = new Map<number, [number, number, number]>();
 
-  /** Adds the side `side` (0 … 3, counter-clockwise from corner (1,1) to (2,1)) of a bicubic net laid out as `bicubicMoments` wants it. The piece covers [from, from + share] of the edge. */
-  addSide(net: Float64Array, side: number, edge: number, weight: number, from: number, share: number): void {
+  /** Adds the side `side` (0 … 3, counter-clockwise from corner (1,1) to (2,1)) of a bicubic net laid out as `bicubicMoments` wants it, moved by `shift`. The piece covers [from, from + share] of the edge. */
+  addSide(net: Float64Array, side: number, edge: number, weight: number, from: number, share: number, shift: ArrayLike<number>): void {
     this.edges.push(edge);
     this.weights.push(weight);
     this.shares.push(share);
@@ -36,6 +36,7 @@ export class BorderCurves {
       control[6 + axis] = (s0 - s1) / 4;
       control[9 + axis] = (d0 - 3 * d1) / 6;
     }
+    for (let axis = 0; axis < 3; axis++) control[axis] += shift[axis];
     this.powers.push(...control);
     if (from === 0) this.ends.set(2 * edge, pointAt(control, -0.5));
     if (from + share === 1) this.ends.set(2 * edge + 1, pointAt(control, 0.5));

@@ -79,7 +79,7 @@ export function addCaps(borders: Borders, curves: CurveTable, origins: Float64Ar
 
   /** Takes the loop out of its neighbours: runs of its segments along one neighbour become two spokes over the apex. */
   const replaceBySpokes = (loop: number, apex: number[]): void => {
-    const runs = runsOf(loops[loop].steps, segments);
+    const runs = runsOf(loops[loop].steps, segments, loops);
     const touched = new Set<number>();
     const spokes = new Map<number, number>();
     if (runs.length > 1) {
@@ -102,11 +102,36 @@ export function addCaps(borders: Borders, curves: CurveTable, origins: Float64Ar
       splice(loops[other].steps, reversed, replacement);
     }
     loops[loop].steps = [];
-    for (const other of touched) {
-      cancelSpikes(loops[other].steps);
-      if (loops[other].steps.length === 0) lengths.delete(other);
-      else measureLoop(other);
+    for (const other of touched) untangle(other);
+  };
+
+  /**
+   * A loop that goes along a spoke and, at once or later, straight back encloses two regions joined by a slit: it falls apart into two loops
+   * of the same body, since the slit's two chains cancel.
+   */
+  const untangle = (loop: number): void => {
+    const { steps, body } = loops[loop];
+    const at = new Map<number, number>();
+    for (let j = 0; j < steps.length; j++) {
+      const i = at.get(steps[j] ^ 1);
+      at.set(steps[j], j);
+      if (i === undefined) continue;
+      const cutOff = steps.slice(i + 1, j);
+      loops[loop].steps = steps.slice(0, i).concat(steps.slice(j + 1));
+      if (cutOff.length > 0) {
+        const split = loops.length;
+        loops.push({ body, steps: cutOff });
+        for (const step of cutOff) {
+          if ((step & 1) === 1) segments[step >> 1].right = split;
+          else segments[step >> 1].left = split;
+        }
+        untangle(split);
+      }
+      untangle(loop);
+      return;
     }
+    if (steps.length === 0) lengths.delete(loop);
+    else measureLoop(loop);
   };
 
   while (lengths.size > 0) {
@@ -129,43 +154,41 @@ interface Run {
   steps: number[];
 }
 
-/** Cuts a loop where the neighbour changes; one run where there is one neighbour only. */
-function runsOf(steps: number[], segments: Segment[]): Run[] {
+/**
+ * Cuts a loop at its junctions: where the neighbour changes, and where the neighbour's own walk goes elsewhere because a third body touches there.
+ * One run where there is no junction.
+ */
+function runsOf(steps: number[], segments: Segment[], loops: readonly { steps: number[] }[]): Run[] {
   const otherOf = (step: number): number => ((step & 1) === 1 ? segments[step >> 1].left : segments[step >> 1].right);
+  const after = new Map<number, number>();
+  for (const other of new Set(steps.map(otherOf))) {
+    const walk = loops[other].steps;
+    for (let i = 0; i < walk.length; i++) after.set(walk[i], walk[(i + 1) % walk.length]);
+  }
+  const isCut = (i: number): boolean => {
+    const step = steps[i];
+    const before = steps[(i + steps.length - 1) % steps.length];
+    return otherOf(step) !== otherOf(before) || after.get(step ^ 1) !== (before ^ 1);
+  };
   let first = 0;
-  while (first < steps.length && otherOf(steps[first]) === otherOf(steps[(first + steps.length - 1) % steps.length])) first++;
+  while (first < steps.length && !isCut(first)) first++;
   if (first === steps.length) return [{ other: otherOf(steps[0]), steps: steps.slice() }];
   const runs: Run[] = [];
   for (let i = 0; i < steps.length; i++) {
-    const step = steps[(first + i) % steps.length];
-    const other = otherOf(step);
-    const last = runs[runs.length - 1];
-    if (last !== undefined && last.other === other) last.steps.push(step);
-    else runs.push({ other, steps: [step] });
+    const at = (first + i) % steps.length;
+    if (isCut(at)) runs.push({ other: otherOf(steps[at]), steps: [] });
+    runs[runs.length - 1].steps.push(steps[at]);
   }
   return runs;
 }
 
-/** Replaces the entries of `run`, which follow each other around the cyclic list, by `replacement`. Entries that do not follow each other are taken out one by one. */
+/** Replaces the entries of `run`, which follow each other around the cyclic list, by `replacement`. */
 function splice(steps: number[], run: number[], replacement: number[]): void {
   const at = steps.indexOf(run[0]);
-  const rotated = steps.slice(at).concat(steps.slice(0, at));
-  const gone = new Set(run);
-  const rest = rotated.filter((step) => !gone.has(step));
+  const rest = steps.slice(at).concat(steps.slice(0, at)).slice(run.length);
   steps.length = 0;
-  steps.push(...replacement, ...rest);
-}
-
-/** Takes out pairs of steps that go along a segment and straight back. */
-function cancelSpikes(steps: number[]): void {
-  for (let i = 0; i < steps.length && steps.length > 0; ) {
-    const next = (i + 1) % steps.length;
-    if (steps.length > 1 && steps[next] === (steps[i] ^ 1)) {
-      steps.splice(Math.max(i, next), 1);
-      steps.splice(Math.min(i, next), 1);
-      i = Math.max(0, Math.min(i, next) - 1);
-    } else i++;
-  }
+  for (const step of replacement) steps.push(step);
+  for (const step of rest) steps.push(step);
 }
 
 function straight(from: ArrayLike<number>, to: ArrayLike<number>): Float64Array {

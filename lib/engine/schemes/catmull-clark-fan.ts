@@ -149,3 +149,38 @@ export function fillChildNet(fan: FanState, sector: number, child: number, net: 
 function phantom(net: Float64Array, to: number, edge: number, inner: number): void {
   for (let axis = 0; axis < 3; axis++) net[to + axis] = 2 * net[edge + axis] - net[inner + axis];
 }
+
+/** The centre's limit point, good to rounding: a mask where one is known, else enough refinements. */
+export function approximateLimit(fan: FanState): Float64Array {
+  const n = fan.sectors;
+  const limit = Float64Array.from(fan.centre);
+  if (fan.centreRule === CORNER_CENTRE) return limit;
+  if (fan.centreRule === CREASE_CENTRE) {
+    for (let axis = 0; axis < 3; axis++) limit[axis] = (4 * fan.centre[axis] + fan.spokes[axis] + fan.spokes[9 * n + axis]) / 6;
+    return limit;
+  }
+  if (!fan.sharpFirst && n > 2) {
+    for (let axis = 0; axis < 3; axis++) {
+      let sum = n * n * fan.centre[axis];
+      for (let j = 0; j < n; j++) sum += 4 * fan.spokes[9 * j + axis] + fan.inner[27 * j + axis];
+      limit[axis] = sum / (n * (n + 5));
+    }
+    return limit;
+  }
+  let state = fan;
+  let finer = makeFanState(n, fan.closed, fan.sharpFirst, fan.centreRule);
+  for (let step = 0; step < LIMIT_STEPS; step++) {
+    refineFan(state, finer);
+    state = finer;
+    finer = makeFanState(n, fan.closed, fan.sharpFirst, fan.centreRule);
+  }
+  return Float64Array.from(state.centre);
+}
+
+/** Rings shrink by at least 0.66 a step: 90 steps reach rounding. */
+const LIMIT_STEPS = 90;
+
+/** Takes `shift` off all points of the rings 0 to 2. */
+export function translateFan(fan: FanState, shift: Float64Array): void {
+  for (const values of [fan.centre, fan.spokes, fan.inner]) for (let i = 0; i < values.length; i++) values[i] -= shift[i % 3];
+}

@@ -1,4 +1,5 @@
 import { tailLevels, tailWeights } from '../moments/tail-weights';
+import { SMOOTH_CENTRE } from './catmull-clark-classify';
 import { makeFanState, refineFan, type FanState } from './catmull-clark-fan';
 
 /** Digits to which a fan's tail is closed. */
@@ -8,7 +9,7 @@ const TAIL_DIGITS = 15;
 export interface FanTable {
   weights: Float64Array;
   check: Float64Array;
-  /** For curves through the centre, whose terms shrink more slowly. */
+  /** For curves through the centre, whose terms shrink more slowly: levels are closed in pairs, or the weights would grow to 1e7 and their rounding with them. */
   curveWeights: Float64Array;
 }
 
@@ -19,18 +20,33 @@ export function fanTable(fan: FanState): FanTable {
   const key = ((fan.sectors * 2 + (fan.closed ? 1 : 0)) * 2 + (fan.sharpFirst ? 1 : 0)) * 3 + fan.centreRule;
   const known = tables.get(key);
   if (known !== undefined) return known;
-  const lambda = dominantShrinkage(fan);
+  // Iteration falls short where eigenvalues crowd; the closing does no worse for a little more.
+  const lambda = Math.min(isPlain(fan) ? smoothShrinkage(fan.sectors) : 1.002 * dominantShrinkage(fan), LARGEST_SHRINKAGE);
   const largest = lambda * lambda;
   const levels = tailLevels(largest, TAIL_DIGITS);
-  const curve = Math.max(lambda, 0.5);
+  const curve = Math.max(lambda, 0.5) ** 2;
+  const pairs = tailWeights(curve, tailLevels(curve, TAIL_DIGITS));
   const table = {
     weights: tailWeights(largest, levels),
     check: tailWeights(largest, levels - 1),
-    curveWeights: tailWeights(curve, tailLevels(curve, TAIL_DIGITS)),
+    curveWeights: Float64Array.from({ length: 2 * pairs.length }, (_, k) => pairs[k >> 1]),
   };
   tables.set(key, table);
   return table;
 }
+
+function isPlain(fan: FanState): boolean {
+  return fan.closed && !fan.sharpFirst && fan.centreRule === SMOOTH_CENTRE;
+}
+
+/** Subdominant eigenvalue of the smooth rule at valence n > 2 [Stam 1998, with the first Fourier mode]; for n = 2 it is ¼ and this more than enough. */
+function smoothShrinkage(n: number): number {
+  const c = Math.cos((2 * Math.PI) / n);
+  return (5 + c + Math.sqrt((c + 9) * (c + 1))) / 16;
+}
+
+/** What the subdominant eigenvalue tends to with the valence. */
+const LARGEST_SHRINKAGE = smoothShrinkage(Infinity);
 
 /**
  * Largest modulus of the refinement's eigenvalues but the 1 of constants: power iteration on the rings less their centre,

@@ -3,7 +3,7 @@ import { MOMENTS, type MomentSums } from '../moments/sums';
 import { bicubicMoments } from '../patches/bicubic';
 import { gaussRule } from '../patches/gauss-rule';
 import { classifyVertices, isRegularFace, type Fans } from './catmull-clark-classify';
-import { fillChildNet, makeFanState, refineFan, type FanState } from './catmull-clark-fan';
+import { approximateLimit, fillChildNet, makeFanState, refineFan, translateFan, type FanState } from './catmull-clark-fan';
 import { fillNet } from './catmull-clark-net';
 import { refineAround } from './catmull-clark-refine';
 import { fanTable } from './catmull-clark-tables';
@@ -28,6 +28,7 @@ export interface LimitSums {
   curves: BorderCurves;
 }
 
+const NO_SHIFT = new Float64Array(3);
 const net = new Float64Array(48);
 const solid = new Float64Array(MOMENTS);
 const surface = new Float64Array(MOMENTS);
@@ -79,7 +80,7 @@ function addRegularFace(mesh: LevelMesh, face: number, origins: Float64Array, su
   sums.surface.add(body, surface, 0);
   for (let side = 0; side < 4; side++) {
     const edge = mesh.borderOf[start + side];
-    if (edge >= 0) sums.curves.addSide(net, side, edge, 1, mesh.borderFrom[start + side], 2 ** -mesh.level);
+    if (edge >= 0) sums.curves.addSide(net, side, edge, 1, mesh.borderFrom[start + side], 2 ** -mesh.level, NO_SHIFT);
   }
 }
 
@@ -119,10 +120,11 @@ function addFan(mesh: LevelMesh, fans: Fans, index: number, origins: Float64Arra
   let bordered = false;
   for (let j = 0; j < n; j++) for (let side = 0; side < 4; side++) if (mesh.borderOf[sideOf(mesh, fans.corners[from + j], side)] >= 0) bordered = true;
   const levels = bordered ? Math.max(weights.length, curveWeights.length) : weights.length;
-  const limit = Float64Array.from(state.centre);
+  // About the limit point all rings shrink to 0 and so does their rounding, which the closing would else multiply.
+  const limit = approximateLimit(state);
+  translateFan(state, limit);
   for (let k = 0; k < levels; k++) {
     refineFan(state, finer);
-    if (k < curveWeights.length) for (let axis = 0; axis < 3; axis++) limit[axis] += curveWeights[k] * (finer.centre[axis] - state.centre[axis]);
     [state, finer] = [finer, state];
     const rule = gaussRule(LEVEL_NODES[Math.min(k, LEVEL_NODES.length - 1)]);
     const weight = k < weights.length ? weights[k] : 0;
@@ -130,12 +132,13 @@ function addFan(mesh: LevelMesh, fans: Fans, index: number, origins: Float64Arra
     for (let j = 0; j < n; j++) {
       const corner = fans.corners[from + j];
       const body = mesh.bodyOf[mesh.faceOf[corner]];
+      const ox = origins[3 * body] - limit[0], oy = origins[3 * body + 1] - limit[1], oz = origins[3 * body + 2] - limit[2];
       for (let child = 0; child < 3; child++) {
         fillChildNet(state, j, child, net);
-        if (bordered) addFanCurves(mesh, corner, child, k, k < curveWeights.length ? curveWeights[k] : 0, sums.curves);
+        if (bordered) addFanCurves(mesh, corner, child, k, k < curveWeights.length ? curveWeights[k] : 0, limit, sums.curves);
         if (weight === 0) continue;
         const coarser = k > 0 && LEVEL_NODES[k] < LEVEL_NODES[k - 1];
-        magnitude[j] += Math.abs(weight) * bicubicMoments(net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2], rule, solid, surface);
+        magnitude[j] += Math.abs(weight) * bicubicMoments(net, ox, oy, oz, rule, solid, surface);
         for (let i = 0; i < MOMENTS; i++) {
           closedSolid[MOMENTS * j + i] += weight * solid[i];
           checkSolid[MOMENTS * j + i] += checkWeight * solid[i];
@@ -143,7 +146,7 @@ function addFan(mesh: LevelMesh, fans: Fans, index: number, origins: Float64Arra
         }
         if (!coarser) continue;
         // The step to a coarser rule errs most at its first level: the difference to the rule before bounds it.
-        bicubicMoments(net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2], gaussRule(LEVEL_NODES[k - 1]), finerSolid, surface);
+        bicubicMoments(net, ox, oy, oz, gaussRule(LEVEL_NODES[k - 1]), finerSolid, surface);
         for (let i = 0; i < MOMENTS; i++) sums.closingError[MOMENTS * body + i] += 2 * Math.abs(solid[i] - finerSolid[i]);
       }
     }
@@ -168,19 +171,19 @@ function sideOf(mesh: LevelMesh, corner: number, side: number): number {
 }
 
 /** Adds the border curves that the child net in `net` holds at level k of a fan. Spokes 0 leave the centre, sides 3 run towards it. */
-function addFanCurves(mesh: LevelMesh, corner: number, child: number, k: number, weight: number, curves: BorderCurves): void {
+function addFanCurves(mesh: LevelMesh, corner: number, child: number, k: number, weight: number, limit: Float64Array, curves: BorderCurves): void {
   const length = 2 ** -mesh.level;
   if (child !== 1 && weight !== 0) {
     const side = child === 0 ? 0 : 3;
     const h = sideOf(mesh, corner, side);
     const share = length * 2 ** (-1 - k);
     const from = mesh.borderFrom[h] + (side === 0 ? share : length - 2 * share);
-    if (mesh.borderOf[h] >= 0) curves.addSide(net, side, mesh.borderOf[h], weight, from, share);
+    if (mesh.borderOf[h] >= 0) curves.addSide(net, side, mesh.borderOf[h], weight, from, share, limit);
   }
   if (k > 0) return;
   for (const [outerChild, side, faceSide, half] of OUTER_SIDES) {
     if (outerChild !== child) continue;
     const h = sideOf(mesh, corner, faceSide);
-    if (mesh.borderOf[h] >= 0) curves.addSide(net, side, mesh.borderOf[h], 1, mesh.borderFrom[h] + (half * length) / 2, length / 2);
+    if (mesh.borderOf[h] >= 0) curves.addSide(net, side, mesh.borderOf[h], 1, mesh.borderFrom[h] + (half * length) / 2, length / 2, limit);
   }
 }
