@@ -1,5 +1,4 @@
 import path from 'node:path';
-import { mkdirSync } from 'node:fs';
 import { bootstrap } from './support/bootstrap.mjs';
 import { announceServing, bundleWorkerWhenChanged, buildWebWhenChanged } from './support/build.mjs';
 import { startCheckoutCluster } from './support/checkout-cluster.mjs';
@@ -37,7 +36,6 @@ async function end() {
 async function start() {
   loadEnvironment();
   const data = dataFolder();
-  mkdirSync(data, { recursive: true });
   const record = await takeDataFolder(data);
   undo.push(record.release);
   const port = await choosePort();

@@ -17,6 +17,7 @@ function sentence({ code, failed }, url) {
   if (code === 'ECONNREFUSED' || code === 'ENOTFOUND') return `No PostgreSQL answers at ${host}. Check DATABASE_URL, or leave it out to use a cluster of our own.`;
   if (code === '28P01') return `PostgreSQL at ${host} refuses the password. For a cluster of our own the passwords are in local.env of the data folder: put that file back.`;
   if (code === '3D000') return `The database ${pathname.slice(1)} does not exist at ${host}. Create it, or correct DATABASE_URL.`;
+  if (code === 'APPLICATION_ROLE') return `${failed} Put its address with the right password into WEIGHHOUSE_APP_DATABASE_URL.`;
   if (code === '42501') return `The role in DATABASE_URL may not change the schema at ${host}: ${failed}`;
   return `The database could not be prepared: ${failed}`;
 }
