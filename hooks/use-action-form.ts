@@ -45,4 +45,10 @@ export function useActionForm<Input extends FieldValues, Parsed, Output>(options
   };
 }
 
-const unreached = { ok: false as const, code: 'not_reached', message: 'The server was not reached. Try again.', field: null, errors: [] };
+const unreached = {
+  ok: false as const,
+  code: 'not_reached',
+  message: 'The server was not reached. Try again.',
+  field: null,
+  errors: [],
+};

@@ -6,7 +6,7 @@ import type { AssetTotal, PartCounts, PartPage, PartRow } from '@/lib/rules/part
 import { requestJson } from './request-json';
 
 /** Rows asked for at once: the first page is on screen soon, the rest follows by itself. */
-const PAGE_ROWS = 500;
+const PAGE_ROWS = 1000;
 
 export type PartsData = InfiniteData<PartPage, string | null>;
 
@@ -23,7 +23,10 @@ export function useParts(show: string) {
     queryKey: partsKey(show),
     initialPageParam: null as string | null,
     queryFn: ({ pageParam, signal }) =>
-      requestJson<PartPage>(partsPath(show, { limit: String(PAGE_ROWS), ...(pageParam === null ? {} : { cursor: pageParam }) }), { signal }),
+      requestJson<PartPage>(
+        partsPath(show, { limit: String(PAGE_ROWS), ...(pageParam === null ? {} : { cursor: pageParam }) }),
+        { signal },
+      ),
     getNextPageParam: (page) => page.next_cursor,
   });
   const { hasNextPage, isFetching, isError, fetchNextPage, data } = query;
@@ -35,7 +38,10 @@ export function useParts(show: string) {
   const rows = useMemo((): PartRow[] => data?.pages.flatMap((page) => page.items) ?? [], [data]);
   const totals = useMemo((): AssetTotal[] => lastOfEach(data?.pages.flatMap((page) => page.assets) ?? []), [data]);
   const counts: PartCounts | null = data?.pages[0]?.counts ?? null;
-  return { ...query, rows, totals, counts, complete: data !== undefined && !hasNextPage };
+  const complete = data !== undefined && !hasNextPage;
+  // Pages read one after another may lie at different revisions: what changed since the oldest is asked for again.
+  const revision = complete ? Math.min(...data.pages.map((page) => page.revision)) : null;
+  return { ...query, rows, totals, counts, complete, revision };
 }
 
 /** An asset that lies on two pages is told on both; the later telling wins. */

@@ -11,7 +11,11 @@ import { NewPasswordField } from './new-password-field';
 import { signInAndGo } from './sign-in-and-go';
 
 /** The studio's first person, who lets everybody else in. */
-export function FirstAdminForm({ send }: { send: (input: CreateFirstAdminInput) => Promise<ActionResult<{ email: string }>> }) {
+export function FirstAdminForm({
+  send,
+}: {
+  send: (input: CreateFirstAdminInput) => Promise<ActionResult<{ email: string }>>;
+}) {
   const { form, onSubmit, refusal, busy, errorOf } = useActionForm({
     schema: createFirstAdminInput,
     defaultValues: { email: '', name: '', password: '' },

@@ -28,8 +28,14 @@ export function ResetRequestForm({ sendsMail, send }: ResetRequestFormProps) {
   if (askedFor !== null) {
     return (
       <div role="status" className="flex flex-col gap-4 text-14">
-        <p>If {askedFor} has an account here, a message with a link is on its way. The link works once and for two hours.</p>
-        {sendsMail ? null : <p className="text-ink-2">This studio has no mail server set: an admin finds the message in the local mailbox.</p>}
+        <p>
+          If {askedFor} has an account here, a message with a link is on its way. The link works once and for two hours.
+        </p>
+        {sendsMail ? null : (
+          <p className="text-ink-2">
+            This studio has no mail server set: an admin finds the message in the local mailbox.
+          </p>
+        )}
         <Link href="/sign-in" className="link self-start">
           Back to sign in
         </Link>

@@ -18,7 +18,9 @@ interface RowBeamProps {
 }
 
 function centreOf(of: Weighed): [number, number, number] | null {
-  return of.com_x_m === null || of.com_y_m === null || of.com_z_m === null ? null : [of.com_x_m, of.com_y_m, of.com_z_m];
+  return of.com_x_m === null || of.com_y_m === null || of.com_z_m === null
+    ? null
+    : [of.com_x_m, of.com_y_m, of.com_z_m];
 }
 
 function inertiaOf(of: Weighed): [number, number, number] | null {

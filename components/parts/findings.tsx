@@ -10,12 +10,27 @@ export function Findings({ findings }: { findings: readonly RowFinding[] }) {
   return (
     <ul className="flex flex-col gap-1.5 text-13">
       {sorted.map((finding) => (
-        <li key={`${finding.code} ${finding.message}`} className={finding.severity === 'problem' ? 'flex gap-2 text-wrong' : 'flex gap-2 text-ink-2'}>
-          <span className="mt-1 shrink-0">{finding.severity === 'problem' ? <ProblemShape /> : finding.severity === 'warning' ? <WarningShape /> : <span aria-hidden className="inline-block w-3 text-center leading-3">·</span>}</span>
+        <li
+          key={`${finding.code} ${finding.message}`}
+          className={finding.severity === 'problem' ? 'flex gap-2 text-wrong' : 'flex gap-2 text-ink-2'}
+        >
+          <span className="mt-1 shrink-0">
+            {finding.severity === 'problem' ? (
+              <ProblemShape />
+            ) : finding.severity === 'warning' ? (
+              <WarningShape />
+            ) : (
+              <span aria-hidden className="inline-block w-3 text-center leading-3">
+                ·
+              </span>
+            )}
+          </span>
           <span>
             <span className="sr-only">{WORD[finding.severity]}: </span>
             {finding.message}
-            {finding.count > 1 ? <span className="text-ink-3"> {finding.count.toLocaleString('en')} places.</span> : null}
+            {finding.count > 1 ? (
+              <span className="text-ink-3"> {finding.count.toLocaleString('en')} places.</span>
+            ) : null}
           </span>
         </li>
       ))}

@@ -20,7 +20,12 @@ interface GridHeadProps {
 /** The head of the table; a column is ordered by a click. Units stand here and never in a cell. */
 export function GridHead({ specs, template, frame, sort, down, onSort }: GridHeadProps) {
   return (
-    <div role="row" aria-rowindex={1} className="sticky top-0 z-20 grid h-9 border-b border-rule bg-ground" style={{ gridTemplateColumns: template }}>
+    <div
+      role="row"
+      aria-rowindex={1}
+      className="sticky top-0 z-20 grid h-9 border-b border-rule bg-ground"
+      style={{ gridTemplateColumns: template }}
+    >
       {specs.map((spec) => {
         const unit = spec.unit?.(frame);
         const sorted = sort === spec.id;
@@ -30,15 +35,36 @@ export function GridHead({ specs, template, frame, sort, down, onSort }: GridHea
             {unit === undefined ? null : `, ${unit}`}
           </span>
         );
-        const style = cn('flex min-w-0 items-center gap-1 px-2 text-12 text-ink-3', spec.id === 'name' && 'pl-3', spec.figures && 'justify-end pr-10');
+        const style = cn(
+          'flex min-w-0 items-center gap-1 px-2 text-12 text-ink-3',
+          spec.id === 'name' && 'pl-3',
+          spec.figures && 'justify-end pr-10',
+        );
         return (
-          <div key={spec.id} role="columnheader" aria-sort={sorted ? (down ? 'descending' : 'ascending') : undefined} className="flex min-w-0 items-stretch">
+          <div
+            key={spec.id}
+            role="columnheader"
+            aria-sort={sorted ? (down ? 'descending' : 'ascending') : undefined}
+            className="flex min-w-0 items-stretch"
+          >
             {spec.id === 'beam' ? (
               <span className={style}>{label}</span>
             ) : (
-              <button type="button" tabIndex={-1} title={spec.name} onClick={() => onSort(spec.id)} className={cn(style, 'flex-1 hover:text-ink', sorted && 'text-ink')}>
+              <button
+                type="button"
+                tabIndex={-1}
+                title={spec.name}
+                onClick={() => onSort(spec.id)}
+                className={cn(style, 'flex-1 hover:text-ink', sorted && 'text-ink')}
+              >
                 {label}
-                {sorted ? down ? <ArrowDown aria-hidden className="size-3 shrink-0 text-brass" /> : <ArrowUp aria-hidden className="size-3 shrink-0 text-brass" /> : null}
+                {sorted ? (
+                  down ? (
+                    <ArrowDown aria-hidden className="size-3 shrink-0 text-brass" />
+                  ) : (
+                    <ArrowUp aria-hidden className="size-3 shrink-0 text-brass" />
+                  )
+                ) : null}
               </button>
             )}
           </div>

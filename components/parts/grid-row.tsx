@@ -51,25 +51,45 @@ export const GridRow = memo(function GridRow(props: GridRowProps) {
         'group absolute inset-x-0 cursor-default border-b border-rule select-none',
         compact ? 'h-16.5 px-4 py-1.5' : asset ? 'grid h-9.5' : 'grid h-8',
         asset ? 'bg-bench' : 'bg-ground hover:bg-bench',
-        chosen && 'bg-selected shadow-[inset_2px_0_0_var(--brass)] hover:bg-selected forced-colors:outline-2 forced-colors:-outline-offset-2',
-        active && 'group-focus-visible/grid:outline-2 group-focus-visible/grid:-outline-offset-2 group-focus-visible/grid:outline-brass',
+        chosen &&
+          'bg-selected shadow-[inset_2px_0_0_var(--brass)] hover:bg-selected forced-colors:outline-2 forced-colors:-outline-offset-2',
+        active &&
+          'group-focus-visible/grid:outline-2 group-focus-visible/grid:-outline-offset-2 group-focus-visible/grid:outline-brass',
         saving && 'text-ink-3',
         editor !== null && 'z-10',
       )}
       style={{ transform: `translateY(${top}px)`, gridTemplateColumns: compact ? undefined : template }}
     >
-      {compact ? <CompactCells node={node} frame={frame} editor={editor} /> : specs.map((spec) => <Cell key={spec.id} spec={spec} node={node} frame={frame} editor={editor} />)}
+      {compact ? (
+        <CompactCells node={node} frame={frame} editor={editor} />
+      ) : (
+        specs.map((spec) => <Cell key={spec.id} spec={spec} node={node} frame={frame} editor={editor} />)
+      )}
     </div>
   );
 });
 
-function Cell({ spec, node, frame, editor }: { spec: ColumnSpec; node: TableNode; frame: ShowFrame; editor: ReactNode }) {
+function Cell({
+  spec,
+  node,
+  frame,
+  editor,
+}: {
+  spec: ColumnSpec;
+  node: TableNode;
+  frame: ShowFrame;
+  editor: ReactNode;
+}) {
   const editing = spec.id === 'mass' && editor !== null;
   return (
     <div
       role={spec.id === 'name' ? 'rowheader' : 'gridcell'}
       data-column={spec.id}
-      className={cn('relative flex min-w-0 items-center px-2', spec.id === 'name' && 'pl-3', spec.figures && 'justify-end')}
+      className={cn(
+        'relative flex min-w-0 items-center px-2',
+        spec.id === 'name' && 'pl-3',
+        spec.figures && 'justify-end',
+      )}
     >
       {editing ? editor : node.kind === 'asset' ? spec.asset(node, frame) : spec.part(node, frame)}
     </div>
@@ -86,7 +106,13 @@ function CompactCells({ node, frame, editor }: { node: TableNode; frame: ShowFra
           {node.kind === 'asset' ? <AssetName node={node} /> : <PartName node={node} />}
         </div>
         <div role="gridcell" className="shrink-0">
-          {editor ?? <Figure value={of.mass_kg} notation="engineering" className={node.kind === 'asset' ? 'font-medium' : undefined} />}
+          {editor ?? (
+            <Figure
+              value={of.mass_kg}
+              notation="engineering"
+              className={node.kind === 'asset' ? 'font-medium' : undefined}
+            />
+          )}
         </div>
       </div>
       <div role="gridcell" className="flex h-7 items-center justify-between gap-3 pl-4">
@@ -94,7 +120,11 @@ function CompactCells({ node, frame, editor }: { node: TableNode; frame: ShowFra
           <StateMark state={of.state} />
           {node.kind === 'part' ? <ProblemCounts findings={node.row.problems} /> : null}
         </span>
-        <RowBeam of={of} unit={frame.linear_unit} {...(node.kind === 'part' ? { largest: node.largest, partner: node.partner } : {})} />
+        <RowBeam
+          of={of}
+          unit={frame.linear_unit}
+          {...(node.kind === 'part' ? { largest: node.largest, partner: node.partner } : {})}
+        />
       </div>
     </>
   );

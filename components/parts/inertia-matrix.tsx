@@ -22,7 +22,13 @@ export function InertiaMatrix({ of }: { of: PartRow | AssetTotal }) {
       <caption className="sr-only">Inertia matrix, each number times ten to the power {exponent}</caption>
       <thead>
         <tr>
-          <td className="pr-2 text-12 text-ink-3">{exponent === 0 ? null : <span title="for every entry">·10<sup>{String(exponent).replace('-', '\u2212')}</sup></span>}</td>
+          <td className="pr-2 text-12 text-ink-3">
+            {exponent === 0 ? null : (
+              <span title="for every entry">
+                ·10<sup>{String(exponent).replace('-', '\u2212')}</sup>
+              </span>
+            )}
+          </td>
           {AXES.map((axis) => (
             <th key={axis} scope="col" className="px-1 text-right text-12 font-normal text-ink-3">
               {axis}
@@ -40,7 +46,13 @@ export function InertiaMatrix({ of }: { of: PartRow | AssetTotal }) {
               const value = of[entryOf(row, column)];
               return (
                 <td key={column} className="px-1 py-0.5">
-                  <Figure value={value === null ? null : value / scale} full={value} decimals={3} align={ALIGN} className={j < i ? 'text-ink-3' : undefined} />
+                  <Figure
+                    value={value === null ? null : value / scale}
+                    full={value}
+                    decimals={3}
+                    align={ALIGN}
+                    className={j < i ? 'text-ink-3' : undefined}
+                  />
                 </td>
               );
             })}

@@ -22,7 +22,10 @@ export function MassEntry({ start, parts, shared, materials, onSet, onLeave }: M
   const [tried, setTried] = useState(false);
   const helpId = useId();
   const parsed = parseMassEntry(text, materials);
-  const starting = text.length > 0 && /^[a-z]/i.test(text) ? materials.filter((name) => name.toLowerCase().startsWith(text.toLowerCase())).slice(0, 5) : [];
+  const starting =
+    text.length > 0 && /^[a-z]/i.test(text)
+      ? materials.filter((name) => name.toLowerCase().startsWith(text.toLowerCase())).slice(0, 5)
+      : [];
 
   function onKeyDown(event: KeyboardEvent) {
     event.stopPropagation();
@@ -54,7 +57,11 @@ export function MassEntry({ start, parts, shared, materials, onSet, onLeave }: M
         onFocus={(event) => event.target.setSelectionRange(text.length, text.length)}
         className="h-7 w-full rounded border border-brass bg-ground px-2 text-right font-mono text-13 text-ink outline-none aria-invalid:border-wrong"
       />
-      <span id={helpId} role="status" className="absolute top-8 right-0 z-20 block w-64 rounded border border-edge bg-raised px-3 py-2 text-left text-13 text-ink-2">
+      <span
+        id={helpId}
+        role="status"
+        className="absolute top-8 right-0 z-20 block w-64 rounded border border-edge bg-raised px-3 py-2 text-left text-13 text-ink-2"
+      >
         {parsed.ok ? (
           <>
             <span className="block text-ink">{entryWords(parsed.entry)}</span>

@@ -19,7 +19,10 @@ export function AssetName({ node }: { node: AssetNode }) {
   const { asset, category } = node.total;
   return (
     <span className="flex min-w-0 items-baseline gap-2" title={asset}>
-      <ChevronDown aria-hidden className="size-3 shrink-0 self-center text-ink-3 transition-transform duration-100 group-aria-[expanded=false]:-rotate-90" />
+      <ChevronDown
+        aria-hidden
+        className="size-3 shrink-0 self-center text-ink-3 transition-transform duration-100 group-aria-[expanded=false]:-rotate-90"
+      />
       <span className="truncate text-14 font-medium">{asset}</span>
       <span className="text-13 text-ink-3">{CATEGORY_WORDS[category]}</span>
     </span>

@@ -36,10 +36,21 @@ type NumberKey = 'mass_kg' | 'com_x_m' | 'com_y_m' | 'com_z_m' | 'i1_kg_m2' | 'i
 
 const COORDINATES = { before: 5, after: 5 };
 
-function magnitude(id: PartColumn, label: ReactNode, name: string, key: NumberKey, rest: Partial<ColumnSpec> & { per?: (frame: ShowFrame) => number }): ColumnSpec {
+function magnitude(
+  id: PartColumn,
+  label: ReactNode,
+  name: string,
+  key: NumberKey,
+  rest: Partial<ColumnSpec> & { per?: (frame: ShowFrame) => number },
+): ColumnSpec {
   const { per = () => 1, ...spec } = rest;
   const cell = (value: number | null, frame: ShowFrame, bold: boolean) => (
-    <Figure value={value === null ? null : value / per(frame)} notation="engineering" align={ENGINEERING_WIDTHS} className={bold ? 'font-medium' : undefined} />
+    <Figure
+      value={value === null ? null : value / per(frame)}
+      notation="engineering"
+      align={ENGINEERING_WIDTHS}
+      className={bold ? 'font-medium' : undefined}
+    />
   );
   return {
     id,
@@ -56,7 +67,11 @@ function magnitude(id: PartColumn, label: ReactNode, name: string, key: NumberKe
 
 function coordinate(id: 'x' | 'y' | 'z', key: NumberKey): ColumnSpec {
   const cell = (value: number | null, frame: ShowFrame) => (
-    <Figure value={value === null ? null : value / METRES_PER[frame.linear_unit]} decimals={3} align={{ ...COORDINATES, after: 4 }} />
+    <Figure
+      value={value === null ? null : value / METRES_PER[frame.linear_unit]}
+      decimals={3}
+      align={{ ...COORDINATES, after: 4 }}
+    />
   );
   return {
     id,
@@ -78,7 +93,10 @@ function moment(index: 1 | 2 | 3): ColumnSpec {
       I<sub>{index}</sub>
     </>
   );
-  return magnitude(`i${index}`, label, `Principal moment ${index}`, `i${index}_kg_m2`, { unit: () => 'kg m²', givesWay: 5 });
+  return magnitude(`i${index}`, label, `Principal moment ${index}`, `i${index}_kg_m2`, {
+    unit: () => 'kg m²',
+    givesWay: 5,
+  });
 }
 
 const isPart = (of: PartRow | AssetTotal): of is PartRow => 'revision' in of;
@@ -135,7 +153,9 @@ export const COLUMN_SPECS: readonly ColumnSpec[] = [
     label: 'Balance along longest axis',
     name: 'Balance along longest axis',
     width: 200,
-    part: ({ row, largest, partner }, frame) => <RowBeam of={row} unit={frame.linear_unit} largest={largest} partner={partner} />,
+    part: ({ row, largest, partner }, frame) => (
+      <RowBeam of={row} unit={frame.linear_unit} largest={largest} partner={partner} />
+    ),
     asset: ({ total }, frame) => <RowBeam of={total} unit={frame.linear_unit} />,
     order: () => undefined,
   },
@@ -156,7 +176,10 @@ export const COLUMN_SPECS: readonly ColumnSpec[] = [
     name: 'Problems and warnings',
     width: 78,
     part: ({ row }) => <ProblemCounts findings={row.problems} />,
-    asset: ({ total }) => (total.blocked === 0 ? null : <span className="text-13 text-wrong">{total.blocked.toLocaleString('en')} blocked</span>),
+    asset: ({ total }) =>
+      total.blocked === 0 ? null : (
+        <span className="text-13 text-wrong">{total.blocked.toLocaleString('en')} blocked</span>
+      ),
     order: (of) => (isPart(of) ? problemWeight(of) : -of.blocked * 1000),
   },
   {

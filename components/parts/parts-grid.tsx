@@ -1,6 +1,6 @@
 'use client';
 
-import { useEffect, useId, useRef, type KeyboardEvent, type MouseEvent, type ReactNode } from 'react';
+import { useEffect, useId, useRef, type KeyboardEvent, type MouseEvent, type ReactNode, type RefObject } from 'react';
 import { useElementWidth } from '@/hooks/use-element-width';
 import type { PartColumn } from '@/hooks/use-part-filters';
 import { useVirtualRows } from '@/hooks/use-virtual-rows';
@@ -14,6 +14,7 @@ import { COLUMN_SPECS, fittingColumns, gridTemplate } from './part-columns';
 const COMPACT_BELOW = 640;
 
 interface PartsGridProps {
+  gridRef: RefObject<HTMLDivElement | null>;
   nodes: readonly TableNode[];
   frame: ShowFrame;
   selection: RowSelection;
@@ -34,8 +35,23 @@ interface PartsGridProps {
 
 /** The rows in sight. The grid itself holds the focus and names the active row, so that rows may come and go as it scrolls. */
 export function PartsGrid(props: PartsGridProps) {
-  const { nodes, frame, selection, saving, closed, sort, down, editing, onSort, onSelect, onToggleOpen, onEdit, onOpen, onKey } = props;
-  const scroller = useRef<HTMLDivElement>(null);
+  const {
+    gridRef: scroller,
+    nodes,
+    frame,
+    selection,
+    saving,
+    closed,
+    sort,
+    down,
+    editing,
+    onSort,
+    onSelect,
+    onToggleOpen,
+    onEdit,
+    onOpen,
+    onKey,
+  } = props;
   const idBase = useId();
   const width = useElementWidth(scroller);
   const compact = width !== null && width < COMPACT_BELOW;
@@ -50,7 +66,7 @@ export function PartsGrid(props: PartsGridProps) {
     (index) => nodes[index].key,
     compact ? 0 : HEAD_HEIGHT,
   );
-  const rowId = (key: string) => `${idBase}-${key}`;
+  const rowId = (key: string) => `${idBase}-${encodeURIComponent(key)}`;
   const activeIndex = selection.active === null ? -1 : nodes.findIndex((node) => node.key === selection.active);
 
   const shape = `${compact} ${nodes.length} ${nodes[0]?.kind}`;
@@ -69,7 +85,9 @@ export function PartsGrid(props: PartsGridProps) {
   });
 
   function keyOf(event: MouseEvent): string | null {
-    return event.target instanceof Element ? (event.target.closest<HTMLElement>('[data-key]')?.dataset.key ?? null) : null;
+    return event.target instanceof Element
+      ? (event.target.closest<HTMLElement>('[data-key]')?.dataset.key ?? null)
+      : null;
   }
 
   function onClick(event: MouseEvent) {
@@ -97,14 +115,17 @@ export function PartsGrid(props: PartsGridProps) {
       aria-colcount={compact ? undefined : specs.length}
       aria-activedescendant={activeIndex < 0 || editing !== null ? undefined : rowId(nodes[activeIndex].key)}
       onKeyDown={(event) => {
-        if (onKey(event, Math.max(1, Math.floor((scroller.current?.clientHeight ?? 0) / PART_HEIGHT) - 2))) event.preventDefault();
+        if (onKey(event, Math.max(1, Math.floor((scroller.current?.clientHeight ?? 0) / PART_HEIGHT) - 2)))
+          event.preventDefault();
       }}
       onClick={onClick}
       onDoubleClick={onDoubleClick}
       className="group/grid relative min-h-0 flex-1 overflow-auto outline-none"
     >
       <div style={{ minWidth }}>
-        {compact ? null : <GridHead specs={specs} template={template} frame={frame} sort={sort} down={down} onSort={onSort} />}
+        {compact ? null : (
+          <GridHead specs={specs} template={template} frame={frame} sort={sort} down={down} onSort={onSort} />
+        )}
         <div role="rowgroup" className="relative" style={{ height }}>
           {items.map((item) => {
             const node = nodes[item.index];
@@ -135,5 +156,7 @@ export function PartsGrid(props: PartsGridProps) {
 
 function isChosen(node: TableNode, { chosen }: RowSelection): boolean {
   if (chosen.size === 0) return false;
-  return node.kind === 'part' ? chosen.has(node.key) : node.parts.length > 0 && node.parts.every((part) => chosen.has(part.key));
+  return node.kind === 'part'
+    ? chosen.has(node.key)
+    : node.parts.length > 0 && node.parts.every((part) => chosen.has(part.key));
 }

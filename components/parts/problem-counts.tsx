@@ -3,7 +3,16 @@ import type { RowFinding } from '@/lib/rules/part-row';
 /** The shape of a warning: an open diamond, beside the blocked state's cross for a problem. */
 export function WarningShape() {
   return (
-    <svg viewBox="0 0 14 14" width="12" height="12" aria-hidden fill="none" stroke="currentColor" strokeWidth="1.5" className="shrink-0">
+    <svg
+      viewBox="0 0 14 14"
+      width="12"
+      height="12"
+      aria-hidden
+      fill="none"
+      stroke="currentColor"
+      strokeWidth="1.5"
+      className="shrink-0"
+    >
       <path d="M7 1.8 12.2 7 7 12.2 1.8 7Z" />
     </svg>
   );
@@ -11,7 +20,16 @@ export function WarningShape() {
 
 export function ProblemShape() {
   return (
-    <svg viewBox="0 0 14 14" width="12" height="12" aria-hidden fill="none" stroke="currentColor" strokeWidth="2" className="shrink-0">
+    <svg
+      viewBox="0 0 14 14"
+      width="12"
+      height="12"
+      aria-hidden
+      fill="none"
+      stroke="currentColor"
+      strokeWidth="2"
+      className="shrink-0"
+    >
       <path d="M3 3 11 11M11 3 3 11" />
     </svg>
   );
@@ -23,7 +41,10 @@ export function ProblemCounts({ findings }: { findings: readonly RowFinding[] })
   const warnings = findings.filter((finding) => finding.severity === 'warning');
   if (problems.length + warnings.length === 0) return null;
   return (
-    <span className="flex items-center gap-2.5 text-13" title={[...problems, ...warnings].map((finding) => finding.message).join('\n')}>
+    <span
+      className="flex items-center gap-2.5 text-13"
+      title={[...problems, ...warnings].map((finding) => finding.message).join('\n')}
+    >
       {problems.length === 0 ? null : (
         <span className="flex items-center gap-1 text-wrong">
           <ProblemShape />

@@ -16,7 +16,9 @@ export function SelectionSummary({ parts, onSet }: { parts: readonly PartNode[];
     <>
       <header className="px-4 pt-3 pb-2">
         <h2>{rows.length.toLocaleString('en')} parts</h2>
-        <p className="text-13 text-ink-2">of {new Set(rows.map((row) => row.asset)).size.toLocaleString('en')} assets</p>
+        <p className="text-13 text-ink-2">
+          of {new Set(rows.map((row) => row.asset)).size.toLocaleString('en')} assets
+        </p>
       </header>
       {onSet === null ? null : (
         <div className="px-4 pb-3">
@@ -26,7 +28,12 @@ export function SelectionSummary({ parts, onSet }: { parts: readonly PartNode[];
         </div>
       )}
       <Section title="Together">
-        <Facts facts={[massFact(weighed.length === 0 ? null : mass), { label: 'Without mass', value: (rows.length - weighed.length).toLocaleString('en') }]} />
+        <Facts
+          facts={[
+            massFact(weighed.length === 0 ? null : mass),
+            { label: 'Without mass', value: (rows.length - weighed.length).toLocaleString('en') },
+          ]}
+        />
       </Section>
       <Section title="States">
         <ul className="flex flex-col gap-1">

@@ -27,8 +27,13 @@ export function ShowList({ shows, mayCreate }: { shows: readonly ShowSummary[]; 
     return (
       <>
         <PageHeading title="Shows" />
-        <EmptyState title={mayCreate ? 'No show yet' : 'You are in no show yet'} action={mayCreate ? create : undefined}>
-          {mayCreate ? 'Make one: its unit and up axis hold for every cage that is imported.' : 'Ask a lead of your show to add you.'}
+        <EmptyState
+          title={mayCreate ? 'No show yet' : 'You are in no show yet'}
+          action={mayCreate ? create : undefined}
+        >
+          {mayCreate
+            ? 'Make one: its unit and up axis hold for every cage that is imported.'
+            : 'Ask a lead of your show to add you.'}
         </EmptyState>
       </>
     );

@@ -28,7 +28,9 @@ export function ShowRow({ show, roleName }: { show: ShowSummary; roleName: strin
           <span className="font-mono">{show.code}</span> · {roleName}
         </p>
       </div>
-      <div className="text-14">{show.archived ? <p className="text-ink-3">Archived, to read only</p> : <Needs parts={parts} href={href} />}</div>
+      <div className="text-14">
+        {show.archived ? <p className="text-ink-3">Archived, to read only</p> : <Needs parts={parts} href={href} />}
+      </div>
       <div className="min-w-0">{parts === null ? null : <ProgressRule counts={parts} />}</div>
     </li>
   );
@@ -53,7 +55,13 @@ function Needs({ parts, href }: { parts: ShowSummary['parts']; href: string }) {
     <ul className="flex flex-col gap-1" aria-label="Needs you">
       {needs.map(({ state, one, many }) => (
         <li key={state}>
-          <Link href={`${href}?state=${state}`} className={cn('link inline-flex items-center gap-2 pointer-coarse:min-h-11', state === 'blocked' && 'text-wrong')}>
+          <Link
+            href={`${href}?state=${state}`}
+            className={cn(
+              'link inline-flex items-center gap-2 pointer-coarse:min-h-11',
+              state === 'blocked' && 'text-wrong',
+            )}
+          >
             <StateShape state={state} />
             {parts[state].toLocaleString('en')} {parts[state] === 1 ? one : many}
           </Link>

@@ -14,9 +14,19 @@ interface SignedInShellProps {
 
 /** Bar and page of somebody who is signed in. */
 export function SignedInShell({ user, show, items, children }: SignedInShellProps) {
-  const accountLinks = [{ href: '/shows', label: 'Shows' }, { href: '/account', label: 'Account' }, ...(user.isAdmin ? [{ href: '/admin', label: 'Studio' }] : [])];
+  const accountLinks = [
+    { href: '/shows', label: 'Shows' },
+    { href: '/account', label: 'Account' },
+    ...(user.isAdmin ? [{ href: '/admin', label: 'Studio' }] : []),
+  ];
   return (
-    <AppShell show={show} items={items} user={user} accountLinks={accountLinks} onSignOut={() => void signOut({ callbackUrl: '/sign-in' })}>
+    <AppShell
+      show={show}
+      items={items}
+      user={user}
+      accountLinks={accountLinks}
+      onSignOut={() => void signOut({ callbackUrl: '/sign-in' })}
+    >
       {children}
     </AppShell>
   );

@@ -6,6 +6,8 @@ export interface NewerParts {
   items: readonly PartRow[];
   assets?: readonly AssetTotal[];
   counts?: PartCounts | null;
+  /** The show's revision that they were read at. */
+  revision?: number;
 }
 
 /** Puts newer rows and totals in the place of the older ones; a row with an older revision than the one held is not taken. */
@@ -20,5 +22,6 @@ export function mergeParts(pages: readonly PartPage[], newer: NewerParts): PartP
     }),
     assets: page.assets.map((held) => totals.get(held.asset) ?? held),
     counts: index === 0 && newer.counts ? newer.counts : page.counts,
+    revision: newer.revision ?? page.revision,
   }));
 }

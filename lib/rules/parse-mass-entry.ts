@@ -8,9 +8,15 @@ export type MassEntry =
 export type ParsedEntry = { ok: true; entry: MassEntry } | { ok: false; message: string };
 
 type Reading = (amount: number) => MassEntry;
-const mass = (kg: number): Reading => (amount) => ({ kind: 'target_mass', massKg: amount * kg });
-const density = (perUnit: number): Reading => (amount) => ({ kind: 'density', densityKgPerM3: amount * perUnit });
-const areal = (perUnit: number): Reading => (amount) => ({ kind: 'areal_density', arealDensityKgPerM2: amount * perUnit });
+const mass =
+  (kg: number): Reading =>
+  (amount) => ({ kind: 'target_mass', massKg: amount * kg });
+const density =
+  (perUnit: number): Reading =>
+  (amount) => ({ kind: 'density', densityKgPerM3: amount * perUnit });
+const areal =
+  (perUnit: number): Reading =>
+  (amount) => ({ kind: 'areal_density', arealDensityKgPerM2: amount * perUnit });
 
 /** kg in a pound and an ounce are exact by the international agreement of 1959; a foot is 0.3048 m. */
 const POUND = 0.45359237;
@@ -55,8 +61,10 @@ export function parseMassEntry(text: string, materials: readonly string[] = [], 
   if (found === null) return { ok: false, message: `No material is named “${trimmed}”.` };
   const amount = Number(found[1]);
   const unit = found[2] === '' ? bareUnit : unitKey(found[2]);
-  if (/^,\d/.test(found[2])) return { ok: false, message: 'Write the number with a point and without thousands marks.' };
-  if (!Object.hasOwn(READINGS, unit)) return { ok: false, message: `“${found[2]}” is none of ${ENTRY_UNITS.join(', ')}.` };
+  if (/^,\d/.test(found[2]))
+    return { ok: false, message: 'Write the number with a point and without thousands marks.' };
+  if (!Object.hasOwn(READINGS, unit))
+    return { ok: false, message: `“${found[2]}” is none of ${ENTRY_UNITS.join(', ')}.` };
   if (!(amount > 0) || !Number.isFinite(amount)) return { ok: false, message: 'It must be more than zero.' };
   return { ok: true, entry: READINGS[unit](amount) };
 }

@@ -26,7 +26,12 @@ function between(rows: readonly SelectableRow[], from: string | null, to: string
 }
 
 /** Chooses a row alone, adds or takes away a row, or chooses from the anchor to the row. */
-export function selectRow(selection: RowSelection, rows: readonly SelectableRow[], key: string, how: SelectHow): RowSelection {
+export function selectRow(
+  selection: RowSelection,
+  rows: readonly SelectableRow[],
+  key: string,
+  how: SelectHow,
+): RowSelection {
   const row = rows.find((one) => one.key === key);
   if (row === undefined) return selection;
   if (how === 'range') {
@@ -44,7 +49,12 @@ export function selectRow(selection: RowSelection, rows: readonly SelectableRow[
 }
 
 /** Moves the keyboard's place by `steps` rows; `extend` chooses from the anchor to there. */
-export function moveActive(selection: RowSelection, rows: readonly SelectableRow[], steps: number, extend: boolean): RowSelection {
+export function moveActive(
+  selection: RowSelection,
+  rows: readonly SelectableRow[],
+  steps: number,
+  extend: boolean,
+): RowSelection {
   if (rows.length === 0) return selection;
   const here = rows.findIndex((row) => row.key === selection.active);
   const next = here < 0 ? (steps < 0 ? rows.length - 1 : 0) : Math.min(rows.length - 1, Math.max(0, here + steps));

@@ -37,7 +37,12 @@ export function changeOf(entry: MassEntry): ValueChange {
     case 'material':
       return { target_mass_kg: null, density_kg_m3: null, material: entry.name };
     case 'areal_density':
-      return { target_mass_kg: null, density_kg_m3: null, material: null, areal_density_kg_m2: entry.arealDensityKgPerM2 };
+      return {
+        target_mass_kg: null,
+        density_kg_m3: null,
+        material: null,
+        areal_density_kg_m2: entry.arealDensityKgPerM2,
+      };
   }
 }
 

@@ -1,0 +1,107 @@
+'use client';
+
+import { useRouter } from 'next/navigation';
+import { useState } from 'react';
+import { Controller, useWatch } from 'react-hook-form';
+import { toast } from 'sonner';
+import type { z } from 'zod';
+import { CheckField } from '@/components/forms/check-field';
+import { FormRefusal } from '@/components/forms/form-refusal';
+import { SelectField } from '@/components/forms/select-field';
+import { Button } from '@/components/ui/button';
+import { Field } from '@/components/ui/field';
+import { Input } from '@/components/ui/input';
+import { useActionForm } from '@/hooks/use-action-form';
+import type { ActionResult } from '@/lib/rules/action-result';
+import { editShowInput } from '@/lib/rules/inputs/edit-show';
+import { BOUNDARY_WORDS, PARTITION_WORDS, type BoundaryWord, type PartitionWord, type SchemeWord } from '@/lib/rules/measure-words';
+import { BOUNDARY_NAMES, PARTITION_NAMES, UNIT_NAMES, UP_AXIS_NAMES } from '@/lib/rules/show-words';
+import { LINEAR_UNITS, UP_AXES, type LinearUnit, type UpAxis } from '@/lib/rules/units';
+import { wordsToOptions } from '@/lib/rules/words-to-options';
+import { NamePatternField } from './name-pattern-field';
+import { schemeOptions } from './scheme-options';
+
+export interface ShowSettings {
+  code: string;
+  title: string;
+  linear_unit: LinearUnit;
+  up_axis: UpAxis;
+  scheme: SchemeWord;
+  boundary: BoundaryWord;
+  parts_by: PartitionWord;
+  name_pattern: string | null;
+  self_approval: boolean;
+  frozen: boolean;
+  archived: boolean;
+}
+
+interface ShowSettingsFormProps {
+  show: ShowSettings;
+  mayEdit: boolean;
+  send: (input: z.input<typeof editShowInput>) => Promise<ActionResult<unknown>>;
+}
+
+/** Settings of a show. Only what was changed is sent, so that two leads do not undo each other. */
+export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps) {
+  const router = useRouter();
+  const [more, setMore] = useState(false);
+  const { code, frozen, archived, ...values } = show;
+  const { form, onSubmit, refusal, busy, errorOf } = useActionForm({
+    schema: editShowInput,
+    defaultValues: { show: code, ...values, name_pattern: values.name_pattern ?? '' },
+    send: (input) => {
+      const changed = Object.entries(input).filter(([field]) => field in form.formState.dirtyFields);
+      return send({ ...Object.fromEntries(changed), show: code });
+    },
+    onDone: (_answer, input) => {
+      form.reset(input);
+      toast('Settings saved');
+      router.refresh();
+    },
+  });
+  const { control } = form;
+  const { isDirty } = form.formState;
+  const scheme = useWatch({ control, name: 'scheme' }) ?? show.scheme;
+  const locked = !mayEdit || archived;
+  return (
+    <form method="post" noValidate onSubmit={onSubmit} className="flex flex-col gap-6">
+      <Field label="Title" error={errorOf('title')}>
+        <Input autoComplete="off" disabled={locked} {...form.register('title')} />
+      </Field>
+      <fieldset className="grid gap-x-5 gap-y-3 sm:grid-cols-3">
+        <legend className="mb-2 text-16 font-medium">Space</legend>
+        <SelectField control={control} name="linear_unit" label="Unit of the cages" options={wordsToOptions(LINEAR_UNITS, UNIT_NAMES)} disabled={locked || frozen} error={errorOf('linear_unit')} />
+        <SelectField control={control} name="up_axis" label="Up axis" options={wordsToOptions(UP_AXES, UP_AXIS_NAMES)} disabled={locked || frozen} error={errorOf('up_axis')} />
+        <SelectField control={control} name="scheme" label="Scheme" options={schemeOptions(more, scheme)} disabled={locked || frozen} error={errorOf('scheme')} />
+        <p className="text-13 text-ink-3 sm:col-span-2">{frozen ? 'Fixed since the first import.' : 'They stay as they are from the first import on.'}</p>
+        {more || locked || frozen ? null : (
+          <Button look="quiet" size="small" className="-mt-1 justify-self-start" onClick={() => setMore(true)}>
+            More schemes
+          </Button>
+        )}
+      </fieldset>
+      <fieldset className="grid gap-x-5 gap-y-4 sm:grid-cols-2">
+        <legend className="mb-2 text-16 font-medium">Imports from now on</legend>
+        <SelectField control={control} name="boundary" label="Open borders of a cage" options={wordsToOptions(BOUNDARY_WORDS, BOUNDARY_NAMES)} disabled={locked} error={errorOf('boundary')} />
+        <SelectField control={control} name="parts_by" label="A part is" options={wordsToOptions(PARTITION_WORDS, PARTITION_NAMES)} disabled={locked} error={errorOf('parts_by')} />
+        <div className="sm:col-span-2">
+          <Controller
+            control={control}
+            name="name_pattern"
+            render={({ field }) => <NamePatternField value={field.value ?? ''} onChange={field.onChange} error={errorOf('name_pattern')} disabled={locked} />}
+          />
+        </div>
+      </fieldset>
+      <fieldset>
+        <legend className="mb-2 text-16 font-medium">Approval</legend>
+        <CheckField control={control} name="self_approval" label="Values may be approved by whoever set them" hint="Otherwise somebody else has to approve." disabled={locked} />
+      </fieldset>
+      <FormRefusal>{refusal}</FormRefusal>
+      {locked ? null : (
+        <Button type="submit" look="filled" disabled={busy || !isDirty} className="self-start">
+          {busy ? 'Saving' : 'Save settings'}
+        </Button>
+      )}
+    </form>
+  );
+}
