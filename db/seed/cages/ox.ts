@@ -1,16 +1,21 @@
 import { CageDraft } from './cage-draft';
 import { closeTrunk, growTrunk, layTrunk, nearEnd, type TrunkStation } from './half-tube';
 import { growLimb, type LimbStation } from './rings';
+import { times } from './vector';
 
 const SIDES = 6;
+/** Height up to which legs are stretched, cm. */
+const BELLY = 66;
 
 export interface OxBuild {
   /** Height of a hump over the shoulders, cm; 0 for none. */
   hump: number;
   /** Length of the horns beside a grown ox's. */
   horns: number;
-  /** Length of the legs beside their thickness. */
+  /** Length of the legs beside a grown ox's. */
   legs: number;
+  /** Size of the whole animal beside a grown ox's. */
+  size: number;
 }
 
 /** A draught ox, 150 cm at the shoulder, on one skin: trunk, neck and head, four legs, horns, ears and tail. */
@@ -26,12 +31,14 @@ export function ox(build: OxBuild): CageDraft {
   const [hind, fore, horn, ear, tail] = trunk.openings;
   closeTrunk(draft, 'torso', nearEnd(trunk), [0, 0, -2]);
   closeTrunk(draft, 'muzzle', trunk.rows[trunk.rows.length - 1], [0, -1, 1.5]);
-  growLimb(draft, fore, foreleg(build.legs), { hint: [0, 0, 1] });
-  growLimb(draft, hind, hindleg(build.legs), { hint: [0, 0, 1] });
+  growLimb(draft, fore, foreleg(), { hint: [0, 0, 1] });
+  growLimb(draft, hind, hindleg(), { hint: [0, 0, 1] });
   growLimb(draft, horn, hornStations(build.horns), { hint: [0, 0, 1], bulge: 0.3 });
   growLimb(draft, ear, EAR, { hint: [0, 1, 0] });
   growTail(draft, tail);
   draft.mirror();
+  const raise = BELLY * (build.legs - 1);
+  draft.reshape(([x, y, z]) => times([x, y < BELLY ? y * build.legs : y + raise, z], build.size));
   return draft;
 }
 
@@ -59,7 +66,7 @@ export function oxTrunk(height: number): TrunkStation[] {
   ];
 }
 
-function foreleg(length: number): LimbStation[] {
+function foreleg(): LimbStation[] {
   const x = 19;
   return [
     { at: [x + 3, 76, 30], radii: [15, 9], part: 'foreleg_L' },
@@ -72,10 +79,10 @@ function foreleg(length: number): LimbStation[] {
     { at: [x, 9, 32], radii: [5.2, 5], part: 'foreshin_L' },
     { at: [x, 7, 33], radii: [6.6, 6], part: 'forehoof_L' },
     { at: [x, 0, 35], radii: [8.2, 7], part: 'forehoof_L', sharp: true },
-  ].map((station) => ({ ...station, at: [station.at[0], station.at[1] * length, station.at[2]], radii: [station.radii[0], station.radii[1]] }));
+  ];
 }
 
-function hindleg(length: number): LimbStation[] {
+function hindleg(): LimbStation[] {
   const x = 18;
   return [
     { at: [x + 6, 84, -66], radii: [22, 10], part: 'thigh_L' },
@@ -88,7 +95,7 @@ function hindleg(length: number): LimbStation[] {
     { at: [x, 9, -70], radii: [5.2, 5], part: 'shin_L' },
     { at: [x, 7, -68.5], radii: [6.6, 6], part: 'hoof_L' },
     { at: [x, 0, -66.5], radii: [8.2, 7], part: 'hoof_L', sharp: true },
-  ].map((station) => ({ ...station, at: [station.at[0], station.at[1] * length, station.at[2]], radii: [station.radii[0], station.radii[1]] }));
+  ];
 }
 
 function hornStations(length: number): LimbStation[] {
