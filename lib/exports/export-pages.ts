@@ -1,6 +1,7 @@
-import { and, sql } from 'drizzle-orm';
+import { and, sql, type SQL } from 'drizzle-orm';
 import type { Executor } from '@/db/client';
 import { partCurrent } from '@/db/schema/part-current';
+import { ROW_COLUMNS, type StoredRow } from '@/lib/parts/row-columns';
 import { toPartRow } from '@/lib/parts/to-part-row';
 import { CSV_COLUMNS } from '@/lib/rules/csv-columns';
 import { exportCondition, type ExportSelection } from './export-selection';
@@ -18,12 +19,8 @@ export async function* exportPages(db: Executor, show: { id: string; code: strin
   let last: { asset: string; part: string } | null = null;
   for (let left = limit; left > 0; ) {
     const size = Math.min(PAGE_ROWS, left);
-    const rows: (typeof partCurrent.$inferSelect)[] = await db
-      .select()
-      .from(partCurrent)
-      .where(and(condition, last ? sql`(${asset}, ${part}) > (${last.asset}::text collate "C", ${last.part}::text collate "C")` : undefined))
-      .orderBy(asset, part)
-      .limit(size);
+    const behind: SQL | undefined = last ? sql`(${asset}, ${part}) > (${last.asset}::text collate "C", ${last.part}::text collate "C")` : undefined;
+    const { rows }: { rows: StoredRow[] } = await db.execute<StoredRow>(sql`select ${ROW_COLUMNS} from part_current where ${and(condition, behind)} order by ${asset}, ${part} limit ${size}`);
     if (rows.length === 0) return;
     yield rows.map((row) => {
       const fields = toPartRow(show.code, row, []);

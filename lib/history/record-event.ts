@@ -1,6 +1,6 @@
+import { sql } from 'drizzle-orm';
 import type { Transaction } from '@/db/client';
 import { auditEvents } from '@/db/schema/audit-events';
-import { auditItems } from '@/db/schema/audit-items';
 import { SYSTEM_USER_ID } from '@/lib/auth/system-context';
 import type { ActorContext } from '@/lib/context';
 
@@ -30,11 +30,12 @@ export async function recordEvent(
       items: items.length,
     })
     .returning({ id: auditEvents.id });
-  for (let start = 0; start < items.length; start += 5000) {
-    const chunk = items.slice(start, start + 5000);
-    await tx.insert(auditItems).values(
-      chunk.map((item) => ({ eventId: row.id, partId: item.partId ?? null, field: item.field, before: item.before, after: item.after })),
-    );
+  if (items.length > 0) {
+    const rows = items.map((item) => ({ part_id: item.partId ?? null, field: item.field, before: item.before, after: item.after }));
+    await tx.execute(sql`
+      insert into audit_items (event_id, part_id, field, before, after)
+      select ${row.id}::bigint, part_id, field, before, after
+      from json_to_recordset(${JSON.stringify(rows)}::json) as given(part_id uuid, field text, before text, after text)`);
   }
   return row.id;
 }

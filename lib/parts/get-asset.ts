@@ -3,7 +3,6 @@ import type { Executor } from '@/db/client';
 import { assetVersions } from '@/db/schema/asset-versions';
 import { geometryRecords } from '@/db/schema/geometry-records';
 import { importFiles } from '@/db/schema/import-files';
-import { partCurrent } from '@/db/schema/part-current';
 import { users } from '@/db/schema/users';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
@@ -15,6 +14,7 @@ import { assetTotals } from './asset-totals';
 import { findStoredFindings } from './find-stored-findings';
 import { getCurrentAsset, measuredAs } from './get-current-asset';
 import { partRowsWithFindings } from './part-rows-with-findings';
+import { ROW_COLUMNS, type StoredRow } from './row-columns';
 
 /** An asset with its totals, the rows of its parts, the findings of its current version with their places, and its versions. */
 export async function getAsset(context: Context, input: AssetRefInput): Promise<AssetDetail> {
@@ -23,16 +23,12 @@ export async function getAsset(context: Context, input: AssetRefInput): Promise<
   const { asset, record } = await getCurrentAsset(db, show.id, input.asset);
   const [total] = await assetTotals(db, [asset.id]);
   if (!total) throw new StudioError('not_found', `${asset.code} has no parts.`);
-  const stored = await db
-    .select()
-    .from(partCurrent)
-    .where(eq(partCurrent.assetId, asset.id))
-    .orderBy(sql`${partCurrent.part} collate "C"`);
+  const stored = await db.execute<StoredRow>(sql`select ${ROW_COLUMNS} from part_current where asset_id = ${asset.id} order by part collate "C"`);
   return {
     total,
     scale: asset.scale,
     outside_id: asset.outsideId,
-    parts: await partRowsWithFindings(db, show.code, stored),
+    parts: await partRowsWithFindings(db, show.code, stored.rows),
     findings: await findStoredFindings(db, record.id),
     versions: await assetVersionEntries(db, asset.id),
     measured_as: measuredAs(record),

@@ -1,8 +1,7 @@
-import { and, desc, eq, sql } from 'drizzle-orm';
+import { desc, eq, sql } from 'drizzle-orm';
 import type { Executor } from '@/db/client';
 import { geometryParts } from '@/db/schema/geometry-parts';
 import { materials } from '@/db/schema/materials';
-import { partCurrent } from '@/db/schema/part-current';
 import { settings } from '@/db/schema/settings';
 import { users } from '@/db/schema/users';
 import { requireActor } from '@/lib/auth/require-actor';
@@ -15,6 +14,7 @@ import { getShowAccess } from '@/lib/shows/get-show-access';
 import { findStoredFindings } from './find-stored-findings';
 import { getCurrentAsset, measuredAs } from './get-current-asset';
 import { findingsOfRow } from './part-rows-with-findings';
+import { ROW_COLUMNS, type StoredRow } from './row-columns';
 import { toPartRow } from './to-part-row';
 
 /** A part with its findings and their places, the asset's versions with this part's volumes, and everything that was ever set on it. */
@@ -22,10 +22,9 @@ export async function getPart(context: Context, input: PartRefInput): Promise<Pa
   const { db, actor } = requireActor(context);
   const { show } = await getShowAccess(db, actor, input.show, 'readShow');
   const { asset, record } = await getCurrentAsset(db, show.id, input.asset);
-  const [stored] = await db
-    .select()
-    .from(partCurrent)
-    .where(and(eq(partCurrent.showId, show.id), eq(partCurrent.assetId, asset.id), eq(partCurrent.part, input.part)));
+  const {
+    rows: [stored],
+  } = await db.execute<StoredRow>(sql`select ${ROW_COLUMNS} from part_current where asset_id = ${asset.id} and part = ${input.part}`);
   if (!stored) throw new StudioError('not_found', `${asset.code} has no part ${input.part} in its current version.`);
   const ofRecord = (await findStoredFindings(db, record.id)).filter((one) => one.part === null || one.part === stored.part);
   const found = findingsOfRow(stored, ofRecord);
@@ -33,14 +32,14 @@ export async function getPart(context: Context, input: PartRefInput): Promise<Pa
     ...one,
     places: ofRecord.find((other) => other.code === one.code && other.message === one.message)?.places ?? [],
   }));
-  const [caps] = stored.geometryPartId
-    ? await db.select({ area: geometryParts.capAreaShare, volume: geometryParts.capVolumeShare }).from(geometryParts).where(eq(geometryParts.id, stored.geometryPartId))
+  const [caps] = stored.geometry_part_id
+    ? await db.select({ area: geometryParts.capAreaShare, volume: geometryParts.capVolumeShare }).from(geometryParts).where(eq(geometryParts.id, stored.geometry_part_id))
     : [];
   return {
     row: toPartRow(show.code, stored, found),
     findings,
     versions: await partVersions(db, asset.id, stored.part, METRES_PER[show.linearUnit] * asset.scale),
-    settings: await partSettings(db, stored.partId),
+    settings: await partSettings(db, stored.part_id),
     measured_as: measuredAs(record),
     cap_area_share: caps?.area ?? 0,
     cap_volume_share: caps?.volume ?? 0,

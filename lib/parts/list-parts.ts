@@ -1,5 +1,4 @@
 import { and, sql } from 'drizzle-orm';
-import { partCurrent } from '@/db/schema/part-current';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
 import type { ListPartsInput } from '@/lib/rules/inputs/list-parts';
@@ -11,6 +10,7 @@ import { decodeCursor } from './part-cursor';
 import { partFilter } from './part-filter';
 import { partOrder } from './part-order';
 import { partRowsWithFindings } from './part-rows-with-findings';
+import { ROW_COLUMNS, type StoredRow } from './row-columns';
 
 /**
  * A page of a show's parts with their findings, the totals of the assets on it, and with the first page the show's counts.
@@ -23,20 +23,16 @@ export async function listParts(context: Context, input: ListPartsInput): Promis
   const cursor = input.cursor === undefined ? null : decodeCursor(input.cursor, input.sort);
   return db.transaction(
     async (tx) => {
-      const stored = await tx
-        .select()
-        .from(partCurrent)
-        .where(and(partFilter(show.id, input), cursor ? after(cursor) : undefined))
-        .orderBy(orderBy)
-        .limit(input.limit + 1);
-      const rows = stored.slice(0, input.limit);
+      const condition = and(partFilter(show.id, input), cursor ? after(cursor) : undefined);
+      const stored = await tx.execute<StoredRow>(sql`select ${ROW_COLUMNS} from part_current where ${condition} order by ${orderBy} limit ${input.limit + 1}`);
+      const rows = stored.rows.slice(0, input.limit);
       const [{ revision }] = (await tx.execute<{ revision: string }>(sql`select revision from shows where id = ${show.id}`)).rows;
       return {
         items: await partRowsWithFindings(tx, show.code, rows),
-        assets: await assetTotals(tx, [...new Set(rows.map((row) => row.assetId))]),
+        assets: await assetTotals(tx, [...new Set(rows.map((row) => row.asset_id))]),
         counts: cursor ? null : await partCounts(tx, show.id),
         revision: Number(revision),
-        next_cursor: stored.length > input.limit ? cursorOf(rows[rows.length - 1]) : null,
+        next_cursor: stored.rows.length > input.limit ? cursorOf(rows[rows.length - 1]) : null,
       };
     },
     { isolationLevel: 'repeatable read', accessMode: 'read only' },

@@ -4,7 +4,7 @@ import { PART_SORTS, type ListPartsInput, type PartSort } from '@/lib/rules/inpu
 import { VALUE_STATES } from '@/lib/rules/states';
 import { StudioError } from '@/lib/rules/studio-error';
 import { encodeCursor, type PartCursor } from './part-cursor';
-import type { StoredRow } from './to-part-row';
+import type { StoredRow } from './row-columns';
 
 interface SortColumn {
   expression: SQL;
@@ -27,22 +27,22 @@ const COLUMNS: Record<PartSort, SortColumn> = {
   state: {
     expression: sql`array_position(array[${sql.raw(VALUE_STATES.map((state) => `'${state}'`).join(', '))}], ${c.state})`,
     type: 'integer',
-    valueOf: (row) => VALUE_STATES.indexOf(row.state) + 1,
+    valueOf: (row) => VALUE_STATES.findIndex((state) => state === row.state) + 1,
   },
   construction: { expression: text(c.construction), type: 'text', valueOf: (row) => row.construction },
   material: { expression: text(c.material), type: 'text', valueOf: (row) => row.material },
-  mass_kg: number(c.massKg, (row) => row.massKg),
-  density_kg_m3: number(c.densityKgPerM3, (row) => row.densityKgPerM3),
-  volume_m3: number(c.volumeM3, (row) => row.volumeM3),
-  area_m2: number(c.areaM2, (row) => row.areaM2),
-  com_x_m: number(c.comXM, (row) => row.comXM),
-  com_y_m: number(c.comYM, (row) => row.comYM),
-  com_z_m: number(c.comZM, (row) => row.comZM),
-  i1_kg_m2: number(c.i1KgM2, (row) => row.i1KgM2),
-  i2_kg_m2: number(c.i2KgM2, (row) => row.i2KgM2),
-  i3_kg_m2: number(c.i3KgM2, (row) => row.i3KgM2),
+  mass_kg: number(c.massKg, (row) => row.mass_kg),
+  density_kg_m3: number(c.densityKgPerM3, (row) => row.density_kg_m3),
+  volume_m3: number(c.volumeM3, (row) => row.volume_m3),
+  area_m2: number(c.areaM2, (row) => row.area_m2),
+  com_x_m: number(c.comXM, (row) => row.com_x_m),
+  com_y_m: number(c.comYM, (row) => row.com_y_m),
+  com_z_m: number(c.comZM, (row) => row.com_z_m),
+  i1_kg_m2: number(c.i1KgM2, (row) => row.i1_kg_m2),
+  i2_kg_m2: number(c.i2KgM2, (row) => row.i2_kg_m2),
+  i3_kg_m2: number(c.i3KgM2, (row) => row.i3_kg_m2),
   faces: { expression: sql`${c.faces}`, type: 'integer', valueOf: (row) => row.faces },
-  set_at: { expression: sql`date_trunc('milliseconds', ${c.setAt})`, type: 'timestamptz', valueOf: (row) => row.setAt?.toISOString() ?? null },
+  set_at: { expression: sql`date_trunc('milliseconds', ${c.setAt})`, type: 'timestamptz', valueOf: (row) => row.set_at },
 };
 
 /**

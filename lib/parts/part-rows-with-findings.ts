@@ -2,7 +2,8 @@ import { sql } from 'drizzle-orm';
 import type { Executor } from '@/db/client';
 import type { PartRow, RowFinding } from '@/lib/rules/part-row';
 import { NO_PROBLEM_OF_A_SHEET } from '@/lib/values/compute-value';
-import { toPartRow, type StoredRow } from './to-part-row';
+import type { StoredRow } from './row-columns';
+import { toPartRow } from './to-part-row';
 
 interface FoundFinding extends RowFinding, Record<string, unknown> {
   part_id: string;
@@ -18,7 +19,7 @@ export async function partRowsWithFindings(db: Executor, show: string, rows: rea
     from part_current c
     join asset_versions v on v.id = c.version_id
     join findings f on f.record_id = v.record_id and (f.part = c.part or f.part is null)
-    where c.part_id = any(${sql.param(rows.map((row) => row.partId))}::uuid[])
+    where c.part_id = any(${sql.param(rows.map((row) => row.part_id))}::uuid[])
     order by c.part_id, f.ordinal`);
   const byPart = new Map<string, RowFinding[]>();
   for (const { part_id: partId, code, severity, message, count } of found) {
@@ -26,12 +27,12 @@ export async function partRowsWithFindings(db: Executor, show: string, rows: rea
     if (list) list.push({ code, severity, message, count });
     else byPart.set(partId, [{ code, severity, message, count }]);
   }
-  return rows.map((row) => toPartRow(show, row, findingsOfRow(row, byPart.get(row.partId) ?? [])));
+  return rows.map((row) => toPartRow(show, row, findingsOfRow(row, byPart.get(row.part_id) ?? [])));
 }
 
 /** What is a problem of a solid may be a plain fact about a sheet: then it is a note. */
-export function findingsOfRow(row: Pick<StoredRow, 'construction' | 'valueFindings'>, found: readonly RowFinding[]): RowFinding[] {
+export function findingsOfRow(row: Pick<StoredRow, 'construction' | 'value_findings'>, found: readonly RowFinding[]): RowFinding[] {
   const ofRecord = found.map((one) => (row.construction === 'sheet' && NO_PROBLEM_OF_A_SHEET.has(one.code) ? { ...one, severity: 'note' as const } : one));
-  const ofSetting = row.valueFindings.map((one) => ({ ...one, count: 1 }));
+  const ofSetting = row.value_findings.map((one) => ({ ...one, count: 1 }));
   return [...ofSetting, ...ofRecord].sort((a, b) => SEVERITY_ORDER[a.severity] - SEVERITY_ORDER[b.severity]);
 }
