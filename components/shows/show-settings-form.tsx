@@ -46,11 +46,12 @@ export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps)
   const router = useRouter();
   const [more, setMore] = useState(false);
   const { code, frozen, archived, ...values } = show;
+  const stored = { show: code, ...values, name_pattern: values.name_pattern ?? '' };
   const { form, onSubmit, refusal, busy, errorOf } = useActionForm({
     schema: editShowInput,
-    defaultValues: { show: code, ...values, name_pattern: values.name_pattern ?? '' },
+    defaultValues: stored,
     send: (input) => {
-      const changed = Object.entries(input).filter(([field]) => field in form.formState.dirtyFields);
+      const changed = Object.entries(input).filter(([field, value]) => value !== stored[field as keyof typeof stored]);
       return send({ ...Object.fromEntries(changed), show: code });
     },
     onDone: (_answer, input) => {
