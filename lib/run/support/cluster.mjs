@@ -3,6 +3,7 @@ import { chmodSync, chownSync, existsSync, mkdirSync, mkdtempSync, readFileSync,
 import os from 'node:os';
 import path from 'node:path';
 import { command } from './command.mjs';
+import { isAlive } from './file-lock.mjs';
 import { freePort } from './free-port.mjs';
 import { findPostgresPrograms, postgresPrograms } from './postgres-programs.mjs';
 import { Stop } from './stop.mjs';
@@ -42,7 +43,7 @@ function runningPort(data) {
   } catch {
     name = '';
   }
-  if (name === 'postgres') return Number(port) || null;
+  if (name === 'postgres' && isAlive(Number(pid))) return Number(port) || null;
   // After a power cut the number may belong to another program, and PostgreSQL would refuse to start.
   rmSync(file, { force: true });
   return null;

@@ -2,14 +2,20 @@ import { closeSync, mkdirSync, openSync, readFileSync, rmSync, writeSync } from 
 import path from 'node:path';
 import { setTimeout as wait } from 'node:timers/promises';
 
-/** Whether a process with this number runs (also one of another user). */
+/** Whether a process with this number runs (also one of another user); one that ended and nobody asked after does not. */
 export function isAlive(pid) {
   if (!Number.isInteger(pid) || pid <= 0) return false;
   try {
     process.kill(pid, 0);
-    return true;
   } catch (error) {
-    return error.code === 'EPERM';
+    if (error.code !== 'EPERM') return false;
+  }
+  try {
+    // The state follows the name, which may itself hold a parenthesis.
+    const stat = readFileSync(`/proc/${pid}/stat`, 'utf8');
+    return stat.charAt(stat.lastIndexOf(')') + 2) !== 'Z';
+  } catch {
+    return true;
   }
 }
 
