@@ -1,16 +1,18 @@
 import { closeDatabase, database } from '@/db/client';
 import { config } from '@/lib/config';
 import { log } from '@/lib/log';
+import { runMailSweep } from '@/lib/mail/run-mail-sweep';
 import { sweepUploads } from '@/lib/storage/sweep-uploads';
 import { startEnginePool } from './engine-pool';
 import { runQueues } from './run-queues';
 
-/** The worker process: takes jobs from the queue until it is told to end. */
+/** The worker process: takes jobs from the queue and sends waiting messages until it is told to end. */
 async function main(): Promise<void> {
   const url = config().appDatabaseUrl;
   if (!url) throw new Error('No database: set DATABASE_URL, or start with npm start.');
   const engine = startEnginePool();
   const queues = await runQueues({ db: database(), url, engine });
+  const mails = runMailSweep(database());
   log.info({ threads: engine.threads }, 'worker is ready');
   void sweepUploads().catch((error: unknown) => log.warn({ err: error }, 'old uploads could not be removed'));
   let isEnding = false;
@@ -18,7 +20,7 @@ async function main(): Promise<void> {
     if (isEnding) return;
     isEnding = true;
     log.info({ signal }, 'worker ends');
-    await queues.stop();
+    await Promise.all([queues.stop(), mails.stop()]);
     await engine.close();
     await closeDatabase();
     process.exit(0);

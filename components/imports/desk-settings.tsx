@@ -1,0 +1,48 @@
+'use client';
+
+import { Field } from '@/components/ui/field';
+import { Select } from '@/components/ui/select';
+import type { DeskOptions } from '@/hooks/use-import-desk';
+import { BOUNDARY_WORDS, PARTITION_WORDS, SCHEME_WORDS } from '@/lib/rules/measure-words';
+import { BOUNDARY_NAMES, PARTITION_NAMES, SCHEME_NAMES } from '@/lib/rules/show-words';
+
+interface DeskSettingsProps {
+  options: DeskOptions;
+  standard: DeskOptions;
+  disabled: boolean;
+  onChange: (options: DeskOptions) => void;
+}
+
+/** How this import's files are measured; the show's own choice unless somebody says otherwise. */
+export function DeskSettings({ options, standard, disabled, onChange }: DeskSettingsProps) {
+  const choices = <Word extends string>(words: readonly Word[], names: Record<Word, string>, own: Word) =>
+    words.map((word) => ({ value: word, label: names[word], detail: word === own ? 'show' : undefined }));
+  return (
+    <div className="flex flex-wrap gap-x-4 gap-y-3">
+      <Field label="Scheme" className="w-52">
+        <Select
+          options={choices(SCHEME_WORDS, SCHEME_NAMES, standard.scheme)}
+          value={options.scheme}
+          disabled={disabled}
+          onValueChange={(value) => onChange({ ...options, scheme: SCHEME_WORDS.find((word) => word === value) ?? options.scheme })}
+        />
+      </Field>
+      <Field label="Open borders" className="w-52">
+        <Select
+          options={choices(BOUNDARY_WORDS, BOUNDARY_NAMES, standard.boundary)}
+          value={options.boundary}
+          disabled={disabled}
+          onValueChange={(value) => onChange({ ...options, boundary: BOUNDARY_WORDS.find((word) => word === value) ?? options.boundary })}
+        />
+      </Field>
+      <Field label="A part is" className="w-44">
+        <Select
+          options={choices(PARTITION_WORDS, PARTITION_NAMES, standard.partsBy)}
+          value={options.partsBy}
+          disabled={disabled}
+          onValueChange={(value) => onChange({ ...options, partsBy: PARTITION_WORDS.find((word) => word === value) ?? options.partsBy })}
+        />
+      </Field>
+    </div>
+  );
+}

@@ -1,0 +1,72 @@
+'use client';
+
+import { FolderOpen, Upload } from 'lucide-react';
+import { useRef } from 'react';
+import { useDropzone } from 'react-dropzone';
+import { Button } from '@/components/ui/button';
+import { cn } from '@/components/ui/cn';
+import { byteWords } from '@/lib/rules/byte-words';
+import type { ImportPreparation } from '@/lib/rules/import-answer';
+
+interface DropZoneProps {
+  limits: Pick<ImportPreparation, 'extensions' | 'max_file_bytes' | 'max_files'>;
+  onFiles: (files: readonly File[]) => void;
+  /** A strip above the table instead of a whole page. */
+  slim?: boolean;
+  disabled?: boolean;
+}
+
+/** Attribute names that React's types do not know. */
+const FOLDER_PICKER: object = { webkitdirectory: '' };
+
+/** Takes files and whole folders, dropped or chosen. Says all limits before anything goes up. */
+export function DropZone({ limits, onFiles, slim = false, disabled = false }: DropZoneProps) {
+  const { getRootProps, getInputProps, isDragActive, isProcessing, open } = useDropzone({ onDrop: (files) => onFiles(files), noClick: true, noKeyboard: true, disabled });
+  const folder = useRef<HTMLInputElement>(null);
+  const kinds = limits.extensions.map((extension) => extension.toUpperCase()).join(', ');
+  const buttons = (
+    <div className="flex flex-wrap gap-2">
+      <Button onClick={open} disabled={disabled}>
+        <Upload aria-hidden />
+        Choose files
+      </Button>
+      <Button onClick={() => folder.current?.click()} disabled={disabled}>
+        <FolderOpen aria-hidden />
+        Choose a folder
+      </Button>
+    </div>
+  );
+  return (
+    <section
+      {...getRootProps({ 'aria-label': 'Files to import' })}
+      className={cn(
+        'rounded border border-dashed transition-colors duration-100',
+        isDragActive ? 'border-brass bg-selected' : 'border-edge',
+        slim ? 'flex flex-wrap items-center gap-x-5 gap-y-2 px-4 py-2.5' : 'flex min-h-72 flex-col items-start justify-center gap-4 px-6 py-12 md:px-12',
+      )}
+    >
+      <input {...getInputProps({ 'aria-label': 'Files' })} />
+      <input
+        ref={folder}
+        type="file"
+        multiple
+        aria-label="Folder"
+        tabIndex={-1}
+        className="sr-only"
+        {...FOLDER_PICKER}
+        onChange={(event) => {
+          onFiles([...(event.target.files ?? [])]);
+          event.target.value = '';
+        }}
+      />
+      <div className={slim ? 'min-w-0 flex-1' : 'max-w-xl'}>
+        <p className={slim ? 'text-14' : 'text-22 font-medium'}>{isProcessing ? 'Reading the folder…' : isDragActive ? 'Let go to look at them' : slim ? 'Drop more files or folders' : 'Drop cages, or a folder of them'}</p>
+        <p className={cn('text-ink-2', slim ? 'text-13' : 'mt-2 text-14')}>
+          {kinds}, up to {byteWords(limits.max_file_bytes)} a file and {limits.max_files.toLocaleString('en')} files.
+          {slim ? null : ' Nothing goes up before you have seen where each file goes.'}
+        </p>
+      </div>
+      {buttons}
+    </section>
+  );
+}

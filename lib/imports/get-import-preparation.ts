@@ -1,0 +1,37 @@
+import { eq, sql } from 'drizzle-orm';
+import { assetVersions } from '@/db/schema/asset-versions';
+import { assets } from '@/db/schema/assets';
+import { requireActor } from '@/lib/auth/require-actor';
+import { config } from '@/lib/config';
+import type { Context } from '@/lib/context';
+import type { ImportPreparation } from '@/lib/rules/import-answer';
+import type { ImportPreparationInput } from '@/lib/rules/inputs/preview-import';
+import { getShowAccess } from '@/lib/shows/get-show-access';
+import { CAGE_EXTENSIONS } from './cage-formats';
+
+/** What the import page has to know before anything goes up: how names are read, what the show has, and every limit. */
+export async function getImportPreparation(context: Context, input: ImportPreparationInput): Promise<ImportPreparation> {
+  const { actor } = requireActor(context);
+  const { show } = await getShowAccess(context.db, actor, input.show, 'importCages');
+  const known = await context.db
+    .select({ asset: assets.code, category: assets.category, versions: sql<number[] | null>`array_agg(${assetVersions.number}) filter (where ${assetVersions.id} is not null)` })
+    .from(assets)
+    .leftJoin(assetVersions, eq(assetVersions.assetId, assets.id))
+    .where(eq(assets.showId, show.id))
+    .groupBy(assets.id);
+  const { maxFileBytes, maxImportFiles } = config();
+  return {
+    show: show.code,
+    name_pattern: show.namePattern,
+    scheme: show.scheme,
+    boundary: show.boundary,
+    parts_by: show.partsBy,
+    linear_unit: show.linearUnit,
+    up_axis: show.upAxis,
+    frozen: show.frozenAt !== null,
+    extensions: CAGE_EXTENSIONS,
+    max_file_bytes: maxFileBytes,
+    max_files: maxImportFiles,
+    assets: known.map((one) => ({ ...one, versions: one.versions ?? [] })),
+  };
+}
