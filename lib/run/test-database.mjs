@@ -5,6 +5,22 @@ import { isAlive, withLock } from './support/file-lock.mjs';
 import { inRoot } from './support/paths.mjs';
 import { runMain } from './support/stop.mjs';
 
+const MOST_TEMPLATES = 3;
+
+/** Drops what runs that were killed have left, and templates of schemas that are no more. */
+async function dropLeftovers(url) {
+  const { Client } = (await import('pg')).default;
+  const client = new Client({ connectionString: url });
+  await client.connect();
+  try {
+    const { rows } = await client.query(`select datname from pg_database where datname ~ '^(wht_|whb_|whtemplate_)' order by oid`);
+    const templates = rows.filter(({ datname }) => datname.startsWith('whtemplate_')).slice(-MOST_TEMPLATES);
+    for (const row of rows) if (!templates.includes(row)) await client.query(`drop database "${row.datname}" with (force)`);
+  } finally {
+    await client.end();
+  }
+}
+
 /**
  * The throw-away cluster that test runs share: `test-database.mjs use PID [FOLDER]` starts it on demand and prints its
  * addresses as JSON, `leave PID [FOLDER]` stops it after its last user.
@@ -20,18 +36,15 @@ async function testDatabase() {
       secretsFolder: folder,
       throwAway: true,
     });
+    const living = () => readdirSync(users).filter((user) => isAlive(Number(user)) || rmSync(path.join(users, user), { force: true }));
     if (verb === 'use') {
+      if (living().length === 0) await dropLeftovers(superuserUrl);
       writeFileSync(path.join(users, pid), '');
       console.log(JSON.stringify({ superuserUrl, ownerUrl, appUrl }));
       return;
     }
     rmSync(path.join(users, pid), { force: true });
-    const living = readdirSync(users).filter((user) => {
-      if (isAlive(Number(user))) return true;
-      rmSync(path.join(users, user), { force: true });
-      return false;
-    });
-    if (living.length === 0) await stop();
+    if (living().length === 0) await stop();
   });
 }
 
