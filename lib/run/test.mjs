@@ -104,6 +104,8 @@ await runMain(async () => {
     await test();
   } finally {
     if (!isEnding) await end();
+    // Somebody stopped the run: that ends the process, and there is nothing to count.
+    else await new Promise(() => undefined);
   }
   console.log(`${counts.passed} passed, ${counts.failed} failed`);
   return counts.failed === 0 ? 0 : 1;
