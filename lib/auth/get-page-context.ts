@@ -1,6 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import { headers } from 'next/headers';
-import { redirect } from 'next/navigation';
+import { notFound, redirect } from 'next/navigation';
 import { cache } from 'react';
 import { database } from '@/db/client';
 import type { ActorContext, Context } from '@/lib/context';
@@ -20,4 +20,11 @@ export async function getPageContext(): Promise<ActorContext> {
   if (context.actor) return { ...context, actor: context.actor };
   const back = safePath((await headers()).get(PATH_HEADER));
   redirect(`/sign-in?callbackUrl=${encodeURIComponent(back)}`);
+}
+
+/** The context of a page for admins; to everybody else it is an address where nothing is. */
+export async function getAdminPageContext(): Promise<ActorContext> {
+  const context = await getPageContext();
+  if (!context.actor.isAdmin) notFound();
+  return context;
 }

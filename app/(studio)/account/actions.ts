@@ -1,0 +1,13 @@
+'use server';
+
+import { action } from '@/lib/endpoint';
+import { addTokenInput } from '@/lib/rules/inputs/add-token';
+import { changePasswordInput } from '@/lib/rules/inputs/change-password';
+import { revokeTokenInput } from '@/lib/rules/inputs/revoke-token';
+import { addToken } from '@/lib/tokens/add-token';
+import { revokeToken } from '@/lib/tokens/revoke-token';
+import { changePassword } from '@/lib/users/change-password';
+
+export const addTokenAction = action(addTokenInput, addToken);
+export const revokeTokenAction = action(revokeTokenInput, revokeToken);
+export const changePasswordAction = action(changePasswordInput, changePassword);

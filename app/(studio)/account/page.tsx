@@ -1,0 +1,36 @@
+import type { Metadata } from 'next';
+import { ChangePasswordForm } from '@/components/account/change-password-form';
+import { NewToken } from '@/components/account/new-token';
+import { ThemeChoice } from '@/components/account/theme-choice';
+import { TokenList } from '@/components/account/token-list';
+import { Section } from '@/components/forms/section';
+import { PageHeading } from '@/components/shell/page-heading';
+import { getPageContext } from '@/lib/auth/get-page-context';
+import { listTokens } from '@/lib/tokens/list-tokens';
+import { addTokenAction, changePasswordAction, revokeTokenAction } from './actions';
+
+export const metadata: Metadata = { title: 'Account' };
+
+export default async function AccountPage() {
+  const context = await getPageContext();
+  const tokens = await listTokens(context);
+  return (
+    <>
+      <PageHeading title={context.actor.name} measure={<p className="text-14 text-ink-2">{context.actor.email}</p>} />
+      <div className="grid gap-x-14 gap-y-10 px-4 py-6 md:px-6 xl:grid-cols-[minmax(0,48rem)_minmax(0,1fr)]">
+        <Section title="Tokens for scripts">
+          <NewToken send={addTokenAction} />
+          <TokenList tokens={tokens} revoke={revokeTokenAction} />
+        </Section>
+        <div className="flex flex-col gap-10">
+          <Section title="Password">
+            <ChangePasswordForm email={context.actor.email} send={changePasswordAction} />
+          </Section>
+          <Section title="Theme">
+            <ThemeChoice />
+          </Section>
+        </div>
+      </div>
+    </>
+  );
+}
