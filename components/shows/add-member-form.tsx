@@ -33,7 +33,12 @@ export function AddMemberForm({ show, send }: AddMemberFormProps) {
     schema: formSchema,
     defaultValues: { email: '', role: 'artist' as Role, shots: '', assets: '' },
     send: ({ email, role, shots, assets }) =>
-      send({ show, email, role, ...(role === 'guest' ? { shots: splitWords(shots), assets: splitWords(assets) } : {}) }),
+      send({
+        show,
+        email,
+        role,
+        ...(role === 'guest' ? { shots: splitWords(shots), assets: splitWords(assets) } : {}),
+      }),
     onDone: (member) => {
       toast(member.invited ? `An invitation to ${member.email} is on its way` : `${member.name} is in the show`);
       form.reset();

@@ -31,7 +31,11 @@ export function ArchiveShow({ show, send }: ArchiveShowProps) {
   return (
     <section aria-labelledby="archive-heading" className="flex flex-col items-start gap-3 border-t border-rule pt-5">
       <h2 id="archive-heading">Archive</h2>
-      <p className="text-14 text-ink-2">{show.archived ? 'This show is archived: everything can be read and exported, nothing changed.' : 'At wrap: everything can still be read and exported, nothing changed.'}</p>
+      <p className="text-14 text-ink-2">
+        {show.archived
+          ? 'This show is archived: everything can be read and exported, nothing changed.'
+          : 'At wrap: everything can still be read and exported, nothing changed.'}
+      </p>
       {show.archived ? (
         <Button disabled={busy} onClick={() => run(false)}>
           Bring the show back
@@ -39,7 +43,14 @@ export function ArchiveShow({ show, send }: ArchiveShowProps) {
       ) : (
         <Button onClick={() => setAsks(true)}>Archive the show</Button>
       )}
-      <ConfirmDialog open={asks} onOpenChange={setAsks} title={`Archive ${show.code}`} act="Archive" busy={busy} onConfirm={() => run(true)}>
+      <ConfirmDialog
+        open={asks}
+        onOpenChange={setAsks}
+        title={`Archive ${show.code}`}
+        act="Archive"
+        busy={busy}
+        onConfirm={() => run(true)}
+      >
         Nobody can import, set masses or change people until it is brought back here.
       </ConfirmDialog>
     </section>

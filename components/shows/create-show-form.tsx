@@ -52,7 +52,11 @@ export function CreateShowForm({
     },
     send: (input) => {
       const leads = splitWords(input.leads);
-      return send({ ...input, leads, self_approval: input.self_approval && leads.length <= 1 } satisfies CreateShowInput);
+      return send({
+        ...input,
+        leads,
+        self_approval: input.self_approval && leads.length <= 1,
+      } satisfies CreateShowInput);
     },
     onDone: ({ code }) => router.push(`/shows/${encodeURIComponent(code)}`),
   });

@@ -76,10 +76,16 @@ export function MemberTable({ show, members, mayEdit, setMember, removeMember }:
               <TableCell className="max-w-72 py-2 pl-0">
                 <span className="block truncate">
                   {member.name}
-                  {member.state === 'active' ? null : <span className="ml-2 text-13 text-ink-3">{member.state === 'invited' ? 'invited' : 'may not sign in'}</span>}
+                  {member.state === 'active' ? null : (
+                    <span className="ml-2 text-13 text-ink-3">
+                      {member.state === 'invited' ? 'invited' : 'may not sign in'}
+                    </span>
+                  )}
                 </span>
                 <span className="block truncate text-13 text-ink-3">{member.email}</span>
-                {member.role === 'guest' ? <span className="block truncate text-13 text-ink-2">{limitsOf(member)}</span> : null}
+                {member.role === 'guest' ? (
+                  <span className="block truncate text-13 text-ink-2">{limitsOf(member)}</span>
+                ) : null}
               </TableCell>
               <TableCell>
                 {mayEdit ? (
@@ -88,7 +94,12 @@ export function MemberTable({ show, members, mayEdit, setMember, removeMember }:
                     options={roles}
                     value={member.role}
                     disabled={busy}
-                    onValueChange={(role) => run(() => setMember({ show, email: member.email, role: role as Role }), `${member.name} is ${ROLE_NAMES[role as Role]} now`)}
+                    onValueChange={(role) =>
+                      run(
+                        () => setMember({ show, email: member.email, role: role as Role }),
+                        `${member.name} is ${ROLE_NAMES[role as Role]} now`,
+                      )
+                    }
                     className="w-44"
                   />
                 ) : (
@@ -98,11 +109,21 @@ export function MemberTable({ show, members, mayEdit, setMember, removeMember }:
               {mayEdit ? (
                 <TableCell className="pr-0 text-right">
                   {member.role === 'guest' ? (
-                    <Button size="small" look="quiet" onClick={() => setLimited(member)} aria-label={`What ${member.name} may see`}>
+                    <Button
+                      size="small"
+                      look="quiet"
+                      onClick={() => setLimited(member)}
+                      aria-label={`What ${member.name} may see`}
+                    >
                       May see
                     </Button>
                   ) : null}
-                  <Button size="small" look="quiet" onClick={() => setLeaving(member)} aria-label={`Remove ${member.name}`}>
+                  <Button
+                    size="small"
+                    look="quiet"
+                    onClick={() => setLeaving(member)}
+                    aria-label={`Remove ${member.name}`}
+                  >
                     Remove
                   </Button>
                 </TableCell>
@@ -118,7 +139,13 @@ export function MemberTable({ show, members, mayEdit, setMember, removeMember }:
           title={`Remove ${leaving.name}`}
           act="Remove"
           busy={busy}
-          onConfirm={() => run(() => removeMember({ show, email: leaving.email }), `${leaving.name} is out of the show`, () => setLeaving(null))}
+          onConfirm={() =>
+            run(
+              () => removeMember({ show, email: leaving.email }),
+              `${leaving.name} is out of the show`,
+              () => setLeaving(null),
+            )
+          }
         >
           They no longer find this show. What they did in it stands.
         </ConfirmDialog>
@@ -129,7 +156,13 @@ export function MemberTable({ show, members, mayEdit, setMember, removeMember }:
           member={limited}
           busy={busy}
           onClose={() => setLimited(null)}
-          onSave={(limits) => run(() => setMember({ show, email: limited.email, role: 'guest', ...limits }), `${limited.name} sees what is named now`, () => setLimited(null))}
+          onSave={(limits) =>
+            run(
+              () => setMember({ show, email: limited.email, role: 'guest', ...limits }),
+              `${limited.name} sees what is named now`,
+              () => setLimited(null),
+            )
+          }
         />
       )}
     </>

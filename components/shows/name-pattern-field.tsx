@@ -8,7 +8,12 @@ import { TextArea } from '@/components/ui/text-area';
 import { checkNamePattern, readName } from '@/lib/rules/name-pattern';
 import { CATEGORY_WORDS } from '@/lib/rules/states';
 
-const SAMPLES = ['creatures/tarnOx/tarnOx_v012.obj', 'props/sledge/v003/sledge.obj', 'props/bucket.v2.obj', 'lantern.obj'];
+const SAMPLES = [
+  'creatures/tarnOx/tarnOx_v012.obj',
+  'props/sledge/v003/sledge.obj',
+  'props/bucket.v2.obj',
+  'lantern.obj',
+];
 
 interface NamePatternFieldProps {
   value: string;
@@ -22,7 +27,11 @@ export function NamePatternField({ value, onChange, error, disabled }: NamePatte
   const [samples, setSamples] = useState(SAMPLES.join('\n'));
   const pattern = value.trim();
   const wrong = pattern === '' ? null : checkNamePattern(pattern);
-  const names = samples.split('\n').map((line) => line.trim()).filter(Boolean).slice(0, 50);
+  const names = samples
+    .split('\n')
+    .map((line) => line.trim())
+    .filter(Boolean)
+    .slice(0, 50);
   return (
     <div className="flex flex-col gap-4">
       <Field
@@ -30,10 +39,24 @@ export function NamePatternField({ value, onChange, error, disabled }: NamePatte
         hint="{asset}, {version} and {category} stand for what is read, * for anything within a folder’s name; matched against the end of the path. Empty: the built-in rule."
         error={wrong ?? error}
       >
-        <Input className="font-mono" spellCheck={false} autoComplete="off" value={value} onChange={(event) => onChange(event.target.value)} disabled={disabled} placeholder="{category}/{asset}_v{version}" />
+        <Input
+          className="font-mono"
+          spellCheck={false}
+          autoComplete="off"
+          value={value}
+          onChange={(event) => onChange(event.target.value)}
+          disabled={disabled}
+          placeholder="{category}/{asset}_v{version}"
+        />
       </Field>
       <Field label="Names to try it on">
-        <TextArea rows={4} className="font-mono text-13" spellCheck={false} value={samples} onChange={(event) => setSamples(event.target.value)} />
+        <TextArea
+          rows={4}
+          className="font-mono text-13"
+          spellCheck={false}
+          value={samples}
+          onChange={(event) => setSamples(event.target.value)}
+        />
       </Field>
       {wrong !== null || names.length === 0 ? null : (
         <div aria-live="polite">
@@ -71,7 +94,9 @@ function SampleRow({ name, pattern }: { name: string; pattern: string | null }) 
         <>
           <TableCell className="font-mono text-13">{read.asset}</TableCell>
           <TableCell>{CATEGORY_WORDS[read.category]}</TableCell>
-          <TableCell className="font-mono text-13">{read.version ?? <span className="font-sans text-ink-3">the next</span>}</TableCell>
+          <TableCell className="font-mono text-13">
+            {read.version ?? <span className="font-sans text-ink-3">the next</span>}
+          </TableCell>
         </>
       )}
     </TableRow>

@@ -14,7 +14,13 @@ import { Input } from '@/components/ui/input';
 import { useActionForm } from '@/hooks/use-action-form';
 import type { ActionResult } from '@/lib/rules/action-result';
 import { editShowInput } from '@/lib/rules/inputs/edit-show';
-import { BOUNDARY_WORDS, PARTITION_WORDS, type BoundaryWord, type PartitionWord, type SchemeWord } from '@/lib/rules/measure-words';
+import {
+  BOUNDARY_WORDS,
+  PARTITION_WORDS,
+  type BoundaryWord,
+  type PartitionWord,
+  type SchemeWord,
+} from '@/lib/rules/measure-words';
 import { BOUNDARY_NAMES, PARTITION_NAMES, UNIT_NAMES, UP_AXIS_NAMES } from '@/lib/rules/show-words';
 import { LINEAR_UNITS, UP_AXES, type LinearUnit, type UpAxis } from '@/lib/rules/units';
 import { wordsToOptions } from '@/lib/rules/words-to-options';
@@ -71,10 +77,33 @@ export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps)
       </Field>
       <fieldset className="grid gap-x-5 gap-y-3 sm:grid-cols-3">
         <legend className="mb-2 text-16 font-medium">Space</legend>
-        <SelectField control={control} name="linear_unit" label="Unit of the cages" options={wordsToOptions(LINEAR_UNITS, UNIT_NAMES)} disabled={locked || frozen} error={errorOf('linear_unit')} />
-        <SelectField control={control} name="up_axis" label="Up axis" options={wordsToOptions(UP_AXES, UP_AXIS_NAMES)} disabled={locked || frozen} error={errorOf('up_axis')} />
-        <SelectField control={control} name="scheme" label="Scheme" options={schemeOptions(more, scheme)} disabled={locked || frozen} error={errorOf('scheme')} />
-        <p className="text-13 text-ink-3 sm:col-span-2">{frozen ? 'Fixed since the first import.' : 'They stay as they are from the first import on.'}</p>
+        <SelectField
+          control={control}
+          name="linear_unit"
+          label="Unit of the cages"
+          options={wordsToOptions(LINEAR_UNITS, UNIT_NAMES)}
+          disabled={locked || frozen}
+          error={errorOf('linear_unit')}
+        />
+        <SelectField
+          control={control}
+          name="up_axis"
+          label="Up axis"
+          options={wordsToOptions(UP_AXES, UP_AXIS_NAMES)}
+          disabled={locked || frozen}
+          error={errorOf('up_axis')}
+        />
+        <SelectField
+          control={control}
+          name="scheme"
+          label="Scheme"
+          options={schemeOptions(more, scheme)}
+          disabled={locked || frozen}
+          error={errorOf('scheme')}
+        />
+        <p className="text-13 text-ink-3 sm:col-span-2">
+          {frozen ? 'Fixed since the first import.' : 'They stay as they are from the first import on.'}
+        </p>
         {more || locked || frozen ? null : (
           <Button look="quiet" size="small" className="-mt-1 justify-self-start" onClick={() => setMore(true)}>
             More schemes
@@ -83,19 +112,46 @@ export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps)
       </fieldset>
       <fieldset className="grid gap-x-5 gap-y-4 sm:grid-cols-2">
         <legend className="mb-2 text-16 font-medium">Imports from now on</legend>
-        <SelectField control={control} name="boundary" label="Open borders of a cage" options={wordsToOptions(BOUNDARY_WORDS, BOUNDARY_NAMES)} disabled={locked} error={errorOf('boundary')} />
-        <SelectField control={control} name="parts_by" label="A part is" options={wordsToOptions(PARTITION_WORDS, PARTITION_NAMES)} disabled={locked} error={errorOf('parts_by')} />
+        <SelectField
+          control={control}
+          name="boundary"
+          label="Open borders of a cage"
+          options={wordsToOptions(BOUNDARY_WORDS, BOUNDARY_NAMES)}
+          disabled={locked}
+          error={errorOf('boundary')}
+        />
+        <SelectField
+          control={control}
+          name="parts_by"
+          label="A part is"
+          options={wordsToOptions(PARTITION_WORDS, PARTITION_NAMES)}
+          disabled={locked}
+          error={errorOf('parts_by')}
+        />
         <div className="sm:col-span-2">
           <Controller
             control={control}
             name="name_pattern"
-            render={({ field }) => <NamePatternField value={field.value ?? ''} onChange={field.onChange} error={errorOf('name_pattern')} disabled={locked} />}
+            render={({ field }) => (
+              <NamePatternField
+                value={field.value ?? ''}
+                onChange={field.onChange}
+                error={errorOf('name_pattern')}
+                disabled={locked}
+              />
+            )}
           />
         </div>
       </fieldset>
       <fieldset>
         <legend className="mb-2 text-16 font-medium">Approval</legend>
-        <CheckField control={control} name="self_approval" label="Values may be approved by whoever set them" hint="Otherwise somebody else has to approve." disabled={locked} />
+        <CheckField
+          control={control}
+          name="self_approval"
+          label="Values may be approved by whoever set them"
+          hint="Otherwise somebody else has to approve."
+          disabled={locked}
+        />
       </fieldset>
       <FormRefusal>{refusal}</FormRefusal>
       {locked ? null : (
