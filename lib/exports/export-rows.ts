@@ -4,7 +4,7 @@ import { fileStream } from '@/lib/http/file-stream';
 import { matchesEtag } from '@/lib/http/matches-etag';
 import type { ExportRowsInput } from '@/lib/rules/inputs/export-rows';
 import { getShowAccess } from '@/lib/shows/get-show-access';
-import { forgetExport } from './export-cache';
+import { exportCache } from './export-cache';
 import { EXPORT_WRITERS, type ExportFormat } from './export-formats';
 import { selectionText } from './export-selection';
 import { makeExport } from './make-export';
@@ -26,7 +26,7 @@ export function exportRowsAs(format: ExportFormat) {
     const send = (path: string) => fileStream(path, () => writeReceipt(db, actor, handOff));
     const body = await send(file.path).catch(async () => {
       // Somebody emptied the cache folder: make the file again.
-      forgetExport(file.key);
+      exportCache.forget(file.key);
       return send((await makeExport(db, show, format, input)).path);
     });
     return new Response(body, {

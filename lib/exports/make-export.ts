@@ -3,7 +3,7 @@ import { eq } from 'drizzle-orm';
 import type { Database, Executor } from '@/db/client';
 import { shows } from '@/db/schema/shows';
 import { CSV_SCHEMA } from '@/lib/rules/csv-columns';
-import { findExport, keepExport, type ExportFile } from './export-cache';
+import { exportCache, spoolExport, type ExportFile } from './export-cache';
 import { EXPORT_WRITERS, type ExportFormat } from './export-formats';
 import { exportPages } from './export-pages';
 import { selectionText, type ExportSelection } from './export-selection';
@@ -15,13 +15,13 @@ import { selectionText, type ExportSelection } from './export-selection';
  */
 export async function makeExport(db: Database, show: { id: string; code: string }, format: ExportFormat, selection: ExportSelection): Promise<ExportFile & { key: string }> {
   const now = exportKey(show.id, await showRevision(db, show.id), format, selection);
-  const ready = findExport(now);
+  const ready = exportCache.find(now);
   if (ready) return { ...ready, key: now };
   return db.transaction(
     async (tx) => {
       const key = exportKey(show.id, await showRevision(tx, show.id), format, selection);
       const writer = EXPORT_WRITERS[format];
-      const file = await keepExport(key, async (put) => {
+      const write = async (put: (text: string) => Promise<void>): Promise<number> => {
         let rows = 0;
         await put(writer.head(show.code));
         for await (const page of exportPages(tx, show, selection)) {
@@ -30,7 +30,8 @@ export async function makeExport(db: Database, show: { id: string; code: string 
         }
         await put(writer.tail);
         return rows;
-      });
+      };
+      const file = await exportCache.keep(key, (path) => spoolExport(path, write));
       return { ...file, key };
     },
     { isolationLevel: 'repeatable read', accessMode: 'read only' },

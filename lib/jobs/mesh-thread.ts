@@ -1,0 +1,29 @@
+import { createHash } from 'node:crypto';
+import { writeFile } from 'node:fs/promises';
+import { displayMesh } from '@/lib/engine/display';
+import type { MeasureOptions } from '@/lib/engine/measured';
+import { assetGlb } from '@/lib/exports/asset-glb';
+import { readCage } from '@/lib/imports/cage-formats';
+import { readBlob } from '@/lib/storage/read-blob';
+
+export interface MeshTask {
+  /** Name of the cage's file, for its format, and the hash of its bytes. */
+  name: string;
+  sha256: string;
+  options: MeasureOptions;
+  /** Refinements of the limit surface. */
+  level: number;
+  /** Metres per file unit at the asset's scale. */
+  metresPerUnit: number;
+  /** Where the GLB goes. */
+  path: string;
+}
+
+/** Makes the display mesh of a stored cage as a GLB file; answers hash and size of its bytes. */
+export default async function makeMesh(task: MeshTask): Promise<{ sha256: string; byteSize: number }> {
+  const cage = await readCage(task.name, await readBlob(task.sha256));
+  const mesh = displayMesh(cage, task.options, task.level);
+  const bytes = await assetGlb(cage, mesh, task.options.partsBy, task.metresPerUnit);
+  await writeFile(task.path, bytes);
+  return { sha256: createHash('sha256').update(bytes).digest('hex'), byteSize: bytes.byteLength };
+}
