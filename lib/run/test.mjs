@@ -82,7 +82,7 @@ async function test() {
   // Two lanes for two processors. The types are checked before the build, which writes into what the check reads.
   await Promise.all([
     step('type check', () => typecheck(env)).then(() => step('production build', () => build(env))),
-    step('tests in Node', () => vitest(env)).then(() => step('lint', () => node(env, [inModules('eslint/bin/eslint.js'), '--max-warnings=0', '.']))),
+    step('tests in Node', () => vitest(env)).then(() => step('lint', () => node(env, [inModules('eslint/bin/eslint.js'), '--max-warnings=0', '--cache', '--cache-strategy=content', `--cache-location=${inRoot('dist/eslint.json')}`, '.']))),
   ]);
   if (existsSync(inRoot('tests/browser'))) await step('tests in the browser', () => playwright(env));
 }
