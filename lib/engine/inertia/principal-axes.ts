@@ -36,10 +36,10 @@ export function principalAxes(inertia: Six, freeGap: number = FREE_AXES_GAP): Pr
     axis3 = [0, 0, 1];
   } else if (free12) {
     freeAxes = '12';
-    axis1 = nearestAxisAcross(axis3);
+    axis1 = nearestAxisAcross(axis3, [0, 1, 2]);
   } else if (free23) {
     freeAxes = '23';
-    axis3 = nearestAxisAcross(axis1);
+    axis3 = nearestAxisAcross(axis1, [2, 1, 0]);
   }
   axis1 = largestPositive(axis1);
   axis3 = largestPositive(axis3);
@@ -47,10 +47,10 @@ export function principalAxes(inertia: Six, freeGap: number = FREE_AXES_GAP): Pr
   return { principal: [values[0], values[1], values[2]], quatWxyz: quaternionOf(axis1, axis2, axis3), axes: [axis1, axis2, axis3], freeAxes };
 }
 
-/** The asset's axis that leans least on `axis`, laid into the plane across it. */
-function nearestAxisAcross(axis: Three): Three {
-  let best = 0;
-  for (let i = 1; i < 3; i++) if (Math.abs(axis[i]) < Math.abs(axis[best])) best = i;
+/** The asset's axis that leans least on `axis` (the first in `order` where several do alike), laid into the plane across it. */
+function nearestAxisAcross(axis: Three, order: readonly number[]): Three {
+  let best = order[0];
+  for (const i of order) if (Math.abs(axis[i]) < Math.abs(axis[best])) best = i;
   const laid: Three = [0, 0, 0];
   for (let i = 0; i < 3; i++) laid[i] = (i === best ? 1 : 0) - axis[best] * axis[i];
   const size = Math.sqrt(laid[0] * laid[0] + laid[1] * laid[1] + laid[2] * laid[2]);
