@@ -1,8 +1,10 @@
-import { closeOpenStreams } from '@/lib/imports/open-streams';
-
-/** Runs once when the server starts: open event streams are closed when it is told to end, or it would wait for their readers. */
-export function register(): void {
-  if (typeof process.once !== 'function') return;
-  process.once('SIGTERM', closeOpenStreams);
-  process.once('SIGINT', closeOpenStreams);
+/**
+ * Runs once when the server starts. Open event streams are closed when it is told to end, or it would wait for their
+ * readers. NEXT_RUNTIME is no setting: the build puts it in, so that the other runtime never sees Node's signals.
+ */
+export async function register(): Promise<void> {
+  if (process.env.NEXT_RUNTIME === 'nodejs') {
+    const { closeStreamsAtEnd } = await import('@/lib/http/close-streams-at-end');
+    closeStreamsAtEnd();
+  }
 }
