@@ -5,9 +5,11 @@ import { requireActor } from '@/lib/auth/require-actor';
 import type { ActorContext, Context } from '@/lib/context';
 import { recordEvent, type ChangedField } from '@/lib/history/record-event';
 import { findMaterials } from '@/lib/materials/find-materials';
+import { assetTotals } from '@/lib/parts/asset-totals';
+import { partCounts } from '@/lib/parts/part-counts';
 import { partRowsById } from '@/lib/parts/part-rows-by-id';
 import type { SetValuesInput, SetValuesItem } from '@/lib/rules/inputs/set-values';
-import type { PartRow } from '@/lib/rules/part-row';
+import type { AssetTotal, PartCounts, PartRow } from '@/lib/rules/part-row';
 import { StudioError } from '@/lib/rules/studio-error';
 import { getShowAccess } from '@/lib/shows/get-show-access';
 import { loadValueInputs, type LoadedPart } from '@/lib/values/load-value-inputs';
@@ -20,13 +22,23 @@ import { insertSettings } from './insert-settings';
 import { mergeSetting, settingChanges } from './merge-setting';
 import { changedMeanwhile } from './changed-meanwhile';
 
+/** Totals of more assets than these are left to the next reading of the list. */
+const MOST_TOTALS = 40;
+
+/** The rows as they are after the call; where few assets are concerned, their totals and the show's counts too. */
+export interface SetValuesAnswer {
+  items: PartRow[];
+  assets?: AssetTotal[];
+  counts?: PartCounts;
+}
+
 /**
  * Sets what parts' masses come from, in bulk: all items or none. Each item carries the revision of the row as it was read;
  * a row that changed since is a conflict, listed with the row as it is now. An item that changes nothing writes nothing.
  * Answers the rows as they are after the call, in the order of the items.
  * Errors: bad_input (unknown part or material, named per item), conflict (`changed_meanwhile` per item), not_found, forbidden, frozen.
  */
-export async function setValues(context: Context, input: SetValuesInput): Promise<{ items: PartRow[] }> {
+export async function setValues(context: Context, input: SetValuesInput): Promise<SetValuesAnswer> {
   const acting = requireActor(context);
   const { show } = await getShowAccess(acting.db, acting.actor, input.show, 'setValues');
   return acting.db.transaction(async (tx) => {
@@ -44,7 +56,10 @@ export async function setValues(context: Context, input: SetValuesInput): Promis
     const parts = found.filter((part): part is ItemPart => part !== null);
     const changed = await applyItems(tx, acting, { showId: show.id, revision: revision + 1, now, items: input.items, parts, materials });
     if (changed > 0) await tx.update(shows).set({ revision: revision + 1 }).where(eq(shows.id, show.id));
-    return { items: await partRowsById(tx, show.code, parts.map((part) => part.partId)) };
+    const items = await partRowsById(tx, show.code, parts.map((part) => part.partId));
+    const assetIds = [...new Set(parts.map((part) => part.assetId))];
+    if (assetIds.length > MOST_TOTALS) return { items };
+    return { items, assets: await assetTotals(tx, assetIds), counts: await partCounts(tx, show.id) };
   });
 }
 

@@ -68,14 +68,16 @@ export interface PutOptions {
   scale?: number;
   version?: number;
   options?: Partial<MeasureOptions>;
+  /** Hash of the bytes that the cage is in, where they are stored. */
+  contentSha256?: string;
 }
 
 /** Measures a cage as a polyhedron and makes it a version of the asset (the next one unless said), as an import does. Answers the asset's id. */
-export async function putCage(show: { id: string }, by: { id: string }, asset: string, parts: readonly TestPart[], { category = 'prop', scale, version, options }: PutOptions = {}): Promise<string> {
+export async function putCage(show: { id: string }, by: { id: string }, asset: string, parts: readonly TestPart[], { category = 'prop', scale, version, options, contentSha256 }: PutOptions = {}): Promise<string> {
   const cage = cageOf(parts);
   const measure = { ...POLYHEDRAL, ...options };
   const measured = measureCage(cage, measure);
-  const sha256 = createHash('sha256').update(JSON.stringify(parts)).digest('hex');
+  const sha256 = contentSha256 ?? createHash('sha256').update(JSON.stringify(parts)).digest('hex');
   return database().transaction(async (tx) => {
     await tx.insert(assets).values({ showId: show.id, code: asset, category, scale }).onConflictDoNothing();
     const [row] = await tx.select().from(assets).where(and(eq(assets.showId, show.id), eq(assets.code, asset)));
