@@ -26,7 +26,7 @@ export function bell(): CageDraft {
   for (let i = 0; i < 4; i++) {
     const angle = (Math.PI / 2) * i;
     const at = (r: number, y: number): Vec => [r * Math.cos(angle), y, r * Math.sin(angle)];
-    layRope(draft, 'crown', [at(6.4, 103.4), at(10.5, 107), at(11.2, 113), at(7, 118), at(4, 119.6)], { radius: [1.9, 1.8, 1.8, 1.8, 2], sides: 8, hint: [Math.sin(angle), 0, -Math.cos(angle)] });
+    layRope(draft, 'crown', [at(6.2, 105.4), at(8, 108), at(11, 111.4), at(9.6, 115.4), at(4.8, 117.4)], { radius: [1.9, 1.8, 1.8, 1.8, 2], sides: 8, hint: [Math.sin(angle), 0, -Math.cos(angle)] });
   }
   layBar(draft, 'headstock', [-62, 127, 0], [62, 127, 0], UP, [14.4, 16]);
   return draft;

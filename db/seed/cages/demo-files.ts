@@ -49,7 +49,7 @@ function nameMissingVertex(text: string): string {
 const VERSIONS: readonly DemoVersion[] = [
   { asset: 'tarnOx', category: 'creature', version: 11, draft: () => ox({ ...GROWN, horns: 0.82 }) },
   { asset: 'tarnOx', category: 'creature', version: 12, draft: () => ox(GROWN) },
-  { asset: 'tarnOx', category: 'creature', version: 13, draft: () => ox({ ...GROWN, hump: 17 }) },
+  { asset: 'tarnOx', category: 'creature', version: 13, draft: () => ox({ ...GROWN, hump: 20.5 }) },
   { asset: 'oxCalf', category: 'creature', version: 4, draft: () => ox({ hump: 0, horns: 0.22, legs: 1.22, size: 0.58 }) },
   { asset: 'bellToad', category: 'creature', version: 6, draft: () => toad(0.9) },
   { asset: 'bellToad', category: 'creature', version: 7, draft: () => toad(1.04) },

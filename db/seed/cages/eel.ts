@@ -68,7 +68,7 @@ function layCrown(draft: CageDraft): void {
       const angle = (-2 * Math.PI * i) / (2 * points);
       const peak = height === 1 ? (i % 2 === 0 ? 9 : 3.5) : height * 4;
       const radius = 8.4 + peak * 0.22;
-      return [radius * Math.cos(angle), 35.2 + peak, 112 + radius * Math.sin(angle)];
+      return [radius * Math.cos(angle), 36.6 + peak, 112 + radius * Math.sin(angle)];
     }),
   );
   layPlate(draft, 'crown', rows, 0.8, { around: true, sharpRim: true });

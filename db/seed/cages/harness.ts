@@ -19,17 +19,17 @@ export function harness(): CageDraft {
     [[-62, 152, 60], [-58, 153, 60], [-38, 158, 60], [-16, 158, 60], [0, 157, 60], [16, 158, 60], [38, 158, 60], [58, 153, 60], [62, 152, 60]],
     { radius: [4, 4.6, 5, 4.8, 4.6, 4.8, 5, 4.6, 4], sides: 8, hint: [0, 1, 0] },
   );
-  layHoop(draft, 'girth', { centre: [0, 102.4, 0], axis: [0, 0, 1], hint: [1, 0, 0], radii: [37.6, 39.4], width: 9, thickness: LEATHER });
-  layPlate(draft, 'backStrap', strap(8, (i) => 7.2 - i * 0.82, [99, 93, 87, 81]), LEATHER, { sharpRim: true });
+  layHoop(draft, 'girth', { centre: [0, 102.4, 0], axis: [0, 0, 1], hint: [1, 0, 0], radii: [36, 38.6], width: 9, thickness: LEATHER });
+  layPlate(draft, 'backStrap', strap(8, (i) => 7.2 - i * 0.82, [99, 93, 87, 81], 3.6), LEATHER, { sharpRim: true });
   layBreeching(draft);
-  const trace: Vec[] = [[25, 112, 66], [33, 106, 45], [39.5, 100, 12], [40, 95, -20], [38, 90, -60], [37, 84, -100], [37, 80, -122]];
+  const trace: Vec[] = [[27.5, 112, 66], [35, 106, 45], [40, 100, 12], [42.5, 95, -20], [43, 90, -60], [42.5, 84, -100], [42, 80, -122]];
   layRope(draft, 'trace_L', trace, { radius: 1.6, sides: 8, hint: [0, 1, 0], flat: 0.5 });
   layRope(draft, 'trace_R', trace.map(([x, y, z]): Vec => [-x, y, z]), { radius: 1.6, sides: 8, hint: [0, 1, 0], flat: 0.5 });
   layHoop(draft, 'bridle', { centre: [0, 119.5, 139], axis: [0, -1, 1], hint: [1, 0, 0], radii: [11, 13.4], width: 4, thickness: 0.5 });
   return draft;
 
-  function strap(rows: number, row: (i: number) => number, angles: readonly number[]): Vec[][] {
-    return Array.from({ length: rows }, (_, i) => [...angles].map((angle) => pointOnTrunk(trunk, row(i), angle, 1.4)));
+  function strap(rows: number, row: (i: number) => number, angles: readonly number[], lift: number): Vec[][] {
+    return Array.from({ length: rows }, (_, i) => [...angles].map((angle) => pointOnTrunk(trunk, row(i), angle, lift)));
   }
 }
 

@@ -44,16 +44,19 @@ export function ox(build: OxBuild): CageDraft {
 
 /** Cross-sections from rump to muzzle; harness and barding lie on the same ones. */
 export function oxTrunk(height: number): TrunkStation[] {
-  const hump = (share: number) => ({ 6: [0, height * share], 5: [height * share * 0.1, height * share * 0.55] }) as const;
+  const hump = (share: number) => {
+    const rise = height * share;
+    return { 6: [0, rise], 5: [rise * 0.12, rise * 0.8], 4: [rise * 0.2, rise * 0.25] } as const;
+  };
   return [
-    { z: -97, y: 113, radii: [13, 17], part: 'torso', towards: [0.05, 1] },
-    { z: -88, y: 113, radii: [24, 28], part: 'torso', towards: [0.05, 1] },
-    { z: -68, y: 111, radii: [31, 33], part: 'torso', square: 1.1 },
-    { z: -46, y: 108, radii: [31, 32], part: 'torso' },
-    { z: -18, y: 103, radii: [35, 36], part: 'torso' },
-    { z: 10, y: 102, radii: [36, 38], part: 'torso', shift: hump(0.35) },
-    { z: 33, y: 105, radii: [31, 40], part: 'torso', shift: hump(1) },
-    { z: 56, y: 110, radii: [26, 36], part: 'torso', shift: hump(0.55) },
+    { z: -97, y: 113, radii: [12.5, 17], part: 'torso', towards: [0.05, 1] },
+    { z: -88, y: 113, radii: [23, 27], part: 'torso', towards: [0.05, 1] },
+    { z: -68, y: 112, radii: [29.5, 31.5], part: 'torso', square: 1.1 },
+    { z: -46, y: 109, radii: [29, 30], part: 'torso' },
+    { z: -18, y: 103.5, radii: [33, 34.5], part: 'torso', shift: hump(0.12) },
+    { z: 10, y: 102.5, radii: [34, 37], part: 'torso', shift: hump(0.55) },
+    { z: 33, y: 106, radii: [29.5, 39.5], part: 'torso', shift: hump(1) },
+    { z: 56, y: 111, radii: [25, 35.5], part: 'torso', shift: hump(0.6) },
     { z: 74, y: 118, radii: [18, 28], part: 'neck', towards: [0.45, 1] },
     { z: 91, y: 129, radii: [13.5, 22], part: 'neck', towards: [0.5, 1] },
     { z: 106, y: 138, radii: [12.5, 17], part: 'head', towards: [0.25, 1] },
@@ -78,7 +81,7 @@ function foreleg(): LimbStation[] {
     { at: [x, 13, 30.5], radii: [5.2, 5], part: 'foreshin_L' },
     { at: [x, 9, 32], radii: [5.2, 5], part: 'foreshin_L' },
     { at: [x, 7, 33], radii: [6.6, 6], part: 'forehoof_L' },
-    { at: [x, 0, 35], radii: [8.2, 7], part: 'forehoof_L', sharp: true },
+    { at: [x, 0, 35], radii: [8.2, 7], part: 'forehoof_L', towards: [0, -1, 0], sharp: true },
   ];
 }
 
@@ -94,7 +97,7 @@ function hindleg(): LimbStation[] {
     { at: [x, 14, -72.5], radii: [5.2, 5], part: 'shin_L' },
     { at: [x, 9, -70], radii: [5.2, 5], part: 'shin_L' },
     { at: [x, 7, -68.5], radii: [6.6, 6], part: 'hoof_L' },
-    { at: [x, 0, -66.5], radii: [8.2, 7], part: 'hoof_L', sharp: true },
+    { at: [x, 0, -66.5], radii: [8.2, 7], part: 'hoof_L', towards: [0, -1, 0], sharp: true },
   ];
 }
 

@@ -3,7 +3,7 @@ import { closeTrunk, layTrunk, nearEnd } from './half-tube';
 import { growLimb } from './rings';
 import { layRope } from './solids';
 
-/** A mill rat of half a metre. The lower hind legs are pieces of their own, set into the thighs as a puppet's are. */
+/** A mill rat of half a metre. The lower hind legs are pieces of their own, hung under the thighs as a puppet's are. */
 export function rat(): CageDraft {
   const draft = new CageDraft();
   const trunk = layTrunk(
@@ -71,8 +71,8 @@ export function rat(): CageDraft {
   layRope(
     draft,
     'shin_L',
-    [[8.8, 5, -7], [8.8, 4.4, -8.6], [8.8, 2.8, -12], [8.9, 1.4, -13.2], [9, 0.9, -10], [9.2, 0.7, -5.6], [9.3, 0.6, -2.4]],
-    { radius: [1, 1.25, 1.1, 1.05, 1.2, 1.4, 1], sides: 8, hint: [1, 0, 0], flat: 0.62 },
+    [[8.9, 3, -5.6], [8.9, 2.6, -8.2], [8.9, 2, -11.4], [8.9, 1.2, -12.8], [9, 0.9, -10], [9.2, 0.7, -5.6], [9.3, 0.6, -2.4]],
+    { radius: [0.9, 1.15, 1.05, 1.05, 1.2, 1.4, 1], sides: 8, hint: [1, 0, 0], flat: 0.6 },
   );
   draft.mirror();
   return draft;

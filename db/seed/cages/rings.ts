@@ -14,6 +14,8 @@ export interface LimbStation {
   at: Vec;
   radii: readonly [number, number];
   part: string;
+  /** Direction that the section faces, where the path's own would be wrong. */
+  towards?: Vec;
   /** A crisp edge all round, as at a hoof's sole. */
   sharp?: boolean;
 }
@@ -32,7 +34,7 @@ export function growLimb(draft: CageDraft, start: Ring, stations: readonly LimbS
   let previous = start;
   let turn: number | null = null;
   const rings = stations.map((station, i) => {
-    const direction = tangentAt(path, i + 1);
+    const direction = station.towards ?? tangentAt(path, i + 1);
     const [e1, e2] = crossFrame(direction, hint);
     turn ??= alignment(draft, start, path[0], e1, e2);
     const ring = ringOf(draft, station.at, e1, e2, station.radii, sides, turn);

@@ -23,7 +23,7 @@ export function lantern(): CageDraft {
     const at = (y: number, r: number): Vec => [r * Math.cos(angle), y, r * Math.sin(angle)];
     layRope(draft, 'pillars', [at(3.1, 7), at(8, 7.3), at(15, 7.3), at(20.1, 7)], { radius: 0.45, sides: 6, hint: [Math.sin(angle), 0, -Math.cos(angle)] });
   }
-  const ring = Array.from({ length: 12 }, (_, i): Vec => [3.6 * Math.cos((i * Math.PI) / 6), 32 + 3.6 * Math.sin((i * Math.PI) / 6), 0]);
+  const ring = Array.from({ length: 12 }, (_, i): Vec => [3.6 * Math.cos((i * Math.PI) / 6), 33.8 + 3.6 * Math.sin((i * Math.PI) / 6), 0]);
   layRope(draft, 'ring', ring, { radius: 0.4, sides: 6, hint: FORWARD, closed: true });
   return draft;
 }
@@ -90,10 +90,10 @@ export function sign(): CageDraft {
   const draft = new CageDraft();
   layBar(draft, 'post', [0, 0, 0], [0, 300, 0], [1, 0, 0], [14, 14]);
   layBar(draft, 'post', [7, 276, 0], [96, 276, 0], UP, [9, 9]);
-  layBar(draft, 'post', [7, 232, 0], [44, 271, 0], [0, 0, 1], [7, 7]);
+  layBar(draft, 'post', [10, 251, 0], [26, 267.4, 0], [0, 0, 1], [6, 6]);
   const z = 2.2;
-  layPlank(draft, 'board', [[18, 206, z], [88, 206, z], [88, 206, -z], [18, 206, -z], [14, 262, z], [92, 262, z], [92, 262, -z], [14, 262, -z]]);
-  for (const x of [28, 78]) layHoop(draft, 'board', { centre: [x, 267.5, 0], axis: [1, 0, 0], hint: UP, radii: [4.6, 3.4], width: 1.6, thickness: 0.7 });
+  layPlank(draft, 'board', [[34, 206, z], [90, 206, z], [90, 206, -z], [34, 206, -z], [31, 261, z], [93, 261, z], [93, 261, -z], [31, 261, -z]]);
+  for (const x of [42, 82]) layHoop(draft, 'board', { centre: [x, 266.2, 0], axis: [1, 0, 0], hint: UP, radii: [4.6, 3.4], width: 1.6, thickness: 0.7 });
   return draft;
 }
 
@@ -103,7 +103,7 @@ export function sledge(): CageDraft {
   for (let i = 0; i < 5; i++) layBar(draft, 'deck', [-40 + 20 * i, 34, -88], [-40 + 20 * i, 34, 78], UP, [3.5, 17.5]);
   for (const z of [-70, -4, 62]) {
     layBar(draft, 'deck', [-46, 29, z], [46, 29, z], UP, [6.4, 8]);
-    for (const x of [-40, 40]) layBar(draft, 'deck', [x, 10.2, z], [x, 25.8, z], [1, 0, 0], [8, 8]);
+    for (const x of [-40, 40]) layBar(draft, 'deck', [x, 11, z], [x, 25.8, z], [1, 0, 0], [8, 8]);
   }
   for (const x of [-40, 40]) {
     const path: Vec[] = [[x, 5.5, -104], [x, 5.5, -60], [x, 5.5, 0], [x, 5.5, 60], [x, 6.5, 88], [x, 13, 108], [x, 25, 121], [x, 38, 126]];
