@@ -3,7 +3,7 @@ import type { Frames } from './mesh/frames';
 import type { Bodies } from './mesh/partition';
 import type { Topology } from './mesh/topology';
 import type { CapAmounts } from './moments/caps';
-import { largestRuleDefect, solidErrorEstimate } from './moments/error-estimate';
+import { largestRuleDefect, solidErrorEstimate, surfaceErrorEstimate } from './moments/error-estimate';
 import type { Integrated } from './moments/integrate-limit';
 import { centralMoments, MOMENTS } from './moments/sums';
 
@@ -80,7 +80,7 @@ function makeComponent(body: number, faces: number, frames: Frames, limit: Integ
     cage,
     hollow: null,
     errorEstimate: solidErrorEstimate(moments[0], limit.solid.magnitudes[body], limit.closingError, MOMENTS * body, size, defect),
-    surfaceErrorEstimate: 2 ** -48,
+    surfaceErrorEstimate: surfaceErrorEstimate(area[0], limit.surfaceError[body]),
   };
 }
 

@@ -4,10 +4,10 @@ import { rebuildInertia } from '@/lib/engine/inertia/check-mass-frame';
 import { principalAxes } from '@/lib/engine/inertia/principal-axes';
 import { massProperties, mergeMassProperties, type MassInput, type MassProperties } from '@/lib/engine/mass-properties';
 import { measureCage } from '@/lib/engine/measure';
-import type { Six, Three } from '@/lib/engine/measured';
+import type { MeasureOptions, Six, Three } from '@/lib/engine/measured';
 import { cageOf, CATMULL_CLARK, moved, referenceCage } from '../support/engine-cages';
 
-const POLYHEDRAL = { ...CATMULL_CLARK, scheme: 'polyhedral' as const };
+const POLYHEDRAL: MeasureOptions = { ...CATMULL_CLARK, scheme: 'polyhedral' };
 
 function weigh(input: MassInput): MassProperties {
   const result = massProperties(input);

@@ -10,7 +10,7 @@ const ROUNDINGS = 16;
 /** Largest defect of the rules in use, so that a node or weight gone wrong shows in every estimate. */
 export function largestRuleDefect(): number {
   let worst = 0;
-  for (const count of [5, 6, 7]) {
+  for (const count of [3, 4, 5, 6, 7]) {
     const rule = gaussRule(count);
     worst = Math.max(worst, ruleDefect(rule.nodes, rule.weights));
   }
@@ -27,4 +27,9 @@ export function solidErrorEstimate(volume: number, magnitude: number, closingErr
   let closing = 0;
   for (let i = 0; i < MOMENTS; i++) closing = Math.max(closing, closingErrors[offset + i] / size ** (i === 0 ? 0 : i < 4 ? 1 : 2));
   return Math.min(1, (closing + (ROUNDINGS * UNIT_ROUNDOFF + 2 * defect) * magnitude) / v);
+}
+
+/** Relative error estimate of the surface moments: what rules and closings may be off by, plus rounding. */
+export function surfaceErrorEstimate(area: number, error: number): number {
+  return area > 0 ? Math.min(1, error / area + ROUNDINGS * UNIT_ROUNDOFF) : 1;
 }

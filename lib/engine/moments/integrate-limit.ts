@@ -3,13 +3,12 @@ import { findBorders } from '../mesh/border-loops';
 import type { Frames } from '../mesh/frames';
 import type { Bodies } from '../mesh/partition';
 import type { Topology } from '../mesh/topology';
-import { integrateCatmullClark, type LimitSums } from '../schemes/catmull-clark';
+import { integrateCatmullClark } from '../schemes/catmull-clark';
 import { levelZero } from '../schemes/level-mesh';
-import { BorderCurves } from './border-curves';
 import { addCaps, type CapAmounts } from './caps';
 import { curveTable } from './curve-table';
+import { emptySums, type LimitSums } from './limit-sums';
 import { addPolyhedralMoments } from './polyhedral';
-import { MOMENTS, MomentSums } from './sums';
 
 /** Moments of all bodies about their origins, caps not yet added. */
 export interface Integrated extends LimitSums {
@@ -45,8 +44,4 @@ export function integrateLimit(mesh: Topology, frames: Frames, bodies: Bodies, b
 export function capBodies(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array, integrated: Integrated): CapAmounts {
   const borders = findBorders(mesh, bodies.bodyOf, blocked);
   return addCaps(borders, curveTable(integrated.curves), frames.origins, integrated.solid, bodies.bodies);
-}
-
-function emptySums(bodies: number): LimitSums {
-  return { solid: new MomentSums(bodies), surface: new MomentSums(bodies), closingError: new Float64Array(MOMENTS * bodies), curves: new BorderCurves() };
 }

@@ -1,17 +1,7 @@
+import { netToPowers } from './bicubic-powers';
 import type { GaussRule } from './gauss-rule';
 
-/** Power coefficients of a patch in (u − ½)^i (v − ½)^j, as [(4 i + j) · 3 + axis]. */
 const powers = new Float64Array(48);
-
-/** Changes four B-spline control values, `stride` apart from `at` on, to powers of t − ½ in place. */
-function toPowers(values: Float64Array, at: number, stride: number): void {
-  const c0 = values[at], c1 = values[at + stride], c2 = values[at + 2 * stride], c3 = values[at + 3 * stride];
-  const s0 = c0 + c3, s1 = c1 + c2, d0 = c3 - c0, d1 = c2 - c1;
-  values[at] = (s0 + 23 * s1) / 48;
-  values[at + stride] = (d0 + 5 * d1) / 8;
-  values[at + 2 * stride] = (s0 - s1) / 4;
-  values[at + 3 * stride] = (d0 - 3 * d1) / 6;
-}
 
 /**
  * Ten solid and ten surface moments of a bicubic B-spline patch over its unit square.
@@ -21,11 +11,7 @@ function toPowers(values: Float64Array, at: number, stride: number): void {
  */
 export function bicubicMoments(net: Float64Array, ox: number, oy: number, oz: number, rule: GaussRule, solid: Float64Array, surface: Float64Array): number {
   const p = powers;
-  p.set(net);
-  for (let axis = 0; axis < 3; axis++) {
-    for (let i = 0; i < 4; i++) toPowers(p, 12 * i + axis, 3);
-    for (let j = 0; j < 4; j++) toPowers(p, 3 * j + axis, 12);
-  }
+  netToPowers(net, p);
   p[0] -= ox;
   p[1] -= oy;
   p[2] -= oz;
