@@ -18,8 +18,8 @@ const CATEGORY_FOLDERS: Record<string, Category> = {
 
 /** A version token: `v` and digits, after a separator or the start, before one or the end. */
 const TOKEN = /(^|[._\- ])v(\d{1,9})(?=$|[._\- ])/gi;
-/** `hammerV12` and `hammerv012`: a version that nothing separates, at the very end. */
-const GLUED = /^(.*[\p{L}\d)])v(\d{1,9})$/iu;
+/** `hammerV12` and `hammerv012`: a version that nothing separates, at the very end; `nav2` is a word with a number. */
+const GLUED = /^(.*[\p{L}\d)])v(\d{2,9})$/iu;
 const MAX_PATTERN = 200;
 const MOST_STARS = 4;
 
