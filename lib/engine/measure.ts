@@ -1,11 +1,14 @@
 import { assembleParts } from './assemble-parts';
 import type { Cage } from './cage';
-import type { MeasuredCage, MeasureOptions } from './measured';
+import type { MeasuredCage, MeasuredPart, MeasureOptions } from './measured';
 import { diagnoseOrientation } from './mesh/diagnose-orientation';
 import { diagnoseStructure, positionOf } from './mesh/diagnose';
 import { counted, FindingList, placeOf } from './mesh/findings';
 import { makeFrames } from './mesh/frames';
+import { diagnoseNearCoincident } from './mesh/near-coincident';
+import { diagnoseOverlap } from './mesh/overlap';
 import { partitionFaces, type Bodies } from './mesh/partition';
+import { relatePieces } from './mesh/relate-pieces';
 import { buildTopology, type Topology } from './mesh/topology';
 import { capBodies, integrateCage, integrateLimit } from './moments/integrate-limit';
 
@@ -38,7 +41,10 @@ export function measureCage(cage: Cage, options: MeasureOptions): MeasuredCage {
     blocked.fill(1);
   }
   const parts = assembleParts(mesh, bodies, blocked, frames, limit, ownCage, caps);
-  diagnoseOrientation(cage, mesh, bodies, blocked, parts, findings);
+  const relations = relatePieces(mesh, cage.positions, leftOut(mesh, bodies, blocked, parts), options);
+  diagnoseOrientation(cage, mesh, bodies, blocked, parts, relations, findings);
+  diagnoseOverlap(cage, mesh, bodies, relations, findings);
+  diagnoseNearCoincident(cage, mesh, bodies, findings);
   return { parts, findings: findings.list(), faces: mesh.faces, vertices: mesh.vertices };
 }
 
@@ -51,6 +57,16 @@ function findNotFinite(cage: Cage, findings: FindingList): boolean {
       (n) => `${counted(n, 'vertex has', 'vertices have')} a coordinate that is not a finite number; export the file again.`);
   }
   return found;
+}
+
+/** Faces that enclose nothing that could overlap: of blocked bodies and of sheets. */
+function leftOut(mesh: Topology, bodies: Bodies, blocked: Uint8Array, parts: readonly MeasuredPart[]): Uint8Array {
+  const left = new Uint8Array(mesh.faces);
+  for (let face = 0; face < mesh.faces; face++) {
+    const part = parts[bodies.partOf[face]];
+    if (blocked[bodies.bodyOf[face]] === 1 || (part.openEdges > 0 && part.looksLikeSheet)) left[face] = 1;
+  }
+  return left;
 }
 
 /** A part with a structural problem anywhere yields no number, so all its bodies are blocked. */

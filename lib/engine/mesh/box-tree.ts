@@ -6,6 +6,12 @@ export function boxesMeet(a: Float64Array, i: number, b: Float64Array, j: number
   return a[i] <= b[j + 3] && b[j] <= a[i + 3] && a[i + 1] <= b[j + 4] && b[j + 1] <= a[i + 4] && a[i + 2] <= b[j + 5] && b[j + 2] <= a[i + 5];
 }
 
+/** Makes the box at `at` hold nothing. */
+export function emptyBox(boxes: Float64Array, at: number): void {
+  boxes[at] = boxes[at + 1] = boxes[at + 2] = Infinity;
+  boxes[at + 3] = boxes[at + 4] = boxes[at + 5] = -Infinity;
+}
+
 /** Enlarges the box at `to` by the one at `from`. */
 export function growBox(boxes: Float64Array, to: number, source: Float64Array, from: number): void {
   for (let axis = 0; axis < 3; axis++) {
@@ -40,7 +46,7 @@ export class BoxTree {
     const at = 6 * node;
     this.firsts[node] = from;
     this.ends[node] = to;
-    this.boxes.fill(Infinity, at, at + 3).fill(-Infinity, at + 3, at + 6);
+    emptyBox(this.boxes, at);
     for (let i = from; i < to; i++) growBox(this.boxes, at, this.itemBoxes, 6 * this.items[i]);
     if (to - from <= LEAF) return node;
     let axis = 0;

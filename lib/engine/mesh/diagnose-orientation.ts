@@ -3,11 +3,15 @@ import type { MeasuredPart } from '../measured';
 import { positionOf } from './diagnose';
 import { counted, placeOf, type FindingList } from './findings';
 import { halfEdgeEnds } from './match-edges';
+import { diagnoseNesting, nestedPieces } from './nesting';
 import type { Bodies } from './partition';
+import type { PieceRelations } from './relate-pieces';
 import type { Topology } from './topology';
 
-/** Findings that need the measured numbers: open borders with a guess at sheets, and bodies that enclose negative volume. */
-export function diagnoseOrientation(cage: Cage, mesh: Topology, bodies: Bodies, blocked: Uint8Array, parts: MeasuredPart[], findings: FindingList): void {
+/** Findings that need the measured numbers: open borders with a guess at sheets, bodies that enclose negative volume, and bodies inside others. */
+export function diagnoseOrientation(
+  cage: Cage, mesh: Topology, bodies: Bodies, blocked: Uint8Array, parts: MeasuredPart[], relations: PieceRelations, findings: FindingList,
+): void {
   const firstFace = new Int32Array(bodies.bodies).fill(-1);
   for (let face = mesh.faces - 1; face >= 0; face--) firstFace[bodies.bodyOf[face]] = face;
   for (let h = 0; h < mesh.twin.length; h++) {
@@ -20,6 +24,8 @@ export function diagnoseOrientation(cage: Cage, mesh: Topology, bodies: Bodies, 
       (n) => openBorderMessage(n, part));
   }
   const component = new Int32Array(parts.length);
+  const nested = nestedPieces(bodies, relations);
+  const inverted = new Uint8Array(nested.length);
   for (let body = 0; body < bodies.bodies; body++) {
     const partIndex = bodies.partOfBody[body];
     const part = parts[partIndex];
@@ -28,14 +34,16 @@ export function diagnoseOrientation(cage: Cage, mesh: Topology, bodies: Bodies, 
     if (!(measured.solid.volume < 0) || part.looksLikeSheet) continue;
     const face = firstFace[body];
     const position = positionOf(cage, mesh.vertexOf[mesh.starts[face]]);
-    if (position !== null && isInsideOther(cage, mesh, bodies, body, position)) {
-      findings.add('cavity', 'note', part.name, placeOf({ face, position }),
-        (n) => `${counted(n, 'body lies', 'bodies lie')} inside another and ${n === 1 ? 'is' : 'are'} turned inwards, so ${n === 1 ? 'it counts as a cavity' : 'they count as cavities'}.`);
+    const piece = relations.pieceOf[face];
+    if (nested[piece] === 1 || (part.openEdges > 0 && position !== null && isInsideOther(cage, mesh, bodies, body, position))) {
+      nested[piece] = 1;
+      inverted[piece] = 1;
     } else {
       findings.add('inside_out', 'problem', part.name, placeOf({ face, position }),
         (n) => `${counted(n, 'body is', 'bodies are')} inside out; reverse ${n === 1 ? 'its' : 'their'} faces so that they look outwards.`);
     }
   }
+  diagnoseNesting(cage, mesh, bodies, relations, nested, inverted, findings);
 }
 
 function openBorderMessage(edges: number, part: MeasuredPart): string {
@@ -45,7 +53,7 @@ function openBorderMessage(edges: number, part: MeasuredPart): string {
   return `${open}; close the holes, whose caps make up ${share} % of the closed area, or set the construction to sheet.`;
 }
 
-/** Whether a point lies inside the other bodies of the part: the winding number of the cage's triangles about it [Van Oosterom & Strackee 1983]. */
+/** Whether a point lies inside the other bodies of a part with holes, where no ray can tell: the winding number of the cage's triangles about it [Van Oosterom & Strackee 1983]. */
 function isInsideOther(cage: Cage, mesh: Topology, bodies: Bodies, body: number, point: readonly number[]): boolean {
   let angle = 0;
   const p = cage.positions;

@@ -50,7 +50,6 @@ export function rayCrossing(t: Float64Array, at: number, x: number, y: number, z
     const fromBelow = t[a + 2] <= z;
     const toBelow = t[b + 2] <= z;
     if (fromBelow === toBelow) continue;
-    // orient2d is positive where the point lies to the right of a → b: the package counts y downwards.
     const side = orient2d(t[a + 1], t[a + 2], t[b + 1], t[b + 2], y, z);
     if (fromBelow && side * LEFT > 0) winding++;
     else if (!fromBelow && side * LEFT < 0) winding--;
@@ -61,6 +60,6 @@ export function rayCrossing(t: Float64Array, at: number, x: number, y: number, z
   return above * winding < 0 ? winding : 0;
 }
 
-/** Signs of the package's predicates: c to the left of a → b, and d on the side from which a, b, c turn counter-clockwise. */
+/** What the package's signs mean: for c to the left of a → b, and for d on the side from which a, b, c turn counter-clockwise. */
 const LEFT = Math.sign(orient2d(0, 0, 1, 0, 0, 1));
 const ABOVE = Math.sign(orient3d(0, 0, 0, 1, 0, 0, 0, 1, 0, 0, 0, 1));
