@@ -14,7 +14,6 @@ export interface TableActs {
   /** Opens (true) or closes the asset of the active row. */
   unfold: (open: boolean) => void;
   undo: () => void;
-  copy: () => void;
   find: () => void;
   inspect: () => void;
   keys: () => void;
@@ -57,9 +56,7 @@ export function answerTableKey(event: KeyboardEvent, acts: TableActs, pageRows: 
 function answerWithControl(event: KeyboardEvent, acts: TableActs): boolean {
   if (event.shiftKey) return false;
   const held: Record<string, () => void> = { a: acts.all, z: acts.undo };
-  if (event.key in held) return answered(held[event.key]);
-  if (event.key === 'c' && document.getSelection()?.isCollapsed !== false) return answered(acts.copy);
-  return false;
+  return event.key in held ? answered(held[event.key]) : false;
 }
 
 function answered(act: () => void): true {

@@ -40,5 +40,11 @@ export function RowBeam({ of, unit, largest, partner = null }: RowBeamProps) {
     largest: largest ?? longestAxis(of.bounds_m).extent,
     partner: partner === null ? null : centreOf(partner),
   });
-  return <Beam geometry={geometry} label={describeBeam(geometry, unit)} blocked={of.state === 'blocked'} />;
+  return (
+    <Beam
+      geometry={geometry}
+      label={describeBeam(geometry, unit)}
+      blocked={'revision' in of && of.state === 'blocked'}
+    />
+  );
 }

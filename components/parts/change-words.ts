@@ -1,16 +1,16 @@
-import { formatFixed } from '@/lib/rules/format-figure';
+import { formatProse } from '@/lib/rules/format-figure';
 import type { ValueChange } from '@/lib/rules/value-change';
 
 /** A change in words, units said. */
 export function changeWords(change: ValueChange): string {
   const words: string[] = [];
   if (change.construction !== undefined) words.push(change.construction);
-  if (change.wall_m != null) words.push(`wall ${formatFixed(change.wall_m * 1000)} mm`);
-  if (change.target_mass_kg != null) words.push(`target mass ${formatFixed(change.target_mass_kg)} kg`);
-  if (change.density_kg_m3 != null) words.push(`density ${formatFixed(change.density_kg_m3)} kg/m³`);
+  if (change.wall_m != null) words.push(`wall ${formatProse(change.wall_m * 1000)} mm`);
+  if (change.target_mass_kg != null) words.push(`target mass ${formatProse(change.target_mass_kg)} kg`);
+  if (change.density_kg_m3 != null) words.push(`density ${formatProse(change.density_kg_m3)} kg/m³`);
   if (change.material != null) words.push(change.material);
   if (change.areal_density_kg_m2 != null)
-    words.push(`weight per area ${formatFixed(change.areal_density_kg_m2)} kg/m²`);
+    words.push(`weight per area ${formatProse(change.areal_density_kg_m2)} kg/m²`);
   if (change.left_out !== undefined) words.push(change.left_out ? 'left out' : 'taken in');
   return words.length === 0 ? 'no mass' : words.join(', ');
 }

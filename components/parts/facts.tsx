@@ -18,8 +18,8 @@ export interface Fact {
   decimals?: number;
 }
 
-const ENGINEERING = { before: 4, after: 4 };
-const FIXED = { before: 4, after: 4 };
+const ENGINEERING = { before: 5, after: 5 };
+const FIXED = { before: 5, after: 5 };
 
 /** Labels with their unit at the left, figures under one another on the point at the right. */
 export function Facts({ facts }: { facts: readonly Fact[] }) {
@@ -33,11 +33,11 @@ export function Facts({ facts }: { facts: readonly Fact[] }) {
           </dt>
           <dd className="min-w-0 text-right">
             {typeof fact.value === 'string' ? (
-              <span className="break-words">{fact.value}</span>
+              <span className="inline-block pr-7.5 break-words">{fact.value}</span>
             ) : fact.notation === 'fixed' ? (
               <>
                 <Figure value={fact.value} decimals={fact.decimals ?? 3} align={FIXED} />
-                <span aria-hidden className="inline-block w-8" />
+                <span aria-hidden className="inline-block w-7.5" />
               </>
             ) : (
               <Figure value={fact.value} notation="engineering" align={ENGINEERING} />

@@ -22,21 +22,26 @@ interface InspectorProps {
   active: TableNode | null;
   /** The parts that an act would change. */
   chosen: readonly PartNode[];
+  /** All parts that the filters leave. */
+  shown: readonly PartNode[];
   frame: ShowFrame;
   onSet: () => void;
 }
 
 /** Everything about what is chosen, with its units beside the labels. */
-export function Inspector({ active, chosen, frame, onSet }: InspectorProps) {
+export function Inspector({ active, chosen, shown, frame, onSet }: InspectorProps) {
   const one = chosen.length === 1 ? chosen[0] : null;
   if (active?.kind === 'asset' && chosen.length === active.parts.length)
     return <AssetFacts node={active} frame={frame} onSet={onSet} />;
   if (one !== null) return <PartFacts node={one} frame={frame} onSet={onSet} />;
   if (chosen.length > 1) return <SelectionSummary parts={chosen} onSet={frame.may_set ? onSet : null} />;
   return (
-    <p className="px-4 py-4 text-13 text-ink-2">
-      Choose a row to see all of its numbers. Several rows can be set at once.
-    </p>
+    <>
+      <SelectionSummary parts={shown} onSet={null} />
+      <Section title="Rows">
+        <p className="text-13 text-ink-2">Choose a row to see all of its numbers. Several rows can be set at once.</p>
+      </Section>
+    </>
   );
 }
 

@@ -2,7 +2,7 @@
 
 import { Command } from 'cmdk';
 import { Check } from 'lucide-react';
-import { formatFixed } from '@/lib/rules/format-figure';
+import { formatProse } from '@/lib/rules/format-figure';
 import type { MaterialOption } from '@/lib/rules/show-frame';
 
 interface MaterialListProps {
@@ -45,6 +45,6 @@ export function MaterialList({ materials, value, onChoose }: MaterialListProps) 
 
 function densityWords(material: MaterialOption): string {
   return material.density_kg_m3 === null
-    ? `${formatFixed(material.areal_density_kg_m2 ?? 0)} kg/m²`
-    : `${formatFixed(material.density_kg_m3)} kg/m³`;
+    ? `${formatProse(material.areal_density_kg_m2 ?? 0)} kg/m²`
+    : `${formatProse(material.density_kg_m3)} kg/m³`;
 }

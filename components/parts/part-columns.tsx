@@ -10,7 +10,7 @@ import { VALUE_STATES } from '@/lib/rules/states';
 import { METRES_PER } from '@/lib/rules/units';
 import { ConstructionCell } from './construction-cell';
 import { AssetName, PartName } from './name-cell';
-import { ProblemCounts } from './problem-counts';
+import { BlockedCount, ProblemCounts } from './problem-counts';
 import { SourceCell } from './source-cell';
 
 export interface ColumnSpec {
@@ -56,7 +56,7 @@ function magnitude(
     id,
     label,
     name,
-    width: 104,
+    width: 110,
     figures: true,
     part: ({ row }, frame) => cell(row[key], frame, false),
     asset: ({ total }, frame) => cell(total[key], frame, key === 'mass_kg'),
@@ -106,7 +106,7 @@ export const COLUMN_SPECS: readonly ColumnSpec[] = [
     id: 'name',
     label: 'Asset and part',
     name: 'Asset and part',
-    width: 200,
+    width: 184,
     grows: true,
     part: (node) => <PartName node={node} />,
     asset: (node) => <AssetName node={node} />,
@@ -137,7 +137,7 @@ export const COLUMN_SPECS: readonly ColumnSpec[] = [
     id: 'source',
     label: 'Mass from',
     name: 'Mass from',
-    width: 148,
+    width: 124,
     grows: true,
     part: ({ row }) => <SourceCell row={row} />,
     asset: ({ total }) => (
@@ -152,7 +152,7 @@ export const COLUMN_SPECS: readonly ColumnSpec[] = [
     id: 'beam',
     label: 'Balance along longest axis',
     name: 'Balance along longest axis',
-    width: 200,
+    width: 194,
     part: ({ row, largest, partner }, frame) => (
       <RowBeam of={row} unit={frame.linear_unit} largest={largest} partner={partner} />
     ),
@@ -174,19 +174,16 @@ export const COLUMN_SPECS: readonly ColumnSpec[] = [
     id: 'problems',
     label: 'Problems',
     name: 'Problems and warnings',
-    width: 78,
+    width: 72,
     part: ({ row }) => <ProblemCounts findings={row.problems} />,
-    asset: ({ total }) =>
-      total.blocked === 0 ? null : (
-        <span className="text-13 text-wrong">{total.blocked.toLocaleString('en')} blocked</span>
-      ),
+    asset: ({ total }) => <BlockedCount blocked={total.blocked} />,
     order: (of) => (isPart(of) ? problemWeight(of) : -of.blocked * 1000),
   },
   {
     id: 'state',
     label: 'State',
     name: 'State',
-    width: 118,
+    width: 112,
     part: ({ row }) => <StateMark state={row.state} />,
     asset: ({ total }) => <StateMark state={total.state} />,
     order: (of) => (of.state === 'locked' ? -1 : VALUE_STATES.indexOf(of.state)),

@@ -1,6 +1,15 @@
 'use client';
 
-import { useEffect, useId, useRef, type KeyboardEvent, type MouseEvent, type ReactNode, type RefObject } from 'react';
+import {
+  useEffect,
+  useId,
+  useRef,
+  type ClipboardEvent,
+  type KeyboardEvent,
+  type MouseEvent,
+  type ReactNode,
+  type RefObject,
+} from 'react';
 import { useElementWidth } from '@/hooks/use-element-width';
 import type { PartColumn } from '@/hooks/use-part-filters';
 import { useVirtualRows } from '@/hooks/use-virtual-rows';
@@ -12,6 +21,7 @@ import { ASSET_HEIGHT, COMPACT_HEIGHT, GridRow, PART_HEIGHT } from './grid-row';
 import { COLUMN_SPECS, fittingColumns, gridTemplate } from './part-columns';
 
 const COMPACT_BELOW = 640;
+const COMPACT_HEAD_HEIGHT = 28;
 
 interface PartsGridProps {
   gridRef: RefObject<HTMLDivElement | null>;
@@ -29,6 +39,7 @@ interface PartsGridProps {
   onToggleOpen: (key: string) => void;
   onEdit: (key: string) => void;
   onOpen: (key: string) => void;
+  onCopy: (event: ClipboardEvent) => void;
   /** Keys that the table answers; true when it did. */
   onKey: (event: KeyboardEvent, pageRows: number) => boolean;
 }
@@ -50,6 +61,7 @@ export function PartsGrid(props: PartsGridProps) {
     onToggleOpen,
     onEdit,
     onOpen,
+    onCopy,
     onKey,
   } = props;
   const idBase = useId();
@@ -64,7 +76,7 @@ export function PartsGrid(props: PartsGridProps) {
     (index) => (compact ? COMPACT_HEIGHT : nodes[index].kind === 'asset' ? ASSET_HEIGHT : PART_HEIGHT),
     nodes.length,
     (index) => nodes[index].key,
-    compact ? 0 : HEAD_HEIGHT,
+    compact ? COMPACT_HEAD_HEIGHT : HEAD_HEIGHT,
   );
   const rowId = (key: string) => `${idBase}-${encodeURIComponent(key)}`;
   const activeIndex = selection.active === null ? -1 : nodes.findIndex((node) => node.key === selection.active);
@@ -118,12 +130,21 @@ export function PartsGrid(props: PartsGridProps) {
         if (onKey(event, Math.max(1, Math.floor((scroller.current?.clientHeight ?? 0) / PART_HEIGHT) - 2)))
           event.preventDefault();
       }}
+      onCopy={onCopy}
       onClick={onClick}
       onDoubleClick={onDoubleClick}
       className="group/grid relative min-h-0 flex-1 overflow-auto outline-none"
     >
       <div style={{ minWidth }}>
-        {compact ? null : (
+        {compact ? (
+          <div
+            aria-hidden
+            className="sticky top-0 z-20 flex h-7 items-center justify-between border-b border-rule bg-ground px-4 text-12 text-ink-3"
+          >
+            <span>Asset and part</span>
+            <span>Mass, kg</span>
+          </div>
+        ) : (
           <GridHead specs={specs} template={template} frame={frame} sort={sort} down={down} onSort={onSort} />
         )}
         <div role="rowgroup" className="relative" style={{ height }}>

@@ -18,7 +18,7 @@ export function PartsHeading({ frame, counts, canSet, onSet }: PartsHeadingProps
   return (
     <PageHeading
       title="Parts"
-      measure={counts === null ? undefined : <ProgressRule counts={counts.by_state} />}
+      measure={counts === null ? <span className="block h-8.5" /> : <ProgressRule counts={counts.by_state} />}
       actions={
         <>
           {frame.may_set ? (

@@ -1,4 +1,4 @@
-import { formatFixed } from '@/lib/rules/format-figure';
+import { formatProse } from '@/lib/rules/format-figure';
 
 interface PartsStatusBarProps {
   parts: number;
@@ -23,7 +23,7 @@ export function PartsStatusBar({ parts, assets, chosen, massKg, reading, online,
         {chosen > 0 ? ` · ${chosen.toLocaleString('en')} chosen` : ''}
         {reading ? ' · reading more' : ''}
       </p>
-      <p>Total of what is shown: {formatFixed(massKg)} kg</p>
+      <p>Total of what is shown: {formatProse(massKg)} kg</p>
       {online ? (
         <p className="text-ink-3 max-lg:hidden">Figures show four digits, copying takes all</p>
       ) : (

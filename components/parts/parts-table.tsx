@@ -1,7 +1,7 @@
 'use client';
 
 import { useRouter } from 'next/navigation';
-import { useMemo, useRef, useState } from 'react';
+import { useMemo, useRef, useState, type ClipboardEvent } from 'react';
 import { toast } from 'sonner';
 import { answerTableKey, type TableActs } from '@/hooks/answer-table-key';
 import { useArrangedRows } from '@/hooks/use-arranged-rows';
@@ -130,7 +130,6 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
     unfold: (wanted) =>
       active !== null && fold(active.kind === 'asset' ? active.key : assetKey(active.row.asset), wanted),
     undo: () => void save.takeBack(),
-    copy: () => void copyRows(targetRows),
     find: () => searchRef.current?.focus(),
     inspect: () => setInspectorOpen((now) => !now),
     keys: () => setKeysOpen(true),
@@ -184,15 +183,16 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
             onToggleOpen={(key) => fold(key, closed.has(key))}
             onEdit={(key) => edit(key, '')}
             onOpen={(key) => open(nodes.find((node) => node.key === key) ?? null)}
+            onCopy={(event) => copyRows(event, targetRows)}
             onKey={(event, pageRows) => answerTableKey(event, acts, pageRows)}
           />
         )}
         {inspectorOpen && parts.rows.length > 0 ? (
           <aside
             aria-label="Inspector"
-            className="w-80 shrink-0 overflow-y-auto border-l border-rule bg-bench max-lg:hidden"
+            className="w-74 shrink-0 overflow-y-auto border-l border-rule bg-bench max-lg:hidden"
           >
-            <Inspector active={active} chosen={targets} frame={frame} onSet={openForm} />
+            <Inspector active={active} chosen={targets} shown={shown} frame={frame} onSet={openForm} />
           </aside>
         ) : null}
       </div>
@@ -233,14 +233,12 @@ function keysOf(node: TableNode): readonly string[] {
   return node.kind === 'asset' ? node.parts.map((part) => part.key) : [node.key];
 }
 
-async function copyRows(rows: readonly PartRow[]): Promise<void> {
-  if (rows.length === 0) return;
-  try {
-    await navigator.clipboard.writeText(rowsAsText(rows));
-    toast(
-      rows.length === 1 ? 'One row copied, all digits' : `${rows.length.toLocaleString('en')} rows copied, all digits`,
-    );
-  } catch {
-    toast.error('The browser did not let the rows onto the clipboard.');
-  }
+/** Ctrl+C with no text marked takes the rows. */
+function copyRows(event: ClipboardEvent, rows: readonly PartRow[]): void {
+  if (rows.length === 0 || document.getSelection()?.isCollapsed === false) return;
+  event.clipboardData.setData('text/plain', rowsAsText(rows));
+  event.preventDefault();
+  toast(
+    rows.length === 1 ? 'One row copied, all digits' : `${rows.length.toLocaleString('en')} rows copied, all digits`,
+  );
 }

@@ -1,6 +1,6 @@
 'use client';
 
-import { PanelRight } from 'lucide-react';
+import { ListTree, PanelRight } from 'lucide-react';
 import type { RefObject } from 'react';
 import { Chip } from '@/components/ui/chip';
 import { IconButton } from '@/components/ui/icon-button';
@@ -91,14 +91,17 @@ export function PartsToolbar({
             {CATEGORY_PLURALS[category]}
           </Chip>
         ))}
-        <span aria-hidden className="mx-1 w-px shrink-0 bg-rule" />
-        <Chip pressed={!filters.flat} onClick={() => void setFilters({ flat: filters.flat ? null : true })}>
-          By asset
-        </Chip>
       </div>
-      <p className="text-14 whitespace-nowrap text-ink-3 max-lg:hidden">
+      <p className="text-14 whitespace-nowrap text-ink-3 max-xl:hidden">
         {frame.linear_unit} · kg · {frame.up_axis} up
       </p>
+      <IconButton
+        label="Group by asset"
+        aria-pressed={!filters.flat}
+        onClick={() => void setFilters({ flat: filters.flat ? null : true })}
+      >
+        <ListTree aria-hidden />
+      </IconButton>
       <IconButton
         label="Inspector"
         shortcut="I"

@@ -62,3 +62,15 @@ export function ProblemCounts({ findings }: { findings: readonly RowFinding[] })
     </span>
   );
 }
+
+/** How many parts of an asset are blocked. */
+export function BlockedCount({ blocked }: { blocked: number }) {
+  if (blocked === 0) return null;
+  return (
+    <span className="flex items-center gap-1 text-13 text-wrong">
+      <ProblemShape />
+      {blocked.toLocaleString('en')}
+      <span className="sr-only"> blocked</span>
+    </span>
+  );
+}

@@ -11,13 +11,14 @@ const STATES: readonly RowState[] = ['locked', ...VALUE_STATES];
 export function SelectionSummary({ parts, onSet }: { parts: readonly PartNode[]; onSet: (() => void) | null }) {
   const rows = parts.map((part) => part.row);
   const weighed = rows.filter((row) => row.mass_kg !== null);
+  const assets = new Set(rows.map((row) => row.asset)).size;
   const mass = weighed.reduce((sum, row) => sum + (row.mass_kg ?? 0), 0);
   return (
     <>
       <header className="px-4 pt-3 pb-2">
-        <h2>{rows.length.toLocaleString('en')} parts</h2>
+        <h2>{rows.length === 1 ? 'One part' : `${rows.length.toLocaleString('en')} parts`}</h2>
         <p className="text-13 text-ink-2">
-          of {new Set(rows.map((row) => row.asset)).size.toLocaleString('en')} assets
+          of {assets === 1 ? rows[0].asset : `${assets.toLocaleString('en')} assets`}
         </p>
       </header>
       {onSet === null ? null : (

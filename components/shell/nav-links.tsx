@@ -11,11 +11,16 @@ export interface NavItem {
   count?: number;
   /** Something there is wrong. */
   wrong?: boolean;
+  /** Another address whose pages belong to this item. */
+  covers?: string;
 }
 
 /** The item whose address the page stands under; the longest one wins. */
 export function currentItem(items: readonly NavItem[], pathname: string): NavItem | null {
-  const under = items.filter((item) => pathname === item.href || pathname.startsWith(`${item.href}/`));
+  const isUnder = (href: string) => pathname === href || pathname.startsWith(`${href}/`);
+  const covering = items.find((item) => item.covers !== undefined && isUnder(item.covers));
+  if (covering) return covering;
+  const under = items.filter((item) => isUnder(item.href));
   return under.reduce<NavItem | null>(
     (best, item) => (best === null || item.href.length > best.href.length ? item : best),
     null,

@@ -2,7 +2,7 @@
 
 import { X } from 'lucide-react';
 import { Dialog as Primitive } from 'radix-ui';
-import type { ReactNode } from 'react';
+import { useRef, type ReactNode } from 'react';
 import { cn } from './cn';
 
 interface DialogProps {
@@ -18,12 +18,21 @@ interface DialogProps {
 
 /** A modal task. On a phone it fills the lower edge of the screen. */
 export function Dialog({ open, onOpenChange, title, description, children, className, onOpenAutoFocus }: DialogProps) {
+  // Opened by a key or by the page itself, a dialog has no trigger of its own to give the focus back to.
+  const before = useRef<Element | null>(null);
   return (
     <Primitive.Root open={open} onOpenChange={onOpenChange}>
       <Primitive.Portal>
         <Primitive.Overlay className="fixed inset-0 z-40 animate-[fade-in_120ms] bg-veil" />
         <Primitive.Content
-          onOpenAutoFocus={onOpenAutoFocus}
+          onOpenAutoFocus={(event) => {
+            before.current = document.activeElement;
+            onOpenAutoFocus?.(event);
+          }}
+          onCloseAutoFocus={(event) => {
+            event.preventDefault();
+            if (before.current instanceof HTMLElement) before.current.focus();
+          }}
           {...(description === undefined ? { 'aria-describedby': undefined } : {})}
           className={cn(
             'fixed inset-x-0 bottom-0 z-50 max-h-[92dvh] overflow-y-auto rounded border border-edge bg-raised p-5 sm:inset-x-auto sm:top-1/2 sm:bottom-auto sm:left-1/2 sm:w-[30rem] sm:-translate-x-1/2 sm:-translate-y-1/2',

@@ -14,9 +14,8 @@ interface FigureProps {
   className?: string;
 }
 
-/** Widths of a column's figures, sign included; the exponent has its own place behind them. */
-export const ENGINEERING_WIDTHS = { before: 3, after: 4 };
-export const LENGTH_WIDTHS = { before: 5, after: 4 };
+/** Characters before and behind the point in a column of masses or moments; the exponent has its own place behind them. */
+export const ENGINEERING_WIDTHS = { before: 4, after: 5 };
 
 /** A number: four significant digits to read, all of them when copied (see copy-full). */
 export function Figure({ value, notation = 'fixed', align, decimals, full = value, className }: FigureProps) {
@@ -39,9 +38,9 @@ export function Figure({ value, notation = 'fixed', align, decimals, full = valu
 }
 
 function Exponent({ power, apart }: { power: number; apart: boolean }) {
-  if (power === 0) return apart ? <span className="inline-block w-8" /> : null;
+  if (power === 0) return apart ? <span className="inline-block w-7.5" /> : null;
   return (
-    <span className={cn('text-12 text-ink-3', apart && 'inline-block w-8')}>
+    <span className={cn('text-12 text-ink-3', apart && 'inline-block w-7.5')}>
       <span aria-hidden>·10</span>
       <span className="sr-only"> times ten to the power </span>
       <span className="relative -top-1 text-[0.6875rem]">{power < 0 ? `\u2212${-power}` : power}</span>

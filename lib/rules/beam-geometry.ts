@@ -33,6 +33,7 @@ export interface BeamGeometry {
   start: number;
   end: number;
   quarters: [number, number];
+  /** ± the radius of gyration; none where the centre lies outside. */
   bracket: [number, number] | null;
   /** `outside`: −1 before the start, 1 behind the end, 0 inside. */
   fulcrum: { at: number; outside: -1 | 0 | 1 } | null;
@@ -87,7 +88,7 @@ export function beamGeometry(input: BeamInput): BeamGeometry {
       ? null
       : gyrationAlong(axis, input.inertia, input.mass);
   const bracket: [number, number] | null =
-    share === null || gyration === null || extent <= 0
+    share === null || share < 0 || share > 1 || gyration === null || extent <= 0
       ? null
       : [kept(share - gyration / extent), kept(share + gyration / extent)];
 

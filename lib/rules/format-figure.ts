@@ -21,18 +21,36 @@ export function formatFixed(value: number, decimals = 4, digits = SCREEN_DIGITS)
   return value < 0 && Number(text) !== 0 ? MINUS + text : text;
 }
 
-/** Four significant digits with an exponent that is a multiple of three, so that a column of masses or moments keeps its width. */
+/** A number in running text: whole and grouped by thousands from 1,000 on, else four significant digits. */
+export function formatProse(value: number): string {
+  return Math.abs(value) >= 1000 ? Math.round(value).toLocaleString('en') : formatFixed(value);
+}
+
+/** From here to there a mass or moment is written without an exponent. */
+const PLAIN_FROM = 0.1;
+const PLAIN_BELOW = 10_000;
+
+/**
+ * Four significant digits; beyond 0.1 … 10,000 with an exponent that is a multiple of three, which stands apart, so that a column
+ * of masses or moments keeps its width.
+ */
 export function formatEngineering(value: number, digits = SCREEN_DIGITS): ShownFigure {
   if (!Number.isFinite(value)) return { text: '–', exponent: 0 };
   if (value === 0) return { text: (0).toFixed(digits - 1), exponent: 0 };
-  const [mantissa, power] = Math.abs(value)
+  const rounded = Math.abs(Number(value.toPrecision(digits)));
+  const power = Number(rounded.toExponential().split('e')[1]);
+  const exponent = rounded >= PLAIN_FROM && rounded < PLAIN_BELOW ? 0 : Math.floor(power / 3) * 3;
+  const figures = rounded
     .toExponential(digits - 1)
-    .split('e');
-  const exponent = Math.floor(Number(power) / 3) * 3;
-  const shift = Number(power) - exponent;
-  const figures = mantissa.replace('.', '');
-  const text = shift + 1 < figures.length ? `${figures.slice(0, shift + 1)}.${figures.slice(shift + 1)}` : figures;
+    .split('e')[0]
+    .replace('.', '');
+  const shift = power - exponent;
+  const text = shift < 0 ? `0.${'0'.repeat(-shift - 1)}${figures}` : pointAfter(figures, shift + 1);
   return { text: value < 0 ? MINUS + text : text, exponent };
+}
+
+function pointAfter(figures: string, places: number): string {
+  return places < figures.length ? `${figures.slice(0, places)}.${figures.slice(places)}` : figures;
 }
 
 /** Pads with spaces so that the point stands after `before` characters; `after` counts the point and what follows. For a monospaced face. */

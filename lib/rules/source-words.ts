@@ -1,4 +1,4 @@
-import { formatFixed } from './format-figure';
+import { formatProse } from './format-figure';
 import type { PartRow } from './part-row';
 import type { MassSource, Origin } from './states';
 
@@ -29,15 +29,15 @@ export function sourceSentence(row: PartRow): string {
     case null:
       return 'No mass yet.';
     case 'target_mass':
-      return `Target mass ${formatFixed(row.target_mass_kg ?? 0)} kg.`;
+      return `Target mass ${formatProse(row.target_mass_kg ?? 0)} kg.`;
     case 'density':
-      return `Density ${formatFixed(row.density_kg_m3 ?? 0)} kg/m³.`;
+      return `Density ${formatProse(row.density_kg_m3 ?? 0)} kg/m³.`;
     case 'areal_density':
-      return `Weight per area ${formatFixed(row.areal_density_kg_m2 ?? 0)} kg/m².`;
+      return `Weight per area ${formatProse(row.areal_density_kg_m2 ?? 0)} kg/m².`;
     case 'material':
       return row.density_kg_m3 === null || row.construction === 'sheet'
-        ? `${row.material ?? 'Material'}, ${formatFixed(row.areal_density_kg_m2 ?? 0)} kg/m².`
-        : `${row.material ?? 'Material'}, ${formatFixed(row.density_kg_m3)} kg/m³.`;
+        ? `${row.material ?? 'Material'}, ${formatProse(row.areal_density_kg_m2 ?? 0)} kg/m².`
+        : `${row.material ?? 'Material'}, ${formatProse(row.density_kg_m3)} kg/m³.`;
   }
 }
 

@@ -53,7 +53,14 @@ describe('beamGeometry', () => {
           partner: [y, z, x],
           largest,
         });
-        const places = [beam.start, beam.end, ...beam.bracket!, beam.fulcrum!.at, beam.approvedAt!, beam.partnerAt!];
+        const places = [
+          beam.start,
+          beam.end,
+          ...(beam.bracket ?? []),
+          beam.fulcrum!.at,
+          beam.approvedAt!,
+          beam.partnerAt!,
+        ];
         for (const at of places) {
           expect(at).toBeGreaterThanOrEqual(5);
           expect(at).toBeLessThanOrEqual(BEAM_BOX.width - 5);

@@ -11,8 +11,8 @@ describe('formatEngineering', () => {
       fc.property(finite, (value) => {
         const { text, exponent } = formatEngineering(value);
         expect(Math.abs(exponent % 3)).toBe(0);
-        expect(text.replace(/\D/g, '')).toHaveLength(4);
-        expect(text.replace('\u2212', '').split('.')[0].length).toBeLessThanOrEqual(3);
+        expect(text.replace(/\D/g, '').replace(/^0(?=[^0])/, '')).toHaveLength(4);
+        expect(text.replace('\u2212', '').split('.')[0].length).toBeLessThanOrEqual(4);
       }),
     );
   });
@@ -30,7 +30,10 @@ describe('formatEngineering', () => {
   });
 
   it.each([
-    [999.96, '1.000', 3],
+    [999.96, '1000', 0],
+    [9999.6, '10.00', 3],
+    [0.22071, '0.2207', 0],
+    [0.0999999, '0.1000', 0],
     [0.008214, '8.214', -3],
     [640, '640.0', 0],
     [-0.000123456, '\u2212123.5', -6],
