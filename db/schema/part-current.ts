@@ -3,7 +3,7 @@ import { bigint, check, doublePrecision, index, integer, jsonb, pgTable, text, t
 import { CATEGORIES, CONSTRUCTIONS, MASS_SOURCES, ORIGINS, ROW_KINDS, VALUE_STATES } from '../../lib/rules/states';
 import { assets } from './assets';
 import { assetVersions } from './asset-versions';
-import { finiteNotNegative, finitePositive, oneOf } from './checks';
+import { finite, finiteNotNegative, finitePositive, oneOf } from './checks';
 import { geometryParts } from './geometry-parts';
 import { parts } from './parts';
 import { settings } from './settings';
@@ -119,6 +119,12 @@ export const partCurrent = pgTable(
     check('part_current_target', finitePositive(t.targetMassKg)),
     check('part_current_area', finiteNotNegative(t.areaM2)),
     check('part_current_volume', finitePositive(t.volumeM3)),
+    check('part_current_scale', finitePositive(t.scale)),
+    check('part_current_cage_volume', finite(t.cageVolumeM3)),
+    check(
+      'part_current_bounds',
+      sql`cardinality(${t.boundsM}) = 6 and not ('NaN'::float8 = any (${t.boundsM}) or 'Infinity'::float8 = any (${t.boundsM}) or '-Infinity'::float8 = any (${t.boundsM}))`,
+    ),
     check('part_current_error', finiteNotNegative(t.numericError)),
     check(
       'part_current_com_finite',

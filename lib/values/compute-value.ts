@@ -99,11 +99,16 @@ export function computeValue(inputs: ValueInputs): ComputedValue {
   return value;
 }
 
+/** Kilograms or kg·m², whose products and sums over a show stay within what a double can hold: the database refuses what leaves it. */
+const SMALLEST_MOMENT = 1e-290;
+const LARGEST = 1e150;
+
 /** What the row's constraints in the database would refuse, as a sentence; null where all is well. */
 function findUnstorable(value: MassProperties): string | null {
   const [i1, i2, i3] = value.principalKgM2;
   const [w, x, y, z] = value.quatWxyz;
-  if (!(i3 > 0)) return 'The moments are too small for a double; the part is too small or too light.';
+  if (!(i3 > SMALLEST_MOMENT && value.massKg > SMALLEST_MOMENT)) return 'The moments are too small for a double; the part is too small or too light.';
+  if (!(i3 < LARGEST && value.massKg < LARGEST)) return 'The mass or its moments are out of all proportion; the part is too large or too heavy.';
   if (!(i1 >= 0 && i1 <= i2 && i2 <= i3 && i1 + i2 >= i3 - 1e-13 * i3)) return 'The principal moments cannot belong to a body.';
   if (!(w >= 0 && Math.abs(w * w + x * x + y * y + z * z - 1) < 1e-12)) return 'The principal axes are no rotation.';
   if (!(value.numericError >= 0 && value.numericError < Infinity)) return 'The error of the integration could not be estimated.';

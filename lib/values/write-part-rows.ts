@@ -98,7 +98,7 @@ function rowOf(part: LoadedPart): RowColumns {
   const [comX, comY, comZ] = properties?.comM ?? [null, null, null];
   const [ixx, iyy, izz, ixy, ixz, iyz] = properties?.inertiaKgM2 ?? [null, null, null, null, null, null];
   const [i1, i2, i3] = properties?.principalKgM2 ?? [null, null, null];
-  const [w, x, y, z] = properties?.quatWxyz ?? [null, null, null, null];
+  const [w, x, y, z] = properties?.quatWxyz.map(withSquare) ?? [null, null, null, null];
   return {
     show_id: part.showId,
     asset_id: part.assetId,
@@ -155,4 +155,9 @@ function rowOf(part: LoadedPart): RowColumns {
     faces: part.faces,
     max_valence: part.maxValence,
   };
+}
+
+/** A component whose square would vanish below the smallest double is 0: the database squares it to check the unit length. */
+function withSquare(component: number): number {
+  return Math.abs(component) < 1e-150 ? 0 : component;
 }

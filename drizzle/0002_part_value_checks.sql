@@ -1,0 +1,3 @@
+ALTER TABLE "part_current" ADD CONSTRAINT "part_current_scale" CHECK ("part_current"."scale" > 0 and "part_current"."scale" < 'Infinity');--> statement-breakpoint
+ALTER TABLE "part_current" ADD CONSTRAINT "part_current_cage_volume" CHECK ("part_current"."cage_volume_m3" > '-Infinity' and "part_current"."cage_volume_m3" < 'Infinity');--> statement-breakpoint
+ALTER TABLE "part_current" ADD CONSTRAINT "part_current_bounds" CHECK (cardinality("part_current"."bounds_m") = 6 and not ('NaN'::float8 = any ("part_current"."bounds_m") or 'Infinity'::float8 = any ("part_current"."bounds_m") or '-Infinity'::float8 = any ("part_current"."bounds_m")));
