@@ -29,7 +29,10 @@ export function solidErrorEstimate(volume: number, magnitude: number, closingErr
   return Math.min(1, (closing + (ROUNDINGS * UNIT_ROUNDOFF + 2 * defect) * magnitude) / v);
 }
 
+/** The higher moments of a surface err by some times what its area does, relative to their size. */
+const MOMENT_FACTOR = 8;
+
 /** Relative error estimate of the surface moments: what rules and closings may be off by, plus rounding. */
 export function surfaceErrorEstimate(area: number, error: number): number {
-  return area > 0 ? Math.min(1, error / area + ROUNDINGS * UNIT_ROUNDOFF) : 1;
+  return area > 0 ? Math.min(1, (MOMENT_FACTOR * error) / area + ROUNDINGS * UNIT_ROUNDOFF) : 1;
 }

@@ -7,7 +7,7 @@ import { gaussRule } from '../patches/gauss-rule';
 import type { Fans } from './catmull-clark-classify';
 import { approximateLimit, fillChildNet, makeFanState, refineFan, translateFan, type FanState } from './catmull-clark-fan';
 import { fillNet } from './catmull-clark-net';
-import { fanTable } from './catmull-clark-tables';
+import { fanTable, type FanTable } from './catmull-clark-tables';
 import type { LevelMesh } from './level-mesh';
 
 /** Gauss nodes a direction: exact ones first, then fewer as the levels flatten, as far as a probe allows. */
@@ -40,7 +40,9 @@ interface FanSums {
 export function integrateFan(mesh: LevelMesh, fans: Fans, index: number, origins: Float64Array, sums: LimitSums): void {
   let state = readFan(mesh, fans, index);
   let finer = makeFanState(state.sectors, state.closed, state.sharpFirst, state.centreRule);
-  const { weights, check, curveWeights } = fanTable(state);
+  const table = fanTable(state);
+  const { weights, curveWeights } = table;
+  const levels = Math.max(weights.length, table.surfaceWeights.length);
   const corners = fans.corners.slice(fans.starts[index], fans.starts[index + 1]);
   const n = state.sectors;
   const own: FanSums = {
@@ -60,7 +62,7 @@ export function integrateFan(mesh: LevelMesh, fans: Fans, index: number, origins
   let nodes = MOST_NODES;
   let solidScale = 0;
   let areaScale = 0;
-  for (let k = 0; k < weights.length; k++) {
+  for (let k = 0; k < levels; k++) {
     refineFan(state, finer);
     [state, finer] = [finer, state];
     const rule = gaussRule(nodes);
@@ -68,24 +70,24 @@ export function integrateFan(mesh: LevelMesh, fans: Fans, index: number, origins
       const [ox, oy, oz] = originOf(j);
       for (let child = 0; child < 3; child++) {
         fillChildNet(state, j, child, net);
-        if (bordered) addFanCurves(mesh, corners[j], child, k, curveWeights[k], limit, sums.curves);
+        if (bordered) addFanCurves(mesh, corners[j], child, k, at(curveWeights, k), limit, sums.curves);
         const magnitude = bicubicMoments(net, ox, oy, oz, rule, solid, surface);
-        if (nodes === MOST_NODES) sums.surfaceError[mesh.bodyOf[mesh.faceOf[corners[j]]]] += Math.abs(weights[k]) * mendSurfaceMoments(net, ox, oy, oz, surface);
+        if (nodes === MOST_NODES) sums.surfaceError[mesh.bodyOf[mesh.faceOf[corners[j]]]] += Math.abs(at(table.surfaceWeights, k)) * mendSurfaceMoments(net, ox, oy, oz, surface);
         if (k === 0) {
           solidScale += magnitude;
           areaScale += surface[0];
         }
-        addPatch(own, j, weights[k], k < check.length ? check[k] : 0, magnitude);
+        addPatch(own, j, table, k, magnitude);
       }
     }
-    if (nodes > FEWEST_NODES && k + 1 < weights.length && probe(state, k % n, k % 3, originOf(k % n), nodes, 3 * n, solidScale, areaScale, reach)) {
+    if (nodes > FEWEST_NODES && k + 1 < levels && probe(state, k % n, k % 3, originOf(k % n), nodes, 3 * n, solidScale, areaScale, reach)) {
       nodes--;
       const body = mesh.bodyOf[mesh.faceOf[corners[k % n]]];
       for (let i = 0; i < MOMENTS; i++) sums.closingError[MOMENTS * body + i] += 3 * n * Math.abs(coarseSolid[i] - solid[i]);
       sums.surfaceError[body] += 3 * n * Math.abs(coarseSurface[0] - surface[0]);
     }
   }
-  if (bordered) addRestOfCurves(mesh, corners, state, finer, weights.length, curveWeights, limit, sums.curves);
+  if (bordered) addRestOfCurves(mesh, corners, state, finer, levels, curveWeights, limit, sums.curves);
   finishFan(mesh, corners, own, sums);
 }
 
@@ -105,14 +107,21 @@ function probe(
   return true;
 }
 
-function addPatch(own: FanSums, sector: number, weight: number, checkWeight: number, magnitude: number): void {
-  const at = MOMENTS * sector;
+function at(weights: Float64Array, k: number): number {
+  return k < weights.length ? weights[k] : 0;
+}
+
+function addPatch(own: FanSums, sector: number, table: FanTable, k: number, magnitude: number): void {
+  const to = MOMENTS * sector;
+  const weight = at(table.weights, k);
+  const checkWeight = at(table.check, k);
+  const surfaceWeight = at(table.surfaceWeights, k);
   for (let i = 0; i < MOMENTS; i++) {
-    own.solid[at + i] += weight * solid[i];
-    own.surface[at + i] += weight * surface[i];
-    own.checkSolid[at + i] += checkWeight * solid[i];
+    own.solid[to + i] += weight * solid[i];
+    own.surface[to + i] += surfaceWeight * surface[i];
+    own.checkSolid[to + i] += checkWeight * solid[i];
   }
-  own.checkArea[sector] += checkWeight * surface[0];
+  own.checkArea[sector] += at(table.surfaceCheck, k) * surface[0];
   own.magnitude[sector] += Math.abs(weight) * magnitude;
 }
 

@@ -5,10 +5,16 @@ import { makeFanState, refineFan, type FanState } from './catmull-clark-fan';
 /** Digits to which a fan's tail is closed. */
 const TAIL_DIGITS = 15;
 
+/** Digits to which the surface moments of a fan with a crease or corner are summed. */
+const SURFACE_DIGITS = 12;
+
 /** Closing weights of one kind of fan. `check` are those of one level less, whose difference bounds the closing's error. */
 export interface FanTable {
   weights: Float64Array;
   check: Float64Array;
+  /** The same for the surface moments, whose terms are no finite sum of powers. */
+  surfaceWeights: Float64Array;
+  surfaceCheck: Float64Array;
   /** For curves through the centre, whose terms shrink more slowly: levels are closed in pairs, or the weights would grow to 1e7 and their rounding with them. */
   curveWeights: Float64Array;
 }
@@ -26,13 +32,26 @@ export function fanTable(fan: FanState): FanTable {
   const levels = tailLevels(largest, TAIL_DIGITS);
   const curve = Math.max(lambda, 0.5) ** 2;
   const pairs = tailWeights(curve, tailLevels(curve, TAIL_DIGITS));
+  const weights = tailWeights(largest, levels);
+  const check = tailWeights(largest, levels - 1);
+  // Around a smooth point the area's terms are as good as powers. Along creases and at corners two eigenvalues lie close together and the root
+  // mixes them without end: there the levels are summed until the rest, a geometric one by then, no longer counts.
+  const surfaceLevels = Math.ceil(-SURFACE_DIGITS / Math.log10(largest));
   const table = {
-    weights: tailWeights(largest, levels),
-    check: tailWeights(largest, levels - 1),
+    weights,
+    check,
+    surfaceWeights: isPlain(fan) ? weights : geometricWeights(largest, surfaceLevels),
+    surfaceCheck: isPlain(fan) ? check : geometricWeights(largest, surfaceLevels - 1),
     curveWeights: Float64Array.from({ length: 2 * pairs.length }, (_, k) => pairs[k >> 1]),
   };
   tables.set(key, table);
   return table;
+}
+
+function geometricWeights(ratio: number, levels: number): Float64Array {
+  const weights = new Float64Array(levels).fill(1);
+  weights[levels - 1] = 1 / (1 - ratio);
+  return weights;
 }
 
 function isPlain(fan: FanState): boolean {
