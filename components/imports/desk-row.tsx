@@ -10,6 +10,7 @@ import type { DeskFile, DeskRow as Row } from '@/hooks/use-import-desk';
 import { byteWords } from '@/lib/rules/byte-words';
 import { MAX_ASSET_CODE, type Outcome } from '@/lib/rules/import-plan';
 import { CATEGORIES, CATEGORY_WORDS } from '@/lib/rules/states';
+import { FilePath } from './file-path';
 import { UploadBar } from './upload-bar';
 
 export const DESK_COLUMNS = 'minmax(13rem,1.5fr) minmax(8rem,1fr) 5.5rem 8rem minmax(13rem,1.6fr) 5rem 2.5rem';
@@ -38,13 +39,7 @@ interface DeskRowProps {
 /** One file: where it comes from, where it goes, and what deserves a look. Asset and version can be said here. */
 export const DeskRow = memo(function DeskRow({ row, top, index, compact, locked, onChange, onRemove }: DeskRowProps) {
   const { desk, preview, upload } = row;
-  const slash = desk.path.lastIndexOf('/') + 1;
-  const path = (
-    <p className="min-w-0 truncate font-mono text-13" title={desk.path}>
-      <span className="text-ink-3">{desk.path.slice(0, slash)}</span>
-      {desk.path.slice(slash)}
-    </p>
-  );
+  const path = <FilePath path={desk.path} />;
   const asset = <AssetEntry key={`${desk.asset}|${preview.asset}`} row={row} locked={locked} onChange={onChange} />;
   const version = <VersionEntry key={`${desk.version}|${preview.label}`} row={row} locked={locked} onChange={onChange} />;
   const category =

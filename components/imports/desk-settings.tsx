@@ -18,8 +18,8 @@ export function DeskSettings({ options, standard, disabled, onChange }: DeskSett
   const choices = <Word extends string>(words: readonly Word[], names: Record<Word, string>, own: Word) =>
     words.map((word) => ({ value: word, label: names[word], detail: word === own ? 'show' : undefined }));
   return (
-    <div className="flex flex-wrap gap-x-4 gap-y-3">
-      <Field label="Scheme" className="w-52">
+    <div className="grid grid-cols-2 gap-x-3 gap-y-2 sm:flex sm:flex-wrap sm:gap-x-4">
+      <Field label="Scheme" className="sm:w-52">
         <Select
           options={choices(SCHEME_WORDS, SCHEME_NAMES, standard.scheme)}
           value={options.scheme}
@@ -27,7 +27,7 @@ export function DeskSettings({ options, standard, disabled, onChange }: DeskSett
           onValueChange={(value) => onChange({ ...options, scheme: SCHEME_WORDS.find((word) => word === value) ?? options.scheme })}
         />
       </Field>
-      <Field label="Open borders" className="w-52">
+      <Field label="Open borders" className="sm:w-52">
         <Select
           options={choices(BOUNDARY_WORDS, BOUNDARY_NAMES, standard.boundary)}
           value={options.boundary}
@@ -35,7 +35,7 @@ export function DeskSettings({ options, standard, disabled, onChange }: DeskSett
           onValueChange={(value) => onChange({ ...options, boundary: BOUNDARY_WORDS.find((word) => word === value) ?? options.boundary })}
         />
       </Field>
-      <Field label="A part is" className="w-44">
+      <Field label="A part is" className="sm:w-44">
         <Select
           options={choices(PARTITION_WORDS, PARTITION_NAMES, standard.partsBy)}
           value={options.partsBy}

@@ -23,7 +23,7 @@ export function DeskTable({ rows, locked, onChange, onRemove }: DeskTableProps) 
   const compact = width !== null && width < COMPACT_BELOW;
   const { items, height } = useVirtualRows(scroller, () => (compact ? DESK_CARD_HEIGHT : DESK_ROW_HEIGHT), rows.length, (index) => `${compact}${rows[index].desk.path}`, 36);
   return (
-    <div ref={scroller} role={compact ? 'list' : 'table'} aria-label="Files and where they go" aria-rowcount={compact ? undefined : rows.length + 1} tabIndex={0} className="min-h-0 flex-1 overflow-auto">
+    <div ref={scroller} role={compact ? 'list' : 'table'} aria-label="Files and where they go" aria-rowcount={compact ? undefined : rows.length + 1} tabIndex={0} className="min-h-0 flex-1 overflow-auto max-md:min-h-112 max-md:shrink-0">
       <div className={compact ? undefined : 'min-w-[54rem]'}>
         {compact ? null : (
           <div role="row" className="sticky top-0 z-10 grid h-9 items-center gap-x-3 border-b border-rule bg-ground px-4 text-12 text-ink-3 md:px-6" style={{ gridTemplateColumns: DESK_COLUMNS }}>

@@ -45,20 +45,20 @@ export function DropZone({ limits, onFiles, slim = false, disabled = false }: Dr
         slim ? 'flex flex-wrap items-center gap-x-5 gap-y-2 px-4 py-2.5' : 'flex min-h-72 flex-col items-start justify-center gap-4 px-6 py-12 md:px-12',
       )}
     >
-      <input {...getInputProps({ 'aria-label': 'Files' })} />
-      <input
-        ref={folder}
-        type="file"
-        multiple
-        aria-label="Folder"
-        tabIndex={-1}
-        className="sr-only"
-        {...FOLDER_PICKER}
-        onChange={(event) => {
-          onFiles([...(event.target.files ?? [])]);
-          event.target.value = '';
-        }}
-      />
+      <div hidden>
+        <input {...getInputProps({ 'aria-label': 'Files' })} />
+        <input
+          ref={folder}
+          type="file"
+          multiple
+          aria-label="Folder"
+          {...FOLDER_PICKER}
+          onChange={(event) => {
+            onFiles([...(event.target.files ?? [])]);
+            event.target.value = '';
+          }}
+        />
+      </div>
       <div className={slim ? 'min-w-0 flex-1' : 'max-w-xl'}>
         <p className={slim ? 'text-14' : 'text-22 font-medium'}>{isProcessing ? 'Reading the folder…' : isDragActive ? 'Let go to look at them' : slim ? 'Drop more files or folders' : 'Drop cages, or a folder of them'}</p>
         <p className={cn('text-ink-2', slim ? 'text-13' : 'mt-2 text-14')}>

@@ -70,7 +70,7 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
         </div>
       </div>
       <DeskTable rows={rows.filter(chosen.holds)} locked={locked} onChange={desk.change} onRemove={desk.remove} />
-      <footer className="flex flex-wrap items-center gap-x-5 gap-y-2 border-t border-rule bg-bench px-4 py-3 md:px-6">
+      <footer className="sticky bottom-0 flex flex-wrap items-center gap-x-5 gap-y-2 border-t border-rule bg-bench px-4 py-3 md:px-6">
         <div className="min-w-0 flex-1 basis-64">
           {locked ? (
             <SendingWords sent={rows.filter((row) => row.upload?.state === 'sent').length} total={going.length} share={bytes === 0 ? 1 : sentBytes / bytes} />

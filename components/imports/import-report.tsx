@@ -3,7 +3,7 @@
 import { Copy, RotateCcw } from 'lucide-react';
 import Link from 'next/link';
 import { parseAsStringLiteral, useQueryState } from 'nuqs';
-import { useState } from 'react';
+import { useMemo, useState } from 'react';
 import { toast } from 'sonner';
 import { PageHeading } from '@/components/shell/page-heading';
 import { Button } from '@/components/ui/button';
@@ -14,6 +14,7 @@ import { requestJson, RequestError } from '@/hooks/request-json';
 import { useImportLive } from '@/hooks/use-import-live';
 import { LOUD_REMARKS, type ImportDetail, type ImportFileAnswer } from '@/lib/rules/import-answer';
 import { noteToModelling } from '@/lib/rules/import-note';
+import { planImport } from '@/lib/rules/import-plan';
 import { ImportProgress } from './import-progress';
 import { ReportTable } from './report-table';
 
@@ -24,6 +25,8 @@ interface ImportReportProps {
   /** Address of this page, for the note. */
   address: string;
   mayImport: boolean;
+  /** The show's own pattern for names; null takes the built-in rule. */
+  namePattern: string | null;
 }
 
 const FILTER_KEYS = ['all', 'failed', 'problems', 'look', 'going', 'unchanged'] as const;
@@ -46,11 +49,12 @@ function urgency(file: ImportFileAnswer): number {
 }
 
 /** One import as it goes on and as it ended. Can be left and found again: all of it is on the server. */
-export function ImportReport({ show, upAxis, initial, address, mayImport }: ImportReportProps) {
+export function ImportReport({ show, upAxis, initial, address, mayImport, namePattern }: ImportReportProps) {
   const { detail, restart, isLate } = useImportLive(show, initial);
   const [filter, setFilter] = useQueryState('show', parseAsStringLiteral(FILTER_KEYS).withDefault('all'));
   const [busy, setBusy] = useState(false);
   const { files, counts, state } = detail;
+  const planned = useMemo(() => new Map(planImport(initial.files.map(({ name, asset }) => ({ name, asset })), namePattern).map((plan) => [plan.name, plan])), [initial.files, namePattern]);
   const isOver = state === 'done' || state === 'cancelled';
   const sorted = isOver ? files.toSorted((a, b) => urgency(a) - urgency(b) || (a.name < b.name ? -1 : 1)) : files;
   const note = noteToModelling(show, files, address);
@@ -111,7 +115,7 @@ export function ImportReport({ show, upAxis, initial, address, mayImport }: Impo
           {isLate ? ' · The server does not answer; what is shown may be old.' : isOver ? '' : ' · This page can be left; the import goes on.'}
         </p>
       </div>
-      <ReportTable show={show} upAxis={upAxis} files={sorted.filter(HOLDS[filter])} />
+      <ReportTable show={show} upAxis={upAxis} planned={planned} files={sorted.filter(HOLDS[filter])} />
       <p role="status" aria-live="polite" className="sr-only">
         {isOver ? `The import is ${state}. ${counts.done} measured, ${counts.failed} failed.` : ''}
       </p>

@@ -126,7 +126,7 @@ export function compareInProcessingOrder(a: Pick<PlannedFile, 'asset' | 'version
 function previewRow(file: PlannedFile, versionsOf: Map<string, number[]>, known: readonly KnownAsset[]): PreviewRow {
   if (file.asset === null) return { ...file, outcome: 'unmatched', label: null, warnings: ['The name does not match the show’s pattern. Give an asset.'] };
   const warnings: string[] = [];
-  if (file.qualified) warnings.push('The same name lies in another folder too, so the folder is part of the asset’s code.');
+  if (file.qualified) warnings.push('The same name is in another folder too: the folder joins the code.');
   const otherCase = known.find((asset) => asset.asset !== file.asset && asset.asset.toLowerCase() === file.asset!.toLowerCase());
   if (otherCase) warnings.push(`The show has ${otherCase.asset}; this one differs in upper and lower case only.`);
   const versions = versionsOf.get(file.asset);

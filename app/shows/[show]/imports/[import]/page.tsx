@@ -12,7 +12,7 @@ export const metadata: Metadata = { title: 'Import' };
 export default async function ImportPage({ params }: { params: Promise<{ show: string; import: string }> }) {
   const { show, import: id } = await params;
   const { context, access } = await getPageShow(show, 'readShow');
-  const { code, upAxis, archivedAt } = access.show;
+  const { code, upAxis, archivedAt, namePattern } = access.show;
   const detail = await getImport(context, { show: code, import: id }).catch((error: unknown) => {
     if (error instanceof StudioError && error.code === 'not_found') notFound();
     throw error;
@@ -24,6 +24,7 @@ export default async function ImportPage({ params }: { params: Promise<{ show: s
       upAxis={upAxis}
       initial={detail}
       address={`${config().baseUrl}/shows/${code}/imports/${detail.id}`}
+      namePattern={namePattern}
       mayImport={may(access.role, 'importCages') && archivedAt === null}
     />
   );
