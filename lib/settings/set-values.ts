@@ -15,7 +15,7 @@ import { getShowAccess } from '@/lib/shows/get-show-access';
 import { loadValueInputs, type LoadedPart } from '@/lib/values/load-value-inputs';
 import { lockShowValues } from '@/lib/values/lock-show-values';
 import type { MaterialNow } from '@/lib/values/value-inputs';
-import { writePartRows } from '@/lib/values/write-part-rows';
+import { updatePartRows } from '@/lib/values/write-part-rows';
 import { checkItems } from './check-items';
 import { findItemParts, type ItemPart } from './find-item-parts';
 import { insertSettings } from './insert-settings';
@@ -90,7 +90,7 @@ async function applyItems(tx: Transaction, acting: ActorContext, { showId, revis
   });
   if (changed.length === 0) return 0;
   const ids = await insertSettings(tx, changed, { setBy: acting.actor.userId, setFrom: acting.origin });
-  const written = await writePartRows(tx, changed.map((part) => ({ ...part, settingId: ids.get(part.partId) ?? null })), revision);
+  const written = await updatePartRows(tx, changed.map((part) => ({ ...part, settingId: ids.get(part.partId) ?? null })), revision);
   if (written.size !== changed.length) throw new StudioError('conflict', 'Rows changed while they were being set. Nothing was overwritten; try again.');
   const [first] = changed;
   const subject = changed.length === 1 ? `${first.asset}/${first.part}` : `${changed.length} parts`;

@@ -61,11 +61,21 @@ const COLUMNS = {
   max_valence: 'integer',
 } as const;
 
-type RowColumns = Record<keyof typeof COLUMNS, unknown>;
+type ColumnName = keyof typeof COLUMNS;
+type RowColumns = Record<ColumnName, unknown>;
+
+/** What comes with the version alone: no setting changes it. */
+const OF_VERSION: ReadonlySet<string> = new Set<ColumnName>([
+  'show_id', 'asset_id', 'version_id', 'geometry_part_id', 'asset', 'outside_id', 'category', 'version', 'part', 'scale', 'area_m2', 'space', 'up_axis', 'bounds_m', 'faces', 'max_valence',
+]);
 
 const names = Object.keys(COLUMNS);
+const ofSetting = names.filter((name) => !OF_VERSION.has(name));
 const list = sql.raw(names.join(', '));
-const recordTypes = sql.raw(Object.entries({ part_id: 'uuid', revision: 'integer', ...COLUMNS }).map(([name, type]) => `${name} ${type}`).join(', '));
+const typesOf = (columns: Record<string, string>) => sql.raw(Object.entries({ part_id: 'uuid', revision: 'integer', ...columns }).map(([name, type]) => `${name} ${type}`).join(', '));
+const recordTypes = typesOf(COLUMNS);
+const settingTypes = typesOf(Object.fromEntries(Object.entries(COLUMNS).filter(([name]) => !OF_VERSION.has(name))));
+const settingAssignments = sql.raw(ofSetting.map((name) => `${name} = given.${name}`).join(', '));
 const assignments = sql.raw(names.map((name) => `${name} = excluded.${name}`).join(', '));
 const stored = sql.raw(names.map((name) => `part_current.${name}`).join(', '));
 const given = sql.raw(names.map((name) => `excluded.${name}`).join(', '));
@@ -87,6 +97,27 @@ export async function writePartRows(tx: Transaction, parts: readonly LoadedPart[
       on conflict (part_id) do update set revision = part_current.revision + 1, changed_revision = excluded.changed_revision, updated_at = now(), ${assignments}
       where part_current.revision = excluded.revision and (${stored}) is distinct from (${given})
       returning part_id`);
+    for (const row of result.rows) written.add(row.part_id);
+  }
+  return written;
+}
+
+/**
+ * The same for parts whose settings alone changed and whose rows are there: narrower, and with one look at each index. A row that is
+ * not at the loaded revision any more is left as it is.
+ */
+export async function updatePartRows(tx: Transaction, parts: readonly LoadedPart[], showRevision: number): Promise<Set<string>> {
+  const written = new Set<string>();
+  for (let start = 0; start < parts.length; start += CHUNK) {
+    const rows = parts.slice(start, start + CHUNK).map((part) => {
+      const row: Partial<RowColumns> = rowOf(part);
+      return Object.fromEntries([['part_id', part.partId], ['revision', part.revision], ...Object.entries(row).filter(([name]) => !OF_VERSION.has(name))]);
+    });
+    const result = await tx.execute<{ part_id: string }>(sql`
+      update part_current set revision = part_current.revision + 1, changed_revision = ${showRevision}::bigint, updated_at = now(), ${settingAssignments}
+      from json_to_recordset(${JSON.stringify(rows)}::json) as given(${settingTypes})
+      where part_current.part_id = given.part_id and part_current.revision = given.revision
+      returning part_current.part_id`);
     for (const row of result.rows) written.add(row.part_id);
   }
   return written;
