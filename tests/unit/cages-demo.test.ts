@@ -116,7 +116,7 @@ describe('what the story needs', { timeout: 60_000 }, () => {
 
   it('a hump in v013 that adds nine per cent to the torso and nothing behind it', () => {
     expect(volumeOf(partOf('tarnOx_v013', 'torso')) / volumeOf(partOf('tarnOx_v012', 'torso'))).toBeCloseTo(1.09, 2);
-    expect(volumeOf(partOf('tarnOx_v013', 'shin_L'))).toBe(volumeOf(partOf('tarnOx_v012', 'shin_L')));
+    expect(volumeOf(partOf('tarnOx_v013', 'shin_L')) / volumeOf(partOf('tarnOx_v012', 'shin_L'))).toBeCloseTo(1, 13);
   });
 
   it('a bridge whose third version names a vertex that does not exist, with the earlier ones sound', () => {
@@ -134,7 +134,7 @@ describe('what the story needs', { timeout: 60_000 }, () => {
 
   it('a shin that is inside out in the second version of the rat and sound in the first', () => {
     expect(volumeOf(partOf('millRat_v001', 'shin_R'))).toBeGreaterThan(0);
-    expect(volumeOf(partOf('millRat_v002', 'shin_R'))).toBe(-volumeOf(partOf('millRat_v001', 'shin_R')));
+    expect(volumeOf(partOf('millRat_v002', 'shin_R')) / volumeOf(partOf('millRat_v001', 'shin_R'))).toBeCloseTo(-1, 13);
   });
 
   it('a bell whose crown has a cavity', () => {

@@ -65,9 +65,9 @@ function tube(sections: readonly Section[], columns: number): Vec[][] {
 /** The ringer's coat in closed thin pieces that stand off the body: skirted body, sleeves, collar, belt. */
 export function coat(): CageDraft {
   const draft = new CageDraft();
-  const body: Section[] = [[56, 31, 26], [70, 28, 23.5], [84, 25, 20.5], [96, 22.5, 17.5], [106, 21.5, 16.5], [116, 21.5, 16.2], [126, 21.8, 15.6]];
+  const body: Section[] = [[56, 31, 26], [70, 28, 23.5], [84, 25, 20.5], [96, 22.5, 17.5], [106, 21.5, 16.5], [116, 21.5, 16.2], [126, 21.8, 15.6], [131, 22, 15.2]];
   layPlate(draft, 'body', tube(body, 20), CLOTH, { around: true });
-  layPlate(draft, 'collar', tube([[133, 27, 15.8], [137.5, 24, 14.4], [141, 18, 12.4], [143.5, 12, 10.4], [147, 9.2, 9.2]], 20), CLOTH, { around: true });
+  layPlate(draft, 'collar', tube([[128.6, 28.6, 17.4], [133, 27, 16.4], [137.5, 24, 14.4], [141, 18, 12.4], [143.5, 12, 10.4], [147, 9.2, 9.2]], 20), CLOTH, { around: true });
   layHoop(draft, 'belt', { centre: [0, 104, 0], axis: [0, 1, 0], hint: [1, 0, 0], radii: [22.6, 17.6], width: 6, thickness: 0.6 });
   for (const side of [1, -1]) laySleeve(draft, side > 0 ? 'sleeve_L' : 'sleeve_R', side);
   return draft;

@@ -31,8 +31,8 @@ interface DemoVersion {
 }
 
 const GROWN: OxBuild = { hump: 0, horns: 1, legs: 1, size: 1 };
-const FERRYWOMAN = { height: 166, hips: 1.06, waist: 0.98, chest: 0.98, shoulders: 0.94, limbs: 0.98, chin: 0 };
-const RINGER = { height: 174, hips: 1.08, waist: 1.28, chest: 1.12, shoulders: 1.12, limbs: 1.14, chin: 3 };
+const FERRYWOMAN = { height: 166, hips: 1.06, waist: 0.98, chest: 0.98, shoulders: 0.94, limbs: 0.98, chin: 0.6, bun: true };
+const RINGER = { height: 174, hips: 1.08, waist: 1.28, chest: 1.12, shoulders: 1.12, limbs: 1.14, chin: 3.4, bun: false };
 
 function reversedShin(): CageDraft {
   const draft = rat();

@@ -56,15 +56,15 @@ export function oxTrunk(height: number): TrunkStation[] {
     { z: -18, y: 103.5, radii: [33, 34.5], part: 'torso', shift: hump(0.12) },
     { z: 10, y: 102.5, radii: [34, 37], part: 'torso', shift: hump(0.55) },
     { z: 33, y: 106, radii: [29.5, 39.5], part: 'torso', shift: hump(1) },
-    { z: 56, y: 111, radii: [25, 35.5], part: 'torso', shift: hump(0.6) },
-    { z: 74, y: 118, radii: [18, 28], part: 'neck', towards: [0.45, 1] },
-    { z: 91, y: 129, radii: [13.5, 22], part: 'neck', towards: [0.5, 1] },
+    { z: 56, y: 111, radii: [26, 35.5], part: 'torso', shift: { ...hump(0.6), 0: [0, -4] } },
+    { z: 74, y: 118, radii: [18.5, 28], part: 'neck', towards: [0.45, 1], shift: { 0: [0, -10], 1: [-4, -3] } },
+    { z: 91, y: 129, radii: [13.5, 22], part: 'neck', towards: [0.5, 1], shift: { 0: [0, -9], 1: [-3.5, -2] } },
     { z: 106, y: 138, radii: [12.5, 17], part: 'head', towards: [0.25, 1] },
     { z: 117, y: 140, radii: [13.5, 15], part: 'head', towards: [-0.45, 1] },
     { z: 127, y: 134, radii: [12.5, 14], part: 'head', towards: [-0.8, 1], square: 1.15 },
     { z: 137, y: 122, radii: [10, 12.5], part: 'head', towards: [-1, 1] },
     { z: 145, y: 112, radii: [8.5, 10], part: 'muzzle', towards: [-1, 1] },
-    { z: 152, y: 104, radii: [9.5, 9.5], part: 'muzzle', towards: [-1, 1], square: 1.15 },
+    { z: 152, y: 104, radii: [10.4, 9.6], part: 'muzzle', towards: [-1, 1], square: 1.15 },
     { z: 157, y: 98, radii: [7.5, 7.5], part: 'muzzle', towards: [-1, 1], square: 1.15 },
   ];
 }
@@ -72,8 +72,8 @@ export function oxTrunk(height: number): TrunkStation[] {
 function foreleg(): LimbStation[] {
   const x = 19;
   return [
-    { at: [x + 3, 76, 30], radii: [15, 9], part: 'foreleg_L' },
-    { at: [x + 2, 62, 27], radii: [10.5, 8], part: 'foreleg_L' },
+    { at: [x + 4, 78, 32], radii: [16.5, 9.5], part: 'foreleg_L' },
+    { at: [x + 2, 62, 28], radii: [11, 8.6], part: 'foreleg_L' },
     { at: [x, 48, 29], radii: [6.6, 6.2], part: 'foreleg_L' },
     { at: [x, 42, 30.5], radii: [6.4, 6], part: 'foreleg_L' },
     { at: [x, 36, 30], radii: [5.4, 5.2], part: 'foreshin_L' },

@@ -1,5 +1,5 @@
 import { CageDraft } from './cage-draft';
-import { closeTrunk, forkTrunk, layTrunk, nearEnd, type TrunkStation } from './half-tube';
+import { closeTrunk, forkTrunk, growTrunk, layTrunk, nearEnd, type HalfRing, type Opening, type TrunkStation } from './half-tube';
 import { growLimb, type LimbStation } from './rings';
 import { times } from './vector';
 
@@ -13,18 +13,23 @@ export interface Build {
   limbs: number;
   /** How far a beard (or a chin) stands forward, cm. */
   chin: number;
+  /** Hair tied in a bun. */
+  bun: boolean;
 }
 
 /** Height of the figure before it is scaled. */
 const DRAWN = 180;
+/** Faces of the head that the bun grows from. */
+const NAPE: Opening = { rows: [12, 14], columns: [4, 5] };
 
 /** A standing person with arms held away from the body: trunk, head, arms and legs on one skin. */
 export function person(build: Build): CageDraft {
   const draft = new CageDraft();
-  const trunk = layTrunk(draft, trunkStations(build), 5, [{ rows: [5, 7], columns: [2, 3] }]);
+  const trunk = layTrunk(draft, trunkStations(build), 5, [{ rows: [5, 7], columns: [2, 3] }, ...(build.bun ? [NAPE] : [])]);
   closeTrunk(draft, 'head', trunk.rows[trunk.rows.length - 1], [0, 0.6, 0]);
   growLimb(draft, forkTrunk(draft, nearEnd(trunk), [0, -1.5, 0]), leg(build.limbs), { hint: [1, 0, 0] });
   growLimb(draft, trunk.openings[0], arm(build), { hint: [0, 0, 1] });
+  if (build.bun) growBun(draft, trunk.openings[1]);
   draft.mirror();
   draft.reshape((point) => times(point, build.height / DRAWN));
   return draft;
@@ -44,12 +49,22 @@ function trunkStations({ hips, waist, chest, shoulders, chin }: Build): TrunkSta
     { y: 149.5, z: -1, radii: [6.2, 6.2], part: 'neck', ...up },
     { y: 155, z: 0.5, radii: [5.5, 5.8], part: 'neck', ...up },
     { y: 158.5, z: 2, radii: [6.2, 7.4], part: 'head', ...up, shift: { 0: [0, -chin], 1: [0, -chin * 0.6] } },
-    { y: 164, z: 2, radii: [7.2, 9.4], part: 'head', ...up, shift: { 0: [0, -1.7] } },
-    { y: 168, z: 1.4, radii: [7.6, 9.9], part: 'head', ...up, shift: { 0: [0, 0.2], 1: [0, 0.7] } },
+    { y: 164, z: 2, radii: [7.2, 9.4], part: 'head', ...up, shift: { 0: [0, -2.6], 1: [0, 0.5] } },
+    { y: 168, z: 1.4, radii: [7.6, 9.9], part: 'head', ...up, shift: { 0: [0, 0.4], 1: [0, 1.5] } },
     { y: 173, z: 1, radii: [7.7, 9.8], part: 'head', ...up },
     { y: 178, z: 0.5, radii: [6, 7.6], part: 'head', ...up },
     { y: 180, z: 0.5, radii: [3, 4], part: 'head', ...up },
   ];
+}
+
+function growBun(draft: CageDraft, start: HalfRing): void {
+  const back = { part: 'head', towards: [0.2, -1] } as const;
+  const trunk = growTrunk(draft, start, 'head', [
+    { y: 170.4, z: -11, radii: [3, 3], ...back },
+    { y: 170.9, z: -13, radii: [4, 4], ...back },
+    { y: 171.4, z: -15.4, radii: [3.6, 3.6], ...back },
+  ]);
+  closeTrunk(draft, 'head', trunk.rows[trunk.rows.length - 1], [0, 0.1, -0.6]);
 }
 
 function leg(limbs: number): LimbStation[] {

@@ -34,11 +34,12 @@ export function toad(throat: number): CageDraft {
     draft,
     eye,
     [
-      { at: [11.2, 39, 23.5], radii: [4.6, 4.6], part: 'eye_L' },
-      { at: [12.4, 41.5, 24.3], radii: [4.9, 4.9], part: 'eye_L' },
-      { at: [13.4, 44, 25], radii: [3.4, 3.4], part: 'eye_L' },
+      { at: [11.3, 35.4, 23.5], radii: [4.3, 4.2], part: 'eye_L' },
+      { at: [12, 37.6, 24.2], radii: [5, 4.9], part: 'eye_L' },
+      { at: [12.7, 40, 24.8], radii: [4.4, 4.3], part: 'eye_L' },
+      { at: [13.1, 41.8, 25.2], radii: [2, 2], part: 'eye_L' },
     ],
-    { hint: [0, 0, 1], bulge: 1 },
+    { hint: [0, 0, 1], bulge: 0.8 },
   );
   growSac(draft, sac, throat);
   growLimb(
