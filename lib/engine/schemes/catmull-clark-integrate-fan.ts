@@ -2,7 +2,7 @@ import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
 import { MOMENTS } from '../moments/sums';
 import { bicubicMoments } from '../patches/bicubic';
-import { mendSurfaceMoments } from '../patches/bicubic-surface';
+import { bicubicArea, mendSurfaceMoments } from '../patches/bicubic-surface';
 import { gaussRule } from '../patches/gauss-rule';
 import type { Fans } from './catmull-clark-classify';
 import { approximateLimit, fillChildNet, makeFanState, refineFan, translateFan, type FanState } from './catmull-clark-fan';
@@ -62,6 +62,8 @@ export function integrateFan(mesh: LevelMesh, fans: Fans, index: number, origins
   let nodes = MOST_NODES;
   let solidScale = 0;
   let areaScale = 0;
+  let worst = 0;
+  let worstError = 0;
   for (let k = 0; k < levels; k++) {
     refineFan(state, finer);
     [state, finer] = [finer, state];
@@ -72,7 +74,14 @@ export function integrateFan(mesh: LevelMesh, fans: Fans, index: number, origins
         fillChildNet(state, j, child, net);
         if (bordered) addFanCurves(mesh, corners[j], child, k, at(curveWeights, k), limit, sums.curves);
         const magnitude = bicubicMoments(net, ox, oy, oz, rule, solid, surface);
-        if (nodes === MOST_NODES) sums.surfaceError[mesh.bodyOf[mesh.faceOf[corners[j]]]] += Math.abs(at(table.surfaceWeights, k)) * mendSurfaceMoments(net, ox, oy, oz, surface);
+        if (nodes === MOST_NODES) {
+          const error = mendSurfaceMoments(net, ox, oy, oz, surface, bicubicArea(net));
+          sums.surfaceError[mesh.bodyOf[mesh.faceOf[corners[j]]]] += Math.abs(at(table.surfaceWeights, k)) * error;
+          if (error > worstError) {
+            worstError = error;
+            worst = 3 * j + child;
+          }
+        }
         if (k === 0) {
           solidScale += magnitude;
           areaScale += surface[0];
@@ -80,9 +89,16 @@ export function integrateFan(mesh: LevelMesh, fans: Fans, index: number, origins
         addPatch(own, j, table, k, magnitude);
       }
     }
-    if (nodes > FEWEST_NODES && k + 1 < levels && probe(state, k % n, k % 3, originOf(k % n), nodes, 3 * n, solidScale, areaScale, reach)) {
+    worstError = 0;
+    if (nodes === FEWEST_NODES || k + 1 >= levels) continue;
+    // The patch that erred most and one in turn speak for all.
+    const fewer = [(7 * k) % (3 * n), worst].every((patch) => {
+      const j = Math.floor(patch / 3);
+      return probe(state, j, patch % 3, originOf(j), nodes, 3 * n, solidScale, areaScale, reach);
+    });
+    if (fewer) {
       nodes--;
-      const body = mesh.bodyOf[mesh.faceOf[corners[k % n]]];
+      const body = mesh.bodyOf[mesh.faceOf[corners[Math.floor(worst / 3)]]];
       for (let i = 0; i < MOMENTS; i++) sums.closingError[MOMENTS * body + i] += 3 * n * Math.abs(coarseSolid[i] - solid[i]);
       sums.surfaceError[body] += 3 * n * Math.abs(coarseSurface[0] - surface[0]);
     }
