@@ -11,7 +11,8 @@ function isInstalled() {
   const wanted = JSON.parse(readFileSync(inRoot('package-lock.json'), 'utf8')).packages;
   return Object.entries(wanted).every(([place, { version, optional, peer, link }]) => {
     if (place === '' || link) return true;
-    return installed[place] ? installed[place].version === version : Boolean(optional || peer);
+    if (!installed[place]) return Boolean(optional || peer);
+    return installed[place].version === version && existsSync(inRoot(place));
   });
 }
 
