@@ -1,8 +1,12 @@
+import { powerArea } from '../kernel/bicubic-scalar';
 import { netToPowers } from './bicubic-powers';
 import { gaussRule } from './gauss-rule';
 
+/** Gauss nodes a direction of the rule whose area the finer one's is compared with. */
+export const COARSE_NODES = 4;
+
 const FINE = gaussRule(7);
-const COARSE = gaussRule(4);
+const COARSE = gaussRule(COARSE_NODES);
 
 /** Part of a patch's area that its error may be; beyond it the patch is quartered. */
 const TOLERANCE = 1e-12;
@@ -17,19 +21,25 @@ const square = new Float64Array(10);
 /**
  * Checks and if need be mends the ten surface moments of a bicubic patch: `surface` comes with the values of 7 × 7 nodes and leaves with an
  * error of about 1e-12 of the area. The integrand holds a root, so the error is estimated by comparing two rules and large ones are quartered.
- * Returns the estimated error of the area.
+ * `coarseArea` is the area by COARSE_NODES (see `bicubicArea`). Returns the estimated error of the area.
  */
-export function mendSurfaceMoments(net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array): number {
+export function mendSurfaceMoments(net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array, coarseArea: number): number {
+  const area = surface[0];
+  const error = estimate(area, coarseArea);
+  const tolerance = TOLERANCE * area;
+  if (!(error > tolerance)) return error;
   netToPowers(net, powers);
   powers[0] -= ox;
   powers[1] -= oy;
   powers[2] -= oz;
-  const area = surface[0];
-  const error = estimate(area, areaOf(0, 0, 1));
-  const tolerance = TOLERANCE * area;
-  if (!(error > tolerance)) return error;
   surface.fill(0);
   return quarter(0, 0, 1, tolerance, 1, surface);
+}
+
+/** Area of a bicubic patch by COARSE_NODES a direction. */
+export function bicubicArea(net: Float64Array): number {
+  netToPowers(net, powers);
+  return powerArea(powers, COARSE);
 }
 
 function estimate(fine: number, coarse: number): number {

@@ -1,8 +1,6 @@
+import { RegularPatches } from '../kernel/regular-patches';
+import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
-import { MOMENTS } from '../moments/sums';
-import { bicubicMoments } from '../patches/bicubic';
-import { mendSurfaceMoments } from '../patches/bicubic-surface';
-import { gaussRule } from '../patches/gauss-rule';
 import { classifyVertices, isRegularFace, type Fans } from './catmull-clark-classify';
 import { integrateFan } from './catmull-clark-integrate-fan';
 import { fillNet } from './catmull-clark-net';
@@ -13,13 +11,8 @@ import type { RefinementRules } from './refinement-rules';
 /** Refinements after which a cage that still is not resolved is given up; sharpness below 10 needs at most 12. */
 const MOST_LEVELS = 16;
 
-/** Exact for the ten solid moments of a bicubic patch: degree 13 a direction. */
-const EXACT_RULE = gaussRule(7);
-
 const NO_SHIFT = new Float64Array(3);
 const net = new Float64Array(48);
-const solid = new Float64Array(MOMENTS);
-const surface = new Float64Array(MOMENTS);
 
 /**
  * Integrates the Catmull-Clark limit surface of the live faces of `cage` about the bodies' origins (x, y, z each, in the cage's frame).
@@ -28,16 +21,18 @@ const surface = new Float64Array(MOMENTS);
  */
 export function integrateCatmullClark(cage: LevelMesh, rules: RefinementRules, origins: Float64Array, sums: LimitSums): boolean {
   let mesh = cage;
+  const patches = new RegularPatches(origins, sums);
   for (let level = 0; level <= MOST_LEVELS; level++) {
     const { kinds, fans } = classifyVertices(mesh);
     let left = 0;
     for (let face = 0; face < mesh.faces; face++) {
       if (mesh.live[face] === 0) continue;
       if (isRegularFace(mesh, kinds, face, -1)) {
-        addRegularFace(mesh, face, origins, sums);
+        addRegularFace(mesh, face, patches, sums.curves);
         mesh.live[face] = 0;
       } else left++;
     }
+    patches.flush();
     for (let fan = 0; fan < fans.centre.length && left > 0; fan++) {
       if (!isIsolated(mesh, kinds, fans, fan)) continue;
       integrateFan(mesh, fans, fan, origins, sums);
@@ -58,16 +53,12 @@ function isIsolated(mesh: LevelMesh, kinds: Uint8Array, fans: Fans, fan: number)
   return true;
 }
 
-function addRegularFace(mesh: LevelMesh, face: number, origins: Float64Array, sums: LimitSums): void {
-  const body = mesh.bodyOf[face];
+function addRegularFace(mesh: LevelMesh, face: number, patches: RegularPatches, curves: BorderCurves): void {
   const start = mesh.starts[face];
   fillNet(mesh, start, false, net);
-  sums.solid.magnitudes[body] += bicubicMoments(net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2], EXACT_RULE, solid, surface);
-  sums.surfaceError[body] += mendSurfaceMoments(net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2], surface);
-  sums.solid.add(body, solid, 0);
-  sums.surface.add(body, surface, 0);
+  patches.add(mesh.bodyOf[face], net);
   for (let side = 0; side < 4; side++) {
     const edge = mesh.borderOf[start + side];
-    if (edge >= 0) sums.curves.addSide(net, side, edge, 1, mesh.borderFrom[start + side], 2 ** -mesh.level, NO_SHIFT);
+    if (edge >= 0) curves.addSide(net, side, edge, 1, mesh.borderFrom[start + side], 2 ** -mesh.level, NO_SHIFT);
   }
 }
