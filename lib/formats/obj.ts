@@ -32,6 +32,8 @@ export const OBJ_LIMITS: ObjLimits = {
 /** Beyond this the second moments of a solid leave the range of a double. */
 const MAX_COORDINATE = 1e50;
 const MIN_CORNERS = 3;
+const LETTER_F = 0x66;
+const LETTER_V = 0x76;
 const SLASH = 0x2f;
 const SPACE = 0x20;
 const COORDINATE = ['a number for x', 'a number for y', 'a number for z'];
@@ -46,9 +48,12 @@ const NOT_POLYGONS = new Map([
   ['call', 'another file called from this one'],
 ]);
 
+/** Second letters of vt, vn and vp: texture coordinates, normals, parameter points. */
+const WITHOUT_EFFECT_AFTER_V = new Set([0x74, 0x6e, 0x70]);
+
 /** Words of the format that say nothing about polygons. */
 const WITHOUT_EFFECT = new Set(
-  ('vt vn vp s mg mtllib usemap maplib cstype deg bmat step parm trim hole scrv sp end con bevel c_interp d_interp lod ' +
+  ('s mg mtllib usemap maplib cstype deg bmat step parm trim hole scrv sp end con bevel c_interp d_interp lod ' +
     'shadow_obj trace_obj ctech stech csh bsp bzp cdc cdp res vw').split(' '),
 );
 
@@ -112,14 +117,14 @@ class ObjReader {
     if (!cursor.nextWord()) return;
     const keyword = cursor.at;
     const length = cursor.wordEnd() - keyword;
-    // The two words that make up nearly all of a file are told apart without making a string.
-    if (length === 1 && bytes[keyword] === 0x76) {
+    // The words that make up nearly all of a file (v, f; vt, vn, vp) are told apart without making a string.
+    if (length === 1 && bytes[keyword] === LETTER_V) {
       cursor.at++;
       this.readVertex();
-    } else if (length === 1 && bytes[keyword] === 0x66) {
+    } else if (length === 1 && bytes[keyword] === LETTER_F) {
       cursor.at++;
       this.readFace(keyword);
-    } else this.readOther(cursor.word(), keyword);
+    } else if (length !== 2 || bytes[keyword] !== LETTER_V || !WITHOUT_EFFECT_AFTER_V.has(bytes[keyword + 1])) this.readOther(cursor.word(), keyword);
   }
 
   private readOther(word: string, at: number): void {
