@@ -78,6 +78,7 @@ export function useSetValues(show: string) {
         const answer = await requestJson<PatchAnswer>(partsPath(show), { method: 'PATCH', body: { items } });
         for (const row of answer.items ?? []) own.current.set(partKey(row), row.revision);
         take(answer);
+        void client.invalidateQueries({ queryKey: ['part', show] });
         return { kind: 'saved', rows: changes.length, act: null };
       } catch (error) {
         return outcomeOf(error, changes);
@@ -85,7 +86,7 @@ export function useSetValues(show: string) {
         setSaving((now) => new Set([...now].filter((key) => !keys.includes(key))));
       }
     },
-    [show, take],
+    [client, show, take],
   );
 
   const send = useCallback(

@@ -6,9 +6,11 @@ import { Table, TableCell, TableHead, TableRow } from '@/components/ui/table';
 import type { Conflict, RowChange } from '@/hooks/use-set-values';
 import { partKey, rowName } from '@/lib/rules/part-key';
 import { setByWords, sourceSentence } from '@/lib/rules/source-words';
+import type { LinearUnit } from '@/lib/rules/units';
 import { changeWords } from './change-words';
 
 interface ConflictDialogProps {
+  unit: LinearUnit;
   conflict: Conflict | null;
   onKeepTheirs: (conflict: Conflict) => void;
   onSetMine: (changes: RowChange[]) => void;
@@ -16,7 +18,7 @@ interface ConflictDialogProps {
 }
 
 /** Somebody else was quicker: what the rows hold now beside what was typed, which is kept until one of the two is chosen. */
-export function ConflictDialog({ conflict, onKeepTheirs, onSetMine, onClose }: ConflictDialogProps) {
+export function ConflictDialog({ unit, conflict, onKeepTheirs, onSetMine, onClose }: ConflictDialogProps) {
   if (conflict === null) return null;
   const newer = new Map(conflict.moved.map(({ current }) => [partKey(current), current]));
   const mine = () =>
@@ -47,7 +49,7 @@ export function ConflictDialog({ conflict, onKeepTheirs, onSetMine, onClose }: C
                 {sourceSentence(current)}
                 <span className="block text-13 text-ink-3">{setByWords(current)}</span>
               </TableCell>
-              <TableCell className="align-top whitespace-normal">{changeWords(change)}</TableCell>
+              <TableCell className="align-top whitespace-normal">{changeWords(change, unit)}</TableCell>
             </TableRow>
           ))}
         </tbody>

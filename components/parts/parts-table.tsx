@@ -219,6 +219,7 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
         onClose={() => setFormRows(null)}
       />
       <ConflictDialog
+        unit={frame.linear_unit}
         conflict={save.conflict}
         onKeepTheirs={save.keepTheirs}
         onSetMine={(changes) => void save.set(changes)}

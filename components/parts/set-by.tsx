@@ -1,15 +1,6 @@
-'use client';
-
+import { Moment } from '@/components/ui/moment';
 import type { PartRow } from '@/lib/rules/part-row';
 import { setByWords } from '@/lib/rules/source-words';
-
-const DAY = new Intl.DateTimeFormat('en-GB', {
-  day: 'numeric',
-  month: 'short',
-  year: 'numeric',
-  hour: '2-digit',
-  minute: '2-digit',
-});
 
 /** Who set the value, from where and when. */
 export function SetBy({ row }: { row: PartRow }) {
@@ -20,10 +11,7 @@ export function SetBy({ row }: { row: PartRow }) {
       {words}
       {row.set_at === null ? null : (
         <>
-          ,{' '}
-          <time dateTime={row.set_at} suppressHydrationWarning>
-            {DAY.format(new Date(row.set_at))}
-          </time>
+          , <Moment at={row.set_at} />
         </>
       )}
     </p>

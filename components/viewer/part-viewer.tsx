@@ -1,0 +1,117 @@
+'use client';
+
+import { Maximize } from 'lucide-react';
+import dynamic from 'next/dynamic';
+import { Component, useState, useSyncExternalStore, type ReactNode } from 'react';
+import { Chip } from '@/components/ui/chip';
+import { IconButton } from '@/components/ui/icon-button';
+import { useTokenColours } from '@/hooks/use-token-colours';
+import type { LinearUnit, UpAxis } from '@/lib/rules/units';
+import { describeWeight } from './describe-weight';
+import type { DrawnWeight, ViewChoices } from './part-scene';
+import type { DrawnAsset } from './read-asset-mesh';
+
+// three.js is read only where something is drawn.
+const PartScene = dynamic(() => import('./part-scene'), { ssr: false });
+
+interface PartViewerProps {
+  asset: DrawnAsset | null;
+  part: string;
+  weight: DrawnWeight | null;
+  unit: LinearUnit;
+  up: UpAxis;
+  /** Why there is nothing to draw. */
+  failure?: string | null;
+}
+
+const CHOICES: readonly { key: keyof ViewChoices; label: string; needsWeight: boolean }[] = [
+  { key: 'cage', label: 'Control cage', needsWeight: false },
+  { key: 'axes', label: 'Principal axes', needsWeight: true },
+  { key: 'solid', label: 'Equal solid ellipsoid', needsWeight: true },
+  { key: 'rest', label: 'Rest of the asset', needsWeight: false },
+];
+
+/** The limit surface in three dimensions, with its centre of mass and principal axes; the same in words for who does not see it. */
+export function PartViewer({ asset, part, weight, unit, up, failure = null }: PartViewerProps) {
+  const [choices, setChoices] = useState<ViewChoices>({ cage: false, axes: true, solid: false, rest: false });
+  const [fit, setFit] = useState(0);
+  const colours = useTokenColours();
+  const drawable = useSyncExternalStore(noChange, canDraw, () => true);
+  const told = failure ?? (drawable ? null : 'This browser cannot draw in three dimensions.');
+
+  return (
+    <figure className="flex min-h-0 flex-1 flex-col">
+      <div
+        data-viewer
+        tabIndex={told === null ? 0 : undefined}
+        role="group"
+        aria-label={`Limit surface of ${part}. Arrow keys turn it.`}
+        className="relative min-h-80 flex-1 touch-none overflow-hidden focus-visible:-outline-offset-2"
+      >
+        {told !== null ? (
+          <p className="flex h-full items-center justify-center px-6 text-14 text-ink-2">{told}</p>
+        ) : asset === null || colours === null ? (
+          <p role="status" className="flex h-full items-center justify-center text-14 text-ink-3">
+            Reading the surface
+          </p>
+        ) : (
+          <DrawingBoundary>
+            <PartScene
+              asset={asset}
+              part={part}
+              weight={weight}
+              choices={choices}
+              up={up}
+              fit={fit}
+              colours={colours}
+            />
+          </DrawingBoundary>
+        )}
+      </div>
+      <div className="flex items-center gap-2 overflow-x-auto border-t border-rule px-4 py-2">
+        {CHOICES.map(({ key, label, needsWeight }) => (
+          <Chip
+            key={key}
+            pressed={choices[key]}
+            disabled={needsWeight && weight === null}
+            className="disabled:opacity-50"
+            onClick={() => setChoices((now) => ({ ...now, [key]: !now[key] }))}
+          >
+            {label}
+          </Chip>
+        ))}
+        <IconButton label="Bring into view" className="ml-auto" onClick={() => setFit((now) => now + 1)}>
+          <Maximize aria-hidden />
+        </IconButton>
+      </div>
+      <figcaption className="sr-only">{describeWeight(part, weight, unit)}</figcaption>
+    </figure>
+  );
+}
+
+const noChange = () => () => undefined;
+
+let drawableHere: boolean | null = null;
+
+function canDraw(): boolean {
+  drawableHere ??= document.createElement('canvas').getContext('webgl2') !== null;
+  return drawableHere;
+}
+
+/** A drawing that breaks does not take the numbers with it. */
+class DrawingBoundary extends Component<{ children: ReactNode }, { broken: boolean }> {
+  override state = { broken: false };
+
+  static getDerivedStateFromError() {
+    return { broken: true };
+  }
+
+  override render() {
+    if (!this.state.broken) return this.props.children;
+    return (
+      <p className="flex h-full items-center justify-center px-6 text-14 text-ink-2">
+        The surface could not be drawn. The numbers stand beside it.
+      </p>
+    );
+  }
+}
