@@ -90,7 +90,7 @@ export function sign(): CageDraft {
   const draft = new CageDraft();
   layBar(draft, 'post', [0, 0, 0], [0, 300, 0], [1, 0, 0], [14, 14]);
   layBar(draft, 'post', [7, 276, 0], [96, 276, 0], UP, [9, 9]);
-  layBar(draft, 'post', [10, 251, 0], [26, 267.4, 0], [0, 0, 1], [6, 6]);
+  layPlank(draft, 'post', [[7.3, 236, 3], [7.3, 236, -3], [7.3, 246, -3], [7.3, 246, 3], [36, 271.2, 3], [36, 271.2, -3], [26, 271.2, -3], [26, 271.2, 3]]);
   const z = 2.2;
   layPlank(draft, 'board', [[34, 206, z], [90, 206, z], [90, 206, -z], [34, 206, -z], [31, 261, z], [93, 261, z], [93, 261, -z], [31, 261, -z]]);
   for (const x of [42, 82]) layHoop(draft, 'board', { centre: [x, 266.2, 0], axis: [1, 0, 0], hint: UP, radii: [4.6, 3.4], width: 1.6, thickness: 0.7 });
