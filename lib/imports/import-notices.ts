@@ -4,7 +4,7 @@ import { log } from '@/lib/log';
 import { IMPORT_CHANNEL } from './notify-import';
 
 /** A reader hears of one import at most this often. */
-const QUIET_MS = 1_000;
+export const QUIET_MS = 1_000;
 const RECONNECT_MS = 2_000;
 
 type Reader = () => void;

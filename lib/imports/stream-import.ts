@@ -8,7 +8,7 @@ import type { ImportRefInput } from '@/lib/rules/inputs/import-ref';
 import { getShowAccess } from '@/lib/shows/get-show-access';
 import { describeImport } from './describe-import';
 import { getImportRow } from './get-import-row';
-import { onImportNotice } from './import-notices';
+import { onImportNotice, QUIET_MS } from './import-notices';
 import { listImportFiles } from './list-import-files';
 import { registerStream } from './open-streams';
 
@@ -35,6 +35,7 @@ export async function streamImport(context: Context, input: ImportRefInput, requ
 /** What one reader was told already, so that an event has only what is new to them. */
 class ImportTeller {
   private readonly told = new Map<string, string>();
+  private toldState = '';
 
   constructor(
     private readonly db: Database,
@@ -43,12 +44,16 @@ class ImportTeller {
     private since: number,
   ) {}
 
-  async next(): Promise<{ event: string; isOver: boolean }> {
+  /** The next event; null when nothing changed for this reader. */
+  async next(): Promise<{ event: string | null; isOver: boolean }> {
     const { detail, now } = await this.read();
     const files = detail.files.filter((file) => this.isNew(file));
     this.since = now;
     const isOver = detail.state === 'done' || detail.state === 'cancelled';
-    return { event: `id: ${now}\nevent: import\ndata: ${JSON.stringify({ ...detail, files })}\n\n`, isOver };
+    const state = JSON.stringify([detail.state, detail.counts]);
+    const isSame = files.length === 0 && state === this.toldState;
+    this.toldState = state;
+    return { event: isSame ? null : `id: ${now}\nevent: import\ndata: ${JSON.stringify({ ...detail, files })}\n\n`, isOver };
   }
 
   private read(): Promise<{ detail: ImportDetail; now: number }> {
@@ -77,25 +82,27 @@ function eventStream(teller: ImportTeller, id: string, signal: AbortSignal): Rea
   let close = () => {};
   return new ReadableStream<Uint8Array>({
     start(controller) {
-      let busy = false;
-      let again = false;
+      let isBusy = false;
+      let isDue = false;
       let isClosed = false;
+      let pause: NodeJS.Timeout | undefined;
       const tell = async () => {
-        if (busy) return void (again = true);
-        busy = true;
+        if (isBusy) return void (isDue = true);
+        isBusy = true;
+        isDue = false;
         try {
-          do {
-            again = false;
-            const { event, isOver } = await teller.next();
-            if (isClosed) return;
-            controller.enqueue(encoder.encode(event));
-            if (isOver) return close();
-          } while (again);
+          const { event, isOver } = await teller.next();
+          if (isClosed) return;
+          if (event !== null) controller.enqueue(encoder.encode(event));
+          if (isOver) return close();
+          // What happened while this was read and sent is told with the next second's news.
+          pause = setTimeout(() => {
+            isBusy = false;
+            if (isDue) void tell();
+          }, QUIET_MS);
         } catch (error) {
           log.warn({ err: error, importId: id }, 'an event stream ended early');
           close();
-        } finally {
-          busy = false;
         }
       };
       const heartbeat = setInterval(() => !isClosed && controller.enqueue(encoder.encode(': still here\n\n')), HEARTBEAT_MS);
@@ -105,6 +112,7 @@ function eventStream(teller: ImportTeller, id: string, signal: AbortSignal): Rea
         if (isClosed) return;
         isClosed = true;
         clearInterval(heartbeat);
+        clearTimeout(pause);
         unsubscribe();
         forget();
         controller.close();

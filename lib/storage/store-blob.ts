@@ -47,7 +47,7 @@ async function writeHashed(temporary: string, source: AsyncIterable<Uint8Array> 
   let byteSize = 0;
   const file = await open(temporary, 'wx');
   try {
-    for await (const chunk of source ?? []) {
+    for await (const chunk of untilBroken(source)) {
       byteSize += chunk.byteLength;
       if (byteSize > maxBytes) throw new StudioError('too_large', `The file is larger than ${maxBytes} bytes, the most that one file may have here.`);
       hash.update(chunk);
@@ -58,4 +58,13 @@ async function writeHashed(temporary: string, source: AsyncIterable<Uint8Array> 
     await file.close();
   }
   return { sha256: hash.digest('hex'), byteSize };
+}
+
+/** The sender's bytes; a sender that goes away is their affair and no fault of ours. */
+async function* untilBroken(source: AsyncIterable<Uint8Array> | null): AsyncIterable<Uint8Array> {
+  try {
+    if (source) yield* source;
+  } catch {
+    throw new StudioError('bad_request', 'The upload broke off before its end. Send the file again.');
+  }
 }

@@ -126,7 +126,7 @@ describe('PUT a file', () => {
       pull: (controller) => controller.error(new Error('the sender is gone')),
     });
     const answer = await call(PUT, { method: 'PUT', params: { show: cast.show.code, import: id, name: 'ox.obj' }, raw: body, token: cast.people.td.token });
-    expect(answer.status).toBeGreaterThanOrEqual(400);
+    expectProblem(answer, 400, 'bad_request');
     expect(await rowsOf(...TABLES)).toBe(before);
     expect(await readdir(path.join(config().filesFolder, 'uploads'))).toEqual([]);
   });
