@@ -31,6 +31,10 @@ export function useActionForm<Input extends FieldValues, Parsed, Output>(options
     if (result.ok) return void (await onDone?.(result.data, input));
     const field = result.field !== null && result.field in form.getValues() ? (result.field as Path<Input>) : 'root';
     form.setError(field, { message: result.message }, { shouldFocus: true });
+  }, (found) => {
+    // What is wrong with no field of the form would otherwise stay unseen.
+    const stray = Object.entries(found).find(([name]) => !(name in form.getValues()));
+    if (stray) form.setError('root', { message: typeof stray[1]?.message === 'string' ? stray[1].message : 'This form cannot be sent as it is.' });
   });
 
   return {

@@ -32,7 +32,7 @@ export function InvitationForm({ secret, email, name, send }: InvitationFormProp
       </p>
       <input type="email" name="email" autoComplete="username" value={email} readOnly hidden />
       <Field label="Your name" error={errorOf('name')}>
-        <Input autoComplete="name" className="h-10" {...form.register('name')} />
+        <Input autoComplete="name" className="h-10" defaultValue={name} {...form.register('name')} />
       </Field>
       <NewPasswordField form={form} name="password" error={errorOf('password')} />
       <FormRefusal>{refusal}</FormRefusal>

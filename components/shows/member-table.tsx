@@ -49,8 +49,8 @@ export function MemberTable({ show, members, mayEdit, setMember, removeMember }:
   function run(act: () => Promise<ActionResult<unknown>>, done: string, after: () => void = () => undefined) {
     start(async () => {
       const result = await act();
-      if (!result.ok) return void toast.error(result.message);
       after();
+      if (!result.ok) return void toast.error(result.message);
       toast(done);
       router.refresh();
     });

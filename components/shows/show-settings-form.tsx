@@ -51,8 +51,9 @@ interface ShowSettingsFormProps {
 export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps) {
   const router = useRouter();
   const [more, setMore] = useState(false);
-  const { code, frozen, archived, ...values } = show;
-  const stored = { show: code, ...values, name_pattern: values.name_pattern ?? '' };
+  const { code, title, linear_unit, up_axis, scheme: storedScheme, boundary, parts_by, self_approval, frozen, archived } = show;
+  const name_pattern = show.name_pattern ?? '';
+  const stored = { show: code, title, linear_unit, up_axis, scheme: storedScheme, boundary, parts_by, name_pattern, self_approval };
   const { form, onSubmit, refusal, busy, errorOf } = useActionForm({
     schema: editShowInput,
     defaultValues: stored,
@@ -68,12 +69,12 @@ export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps)
   });
   const { control } = form;
   const { isDirty } = form.formState;
-  const scheme = useWatch({ control, name: 'scheme' }) ?? show.scheme;
+  const scheme = useWatch({ control, name: 'scheme' }) ?? storedScheme;
   const locked = !mayEdit || archived;
   return (
     <form method="post" noValidate onSubmit={onSubmit} className="flex flex-col gap-6">
       <Field label="Title" error={errorOf('title')}>
-        <Input autoComplete="off" disabled={locked} {...form.register('title')} />
+        <Input autoComplete="off" disabled={locked} defaultValue={title} {...form.register('title')} />
       </Field>
       <fieldset className="grid gap-x-5 gap-y-3 sm:grid-cols-3">
         <legend className="mb-2 text-16 font-medium">Space</legend>

@@ -39,8 +39,8 @@ export function UserTable({ users, acts }: { users: readonly User[]; acts: UserA
   function run(act: () => Promise<ActionResult<unknown>>, done: string, after: () => void = () => undefined) {
     start(async () => {
       const result = await act();
-      if (!result.ok) return void toast.error(result.message);
       after();
+      if (!result.ok) return void toast.error(result.message);
       toast(done);
       router.refresh();
     });
