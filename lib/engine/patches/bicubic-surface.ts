@@ -9,11 +9,8 @@ const FINE = gaussRule(7);
 const COARSE = gaussRule(COARSE_NODES);
 
 /** Part of a patch's area that its error may be; beyond it the patch is quartered. */
-const TOLERANCE = 1e-12;
+export const AREA_TOLERANCE = 1e-12;
 const MOST_QUARTERINGS = 8;
-
-/** For an analytic integrand the error of n nodes falls as ρ^−2n, so that of 7 is that of 4 to the power 7/4; 1.5 leaves room. */
-const RATE = 1.5;
 
 const powers = new Float64Array(48);
 const square = new Float64Array(10);
@@ -24,16 +21,20 @@ const square = new Float64Array(10);
  * `coarseArea` is the area by COARSE_NODES (see `bicubicArea`). Returns the estimated error of the area.
  */
 export function mendSurfaceMoments(net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array, coarseArea: number): number {
-  const area = surface[0];
-  const error = estimate(area, coarseArea);
-  const tolerance = TOLERANCE * area;
+  const error = areaError(surface, coarseArea);
+  const tolerance = AREA_TOLERANCE * surface[0];
   if (!(error > tolerance)) return error;
   netToPowers(net, powers);
   powers[0] -= ox;
   powers[1] -= oy;
   powers[2] -= oz;
   surface.fill(0);
-  return quarter(0, 0, 1, tolerance, 1, surface);
+  return quarter(0, 0, 1, error, tolerance, 1, surface);
+}
+
+/** Estimated error of an area that came with that of COARSE_NODES. */
+export function areaError(surface: Float64Array, coarseArea: number): number {
+  return estimate(surface[0], coarseArea);
 }
 
 /** Area of a bicubic patch by COARSE_NODES a direction. */
@@ -42,24 +43,39 @@ export function bicubicArea(net: Float64Array): number {
   return powerArea(powers, COARSE);
 }
 
+/** For an analytic integrand the error of n nodes falls as ρ^−2n, so that of 7 is that of 4 to the power 7/4; 3/2 leaves room. */
 function estimate(fine: number, coarse: number): number {
-  return fine > 0 ? fine * Math.min(1, Math.abs(fine - coarse) / fine) ** RATE : 0;
+  if (!(fine > 0)) return 0;
+  const change = Math.min(1, Math.abs(fine - coarse) / fine);
+  return fine * change * Math.sqrt(change);
 }
 
-/** Adds the moments of the four quarters of the square with the given centre and size; returns their estimated error. */
-function quarter(u: number, v: number, size: number, tolerance: number, depth: number, surface: Float64Array): number {
-  let error = 0;
+/** Share of a square's error that its quarters must take off it for more quartering to be worth while; a spoilt rule gains nothing. */
+const LEAST_GAIN = 0.3;
+
+/**
+ * Adds the moments of the four quarters of the square with the given centre, size and error, quartered again where they err too much;
+ * returns their estimated error.
+ */
+function quarter(u: number, v: number, size: number, before: number, tolerance: number, depth: number, surface: Float64Array): number {
+  const errors = [0, 0, 0, 0];
+  const moments = new Float64Array(40);
   for (let i = 0; i < 4; i++) {
     const cu = u + (i & 1 ? size : -size) / 4;
     const cv = v + (i & 2 ? size : -size) / 4;
     momentsOf(cu, cv, size / 2, square);
-    const here = estimate(square[0], areaOf(cu, cv, size / 2));
-    if (here > tolerance && depth < MOST_QUARTERINGS) {
-      error += quarter(cu, cv, size / 2, tolerance, depth + 1, surface);
+    moments.set(square, 10 * i);
+    errors[i] = estimate(square[0], areaOf(cu, cv, size / 2));
+  }
+  const goOn = depth < MOST_QUARTERINGS && errors[0] + errors[1] + errors[2] + errors[3] < (1 - LEAST_GAIN) * before;
+  let error = 0;
+  for (let i = 0; i < 4; i++) {
+    if (goOn && errors[i] > tolerance) {
+      error += quarter(u + (i & 1 ? size : -size) / 4, v + (i & 2 ? size : -size) / 4, size / 2, errors[i], tolerance, depth + 1, surface);
       continue;
     }
-    error += here;
-    for (let k = 0; k < 10; k++) surface[k] += square[k];
+    error += errors[i];
+    for (let k = 0; k < 10; k++) surface[k] += moments[10 * i + k];
   }
   return error;
 }
