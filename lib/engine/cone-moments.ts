@@ -18,7 +18,8 @@ export interface RawMoments {
  */
 export function limitConeMoments(cage: Cage, options: Omit<MeasureOptions, 'partsBy'>, apex: Three): RawMoments {
   const { mesh } = buildTopology(cage);
-  const bodies = { partNames: [''], partOf: new Int32Array(mesh.faces), bodyOf: new Int32Array(mesh.faces), bodies: 1, partOfBody: new Int32Array(1) };
+  const one = new Int32Array(mesh.faces);
+  const bodies = { partNames: [''], partOf: one, bodyOf: one, bodies: 1, partOfBody: new Int32Array(1), pieceOf: one, pieces: 1 };
   const frames: Frames = {
     positions: cage.positions.map((value, i) => value - apex[i % 3]),
     pieceCentres: Float64Array.from(apex),

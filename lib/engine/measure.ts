@@ -41,7 +41,7 @@ export function measureCage(cage: Cage, options: MeasureOptions): MeasuredCage {
     blocked.fill(1);
   }
   const parts = assembleParts(mesh, bodies, blocked, frames, limit, ownCage, caps);
-  const relations = relatePieces(mesh, cage.positions, leftOut(mesh, bodies, blocked, parts), options);
+  const relations = relatePieces(mesh, cage.positions, bodies, leftOut(mesh, bodies, blocked, parts), options);
   diagnoseOrientation(cage, mesh, bodies, blocked, parts, relations, findings);
   diagnoseOverlap(cage, mesh, bodies, relations, findings);
   diagnoseNearCoincident(cage, mesh, bodies, findings);

@@ -1,6 +1,6 @@
 import type { LimitSums } from '../moments/limit-sums';
 import { MOMENTS } from '../moments/sums';
-import { COARSE_NODES, mendSurfaceMoments } from '../patches/bicubic-surface';
+import { AREA_TOLERANCE, areaError, COARSE_NODES, mendSurfaceMoments } from '../patches/bicubic-surface';
 import { BLOCK_PATCHES, PatchBlock } from './patch-block';
 
 /** Exact for the ten solid moments of a bicubic patch: degree 13 a direction. */
@@ -33,8 +33,12 @@ export class RegularPatches {
     for (let patch = 0; patch < this.count; patch++) {
       const body = this.bodies[patch];
       sums.solid.magnitudes[body] += block.read(patch, solid, surface);
-      block.net(patch, net);
-      sums.surfaceError[body] += mendSurfaceMoments(net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2], surface, block.coarseArea(patch));
+      let error = areaError(surface, block.coarseArea(patch));
+      if (error > AREA_TOLERANCE * surface[0]) {
+        block.net(patch, net);
+        error = mendSurfaceMoments(net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2], surface, block.coarseArea(patch));
+      }
+      sums.surfaceError[body] += error;
       sums.solid.add(body, solid, 0);
       sums.surface.add(body, surface, 0);
     }

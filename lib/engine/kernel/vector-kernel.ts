@@ -50,20 +50,19 @@ function makeKernel(): VectorKernel | null {
 
 function wrap(doubles: Float64Array, run: Run): VectorKernel {
   const ruleAt = (count: number): number => 8 * RULE_STRIDE * count;
-  const put = new Uint8Array(MOST_NODES + 1);
-  const ensureRule = (count: number): void => {
-    if (count === 0 || put[count] === 1) return;
+  // Put anew each time, so that the kernel never works with a copy of its own: a rule gone wrong must show in the numbers and the estimate alike.
+  const putRule = (count: number): void => {
+    if (count === 0) return;
     const { nodes, weights } = gaussRule(count);
     doubles.set(nodes, RULE_STRIDE * count);
     doubles.set(weights, RULE_STRIDE * count + count);
-    put[count] = 1;
   };
   return {
     input: doubles.subarray(INPUT_AT, OUTPUT_AT),
     output: doubles.subarray(OUTPUT_AT, SCRATCH_AT),
     run(pairs, count, coarseCount) {
-      ensureRule(count);
-      ensureRule(coarseCount);
+      putRule(count);
+      putRule(coarseCount);
       run(pairs, 8 * INPUT_AT, 8 * OUTPUT_AT, count, ruleAt(count), coarseCount, ruleAt(coarseCount), 8 * SCRATCH_AT);
     },
   };

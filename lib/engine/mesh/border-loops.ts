@@ -32,14 +32,19 @@ export function borderEdgeOf(mesh: Topology, bodyOf: Int32Array, blocked: Uint8A
   return Math.min(h, twin);
 }
 
+/** Whether another body, or nothing, lies across the half-edge's edge. */
+export function isBorder(mesh: Topology, bodyOf: Int32Array, h: number): boolean {
+  const twin = mesh.twin[h];
+  return twin < 0 || bodyOf[mesh.faceOf[twin]] !== bodyOf[mesh.faceOf[h]];
+}
+
 /** Finds all borders of bodies and walks them loop by loop. Where bodies touch in a vertex, the body's own fan of faces says which edge comes next. */
 export function findBorders(mesh: Topology, bodyOf: Int32Array, blocked: Uint8Array): Borders {
-  const isBorder = (h: number): boolean => mesh.twin[h] < 0 || bodyOf[mesh.faceOf[mesh.twin[h]]] !== bodyOf[mesh.faceOf[h]];
   const segmentOf = new Map<number, number>();
   const segments: BorderSegment[] = [];
   const loops: BorderLoop[] = [];
   for (let h = 0; h < mesh.twin.length; h++) {
-    if (!isBorder(h) || borderEdgeOf(mesh, bodyOf, blocked, h) !== h) continue;
+    if (!isBorder(mesh, bodyOf, h) || borderEdgeOf(mesh, bodyOf, blocked, h) !== h) continue;
     segmentOf.set(h, segments.length);
     if (mesh.twin[h] >= 0) segmentOf.set(mesh.twin[h], segments.length);
     segments.push({ edge: h, left: NO_LOOP, right: NO_LOOP });
@@ -57,7 +62,7 @@ export function findBorders(mesh: Topology, bodyOf: Int32Array, blocked: Uint8Ar
       else segments[segment].left = loops.length;
       loop.steps.push(2 * segment + (backwards ? 1 : 0));
       h = nextHalfEdge(mesh, h);
-      while (!isBorder(h)) h = nextHalfEdge(mesh, mesh.twin[h]);
+      while (!isBorder(mesh, bodyOf, h)) h = nextHalfEdge(mesh, mesh.twin[h]);
     } while (h !== start);
     loops.push(loop);
   }

@@ -1,5 +1,4 @@
 import type { Bodies } from './partition';
-import { floodFaces } from './partition';
 import type { Topology } from './topology';
 
 /** Local frames: all work happens about the box centres of connected pieces and bodies, so that a far origin costs no digits. */
@@ -30,18 +29,21 @@ function boxesOf(mesh: Topology, positions: Float64Array, groupOf: Int32Array, g
 
 /** Makes the local frames of a cage. */
 export function makeFrames(mesh: Topology, positions: Float64Array, bodies: Bodies): Frames {
-  const pieces = floodFaces(mesh, null);
-  const pieceBoxes = boxesOf(mesh, positions, pieces.of, pieces.count);
-  const boxes = boxesOf(mesh, positions, bodies.bodyOf, bodies.bodies);
+  const { pieceOf } = bodies;
+  const pieceBoxes = boxesOf(mesh, positions, pieceOf, bodies.pieces);
+  const boxes = bodies.bodyOf === pieceOf ? pieceBoxes : boxesOf(mesh, positions, bodies.bodyOf, bodies.bodies);
   const pieceOfBody = new Int32Array(bodies.bodies);
   const local = new Float64Array(positions.length);
   const centre = (all: Float64Array, group: number, axis: number): number => all[6 * group + axis] / 2 + all[6 * group + 3 + axis] / 2;
+  const centres = Float64Array.from({ length: 3 * bodies.pieces }, (_, i) => centre(pieceBoxes, Math.floor(i / 3), i % 3));
   for (let h = 0; h < mesh.vertexOf.length; h++) {
-    const face = mesh.faceOf[h];
-    pieceOfBody[bodies.bodyOf[face]] = pieces.of[face];
     const v = 3 * mesh.vertexOf[h];
-    for (let axis = 0; axis < 3; axis++) local[v + axis] = positions[v + axis] - centre(pieceBoxes, pieces.of[face], axis);
+    const at = 3 * pieceOf[mesh.faceOf[h]];
+    local[v] = positions[v] - centres[at];
+    local[v + 1] = positions[v + 1] - centres[at + 1];
+    local[v + 2] = positions[v + 2] - centres[at + 2];
   }
+  for (let face = 0; face < mesh.faces; face++) pieceOfBody[bodies.bodyOf[face]] = pieceOf[face];
   const pieceCentres = new Float64Array(3 * bodies.bodies);
   const origins = new Float64Array(3 * bodies.bodies);
   for (let body = 0; body < bodies.bodies; body++) {

@@ -14,6 +14,9 @@ export interface Bodies {
   bodies: number;
   /** Part of each body; bodies are numbered by their first face. */
   partOfBody: Int32Array;
+  /** Piece of each face, whatever its part: what hangs together over edges. */
+  pieceOf: Int32Array;
+  pieces: number;
 }
 
 function labelsFor(cage: Cage, by: Partition): FaceLabels | null {
@@ -55,8 +58,8 @@ export function partitionFaces(cage: Cage, mesh: Topology, by: Partition): Bodie
   const partOf = new Int32Array(mesh.faces);
   const partNames: string[] = [];
   const labels = labelsFor(cage, by);
+  const pieces = floodFaces(mesh, null);
   if (by === 'piece') {
-    const pieces = floodFaces(mesh, null);
     partOf.set(pieces.of);
     for (let i = 0; i < pieces.count; i++) partNames.push(`piece ${i + 1}`);
   } else if (labels === null) {
@@ -79,8 +82,8 @@ export function partitionFaces(cage: Cage, mesh: Topology, by: Partition): Bodie
       partOf[face] = partOfLabel[slot];
     }
   }
-  const { of: bodyOf, count: bodies } = floodFaces(mesh, partOf);
+  const { of: bodyOf, count: bodies } = by === 'piece' || partNames.length < 2 ? pieces : floodFaces(mesh, partOf);
   const partOfBody = new Int32Array(bodies);
   for (let face = 0; face < mesh.faces; face++) partOfBody[bodyOf[face]] = partOf[face];
-  return { partNames, partOf, bodyOf, bodies, partOfBody };
+  return { partNames, partOf, bodyOf, bodies, partOfBody, pieceOf: pieces.of, pieces: pieces.count };
 }

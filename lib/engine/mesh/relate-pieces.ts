@@ -2,7 +2,7 @@ import type { MeasureOptions } from '../measured';
 import { limitTriangles, movedInwards, type FaceTriangles } from '../schemes/limit-triangles';
 import { BoxTree, boxesMeet, eachMeetingPair, growBox } from './box-tree';
 import { emptyBoxes, faceHulls } from './face-hulls';
-import { floodFaces } from './partition';
+import type { Bodies } from './partition';
 import type { Topology } from './topology';
 import { rayCrossing, trianglesCross } from './triangle-crossing';
 
@@ -47,8 +47,7 @@ export interface PieceRelations {
  * the limit), then the exact test on limit triangles of the faces that may meet. Faces of one piece are one skin and are not tested against each other.
  * `skipped` marks faces (1) whose pieces are left out.
  */
-export function relatePieces(mesh: Topology, filePositions: Float64Array, skipped: Uint8Array, options: MeasureOptions): PieceRelations {
-  const { of: pieceOf, count } = floodFaces(mesh, null);
+export function relatePieces(mesh: Topology, filePositions: Float64Array, { pieceOf, pieces: count }: Bodies, skipped: Uint8Array, options: MeasureOptions): PieceRelations {
   const relations: PieceRelations = { pieceOf, firstFaces: new Int32Array(count), crossings: [], insides: [], complete: true };
   for (let face = mesh.faces - 1; face >= 0; face--) relations.firstFaces[pieceOf[face]] = face;
   if (count < 2) return relations;

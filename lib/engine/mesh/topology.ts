@@ -52,10 +52,10 @@ export function normalSharpness(sharpness: number): number {
 export function buildTopology(cage: Cage): { mesh: Topology; defects: EdgeDefects } {
   const faces = cage.faceStarts.length - 1;
   const vertices = cage.positions.length / 3;
-  const starts = Int32Array.from(cage.faceStarts);
-  const vertexOf = Int32Array.from(cage.faceVertices);
+  const starts = new Int32Array(cage.faceStarts);
+  const vertexOf = new Int32Array(cage.faceVertices);
   const faceOf = new Int32Array(vertexOf.length);
-  for (let face = 0; face < faces; face++) faceOf.fill(face, starts[face], starts[face + 1]);
+  for (let face = 0; face < faces; face++) for (let h = starts[face]; h < starts[face + 1]; h++) faceOf[h] = face;
   const mesh: Topology = {
     faces,
     vertices,

@@ -1,5 +1,5 @@
 import type { MeasureOptions } from '../measured';
-import { findBorders } from '../mesh/border-loops';
+import { borderEdgeOf, findBorders, isBorder } from '../mesh/border-loops';
 import type { Frames } from '../mesh/frames';
 import type { Bodies } from '../mesh/partition';
 import type { Topology } from '../mesh/topology';
@@ -21,9 +21,8 @@ export function integrateCage(mesh: Topology, frames: Frames, bodies: Bodies, bl
   const sums = emptySums(bodies.bodies);
   addPolyhedralMoments(mesh, frames.positions, bodies.bodyOf, frames.origins, sums.solid, sums.surface);
   const p = frames.positions;
-  const level = levelZero(mesh, p, bodies.bodyOf, blocked, 'edge-only');
   for (let h = 0; h < mesh.twin.length; h++) {
-    if (level.borderOf[h] < 0) continue;
+    if (!isBorder(mesh, bodies.bodyOf, h) || borderEdgeOf(mesh, bodies.bodyOf, blocked, h) !== h) continue;
     const face = mesh.faceOf[h];
     const a = 3 * mesh.vertexOf[h];
     const b = 3 * mesh.vertexOf[h + 1 === mesh.starts[face + 1] ? mesh.starts[face] : h + 1];

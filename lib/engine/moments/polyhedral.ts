@@ -57,32 +57,41 @@ function triangleSurfaceMoments(
 export function addPolyhedralMoments(
   mesh: Topology, positions: Float64Array, bodyOf: Int32Array, origins: Float64Array, solid: MomentSums, surface: MomentSums | null,
 ): void {
-  const emit = (body: number, p: number[], a: number, b: number, m: readonly number[]): void => {
-    const ox = origins[3 * body], oy = origins[3 * body + 1], oz = origins[3 * body + 2];
-    const ax = p[a] - ox, ay = p[a + 1] - oy, az = p[a + 2] - oz;
-    const bx = p[b] - ox, by = p[b + 1] - oy, bz = p[b + 2] - oz;
-    const mx = m[0] - ox, my = m[1] - oy, mz = m[2] - oz;
-    solid.magnitudes[body] += tetrahedronMoments(mx, my, mz, ax, ay, az, bx, by, bz, values);
-    solid.add(body, values, 0);
-    if (surface === null) return;
-    triangleSurfaceMoments(mx, my, mz, ax, ay, az, bx, by, bz, values);
-    surface.add(body, values, 0);
-  };
-  const p: number[] = [];
+  const p = positions;
+  const faceSolid = new Float64Array(MOMENTS);
+  const faceSurface = new Float64Array(MOMENTS);
   for (let face = 0; face < mesh.faces; face++) {
     const start = mesh.starts[face];
-    const n = mesh.starts[face + 1] - start;
-    p.length = 0;
-    const mean: [number, number, number] = [0, 0, 0];
-    for (let i = 0; i < n; i++) {
-      for (let axis = 0; axis < 3; axis++) {
-        const value = positions[3 * mesh.vertexOf[start + i] + axis];
-        p.push(value);
-        mean[axis] += value / n;
+    const end = mesh.starts[face + 1];
+    const n = end - start;
+    const body = bodyOf[face];
+    const ox = origins[3 * body], oy = origins[3 * body + 1], oz = origins[3 * body + 2];
+    // Triangles are their own fan, from the first corner.
+    const first = 3 * mesh.vertexOf[start];
+    let mx = p[first] - ox, my = p[first + 1] - oy, mz = p[first + 2] - oz;
+    if (n !== 3) {
+      mx = my = mz = 0;
+      for (let h = start; h < end; h++) {
+        const v = 3 * mesh.vertexOf[h];
+        mx += (p[v] - ox) / n;
+        my += (p[v + 1] - oy) / n;
+        mz += (p[v + 2] - oz) / n;
       }
     }
-    const body = bodyOf[face];
-    if (n === 3) emit(body, p, 3, 6, [p[0], p[1], p[2]]);
-    else for (let i = 0; i < n; i++) emit(body, p, 3 * i, 3 * ((i + 1) % n), mean);
+    faceSolid.fill(0);
+    faceSurface.fill(0);
+    for (let h = n === 3 ? start + 1 : start; h < (n === 3 ? start + 2 : end); h++) {
+      const a = 3 * mesh.vertexOf[h];
+      const b = 3 * mesh.vertexOf[h + 1 === end ? start : h + 1];
+      const ax = p[a] - ox, ay = p[a + 1] - oy, az = p[a + 2] - oz;
+      const bx = p[b] - ox, by = p[b + 1] - oy, bz = p[b + 2] - oz;
+      solid.magnitudes[body] += tetrahedronMoments(mx, my, mz, ax, ay, az, bx, by, bz, values);
+      for (let i = 0; i < MOMENTS; i++) faceSolid[i] += values[i];
+      if (surface === null) continue;
+      triangleSurfaceMoments(mx, my, mz, ax, ay, az, bx, by, bz, values);
+      for (let i = 0; i < MOMENTS; i++) faceSurface[i] += values[i];
+    }
+    solid.add(body, faceSolid, 0);
+    surface?.add(body, faceSurface, 0);
   }
 }

@@ -1,5 +1,5 @@
 import type { Boundary } from '../cage';
-import { borderEdgeOf } from '../mesh/border-loops';
+import { borderEdgeOf, isBorder } from '../mesh/border-loops';
 import type { Topology } from '../mesh/topology';
 
 /**
@@ -32,10 +32,8 @@ export function levelZero(mesh: Topology, positions: Float64Array, bodyOf: Int32
   const borderOf = new Int32Array(mesh.twin.length).fill(-1);
   const cornersAt = new Uint8Array(mesh.vertices);
   for (let h = 0; h < mesh.twin.length; h++) {
-    const twin = mesh.twin[h];
-    const bordered = twin < 0 || bodyOf[mesh.faceOf[twin]] !== bodyOf[mesh.faceOf[h]];
     // One side's curve stands for both, so that what one body gains the other loses to the last bit.
-    if (bordered && borderEdgeOf(mesh, bodyOf, blocked, h) === h) borderOf[h] = h;
+    if (isBorder(mesh, bodyOf, h) && borderEdgeOf(mesh, bodyOf, blocked, h) === h) borderOf[h] = h;
     if (cornersAt[mesh.vertexOf[h]] < 2) cornersAt[mesh.vertexOf[h]]++;
   }
   let vertexSharpness = mesh.vertexSharpness;
