@@ -55,8 +55,10 @@ export function AssetPage({ frame, detail }: { frame: ShowFrame; detail: AssetDe
               failure={mesh.isError ? mesh.error.message : null}
             />
           </div>
-          <AssetParts frame={frame} rows={parts} chosen={chosen} onChoose={setChosen} />
-          <section className="px-4 pt-6 pb-8 md:px-6">
+          <section aria-label="Parts" className="shrink-0">
+            <AssetParts frame={frame} rows={parts} chosen={chosen} onChoose={setChosen} />
+          </section>
+          <section className="shrink-0 px-4 pt-6 pb-8 md:px-6">
             <h2 className="mb-2">Versions</h2>
             <AssetVersions versions={versions} />
           </section>

@@ -9,8 +9,9 @@ export function ExportPreviewTable({ preview }: { preview: ExportPreview }) {
   return (
     <>
       <p className="px-4 py-3 text-14 text-ink-2 md:px-6">
-        {total.toLocaleString('en')} {total === 1 ? 'row' : 'rows'}, SI units, in the axes of each asset. {rows.length < total ? `The first ${rows.length}:` : null}{' '}
-        {withoutMass > 0 ? `${withoutMass.toLocaleString('en')} without a mass ${withoutMass === 1 ? 'has' : 'have'} empty cells.` : null}
+        {total.toLocaleString('en')} {total === 1 ? 'row' : 'rows'}, SI units, in the axes of each asset.{' '}
+        {withoutMass > 0 ? `${withoutMass.toLocaleString('en')} without a mass ${withoutMass === 1 ? 'has' : 'have'} empty cells. ` : null}
+        {rows.length < total ? `The first ${rows.length}:` : null}
       </p>
       <div tabIndex={0} role="region" aria-label="First rows" className="overflow-x-auto">
         <Table>

@@ -11,6 +11,10 @@ import { getShowAccess } from '@/lib/shows/get-show-access';
 
 const CURSOR = /^(\d{4}-\d\d-\d\dT\d\d:\d\d:\d\d\.\d{6}Z),([0-9a-f-]{36})$/;
 
+export function isReceiptCursor(text: string): boolean {
+  return CURSOR.test(text);
+}
+
 /** Who took which rows of the show, when, and with which checksum; newest first. */
 export async function listReceipts(context: Context, input: ListReceiptsInput): Promise<ReceiptPage> {
   const { db, actor } = requireActor(context);
