@@ -8,8 +8,6 @@ const withDatabase = {
   environment: 'node' as const,
   globalSetup: ['tests/support/database-server.ts'],
   setupFiles: ['tests/support/use-database.ts'],
-  testTimeout: 20_000,
-  hookTimeout: 60_000,
 };
 
 export default defineConfig({
@@ -19,6 +17,9 @@ export default defineConfig({
   test: {
     pool: 'forks',
     maxWorkers: 2,
+    // Limits that only end what hangs: a machine under load must not fail a test.
+    testTimeout: 60_000,
+    hookTimeout: 120_000,
     projects: [
       { extends: true, test: { name: 'unit', environment: 'node', include: ['tests/unit/**/*.test.ts'] } },
       {
@@ -30,7 +31,7 @@ export default defineConfig({
           setupFiles: ['tests/support/use-dom.ts'],
         },
       },
-      { extends: true, test: { name: 'reference', environment: 'node', include: ['tests/reference/**/*.test.ts'], testTimeout: 60_000 } },
+      { extends: true, test: { name: 'reference', environment: 'node', include: ['tests/reference/**/*.test.ts'], testTimeout: 300_000 } },
       { extends: true, test: { name: 'database', include: ['tests/database/**/*.test.ts'], ...withDatabase } },
       { extends: true, test: { name: 'api', include: ['tests/api/**/*.test.ts'], ...withDatabase } },
       { extends: true, test: { name: 'long', include: ['tests/long/**/*.test.ts'], ...withDatabase, testTimeout: 600_000 } },

@@ -21,7 +21,9 @@ const schema = z.object({
 });
 
 function read() {
-  const parsed = schema.safeParse(process.env);
+  // An empty value means unset: so a line of .env can be taken back for one process.
+  const given = Object.entries(process.env).filter(([, value]) => value !== '');
+  const parsed = schema.safeParse(Object.fromEntries(given));
   if (!parsed.success) {
     const first = parsed.error.issues[0];
     throw new Error(`Environment variable ${String(first.path[0])}: ${first.message}`);

@@ -62,7 +62,11 @@ export async function bundleWorkerWhenChanged() {
   const hash = sourceHash();
   if (isStamped(workerStamp, hash) && existsSync(inRoot('dist/worker/worker.mjs'))) return;
   refuseWhileServing();
-  await bundleWorker();
+  try {
+    await bundleWorker();
+  } catch (error) {
+    throw new Stop(`The worker could not be bundled: ${error.message}`);
+  }
   writeFileSync(workerStamp, hash);
 }
 
