@@ -29,9 +29,11 @@ const parsers = {
   sort: parseAsStringLiteral(PART_COLUMNS),
   down: parseAsBoolean.withDefault(false),
   flat: parseAsBoolean.withDefault(false),
+  /** Columns asked for; none: those that fit. */
+  columns: parseAsArrayOf(parseAsStringLiteral(PART_COLUMNS)),
 };
 
-/** Filters, order and grouping of the parts table; they live in the address, so a link shows what its sender saw. */
+/** Filters, order, grouping and columns of the parts table; they live in the address, so a link shows what its sender saw. */
 export function usePartFilters() {
   return useQueryStates(parsers, { history: 'replace', throttleMs: 150 });
 }

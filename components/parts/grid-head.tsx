@@ -45,7 +45,7 @@ export function GridHead({ specs, template, frame, sort, down, onSort }: GridHea
             key={spec.id}
             role="columnheader"
             aria-sort={sorted ? (down ? 'descending' : 'ascending') : undefined}
-            className="flex min-w-0 items-stretch"
+            className={cn('flex min-w-0 items-stretch', spec.id === 'name' && 'sticky left-0 z-1 bg-ground')}
           >
             {spec.id === 'beam' ? (
               <span className={style}>{label}</span>

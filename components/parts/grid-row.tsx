@@ -87,7 +87,8 @@ function Cell({
       data-column={spec.id}
       className={cn(
         'relative flex min-w-0 items-center px-2',
-        spec.id === 'name' && 'pl-3',
+        spec.id === 'name' &&
+          'sticky left-0 z-1 bg-inherit pl-3 group-aria-selected:shadow-[inset_2px_0_0_var(--brass)]',
         spec.figures && 'justify-end',
       )}
     >

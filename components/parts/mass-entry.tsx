@@ -90,7 +90,7 @@ function partsWords(parts: number, shared: boolean): string {
   return shared ? `shared by volume over ${count}` : `each of ${count}`;
 }
 
-export function entryWords(entry: Entry): string {
+function entryWords(entry: Entry): string {
   switch (entry.kind) {
     case 'target_mass':
       return `Target mass ${formatFixed(entry.massKg, 6)} kg`;

@@ -196,8 +196,14 @@ function problemWeight(row: PartRow): number {
   return -(count('problem') * 1000 + count('warning'));
 }
 
+/** The columns asked for, in the table's own order; where none are asked for, those that fit. */
+export function shownColumns(asked: readonly PartColumn[] | null, width: number): ColumnSpec[] {
+  if (asked === null) return fittingColumns(COLUMN_SPECS, width);
+  return COLUMN_SPECS.filter((spec) => spec.id === 'name' || asked.includes(spec.id));
+}
+
 /** The columns that fit a width: those that give way go one step after another until the rest has room. */
-export function fittingColumns(specs: readonly ColumnSpec[], width: number): ColumnSpec[] {
+function fittingColumns(specs: readonly ColumnSpec[], width: number): ColumnSpec[] {
   const steps = [...new Set(specs.flatMap((spec) => spec.givesWay ?? []))].sort((a, b) => a - b);
   let kept = [...specs];
   const total = () => kept.reduce((sum, spec) => sum + spec.width, 0);

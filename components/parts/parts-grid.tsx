@@ -18,7 +18,7 @@ import type { RowSelection, SelectHow } from '@/lib/rules/select-rows';
 import type { ShowFrame } from '@/lib/rules/show-frame';
 import { GridHead, HEAD_HEIGHT } from './grid-head';
 import { ASSET_HEIGHT, COMPACT_HEIGHT, GridRow, PART_HEIGHT } from './grid-row';
-import { COLUMN_SPECS, fittingColumns, gridTemplate } from './part-columns';
+import { gridTemplate, shownColumns } from './part-columns';
 
 const COMPACT_BELOW = 640;
 const COMPACT_HEAD_HEIGHT = 28;
@@ -32,6 +32,8 @@ interface PartsGridProps {
   closed: ReadonlySet<string>;
   sort: PartColumn | null;
   down: boolean;
+  /** Columns asked for; null: those that fit. */
+  columns: readonly PartColumn[] | null;
   /** The row whose mass is being typed, with its editor. */
   editing: { key: string; editor: ReactNode } | null;
   onSort: (column: PartColumn) => void;
@@ -55,6 +57,7 @@ export function PartsGrid(props: PartsGridProps) {
     closed,
     sort,
     down,
+    columns,
     editing,
     onSort,
     onSelect,
@@ -67,7 +70,7 @@ export function PartsGrid(props: PartsGridProps) {
   const idBase = useId();
   const width = useElementWidth(scroller);
   const compact = width !== null && width < COMPACT_BELOW;
-  const specs = fittingColumns(COLUMN_SPECS, width ?? 1440);
+  const specs = shownColumns(columns, width ?? 1440);
   const template = gridTemplate(specs);
   const minWidth = compact ? undefined : specs.reduce((sum, spec) => sum + spec.width, 0);
 

@@ -45,7 +45,7 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
   const values = useSetValues(frame.code);
   const save = useSaveActs(values);
   const filters = usePartFilters();
-  const [{ q, state, category, sort, down, flat }, setFilters] = filters;
+  const [{ q, state, category, sort, down, flat, columns }, setFilters] = filters;
 
   const [selection, setSelection] = useState(NO_SELECTION);
   const [closed, setClosed] = useState<ReadonlySet<string>>(new Set());
@@ -177,6 +177,7 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
             closed={closed}
             sort={sort}
             down={down}
+            columns={columns}
             editing={editing === null ? null : { key: editing.key, editor }}
             onSort={orderBy}
             onSelect={select}

@@ -9,6 +9,7 @@ import type { usePartFilters } from '@/hooks/use-part-filters';
 import type { PartCounts } from '@/lib/rules/part-row';
 import type { ShowFrame } from '@/lib/rules/show-frame';
 import { CATEGORIES, STATE_WORDS, type Category, type RowState } from '@/lib/rules/states';
+import { ColumnsMenu } from './columns-menu';
 
 /** What needs somebody first. */
 const CHIP_STATES: readonly RowState[] = ['unset', 'blocked', 'outdated', 'measured', 'approved', 'left_out'];
@@ -102,6 +103,7 @@ export function PartsToolbar({
       >
         <ListTree aria-hidden />
       </IconButton>
+      <ColumnsMenu columns={filters.columns} onColumns={(columns) => void setFilters({ columns })} />
       <IconButton
         label="Inspector"
         shortcut="I"

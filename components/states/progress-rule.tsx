@@ -16,7 +16,7 @@ const FILL: Record<RowState, string> = {
 };
 
 /** Parts between two ticks: six, or the first six times a power of ten that leaves room between them. */
-export function partsPerTick(total: number): number {
+function partsPerTick(total: number): number {
   let step = PARTS_PER_TICK;
   while (total / step > MOST_TICKS) step *= 10;
   return step;

@@ -42,7 +42,7 @@ const READINGS: Readonly<Record<string, Reading>> = {
 };
 
 /** Units that a mass cell takes, for its help. */
-export const ENTRY_UNITS = Object.keys(READINGS);
+const ENTRY_UNITS = Object.keys(READINGS);
 
 function unitKey(text: string): string {
   return text.toLowerCase().replace(/\s|\^/g, '').replace(/²/g, '2').replace(/³/g, '3');
