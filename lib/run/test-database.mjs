@@ -1,6 +1,7 @@
 import { mkdirSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
 import { startCheckoutCluster } from './support/checkout-cluster.mjs';
+import { endCluster } from './support/cluster.mjs';
 import { isAlive, withLock } from './support/file-lock.mjs';
 import { inRoot } from './support/paths.mjs';
 import { runMain } from './support/stop.mjs';
@@ -23,28 +24,23 @@ async function dropLeftovers(url) {
 
 /**
  * The throw-away cluster that test runs share: `test-database.mjs use PID [FOLDER]` starts it on demand and prints its
- * addresses as JSON, `leave PID [FOLDER]` stops it after its last user.
+ * addresses as JSON, `leave PID [FOLDER]` stops it after its last user, `remove 0 FOLDER` deletes it.
  */
 async function testDatabase() {
   const [verb, pid, given] = process.argv.slice(2);
   const folder = path.resolve(given ?? inRoot('var/test-pg'));
+  const cluster = path.join(folder, 'pg');
   const users = path.join(folder, 'users');
   mkdirSync(users, { recursive: true });
   return withLock(path.join(folder, 'lock'), async () => {
-    const { superuserUrl, ownerUrl, appUrl, stop } = await startCheckoutCluster({
-      folder: path.join(folder, 'pg'),
-      secretsFolder: folder,
-      throwAway: true,
-    });
-    const living = () => readdirSync(users).filter((user) => isAlive(Number(user)) || rmSync(path.join(users, user), { force: true }));
-    if (verb === 'use') {
-      if (living().length === 0) await dropLeftovers(superuserUrl);
-      writeFileSync(path.join(users, pid), '');
-      console.log(JSON.stringify({ superuserUrl, ownerUrl, appUrl }));
-      return;
-    }
+    if (verb === 'remove') return endCluster({ folder: cluster, remove: true });
     rmSync(path.join(users, pid), { force: true });
-    if (living().length === 0) await stop();
+    const isAlone = readdirSync(users).filter((user) => isAlive(Number(user)) || rmSync(path.join(users, user), { force: true })).length === 0;
+    if (verb === 'leave') return isAlone ? endCluster({ folder: cluster }) : undefined;
+    const { superuserUrl, ownerUrl, appUrl } = await startCheckoutCluster({ folder: cluster, secretsFolder: folder, throwAway: true });
+    if (isAlone) await dropLeftovers(superuserUrl);
+    writeFileSync(path.join(users, pid), '');
+    console.log(JSON.stringify({ superuserUrl, ownerUrl, appUrl }));
   });
 }
 

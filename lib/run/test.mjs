@@ -91,7 +91,7 @@ async function test() {
 async function end() {
   isEnding = true;
   endCommands('SIGTERM');
-  await command(process.execPath, [inRoot('lib/run/test-database.mjs'), 'leave', '0', path.join(scratch, 'cluster')]).catch(() => undefined);
+  await command(process.execPath, [inRoot('lib/run/test-database.mjs'), 'remove', '0', path.join(scratch, 'cluster')]).catch(() => undefined);
   rmSync(scratch, { recursive: true, force: true });
 }
 

@@ -67,6 +67,20 @@ async function initialise(programs, folder, superuserPassword, throwAway) {
   writeFileSync(path.join(folder, 'made'), `${new Date().toISOString()}\n`);
 }
 
+async function stopServer(pgCtl, data) {
+  const ended = await asClusterUser(pgCtl, ['stop', '-D', data, '-m', 'fast', '-w', '-t', '30']);
+  if (ended.code !== 0 && runningPort(data)) await asClusterUser(pgCtl, ['stop', '-D', data, '-m', 'immediate', '-w', '-t', '30']);
+}
+
+/** Stops the cluster of this folder if it runs, and with `remove` deletes it, wherever it had to be put. */
+export async function endCluster({ folder: wished, remove = false }) {
+  const folder = await reachableFolder(wished);
+  const data = path.join(folder, 'data');
+  const programs = findPostgresPrograms();
+  if (programs && runningPort(data)) await stopServer(path.join(programs, 'pg_ctl'), data);
+  if (remove) rmSync(folder, { recursive: true, force: true });
+}
+
 /**
  * Makes (once) and starts a PostgreSQL cluster of our own that listens on the loopback address alone.
  * @param {{ folder: string, superuserPassword: string, throwAway?: boolean }} options
@@ -84,10 +98,7 @@ export async function startCluster({ folder: wished, superuserPassword, throwAwa
     throw new Stop(`The data in ${data} was written by PostgreSQL ${version}, which is not installed. Install postgresql-${version}, or move the data with pg_upgrade.`);
   }
   const pgCtl = path.join(programs, 'pg_ctl');
-  const stop = async () => {
-    const ended = await asClusterUser(pgCtl, ['stop', '-D', data, '-m', 'fast', '-w', '-t', '30']);
-    if (ended.code !== 0 && runningPort(data)) await asClusterUser(pgCtl, ['stop', '-D', data, '-m', 'immediate', '-w', '-t', '30']);
-  };
+  const stop = () => stopServer(pgCtl, data);
   mkdirSync(folder, { recursive: true, mode: 0o700 });
   chmodSync(folder, 0o700);
   giveToClusterUser(folder);

@@ -3,7 +3,7 @@ import { logTail } from './service.mjs';
 import { Stop } from './stop.mjs';
 
 /** Waits until the web server says that it and what it stands on are ready. */
-export async function waitUntilReady(address, web, limitMs = 120_000) {
+export async function waitUntilReady(address, web, limitMs = 300_000) {
   const end = Date.now() + limitMs;
   let last = 'no answer';
   while (Date.now() < end) {
