@@ -44,6 +44,7 @@ export const GridRow = memo(function GridRow(props: GridRowProps) {
       aria-rowindex={index}
       aria-level={asset ? 1 : 2}
       aria-selected={chosen}
+      aria-busy={saving || undefined}
       aria-expanded={asset ? open : undefined}
       data-key={node.key}
       data-active={active || undefined}
@@ -55,7 +56,7 @@ export const GridRow = memo(function GridRow(props: GridRowProps) {
           'bg-selected shadow-[inset_2px_0_0_var(--brass)] hover:bg-selected forced-colors:outline-2 forced-colors:-outline-offset-2',
         active &&
           'group-focus-visible/grid:outline-2 group-focus-visible/grid:-outline-offset-2 group-focus-visible/grid:outline-brass',
-        saving && 'text-ink-3',
+        saving && 'opacity-60',
         editor !== null && 'z-10',
       )}
       style={{ transform: `translateY(${top}px)`, gridTemplateColumns: compact ? undefined : template }}

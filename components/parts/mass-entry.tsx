@@ -13,7 +13,8 @@ interface MassEntryProps {
   shared: boolean;
   materials: readonly string[];
   onSet: (entry: Entry) => void;
-  onLeave: () => void;
+  /** Nothing is set; `back` when the keyboard stays with the table. */
+  onLeave: (back: boolean) => void;
 }
 
 /** The mass of a row being typed: a mass, a density or a material. */
@@ -29,7 +30,7 @@ export function MassEntry({ start, parts, shared, materials, onSet, onLeave }: M
 
   function onKeyDown(event: KeyboardEvent) {
     event.stopPropagation();
-    if (event.key === 'Escape') onLeave();
+    if (event.key === 'Escape') onLeave(true);
     if (event.key === 'Tab' && starting.length > 0 && !parsed.ok) {
       event.preventDefault();
       setText(starting[0]);
@@ -53,7 +54,7 @@ export function MassEntry({ start, parts, shared, materials, onSet, onLeave }: M
         spellCheck={false}
         onChange={(event) => setText(event.target.value)}
         onKeyDown={onKeyDown}
-        onBlur={onLeave}
+        onBlur={() => onLeave(false)}
         onFocus={(event) => event.target.setSelectionRange(text.length, text.length)}
         className="h-7 w-full rounded border border-brass bg-ground px-2 text-right font-mono text-13 text-ink outline-none aria-invalid:border-wrong"
       />

@@ -7,6 +7,8 @@ interface PartsStatusBarProps {
   massKg: number;
   /** More pages are being read. */
   reading: boolean;
+  /** Reads the rows that could not be read; null where none are missing. */
+  onReadRest: (() => void) | null;
   online: boolean;
   onKeys: () => void;
 }
@@ -15,7 +17,16 @@ const count = (number: number, one: string, many: string) =>
   `${number.toLocaleString('en')} ${number === 1 ? one : many}`;
 
 /** What is shown, counted, and the keys at hand. */
-export function PartsStatusBar({ parts, assets, chosen, massKg, reading, online, onKeys }: PartsStatusBarProps) {
+export function PartsStatusBar({
+  parts,
+  assets,
+  chosen,
+  massKg,
+  reading,
+  onReadRest,
+  online,
+  onKeys,
+}: PartsStatusBarProps) {
   return (
     <footer className="flex h-9 items-center gap-6 border-t border-rule bg-bench px-4 text-12 whitespace-nowrap text-ink-2 md:px-6">
       <p role="status">
@@ -23,6 +34,14 @@ export function PartsStatusBar({ parts, assets, chosen, massKg, reading, online,
         {chosen > 0 ? ` · ${chosen.toLocaleString('en')} chosen` : ''}
         {reading ? ' · reading more' : ''}
       </p>
+      {onReadRest === null ? null : (
+        <p className="text-wrong">
+          Not all rows could be read.{' '}
+          <button type="button" onClick={onReadRest} className="link">
+            Read on
+          </button>
+        </p>
+      )}
       <p>Total of what is shown: {formatProse(massKg)} kg</p>
       {online ? (
         <p className="text-ink-3 max-lg:hidden">Figures show four digits, copying takes all</p>

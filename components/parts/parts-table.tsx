@@ -98,14 +98,14 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
     const changes = entryChanges(entry, targetRows, together);
     if (changes === null)
       return void toast.error('One of the parts has no volume, so the mass cannot be shared by it.');
-    leaveEditor();
+    leaveEditor(true);
     void save.set(targetRows.map((row, index) => ({ row, change: changes[index] })));
     if (targetRows.length === 1) setSelection((now) => moveActive({ ...now, chosen: new Set() }, selectable, 1, false));
   }
 
-  function leaveEditor() {
+  function leaveEditor(back: boolean) {
     setEditing(null);
-    requestAnimationFrame(() => gridRef.current?.focus());
+    if (back) requestAnimationFrame(() => gridRef.current?.focus());
   }
 
   function open(node: TableNode | null) {
@@ -159,7 +159,9 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
         onInspector={acts.inspect}
       />
       <div className="flex min-h-0 flex-1">
-        {parts.isPending ? (
+        {parts.isPending && parts.fetchStatus === 'paused' ? (
+          <NotRead message="There is no connection to the server." onRetry={() => void parts.refetch()} />
+        ) : parts.isPending ? (
           <TableSkeleton />
         ) : parts.isError && parts.rows.length === 0 ? (
           <NotRead message={parts.error.message} onRetry={() => void parts.refetch()} />
@@ -203,7 +205,8 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
         assets={assets}
         chosen={chosen.length}
         massKg={massKg}
-        reading={!parts.complete && parts.rows.length > 0}
+        reading={!parts.complete && !parts.isError && parts.rows.length > 0}
+        onReadRest={parts.isError && parts.rows.length > 0 && !parts.complete ? () => void parts.fetchNextPage() : null}
         online={online}
         onKeys={acts.keys}
       />
