@@ -5,7 +5,7 @@ import { requireActor } from '@/lib/auth/require-actor';
 import { config } from '@/lib/config';
 import type { Context } from '@/lib/context';
 import type { ImportPreparation } from '@/lib/rules/import-answer';
-import type { ImportPreparationInput } from '@/lib/rules/inputs/preview-import';
+import type { ImportPreparationInput } from '@/lib/rules/inputs/import-preparation';
 import { getShowAccess } from '@/lib/shows/get-show-access';
 import { CAGE_EXTENSIONS } from './cage-formats';
 
