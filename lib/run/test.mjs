@@ -34,6 +34,7 @@ function testEnvironment() {
 async function step(name, act, { isShown = false } = {}) {
   if (isEnding) return;
   const startedAt = Date.now();
+  console.log(`begins  ${name}`);
   const { code, output, passed, failed } = await act();
   if (isEnding) return;
   counts.passed += passed ?? (code === 0 ? 1 : 0);
