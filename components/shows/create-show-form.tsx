@@ -72,7 +72,7 @@ export function CreateShowForm({
           <Input autoComplete="off" {...form.register('title')} />
         </Field>
       </div>
-      <fieldset className="grid gap-x-5 gap-y-4 border-t border-rule pt-4 sm:grid-cols-3">
+      <fieldset className="grid min-w-0 gap-x-5 gap-y-4 border-t border-rule pt-4 sm:grid-cols-3">
         <legend className="sr-only">Space</legend>
         <SelectField control={control} name="linear_unit" label="Unit of the cages" options={units} />
         <SelectField
@@ -94,7 +94,7 @@ export function CreateShowForm({
           </Button>
         )}
       </fieldset>
-      <fieldset className="flex flex-col gap-4 border-t border-rule pt-4">
+      <fieldset className="flex min-w-0 flex-col gap-4 border-t border-rule pt-4">
         <legend className="sr-only">People</legend>
         <Field
           label="Leads"

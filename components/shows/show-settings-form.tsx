@@ -76,7 +76,7 @@ export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps)
       <Field label="Title" error={errorOf('title')}>
         <Input autoComplete="off" disabled={locked} defaultValue={title} {...form.register('title')} />
       </Field>
-      <fieldset className="grid gap-x-5 gap-y-3 sm:grid-cols-3">
+      <fieldset className="grid min-w-0 gap-x-5 gap-y-3 sm:grid-cols-3">
         <legend className="mb-2 text-16 font-medium">Space</legend>
         <SelectField
           control={control}
@@ -111,7 +111,7 @@ export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps)
           </Button>
         )}
       </fieldset>
-      <fieldset className="grid gap-x-5 gap-y-4 sm:grid-cols-2">
+      <fieldset className="grid min-w-0 gap-x-5 gap-y-4 sm:grid-cols-2">
         <legend className="mb-2 text-16 font-medium">Imports from now on</legend>
         <SelectField
           control={control}

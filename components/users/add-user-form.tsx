@@ -38,7 +38,7 @@ export function AddUserForm({
       onSubmit={onSubmit}
       className="flex flex-col gap-3 border-b border-rule px-4 py-5 md:px-6"
     >
-      <div className="grid items-start gap-3 md:grid-cols-[minmax(0,20rem)_minmax(0,16rem)_auto_auto]">
+      <div className="grid items-start gap-3 md:grid-cols-[minmax(0,20rem)_minmax(0,16rem)_max-content_max-content]">
         <Field label="E-mail" error={errorOf('email')}>
           <Input type="email" autoComplete="off" {...form.register('email')} />
         </Field>

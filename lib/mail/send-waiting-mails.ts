@@ -91,7 +91,8 @@ async function send(db: Database, transport: Transport, mail: Mail): Promise<'se
     await end(db, mail, { state: isLater ? 'waiting' : 'failed', error: `The mail server refused it: ${refusal.response}` });
     return isLater ? 'waiting' : 'failed';
   }
-  await end(db, mail, { state: 'sent', error: null, sentAt: sql`now()` });
+  // What was sent may hold a link that is good once: it is not kept in the clear beside its hash.
+  await end(db, mail, { state: 'sent', error: null, sentAt: sql`now()`, text: '', html: '' });
   return 'sent';
 }
 

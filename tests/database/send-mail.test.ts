@@ -46,6 +46,8 @@ test('a message goes out in full, as text and as HTML, and is marked', async () 
   const [row] = await asOwner<{ state: string; error: null; sent_at: Date | null }>('select state, error, sent_at from mails');
   expect(row).toMatchObject({ state: 'sent', error: null });
   expect(row.sent_at).toBeInstanceOf(Date);
+  // The link that went out is nowhere in the clear any more.
+  expect(await asOwner('select text, html from mails')).toEqual([{ text: '', html: '' }]);
 });
 
 test('many senders at once send each message once', async () => {
@@ -103,7 +105,7 @@ test('a message whose end is not known is not sent again by itself, only by a pe
   await sendWaitingMails(database());
   expect(seen).toContain('"state":"failed"');
   expect(seen).toContain('may have arrived');
-  await asOwner(`update mails set state = 'failed', error = 'Sending began and its end is not known: the message may have arrived.', sent_at = null`);
+  await asOwner(`update mails set text = 'a', html = '<p>a</p>', state = 'failed', error = 'Sending began and its end is not known: the message may have arrived.', sent_at = null`);
   smtp.taken.length = 0;
   expect(await sendWaitingMails(database())).toMatchObject({ sent: 0 });
   expect(smtp.taken).toHaveLength(0);
