@@ -9,7 +9,6 @@ export interface CsvOptions {
 const NEEDS_QUOTES = /[",\r\n]/;
 /** What spreadsheets take for a formula, and the apostrophe itself, so that a reader can strip exactly one. */
 const LOOKS_LIKE_FORMULA = /^[=+\-@\t\r']/;
-export const BYTE_ORDER_MARK = '\ufeff';
 
 /** One record of RFC 4180 with its CRLF. Numbers are the shortest decimals that read back as the same double; NaN and infinity are refused. */
 export function csvRecord(cells: readonly CsvCell[], { guard }: CsvOptions): string {

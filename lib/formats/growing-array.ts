@@ -30,10 +30,10 @@ class GrowingArray<T extends Float64Array | Float32Array | Uint32Array | Int32Ar
 
 const FIRST_LENGTH = 1024;
 
-export type GrowingFloat64 = GrowingArray<Float64Array>;
-export type GrowingFloat32 = GrowingArray<Float32Array>;
-export type GrowingUint32 = GrowingArray<Uint32Array>;
-export type GrowingInt32 = GrowingArray<Int32Array>;
+type GrowingFloat64 = GrowingArray<Float64Array>;
+type GrowingFloat32 = GrowingArray<Float32Array>;
+type GrowingUint32 = GrowingArray<Uint32Array>;
+type GrowingInt32 = GrowingArray<Int32Array>;
 
 export function growingFloat64(): GrowingFloat64 {
   return new GrowingArray<Float64Array>(new Float64Array(FIRST_LENGTH), (length) => new Float64Array(length));

@@ -64,10 +64,3 @@ export const CSV_COLUMNS = [
   { name: 'value_id', unit: null, kind: 'text', about: 'Id of the approved value.' },
   { name: 'value_sha256', unit: null, kind: 'text', about: 'Hash of everything that the value follows from.' },
 ] as const satisfies readonly CsvColumn[];
-
-export type CsvColumnName = (typeof CSV_COLUMNS)[number]['name'];
-
-/** A row of the standard export: every column is present, null where nothing was given. */
-export type CsvRow = {
-  [C in (typeof CSV_COLUMNS)[number] as C['name']]: (C['kind'] extends 'number' ? number : string) | null;
-};

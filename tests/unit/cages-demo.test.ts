@@ -155,8 +155,8 @@ describe('what the story needs', { timeout: 60_000 }, () => {
   });
 });
 
-describe('cages for benchmarks', () => {
-  it.each([600, 2000, 20000])('have about %d quads, closed and outward', (wanted) => {
+describe('cages for benchmarks', { timeout: 60_000 }, () => {
+  it.each([600, 2000, 8000])('have about %d quads, closed and outward', (wanted) => {
     const cage = read(largeCage(wanted));
     const faces = cage.faceStarts.length - 1;
     expect(Math.abs(faces / wanted - 1)).toBeLessThan(0.1);

@@ -14,9 +14,9 @@ interface CloakRow {
 
 const CLOAK: readonly CloakRow[] = [
   { part: 'hood', y: 171.5, reach: 122, radii: [0, 12], z: 0, folds: 0 },
-  { part: 'hood', y: 165, reach: 122, radii: [10.5, 13.5], z: 0, folds: 0 },
-  { part: 'hood', y: 156, reach: 126, radii: [12, 14.5], z: 0, folds: 0 },
-  { part: 'hood', y: 147.5, reach: 132, radii: [11, 12.5], z: -1, folds: 0 },
+  { part: 'hood', y: 165, reach: 122, radii: [10.5, 14.8], z: 0, folds: 0 },
+  { part: 'hood', y: 156, reach: 126, radii: [12, 17.4], z: 0, folds: 0 },
+  { part: 'hood', y: 147.5, reach: 132, radii: [11, 13.5], z: -1, folds: 0 },
   { part: 'mantle', y: 140, reach: 128, radii: [15, 13.5], z: -1, folds: 0.2 },
   { part: 'mantle', y: 133, reach: 108, radii: [24, 17], z: -4, folds: 0.5 },
   { part: 'mantle', y: 118, reach: 84, radii: [29, 19], z: -6, folds: 1 },

@@ -60,9 +60,9 @@ function trunkStations({ hips, waist, chest, shoulders, chin }: Build): TrunkSta
 function growBun(draft: CageDraft, start: HalfRing): void {
   const back = { part: 'head', towards: [0.2, -1] } as const;
   const trunk = growTrunk(draft, start, 'head', [
-    { y: 170.4, z: -11, radii: [3, 3], ...back },
-    { y: 170.9, z: -13, radii: [4, 4], ...back },
-    { y: 171.4, z: -15.4, radii: [3.6, 3.6], ...back },
+    { y: 170.4, z: -10.4, radii: [3, 3], ...back },
+    { y: 170.9, z: -12, radii: [3.8, 3.8], ...back },
+    { y: 171.4, z: -13.8, radii: [3.2, 3.2], ...back },
   ]);
   closeTrunk(draft, 'head', trunk.rows[trunk.rows.length - 1], [0, 0.1, -0.6]);
 }

@@ -43,17 +43,6 @@ export function layPlate(draft: CageDraft, part: string, grid: readonly (readonl
   }
 }
 
-/** An open sheet over a grid, with the part named by row. */
-export function laySheet(draft: CageDraft, parts: readonly string[], grid: readonly (readonly Vec[])[]): number[][] {
-  const vertices = grid.map((row) => row.map((point) => draft.add(point)));
-  for (let r = 0; r + 1 < grid.length; r++) {
-    for (let c = 0; c + 1 < grid[r].length; c++) {
-      draft.face(parts[r], vertices[r][c], vertices[r][c + 1], vertices[r + 1][c + 1], vertices[r + 1][c]);
-    }
-  }
-  return vertices;
-}
-
 /** Outward normal of a grid at a point, from its neighbours. */
 function gridNormal(grid: readonly (readonly Vec[])[], r: number, c: number, around: boolean): Vec {
   const rows = grid.length;
