@@ -101,5 +101,3 @@ export async function printIntake(): Promise<void> {
   console.log(`  upload  ${uploadS.toFixed(2)} s, ${(files / uploadS).toFixed(0)} files/s`);
   console.log(`  submit to all rows  ${measureS.toFixed(2)} s, ${(files / measureS).toFixed(1)} files/s, ${((files * facesPerFile) / measureS).toFixed(0)} faces/s`);
 }
-
-if (process.argv[1] === fileURLToPath(import.meta.url)) await printIntake();

@@ -7,7 +7,7 @@ import { readObj } from '@/lib/formats/obj';
 import { quadTorus, triangleTorus } from './bench-cages';
 import { plainVolume } from './plain-way';
 
-/** Size series of the engine beside the plain way. `--quick` leaves out the million; results also go to bench-results/ as JSON. */
+/** Size series of the engine beside the plain way. `--quick` leaves out the million; results also go to bench-results/ as JSON. `intake` measures an import instead. */
 
 const OPTIONS: MeasureOptions = { scheme: 'catmull-clark', boundary: 'edge-and-corner', triangles: 'catmark', creasing: 'uniform', partsBy: 'whole' };
 
@@ -55,6 +55,12 @@ function plainRow(name: string, cage: Cage, refinements: number, exact: number):
     cage: name, way: `refine ${refinements}×, tetrahedra`, faces, cpuMs, wallMs, facesPerSecond: (1000 * faces) / cpuMs,
     volumeError: Math.abs(result / exact - 1), ownEstimate: null, residentMb: process.memoryUsage.rss() / 2 ** 20, hash: hashOf([result]),
   };
+}
+
+if (process.argv.includes('intake')) {
+  const { printIntake } = await import('./intake');
+  await printIntake();
+  process.exit(0);
 }
 
 const spot = readObj(readFileSync(new URL('../reference/cages/spot.obj', import.meta.url)));
