@@ -33,11 +33,11 @@ export function Facts({ facts }: { facts: readonly Fact[] }) {
           </dt>
           <dd className="min-w-0 text-right">
             {typeof fact.value === 'string' ? (
-              <span className="inline-block pr-7.5 break-words">{fact.value}</span>
+              <span className="inline-block pr-8.5 break-words">{fact.value}</span>
             ) : fact.notation === 'fixed' ? (
               <>
                 <Figure value={fact.value} decimals={fact.decimals ?? 3} align={FIXED} />
-                <span aria-hidden className="inline-block w-7.5" />
+                <span aria-hidden className="inline-block w-8.5" />
               </>
             ) : (
               <Figure value={fact.value} notation="engineering" align={ENGINEERING} />

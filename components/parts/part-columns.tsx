@@ -56,7 +56,7 @@ function magnitude(
     id,
     label,
     name,
-    width: 110,
+    width: 114,
     figures: true,
     part: ({ row }, frame) => cell(row[key], frame, false),
     asset: ({ total }, frame) => cell(total[key], frame, key === 'mass_kg'),
@@ -152,7 +152,7 @@ export const COLUMN_SPECS: readonly ColumnSpec[] = [
     id: 'beam',
     label: 'Balance along longest axis',
     name: 'Balance along longest axis',
-    width: 194,
+    width: 190,
     part: ({ row, largest, partner }, frame) => (
       <RowBeam of={row} unit={frame.linear_unit} largest={largest} partner={partner} />
     ),
@@ -174,7 +174,7 @@ export const COLUMN_SPECS: readonly ColumnSpec[] = [
     id: 'problems',
     label: 'Problems',
     name: 'Problems and warnings',
-    width: 72,
+    width: 68,
     part: ({ row }) => <ProblemCounts findings={row.problems} />,
     asset: ({ total }) => <BlockedCount blocked={total.blocked} />,
     order: (of) => (isPart(of) ? problemWeight(of) : -of.blocked * 1000),

@@ -65,8 +65,8 @@ export function PartPage({ frame, initial }: { frame: ShowFrame; initial: PartDe
           </Button>
         ) : null}
       </header>
-      <div className="grid min-h-0 flex-1 lg:grid-cols-[minmax(0,1fr)_22rem]">
-        <div className="flex min-h-0 min-w-0 flex-col lg:overflow-y-auto">
+      <div className="grid lg:min-h-0 lg:flex-1 lg:grid-cols-[minmax(0,1fr)_22rem]">
+        <div className="flex min-w-0 flex-col lg:min-h-0 lg:overflow-y-auto">
           <div className="flex h-[26rem] shrink-0 flex-col border-b border-rule lg:h-[min(36rem,62dvh)]">
             <PartViewer
               asset={mesh.data ?? null}

@@ -38,9 +38,9 @@ export function Figure({ value, notation = 'fixed', align, decimals, full = valu
 }
 
 function Exponent({ power, apart }: { power: number; apart: boolean }) {
-  if (power === 0) return apart ? <span className="inline-block w-7.5" /> : null;
+  if (power === 0) return apart ? <span className="inline-block w-8.5" /> : null;
   return (
-    <span className={cn('text-12 text-ink-3', apart && 'inline-block w-7.5')}>
+    <span className={cn('text-12 text-ink-3', apart && 'inline-block w-8.5')}>
       <span aria-hidden>·10</span>
       <span className="sr-only"> times ten to the power </span>
       <span className="relative -top-1 text-[0.6875rem]">{power < 0 ? `\u2212${-power}` : power}</span>
