@@ -2,8 +2,7 @@ import { csvRecord } from '@/lib/formats/csv';
 import { CSV_COLUMNS, CSV_SCHEMA } from '@/lib/rules/csv-columns';
 import type { ExportCells } from './export-pages';
 
-export const EXPORT_FORMATS = ['csv', 'json'] as const;
-export type ExportFormat = (typeof EXPORT_FORMATS)[number];
+export type ExportFormat = 'csv' | 'json';
 
 export interface ExportWriter {
   mediaType: string;

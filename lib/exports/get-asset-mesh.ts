@@ -19,7 +19,7 @@ const MESH_FORM = '1';
 const meshCache = new FileCache<CachedFile>('meshes', { files: 500, bytes: 1024 ** 3 });
 
 /** Refinements for a display mesh of about 100,000 to 200,000 faces at most; a cage that is denser is shown as it is. */
-export function displayLevel(faces: number): number {
+function displayLevel(faces: number): number {
   return faces <= 3_000 ? 3 : faces <= 12_000 ? 2 : faces <= 100_000 ? 1 : 0;
 }
 

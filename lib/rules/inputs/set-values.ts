@@ -2,7 +2,7 @@ import { z } from 'zod';
 import { showRef } from '../fields';
 import { CONSTRUCTIONS } from '../states';
 
-export const MAX_SET_ITEMS = 20_000;
+const MAX_SET_ITEMS = 20_000;
 
 const positive = (what: string) => z.number(`${what} is a number, or null to clear it.`).positive(`${what} has to be above 0.`).nullable().optional();
 
