@@ -20,6 +20,7 @@ export default defineConfig({
     // Limits that only end what hangs: a machine under load must not fail a test.
     testTimeout: 60_000,
     hookTimeout: 120_000,
+    slowTestThreshold: 60_000,
     projects: [
       { extends: true, test: { name: 'unit', environment: 'node', include: ['tests/unit/**/*.test.ts'] } },
       {

@@ -49,7 +49,7 @@ async function expectEachOnce(cast: Cast, id: string): Promise<void> {
   expect(await asOwner('select part_id from part_current where show_id = $1', [cast.show.id])).toHaveLength(FILES);
 }
 
-test('a worker killed in the middle and started again: every file ends done once, none twice', { timeout: 60_000 }, async () => {
+test('a worker killed in the middle and started again: every file ends done once, none twice', { timeout: 300_000 }, async () => {
   const cast = await createCast();
   const id = await submitBoxes(cast);
   const first = startWorkerProcess();
@@ -63,7 +63,7 @@ test('a worker killed in the middle and started again: every file ends done once
   await expectEachOnce(cast, id);
 });
 
-test('a worker told to end gives back what it has not begun, and nothing is lost', { timeout: 60_000 }, async () => {
+test('a worker told to end gives back what it has not begun, and nothing is lost', { timeout: 300_000 }, async () => {
   const cast = await createCast();
   const id = await submitBoxes(cast);
   const first = startWorkerProcess();

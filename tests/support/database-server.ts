@@ -71,6 +71,8 @@ async function start(): Promise<Started> {
     const template = `${prefix}template`;
     await ensureTemplate(given, appUrl, template);
     const end = async () => {
+      // Only a member of a role may end its connections.
+      await inDatabase(given, (client) => client.query(`grant ${escapeIdentifier(role)} to current_user`)).catch(() => undefined);
       await dropDatabases(given, prefix);
       await inDatabase(given, (client) => client.query(`drop role if exists ${escapeIdentifier(role)}`));
     };
@@ -83,7 +85,8 @@ async function start(): Promise<Started> {
   const template = `whtemplate_${schemaHash()}`;
   await ensureTemplate(ownerUrl, appUrl, template);
   const end = async () => {
-    await dropDatabases(ownerUrl, prefix);
+    // As the superuser, because a test may have left connections of the application's role open.
+    await dropDatabases(superuserUrl, prefix);
     await script('leave');
   };
   return { server: { ownerUrl, appUrl, template, prefix }, users: 0, end };

@@ -72,7 +72,9 @@ test('the check sees an import across rooms', () => {
 });
 
 test('the environment is read in one file', () => {
-  const readers = files.filter((file) => /process\s*\.\s*env|process\[['"]env/.test(readFileSync(path.join(root, file), 'utf8')));
+  // NEXT_RUNTIME is the compiler's: it replaces these very words, and takes away what the other runtime cannot load.
+  const textOf = (file: string) => readFileSync(path.join(root, file), 'utf8').replaceAll('process.env.NEXT_RUNTIME', '');
+  const readers = files.filter((file) => /process\s*\.\s*env|process\[['"]env/.test(textOf(file)));
   expect(readers).toEqual(['lib/config.ts']);
 });
 
