@@ -20,7 +20,7 @@ export const DESK_CARD_HEIGHT = 148;
 const OUTCOME_WORDS: Record<Outcome, string> = {
   new_asset: 'new asset',
   new_version: 'new version',
-  next_take: 'next take',
+  next_take: 'unchanged, or next take',
   unmatched: 'no asset',
 };
 
@@ -95,7 +95,7 @@ export const DeskRow = memo(function DeskRow({ row, top, index, compact, locked,
 });
 
 function OutcomeWords({ row: { preview } }: { row: Row }) {
-  const words = preview.outcome === 'unmatched' ? OUTCOME_WORDS.unmatched : preview.outcome === 'new_asset' ? `${OUTCOME_WORDS.new_asset} · ${preview.label}` : `${OUTCOME_WORDS[preview.outcome]} · ${preview.label}`;
+  const words = preview.outcome === 'unmatched' ? OUTCOME_WORDS.unmatched : `${OUTCOME_WORDS[preview.outcome]} · ${preview.label}`;
   const warning = preview.warnings.join(' ');
   return (
     <div className="min-w-0 text-13" title={warning || undefined}>

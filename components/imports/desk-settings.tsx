@@ -27,7 +27,7 @@ export function DeskSettings({ options, standard, disabled, onChange }: DeskSett
           onValueChange={(value) => onChange({ ...options, scheme: SCHEME_WORDS.find((word) => word === value) ?? options.scheme })}
         />
       </Field>
-      <Field label="Open borders" className="sm:w-52">
+      <Field label="Open borders" className="order-last col-span-2 sm:order-none sm:w-52">
         <Select
           options={choices(BOUNDARY_WORDS, BOUNDARY_NAMES, standard.boundary)}
           value={options.boundary}

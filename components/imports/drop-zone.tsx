@@ -59,7 +59,7 @@ export function DropZone({ limits, onFiles, slim = false, disabled = false }: Dr
           }}
         />
       </div>
-      <div className={slim ? 'min-w-0 flex-1' : 'max-w-xl'}>
+      <div className={slim ? 'min-w-0 flex-1 basis-60' : 'max-w-xl'}>
         <p className={slim ? 'text-14' : 'text-22 font-medium'}>{isProcessing ? 'Reading the folder…' : isDragActive ? 'Let go to look at them' : slim ? 'Drop more files or folders' : 'Drop cages, or a folder of them'}</p>
         <p className={cn('text-ink-2', slim ? 'text-13' : 'mt-2 text-14')}>
           {kinds}, up to {byteWords(limits.max_file_bytes)} a file and {limits.max_files.toLocaleString('en')} files.
