@@ -47,7 +47,8 @@ export function Select({
         )}
         {...trigger}
       >
-        <Primitive.Value placeholder={placeholder} />
+        {/* Said by us, so that it stands in the server's page too: the primitive knows it only once the page is alive. */}
+        <Primitive.Value placeholder={placeholder}>{options.find((option) => option.value === value)?.label}</Primitive.Value>
         <Primitive.Icon asChild>
           <ChevronDown aria-hidden className="size-4 shrink-0 text-ink-3" />
         </Primitive.Icon>
