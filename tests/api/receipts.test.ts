@@ -19,7 +19,8 @@ const take = (cast: Cast, query: Record<string, string> = {}) => call(GET_CSV, {
 test('receipts are listed newest first, page by page, with who took what by which token', async () => {
   const cast = await createShow();
   const taken: string[] = [];
-  for (const query of [{}, { asset: 'anvil' }, { asset: 'bench' }]) taken.push((await take(cast, query)).headers.get('etag')!.replaceAll('"', ''));
+  const queries: Record<string, string>[] = [{}, { asset: 'anvil' }, { asset: 'bench' }];
+  for (const query of queries) taken.push((await take(cast, query)).headers.get('etag')!.replaceAll('"', ''));
   const page = (cursor?: string) => listReceipts(cast.contextOf('td'), listReceiptsInput.parse({ show: cast.show.code, limit: 2, cursor }));
   const first = await page();
   const second = await page(first.next_cursor!);
