@@ -16,8 +16,15 @@ export function* filesUnder(place) {
   for (const name of readdirSync(place).sort()) yield* filesUnder(path.join(place, name));
 }
 
-/** Hash over everything that decides what a production build contains. */
+let known = null;
+
+/** Hash over everything that decides what a production build contains, taken once in a process. */
 export function sourceHash() {
+  known ??= hashSources();
+  return known;
+}
+
+function hashSources() {
   const hash = createHash('sha256').update(process.version);
   for (const place of [...sources, ...files]) {
     for (const file of filesUnder(inRoot(place))) {
