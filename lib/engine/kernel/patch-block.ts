@@ -3,9 +3,6 @@ import { gaussRule } from '../patches/gauss-rule';
 import { powerArea, powerMoments } from './bicubic-scalar';
 import { INPUT_STRIDE, MOST_PAIRS, OUTPUT_STRIDE, vectorKernel, type VectorKernel } from './vector-kernel';
 
-/** Patches that a block holds. */
-export const BLOCK_PATCHES = 2 * MOST_PAIRS;
-
 const MAGNITUDE = 20;
 const COARSE_AREA = 21;
 
@@ -32,6 +29,7 @@ export function scalarKernel(): VectorKernel {
     if (coarseCount > 0) output[to + 2 * COARSE_AREA] = powerArea(powers, gaussRule(coarseCount));
   };
   return {
+    pairs: MOST_PAIRS,
     input,
     output,
     run(pairs, count, coarseCount) {
@@ -40,12 +38,13 @@ export function scalarKernel(): VectorKernel {
   };
 }
 
-/** Up to BLOCK_PATCHES bicubic patches that are computed together. What one block holds, the next one made in this thread overwrites. */
+/** Bicubic patches that are computed together. What one block holds, the next one made in this thread overwrites. */
 export class PatchBlock {
-  private readonly kernel: VectorKernel;
+  /** Patches that it holds. */
+  readonly size: number;
 
-  constructor(kernel?: VectorKernel) {
-    this.kernel = kernel ?? sharedKernel();
+  constructor(private readonly kernel: VectorKernel = currentKernel()) {
+    this.size = 2 * kernel.pairs;
   }
 
   /** Puts a 4 × 4 net [(4 row + column) · 3 + axis] and the point that its moments shall be about. */
@@ -85,9 +84,20 @@ export class PatchBlock {
   }
 }
 
-let shared: VectorKernel | undefined;
+let own: VectorKernel | undefined;
+let team: VectorKernel | null = null;
 
-function sharedKernel(): VectorKernel {
-  shared ??= vectorKernel() ?? scalarKernel();
-  return shared;
+/** The kernel of this thread alone. */
+export function ownKernel(): VectorKernel {
+  own ??= vectorKernel() ?? scalarKernel();
+  return own;
+}
+
+/** Lets blocks of patches in this thread be computed by a team of threads from now on, or (null) by this thread alone again. */
+export function setPatchTeam(kernel: VectorKernel | null): void {
+  team = kernel;
+}
+
+function currentKernel(): VectorKernel {
+  return team ?? ownKernel();
 }

@@ -1,7 +1,7 @@
 import type { LimitSums } from '../moments/limit-sums';
 import { MOMENTS } from '../moments/sums';
 import { AREA_TOLERANCE, areaError, COARSE_NODES, mendSurfaceMoments } from '../patches/bicubic-surface';
-import { BLOCK_PATCHES, PatchBlock } from './patch-block';
+import { PatchBlock } from './patch-block';
 
 /** Exact for the ten solid moments of a bicubic patch: degree 13 a direction. */
 const EXACT_NODES = 7;
@@ -13,7 +13,7 @@ const surface = new Float64Array(MOMENTS);
 /** Gathers regular patches, computes them block by block and adds their moments to the sums in the order in which they came. */
 export class RegularPatches {
   private readonly block = new PatchBlock();
-  private readonly bodies = new Int32Array(BLOCK_PATCHES);
+  private readonly bodies = new Int32Array(this.block.size);
   private count = 0;
 
   /** `origins` has x, y, z per body: the points that moments are about. */
@@ -23,7 +23,7 @@ export class RegularPatches {
     const { origins } = this;
     this.block.put(this.count, values, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2]);
     this.bodies[this.count++] = body;
-    if (this.count === BLOCK_PATCHES) this.flush();
+    if (this.count === this.block.size) this.flush();
   }
 
   /** Computes and adds what is waiting. */

@@ -18,8 +18,10 @@ const RULE_STRIDE = 2 * MOST_NODES;
 /** What the WebAssembly module exports. Byte addresses. */
 type Run = (pairs: number, input: number, output: number, count: number, nodes: number, coarseCount: number, coarseNodes: number, scratch: number) => void;
 
-/** The vector kernel with its memory. */
+/** A kernel of patches in pairs with its memory. */
 export interface VectorKernel {
+  /** Pairs that the memory holds. */
+  pairs: number;
   /** Nets and origins of the pairs, INPUT_STRIDE apart. */
   input: Float64Array;
   /** Results of the pairs, OUTPUT_STRIDE apart. */
@@ -58,6 +60,7 @@ function wrap(doubles: Float64Array, run: Run): VectorKernel {
     doubles.set(weights, RULE_STRIDE * count + count);
   };
   return {
+    pairs: MOST_PAIRS,
     input: doubles.subarray(INPUT_AT, OUTPUT_AT),
     output: doubles.subarray(OUTPUT_AT, SCRATCH_AT),
     run(pairs, count, coarseCount) {
