@@ -14,7 +14,7 @@ interface MaterialListProps {
 /** The show's materials with their densities, found by typing. */
 export function MaterialList({ materials, value, onChoose }: MaterialListProps) {
   return (
-    <Command label="Material" className="rounded border border-edge bg-ground">
+    <Command label="Material" defaultValue={value ?? undefined} className="rounded border border-edge bg-ground">
       <Command.Input
         placeholder="Find a material"
         className="h-8 w-full border-b border-rule bg-transparent px-2.5 text-14 text-ink outline-none focus-visible:border-brass"

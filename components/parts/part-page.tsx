@@ -93,6 +93,7 @@ export function PartPage({ frame, initial }: { frame: ShowFrame; initial: PartDe
         </div>
         <aside
           aria-label="Numbers"
+          tabIndex={0}
           className="border-rule bg-bench pb-6 max-lg:border-t lg:overflow-y-auto lg:border-l"
         >
           {detail.findings.length === 0 ? null : (

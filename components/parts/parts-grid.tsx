@@ -3,6 +3,7 @@
 import {
   useEffect,
   useId,
+  useMemo,
   useRef,
   type ClipboardEvent,
   type KeyboardEvent,
@@ -70,7 +71,8 @@ export function PartsGrid(props: PartsGridProps) {
   const idBase = useId();
   const width = useElementWidth(scroller);
   const compact = width !== null && width < COMPACT_BELOW;
-  const specs = shownColumns(columns, width ?? 1440);
+  // Kept from one drawing to the next, or every row in sight would be drawn again at each key.
+  const specs = useMemo(() => shownColumns(columns, width ?? 1440), [columns, width]);
   const template = gridTemplate(specs);
   const minWidth = compact ? undefined : specs.reduce((sum, spec) => sum + spec.width, 0);
 

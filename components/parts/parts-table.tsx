@@ -193,6 +193,7 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
         {inspectorOpen && parts.rows.length > 0 ? (
           <aside
             aria-label="Inspector"
+            tabIndex={0}
             className="w-74 shrink-0 overflow-y-auto border-l border-rule bg-bench max-lg:hidden"
           >
             <Inspector active={active} chosen={targets} shown={shown} frame={frame} onSet={openForm} />

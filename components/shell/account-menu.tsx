@@ -1,5 +1,6 @@
 'use client';
 
+import { UserRound } from 'lucide-react';
 import Link from 'next/link';
 import { Menu, MenuChoice, MenuItem, MenuNote, MenuRule } from '@/components/ui/menu';
 import { useTheme } from '@/hooks/use-theme';
@@ -31,12 +32,7 @@ export function AccountMenu({ name, email, links = [], onSignOut }: AccountMenuP
           className="inline-flex h-8 max-w-48 items-center gap-2 rounded px-1.5 text-14 text-ink-2 hover:text-ink pointer-coarse:h-11"
         >
           <span className="truncate max-sm:hidden">{name}</span>
-          <span
-            aria-hidden
-            className="inline-flex size-7 items-center justify-center rounded-full border border-edge text-12 text-ink-2 sm:hidden"
-          >
-            {initials(name)}
-          </span>
+          <UserRound aria-hidden className="size-5 sm:hidden" />
         </button>
       }
     >
@@ -55,10 +51,4 @@ export function AccountMenu({ name, email, links = [], onSignOut }: AccountMenuP
       <MenuItem onSelect={onSignOut}>Sign out</MenuItem>
     </Menu>
   );
-}
-
-function initials(name: string): string {
-  const words = name.trim().split(/\s+/);
-  const letters = words.length > 1 ? [words[0], words[words.length - 1]] : words;
-  return letters.map((word) => (word[0] ?? '').toUpperCase()).join('');
 }

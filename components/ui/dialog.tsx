@@ -39,19 +39,18 @@ export function Dialog({ open, onOpenChange, title, description, children, class
             className,
           )}
         >
-          <div className="flex items-start justify-between gap-4">
-            <Primitive.Title className="text-16 font-medium">{title}</Primitive.Title>
-            <Primitive.Close
-              aria-label="Close"
-              className="-mt-1 -mr-1 inline-flex size-8 items-center justify-center rounded text-ink-2 hover:text-ink pointer-coarse:size-11"
-            >
-              <X aria-hidden className="size-4" />
-            </Primitive.Close>
-          </div>
+          <Primitive.Title className="pr-10 text-16 font-medium">{title}</Primitive.Title>
           {description === undefined ? null : (
             <Primitive.Description className="mt-1 text-14 text-ink-2">{description}</Primitive.Description>
           )}
           <div className="mt-4">{children}</div>
+          {/* Last in the order of keys, so that a dialog begins at its first control. */}
+          <Primitive.Close
+            aria-label="Close"
+            className="absolute top-4 right-4 inline-flex size-8 items-center justify-center rounded text-ink-2 hover:text-ink pointer-coarse:size-11"
+          >
+            <X aria-hidden className="size-4" />
+          </Primitive.Close>
         </Primitive.Content>
       </Primitive.Portal>
     </Primitive.Root>

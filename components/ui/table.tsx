@@ -4,7 +4,7 @@ import { cn } from './cn';
 /** A plain table of a page; the parts table has its own virtual rows in the same dress. */
 export function Table({ className, ...props }: ComponentProps<'table'>) {
   return (
-    <div className="overflow-x-auto">
+    <div className="overflow-x-auto" tabIndex={0}>
       <table className={cn('w-full border-collapse text-14', className)} {...props} />
     </div>
   );

@@ -95,7 +95,7 @@ function labelTexture(text: string, colour: string, ground: string): CanvasTextu
     context.font = `500 44px ${getComputedStyle(document.body).fontFamily}`;
     context.textAlign = 'center';
     context.textBaseline = 'middle';
-    context.lineWidth = 10;
+    context.lineWidth = 6;
     context.lineJoin = 'round';
     context.strokeStyle = ground;
     context.strokeText(text, 32, 34);
