@@ -3,9 +3,11 @@ import type { MeasureOptions, Three } from './measured';
 import { makeFrames } from './mesh/frames';
 import { partitionFaces } from './mesh/partition';
 import { buildTopology, nextHalfEdge, previousHalfEdge } from './mesh/topology';
-import { limitPoints } from './schemes/catmull-clark-limit';
+import { dooSabinLimitPoints, limitPoints, loopSmoothLimit } from './schemes/limit-points';
 import { refineAround } from './schemes/catmull-clark-refine';
+import { refineDooSabin } from './schemes/doo-sabin-refine';
 import { isSharpForGood, levelZero, type LevelMesh } from './schemes/level-mesh';
+import { refineTriangles } from './schemes/loop-refine';
 
 /** Range of one part in a display mesh; parts share no vertices. */
 export interface DisplayPart {
@@ -40,12 +42,30 @@ export function displayMesh(cage: Cage, options: MeasureOptions, level: number):
   const origin: Three = [0, 1, 2].map((axis) => (mesh.faces === 0 ? 0 : frames.boxes[axis] / 2 + frames.boxes[3 + axis] / 2)) as Three;
   const local = cage.positions.map((value, i) => value - origin[i % 3]);
   let fine = levelZero(mesh, local, bodies.partOf, new Uint8Array(bodies.partNames.length), options.boundary);
-  if (options.scheme !== 'polyhedral' && level > 0) {
-    for (let step = 0; step < level; step++) fine = refineAround(fine, options);
-    fine = { ...fine, positions: limitPoints(fine) };
-  }
+  if (level > 0) fine = refineForDisplay(fine, options, level);
   const smooth = options.scheme !== 'polyhedral';
   return { ...triangulate(fine, bodies.partNames, smooth), origin };
+}
+
+/** Refines everything and moves the vertices to their limit points; a cage that its scheme cannot refine is left as it is. */
+function refineForDisplay(cage: LevelMesh, options: MeasureOptions, level: number): LevelMesh {
+  let fine = cage;
+  if (options.scheme === 'catmull-clark') {
+    for (let step = 0; step < level; step++) fine = refineAround(fine, options);
+    return { ...fine, positions: limitPoints(fine) };
+  }
+  if (options.scheme === 'loop') {
+    if (cage.vertexOf.length !== 3 * cage.faces) return cage;
+    for (let step = 0; step < level; step++) fine = refineTriangles(fine, options);
+    return { ...fine, positions: limitPoints(fine, loopSmoothLimit) };
+  }
+  if (options.scheme === 'doo-sabin') {
+    for (let step = 0; step < level; step++) fine = refineDooSabin(fine, step === 0);
+    // Here parts belong to vertices: a face goes with its first.
+    const bodyOf = Int32Array.from({ length: fine.faces }, (_, face) => fine.bodyOf[fine.vertexOf[fine.starts[face]]]);
+    return { ...fine, bodyOf, positions: dooSabinLimitPoints(fine) };
+  }
+  return cage;
 }
 
 /** Corners of one vertex that share a normal: same part, no sharp edge between them. Numbered part by part. */

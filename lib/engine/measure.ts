@@ -4,7 +4,9 @@ import type { MeasuredCage, MeasuredPart, MeasureOptions } from './measured';
 import { diagnoseOrientation } from './mesh/diagnose-orientation';
 import { diagnoseStructure, positionOf } from './mesh/diagnose';
 import { counted, FindingList, placeOf } from './mesh/findings';
+import { isBorder } from './mesh/border-loops';
 import { makeFrames } from './mesh/frames';
+import { halfEdgeEnds } from './mesh/match-edges';
 import { diagnoseNearCoincident } from './mesh/near-coincident';
 import { diagnoseOverlap } from './mesh/overlap';
 import { partitionFaces, type Bodies } from './mesh/partition';
@@ -27,14 +29,12 @@ export function measureCage(cage: Cage, options: MeasureOptions): MeasuredCage {
   const bodies = partitionFaces(cage, mesh, options.partsBy);
   const bad = findNotFinite(cage, findings) ? new Uint8Array(mesh.faces).fill(1) : diagnoseStructure(cage, mesh, defects, bodies, findings);
   const blocked = blockedBodies(mesh, bodies, bad);
-  if (options.scheme === 'loop' || options.scheme === 'doo-sabin') {
-    findings.add('scheme_not_measured', 'problem', null, null, () => `Surfaces of the scheme ${options.scheme} cannot be measured yet; choose another scheme.`);
-    blocked.fill(1);
-  }
+  if (options.scheme === 'loop') blockNotTriangles(cage, mesh, bodies, blocked, findings);
+  if (options.scheme === 'doo-sabin') blockBorders(mesh, bodies, blocked, findings);
   const frames = makeFrames(mesh, cage.positions, bodies);
   const ownCage = integrateCage(mesh, frames, bodies, blocked);
   const cageCaps = capBodies(mesh, frames, bodies, blocked, ownCage);
-  const limit = options.scheme === 'catmull-clark' ? integrateLimit(mesh, frames, bodies, blocked, options) : ownCage;
+  const limit = options.scheme === 'polyhedral' ? ownCage : integrateLimit(mesh, frames, bodies, blocked, options);
   const caps = limit === ownCage ? cageCaps : capBodies(mesh, frames, bodies, blocked, limit);
   if (!limit.resolved) {
     findings.add('not_resolved', 'problem', null, null, () => 'The surface could not be resolved by refinement; lower the sharpness of its creases.');
@@ -67,6 +67,34 @@ function leftOut(mesh: Topology, bodies: Bodies, blocked: Uint8Array, parts: rea
     if (blocked[bodies.bodyOf[face]] === 1 || (part.openEdges > 0 && part.looksLikeSheet)) left[face] = 1;
   }
   return left;
+}
+
+/** Loop surfaces are made of triangles: a part in whose piece any other face lies yields no number. */
+function blockNotTriangles(cage: Cage, mesh: Topology, bodies: Bodies, blocked: Uint8Array, findings: FindingList): void {
+  const spoilt = new Uint8Array(bodies.pieces);
+  for (let face = 0; face < mesh.faces; face++) {
+    if (mesh.starts[face + 1] - mesh.starts[face] === 3) continue;
+    spoilt[bodies.pieceOf[face]] = 1;
+    const position = positionOf(cage, mesh.vertexOf[mesh.starts[face]]);
+    findings.add('not_triangles', 'problem', bodies.partNames[bodies.partOf[face]], placeOf({ face, position, line: cage.faceLines?.[face] ?? null }),
+      (n) => `${counted(n, 'face is', 'faces are')} no triangle, which the Loop scheme needs; triangulate ${n === 1 ? 'it' : 'them'} or choose another scheme.`);
+  }
+  const spoiltParts = new Uint8Array(bodies.partNames.length);
+  for (let face = 0; face < mesh.faces; face++) if (spoilt[bodies.pieceOf[face]] === 1) spoiltParts[bodies.partOf[face]] = 1;
+  for (let body = 0; body < bodies.bodies; body++) if (spoiltParts[bodies.partOfBody[body]] === 1) blocked[body] = 1;
+}
+
+/** Doo-Sabin patches straddle the cage's edges and their borders are not measured yet: a body with a border, open or to another part, yields no number. */
+function blockBorders(mesh: Topology, bodies: Bodies, blocked: Uint8Array, findings: FindingList): void {
+  const spoiltParts = new Uint8Array(bodies.partNames.length);
+  for (let h = 0; h < mesh.twin.length; h++) {
+    if (!isBorder(mesh, bodies.bodyOf, h)) continue;
+    const part = bodies.partOf[mesh.faceOf[h]];
+    spoiltParts[part] = 1;
+    findings.add('scheme_not_measured', 'problem', bodies.partNames[part], placeOf({ face: mesh.faceOf[h], edge: halfEdgeEnds(mesh, h) }),
+      (n) => `${counted(n, 'edge is', 'edges are')} a border, which cannot be measured under the Doo-Sabin scheme yet; close the surface, take it whole or choose another scheme.`);
+  }
+  for (let body = 0; body < bodies.bodies; body++) if (spoiltParts[bodies.partOfBody[body]] === 1) blocked[body] = 1;
 }
 
 /** A part with a structural problem anywhere yields no number, so all its bodies are blocked. */

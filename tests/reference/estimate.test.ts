@@ -2,9 +2,10 @@ import { afterEach, describe, expect, it } from 'vitest';
 import { measureCage } from '@/lib/engine/measure';
 import type { Six, Three } from '@/lib/engine/measured';
 import { gaussRule } from '@/lib/engine/patches/gauss-rule';
-import { SMOOTH_CENTRE } from '@/lib/engine/schemes/catmull-clark-classify';
-import { makeFanState } from '@/lib/engine/schemes/catmull-clark-fan';
-import { fanTable } from '@/lib/engine/schemes/catmull-clark-tables';
+import { SMOOTH_CENTRE } from '@/lib/engine/schemes/classify-vertices';
+import { CATMULL_CLARK_KIT } from '@/lib/engine/schemes/catmull-clark-kit';
+import { makeFanState } from '@/lib/engine/schemes/fan-state';
+import { fanTable } from '@/lib/engine/schemes/fan-tables';
 import { cageSize, CATMULL_CLARK, momentError, referenceCage, totalEstimate, totalMoments } from '../support/engine-cages';
 import limits from './limits.json';
 
@@ -46,7 +47,7 @@ describe('the engine’s own error estimate follows', () => {
   });
 
   it.each([3, 6, 8])('a tail cut after %i levels', (levels) => {
-    const { weights } = fanTable(makeFanState(3, true, false, SMOOTH_CENTRE));
+    const { weights } = fanTable(CATMULL_CLARK_KIT, makeFanState(3, true, false, SMOOTH_CENTRE));
     for (let k = levels; k < weights.length; k++) spoil(weights, k, 0);
     const { error, estimate } = judge('cube');
     expect(error).toBeGreaterThan(1e-10);

@@ -92,10 +92,12 @@ describe('diagnosis', () => {
     expect(parts.map((p) => [p.name, p.components.length])).toEqual([['good', 1], ['bad', 0]]);
   });
 
-  it('says so where a scheme cannot be measured', () => {
-    const pieces = measureCage(cageOf(CUBE, CUBE_FACES), { ...CATMULL_CLARK, scheme: 'loop' });
-    expect(pieces.findings.some((f) => f.severity === 'problem')).toBe(true);
-    expect(pieces.parts[0].components).toEqual([]);
+  it('refuses Loop on other than triangles by the name of the face', () => {
+    const cage = cageOf(CUBE, CUBE_FACES);
+    const loop = measureCage(cage, { ...CATMULL_CLARK, scheme: 'loop' });
+    expect(loop.findings).toMatchObject([{ code: 'not_triangles', severity: 'problem', count: 6 }]);
+    expect(loop.findings[0].places.map((place) => place.face)).toEqual([0, 1, 2, 3, 4, 5]);
+    expect(loop.parts[0].components).toEqual([]);
   });
 });
 

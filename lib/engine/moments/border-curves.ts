@@ -1,21 +1,21 @@
+/** Powers 0 to 4 of three coordinates. */
+export const CURVE_POWERS = 15;
+
 /**
- * Pieces of the limit curves over the border edges of bodies: cubics in powers of t − ½, oriented along the cage's half-edge they belong to.
+ * Pieces of the limit curves over the border edges of bodies: quartics (cubics where the scheme has those) in powers of t − ½, oriented along the cage's half-edge they belong to.
  * `weight` closes sequences of pieces towards an extraordinary point; `share` is the piece's part of its cage edge's parameter range.
  */
 export class BorderCurves {
   readonly edges: number[] = [];
   readonly weights: number[] = [];
   readonly shares: number[] = [];
-  /** Twelve numbers per piece: [power · 3 + axis]. */
+  /** CURVE_POWERS numbers per piece: [power · 3 + axis]. */
   readonly powers: number[] = [];
   /** Limit points at the ends of edges, by 2 · edge + end. */
   readonly ends = new Map<number, [number, number, number]>();
 
   /** Adds the side `side` (0 … 3, counter-clockwise from corner (1,1) to (2,1)) of a bicubic net laid out as `bicubicMoments` wants it, moved by `shift`. The piece covers [from, from + share] of the edge. */
   addSide(net: Float64Array, side: number, edge: number, weight: number, from: number, share: number, shift: ArrayLike<number>): void {
-    this.edges.push(edge);
-    this.weights.push(weight);
-    this.shares.push(share);
     const alongRows = side === 0 || side === 2;
     const reversed = side >= 2;
     // Across the side the B-spline's values at the knot are (1, 4, 1)/6.
@@ -36,10 +36,19 @@ export class BorderCurves {
       control[6 + axis] = (s0 - s1) / 4;
       control[9 + axis] = (d0 - 3 * d1) / 6;
     }
-    for (let axis = 0; axis < 3; axis++) control[axis] += shift[axis];
-    this.powers.push(...control);
-    if (from === 0) this.ends.set(2 * edge, pointAt(control, -0.5));
-    if (from + share === 1) this.ends.set(2 * edge + 1, pointAt(control, 0.5));
+    this.addPowers(control, edge, weight, from, share, shift);
+  }
+
+  /** Adds a piece by its powers of t − ½, [power · 3 + axis], degree 4 at most, moved by `shift`. It covers [from, from + share] of the edge. */
+  addPowers(powers: number[], edge: number, weight: number, from: number, share: number, shift: ArrayLike<number>): void {
+    this.edges.push(edge);
+    this.weights.push(weight);
+    this.shares.push(share);
+    const all = powers.concat(new Array<number>(CURVE_POWERS - powers.length).fill(0));
+    for (let axis = 0; axis < 3; axis++) all[axis] += shift[axis];
+    this.powers.push(...all);
+    if (from === 0) this.ends.set(2 * edge, pointAt(all, -0.5));
+    if (from + share === 1) this.ends.set(2 * edge + 1, pointAt(all, 0.5));
   }
 
   /** Adds the straight line from (px, py, pz) to (qx, qy, qz) as the whole of an edge's curve. */
@@ -47,13 +56,13 @@ export class BorderCurves {
     this.edges.push(edge);
     this.weights.push(1);
     this.shares.push(1);
-    this.powers.push((px + qx) / 2, (py + qy) / 2, (pz + qz) / 2, qx - px, qy - py, qz - pz, 0, 0, 0, 0, 0, 0);
+    this.powers.push((px + qx) / 2, (py + qy) / 2, (pz + qz) / 2, qx - px, qy - py, qz - pz, 0, 0, 0, 0, 0, 0, 0, 0, 0);
     this.ends.set(2 * edge, [px, py, pz]);
     this.ends.set(2 * edge + 1, [qx, qy, qz]);
   }
 }
 
 function pointAt(powers: number[], t: number): [number, number, number] {
-  const at = (axis: number): number => powers[axis] + t * (powers[3 + axis] + t * (powers[6 + axis] + t * powers[9 + axis]));
+  const at = (axis: number): number => powers[axis] + t * (powers[3 + axis] + t * (powers[6 + axis] + t * (powers[9 + axis] + t * powers[12 + axis])));
   return [at(0), at(1), at(2)];
 }

@@ -1,5 +1,6 @@
 import type { Borders } from '../mesh/border-loops';
-import { addCubicChain, noMoments, type CurveTable } from './curve-table';
+import { CURVE_POWERS } from './border-curves';
+import { addPieceChain, noMoments, type CurveTable } from './curve-table';
 import type { MomentSums } from './sums';
 
 /** How much of each body its caps are: their area and the volume between them and the body's origin. */
@@ -75,7 +76,7 @@ export function addCaps(borders: Borders, curves: CurveTable, origins: Float64Ar
     amounts.volume[body] += Math.abs(moments[0]);
   };
   const chain = (segment: Segment, origin: Float64Array, apex: number[], sign: number, out: Float64Array): number =>
-    segment.line !== null ? addCubicChain(segment.line, 0, origin, apex, sign, out) : curves.addChain(segment.edge, origin, apex, sign, out);
+    segment.line !== null ? addPieceChain(segment.line, 0, origin, apex, sign, out) : curves.addChain(segment.edge, origin, apex, sign, out);
 
   /** Takes the loop out of its neighbours: runs of its segments along one neighbour become two spokes over the apex. */
   const replaceBySpokes = (loop: number, apex: number[]): void => {
@@ -192,7 +193,7 @@ function splice(steps: number[], run: number[], replacement: number[]): void {
 }
 
 function straight(from: ArrayLike<number>, to: ArrayLike<number>): Float64Array {
-  const line = new Float64Array(12);
+  const line = new Float64Array(CURVE_POWERS);
   for (let axis = 0; axis < 3; axis++) {
     line[axis] = (from[axis] + to[axis]) / 2;
     line[3 + axis] = to[axis] - from[axis];

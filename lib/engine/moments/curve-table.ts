@@ -1,8 +1,9 @@
 import { gaussRule } from '../patches/gauss-rule';
-import type { BorderCurves } from './border-curves';
+import { CURVE_POWERS, type BorderCurves } from './border-curves';
 import { MOMENTS } from './sums';
 
-const CURVE_NODES = 6;
+/** Exact for the chains of quartics: degree 15 with second moments. */
+const CURVE_NODES = 8;
 
 /** What a border edge's curve must answer, whether it is a limit curve, a cage edge or a spoke of a cap. */
 export interface CurveTable {
@@ -34,13 +35,13 @@ export function curveTable(curves: BorderCurves): CurveTable {
       const mean: [number, number, number] = [0, 0, 0];
       for (const piece of pieces(edge)) {
         const share = curves.weights[piece] * curves.shares[piece];
-        for (let axis = 0; axis < 3; axis++) mean[axis] += share * (powers[12 * piece + axis] + powers[12 * piece + 6 + axis] / 12);
+        for (let axis = 0; axis < 3; axis++) mean[axis] += share * (powers[CURVE_POWERS * piece + axis] + powers[CURVE_POWERS * piece + 6 + axis] / 12 + powers[CURVE_POWERS * piece + 12 + axis] / 80);
       }
       return mean;
     },
     length(edge) {
       let sum = 0;
-      for (const piece of pieces(edge)) sum += curves.weights[piece] * cubicLength(powers, 12 * piece);
+      for (const piece of pieces(edge)) sum += curves.weights[piece] * pieceLength(powers, CURVE_POWERS * piece);
       return sum;
     },
     end: (edge, which) => curves.ends.get(2 * edge + which) ?? [0, 0, 0],
@@ -48,42 +49,42 @@ export function curveTable(curves: BorderCurves): CurveTable {
       let area = 0;
       for (const piece of pieces(edge)) {
         const weight = curves.weights[piece];
-        area += weight * addCubicChain(powers, 12 * piece, origin, apex, sign * weight, out);
+        area += weight * addPieceChain(powers, CURVE_POWERS * piece, origin, apex, sign * weight, out);
       }
       return area;
     },
   };
 }
 
-function cubicLength(p: Float64Array, at: number): number {
+function pieceLength(p: Float64Array, at: number): number {
   const { nodes, weights } = gaussRule(CURVE_NODES);
   let sum = 0;
   for (let i = 0; i < nodes.length; i++) {
     const t = nodes[i];
-    const dx = p[at + 3] + 2 * t * p[at + 6] + 3 * t * t * p[at + 9];
-    const dy = p[at + 4] + 2 * t * p[at + 7] + 3 * t * t * p[at + 10];
-    const dz = p[at + 5] + 2 * t * p[at + 8] + 3 * t * t * p[at + 11];
+    const dx = p[at + 3] + 2 * t * p[at + 6] + t * t * (3 * p[at + 9] + 4 * t * p[at + 12]);
+    const dy = p[at + 4] + 2 * t * p[at + 7] + t * t * (3 * p[at + 10] + 4 * t * p[at + 13]);
+    const dz = p[at + 5] + 2 * t * p[at + 8] + t * t * (3 * p[at + 11] + 4 * t * p[at + 14]);
     sum += weights[i] * Math.sqrt(dx * dx + dy * dy + dz * dz);
   }
   return sum;
 }
 
 /**
- * Chain [O, s, C] of one cubic, about O: with b = s − O and c = C − O, dV = det(b, c, c′) dt / 6, first moments dV/4 · (b + 2c),
- * second dV/20 · (b bᵀ + 2 c cᵀ + (b + 2c)(b + 2c)ᵀ). Degree 11 at most, so 6 nodes are exact.
+ * Chain [O, s, C] of one piece, about O: with b = s − O and c = C − O, dV = det(b, c, c′) dt / 6, first moments dV/4 · (b + 2c),
+ * second dV/20 · (b bᵀ + 2 c cᵀ + (b + 2c)(b + 2c)ᵀ). Degree 15 at most, so 8 nodes are exact.
  */
-export function addCubicChain(p: Float64Array, at: number, origin: ArrayLike<number>, apex: ArrayLike<number>, sign: number, out: Float64Array): number {
+export function addPieceChain(p: Float64Array, at: number, origin: ArrayLike<number>, apex: ArrayLike<number>, sign: number, out: Float64Array): number {
   const { nodes, weights } = gaussRule(CURVE_NODES);
   const bx = apex[0] - origin[0], by = apex[1] - origin[1], bz = apex[2] - origin[2];
   let area = 0;
   for (let i = 0; i < nodes.length; i++) {
     const t = nodes[i];
-    const cx = p[at] - origin[0] + t * (p[at + 3] + t * (p[at + 6] + t * p[at + 9]));
-    const cy = p[at + 1] - origin[1] + t * (p[at + 4] + t * (p[at + 7] + t * p[at + 10]));
-    const cz = p[at + 2] - origin[2] + t * (p[at + 5] + t * (p[at + 8] + t * p[at + 11]));
-    const dx = p[at + 3] + t * (2 * p[at + 6] + 3 * t * p[at + 9]);
-    const dy = p[at + 4] + t * (2 * p[at + 7] + 3 * t * p[at + 10]);
-    const dz = p[at + 5] + t * (2 * p[at + 8] + 3 * t * p[at + 11]);
+    const cx = p[at] - origin[0] + t * (p[at + 3] + t * (p[at + 6] + t * (p[at + 9] + t * p[at + 12])));
+    const cy = p[at + 1] - origin[1] + t * (p[at + 4] + t * (p[at + 7] + t * (p[at + 10] + t * p[at + 13])));
+    const cz = p[at + 2] - origin[2] + t * (p[at + 5] + t * (p[at + 8] + t * (p[at + 11] + t * p[at + 14])));
+    const dx = p[at + 3] + t * (2 * p[at + 6] + t * (3 * p[at + 9] + 4 * t * p[at + 12]));
+    const dy = p[at + 4] + t * (2 * p[at + 7] + t * (3 * p[at + 10] + 4 * t * p[at + 13]));
+    const dz = p[at + 5] + t * (2 * p[at + 8] + t * (3 * p[at + 11] + 4 * t * p[at + 14]));
     const volume = ((sign * weights[i]) / 6) * (bx * (cy * dz - cz * dy) + by * (cz * dx - cx * dz) + bz * (cx * dy - cy * dx));
     const sx = bx + 2 * cx, sy = by + 2 * cy, sz = bz + 2 * cz;
     const first = volume / 4;

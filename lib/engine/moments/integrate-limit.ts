@@ -4,7 +4,9 @@ import type { Frames } from '../mesh/frames';
 import type { Bodies } from '../mesh/partition';
 import type { Topology } from '../mesh/topology';
 import { integrateCatmullClark } from '../schemes/catmull-clark';
+import { integrateDooSabin } from '../schemes/doo-sabin';
 import { levelZero } from '../schemes/level-mesh';
+import { integrateLoop } from '../schemes/loop';
 import { addCaps, type CapAmounts } from './caps';
 import { curveTable } from './curve-table';
 import { emptySums, type LimitSums } from './limit-sums';
@@ -35,7 +37,9 @@ export function integrateCage(mesh: Topology, frames: Frames, bodies: Bodies, bl
 export function integrateLimit(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array, options: MeasureOptions): Integrated {
   const sums = emptySums(bodies.bodies);
   const level = levelZero(mesh, frames.positions, bodies.bodyOf, blocked, options.boundary);
-  const resolved = integrateCatmullClark(level, options, frames.origins, sums);
+  if (options.scheme === 'doo-sabin') return { ...sums, resolved: integrateDooSabin(level, frames.origins, sums) };
+  const integrate = options.scheme === 'loop' ? integrateLoop : integrateCatmullClark;
+  const resolved = integrate(level, options, frames.origins, sums);
   return { ...sums, resolved };
 }
 

@@ -1,53 +1,41 @@
 import type { Topology } from '../mesh/topology';
 import { MOMENTS, type MomentSums } from './sums';
 
-const values = new Float64Array(MOMENTS);
-
 /**
- * The ten moments of the tetrahedron (0, a, b, c), signed by det(a, b, c) [Mirtich 1996]: V; V/4 · Σv; V/20 · (Σ v vᵀ + (Σv)(Σv)ᵀ).
- * Written to `out`; returns the magnitude that the volume's rounding error is relative to.
+ * Adds the ten moments of the tetrahedron (0, a, b, c), signed by det(a, b, c), to `solid` [Mirtich 1996]: V; V/4 · Σv; V/20 · (Σ v vᵀ + (Σv)(Σv)ᵀ),
+ * and the ten surface moments of the triangle a, b, c to `surface`: A; A/3 · Σv; A/12 · (the same). Returns the magnitude that the volume's rounding error is relative to.
  */
-export function tetrahedronMoments(
-  ax: number, ay: number, az: number, bx: number, by: number, bz: number, cx: number, cy: number, cz: number, out: Float64Array,
+function addTriangle(
+  ax: number, ay: number, az: number, bx: number, by: number, bz: number, cx: number, cy: number, cz: number, solid: Float64Array, surface: Float64Array,
 ): number {
-  const volume = (ax * (by * cz - bz * cy) + ay * (bz * cx - bx * cz) + az * (bx * cy - by * cx)) / 6;
-  const sx = ax + bx + cx;
-  const sy = ay + by + cy;
-  const sz = az + bz + cz;
-  const first = volume / 4;
-  const second = volume / 20;
-  out[0] = volume;
-  out[1] = first * sx;
-  out[2] = first * sy;
-  out[3] = first * sz;
-  out[4] = second * (ax * ax + bx * bx + cx * cx + sx * sx);
-  out[5] = second * (ay * ay + by * by + cy * cy + sy * sy);
-  out[6] = second * (az * az + bz * bz + cz * cz + sz * sz);
-  out[7] = second * (ax * ay + bx * by + cx * cy + sx * sy);
-  out[8] = second * (ax * az + bx * bz + cx * cz + sx * sz);
-  out[9] = second * (ay * az + by * bz + cy * cz + sy * sz);
-  return (Math.abs(ax * (by * cz - bz * cy)) + Math.abs(ay * (bz * cx - bx * cz)) + Math.abs(az * (bx * cy - by * cx))) / 6;
-}
-
-/** Ten surface moments of the triangle a, b, c times its area: ∫ 1, x … yz dA, exact. Written to `out`. */
-function triangleSurfaceMoments(
-  ax: number, ay: number, az: number, bx: number, by: number, bz: number, cx: number, cy: number, cz: number, out: Float64Array,
-): void {
+  const px = ax * (by * cz - bz * cy), py = ay * (bz * cx - bx * cz), pz = az * (bx * cy - by * cx);
+  const volume = (px + py + pz) / 6;
   const ux = bx - ax, uy = by - ay, uz = bz - az;
   const vx = cx - ax, vy = cy - ay, vz = cz - az;
-  const area = Math.sqrt((uy * vz - uz * vy) ** 2 + (uz * vx - ux * vz) ** 2 + (ux * vy - uy * vx) ** 2) / 2;
+  const nx = uy * vz - uz * vy, ny = uz * vx - ux * vz, nz = ux * vy - uy * vx;
+  const area = Math.sqrt(nx * nx + ny * ny + nz * nz) / 2;
   const sx = ax + bx + cx, sy = ay + by + cy, sz = az + bz + cz;
-  const second = area / 12;
-  out[0] = area;
-  out[1] = (area / 3) * sx;
-  out[2] = (area / 3) * sy;
-  out[3] = (area / 3) * sz;
-  out[4] = second * (ax * ax + bx * bx + cx * cx + sx * sx);
-  out[5] = second * (ay * ay + by * by + cy * cy + sy * sy);
-  out[6] = second * (az * az + bz * bz + cz * cz + sz * sz);
-  out[7] = second * (ax * ay + bx * by + cx * cy + sx * sy);
-  out[8] = second * (ax * az + bx * bz + cx * cz + sx * sz);
-  out[9] = second * (ay * az + by * bz + cy * cz + sy * sz);
+  const xx = ax * ax + bx * bx + cx * cx + sx * sx, yy = ay * ay + by * by + cy * cy + sy * sy, zz = az * az + bz * bz + cz * cz + sz * sz;
+  const xy = ax * ay + bx * by + cx * cy + sx * sy, xz = ax * az + bx * bz + cx * cz + sx * sz, yz = ay * az + by * bz + cy * cz + sy * sz;
+  addTen(solid, volume, volume / 4, volume / 20, sx, sy, sz, xx, yy, zz, xy, xz, yz);
+  addTen(surface, area, area / 3, area / 12, sx, sy, sz, xx, yy, zz, xy, xz, yz);
+  return (Math.abs(px) + Math.abs(py) + Math.abs(pz)) / 6;
+}
+
+function addTen(
+  out: Float64Array, zeroth: number, first: number, second: number, sx: number, sy: number, sz: number,
+  xx: number, yy: number, zz: number, xy: number, xz: number, yz: number,
+): void {
+  out[0] += zeroth;
+  out[1] += first * sx;
+  out[2] += first * sy;
+  out[3] += first * sz;
+  out[4] += second * xx;
+  out[5] += second * yy;
+  out[6] += second * zz;
+  out[7] += second * xy;
+  out[8] += second * xz;
+  out[9] += second * yz;
 }
 
 /**
@@ -85,11 +73,7 @@ export function addPolyhedralMoments(
       const b = 3 * mesh.vertexOf[h + 1 === end ? start : h + 1];
       const ax = p[a] - ox, ay = p[a + 1] - oy, az = p[a + 2] - oz;
       const bx = p[b] - ox, by = p[b + 1] - oy, bz = p[b + 2] - oz;
-      solid.magnitudes[body] += tetrahedronMoments(mx, my, mz, ax, ay, az, bx, by, bz, values);
-      for (let i = 0; i < MOMENTS; i++) faceSolid[i] += values[i];
-      if (surface === null) continue;
-      triangleSurfaceMoments(mx, my, mz, ax, ay, az, bx, by, bz, values);
-      for (let i = 0; i < MOMENTS; i++) faceSurface[i] += values[i];
+      solid.magnitudes[body] += addTriangle(mx, my, mz, ax, ay, az, bx, by, bz, faceSolid, faceSurface);
     }
     solid.add(body, faceSolid, 0);
     surface?.add(body, faceSurface, 0);

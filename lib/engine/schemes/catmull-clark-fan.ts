@@ -1,40 +1,5 @@
-import { CORNER_CENTRE, CREASE_CENTRE } from './catmull-clark-classify';
-
-/**
- * The rings 0 to 3 around the centre of a fan of n quads, all other vertices regular. In the grid of sector j the spoke j runs along a,
- * spoke j + 1 along b: point (a, 0) lies on spoke j, (0, b) on spoke j + 1, (0, 0) is the centre.
- */
-export interface FanState {
-  sectors: number;
-  closed: boolean;
-  /** Closed fans: spoke 0 is infinitely sharp. Open fans: their two end spokes always are. */
-  sharpFirst: boolean;
-  centreRule: number;
-  centre: Float64Array;
-  /** Points 1 … 3 of each spoke: [(3 spoke + a − 1) · 3 + axis]; n spokes, one more where the fan is open. */
-  spokes: Float64Array;
-  /** Points (a, b), 1 … 3 each: [(9 sector + 3 (a − 1) + b − 1) · 3 + axis]. */
-  inner: Float64Array;
-}
-
-export function makeFanState(sectors: number, closed: boolean, sharpFirst: boolean, centreRule: number): FanState {
-  return {
-    sectors, closed, sharpFirst, centreRule,
-    centre: new Float64Array(3),
-    spokes: new Float64Array(9 * (closed ? sectors : sectors + 1)),
-    inner: new Float64Array(27 * sectors),
-  };
-}
-
-function isSharpSpoke(fan: FanState, spoke: number): boolean {
-  return fan.closed ? fan.sharpFirst && spoke === 0 : spoke === 0 || spoke === fan.sectors;
-}
-
-/** Offset of the spoke before (0) or after (1) a sector. */
-function spokeAt(fan: FanState, sector: number, side: number): number {
-  const spoke = sector + side;
-  return 9 * (fan.closed && spoke === fan.sectors ? 0 : spoke);
-}
+import { CORNER_CENTRE, CREASE_CENTRE } from './classify-vertices';
+import { isSharpSpoke, iterateLimit, spokeAt, type FanState } from './fan-state';
 
 /**
  * One step of refinement [Catmull & Clark 1978]: the rings 0 to 2 of `from` give the rings 0 to 3 of `to`.
@@ -167,20 +132,5 @@ export function approximateLimit(fan: FanState): Float64Array {
     }
     return limit;
   }
-  let state = fan;
-  let finer = makeFanState(n, fan.closed, fan.sharpFirst, fan.centreRule);
-  for (let step = 0; step < LIMIT_STEPS; step++) {
-    refineFan(state, finer);
-    state = finer;
-    finer = makeFanState(n, fan.closed, fan.sharpFirst, fan.centreRule);
-  }
-  return Float64Array.from(state.centre);
-}
-
-/** Rings shrink by at least 0.66 a step: 90 steps reach rounding. */
-const LIMIT_STEPS = 90;
-
-/** Takes `shift` off all points of the rings 0 to 2. */
-export function translateFan(fan: FanState, shift: Float64Array): void {
-  for (const values of [fan.centre, fan.spokes, fan.inner]) for (let i = 0; i < values.length; i++) values[i] -= shift[i % 3];
+  return iterateLimit(fan, refineFan);
 }

@@ -2,7 +2,8 @@ import type { CreasingRule } from '../cage';
 import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
 import type { LevelMesh } from './level-mesh';
 import type { RefinementRules } from './refinement-rules';
-import { childEdgeSharpness, decayed, type SemiSharpAround } from './sharpness-decay';
+import { childEdgeSharpness, type SemiSharpAround } from './sharpness-decay';
+import { blendVertexRules } from './vertex-rules';
 
 /** Weight of each triangle beside an edge in the first step of the triangle rule "smooth"; quads have ¼. */
 const SMOOTH_TRIANGLE_WEIGHT = 0.47;
@@ -116,41 +117,10 @@ export class VertexStars {
   }
 }
 
-const SMOOTH = 0;
-const CREASE = 2;
-const CORNER = 3;
-
-/** Corner: tagged, or more than two sharp edges; crease: two; one (a dart) and none: smooth. */
-function ruleOf(vertexSharpness: number, sharpEdges: number): number {
-  if (vertexSharpness > 0 || sharpEdges > 2) return CORNER;
-  return sharpEdges === 2 ? CREASE : SMOOTH;
-}
-
-/**
- * Vertex point. Where the rule changes in this step, the old rule counts by the mean w of the sharpnesses that end in it (at most 1)
- * and the new one by 1 − w; a smooth vertex or dart is never blended.
- */
+/** Vertex point of Catmull-Clark, to `out`. */
 export function vertexPoint(mesh: LevelMesh, vertex: number, stars: VertexStars, out: Float64Array): void {
-  const sharpness = mesh.vertexSharpness[vertex];
-  const childSharpness = decayed(sharpness);
-  const parent = ruleOf(sharpness, stars.sharp[vertex]);
-  const child = ruleOf(childSharpness, stars.childSharp[vertex]);
-  let weight = 1;
-  if (parent !== SMOOTH && parent !== child) {
-    const ends = sharpness > 0 && childSharpness === 0;
-    const count = stars.endings[vertex] + (ends ? 1 : 0);
-    weight = count === 0 ? 0 : Math.min(1, (stars.endingSums[vertex] + (ends ? sharpness : 0)) / count);
-  }
-  for (let axis = 0; axis < 3; axis++) {
-    const before = byRule(mesh, vertex, stars, parent, stars.sharpSums, axis);
-    out[axis] = weight === 1 ? before : weight * before + (1 - weight) * byRule(mesh, vertex, stars, child, stars.childSharpSums, axis);
-  }
-}
-
-function byRule(mesh: LevelMesh, vertex: number, stars: VertexStars, rule: number, sharpSums: Float64Array, axis: number): number {
-  const own = mesh.positions[3 * vertex + axis];
-  if (rule === CORNER) return own;
-  if (rule === CREASE) return (6 * own + sharpSums[3 * vertex + axis]) / 8;
   const n = stars.faces[vertex];
-  return ((n - 2) / n) * own + (stars.edgeSums[3 * vertex + axis] + stars.faceSums[3 * vertex + axis]) / (n * n);
+  const smooth = (axis: number): number =>
+    ((n - 2) / n) * mesh.positions[3 * vertex + axis] + (stars.edgeSums[3 * vertex + axis] + stars.faceSums[3 * vertex + axis]) / (n * n);
+  for (let axis = 0; axis < 3; axis++) out[axis] = blendVertexRules(mesh, vertex, stars, axis, smooth);
 }

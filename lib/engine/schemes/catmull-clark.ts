@@ -1,10 +1,11 @@
 import { RegularPatches } from '../kernel/regular-patches';
 import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
-import { classifyVertices, isRegularFace, type Fans } from './catmull-clark-classify';
-import { integrateFan } from './catmull-clark-integrate-fan';
+import { classifyVertices, isIsolated, isRegularFace, QUAD_COUNTS } from './classify-vertices';
+import { CATMULL_CLARK_KIT } from './catmull-clark-kit';
 import { fillNet } from './catmull-clark-net';
 import { refineAround } from './catmull-clark-refine';
+import { integrateFan } from './integrate-fan';
 import type { LevelMesh } from './level-mesh';
 import type { RefinementRules } from './refinement-rules';
 
@@ -23,19 +24,19 @@ export function integrateCatmullClark(cage: LevelMesh, rules: RefinementRules, o
   let mesh = cage;
   const patches = new RegularPatches(origins, sums);
   for (let level = 0; level <= MOST_LEVELS; level++) {
-    const { kinds, fans } = classifyVertices(mesh);
+    const { kinds, fans } = classifyVertices(mesh, QUAD_COUNTS);
     let left = 0;
     for (let face = 0; face < mesh.faces; face++) {
       if (mesh.live[face] === 0) continue;
-      if (isRegularFace(mesh, kinds, face, -1)) {
+      if (isRegularFace(mesh, QUAD_COUNTS, kinds, face, -1)) {
         addRegularFace(mesh, face, patches, sums.curves);
         mesh.live[face] = 0;
       } else left++;
     }
     patches.flush();
     for (let fan = 0; fan < fans.centre.length && left > 0; fan++) {
-      if (!isIsolated(mesh, kinds, fans, fan)) continue;
-      integrateFan(mesh, fans, fan, origins, sums);
+      if (!isIsolated(mesh, QUAD_COUNTS, kinds, fans, fan)) continue;
+      integrateFan(CATMULL_CLARK_KIT, mesh, fans, fan, origins, sums);
       for (let i = fans.starts[fan]; i < fans.starts[fan + 1]; i++) mesh.live[mesh.faceOf[fans.corners[i]]] = 0;
       left -= fans.starts[fan + 1] - fans.starts[fan];
     }
@@ -43,14 +44,6 @@ export function integrateCatmullClark(cage: LevelMesh, rules: RefinementRules, o
     mesh = refineAround(mesh, rules);
   }
   return false;
-}
-
-function isIsolated(mesh: LevelMesh, kinds: Uint8Array, fans: Fans, fan: number): boolean {
-  for (let i = fans.starts[fan]; i < fans.starts[fan + 1]; i++) {
-    const face = mesh.faceOf[fans.corners[i]];
-    if (mesh.live[face] === 0 || !isRegularFace(mesh, kinds, face, fans.corners[i])) return false;
-  }
-  return true;
 }
 
 function addRegularFace(mesh: LevelMesh, face: number, patches: RegularPatches, curves: BorderCurves): void {

@@ -1,6 +1,6 @@
 import type { MeasureOptions } from '../measured';
 import type { Topology } from '../mesh/topology';
-import { limitPoints } from './catmull-clark-limit';
+import { limitPoints } from './limit-points';
 import { refineAround } from './catmull-clark-refine';
 import { levelZero, type LevelMesh } from './level-mesh';
 

@@ -1,18 +1,11 @@
 import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
 import { MOMENTS } from '../moments/sums';
-import { bicubicMoments } from '../patches/bicubic';
-import { bicubicArea, mendSurfaceMoments } from '../patches/bicubic-surface';
-import { gaussRule } from '../patches/gauss-rule';
-import type { Fans } from './catmull-clark-classify';
-import { approximateLimit, fillChildNet, makeFanState, refineFan, translateFan, type FanState } from './catmull-clark-fan';
-import { fillNet } from './catmull-clark-net';
-import { fanTable, type FanTable } from './catmull-clark-tables';
+import type { Fans } from './classify-vertices';
+import type { FanKit } from './fan-kit';
+import { makeFanState, translateFan, type FanState } from './fan-state';
+import { fanTable, type FanTable } from './fan-tables';
 import type { LevelMesh } from './level-mesh';
-
-/** Gauss nodes a direction: exact ones first, then fewer as the levels flatten, as far as a probe allows. */
-const MOST_NODES = 7;
-const FEWEST_NODES = 3;
 
 /** What a coarser rule may change, relative to the fan's own moments and area. */
 const SOLID_TOLERANCE = 1e-16;
@@ -37,46 +30,46 @@ interface FanSums {
 /**
  * Adds the moments and border curves of an isolated fan: a level sequence of 3n regular patches each, closed by weights instead of eigenvectors.
  */
-export function integrateFan(mesh: LevelMesh, fans: Fans, index: number, origins: Float64Array, sums: LimitSums): void {
-  let state = readFan(mesh, fans, index);
+export function integrateFan(kit: FanKit, mesh: LevelMesh, fans: Fans, index: number, origins: Float64Array, sums: LimitSums): void {
+  let state = makeFanState(fans.starts[index + 1] - fans.starts[index], fans.closed[index], fans.sharpFirst[index], fans.centre[index]);
   let finer = makeFanState(state.sectors, state.closed, state.sharpFirst, state.centreRule);
-  const table = fanTable(state);
+  const table = fanTable(kit, state);
   const { weights, curveWeights } = table;
   const levels = Math.max(weights.length, table.surfaceWeights.length);
   const corners = fans.corners.slice(fans.starts[index], fans.starts[index + 1]);
   const n = state.sectors;
+  kit.read(mesh, corners, state);
   const own: FanSums = {
     solid: new Float64Array(MOMENTS * n), surface: new Float64Array(MOMENTS * n), checkSolid: new Float64Array(MOMENTS * n),
     checkArea: new Float64Array(n), magnitude: new Float64Array(n),
   };
-  const bordered = corners.some((corner) => [0, 1, 2, 3].some((side) => mesh.borderOf[sideOf(mesh, corner, side)] >= 0));
+  const bordered = corners.some((corner) => [0, 1, 2, 3].some((side) => side < kit.sides && mesh.borderOf[sideOf(kit, mesh, corner, side)] >= 0));
   // About the limit point all rings shrink to 0 and so does their rounding, which the closing would else multiply.
-  const limit = approximateLimit(state);
+  const limit = kit.limit(state);
   translateFan(state, limit);
   const originOf = (j: number): [number, number, number] => {
-    const at = 3 * mesh.bodyOf[mesh.faceOf[corners[j]]];
+    const at = 3 * kit.body(mesh, corners[j]);
     return [origins[at] - limit[0], origins[at + 1] - limit[1], origins[at + 2] - limit[2]];
   };
   const centre = originOf(0);
   const reach = Math.hypot(centre[0], centre[1], centre[2]) + state.spokes.reduce((far, value) => Math.max(far, Math.abs(value)), 0);
-  let nodes = MOST_NODES;
+  let nodes = kit.mostNodes;
   let solidScale = 0;
   let areaScale = 0;
   let worst = 0;
   let worstError = 0;
   for (let k = 0; k < levels; k++) {
-    refineFan(state, finer);
+    kit.refine(state, finer);
     [state, finer] = [finer, state];
-    const rule = gaussRule(nodes);
     for (let j = 0; j < n; j++) {
       const [ox, oy, oz] = originOf(j);
       for (let child = 0; child < 3; child++) {
-        fillChildNet(state, j, child, net);
-        if (bordered) addFanCurves(mesh, corners[j], child, k, at(curveWeights, k), limit, sums.curves);
-        const magnitude = bicubicMoments(net, ox, oy, oz, rule, solid, surface);
-        if (nodes === MOST_NODES) {
-          const error = mendSurfaceMoments(net, ox, oy, oz, surface, bicubicArea(net));
-          sums.surfaceError[mesh.bodyOf[mesh.faceOf[corners[j]]]] += Math.abs(at(table.surfaceWeights, k)) * error;
+        kit.fillChild(state, j, child, net);
+        if (bordered) addFanCurves(kit, mesh, corners[j], child, k, at(curveWeights, k), limit, sums.curves);
+        const magnitude = kit.moments(net, ox, oy, oz, nodes, solid, surface);
+        if (nodes === kit.mostNodes) {
+          const error = kit.mendSurface(net, ox, oy, oz, surface);
+          sums.surfaceError[kit.body(mesh, corners[j])] += Math.abs(at(table.surfaceWeights, k)) * error;
           if (error > worstError) {
             worstError = error;
             worst = 3 * j + child;
@@ -90,31 +83,31 @@ export function integrateFan(mesh: LevelMesh, fans: Fans, index: number, origins
       }
     }
     worstError = 0;
-    if (nodes === FEWEST_NODES || k + 1 >= levels) continue;
+    if (nodes === kit.fewestNodes || k + 1 >= levels) continue;
     // The patch that erred most and one in turn speak for all.
     const fewer = [(7 * k) % (3 * n), worst].every((patch) => {
       const j = Math.floor(patch / 3);
-      return probe(state, j, patch % 3, originOf(j), nodes, 3 * n, solidScale, areaScale, reach);
+      return probe(kit, state, j, patch % 3, originOf(j), nodes, 3 * n, solidScale, areaScale, reach);
     });
     if (fewer) {
       nodes--;
-      const body = mesh.bodyOf[mesh.faceOf[corners[Math.floor(worst / 3)]]];
+      const body = kit.body(mesh, corners[Math.floor(worst / 3)]);
       for (let i = 0; i < MOMENTS; i++) sums.closingError[MOMENTS * body + i] += 3 * n * Math.abs(coarseSolid[i] - solid[i]);
       sums.surfaceError[body] += 3 * n * Math.abs(coarseSurface[0] - surface[0]);
     }
   }
-  if (bordered) addRestOfCurves(mesh, corners, state, finer, levels, curveWeights, limit, sums.curves);
-  finishFan(mesh, corners, own, sums);
+  if (bordered) addRestOfCurves(kit, mesh, corners, state, finer, levels, curveWeights, limit, sums.curves);
+  finishFan(kit, mesh, corners, own, sums);
 }
 
 /** Whether one node less would do for a patch; leaves both results in `solid`, `surface` and `coarseSolid`, `coarseSurface`. */
 function probe(
-  state: FanState, sector: number, child: number, [ox, oy, oz]: [number, number, number], nodes: number, patches: number,
+  kit: FanKit, state: FanState, sector: number, child: number, [ox, oy, oz]: [number, number, number], nodes: number, patches: number,
   solidScale: number, areaScale: number, reach: number,
 ): boolean {
-  fillChildNet(state, sector, child, net);
-  bicubicMoments(net, ox, oy, oz, gaussRule(nodes), solid, surface);
-  bicubicMoments(net, ox, oy, oz, gaussRule(nodes - 1), coarseSolid, coarseSurface);
+  kit.fillChild(state, sector, child, net);
+  kit.moments(net, ox, oy, oz, nodes, solid, surface);
+  kit.moments(net, ox, oy, oz, nodes - 1, coarseSolid, coarseSurface);
   if (!(patches * Math.abs(coarseSurface[0] - surface[0]) <= SURFACE_TOLERANCE * areaScale)) return false;
   for (let i = 0; i < MOMENTS; i++) {
     const scale = i === 0 ? 1 : i < 4 ? reach : reach * reach;
@@ -141,9 +134,9 @@ function addPatch(own: FanSums, sector: number, table: FanTable, k: number, magn
   own.magnitude[sector] += Math.abs(weight) * magnitude;
 }
 
-function finishFan(mesh: LevelMesh, corners: number[], own: FanSums, sums: LimitSums): void {
+function finishFan(kit: FanKit, mesh: LevelMesh, corners: number[], own: FanSums, sums: LimitSums): void {
   for (let j = 0; j < corners.length; j++) {
-    const body = mesh.bodyOf[mesh.faceOf[corners[j]]];
+    const body = kit.body(mesh, corners[j]);
     sums.solid.add(body, own.solid, MOMENTS * j);
     sums.surface.add(body, own.surface, MOMENTS * j);
     sums.solid.magnitudes[body] += own.magnitude[j];
@@ -154,71 +147,50 @@ function finishFan(mesh: LevelMesh, corners: number[], own: FanSums, sums: Limit
 
 /** Border curves shrink more slowly than patches, so their sequence goes on; at its end stand the limit points of the edges. */
 function addRestOfCurves(
-  mesh: LevelMesh, corners: number[], from: FanState, spare: FanState, done: number, weights: Float64Array, limit: Float64Array, curves: BorderCurves,
+  kit: FanKit, mesh: LevelMesh, corners: number[], from: FanState, spare: FanState, done: number, weights: Float64Array, limit: Float64Array, curves: BorderCurves,
 ): void {
   let state = from;
   let finer = spare;
   for (let k = done; k < weights.length; k++) {
-    refineFan(state, finer);
+    kit.refine(state, finer);
     [state, finer] = [finer, state];
     for (let j = 0; j < corners.length; j++) {
       for (let child = 0; child < 3; child += 2) {
-        fillChildNet(state, j, child, net);
-        addFanCurves(mesh, corners[j], child, k, weights[k], limit, curves);
+        kit.fillChild(state, j, child, net);
+        addFanCurves(kit, mesh, corners[j], child, k, weights[k], limit, curves);
       }
     }
   }
   for (const corner of corners) {
-    const leaving = mesh.borderOf[sideOf(mesh, corner, 0)];
-    const arriving = mesh.borderOf[sideOf(mesh, corner, 3)];
+    const leaving = mesh.borderOf[sideOf(kit, mesh, corner, 0)];
+    const arriving = mesh.borderOf[sideOf(kit, mesh, corner, kit.arriving)];
     if (leaving >= 0) curves.ends.set(2 * leaving, [limit[0], limit[1], limit[2]]);
     if (arriving >= 0) curves.ends.set(2 * arriving + 1, [limit[0], limit[1], limit[2]]);
   }
 }
 
-function readFan(mesh: LevelMesh, fans: Fans, index: number): FanState {
-  const from = fans.starts[index];
-  const fan = makeFanState(fans.starts[index + 1] - from, fans.closed[index], fans.sharpFirst[index], fans.centre[index]);
-  for (let j = 0; j < fan.sectors; j++) {
-    fillNet(mesh, fans.corners[from + j], true, net);
-    fan.centre.set(net.subarray(15, 18));
-    const before = 9 * j;
-    const after = fan.closed && j + 1 === fan.sectors ? 0 : 9 * (j + 1);
-    for (let a = 1; a < 3; a++) {
-      fan.spokes.set(net.subarray(3 * (4 * (a + 1) + 1), 3 * (4 * (a + 1) + 1) + 3), before + 3 * (a - 1));
-      fan.spokes.set(net.subarray(3 * (4 + a + 1), 3 * (4 + a + 1) + 3), after + 3 * (a - 1));
-      for (let b = 1; b < 3; b++) {
-        const at = 3 * (4 * (a + 1) + b + 1);
-        fan.inner.set(net.subarray(at, at + 3), 27 * j + 9 * (a - 1) + 3 * (b - 1));
-      }
-    }
-  }
-  return fan;
-}
-
-/** Which sides of the three child nets lie on the sides 0 … 3 of their sector's face (side 0 along spoke j, side 3 along spoke j + 1), and which half of those. */
-const OUTER_SIDES: readonly (readonly [child: number, side: number, faceSide: number, half: number])[] = [[0, 1, 1, 0], [1, 1, 1, 1], [1, 2, 2, 0], [2, 2, 2, 1]];
-
 /** Half-edge of side `side` of the face with corner 0 at `corner`. */
-function sideOf(mesh: LevelMesh, corner: number, side: number): number {
+function sideOf(kit: FanKit, mesh: LevelMesh, corner: number, side: number): number {
   const start = mesh.starts[mesh.faceOf[corner]];
-  return start + ((corner - start + side) & 3);
+  return start + ((corner - start + side) % kit.sides);
 }
 
-/** Adds the border curves that the child net in `net` holds at level k of a fan. Spokes 0 leave the centre, sides 3 run towards it. */
-function addFanCurves(mesh: LevelMesh, corner: number, child: number, k: number, weight: number, limit: Float64Array, curves: BorderCurves): void {
+/** Adds the border curves that the child net in `net` holds at level k of a fan. Sides 0 leave the centre, sides `arriving` run towards it. */
+function addFanCurves(
+  kit: FanKit, mesh: LevelMesh, corner: number, child: number, k: number, weight: number, limit: Float64Array, curves: BorderCurves,
+): void {
   const length = 2 ** -mesh.level;
   if (child !== 1 && weight !== 0) {
-    const side = child === 0 ? 0 : 3;
-    const h = sideOf(mesh, corner, side);
+    const side = child === 0 ? 0 : kit.arriving;
+    const h = sideOf(kit, mesh, corner, side);
     const share = length * 2 ** (-1 - k);
     const from = mesh.borderFrom[h] + (side === 0 ? share : length - 2 * share);
-    if (mesh.borderOf[h] >= 0) curves.addSide(net, side, mesh.borderOf[h], weight, from, share, limit);
+    if (mesh.borderOf[h] >= 0) kit.addSide(curves, net, side, mesh.borderOf[h], weight, from, share, limit);
   }
   if (k > 0) return;
-  for (const [outerChild, side, faceSide, half] of OUTER_SIDES) {
+  for (const [outerChild, side, faceSide, half] of kit.outerSides) {
     if (outerChild !== child) continue;
-    const h = sideOf(mesh, corner, faceSide);
-    if (mesh.borderOf[h] >= 0) curves.addSide(net, side, mesh.borderOf[h], 1, mesh.borderFrom[h] + (half * length) / 2, length / 2, limit);
+    const h = sideOf(kit, mesh, corner, faceSide);
+    if (mesh.borderOf[h] >= 0) kit.addSide(curves, net, side, mesh.borderOf[h], 1, mesh.borderFrom[h] + (half * length) / 2, length / 2, limit);
   }
 }

@@ -30,12 +30,23 @@ export interface Classified {
   fans: Fans;
 }
 
-function isQuad(mesh: LevelMesh, face: number): boolean {
-  return mesh.starts[face + 1] - mesh.starts[face] === 4;
+/** What is regular to a scheme: corners of a face, faces around an inner vertex, faces on one side of a crease. A corner's sector has one face. */
+export interface RegularCounts {
+  corners: number;
+  inner: number;
+  rim: number;
+}
+
+export const QUAD_COUNTS: RegularCounts = { corners: 4, inner: 4, rim: 2 };
+export const TRIANGLE_COUNTS: RegularCounts = { corners: 3, inner: 6, rim: 3 };
+
+function hasRegularFace(mesh: LevelMesh, corner: number, counts: RegularCounts): boolean {
+  const face = mesh.faceOf[corner];
+  return mesh.starts[face + 1] - mesh.starts[face] === counts.corners;
 }
 
 /** Reads the rule at each vertex of the live faces [Biermann, Levin & Zorin 2000, sectors] and sorts its corners. */
-export function classifyVertices(mesh: LevelMesh): Classified {
+export function classifyVertices(mesh: LevelMesh, counts: RegularCounts): Classified {
   const kinds = new Uint8Array(mesh.vertexOf.length);
   const fans: Fans = { starts: [0], corners: [], closed: [], sharpFirst: [], centre: [] };
   const seen = new Uint8Array(mesh.vertices);
@@ -47,7 +58,7 @@ export function classifyVertices(mesh: LevelMesh): Classified {
       if (seen[vertex] === 1) continue;
       seen[vertex] = 1;
       const closed = collectRing(mesh, h, ring);
-      classifyRing(mesh, vertex, ring, closed, kinds, fans);
+      classifyRing(mesh, counts, vertex, ring, closed, kinds, fans);
     }
   }
   return { kinds, fans };
@@ -73,26 +84,26 @@ export function collectRing(mesh: LevelMesh, h: number, ring: number[]): boolean
   return closed;
 }
 
-function classifyRing(mesh: LevelMesh, vertex: number, ring: number[], closed: boolean, kinds: Uint8Array, fans: Fans): void {
+function classifyRing(mesh: LevelMesh, counts: RegularCounts, vertex: number, ring: number[], closed: boolean, kinds: Uint8Array, fans: Fans): void {
   const n = ring.length;
   const vertexSharpness = mesh.vertexSharpness[vertex];
   let sharp = closed ? 0 : 1;
   let firstSharp = -1;
   let settled = vertexSharpness === 0 || vertexSharpness === Infinity;
-  let quads = true;
+  let regularFaces = true;
   for (let j = 0; j < n; j++) {
     if (isSharpForGood(mesh, ring[j])) {
       sharp++;
       if (firstSharp < 0) firstSharp = j;
     } else if (mesh.edgeSharpness[ring[j]] > 0) settled = false;
-    if (!isQuad(mesh, mesh.faceOf[ring[j]])) quads = false;
+    if (!hasRegularFace(mesh, ring[j], counts)) regularFaces = false;
   }
   if (!settled) return;
   const corner = vertexSharpness > 0 || sharp > 2;
   if (sharp < 2) {
-    if (!quads) return;
-    if (sharp === 0 && !corner && n === 4) {
-      for (let j = 0; j < 4; j++) kinds[ring[j]] = INNER;
+    if (!regularFaces) return;
+    if (sharp === 0 && !corner && n === counts.inner) {
+      for (let j = 0; j < n; j++) kinds[ring[j]] = INNER;
       return;
     }
     pushFan(ring, Math.max(firstSharp, 0), n, true, sharp === 1, corner ? CORNER_CENTRE : SMOOTH_CENTRE, kinds, fans);
@@ -102,15 +113,15 @@ function classifyRing(mesh: LevelMesh, vertex: number, ring: number[], closed: b
     const start = (firstSharp + from) % n;
     let size = 1;
     while (from + size < n && !isSharpForGood(mesh, ring[(firstSharp + from + size) % n])) size++;
-    classifySector(mesh, ring, start, size, corner, kinds, fans);
+    classifySector(mesh, counts, ring, start, size, corner, kinds, fans);
     from += size;
   }
 }
 
 /** A sector of `size` faces between two creases. */
-function classifySector(mesh: LevelMesh, ring: number[], start: number, size: number, corner: boolean, kinds: Uint8Array, fans: Fans): void {
-  for (let j = 0; j < size; j++) if (!isQuad(mesh, mesh.faceOf[ring[(start + j) % ring.length]])) return;
-  if (size === (corner ? 1 : 2)) {
+function classifySector(mesh: LevelMesh, counts: RegularCounts, ring: number[], start: number, size: number, corner: boolean, kinds: Uint8Array, fans: Fans): void {
+  for (let j = 0; j < size; j++) if (!hasRegularFace(mesh, ring[(start + j) % ring.length], counts)) return;
+  if (size === (corner ? 1 : counts.rim)) {
     for (let j = 0; j < size; j++) kinds[ring[(start + j) % ring.length]] = corner ? TIP : RIM;
     return;
   }
@@ -129,10 +140,19 @@ function pushFan(ring: number[], start: number, size: number, closed: boolean, s
   fans.centre.push(centre);
 }
 
-/** Whether all corners of a quad but `except` (pass -1 for none) are regular. */
-export function isRegularFace(mesh: LevelMesh, kinds: Uint8Array, face: number, except: number): boolean {
+/** Whether a face is regular but for its corner `except` (pass -1 for none). */
+export function isRegularFace(mesh: LevelMesh, counts: RegularCounts, kinds: Uint8Array, face: number, except: number): boolean {
   const start = mesh.starts[face];
-  if (mesh.starts[face + 1] - start !== 4) return false;
-  for (let h = start; h < start + 4; h++) if (h !== except && (kinds[h] < INNER || kinds[h] > TIP)) return false;
+  if (mesh.starts[face + 1] - start !== counts.corners) return false;
+  for (let h = start; h < mesh.starts[face + 1]; h++) if (h !== except && (kinds[h] < INNER || kinds[h] > TIP)) return false;
+  return true;
+}
+
+/** Whether all faces of a fan are live and regular but for its centre. */
+export function isIsolated(mesh: LevelMesh, counts: RegularCounts, kinds: Uint8Array, fans: Fans, fan: number): boolean {
+  for (let i = fans.starts[fan]; i < fans.starts[fan + 1]; i++) {
+    const face = mesh.faceOf[fans.corners[i]];
+    if (mesh.live[face] === 0 || !isRegularFace(mesh, counts, kinds, face, fans.corners[i])) return false;
+  }
   return true;
 }

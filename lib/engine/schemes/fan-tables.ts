@@ -1,6 +1,7 @@
 import { tailLevels, tailWeights } from '../moments/tail-weights';
-import { SMOOTH_CENTRE } from './catmull-clark-classify';
-import { makeFanState, refineFan, type FanState } from './catmull-clark-fan';
+import { SMOOTH_CENTRE } from './classify-vertices';
+import type { FanKit } from './fan-kit';
+import { makeFanState, type FanState } from './fan-state';
 
 /** Digits to which a fan's tail is closed. */
 const TAIL_DIGITS = 15;
@@ -19,15 +20,20 @@ export interface FanTable {
   curveWeights: Float64Array;
 }
 
-const tables = new Map<number, FanTable>();
+const tables = new WeakMap<FanKit, Map<number, FanTable>>();
 
-/** The table of a valence and kind, made on first need. */
-export function fanTable(fan: FanState): FanTable {
+/** The table of a scheme's fans of one valence and kind, made on first need. */
+export function fanTable(kit: FanKit, fan: FanState): FanTable {
+  let known = tables.get(kit);
+  if (known === undefined) {
+    known = new Map();
+    tables.set(kit, known);
+  }
   const key = ((fan.sectors * 2 + (fan.closed ? 1 : 0)) * 2 + (fan.sharpFirst ? 1 : 0)) * 3 + fan.centreRule;
-  const known = tables.get(key);
-  if (known !== undefined) return known;
+  const made = known.get(key);
+  if (made !== undefined) return made;
   // Iteration falls short where eigenvalues crowd; the closing does no worse for a little more.
-  const lambda = Math.min(isPlain(fan) ? smoothShrinkage(fan.sectors) : 1.002 * dominantShrinkage(fan), LARGEST_SHRINKAGE);
+  const lambda = Math.min(isPlain(fan) ? kit.smoothShrinkage(fan.sectors) : 1.002 * dominantShrinkage(kit, fan), kit.largestShrinkage);
   const largest = lambda * lambda;
   const levels = tailLevels(largest, TAIL_DIGITS);
   const curve = Math.max(lambda, 0.5) ** 2;
@@ -44,7 +50,7 @@ export function fanTable(fan: FanState): FanTable {
     surfaceCheck: isPlain(fan) ? check : geometricWeights(largest, surfaceLevels - 1),
     curveWeights: Float64Array.from({ length: 2 * pairs.length }, (_, k) => pairs[k >> 1]),
   };
-  tables.set(key, table);
+  known.set(key, table);
   return table;
 }
 
@@ -58,20 +64,11 @@ function isPlain(fan: FanState): boolean {
   return fan.closed && !fan.sharpFirst && fan.centreRule === SMOOTH_CENTRE;
 }
 
-/** Subdominant eigenvalue of the smooth rule at valence n > 2 [Stam 1998, with the first Fourier mode]; for n = 2 it is ¼ and this more than enough. */
-function smoothShrinkage(n: number): number {
-  const c = Math.cos((2 * Math.PI) / n);
-  return (5 + c + Math.sqrt((c + 9) * (c + 1))) / 16;
-}
-
-/** What the subdominant eigenvalue tends to with the valence. */
-const LARGEST_SHRINKAGE = smoothShrinkage(Infinity);
-
 /**
  * Largest modulus of the refinement's eigenvalues but the 1 of constants: power iteration on the rings less their centre,
  * three independent starts at once (one a coordinate). Only the modulus is needed, so repeated and complex eigenvalues do no harm.
  */
-function dominantShrinkage(kind: FanState): number {
+function dominantShrinkage(kit: FanKit, kind: FanState): number {
   let state = makeFanState(kind.sectors, kind.closed, kind.sharpFirst, kind.centreRule);
   let finer = makeFanState(kind.sectors, kind.closed, kind.sharpFirst, kind.centreRule);
   let seed = 1;
@@ -84,7 +81,7 @@ function dominantShrinkage(kind: FanState): number {
   const settle = 320;
   let growth = 0;
   for (let step = 0; step < steps; step++) {
-    refineFan(state, finer);
+    kit.refine(state, finer);
     [state, finer] = [finer, state];
     let size = 0;
     for (const values of [state.spokes, state.inner]) {

@@ -1,0 +1,32 @@
+import type { BorderCurves } from '../moments/border-curves';
+import type { FanState } from './fan-state';
+import type { LevelMesh } from './level-mesh';
+
+/** What the level sequence of a fan needs to know of a scheme. Each sector has three regular children: 0 beside its first spoke, 1, and 2 beside its second. */
+export interface FanKit {
+  /** Corners of a face; side 0 of a face leaves the centre, side `arriving` runs back to it. */
+  sides: number;
+  arriving: number;
+  /** Gauss nodes a direction that are exact, and the fewest that are worth trying. */
+  mostNodes: number;
+  fewestNodes: number;
+  /** Modulus of the subdominant eigenvalue of the smooth rule, by valence; and what no fan exceeds. */
+  smoothShrinkage(valence: number): number;
+  largestShrinkage: number;
+  /** Body that a sector belongs to, by its corner. */
+  body(mesh: LevelMesh, corner: number): number;
+  /** Reads the rings 0 to 2 around the fan's corners into `fan`. */
+  read(mesh: LevelMesh, corners: readonly number[], fan: FanState): void;
+  /** Rings 0 to 2 of `from` give rings 0 to 3 of `to`. */
+  refine(from: FanState, to: FanState): void;
+  /** Limit point of the centre. */
+  limit(fan: FanState): Float64Array;
+  fillChild(fan: FanState, sector: number, child: number, net: Float64Array): void;
+  /** Ten solid and ten surface moments of a child's patch about (ox, oy, oz); returns the magnitude that rounding is relative to. */
+  moments(net: Float64Array, ox: number, oy: number, oz: number, nodes: number, solid: Float64Array, surface: Float64Array): number;
+  /** Mends the surface moments found with `mostNodes`; returns the estimated error of the area. */
+  mendSurface(net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array): number;
+  addSide(curves: BorderCurves, net: Float64Array, side: number, edge: number, weight: number, from: number, share: number, shift: ArrayLike<number>): void;
+  /** Which sides of the children lie on sides of the sector's face away from the centre, and on which half of those. */
+  outerSides: readonly (readonly [child: number, side: number, faceSide: number, half: number])[];
+}
