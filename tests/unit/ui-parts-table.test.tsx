@@ -181,6 +181,8 @@ describe('PartsTable', () => {
     expect(within(dialog).getByText(/Odo Vane/)).toBeInTheDocument();
     expect(within(dialog).getByText(/target mass 12/)).toBeInTheDocument();
     expect(taken).toHaveLength(0);
+    // The dialog takes the pointer one render after it stands.
+    await waitFor(() => expect(getComputedStyle(dialog).pointerEvents).not.toBe('none'), { timeout: 20_000 });
     await user.click(within(dialog).getByText('Set mine over it'));
     await waitFor(() => expect(taken).toHaveLength(1), { timeout: 20_000 });
     expect(taken[0].items[0]).toMatchObject({ part: 'head', revision: 9, target_mass_kg: 12 });
