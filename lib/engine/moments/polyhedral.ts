@@ -40,10 +40,10 @@ function addTen(
 
 /**
  * Adds the moments of the cones from each body's origin to the cage's own faces, polygons as fans from their vertex mean.
- * `positions` and `origins` (x, y, z per body) share one frame. `surface`, where given, receives the surface moments about the same origins.
+ * `positions` and `origins` (x, y, z per body) share one frame. `surface` receives the surface moments about the same origins.
  */
 export function addPolyhedralMoments(
-  mesh: Topology, positions: Float64Array, bodyOf: Int32Array, origins: Float64Array, solid: MomentSums, surface: MomentSums | null,
+  mesh: Topology, positions: Float64Array, bodyOf: Int32Array, origins: Float64Array, solid: MomentSums, surface: MomentSums,
 ): void {
   const p = positions;
   const faceSolid = new Float64Array(MOMENTS);
@@ -76,6 +76,6 @@ export function addPolyhedralMoments(
       solid.magnitudes[body] += addTriangle(mx, my, mz, ax, ay, az, bx, by, bz, faceSolid, faceSurface);
     }
     solid.add(body, faceSolid, 0);
-    surface?.add(body, faceSurface, 0);
+    surface.add(body, faceSurface, 0);
   }
 }
