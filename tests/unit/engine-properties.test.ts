@@ -34,6 +34,14 @@ describe('the limit solid of a random cage', () => {
     }), RUNS);
   });
 
+  it('does not change under Chaikin creasing either, whose sharpness spreads from edge to edge', () => {
+    const chaikin = { ...CATMULL_CLARK, creasing: 'chaikin' as const };
+    fc.assert(fc.property(randomCage, ({ cage }) => {
+      const [coarse, fine] = [measureCage(cage, chaikin), measureCage(refinedOnce(cage, chaikin), chaikin)];
+      expect(momentError(totalMoments(fine.parts), totalMoments(coarse.parts), cageSize(cage))).toBeLessThan(1e-13);
+    }), RUNS);
+  });
+
   it('follows rigid motion and scaling: V s³, second moments s⁵ and R S Rᵀ', () => {
     const [c, s] = [Math.cos(1.1), Math.sin(1.1)];
     const r = [[c, -s, 0], [s * 0.6, c * 0.6, -0.8], [s * 0.8, c * 0.8, 0.6]];

@@ -1,3 +1,4 @@
+import { ownKernel, PatchBlock } from '../kernel/patch-block';
 import { bicubicMoments } from '../patches/bicubic';
 import { bicubicArea, mendSurfaceMoments } from '../patches/bicubic-surface';
 import { gaussRule } from '../patches/gauss-rule';
@@ -32,6 +33,8 @@ function smoothShrinkage(n: number): number {
   return (5 + c + Math.sqrt((c + 9) * (c + 1))) / 16;
 }
 
+let block: PatchBlock | undefined;
+
 /** Fans of Catmull-Clark surfaces: sectors are quads, patches bicubic. */
 export const CATMULL_CLARK_KIT: FanKit = {
   sides: 4,
@@ -45,6 +48,11 @@ export const CATMULL_CLARK_KIT: FanKit = {
   refine: refineFan,
   limit: approximateLimit,
   fillChild: fillChildNet,
+  // This thread's own kernel even within a team: a fan has too few patches to share.
+  get block() {
+    block ??= new PatchBlock(ownKernel());
+    return block;
+  },
   moments: (values, ox, oy, oz, nodes, solid, surface) => bicubicMoments(values, ox, oy, oz, gaussRule(nodes), solid, surface),
   mendSurface: (values, ox, oy, oz, surface) => mendSurfaceMoments(values, ox, oy, oz, surface, bicubicArea(values)),
   addSide: (curves, values, side, edge, weight, from, share, shift) => curves.addSide(values, side, edge, weight, from, share, shift),

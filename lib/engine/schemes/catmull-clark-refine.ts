@@ -3,16 +3,14 @@ import { edgePoint, facePoint, vertexPoint, VertexStars } from './catmull-clark-
 import type { LevelMesh } from './level-mesh';
 import type { RefinementRules } from './refinement-rules';
 import { childEdgeSharpness, countSemiSharp, decayed } from './sharpness-decay';
+import { wantedVertices } from './wanted-vertices';
 
 /**
  * Refines the live faces and what shares a vertex with them. Of the neighbours only the child quads at the live faces' vertices are kept,
  * so every vertex of a live child has its whole ring. Children of corner c of a face are (vertex, edge, face, edge before), counter-clockwise.
  */
 export function refineAround(mesh: LevelMesh, rules: RefinementRules): LevelMesh {
-  const wanted = new Uint8Array(mesh.vertices);
-  for (let face = 0; face < mesh.faces; face++) {
-    if (mesh.live[face] === 1) for (let h = mesh.starts[face]; h < mesh.starts[face + 1]; h++) wanted[mesh.vertexOf[h]] = 1;
-  }
+  const wanted = wantedVertices(mesh, rules);
   // The corners at wanted vertices: each becomes a child quad.
   const childOf = new Int32Array(mesh.vertexOf.length).fill(-1);
   const corners = new Int32Array(mesh.vertexOf.length);

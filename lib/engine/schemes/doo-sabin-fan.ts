@@ -127,6 +127,7 @@ export const DOO_SABIN_KIT: FanKit = {
   refine: refineDooSabinFan,
   limit: centroid,
   fillChild,
+  block: null,
   moments: (values, ox, oy, oz, nodes, solid, surface) => bicubicMoments(values, ox, oy, oz, gaussRule(nodes), solid, surface),
   mendSurface: (values, ox, oy, oz, surface) => mendSurfaceMoments(values, ox, oy, oz, surface, bicubicArea(values)),
   addSide: () => undefined,

@@ -1,3 +1,4 @@
+import type { PatchBlock } from '../kernel/patch-block';
 import type { BorderCurves } from '../moments/border-curves';
 import type { FanState } from './fan-state';
 import type { LevelMesh } from './level-mesh';
@@ -22,6 +23,8 @@ export interface FanKit {
   /** Limit point of the centre. */
   limit(fan: FanState): Float64Array;
   fillChild(fan: FanState, sector: number, child: number, net: Float64Array): void;
+  /** Computes many patches at once as `moments` does, to the same bits; null where the scheme has no such kernel. */
+  block: PatchBlock | null;
   /** Ten solid and ten surface moments of a child's patch about (ox, oy, oz); returns the magnitude that rounding is relative to. */
   moments(net: Float64Array, ox: number, oy: number, oz: number, nodes: number, solid: Float64Array, surface: Float64Array): number;
   /** Mends the surface moments found with `mostNodes`; returns the estimated error of the area. */

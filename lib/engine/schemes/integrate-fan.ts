@@ -58,15 +58,27 @@ export function integrateFan(kit: FanKit, mesh: LevelMesh, fans: Fans, index: nu
   let areaScale = 0;
   let worst = 0;
   let worstError = 0;
+  const shared = kit.block;
+  const block = shared !== null && 3 * n <= shared.size ? shared : null;
   for (let k = 0; k < levels; k++) {
     kit.refine(state, finer);
     [state, finer] = [finer, state];
+    if (block !== null) {
+      for (let patch = 0; patch < 3 * n; patch++) {
+        const j = Math.floor(patch / 3);
+        const [ox, oy, oz] = originOf(j);
+        kit.fillChild(state, j, patch % 3, net);
+        block.put(patch, net, ox, oy, oz);
+      }
+      block.run(3 * n, nodes, 0);
+    }
     for (let j = 0; j < n; j++) {
       const [ox, oy, oz] = originOf(j);
       for (let child = 0; child < 3; child++) {
-        kit.fillChild(state, j, child, net);
+        if (block === null) kit.fillChild(state, j, child, net);
+        else block.net(3 * j + child, net);
         if (bordered) addFanCurves(kit, mesh, corners[j], child, k, at(curveWeights, k), limit, sums.curves);
-        const magnitude = kit.moments(net, ox, oy, oz, nodes, solid, surface);
+        const magnitude = block === null ? kit.moments(net, ox, oy, oz, nodes, solid, surface) : block.read(3 * j + child, solid, surface);
         if (nodes === kit.mostNodes) {
           const error = kit.mendSurface(net, ox, oy, oz, surface);
           sums.surfaceError[kit.body(mesh, corners[j])] += Math.abs(at(table.surfaceWeights, k)) * error;

@@ -79,6 +79,7 @@ export const LOOP_KIT: FanKit = {
   refine: refineLoopFan,
   limit: loopLimit,
   fillChild: fillLoopChild,
+  block: null,
   moments: boxSplineMoments,
   mendSurface: mendTriangleSurface,
   addSide: addTriangleSide,

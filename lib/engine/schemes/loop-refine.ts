@@ -5,14 +5,14 @@ import { loopWeight } from './loop-fan';
 import type { RefinementRules } from './refinement-rules';
 import { childEdgeSharpness, countSemiSharp, decayed, type SemiSharpAround } from './sharpness-decay';
 import { blendVertexRules } from './vertex-rules';
+import { wantedVertices } from './wanted-vertices';
 
 /**
  * Refines the live triangles and what shares a vertex with them by Loop's rule. A parent with corners v0, v1, v2 and edge points m0, m1, m2 has the corner
  * children (v_i, m_i, m_{i−1}) and the middle one (m0, m1, m2); of neighbours only the children at the live triangles' vertices and edges are kept.
  */
 export function refineTriangles(mesh: LevelMesh, rules: RefinementRules): LevelMesh {
-  const wanted = new Uint8Array(mesh.vertices);
-  for (let face = 0; face < mesh.faces; face++) if (mesh.live[face] === 1) for (let h = mesh.starts[face]; h < mesh.starts[face + 1]; h++) wanted[mesh.vertexOf[h]] = 1;
+  const wanted = wantedVertices(mesh, rules);
   const cornerChild = new Int32Array(mesh.vertexOf.length).fill(-1);
   const middleChild = new Int32Array(mesh.faces).fill(-1);
   const corners = new Int32Array(mesh.vertexOf.length);
