@@ -55,7 +55,7 @@ export const GridRow = memo(function GridRow(props: GridRowProps) {
         chosen &&
           'bg-selected shadow-[inset_2px_0_0_var(--brass)] hover:bg-selected forced-colors:outline-2 forced-colors:-outline-offset-2',
         active &&
-          'group-focus-visible/grid:outline-2 group-focus-visible/grid:-outline-offset-2 group-focus-visible/grid:outline-brass',
+          'after:pointer-events-none after:absolute after:inset-0 after:z-2 group-focus-visible/grid:after:outline-2 group-focus-visible/grid:after:-outline-offset-2 group-focus-visible/grid:after:outline-brass',
         saving && 'opacity-60',
         editor !== null && 'z-10',
       )}
