@@ -10,7 +10,7 @@ const COARSE = gaussRule(COARSE_NODES);
 
 /** Part of a patch's area that its error may be; beyond it the patch is quartered. */
 export const AREA_TOLERANCE = 1e-12;
-const MOST_QUARTERINGS = 8;
+const MOST_QUARTERINGS = 10;
 
 const powers = new Float64Array(48);
 const square = new Float64Array(10);
@@ -28,8 +28,9 @@ export function mendSurfaceMoments(net: Float64Array, ox: number, oy: number, oz
   powers[0] -= ox;
   powers[1] -= oy;
   powers[2] -= oz;
+  const area = surface[0];
   surface.fill(0);
-  return quarter(0, 0, 1, error, tolerance, 1, surface);
+  return quarter(0, 0, 1, Math.abs(area - coarseArea), tolerance, 1, surface);
 }
 
 /** Estimated error of an area that came with that of COARSE_NODES. */
@@ -50,31 +51,37 @@ function estimate(fine: number, coarse: number): number {
   return fine * change * Math.sqrt(change);
 }
 
-/** Share of a square's error that its quarters must take off it for more quartering to be worth while; a spoilt rule gains nothing. */
+/** Share of a square's difference that its quarters must take off it for more quartering to be worth while; a spoilt rule gains nothing. */
 const LEAST_GAIN = 0.3;
+/** Quarterings that need no gain: a sharp bend shows none before squares of its own size. */
+const PATIENCE = 5;
 
 /**
- * Adds the moments of the four quarters of the square with the given centre, size and error, quartered again where they err too much;
+ * Adds the moments of the four quarters of the square with the given centre, size and difference between the two rules, quartered again where they err too much;
  * returns their estimated error.
  */
 function quarter(u: number, v: number, size: number, before: number, tolerance: number, depth: number, surface: Float64Array): number {
   const errors = [0, 0, 0, 0];
+  const changes = [0, 0, 0, 0];
   const moments = new Float64Array(40);
   for (let i = 0; i < 4; i++) {
     const cu = u + (i & 1 ? size : -size) / 4;
     const cv = v + (i & 2 ? size : -size) / 4;
     momentsOf(cu, cv, size / 2, square);
     moments.set(square, 10 * i);
-    errors[i] = estimate(square[0], areaOf(cu, cv, size / 2));
+    const coarse = areaOf(cu, cv, size / 2);
+    errors[i] = estimate(square[0], coarse);
+    changes[i] = Math.abs(square[0] - coarse);
   }
-  const goOn = depth < MOST_QUARTERINGS && errors[0] + errors[1] + errors[2] + errors[3] < (1 - LEAST_GAIN) * before;
+  const goOn = depth < PATIENCE || (depth < MOST_QUARTERINGS && changes[0] + changes[1] + changes[2] + changes[3] < (1 - LEAST_GAIN) * before);
   let error = 0;
   for (let i = 0; i < 4; i++) {
     if (goOn && errors[i] > tolerance) {
-      error += quarter(u + (i & 1 ? size : -size) / 4, v + (i & 2 ? size : -size) / 4, size / 2, errors[i], tolerance, depth + 1, surface);
+      error += quarter(u + (i & 1 ? size : -size) / 4, v + (i & 2 ? size : -size) / 4, size / 2, changes[i], tolerance, depth + 1, surface);
       continue;
     }
-    error += errors[i];
+    // What is given up unresolved does not converge geometrically: there the whole difference counts.
+    error += errors[i] > tolerance ? changes[i] : errors[i];
     for (let k = 0; k < 10; k++) surface[k] += moments[10 * i + k];
   }
   return error;

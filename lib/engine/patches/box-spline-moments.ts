@@ -10,9 +10,11 @@ const COARSE_NODES = 6;
 
 /** Part of a patch's area that its error may be; beyond it the triangle is quartered. */
 const TOLERANCE = 1e-12;
-const MOST_QUARTERINGS = 8;
-/** Share of a triangle's error that its quarters must take off it for more quartering to be worth while. */
+const MOST_QUARTERINGS = 10;
+/** Share of a triangle's difference between two rules that its quarters must take off it for more quartering to be worth while. */
 const LEAST_GAIN = 0.3;
+/** Quarterings that need no gain: a sharp bend shows none before squares of its own size. */
+const PATIENCE = 5;
 
 /**
  * Ten solid and ten surface moments of a quartic box-spline triangle with the net of TRIANGLE_NET, corners counter-clockwise seen from outside.
@@ -94,20 +96,26 @@ export function mendTriangleSurface(net: Float64Array, ox: number, oy: number, o
   powers[0] -= ox;
   powers[1] -= oy;
   powers[2] -= oz;
-  const error = compare(surface[0], 0, 0, 1);
+  const change = changeOf(surface[0], 0, 0, 1);
+  const error = geometricError(surface[0], change);
   const tolerance = TOLERANCE * surface[0];
   if (!(error > tolerance)) return error;
   surface.fill(0);
-  return quarter(0, 0, 1, error, tolerance, 1, surface);
+  return quarter(0, 0, 1, change, tolerance, 1, surface);
 }
 
-/** Estimated error of an area: that of the coarse rule to the power 3/2, as its convergence is geometric. */
-function compare(area: number, s: number, t: number, size: number): number {
-  if (!(area > 0)) return 0;
+/** Difference of an area to that of the coarse rule. */
+function changeOf(area: number, s: number, t: number, size: number): number {
   part.fill(0);
   addTriangle(s, t, size, COARSE_NODES, part);
-  const change = Math.min(1, Math.abs(part[0] - area) / area);
-  return area * change * Math.sqrt(change);
+  return Math.abs(part[0] - area);
+}
+
+/** Estimated error of an area where both rules converge geometrically: the coarse rule's relative error to the power 3/2. */
+function geometricError(area: number, change: number): number {
+  if (!(area > 0)) return 0;
+  const relative = Math.min(1, change / area);
+  return area * relative * Math.sqrt(relative);
 }
 
 /** Quarters of the triangle (s, t), (s + size, t), (s, t + size); a negative size turns it by half a turn. */
@@ -120,16 +128,18 @@ function quarter(s: number, t: number, size: number, before: number, tolerance: 
   const quarters = quartersOf(s, t, size).map(([qs, qt, half]) => {
     const moments = new Float64Array(MOMENTS);
     addTriangle(qs, qt, half, TRIANGLE_NODES, moments);
-    return { qs, qt, half, moments, error: compare(moments[0], qs, qt, half) };
+    const change = changeOf(moments[0], qs, qt, half);
+    return { qs, qt, half, moments, change, error: geometricError(moments[0], change) };
   });
-  const goOn = depth < MOST_QUARTERINGS && quarters.reduce((sum, { error }) => sum + error, 0) < (1 - LEAST_GAIN) * before;
+  const goOn = depth < PATIENCE || (depth < MOST_QUARTERINGS && quarters.reduce((sum, { change }) => sum + change, 0) < (1 - LEAST_GAIN) * before);
   let error = 0;
-  for (const { qs, qt, half, moments, error: own } of quarters) {
+  for (const { qs, qt, half, moments, change, error: own } of quarters) {
     if (goOn && own > tolerance) {
-      error += quarter(qs, qt, half, own, tolerance, depth + 1, surface);
+      error += quarter(qs, qt, half, change, tolerance, depth + 1, surface);
       continue;
     }
-    error += own;
+    // What is given up unresolved does not converge geometrically: there the whole difference counts.
+    error += own > tolerance ? change : own;
     for (let k = 0; k < MOMENTS; k++) surface[k] += moments[k];
   }
   return error;
