@@ -5,6 +5,7 @@ import { measureCage } from '@/lib/engine/measure';
 import type { MeasureOptions } from '@/lib/engine/measured';
 import { readObj } from '@/lib/formats/obj';
 import { quadTorus, triangleTorus } from './bench-cages';
+import { cppWay } from './cpp-way';
 import { plainVolume } from './plain-way';
 
 /** Size series of the engine beside the plain way. `--quick` leaves out the million; results also go to bench-results/ as JSON. `intake` measures an import instead. */
@@ -78,12 +79,28 @@ if (!process.argv.includes('--quick')) series.push(['quads 1 M', quadTorus(1000,
 for (let i = 0; i < 5; i++) measureCage(spot, OPTIONS);
 for (let i = 0; i < 3; i++) measureCage(series[2][1], OPTIONS);
 
+const CPP_WAY = 'C++ patches to 1e-9';
+
+/** The C++ row of a cage. It computes solid moments alone: no area, diagnosis or cage; `wallMs` is its processor time too. */
+function cppRow(name: string, cage: Cage, exact: number): Row {
+  const faces = cage.faceStarts.length - 1;
+  if (cpp === null) return { cage: name, way: `${CPP_WAY}: not installed`, faces, cpuMs: NaN, wallMs: NaN, facesPerSecond: NaN, volumeError: NaN, ownEstimate: null, residentMb: NaN, hash: '' };
+  const { isolation, cpuMs, volume, peakMb } = cpp.measure(cage, exact);
+  return {
+    cage: name, way: `${CPP_WAY}, isolation ${isolation}`, faces, cpuMs, wallMs: cpuMs, facesPerSecond: (1000 * faces) / cpuMs,
+    volumeError: Math.abs(volume / exact - 1), ownEstimate: null, residentMb: peakMb, hash: hashOf([volume]),
+  };
+}
+
+const cpp = cppWay();
 const rows: Row[] = [];
 for (const [name, cage, refinements] of series) {
   const { row, volume } = measureRow(name, cage);
   rows.push(row);
   if (refinements > 0) rows.push(plainRow(name, cage, refinements, volume));
+  rows.push(cppRow(name, cage, volume));
 }
+cpp?.close();
 console.table(rows.map((row) => ({
   cage: row.cage, way: row.way, faces: row.faces, 'cpu ms': Math.round(row.cpuMs), 'wall ms': Math.round(row.wallMs), 'faces/s': Math.round(row.facesPerSecond),
   'volume error': row.volumeError.toExponential(1), 'own estimate': row.ownEstimate?.toExponential(1) ?? '', 'memory MB': Math.round(row.residentMb), hash: row.hash,
