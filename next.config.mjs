@@ -7,6 +7,7 @@ const nextConfig = {
   experimental: { agentUpgrade: false },
   // Types are checked by `npm test`; a first start need not wait for them.
   typescript: { ignoreBuildErrors: true },
+  headers: async () => [{ source: '/:path*', headers: [{ key: 'X-Content-Type-Options', value: 'nosniff' }] }],
   // Native or worker-loading packages stay outside the server bundle.
   serverExternalPackages: ['@node-rs/argon2', 'pg', 'pg-boss', 'pino', 'piscina', 'nodemailer', 'flydrive'],
 };
