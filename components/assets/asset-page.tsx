@@ -47,6 +47,7 @@ export function AssetPage({ frame, detail }: { frame: ShowFrame; detail: AssetDe
         <div className="flex min-h-0 min-w-0 flex-col lg:overflow-y-auto">
           <div className="flex h-[26rem] shrink-0 flex-col border-b border-rule lg:h-[min(36rem,58dvh)]">
             <PartViewer
+              withRest
               asset={mesh.data ?? null}
               part={chosen}
               weight={null}
@@ -63,7 +64,10 @@ export function AssetPage({ frame, detail }: { frame: ShowFrame; detail: AssetDe
             <AssetVersions versions={versions} />
           </section>
         </div>
-        <aside aria-label="Numbers" className="border-rule bg-bench pb-6 max-lg:border-t lg:overflow-y-auto lg:border-l">
+        <aside
+          aria-label="Numbers"
+          className="border-rule bg-bench pb-6 max-lg:border-t lg:overflow-y-auto lg:border-l"
+        >
           {ofFile.length === 0 ? null : (
             <Section title="In the whole file">
               <Findings findings={ofFile} />
@@ -76,7 +80,11 @@ export function AssetPage({ frame, detail }: { frame: ShowFrame; detail: AssetDe
             <Facts
               facts={[
                 massFact(total.mass_kg),
-                { label: 'Volume', unit: `${unit}³`, value: total.volume_m3 === null ? null : total.volume_m3 / METRES_PER[unit] ** 3 },
+                {
+                  label: 'Volume',
+                  unit: `${unit}³`,
+                  value: total.volume_m3 === null ? null : total.volume_m3 / METRES_PER[unit] ** 3,
+                },
                 { label: 'Parts', value: total.parts.toLocaleString('en') },
                 { label: 'Without mass', value: total.without_mass.toLocaleString('en') },
                 { label: 'Blocked', value: total.blocked.toLocaleString('en') },

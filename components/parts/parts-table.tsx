@@ -52,7 +52,8 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
   const [editing, setEditing] = useState<{ key: string; start: string } | null>(null);
   const [formRows, setFormRows] = useState<readonly PartRow[] | null>(null);
   const [keysOpen, setKeysOpen] = useState(false);
-  const [inspectorOpen, setInspectorOpen] = useState(true);
+  // Closed at first: the columns of balance and volume need its place on most screens.
+  const [inspectorOpen, setInspectorOpen] = useState(false);
   const searchRef = useRef<HTMLInputElement>(null);
   const gridRef = useRef<HTMLDivElement>(null);
 

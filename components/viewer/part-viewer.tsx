@@ -22,6 +22,8 @@ interface PartViewerProps {
   up: UpAxis;
   /** Why there is nothing to draw. */
   failure?: string | null;
+  /** Whether the rest of the asset is drawn from the start. */
+  withRest?: boolean;
 }
 
 const CHOICES: readonly { key: keyof ViewChoices; label: string; needsWeight: boolean }[] = [
@@ -32,8 +34,8 @@ const CHOICES: readonly { key: keyof ViewChoices; label: string; needsWeight: bo
 ];
 
 /** The limit surface in three dimensions, with its centre of mass and principal axes; the same in words for who does not see it. */
-export function PartViewer({ asset, part, weight, unit, up, failure = null }: PartViewerProps) {
-  const [choices, setChoices] = useState<ViewChoices>({ cage: false, axes: true, solid: false, rest: false });
+export function PartViewer({ asset, part, weight, unit, up, failure = null, withRest = false }: PartViewerProps) {
+  const [choices, setChoices] = useState<ViewChoices>({ cage: false, axes: true, solid: false, rest: withRest });
   const [fit, setFit] = useState(0);
   const colours = useTokenColours();
   const drawable = useSyncExternalStore(noChange, canDraw, () => true);
