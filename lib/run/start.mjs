@@ -9,6 +9,7 @@ import { givenDatabase, loadEnvironment, serviceEnvironment } from './support/en
 import { freePort, isPortFree } from './support/free-port.mjs';
 import { waitUntilReady } from './support/health.mjs';
 import { localSecrets } from './support/local-secrets.mjs';
+import { seedMaterialLibrary } from './support/material-library.mjs';
 import { dataFolder, inRoot } from './support/paths.mjs';
 import { takeDataFolder } from './support/run-record.mjs';
 import { startService } from './support/service.mjs';
@@ -69,6 +70,7 @@ async function start() {
   undo.push(() => Promise.all(services.map((service) => service.stop())));
   serve('worker', ['--enable-source-maps', inRoot('dist/worker/worker.mjs')]);
   const isSeeding = await isDemoWanted(marks, ownerUrl);
+  if (!isSeeding) await seedMaterialLibrary({ marks, env, ownerUrl });
   const [, built] = await Promise.all([isSeeding && seedDemo({ data, env, ownerUrl }), buildWebWhenChanged(env)]);
   if (!built.ok) throw new Stop(`The production build failed:\n${built.output.trim()}`);
   const web = serve('web', [inRoot('node_modules/next/dist/bin/next'), 'start', '-p', String(port), '-H', '127.0.0.1']);
