@@ -8,7 +8,7 @@ import { quadTorus, triangleTorus } from './bench-cages';
 import { cppWay } from './cpp-way';
 import { plainVolume } from './plain-way';
 
-/** Size series of the engine beside the plain way. `--quick` leaves out the million; results also go to bench-results/ as JSON. `intake` measures an import instead. */
+/** Size series of the engine beside the plain way. `--quick` leaves out the million; results also go to bench-results/ as JSON. `intake` measures an import instead, `horns` what smoothing removes. */
 
 const OPTIONS: MeasureOptions = { scheme: 'catmull-clark', boundary: 'edge-and-corner', triangles: 'catmark', creasing: 'uniform', partsBy: 'whole' };
 
@@ -61,6 +61,12 @@ function plainRow(name: string, cage: Cage, refinements: number, exact: number):
 if (process.argv.includes('intake')) {
   const { printIntake } = await import('./intake');
   await printIntake();
+  process.exit(0);
+}
+
+if (process.argv.includes('horns')) {
+  const { benchHorns } = await import('./horns');
+  console.table(benchHorns());
   process.exit(0);
 }
 
