@@ -1,18 +1,6 @@
 import { When } from '@/components/users/when';
 import { actWords, fieldWords, ORIGIN_WORDS } from '@/lib/rules/act-words';
-import type { Origin } from '@/lib/rules/states';
-
-export interface HistoryEvent {
-  id: number;
-  act: string;
-  subject: string;
-  reason: string | null;
-  origin: Origin;
-  person: { name: string; email: string } | null;
-  at: string;
-  item_count: number;
-  items: { part: string | null; field: string; before: string | null; after: string | null }[];
-}
+import type { HistoryEvent } from '@/lib/rules/history-event';
 
 /** Acts of a show, each with the fields it changed, before and after. */
 export function EventList({ events }: { events: readonly HistoryEvent[] }) {

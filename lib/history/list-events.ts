@@ -7,36 +7,15 @@ import { parts } from '@/db/schema/parts';
 import { users } from '@/db/schema/users';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
+import type { HistoryEvent, HistoryItem } from '@/lib/rules/history-event';
 import type { ListEventsInput } from '@/lib/rules/inputs/list-events';
-import type { Origin } from '@/lib/rules/states';
 import { getShowAccess } from '@/lib/shows/get-show-access';
 
 const EVENTS_PER_PAGE = 50;
 const ITEMS_SHOWN = 20;
 
-export interface ListedItem {
-  /** `asset/part`; null for what is not about a part. */
-  part: string | null;
-  field: string;
-  before: string | null;
-  after: string | null;
-}
-
-export interface ListedEvent {
-  id: number;
-  act: string;
-  subject: string;
-  reason: string | null;
-  origin: Origin;
-  person: { name: string; email: string } | null;
-  at: string;
-  /** How many fields changed in all; `items` has the first of them. */
-  item_count: number;
-  items: ListedItem[];
-}
-
 /** What happened in a show, the newest first. `next` continues with older ones. */
-export async function listEvents(context: Context, input: ListEventsInput): Promise<{ items: ListedEvent[]; next: number | null }> {
+export async function listEvents(context: Context, input: ListEventsInput): Promise<{ items: HistoryEvent[]; next: number | null }> {
   const { actor, db } = requireActor(context);
   const { show } = await getShowAccess(db, actor, input.show, 'readHistory');
   const rows = await db
@@ -84,8 +63,8 @@ function touches(db: Database, text: string) {
 }
 
 /** The first items of each event. */
-async function itemsOf(db: Database, eventIds: number[]): Promise<Map<number, ListedItem[]>> {
-  const found = new Map<number, ListedItem[]>();
+async function itemsOf(db: Database, eventIds: number[]): Promise<Map<number, HistoryItem[]>> {
+  const found = new Map<number, HistoryItem[]>();
   if (eventIds.length === 0) return found;
   const numbered = db
     .select({

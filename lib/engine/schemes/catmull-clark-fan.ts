@@ -1,5 +1,5 @@
 import { CORNER_CENTRE, CREASE_CENTRE } from './classify-vertices';
-import { isSharpSpoke, iterateLimit, spokeAt, type FanState } from './fan-state';
+import { isSharpSpoke, iterateLimit, putSectorPoint, spokeAt, type FanState } from './fan-state';
 
 /**
  * One step of refinement [Catmull & Clark 1978]: the rings 0 to 2 of `from` give the rings 0 to 3 of `to`.
@@ -58,25 +58,6 @@ export function refineFan(from: FanState, to: FanState): void {
   }
 }
 
-/** Point (a, b) of a sector, 0 ≤ a, b ≤ 3, into `net` at `at`. */
-function putPoint(fan: FanState, sector: number, a: number, b: number, net: Float64Array, at: number): void {
-  let source = fan.inner;
-  let from = 27 * sector + 9 * (a - 1) + 3 * (b - 1);
-  if (a === 0 && b === 0) {
-    source = fan.centre;
-    from = 0;
-  } else if (b === 0) {
-    source = fan.spokes;
-    from = spokeAt(fan, sector, 0) + 3 * (a - 1);
-  } else if (a === 0) {
-    source = fan.spokes;
-    from = spokeAt(fan, sector, 1) + 3 * (b - 1);
-  }
-  net[at] = source[from];
-  net[at + 1] = source[from + 1];
-  net[at + 2] = source[from + 2];
-}
-
 /**
  * Net of one of the three regular child quads of a sector: 0 beside spoke j (a from 1 to 2, b from 0 to 1), 1 the far one, 2 beside spoke j + 1.
  * Layout as `bicubicMoments` wants it: rows along a, columns along b. Across sharp spokes stand the phantom points 2a − b.
@@ -88,7 +69,7 @@ export function fillChildNet(fan: FanState, sector: number, child: number, net: 
     for (let column = 0; column < 4; column++) {
       const a = row + rowBase;
       const b = column + columnBase;
-      if (a >= 0 && b >= 0) putPoint(fan, sector, a, b, net, 3 * (4 * row + column));
+      if (a >= 0 && b >= 0) putSectorPoint(fan, sector, a, b, net, 3 * (4 * row + column));
     }
   }
   const n = fan.sectors;
@@ -98,7 +79,7 @@ export function fillChildNet(fan: FanState, sector: number, child: number, net: 
     for (let row = 0; row < 4; row++) {
       const at = 12 * row;
       if (sharp) phantom(net, at, at + 3, at + 6);
-      else putPoint(fan, before, 1, row, net, at);
+      else putSectorPoint(fan, before, 1, row, net, at);
     }
   } else if (child === 2) {
     const sharp = isSharpSpoke(fan, fan.closed && sector + 1 === n ? 0 : sector + 1);
@@ -106,7 +87,7 @@ export function fillChildNet(fan: FanState, sector: number, child: number, net: 
     for (let column = 0; column < 4; column++) {
       const at = 3 * column;
       if (sharp) phantom(net, at, at + 12, at + 24);
-      else putPoint(fan, after, column, 1, net, at);
+      else putSectorPoint(fan, after, column, 1, net, at);
     }
   }
 }

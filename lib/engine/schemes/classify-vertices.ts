@@ -2,7 +2,6 @@ import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
 import { isSharpForGood, type LevelMesh } from './level-mesh';
 
 /** What a vertex is to one of its faces. Kinds from INNER to TIP are regular: the face's patch is a plain bicubic there. */
-export const UNSETTLED = 0;
 export const INNER = 1;
 export const RIM = 2;
 export const TIP = 3;

@@ -54,3 +54,22 @@ export function iterateLimit(fan: FanState, refine: (from: FanState, to: FanStat
   }
   return Float64Array.from(state.centre);
 }
+
+/** Point (a, b) of a sector, 0 ≤ a, b ≤ 3, into `net` at `at`. */
+export function putSectorPoint(fan: FanState, sector: number, a: number, b: number, net: Float64Array, at: number): void {
+  let source = fan.inner;
+  let from = 27 * sector + 9 * (a - 1) + 3 * (b - 1);
+  if (a === 0 && b === 0) {
+    source = fan.centre;
+    from = 0;
+  } else if (b === 0) {
+    source = fan.spokes;
+    from = spokeAt(fan, sector, 0) + 3 * (a - 1);
+  } else if (a === 0) {
+    source = fan.spokes;
+    from = spokeAt(fan, sector, 1) + 3 * (b - 1);
+  }
+  net[at] = source[from];
+  net[at + 1] = source[from + 1];
+  net[at + 2] = source[from + 2];
+}

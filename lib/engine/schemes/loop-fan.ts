@@ -1,6 +1,6 @@
 import { TRIANGLE_NET } from '../patches/box-spline';
 import { CORNER_CENTRE, CREASE_CENTRE } from './classify-vertices';
-import { isSharpSpoke, iterateLimit, spokeAt, type FanState } from './fan-state';
+import { isSharpSpoke, iterateLimit, putSectorPoint, spokeAt, type FanState } from './fan-state';
 
 /** Loop's weight of each neighbour of a smooth vertex with n of them [Loop 1987]: (5/8 − (3/8 + cos(2π/n)/4)²)/n. */
 export function loopWeight(n: number): number {
@@ -85,21 +85,7 @@ function putPoint(fan: FanState, sector: number, a: number, b: number, net: Floa
     else putPoint(fan, sector + 1 === n ? 0 : sector + 1, b - 1, 1, net, at);
     return;
   }
-  let source = fan.inner;
-  let from = 27 * sector + 9 * (a - 1) + 3 * (b - 1);
-  if (a === 0 && b === 0) {
-    source = fan.centre;
-    from = 0;
-  } else if (b === 0) {
-    source = fan.spokes;
-    from = spokeAt(fan, sector, 0) + 3 * (a - 1);
-  } else if (a === 0) {
-    source = fan.spokes;
-    from = spokeAt(fan, sector, 1) + 3 * (b - 1);
-  }
-  net[at] = source[from];
-  net[at + 1] = source[from + 1];
-  net[at + 2] = source[from + 2];
+  putSectorPoint(fan, sector, a, b, net, at);
 }
 
 const corner = new Float64Array(9);

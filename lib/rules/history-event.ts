@@ -1,0 +1,24 @@
+import type { Origin } from './states';
+
+/** One field that an act changed, before and after, as text; null means not given. */
+export interface HistoryItem {
+  /** `asset/part`; null for what is not about a part. */
+  part: string | null;
+  field: string;
+  before: string | null;
+  after: string | null;
+}
+
+/** One act in a show's history, as pages and lists have it. */
+export interface HistoryEvent {
+  id: number;
+  act: string;
+  subject: string;
+  reason: string | null;
+  origin: Origin;
+  person: { name: string; email: string } | null;
+  at: string;
+  /** How many fields changed in all; `items` has the first of them. */
+  item_count: number;
+  items: HistoryItem[];
+}
