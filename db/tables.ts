@@ -1,5 +1,7 @@
 import * as relations from './relations';
 import { apiTokens } from './schema/api-tokens';
+import { approvalRequests } from './schema/approval-requests';
+import { approvals } from './schema/approvals';
 import { assetVersions } from './schema/asset-versions';
 import { assets } from './schema/assets';
 import { auditEvents } from './schema/audit-events';
@@ -12,21 +14,33 @@ import { geometryRecords } from './schema/geometry-records';
 import { idempotencyKeys } from './schema/idempotency-keys';
 import { importFiles } from './schema/import-files';
 import { imports } from './schema/imports';
+import { lockClaims } from './schema/lock-claims';
+import { locks } from './schema/locks';
 import { mails } from './schema/mails';
 import { materials } from './schema/materials';
 import { members } from './schema/members';
+import { notices } from './schema/notices';
 import { oneTimeLinks } from './schema/one-time-links';
 import { partCurrent } from './schema/part-current';
 import { parts } from './schema/parts';
+import { peopleTold } from './schema/people-told';
+import { receiptRows } from './schema/receipt-rows';
 import { receipts } from './schema/receipts';
 import { settings } from './schema/settings';
+import { shotAssets } from './schema/shot-assets';
+import { shotOverrides } from './schema/shot-overrides';
+import { shots } from './schema/shots';
 import { shows } from './schema/shows';
 import { signInAttempts } from './schema/sign-in-attempts';
 import { users } from './schema/users';
+import { valueSetters } from './schema/value-setters';
+import { withdrawals } from './schema/withdrawals';
 
 /** Every table and relation under one name, as Drizzle's client wants it. */
 export const schema = {
   apiTokens,
+  approvalRequests,
+  approvals,
   assetVersions,
   assets,
   auditEvents,
@@ -39,16 +53,26 @@ export const schema = {
   idempotencyKeys,
   importFiles,
   imports,
+  lockClaims,
+  locks,
   mails,
   materials,
   members,
+  notices,
   oneTimeLinks,
   partCurrent,
   parts,
+  peopleTold,
+  receiptRows,
   receipts,
   settings,
+  shotAssets,
+  shotOverrides,
+  shots,
   shows,
   signInAttempts,
   users,
+  valueSetters,
+  withdrawals,
   ...relations,
 };

@@ -11,6 +11,11 @@ export const appendOnlyTables: Readonly<Record<string, readonly string[]>> = {
   audit_events: [],
   audit_items: [],
   receipts: [],
+  receipt_rows: [],
   approvals: [],
+  withdrawals: [],
+  value_setters: [],
   locks: ['unlocked_at', 'unlocked_by', 'unlock_reason'],
+  lock_claims: ['released_at'],
+  shot_overrides: ['dropped_at', 'dropped_by'],
 };

@@ -1,6 +1,7 @@
 import { sql } from 'drizzle-orm';
 import { bigint, check, date, index, integer, pgTable, text, timestamp, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
 import { apiTokens } from './api-tokens';
+import { shots } from './shots';
 import { shows } from './shows';
 import { users } from './users';
 
@@ -16,6 +17,8 @@ export const receipts = pgTable(
       .notNull()
       .references(() => users.id, { onDelete: 'restrict' }),
     tokenId: uuid('token_id').references(() => apiTokens.id, { onDelete: 'restrict' }),
+    /** Of a shot's export. */
+    shotId: uuid('shot_id').references(() => shots.id, { onDelete: 'restrict' }),
     /** csv, json, usda … */
     format: text('format').notNull(),
     /** The selection as a canonical query string. */
@@ -27,6 +30,7 @@ export const receipts = pgTable(
     createdAt: timestamp('created_at', { withTimezone: true }).notNull().defaultNow(),
   },
   (t) => [
+    index('receipts_shot_idx').on(t.shotId, t.createdAt),
     index('receipts_show_idx').on(t.showId, t.createdAt),
     uniqueIndex('receipts_token_day_key')
       .on(t.tokenId, t.showId, t.format, t.selection, t.sha256, t.day)

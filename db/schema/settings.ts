@@ -4,6 +4,7 @@ import { CONSTRUCTIONS, ORIGINS } from '../../lib/rules/states';
 import { oneOf } from './checks';
 import { materials } from './materials';
 import { parts } from './parts';
+import { shots } from './shots';
 import { users } from './users';
 
 /** What somebody decided about a part's mass. Append-only: the newest row counts, the older ones are its history. */
@@ -23,6 +24,9 @@ export const settings = pgTable(
     wallM: doublePrecision('wall_m'),
     variant: text('variant'),
     leftOut: boolean('left_out').notNull().default(false),
+    /** Of a shot override: the setting counts in that shot alone, with its reason. */
+    shotId: uuid('shot_id').references(() => shots.id, { onDelete: 'restrict' }),
+    reason: text('reason'),
     setBy: uuid('set_by')
       .notNull()
       .references(() => users.id, { onDelete: 'restrict' }),
@@ -31,6 +35,7 @@ export const settings = pgTable(
   },
   (t) => [
     index('settings_part_idx').on(t.partId, t.id),
+    check('settings_shot_reason', sql`(${t.shotId} is null) = (${t.reason} is null)`),
     check('settings_construction', oneOf(t.construction, CONSTRUCTIONS)),
     check('settings_set_from', oneOf(t.setFrom, ORIGINS)),
     check('settings_target_mass', sql`${t.targetMassKg} > 0 and ${t.targetMassKg} < 'Infinity'`),
