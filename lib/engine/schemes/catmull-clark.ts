@@ -5,8 +5,9 @@ import { classifyVertices, isIsolated, isRegularFace, QUAD_COUNTS } from './clas
 import { CATMULL_CLARK_KIT } from './catmull-clark-kit';
 import { fillNet } from './catmull-clark-net';
 import { refineAround } from './catmull-clark-refine';
+import { refineStrip, stripSide } from './crease-strip';
 import { integrateFan } from './integrate-fan';
-import type { LevelMesh } from './level-mesh';
+import { isSharpForGood, type LevelMesh } from './level-mesh';
 import type { RefinementRules } from './refinement-rules';
 
 /** Refinements after which a cage that still is not resolved is given up; sharpness below 10 needs at most 12. */
@@ -17,7 +18,8 @@ const net = new Float64Array(48);
 
 /**
  * Integrates the Catmull-Clark limit surface of the live faces of `cage` about the bodies' origins (x, y, z each, in the cage's frame).
- * Regular faces are exact bicubics, extraordinary fans closed level sequences; the rest is refined locally until nothing is left.
+ * Regular faces are exact bicubics, extraordinary fans closed level sequences; faces along a crease of one semi-sharp sharpness are refined across it only,
+ * the rest locally in both directions until nothing is left.
  * Returns false where the cage could not be resolved.
  */
 export function integrateCatmullClark(cage: LevelMesh, rules: RefinementRules, origins: Float64Array, sums: LimitSums): boolean {
@@ -28,10 +30,15 @@ export function integrateCatmullClark(cage: LevelMesh, rules: RefinementRules, o
     let left = 0;
     for (let face = 0; face < mesh.faces; face++) {
       if (mesh.live[face] === 0) continue;
-      if (isRegularFace(mesh, QUAD_COUNTS, kinds, face, -1)) {
-        addRegularFace(mesh, face, patches, sums.curves);
-        mesh.live[face] = 0;
-      } else left++;
+      const regular = isRegularFace(mesh, QUAD_COUNTS, kinds, face, -1);
+      const side = regular ? mesh.starts[face] : stripSide(mesh, kinds, face);
+      if (side < 0) {
+        left++;
+        continue;
+      }
+      if (regular) addRegularFace(mesh, face, patches, sums.curves);
+      else addStrip(mesh, side, rules, patches, sums.curves);
+      mesh.live[face] = 0;
     }
     patches.flush();
     for (let fan = 0; fan < fans.centre.length && left > 0; fan++) {
@@ -50,8 +57,28 @@ function addRegularFace(mesh: LevelMesh, face: number, patches: RegularPatches, 
   const start = mesh.starts[face];
   fillNet(mesh, start, false, net);
   patches.add(mesh.bodyOf[face], net);
-  for (let side = 0; side < 4; side++) {
-    const edge = mesh.borderOf[start + side];
-    if (edge >= 0) curves.addSide(net, side, edge, 1, mesh.borderFrom[start + side], 2 ** -mesh.level, NO_SHIFT);
-  }
+  for (let side = 0; side < 4; side++) addBorder(mesh, start + side, net, side, 0, 1, curves);
+}
+
+/** `first` is the strip's side along the crease. */
+function addStrip(mesh: LevelMesh, first: number, rules: RefinementRules, patches: RegularPatches, curves: BorderCurves): void {
+  const face = mesh.faceOf[first];
+  const sides = [0, 1, 2, 3].map((i) => mesh.starts[face] + ((first - mesh.starts[face] + i) & 3));
+  fillNet(mesh, first, false, net);
+  const far = isSharpForGood(mesh, sides[2]) ? 0 : mesh.edgeSharpness[sides[2]];
+  refineStrip(net, mesh.edgeSharpness[first], far, rules.creasing, (piece, from, share) => {
+    patches.add(mesh.bodyOf[face], piece);
+    if (from === 0) addBorder(mesh, sides[0], piece, 0, 0, 1, curves);
+    addBorder(mesh, sides[1], piece, 1, from, share, curves);
+    if (from + share === 1) addBorder(mesh, sides[2], piece, 2, 0, 1, curves);
+    addBorder(mesh, sides[3], piece, 3, 1 - from - share, share, curves);
+  });
+}
+
+/** Adds side `side` of a net where it is a piece of a border: of half-edge `h` the share `share`, `from` its start. */
+function addBorder(mesh: LevelMesh, h: number, values: Float64Array, side: number, from: number, share: number, curves: BorderCurves): void {
+  const edge = mesh.borderOf[h];
+  if (edge < 0) return;
+  const length = 2 ** -mesh.level;
+  curves.addSide(values, side, edge, 1, mesh.borderFrom[h] + from * length, share * length, NO_SHIFT);
 }
