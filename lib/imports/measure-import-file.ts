@@ -77,7 +77,7 @@ async function endMeasured(
   const remarks = [...version.remarks, ...(await unitRemarks(tx, showId, summary.size))];
   if (version.changed) {
     await recordEvent(tx, { actor: work.actor, origin: 'import' }, { showId, act: 'import-version', subject: version.asset, items: [{ field: 'version', before: version.before, after: version.label }] });
-    await refreshAssetValues(tx, { assetId: version.assetId });
+    await refreshAssetValues(tx, { assetId: version.assetId, importedBy: createdBy });
   }
   await endFile(tx, held, { state: 'done', assetId: version.assetId, versionId: version.versionId, parts: summary.parts, problems: summary.problems, remark: remarks.join(' ') || null });
 }

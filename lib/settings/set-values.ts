@@ -12,6 +12,7 @@ import type { SetValuesInput, SetValuesItem } from '@/lib/rules/inputs/set-value
 import type { AssetTotal, PartCounts, PartRow } from '@/lib/rules/part-row';
 import { StudioError } from '@/lib/rules/studio-error';
 import { getShowAccess } from '@/lib/shows/get-show-access';
+import { insertValueSetters } from '@/lib/values/insert-value-setters';
 import { loadValueInputs, type LoadedPart } from '@/lib/values/load-value-inputs';
 import { lockShowValues } from '@/lib/values/lock-show-values';
 import type { MaterialNow } from '@/lib/values/value-inputs';
@@ -92,6 +93,7 @@ async function applyItems(tx: Transaction, acting: ActorContext, { showId, revis
   const ids = await insertSettings(tx, changed, { setBy: acting.actor.userId, setFrom: acting.origin });
   const written = await updatePartRows(tx, changed.map((part) => ({ ...part, settingId: ids.get(part.partId) ?? null })), revision);
   if (written.size !== changed.length) throw new StudioError('conflict', 'Rows changed while they were being set. Nothing was overwritten; try again.');
+  await insertValueSetters(tx, [...written], { userId: acting.actor.userId, act: 'setting' });
   const [first] = changed;
   const subject = changed.length === 1 ? `${first.asset}/${first.part}` : `${changed.length} parts`;
   await recordEvent(tx, acting, { showId, act: 'set-values', subject, items: history });

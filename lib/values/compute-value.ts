@@ -2,7 +2,7 @@ import type { ValueFinding } from '@/db/schema/part-current';
 import { massProperties, type MassFailureCode, type MassProperties } from '@/lib/engine/mass-properties';
 import type { MassSource, ValueState } from '@/lib/rules/states';
 import { massSource } from './mass-source';
-import { valueHash } from './value-hash';
+import { valueCanonical, valueHash } from './value-canonical';
 import type { ValueInputs } from './value-inputs';
 
 /** Problems that do not forbid the value of a sheet: it has a border and encloses nothing. */
@@ -14,6 +14,8 @@ export interface ComputedValue {
   massSource: MassSource | null;
   /** Null unless the state is measured. */
   properties: MassProperties | null;
+  /** The text behind the hash (see valueCanonical). */
+  canonical: string | null;
   valueSha256: string | null;
   densityKgPerM3: number | null;
   arealDensityKgPerM2: number | null;
@@ -53,6 +55,7 @@ export function computeValue(inputs: ValueInputs): ComputedValue {
     state: 'unset',
     massSource: applied?.source ?? null,
     properties: null,
+    canonical: null,
     valueSha256: null,
     densityKgPerM3: setting.densityKgPerM3 ?? setting.material?.densityKgPerM3 ?? null,
     arealDensityKgPerM2: setting.arealDensityKgPerM2 ?? setting.material?.arealDensityKgPerM2 ?? null,
@@ -88,15 +91,21 @@ export function computeValue(inputs: ValueInputs): ComputedValue {
       value.state = 'blocked';
     } else {
       value.state = 'measured';
-      value.properties = properties;
+      value.properties = { ...properties, quatWxyz: properties.quatWxyz.map(withSquare) as MassProperties['quatWxyz'] };
       value.densityKgPerM3 = source === 'target_mass' || setting.construction !== 'sheet' ? properties.densityKgPerM3 : value.densityKgPerM3;
       value.arealDensityKgPerM2 = properties.arealDensityKgPerM2;
       value.numericError = properties.numericError;
-      value.valueSha256 = valueHash(inputs);
+      value.canonical = valueCanonical(inputs, value);
+      value.valueSha256 = valueHash(value.canonical);
     }
   }
-  if (setting.leftOut) return { ...value, state: 'left_out', properties: null, valueSha256: null };
+  if (setting.leftOut) return { ...value, state: 'left_out', properties: null, canonical: null, valueSha256: null };
   return value;
+}
+
+/** A component whose square would vanish below the smallest double is 0: the database squares it to check the unit length. */
+function withSquare(component: number): number {
+  return Math.abs(component) < 1e-150 ? 0 : component;
 }
 
 /** Kilograms or kg·m², whose products and sums over a show stay within what a double can hold: the database refuses what leaves it. */

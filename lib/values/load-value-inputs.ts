@@ -2,6 +2,7 @@ import { sql } from 'drizzle-orm';
 import type { Executor } from '@/db/client';
 import type { Category, Construction, Origin } from '@/lib/rules/states';
 import { METRES_PER, type LinearUnit, type UpAxis } from '@/lib/rules/units';
+import type { StandingApproval } from './approval-of';
 import type { RecordFinding, ValueInputs } from './value-inputs';
 
 /** A part of an asset's current version with everything its row is made of. */
@@ -15,11 +16,11 @@ export interface LoadedPart extends ValueInputs {
   settingId: number | null;
   /** Revision of the part's row; null where it has none yet. */
   revision: number | null;
-  asset: string;
+  /** Of the part's own value (not of overrides), the newest first. */
+  approvals: StandingApproval[];
   outsideId: string | null;
   category: Category;
   version: string;
-  upAxis: UpAxis;
   faces: number;
   maxValence: number;
   setBy: string | null;
@@ -75,6 +76,7 @@ interface HeadRow {
   material_revision: number | null;
   material_density: number | null;
   material_areal_density: number | null;
+  approvals: StandingApproval[];
 }
 
 /**
@@ -94,17 +96,22 @@ export async function loadValueInputs(db: Executor, assetIds: string[], partIds:
       r.content_sha256, r.scheme, r.boundary, r.triangles, r.creasing, r.parts_by, r.engine_version,
       s.construction, s.target_mass_kg, s.density_kg_m3, s.areal_density_kg_m2, s.wall_m, s.variant, s.left_out, s.set_from, s.set_at,
       u.name as set_by_name, m.id as material_id, m.name as material_name, m.revision as material_revision,
-      m.density_kg_m3 as material_density, m.areal_density_kg_m2 as material_areal_density
+      m.density_kg_m3 as material_density, m.areal_density_kg_m2 as material_areal_density, coalesce(y.approvals, '[]') as approvals
     from current v
     join assets a on a.id = v.asset_id
     join shows w on w.id = a.show_id
     join geometry_records r on r.id = v.record_id
     join geometry_parts g on g.record_id = v.record_id
     join parts p on p.asset_id = a.id and p.name = g.name
-    left join lateral (select * from settings where settings.part_id = p.id order by settings.id desc limit 1) s on true
+    left join lateral (select * from settings where settings.part_id = p.id and settings.shot_id is null order by settings.id desc limit 1) s on true
     left join materials m on m.id = s.material_id
     left join users u on u.id = s.set_by
     left join part_current c on c.part_id = p.id
+    left join lateral (
+      select json_agg(json_build_object('id', approvals.id, 'valueSha256', approvals.value_sha256) order by approvals.ordinal desc) as approvals
+      from approvals where approvals.part_id = p.id and approvals.shot_id is null
+        and not exists (select 1 from withdrawals where withdrawals.approval_id = approvals.id)
+    ) y on true
     where a.archived_at is null ${onlyParts}
     order by a.code collate "C", p.name collate "C"`);
   if (heads.length === 0) return [];
@@ -185,6 +192,7 @@ function toLoadedPart(head: HeadRow, components: LoadedPart['components'], findi
     geometryPartId: head.geometry_part_id,
     settingId: head.setting_id === null ? null : Number(head.setting_id),
     revision: head.revision,
+    approvals: head.approvals,
     asset: head.asset,
     outsideId: head.outside_id,
     category: head.category,

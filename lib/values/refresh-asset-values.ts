@@ -3,6 +3,7 @@ import type { Transaction } from '@/db/client';
 import { assets } from '@/db/schema/assets';
 import { shows } from '@/db/schema/shows';
 import { StudioError } from '@/lib/rules/studio-error';
+import { insertValueSetters } from './insert-value-setters';
 import { loadValueInputs } from './load-value-inputs';
 import { lockShowValues } from './lock-show-values';
 import { writePartRows } from './write-part-rows';
@@ -13,8 +14,8 @@ import { writePartRows } from './write-part-rows';
  * the table; their settings stay. Rows that change count up, and with them the show's revision.
  * Errors: not_found for an asset that does not exist.
  */
-export async function refreshAssetValues(tx: Transaction, input: { assetId: string }): Promise<{ written: number; removed: number }> {
-  const { assetId } = input;
+export async function refreshAssetValues(tx: Transaction, input: { assetId: string; importedBy: string }): Promise<{ written: number; removed: number }> {
+  const { assetId, importedBy } = input;
   const [asset] = await tx.select({ showId: assets.showId }).from(assets).where(eq(assets.id, assetId));
   if (!asset) throw new StudioError('not_found', 'There is no such asset.');
   const { revision } = await lockShowValues(tx, asset.showId);
@@ -25,6 +26,7 @@ export async function refreshAssetValues(tx: Transaction, input: { assetId: stri
     order by g.ordinal on conflict do nothing`);
   const parts = await loadValueInputs(tx, [assetId], null);
   const written = await writePartRows(tx, parts, revision + 1);
+  await insertValueSetters(tx, [...written], { userId: importedBy, act: 'version' });
   const removed = await tx.execute(sql`
     delete from part_current where asset_id = ${assetId} and not (part_id = any(${sql.param(parts.map((part) => part.partId))}::uuid[]))`);
   const changes = { written: written.size, removed: removed.rowCount ?? 0 };

@@ -1,5 +1,6 @@
 import type { MassComponent } from '@/lib/engine/mass-properties';
 import type { Construction } from '@/lib/rules/states';
+import type { UpAxis } from '@/lib/rules/units';
 
 /** A finding of a geometry record that concerns the part (or its whole file). */
 export interface RecordFinding {
@@ -53,7 +54,10 @@ export interface RecordKey {
 /** Everything that a part's value follows from. Geometry in file units and file axes. */
 export interface ValueInputs {
   record: RecordKey;
+  /** Code of the asset. */
+  asset: string;
   part: string;
+  upAxis: UpAxis;
   metresPerUnit: number;
   scale: number;
   setting: MassSetting;

@@ -1,5 +1,6 @@
 import { sql } from 'drizzle-orm';
 import type { Transaction } from '@/db/client';
+import { approvalOf } from './approval-of';
 import { computeValue } from './compute-value';
 import type { LoadedPart } from './load-value-inputs';
 
@@ -49,6 +50,8 @@ const COLUMNS = {
   warnings: 'text',
   state: 'text',
   value_sha256: 'text',
+  value_id: 'uuid',
+  last_approval_id: 'uuid',
   problem_codes: 'text[]',
   value_findings: 'jsonb',
   mass_source: 'text',
@@ -129,7 +132,7 @@ function rowOf(part: LoadedPart): RowColumns {
   const [comX, comY, comZ] = properties?.comM ?? [null, null, null];
   const [ixx, iyy, izz, ixy, ixz, iyz] = properties?.inertiaKgM2 ?? [null, null, null, null, null, null];
   const [i1, i2, i3] = properties?.principalKgM2 ?? [null, null, null];
-  const [w, x, y, z] = properties?.quatWxyz.map(withSquare) ?? [null, null, null, null];
+  const [w, x, y, z] = properties?.quatWxyz ?? [null, null, null, null];
   return {
     show_id: part.showId,
     asset_id: part.assetId,
@@ -173,8 +176,8 @@ function rowOf(part: LoadedPart): RowColumns {
     up_axis: part.upAxis,
     numeric_error: value.numericError,
     warnings: value.warningCodes.join(' '),
-    state: value.state,
     value_sha256: value.valueSha256,
+    ...approvalOf(value, part.approvals),
     problem_codes: value.problemCodes,
     value_findings: value.valueFindings,
     mass_source: value.massSource,
@@ -186,9 +189,4 @@ function rowOf(part: LoadedPart): RowColumns {
     faces: part.faces,
     max_valence: part.maxValence,
   };
-}
-
-/** A component whose square would vanish below the smallest double is 0: the database squares it to check the unit length. */
-function withSquare(component: number): number {
-  return Math.abs(component) < 1e-150 ? 0 : component;
 }

@@ -85,7 +85,7 @@ export async function putCage(show: { id: string }, by: { id: string }, asset: s
     const number = version ?? (last?.number ?? 0) + 1;
     const recordId = await writeGeometryRecord(tx, { sha256, options: measure }, measured);
     await tx.insert(assetVersions).values({ assetId: row.id, number, label: `v${String(number).padStart(3, '0')}`, recordId, createdBy: by.id });
-    await refreshAssetValues(tx, { assetId: row.id });
+    await refreshAssetValues(tx, { assetId: row.id, importedBy: by.id });
     return row.id;
   });
 }

@@ -3,7 +3,6 @@ import { describe, expect, test } from 'vitest';
 import { mergeSetting, settingChanges } from '@/lib/settings/merge-setting';
 import { computeValue } from '@/lib/values/compute-value';
 import { massSource } from '@/lib/values/mass-source';
-import { valueHash } from '@/lib/values/value-hash';
 import { NO_SETTING, type MassSetting, type MaterialNow, type ValueInputs } from '@/lib/values/value-inputs';
 
 const OAK: MaterialNow = { id: 'm1', name: 'oak', revision: 3, densityKgPerM3: 700, arealDensityKgPerM2: null };
@@ -14,7 +13,9 @@ const given = (fields: Partial<MassSetting>): MassSetting => ({ ...NO_SETTING, .
 /** A unit cube about (½, ½, ½), in its own numbers: V = 1, ∫x² about the centre 1/12; surface area 6. */
 const CUBE: ValueInputs = {
   record: { contentSha256: 'ab'.repeat(32), scheme: 'polyhedral', boundary: 'edge-and-corner', triangles: 'catmark', creasing: 'uniform', partsBy: 'group', engineVersion: '1' },
+  asset: 'box',
   part: 'cube',
+  upAxis: 'y',
   metresPerUnit: 1,
   scale: 1,
   setting: NO_SETTING,
@@ -80,27 +81,39 @@ describe('an item over a setting', () => {
 
 describe('the hash of a value', () => {
   test('is that of the canonical form as it is written down', () => {
+    // A cube of 2 cm, 0.1 kg: m·a²/6 about each axis; 0.1 / 8e-6 kg/m³.
     const canonical =
-      `["weighhouse-value-1",["${'ab'.repeat(32)}","polyhedral","edge-and-corner","catmark","uniform","group","1"],"cube",0.01,2,"solid",null,0.1,null,` +
-      `["oak",3,700,null],null,"wet","signed",false]`;
-    const inputs = { ...CUBE, metresPerUnit: 0.01, scale: 2, setting: given({ targetMassKg: 0.1, material: OAK, variant: 'wet' }) };
-    expect(valueHash(inputs)).toBe(createHash('sha256').update(canonical, 'utf8').digest('hex'));
+      `["weighhouse-value-2",["${'ab'.repeat(32)}","polyhedral","edge-and-corner","catmark","uniform","group","1"],["box","cube"],0.01,2,"solid",null,0.1,null,` +
+      `["oak",3,700,null],null,"wet","signed","y",[`;
+    const value = computeValue({ ...CUBE, metresPerUnit: 0.01, scale: 2, setting: given({ targetMassKg: 0.1, material: OAK, variant: 'wet' }) });
+    const text = value.canonical ?? '';
+    expect(text.startsWith(canonical)).toBe(true);
+    const numbers = (JSON.parse(text) as unknown[][])[14];
+    expect(numbers).toHaveLength(23);
+    const expected = [12500, null, 24e-4, 8e-6, 0.1, 0.01, 0.01, 0.01, ...[1, 1, 1].map((m) => (m * 0.1 * 4e-4) / 6), 0, 0, 0, ...[1, 1, 1].map((m) => (m * 0.1 * 4e-4) / 6), 1, 0, 0, 0];
+    expected.forEach((number, i) => (number ? expect(Number(numbers[i]) / number).toBeCloseTo(1, 13) : expect(numbers[i]).toBe(number)));
+    expect(numbers[22]).toBe('123');
+    expect(value.valueSha256).toBe(createHash('sha256').update(text, 'utf8').digest('hex'));
   });
 
   test('differs with every input', () => {
     const base = given({ densityKgPerM3: 5 });
     const changes: ValueInputs[] = [
       { ...CUBE, setting: base },
+      { ...CUBE, setting: base, asset: 'other' },
       { ...CUBE, setting: base, part: 'other' },
+      { ...CUBE, setting: base, upAxis: 'z' },
       { ...CUBE, setting: base, scale: 2 },
       { ...CUBE, setting: base, metresPerUnit: 0.01 },
       ...Object.keys(CUBE.record).map((key) => ({ ...CUBE, setting: base, record: { ...CUBE.record, [key]: 'x' } })),
       ...([
-        { construction: 'sheet' }, { wallM: 0.1 }, { targetMassKg: 1 }, { densityKgPerM3: 6 }, { material: OAK }, { material: { ...OAK, revision: 4 } },
-        { arealDensityKgPerM2: 1 }, { variant: 'dry' }, { leftOut: true },
+        { construction: 'sheet', arealDensityKgPerM2: 1 }, { wallM: 0.1 }, { targetMassKg: 1 }, { densityKgPerM3: 6 }, { material: OAK }, { material: { ...OAK, revision: 4 } },
+        { arealDensityKgPerM2: 1 }, { variant: 'dry' },
       ] as const).map((fields) => ({ ...CUBE, setting: { ...base, ...fields } })),
     ];
-    expect(new Set(changes.map(valueHash)).size).toBe(changes.length);
+    const hashes = changes.map((inputs) => computeValue(inputs).valueSha256);
+    expect(hashes).not.toContain(null);
+    expect(new Set(hashes).size).toBe(changes.length);
   });
 });
 
