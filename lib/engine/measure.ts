@@ -7,6 +7,7 @@ import { counted, FindingList, placeOf } from './mesh/findings';
 import { isBorder } from './mesh/border-loops';
 import { makeFrames } from './mesh/frames';
 import { halfEdgeEnds } from './mesh/match-edges';
+import { mendCage } from './mesh/mend-cage';
 import { diagnoseNearCoincident } from './mesh/near-coincident';
 import { diagnoseOverlap } from './mesh/overlap';
 import { partitionFaces, type Bodies } from './mesh/partition';
@@ -21,13 +22,15 @@ export const ENGINE_VERSION = '1';
  * Measures a cage: per part and connected body volume, centroid and second moments of the limit solid, area and its moments, and the cage's own.
  * Lengths are in the file's unit, centroids in its frame. Never throws on a cage that the formats room could build:
  * what cannot be measured is a finding of severity `problem`, and its part then has no components.
+ * With `options.weld` or `options.turnFaces` the cage is mended first, and what that changed is noted.
  * `options.boundary` is taken as it is; whether the file's own rule (`cage.boundary`) comes before it is the caller's to say.
  */
-export function measureCage(cage: Cage, options: MeasureOptions): MeasuredCage {
+export function measureCage(given: Cage, options: MeasureOptions): MeasuredCage {
   const findings = new FindingList();
+  const { cage, joined } = mendCage(given, options, findings);
   const { mesh, defects } = buildTopology(cage);
   const bodies = partitionFaces(cage, mesh, options.partsBy);
-  const bad = findNotFinite(cage, findings) ? new Uint8Array(mesh.faces).fill(1) : diagnoseStructure(cage, mesh, defects, bodies, findings);
+  const bad = findNotFinite(cage, findings) ? new Uint8Array(mesh.faces).fill(1) : diagnoseStructure(cage, mesh, defects, bodies, joined, findings);
   const blocked = blockedBodies(mesh, bodies, bad);
   if (options.scheme === 'loop') blockNotTriangles(cage, mesh, bodies, blocked, findings);
   if (options.scheme === 'doo-sabin') blockBorders(mesh, bodies, blocked, findings);

@@ -7,6 +7,10 @@ export interface MeasureOptions {
   triangles: TriangleRule;
   creasing: CreasingRule;
   partsBy: Partition;
+  /** Joins vertices on open borders that lie on each other before measuring; not unless true. */
+  weld?: boolean;
+  /** Turns faces one way and outwards before measuring; not unless true. */
+  turnFaces?: boolean;
 }
 
 /** problem: no value; warning: a value to be looked at; note: worth knowing. */

@@ -40,7 +40,7 @@ export function diagnoseOrientation(
       inverted[piece] = 1;
     } else {
       findings.add('inside_out', 'problem', part.name, placeOf({ face, position }),
-        (n) => `${counted(n, 'body is', 'bodies are')} inside out; reverse ${n === 1 ? 'its' : 'their'} faces so that they look outwards.`);
+        (n) => `${counted(n, 'body is', 'bodies are')} inside out; reverse ${n === 1 ? 'its' : 'their'} faces, or import again with faces turned outwards.`);
     }
   }
   diagnoseNesting(cage, mesh, bodies, relations, nested, inverted, findings);

@@ -9,8 +9,8 @@ import { nextHalfEdge, previousHalfEdge, type EdgeDefects, type Topology } from 
 /** Area of a face relative to the square of its perimeter below which it counts as none. */
 const NO_AREA = 1e-14;
 
-/** Finds what forbids a number. Returns the faces that stand in a structural problem (1), for their bodies to be left out. */
-export function diagnoseStructure(cage: Cage, mesh: Topology, defects: EdgeDefects, bodies: Bodies, findings: FindingList): Uint8Array {
+/** Finds what forbids a number. `joined` are vertices that a weld left without faces. Returns the faces that stand in a structural problem (1), for their bodies to be left out. */
+export function diagnoseStructure(cage: Cage, mesh: Topology, defects: EdgeDefects, bodies: Bodies, joined: Int32Array, findings: FindingList): Uint8Array {
   const bad = new Uint8Array(mesh.faces);
   const at = (face: number, fields: Partial<Place>): Place => {
     const vertex = fields.vertex ?? fields.edge?.[0] ?? mesh.vertexOf[mesh.starts[face]];
@@ -28,14 +28,19 @@ export function diagnoseStructure(cage: Cage, mesh: Topology, defects: EdgeDefec
   if (defects.turned.length > 0) {
     const turned = findTurnedFaces(mesh, cage);
     for (const h of defects.turned) bad[mesh.faceOf[h]] = 1;
-    for (const face of turned) {
+    for (const face of turned.faces) {
       bad[face] = 1;
       findings.add('flipped_face', 'problem', partName(face), at(face, {}),
-        (n) => `${counted(n, 'face is', 'faces are')} turned against the neighbours; reverse ${n === 1 ? 'it' : 'them'} so that all faces look outwards.`);
+        (n) => `${counted(n, 'face is', 'faces are')} turned against the neighbours; reverse ${n === 1 ? 'it' : 'them'}, or import again with faces turned outwards.`);
+    }
+    for (const h of turned.oneSided) {
+      bad[mesh.faceOf[h]] = 1;
+      findings.add('one_sided', 'problem', partName(mesh.faceOf[h]), at(mesh.faceOf[h], { edge: halfEdgeEnds(mesh, h) }),
+        (n) => `The surface has one side only, as a Möbius strip has, at ${counted(n, 'edge', 'edges')}; cut it there and close it, for it encloses nothing.`);
     }
   }
   diagnoseFaces(cage, mesh, bad, findings, at, partName);
-  diagnoseVertices(cage, mesh, bad, findings, at, partName);
+  diagnoseVertices(cage, mesh, bad, joined, findings, at, partName);
   for (const tag of defects.strayCreases) {
     const edge: [number, number] = [cage.creaseVertices[2 * tag], cage.creaseVertices[2 * tag + 1]];
     findings.add('crease_without_edge', 'warning', null, placeOf({ edge, position: positionOf(cage, edge[0]) }),
@@ -110,10 +115,11 @@ function reportDuplicates(mesh: Topology, faces: number[], bad: Uint8Array, find
   }
 }
 
-function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, findings: FindingList, at: PlaceAt, partName: (face: number) => string): void {
+function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, joined: Int32Array, findings: FindingList, at: PlaceAt, partName: (face: number) => string): void {
   const corners = new Int32Array(mesh.vertices);
   const visited = new Uint8Array(mesh.vertices);
   for (const v of mesh.vertexOf) corners[v]++;
+  const gone = new Set(joined);
   for (let h = 0; h < mesh.vertexOf.length; h++) {
     const v = mesh.vertexOf[h];
     if (visited[v] === 1) continue;
@@ -126,7 +132,7 @@ function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, findings:
       (n) => `${counted(n, 'vertex joins', 'vertices join')} surfaces that touch in that point only; split ${n === 1 ? 'it' : 'them'} so that each surface has its own.`);
   }
   for (let v = 0; v < mesh.vertices; v++) {
-    if (corners[v] > 0) continue;
+    if (corners[v] > 0 || gone.has(v)) continue;
     findings.add('isolated_vertex', 'note', null, placeOf({ vertex: v, position: positionOf(cage, v) }),
       (n) => `${counted(n, 'vertex belongs', 'vertices belong')} to no face and ${n === 1 ? 'was' : 'were'} ignored; delete ${n === 1 ? 'it' : 'them'} if that was not meant.`);
   }

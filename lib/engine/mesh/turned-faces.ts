@@ -1,14 +1,23 @@
 import type { Cage } from '../cage';
 import { nextHalfEdge, type Topology } from './topology';
 
+/** What has to be reversed so that every piece is turned one way. */
+export interface TurnedFaces {
+  /** Faces to reverse, ascending. */
+  faces: number[];
+  /** Half-edges, one for each edge that no reversal puts right: the surface there has one side only, as a Möbius strip has. */
+  oneSided: number[];
+}
+
 /**
- * Faces to reverse so that every piece is turned one way: sides are spread over the edges with exactly two faces,
+ * Finds the faces that are turned against their neighbours: sides are spread over the edges with exactly two faces,
  * and in each piece the smaller side (the later one where they are equal) is the turned one.
  */
-export function findTurnedFaces(mesh: Topology, cage: Cage): number[] {
+export function findTurnedFaces(mesh: Topology, cage: Cage): TurnedFaces {
   const neighbours = pairFaces(mesh, cage);
   const side = new Int8Array(mesh.faces).fill(-1);
   const turned: number[] = [];
+  const oneSided: number[] = [];
   for (let seed = 0; seed < mesh.faces; seed++) {
     if (side[seed] >= 0) continue;
     side[seed] = 0;
@@ -19,16 +28,18 @@ export function findTurnedFaces(mesh: Topology, cage: Cage): number[] {
         const other = neighbours[h];
         if (other < 0) continue;
         const face2 = mesh.faceOf[other];
-        if (side[face2] >= 0) continue;
-        side[face2] = mesh.vertexOf[other] === mesh.vertexOf[h] ? 1 - side[face] : side[face];
-        piece.push(face2);
+        const wanted = mesh.vertexOf[other] === mesh.vertexOf[h] ? 1 - side[face] : side[face];
+        if (side[face2] < 0) {
+          side[face2] = wanted;
+          piece.push(face2);
+        } else if (side[face2] !== wanted && h < other) oneSided.push(h);
       }
     }
     const reversed = piece.filter((face) => side[face] === 1);
     const minority = 2 * reversed.length <= piece.length ? reversed : piece.filter((face) => side[face] === 0);
     turned.push(...minority);
   }
-  return turned.sort((a, b) => a - b);
+  return { faces: turned.sort((a, b) => a - b), oneSided };
 }
 
 /** The other half-edge of each edge with exactly two faces, whichever way it runs; -1 elsewhere. Rare path, so a map is fine here. */

@@ -1,14 +1,13 @@
 import type { MeasureOptions } from '../measured';
-import type { Topology } from '../mesh/topology';
-import { limitPoints } from './limit-points';
+import { emptyBoxes, faceHulls } from '../mesh/face-hulls';
+import { growBox } from '../mesh/box-tree';
+import { previousHalfEdge, nextHalfEdge, type Topology } from '../mesh/topology';
 import { refineAround } from './catmull-clark-refine';
+import { collectRing } from './classify-vertices';
+import { refineDooSabin } from './doo-sabin-refine';
 import { levelZero, type LevelMesh } from './level-mesh';
-
-/** Quads that the refined faces may have together, about. */
-const MOST_QUADS = 20_000;
-const MOST_LEVELS = 4;
-/** Above this many faces the cage's own triangles stand in: so dense a cage lies on its limit, but for parts in 1e4. */
-const MOST_FACES = 20_000;
+import { dooSabinLimitPoints, limitPoints, loopSmoothLimit } from './limit-points';
+import { refineTriangles } from './loop-refine';
 
 /** Triangles of some faces, counter-clockwise from outside. */
 export interface FaceTriangles {
@@ -22,26 +21,83 @@ export interface FaceTriangles {
 }
 
 /**
- * The chosen faces' limit surface as triangles between limit points, refined the more the fewer they are; neighbours share their points exactly.
- * `positions` may be in any frame. Faces of the scheme `polyhedral` are fans from their vertex mean, as they are measured.
+ * A cage's surface on its way to the limit, element by element. Elements are the level's faces, and from the first Doo-Sabin refinement on its vertices,
+ * since the patches belong to them; `live` and `bodyOf` count elements, and `bodyOf` is the cage's face that an element is a piece of.
  */
-export function limitTriangles(mesh: Topology, positions: Float64Array, chosen: Uint8Array, options: MeasureOptions): FaceTriangles {
-  let count = 0;
-  for (const one of chosen) count += one;
-  if (options.scheme === 'polyhedral' || count > MOST_FACES) return cageTriangles(mesh, positions, chosen);
-  const levels = Math.min(MOST_LEVELS, Math.max(1, Math.floor(Math.log(MOST_QUADS / Math.max(1, count)) / Math.log(4))));
+export type LimitLevel = LevelMesh;
+
+/** The cage as level 0; all faces are live. `positions` may be in any frame. */
+export function startLimit(mesh: Topology, positions: Float64Array, options: MeasureOptions): LimitLevel {
   const cage = levelZero(mesh, positions, new Int32Array(mesh.faces), new Uint8Array(1), options.boundary);
-  let level: LevelMesh = { ...cage, bodyOf: Int32Array.from(chosen, (_, face) => face), live: chosen };
-  for (let step = 0; step < levels; step++) level = refineAround(level, options);
-  const limits = limitPoints(level);
+  return { ...cage, bodyOf: Int32Array.from(cage.live.keys()) };
+}
+
+/** Refines the live elements by the scheme's rule. Loop takes triangles only, and `polyhedral` cannot be refined. */
+export function refineLimit(level: LimitLevel, options: MeasureOptions): LimitLevel {
+  if (options.scheme === 'doo-sabin') return refineDooSabin(level, level.level === 0);
+  return options.scheme === 'loop' ? refineTriangles(level, options) : refineAround(level, options);
+}
+
+/** A box (min x, y, z, max x, y, z) per element that holds its limit surface, by the hull of the points around it; of use for live elements only. */
+export function elementHulls(level: LimitLevel, options: MeasureOptions): Float64Array {
+  if (options.scheme !== 'doo-sabin' || level.level === 0) return faceHulls(level, level.positions, options.scheme !== 'polyhedral');
+  const faces = faceHulls(level, level.positions, false);
+  const around = emptyBoxes(level.vertices);
+  for (let h = 0; h < level.vertexOf.length; h++) growBox(around, 6 * level.vertexOf[h], faces, 6 * level.faceOf[h]);
+  return around;
+}
+
+/**
+ * The live elements' limit surface as triangles between limit points; neighbours share their points exactly. Faces of the scheme `polyhedral`
+ * (and of a level 0) are fans from their vertex mean, as they are measured.
+ */
+export function limitTriangles(level: LimitLevel, options: MeasureOptions): FaceTriangles {
+  if (level.level === 0) return cageTriangles(level, level.positions, level.live);
+  if (options.scheme === 'doo-sabin') return dualTriangles(level);
+  const limits = options.scheme === 'loop' ? limitPoints(level, loopSmoothLimit) : limitPoints(level);
   const triangles = new TriangleList();
   for (let face = 0; face < level.faces; face++) {
     if (level.live[face] === 0) continue;
     const at = level.starts[face];
-    triangles.add(limits, level.vertexOf[at], level.vertexOf[at + 1], level.vertexOf[at + 2], level.bodyOf[face]);
-    triangles.add(limits, level.vertexOf[at], level.vertexOf[at + 2], level.vertexOf[at + 3], level.bodyOf[face]);
+    for (let h = at + 2; h < level.starts[face + 1]; h++) triangles.add(limits, level.vertexOf[at], level.vertexOf[h - 1], level.vertexOf[h], level.bodyOf[face]);
   }
   return triangles.finish(level.vertices);
+}
+
+/**
+ * Doo-Sabin: the patch of a vertex as a fan about its limit point. It reaches to the centroids of the faces around, which are limit points, and on a border
+ * to the middles of the border's edges [Doo & Sabin 1978].
+ */
+function dualTriangles(level: LimitLevel): FaceTriangles {
+  const { faces, vertices, positions: p } = level;
+  const points = new Float64Array(3 * (vertices + faces + level.vertexOf.length));
+  points.set(dooSabinLimitPoints(level));
+  for (let h = 0; h < level.vertexOf.length; h++) {
+    const face = level.faceOf[h];
+    const corners = level.starts[face + 1] - level.starts[face];
+    const next = level.vertexOf[nextHalfEdge(level, h)];
+    for (let axis = 0; axis < 3; axis++) {
+      points[3 * (vertices + face) + axis] += p[3 * level.vertexOf[h] + axis] / corners;
+      points[3 * (vertices + faces + h) + axis] = (p[3 * level.vertexOf[h] + axis] + p[3 * next + axis]) / 2;
+    }
+  }
+  const triangles = new TriangleList();
+  const ring: number[] = [];
+  const seen = new Uint8Array(vertices);
+  for (let h = 0; h < level.vertexOf.length; h++) {
+    const vertex = level.vertexOf[h];
+    if (level.live[vertex] === 0 || seen[vertex] === 1) continue;
+    seen[vertex] = 1;
+    const closed = collectRing(level, h, ring);
+    const around = ring.map((corner) => vertices + level.faceOf[corner]);
+    if (closed) around.push(around[0]);
+    else {
+      around.unshift(vertices + faces + ring[0]);
+      around.push(vertices + faces + previousHalfEdge(level, ring[ring.length - 1]));
+    }
+    for (let i = 1; i < around.length; i++) triangles.add(points, vertex, around[i - 1], around[i], level.bodyOf[vertex]);
+  }
+  return triangles.finish(points.length / 3);
 }
 
 function cageTriangles(mesh: Topology, positions: Float64Array, chosen: Uint8Array): FaceTriangles {
@@ -64,19 +120,41 @@ function cageTriangles(mesh: Topology, positions: Float64Array, chosen: Uint8Arr
   return triangles.finish(mesh.vertices + mesh.faces);
 }
 
+/** Gathers triangles in arrays that double when they are full. */
 class TriangleList {
-  private readonly numbers: number[] = [];
-  private readonly corners: number[] = [];
-  private readonly faces: number[] = [];
+  private points = new Float64Array(9 * 1024);
+  private corners = new Int32Array(3 * 1024);
+  private faces = new Int32Array(1024);
+  private count = 0;
 
   add(p: Float64Array, a: number, b: number, c: number, face: number): void {
-    this.numbers.push(p[3 * a], p[3 * a + 1], p[3 * a + 2], p[3 * b], p[3 * b + 1], p[3 * b + 2], p[3 * c], p[3 * c + 1], p[3 * c + 2]);
-    this.corners.push(a, b, c);
-    this.faces.push(face);
+    const t = this.count++;
+    if (t === this.faces.length) this.grow();
+    const { points, corners } = this;
+    for (let axis = 0; axis < 3; axis++) {
+      points[9 * t + axis] = p[3 * a + axis];
+      points[9 * t + 3 + axis] = p[3 * b + axis];
+      points[9 * t + 6 + axis] = p[3 * c + axis];
+    }
+    corners[3 * t] = a;
+    corners[3 * t + 1] = b;
+    corners[3 * t + 2] = c;
+    this.faces[t] = face;
+  }
+
+  private grow(): void {
+    const doubled = <T extends Float64Array | Int32Array>(from: T, to: T): T => {
+      to.set(from);
+      return to;
+    };
+    this.points = doubled(this.points, new Float64Array(2 * this.points.length));
+    this.corners = doubled(this.corners, new Int32Array(2 * this.corners.length));
+    this.faces = doubled(this.faces, new Int32Array(2 * this.faces.length));
   }
 
   finish(vertices: number): FaceTriangles {
-    return { points: Float64Array.from(this.numbers), vertexOf: Int32Array.from(this.corners), vertices, faceOf: Int32Array.from(this.faces) };
+    const { count } = this;
+    return { points: this.points.slice(0, 9 * count), vertexOf: this.corners.slice(0, 3 * count), vertices, faceOf: this.faces.slice(0, count) };
   }
 }
 

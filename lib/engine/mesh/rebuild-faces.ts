@@ -1,0 +1,22 @@
+import type { Cage, FaceLabels } from '../cage';
+
+/** The cage with the given faces (its own numbers, ascending) and their corners; labels and lines go along. */
+export function rebuildFaces(cage: Cage, faces: readonly number[], cornersOf: (face: number) => readonly number[]): Cage {
+  const faceStarts = new Uint32Array(faces.length + 1);
+  const corners: number[] = [];
+  faces.forEach((face, i) => {
+    for (const vertex of cornersOf(face)) corners.push(vertex);
+    faceStarts[i + 1] = corners.length;
+  });
+  const pick = (labels: FaceLabels | null): FaceLabels | null => labels && { names: labels.names, labels: Int32Array.from(faces, (face) => labels.labels[face]) };
+  return {
+    ...cage,
+    faceStarts,
+    faceVertices: Uint32Array.from(corners),
+    groups: pick(cage.groups),
+    objects: pick(cage.objects),
+    materials: pick(cage.materials),
+    joints: pick(cage.joints),
+    faceLines: cage.faceLines && Uint32Array.from(faces, (face) => cage.faceLines?.[face] ?? 0),
+  };
+}
