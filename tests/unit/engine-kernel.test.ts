@@ -2,11 +2,14 @@ import { execFile } from 'node:child_process';
 import { promisify } from 'node:util';
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
-import { PatchBlock, scalarKernel } from '@/lib/engine/kernel/patch-block';
+import { PatchBlock } from '@/lib/engine/kernel/patch-block';
+import { PATCH_KINDS, type PatchKernel } from '@/lib/engine/kernel/patch-kinds';
+import { scalarKernel } from '@/lib/engine/kernel/scalar-kernel';
 import { vectorKernel } from '@/lib/engine/kernel/vector-kernel';
+import { TRIANGLE_NET } from '@/lib/engine/patches/box-spline';
 
 /** All 22 results of each patch, computed together. */
-function results(kernel: ReturnType<typeof scalarKernel>, patches: readonly Float64Array[], nodes: number, coarse: number): number[][] {
+function results(kernel: PatchKernel, patches: readonly Float64Array[], nodes: number, coarse: number): number[][] {
   const block = new PatchBlock(kernel);
   patches.forEach((values, i) => block.put(i, values, values[48], values[49], values[50]));
   block.run(patches.length, nodes, coarse);
@@ -20,28 +23,36 @@ function results(kernel: ReturnType<typeof scalarKernel>, patches: readonly Floa
 
 const patch = fc.array(fc.double({ min: -1e3, max: 1e3, noNaN: true }), { minLength: 51, maxLength: 51 }).map((values) => Float64Array.from(values));
 
-test('the vector kernel is there, so that the next test compares two things', () => {
-  expect(vectorKernel()).not.toBeNull();
+test.each(PATCH_KINDS)('the vector kernel of %s patches is there, so that the next test compares two things', (kind) => {
+  expect(vectorKernel(kind)).not.toBeNull();
 });
 
-test('the vector kernel and the one in JavaScript agree to the last bit', () => {
-  const vector = vectorKernel() ?? scalarKernel();
-  const scalar = scalarKernel();
-  fc.assert(fc.property(fc.array(patch, { minLength: 1, maxLength: 5 }), fc.integer({ min: 2, max: 8 }), (patches, nodes) => {
-    const ours = results(vector, patches, nodes, 4);
-    const theirs = results(scalar, patches, nodes, 4);
+test.each(PATCH_KINDS)('the vector kernel of %s patches and the one in JavaScript agree to the last bit', (kind) => {
+  const vector = vectorKernel(kind) ?? scalarKernel(kind);
+  const scalar = scalarKernel(kind);
+  fc.assert(fc.property(fc.array(patch, { minLength: 1, maxLength: 5 }), fc.integer({ min: 2, max: 9 }), fc.integer({ min: 2, max: 6 }), (patches, nodes, coarse) => {
+    const ours = results(vector, patches, nodes, coarse);
+    const theirs = results(scalar, patches, nodes, coarse);
     for (let i = 0; i < patches.length; i++) for (let k = 0; k < 22; k++) expect(Object.is(ours[i][k], theirs[i][k])).toBe(true);
   }), { numRuns: 200 });
 });
 
-test('a flat patch at height h over a unit square is the pyramid to its apex and the square itself', () => {
-  // Uniform B-splines reproduce linear functions: the net's points i − 1 give the parameter itself.
+/** Nets of the plane z = 3 over the unit square or its lower left half: B-splines and box splines reproduce linear functions, so lattice points stand for themselves. */
+const FLAT = {
+  bicubic: [0, 1, 2, 3].flatMap((row) => [0, 1, 2, 3].flatMap((column) => [row - 1, column - 1, 3])),
+  biquadratic: [0, 1, 2].flatMap((row) => [0, 1, 2].flatMap((column) => [row - 0.5, column - 0.5, 3])),
+  triangle: TRIANGLE_NET.flatMap(([a, b]) => [a, b, 3]),
+};
+
+test.each(PATCH_KINDS)('a flat %s patch at height h is the pyramid to its apex and the square or triangle itself', (kind) => {
   const net = new Float64Array(51);
-  for (let row = 0; row < 4; row++) for (let column = 0; column < 4; column++) net.set([row - 1, column - 1, 3], 3 * (4 * row + column));
-  for (const kernel of [vectorKernel() ?? scalarKernel(), scalarKernel()]) {
-    const [values] = results(kernel, [net], 7, 4);
-    // Volume h/3, ∫z dV = h²/4, ∫x dA = ½, ∫x² dA = ⅓, ∫z² dA = h².
-    for (const [index, expected] of [[0, 1], [3, 9 / 4], [10, 1], [11, 1 / 2], [14, 1 / 3], [16, 9], [20, 1], [21, 1]] as const) expect(Math.abs(values[index] - expected)).toBeLessThan(1e-14 * 9);
+  net.set(FLAT[kind]);
+  // Over an area A with first and second moments S, T: volume h A/3, ∫x dV = h S/4, ∫z dV = h² A/4, ∫x² dV = h T/5; ∫x dA = S, ∫x² dA = T, ∫z² dA = h² A.
+  const [area, first, second] = kind === 'triangle' ? [1 / 2, 1 / 6, 1 / 12] : [1, 1 / 2, 1 / 3];
+  for (const kernel of [vectorKernel(kind) ?? scalarKernel(kind), scalarKernel(kind)]) {
+    const [values] = results(kernel, [net], 9, 4);
+    const expected = [[0, area], [1, (3 * first) / 4], [3, (9 * area) / 4], [4, (3 * second) / 5], [10, area], [11, first], [14, second], [16, 9 * area], [20, area], [21, area]];
+    for (const [index, value] of expected) expect(Math.abs(values[index] - value)).toBeLessThan(1e-14 * 9);
   }
 });
 

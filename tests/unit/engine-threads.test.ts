@@ -1,7 +1,7 @@
 import { afterEach, expect, test } from 'vitest';
 import type { Cage } from '@/lib/engine/cage';
 import { setPatchTeam } from '@/lib/engine/kernel/patch-block';
-import { dismissTeam, teamKernel, teamMemory } from '@/lib/engine/kernel/patch-team';
+import { dismissTeam, teamKernels, teamMemory } from '@/lib/engine/kernel/patch-team';
 import { measureCage } from '@/lib/engine/measure';
 import type { MeasuredCage } from '@/lib/engine/measured';
 import { startHelper } from '../support/patch-helper';
@@ -35,7 +35,7 @@ test('one, two and three threads give the same bits as none beside', async () =>
   for (const helpers of [0, 1, 2]) {
     const memory = teamMemory();
     const workers = await Promise.all(Array.from({ length: helpers }, () => startHelper(memory)));
-    setPatchTeam(teamKernel(memory));
+    setPatchTeam(teamKernels(memory));
     for (let round = 0; round < 3; round++) expect(measure(cage)).toEqual(alone);
     setPatchTeam(null);
     dismissTeam(memory);

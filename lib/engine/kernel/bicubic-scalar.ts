@@ -3,10 +3,10 @@ import type { GaussRule } from '../patches/gauss-rule';
 // Written by lib/run/build-kernel.mjs, from the same operations as the vector kernel: change them there.
 
 /**
- * Ten solid and ten surface moments of the patch with the power coefficients `p`, about the point that they are relative to.
+ * Ten solid and ten surface moments of the bicubic patch with the power coefficients `p`, about the point that they are relative to.
  * Returns ∮ (|x n_x| + |y n_y| + |z n_z|)/3.
  */
-export function powerMoments(p: Float64Array, rule: GaussRule, solid: Float64Array, surface: Float64Array): number {
+export function bicubicPowerMoments(p: Float64Array, rule: GaussRule, solid: Float64Array, surface: Float64Array): number {
   const { nodes, weights } = rule;
   const count = nodes.length;
   let magnitude = 0;
@@ -246,7 +246,7 @@ export function powerMoments(p: Float64Array, rule: GaussRule, solid: Float64Arr
 }
 
 /** Area of the patch with the power coefficients `p` by a rule. */
-export function powerArea(p: Float64Array, rule: GaussRule): number {
+export function bicubicPowerArea(p: Float64Array, rule: GaussRule): number {
   const { nodes, weights } = rule;
   const count = nodes.length;
   let s = 0;

@@ -1,60 +1,49 @@
-import { netToPowers } from '../patches/bicubic-powers';
-import { gaussRule } from '../patches/gauss-rule';
-import { powerArea, powerMoments } from './bicubic-scalar';
-import { INPUT_STRIDE, MOST_PAIRS, OUTPUT_STRIDE, vectorKernel, type VectorKernel } from './vector-kernel';
+import { inputStride, NET_VALUES, OUTPUT_STRIDE, type PatchKernel, type PatchKind } from './patch-kinds';
+import { scalarKernel } from './scalar-kernel';
+import { vectorKernel } from './vector-kernel';
 
-const MAGNITUDE = 20;
-const COARSE_AREA = 21;
+const MAGNITUDE_AT = 40;
+const COARSE_AREA_AT = 42;
 
-const net = new Float64Array(48);
-const powers = new Float64Array(48);
-const solid = new Float64Array(10);
-const surface = new Float64Array(10);
-
-/** The kernel in JavaScript: the same layout, the same operations in the same order, so the same bits. */
-export function scalarKernel(): VectorKernel {
-  const input = new Float64Array(MOST_PAIRS * INPUT_STRIDE);
-  const output = new Float64Array(MOST_PAIRS * OUTPUT_STRIDE);
-  const runOne = (patch: number, count: number, coarseCount: number): void => {
-    const from = (patch >> 1) * INPUT_STRIDE + (patch & 1);
-    const to = (patch >> 1) * OUTPUT_STRIDE + (patch & 1);
-    for (let i = 0; i < 48; i++) net[i] = input[from + 2 * i];
-    netToPowers(net, powers);
-    for (let axis = 0; axis < 3; axis++) powers[axis] -= input[from + 2 * (48 + axis)];
-    output[to + 2 * MAGNITUDE] = powerMoments(powers, gaussRule(count), solid, surface);
-    for (let i = 0; i < 10; i++) {
-      output[to + 2 * i] = solid[i];
-      output[to + 2 * (10 + i)] = surface[i];
-    }
-    if (coarseCount > 0) output[to + 2 * COARSE_AREA] = powerArea(powers, gaussRule(coarseCount));
-  };
-  return {
-    pairs: MOST_PAIRS,
-    input,
-    output,
-    run(pairs, count, coarseCount) {
-      for (let patch = 0; patch < 2 * pairs; patch++) runOne(patch, count, coarseCount);
-    },
-  };
-}
-
-/** Bicubic patches that are computed together. What one block holds, the next one made in this thread overwrites. */
+/** Patches of one kind that are computed together. What one block holds, the next one made over the same kernel overwrites. */
 export class PatchBlock {
   /** Patches that it holds. */
   readonly size: number;
+  /** Control values of a patch. */
+  readonly values: number;
+  /** Where nets go: value i of patch k stands at `at(k) + 2 i`. */
+  readonly input: Float64Array;
+  /** Where results are: solid moment i of patch k at `resultAt(k) + 2 i`, surface moment i at `resultAt(k) + 20 + 2 i`. */
+  readonly output: Float64Array;
+  private readonly stride: number;
 
-  constructor(private readonly kernel: VectorKernel = currentKernel()) {
+  constructor(private readonly kernel: PatchKernel) {
     this.size = 2 * kernel.pairs;
+    this.values = NET_VALUES[kernel.kind];
+    this.input = kernel.input;
+    this.output = kernel.output;
+    this.stride = inputStride(kernel.kind);
   }
 
-  /** Puts a 4 × 4 net [(4 row + column) · 3 + axis] and the point that its moments shall be about. */
-  put(patch: number, values: Float64Array, ox: number, oy: number, oz: number): void {
-    const { input } = this.kernel;
-    const at = (patch >> 1) * INPUT_STRIDE + (patch & 1);
-    for (let i = 0; i < 48; i++) input[at + 2 * i] = values[i];
-    input[at + 96] = ox;
-    input[at + 98] = oy;
-    input[at + 100] = oz;
+  /** Where a patch's first value stands in `input`. */
+  at(patch: number): number {
+    return (patch >> 1) * this.stride + (patch & 1);
+  }
+
+  /** Puts a net (rows of x, y, z as the kind has them) and the point that its moments shall be about. */
+  put(patch: number, net: Float64Array, ox: number, oy: number, oz: number): void {
+    const { input, values } = this;
+    const at = this.at(patch);
+    for (let i = 0; i < values; i++) input[at + 2 * i] = net[i];
+    this.putOrigin(patch, ox, oy, oz);
+  }
+
+  /** Puts the point that a patch's moments shall be about. */
+  putOrigin(patch: number, ox: number, oy: number, oz: number): void {
+    const at = this.at(patch) + 2 * this.values;
+    this.input[at] = ox;
+    this.input[at + 2] = oy;
+    this.input[at + 4] = oz;
   }
 
   /** Computes the first `patches` by `nodes` Gauss nodes a direction; their areas by `coarseNodes` too, where that is not 0. */
@@ -62,42 +51,59 @@ export class PatchBlock {
     this.kernel.run((patches + 1) >> 1, nodes, coarseNodes);
   }
 
+  /** Where a patch's first result stands in `output`. */
+  resultAt(patch: number): number {
+    return (patch >> 1) * OUTPUT_STRIDE + (patch & 1);
+  }
+
   /** Reads a patch's moments; returns the magnitude that the volume's rounding error is relative to. */
   read(patch: number, solidOut: Float64Array, surfaceOut: Float64Array): number {
-    const { output } = this.kernel;
-    const at = (patch >> 1) * OUTPUT_STRIDE + (patch & 1);
+    const { output } = this;
+    const at = this.resultAt(patch);
     for (let i = 0; i < 10; i++) {
       solidOut[i] = output[at + 2 * i];
       surfaceOut[i] = output[at + 20 + 2 * i];
     }
-    return output[at + 2 * MAGNITUDE];
+    return this.magnitude(patch);
   }
 
+  /** The magnitude that the rounding error of a patch's volume is relative to. */
+  magnitude(patch: number): number {
+    return this.output[this.resultAt(patch) + MAGNITUDE_AT];
+  }
+
+  /** A patch's area by the coarse rule. */
   coarseArea(patch: number): number {
-    return this.kernel.output[(patch >> 1) * OUTPUT_STRIDE + (patch & 1) + 2 * COARSE_AREA];
+    return this.output[this.resultAt(patch) + COARSE_AREA_AT];
   }
 
   /** Reads a patch's net back. */
   net(patch: number, out: Float64Array): void {
-    const at = (patch >> 1) * INPUT_STRIDE + (patch & 1);
-    for (let i = 0; i < 48; i++) out[i] = this.kernel.input[at + 2 * i];
+    const { input, values } = this;
+    const at = this.at(patch);
+    for (let i = 0; i < values; i++) out[i] = input[at + 2 * i];
   }
 }
 
-let own: VectorKernel | undefined;
-let team: VectorKernel | null = null;
+const own = new Map<PatchKind, PatchKernel>();
+let team: ((kind: PatchKind) => PatchKernel) | null = null;
 
 /** The kernel of this thread alone. */
-export function ownKernel(): VectorKernel {
-  own ??= vectorKernel() ?? scalarKernel();
-  return own;
+export function ownKernel(kind: PatchKind): PatchKernel {
+  let kernel = own.get(kind);
+  if (kernel === undefined) {
+    kernel = vectorKernel(kind) ?? scalarKernel(kind);
+    own.set(kind, kernel);
+  }
+  return kernel;
 }
 
-/** Lets blocks of patches in this thread be computed by a team of threads from now on, or (null) by this thread alone again. */
-export function setPatchTeam(kernel: VectorKernel | null): void {
-  team = kernel;
+/** Lets blocks of patches in this thread be computed by a team of threads (see `teamKernels`) from now on, or (null) by this thread alone again. */
+export function setPatchTeam(kernels: ((kind: PatchKind) => PatchKernel) | null): void {
+  team = kernels;
 }
 
-function currentKernel(): VectorKernel {
-  return team ?? ownKernel();
+/** The kernel that computes blocks of regular patches: the team's where there is one. */
+export function currentKernel(kind: PatchKind): PatchKernel {
+  return team === null ? ownKernel(kind) : team(kind);
 }

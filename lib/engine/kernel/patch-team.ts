@@ -1,5 +1,5 @@
 import { ownKernel } from './patch-block';
-import { INPUT_STRIDE, MOST_PAIRS, OUTPUT_STRIDE, type VectorKernel } from './vector-kernel';
+import { inputStride, MOST_PAIRS, OUTPUT_STRIDE, PATCH_KINDS, type PatchKernel, type PatchKind } from './patch-kinds';
 
 /** Blocks of MOST_PAIRS pairs that one round holds. */
 const ROUND_BLOCKS = 32;
@@ -12,10 +12,11 @@ const PAIRS = 3;
 const NODES = 4;
 const COARSE_NODES = 5;
 const STOP = 6;
+const KIND = 7;
 const CELLS = 8;
 
 const INPUT_AT = 8 * CELLS;
-const OUTPUT_AT = INPUT_AT + 8 * ROUND_BLOCKS * MOST_PAIRS * INPUT_STRIDE;
+const OUTPUT_AT = INPUT_AT + 8 * ROUND_BLOCKS * MOST_PAIRS * Math.max(...PATCH_KINDS.map(inputStride));
 const BYTES = OUTPUT_AT + 8 * ROUND_BLOCKS * MOST_PAIRS * OUTPUT_STRIDE;
 
 interface Shared {
@@ -27,7 +28,7 @@ interface Shared {
 function views(memory: SharedArrayBuffer): Shared {
   return {
     cells: new Int32Array(memory, 0, CELLS),
-    input: new Float64Array(memory, INPUT_AT, ROUND_BLOCKS * MOST_PAIRS * INPUT_STRIDE),
+    input: new Float64Array(memory, INPUT_AT, (OUTPUT_AT - INPUT_AT) / 8),
     output: new Float64Array(memory, OUTPUT_AT, ROUND_BLOCKS * MOST_PAIRS * OUTPUT_STRIDE),
   };
 }
@@ -38,18 +39,20 @@ export function teamMemory(): SharedArrayBuffer {
 }
 
 /**
- * A kernel whose blocks are computed by this thread and by all that help, for `setPatchTeam`. Each patch is computed alone and the caller adds up in its
- * own order, so the numbers do not depend on how many help, to the last bit. It waits for the helpers: not for a browser's main thread.
+ * Kernels whose blocks are computed by this thread and by all that help, for `setPatchTeam`. Each patch is computed alone and the caller adds up in its
+ * own order, so the numbers do not depend on how many help, to the last bit. They wait for the helpers: not for a browser's main thread.
  */
-export function teamKernel(memory: SharedArrayBuffer): VectorKernel {
+export function teamKernels(memory: SharedArrayBuffer): (kind: PatchKind) => PatchKernel {
   const shared = views(memory);
   const { cells } = shared;
-  return {
+  return (kind) => ({
+    kind,
     pairs: ROUND_BLOCKS * MOST_PAIRS,
     input: shared.input,
     output: shared.output,
     run(pairs, count, coarseCount) {
       const blocks = Math.ceil(pairs / MOST_PAIRS);
+      Atomics.store(cells, KIND, PATCH_KINDS.indexOf(kind));
       Atomics.store(cells, PAIRS, pairs);
       Atomics.store(cells, NODES, count);
       Atomics.store(cells, COARSE_NODES, coarseCount);
@@ -60,7 +63,7 @@ export function teamKernel(memory: SharedArrayBuffer): VectorKernel {
       takeBlocks(shared);
       for (let done = Atomics.load(cells, DONE); done < blocks; done = Atomics.load(cells, DONE)) Atomics.wait(cells, DONE, done);
     },
-  };
+  });
 }
 
 /** Helps a team in this thread until it is dismissed. */
@@ -83,12 +86,13 @@ export function dismissTeam(memory: SharedArrayBuffer): void {
 }
 
 function takeBlocks({ cells, input, output }: Shared): void {
-  const kernel = ownKernel();
   // Blocks are counted down: who gets one has it in the round that is under way, since no round ends before all its blocks are done.
   for (let left = Atomics.sub(cells, LEFT, 1); left > 0; left = Atomics.sub(cells, LEFT, 1)) {
+    const kernel = ownKernel(PATCH_KINDS[Atomics.load(cells, KIND)]);
+    const stride = inputStride(kernel.kind);
     const first = (left - 1) * MOST_PAIRS;
     const pairs = Math.min(MOST_PAIRS, Atomics.load(cells, PAIRS) - first);
-    kernel.input.set(input.subarray(first * INPUT_STRIDE, (first + pairs) * INPUT_STRIDE));
+    kernel.input.set(input.subarray(first * stride, (first + pairs) * stride));
     kernel.run(pairs, Atomics.load(cells, NODES), Atomics.load(cells, COARSE_NODES));
     output.set(kernel.output.subarray(0, pairs * OUTPUT_STRIDE), first * OUTPUT_STRIDE);
     Atomics.add(cells, DONE, 1);

@@ -1,72 +1,80 @@
 import { gaussRule } from '../patches/gauss-rule';
-import { BICUBIC_BYTES } from './bicubic-bytes';
+import { KERNEL_BYTES } from './kernel-bytes';
+import { ALONG_EXTRA, inputStride, MOST_NODES, MOST_PAIRS, OUTPUT_STRIDE, type PatchKernel, type PatchKind } from './patch-kinds';
+import { TRIANGLE_POWERS } from './triangle-powers';
 
-/** Pairs of patches that the kernel's memory holds. */
-export const MOST_PAIRS = 256;
-
-/** Doubles per pair and where its parts begin: 48 values of the net and 3 of the origin; 10 solid, 10 surface moments, magnitude, coarse area. Two lanes each. */
-export const INPUT_STRIDE = 102;
-export const OUTPUT_STRIDE = 44;
+/** Doubles of the kernel's memory. Gauss rules have their places first: nodes, then weights, from double RULE_STRIDE · count on; then the triangle's table. */
+const RULE_STRIDE = 2 * (MOST_NODES + 1);
+const TABLE_AT = RULE_STRIDE * (MOST_NODES + 2);
 const INPUT_AT = 512;
-const OUTPUT_AT = INPUT_AT + MOST_PAIRS * INPUT_STRIDE;
-const SCRATCH_AT = OUTPUT_AT + MOST_PAIRS * OUTPUT_STRIDE;
 
-/** Gauss rules of up to this many nodes have their place in the kernel's memory: nodes, then weights, from double RULE_STRIDE · count on. */
-const MOST_NODES = 8;
-const RULE_STRIDE = 2 * MOST_NODES;
+/** What the WebAssembly module exports per kind. Byte addresses. */
+type Run = (
+  pairs: number, input: number, output: number, count: number, along: number, nodes: number,
+  coarseCount: number, coarseAlong: number, coarseNodes: number, table: number, scratch: number,
+) => void;
 
-/** What the WebAssembly module exports. Byte addresses. */
-type Run = (pairs: number, input: number, output: number, count: number, nodes: number, coarseCount: number, coarseNodes: number, scratch: number) => void;
+const EXPORTS: Readonly<Record<PatchKind, string>> = { bicubic: 'runBicubic', biquadratic: 'runBiquadratic', triangle: 'runTriangle' };
 
-/** A kernel of patches in pairs with its memory. */
-export interface VectorKernel {
-  /** Pairs that the memory holds. */
-  pairs: number;
-  /** Nets and origins of the pairs, INPUT_STRIDE apart. */
-  input: Float64Array;
-  /** Results of the pairs, OUTPUT_STRIDE apart. */
-  output: Float64Array;
-  /** Computes the first `pairs` pairs with `count` Gauss nodes a direction, the coarse area with `coarseCount` (0: not at all). Counts up to MOST_NODES. */
-  run(pairs: number, count: number, coarseCount: number): void;
-}
+let code: WebAssembly.Module | null | undefined;
+const kernels = new Map<PatchKind, PatchKernel | null>();
 
-let kernel: VectorKernel | null | undefined;
-
-/** The vector kernel, made on first need; null where this machine has no WebAssembly with SIMD or forbids it. */
-export function vectorKernel(): VectorKernel | null {
-  if (kernel === undefined) kernel = makeKernel();
+/** The vector kernel of a kind, made on first need; null where this machine has no WebAssembly with SIMD or forbids it. */
+export function vectorKernel(kind: PatchKind): PatchKernel | null {
+  let kernel = kernels.get(kind);
+  if (kernel === undefined) {
+    kernel = makeKernel(kind);
+    kernels.set(kind, kernel);
+  }
   return kernel;
 }
 
-function makeKernel(): VectorKernel | null {
+function compiled(): WebAssembly.Module | null {
+  if (code !== undefined) return code;
   try {
-    const bytes = Uint8Array.from(atob(BICUBIC_BYTES), (letter) => letter.charCodeAt(0));
-    const { exports } = new WebAssembly.Instance(new WebAssembly.Module(bytes));
-    const { memory, run } = exports;
+    code = new WebAssembly.Module(Uint8Array.from(atob(KERNEL_BYTES), (letter) => letter.charCodeAt(0)));
+  } catch {
+    code = null;
+  }
+  return code;
+}
+
+/** An instance of its own per kind, so that each has its own memory. */
+function makeKernel(kind: PatchKind): PatchKernel | null {
+  const made = compiled();
+  if (made === null) return null;
+  try {
+    const { memory, [EXPORTS[kind]]: run } = new WebAssembly.Instance(made).exports;
     if (!(memory instanceof WebAssembly.Memory) || typeof run !== 'function') return null;
-    return wrap(new Float64Array(memory.buffer), run as Run);
+    return wrap(kind, new Float64Array(memory.buffer), run as Run);
   } catch {
     return null;
   }
 }
 
-function wrap(doubles: Float64Array, run: Run): VectorKernel {
-  const ruleAt = (count: number): number => 8 * RULE_STRIDE * count;
+function wrap(kind: PatchKind, doubles: Float64Array, run: Run): PatchKernel {
+  const extra = ALONG_EXTRA[kind];
+  const outputAt = INPUT_AT + MOST_PAIRS * inputStride(kind);
+  const scratchAt = outputAt + MOST_PAIRS * OUTPUT_STRIDE;
+  doubles.set(TRIANGLE_POWERS, TABLE_AT);
   // Put anew each time, so that the kernel never works with a copy of its own: a rule gone wrong must show in the numbers and the estimate alike.
-  const putRule = (count: number): void => {
-    if (count === 0) return;
+  const putRule = (count: number): number => {
     const { nodes, weights } = gaussRule(count);
     doubles.set(nodes, RULE_STRIDE * count);
     doubles.set(weights, RULE_STRIDE * count + count);
+    return 8 * RULE_STRIDE * count;
   };
   return {
+    kind,
     pairs: MOST_PAIRS,
-    input: doubles.subarray(INPUT_AT, OUTPUT_AT),
-    output: doubles.subarray(OUTPUT_AT, SCRATCH_AT),
+    input: doubles.subarray(INPUT_AT, outputAt),
+    output: doubles.subarray(outputAt, scratchAt),
     run(pairs, count, coarseCount) {
-      putRule(count);
-      putRule(coarseCount);
-      run(pairs, 8 * INPUT_AT, 8 * OUTPUT_AT, count, ruleAt(count), coarseCount, ruleAt(coarseCount), 8 * SCRATCH_AT);
+      const nodes = putRule(count);
+      const along = extra === 0 ? nodes : putRule(count + extra);
+      const coarseNodes = coarseCount === 0 ? nodes : putRule(coarseCount);
+      const coarseAlong = extra === 0 || coarseCount === 0 ? coarseNodes : putRule(coarseCount + extra);
+      run(pairs, 8 * INPUT_AT, 8 * outputAt, count, along, nodes, coarseCount, coarseAlong, coarseNodes, 8 * TABLE_AT, 8 * scratchAt);
     },
   };
 }

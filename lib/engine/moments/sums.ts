@@ -16,11 +16,11 @@ export class MomentSums {
     this.magnitudes = new Float64Array(bodies);
   }
 
-  /** Adds the ten values that start at `offset`. */
-  add(body: number, values: Float64Array, offset: number): void {
+  /** Adds the ten values that start at `offset`, `stride` apart. */
+  add(body: number, values: Float64Array, offset: number, stride = 1): void {
     const { sums, carries } = this;
-    let at = body * MOMENTS;
-    for (let i = offset; i < offset + MOMENTS; i++, at++) {
+    const from = body * MOMENTS;
+    for (let at = from, i = offset; at < from + MOMENTS; at++, i += stride) {
       const value = values[i];
       const sum = sums[at];
       const total = sum + value;

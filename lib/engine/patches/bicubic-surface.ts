@@ -1,4 +1,4 @@
-import { powerArea } from '../kernel/bicubic-scalar';
+import { bicubicPowerArea } from '../kernel/bicubic-scalar';
 import { netToPowers } from './bicubic-powers';
 import { gaussRule } from './gauss-rule';
 
@@ -21,7 +21,7 @@ const square = new Float64Array(10);
  * `coarseArea` is the area by COARSE_NODES (see `bicubicArea`). Returns the estimated error of the area.
  */
 export function mendSurfaceMoments(net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array, coarseArea: number): number {
-  const error = areaError(surface, coarseArea);
+  const error = areaError(surface[0], coarseArea);
   const tolerance = AREA_TOLERANCE * surface[0];
   if (!(error > tolerance)) return error;
   netToPowers(net, powers);
@@ -33,19 +33,17 @@ export function mendSurfaceMoments(net: Float64Array, ox: number, oy: number, oz
   return quarter(0, 0, 1, Math.abs(area - coarseArea), tolerance, 1, surface);
 }
 
-/** Estimated error of an area that came with that of COARSE_NODES. */
-export function areaError(surface: Float64Array, coarseArea: number): number {
-  return estimate(surface[0], coarseArea);
-}
-
 /** Area of a bicubic patch by COARSE_NODES a direction. */
 export function bicubicArea(net: Float64Array): number {
   netToPowers(net, powers);
-  return powerArea(powers, COARSE);
+  return bicubicPowerArea(powers, COARSE);
 }
 
-/** For an analytic integrand the error of n nodes falls as ρ^−2n, so that of 7 is that of 4 to the power 7/4; 3/2 leaves room. */
-function estimate(fine: number, coarse: number): number {
+/**
+ * Estimated error of an area that came with that of a coarser rule. For an analytic integrand the error of n nodes falls as ρ^−2n, so that of 7 is that of 4
+ * to the power 7/4; 3/2 leaves room.
+ */
+export function areaError(fine: number, coarse: number): number {
   if (!(fine > 0)) return 0;
   const change = Math.min(1, Math.abs(fine - coarse) / fine);
   return fine * change * Math.sqrt(change);
@@ -70,7 +68,7 @@ function quarter(u: number, v: number, size: number, before: number, tolerance: 
     momentsOf(cu, cv, size / 2, square);
     moments.set(square, 10 * i);
     const coarse = areaOf(cu, cv, size / 2);
-    errors[i] = estimate(square[0], coarse);
+    errors[i] = areaError(square[0], coarse);
     changes[i] = Math.abs(square[0] - coarse);
   }
   const goOn = depth < PATIENCE || (depth < MOST_QUARTERINGS && changes[0] + changes[1] + changes[2] + changes[3] < (1 - LEAST_GAIN) * before);

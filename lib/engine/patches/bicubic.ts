@@ -1,4 +1,4 @@
-import { powerMoments } from '../kernel/bicubic-scalar';
+import { bicubicPowerMoments } from '../kernel/bicubic-scalar';
 import { netToPowers } from './bicubic-powers';
 import type { GaussRule } from './gauss-rule';
 
@@ -15,5 +15,5 @@ export function bicubicMoments(net: Float64Array, ox: number, oy: number, oz: nu
   powers[0] -= ox;
   powers[1] -= oy;
   powers[2] -= oz;
-  return powerMoments(powers, rule, solid, surface);
+  return bicubicPowerMoments(powers, rule, solid, surface);
 }

@@ -6,7 +6,7 @@ import { approximateLimit, fillChildNet, refineFan } from './catmull-clark-fan';
 import { fillNet } from './catmull-clark-net';
 import type { FanKit } from './fan-kit';
 import { spokeAt, type FanState } from './fan-state';
-import type { LevelMesh } from './level-mesh';
+import { faceSideAt, type LevelMesh } from './level-mesh';
 
 const net = new Float64Array(48);
 
@@ -39,6 +39,7 @@ let block: PatchBlock | undefined;
 export const CATMULL_CLARK_KIT: FanKit = {
   sides: 4,
   arriving: 3,
+  sideAt: faceSideAt,
   mostNodes: 7,
   fewestNodes: 3,
   smoothShrinkage,
@@ -50,7 +51,7 @@ export const CATMULL_CLARK_KIT: FanKit = {
   fillChild: fillChildNet,
   // This thread's own kernel even within a team: a fan has too few patches to share.
   get block() {
-    block ??= new PatchBlock(ownKernel());
+    block ??= new PatchBlock(ownKernel('bicubic'));
     return block;
   },
   moments: (values, ox, oy, oz, nodes, solid, surface) => bicubicMoments(values, ox, oy, oz, gaussRule(nodes), solid, surface),

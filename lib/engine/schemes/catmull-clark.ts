@@ -1,4 +1,5 @@
 import { RegularPatches } from '../kernel/regular-patches';
+import { BICUBIC_RULE } from '../kernel/regular-rules';
 import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
 import { classifyVertices, isIsolated, isRegularFace, QUAD_COUNTS } from './classify-vertices';
@@ -24,7 +25,7 @@ const net = new Float64Array(48);
  */
 export function integrateCatmullClark(cage: LevelMesh, rules: RefinementRules, origins: Float64Array, sums: LimitSums): boolean {
   let mesh = cage;
-  const patches = new RegularPatches(origins, sums);
+  const patches = new RegularPatches(BICUBIC_RULE, origins, sums);
   for (let level = 0; level <= MOST_LEVELS; level++) {
     const { kinds, fans } = classifyVertices(mesh, QUAD_COUNTS);
     let left = 0;

@@ -1,89 +1,99 @@
-import { nextHalfEdge } from '../mesh/topology';
-import type { LimitSums } from '../moments/limit-sums';
+import type { Boundary } from '../cage';
 import { RegularPatches } from '../kernel/regular-patches';
-import { collectRing, SMOOTH_CENTRE, type Fans } from './classify-vertices';
-import { DOO_SABIN_KIT, raiseNet } from './doo-sabin-fan';
+import type { LimitSums } from '../moments/limit-sums';
+import { SMOOTH_CENTRE, type Fans } from './classify-vertices';
+import { joinSpokes } from './doo-sabin-borders';
+import { DOO_SABIN_KIT } from './doo-sabin-fan';
+import { dooSabinCage, type DooSabinMesh } from './doo-sabin-mesh';
+import { addPatch, readRings, type DooSabinRings } from './doo-sabin-patches';
 import { refineDooSabin } from './doo-sabin-refine';
 import { integrateFan } from './integrate-fan';
 import type { LevelMesh } from './level-mesh';
 
-/** After the first step n-gons lie apart by one quad, after the second by three, which is enough. */
+/** After the first step n-gons lie apart by one quad, after the second by three, which is enough; the border is regular from the second step on. */
 const MOST_LEVELS = 6;
 
-const small = new Float64Array(27);
-const net = new Float64Array(48);
-
 /**
- * Integrates the Doo-Sabin limit surface of the closed live pieces of `cage` about the bodies' origins. One refinement makes each new vertex belong to one
- * face of the cage; a vertex among four quads is an exact biquadratic patch, an n-gon a closed level sequence. Returns false where it did not come apart.
+ * Integrates the Doo-Sabin limit surface of the live faces of `cage` about the bodies' origins (x, y, z each, in the cage's frame). A vertex among four
+ * quads is an exact biquadratic patch, an n-gon among such vertices a closed level sequence; the rest is refined locally. One refinement makes each
+ * vertex belong to one face of the cage, so that a face's region is bounded by sides of patches; it reaches, with the quarters of the patches at its corners,
+ * from the middles of its vertices' faces to those of its edges'. Open borders follow the doubled border of [Doo 1978], see `refineDooSabin`: the limit ends
+ * in the quadratic B-spline of the border polygon, rounding corners (`edge-only`) or through them (`edge-and-corner`). Sharpness is not read.
+ * Returns false where the cage could not be resolved.
  */
-export function integrateDooSabin(cage: LevelMesh, origins: Float64Array, sums: LimitSums): boolean {
-  let mesh = refineDooSabin(cage, true);
+export function integrateDooSabin(cage: LevelMesh, boundary: Boundary, origins: Float64Array, sums: LimitSums): boolean {
+  const base = dooSabinCage(cage, boundary);
   const patches = new RegularPatches(origins, sums);
-  for (let level = 1; level <= MOST_LEVELS; level++) {
-    const oddCorners = markOddFaces(mesh);
-    let left = addRegularVertices(mesh, oddCorners, patches);
+  let mesh = base;
+  for (let level = 0; level <= MOST_LEVELS; level++) {
+    const rings = readRings(mesh);
+    const bodies = level === 0 ? bodiesOfVertices(mesh) : mesh.bodyOf;
+    const pending = level === 0 ? bodies.map((body) => (body === NO_BODY ? 0 : 1)) : mesh.live;
+    const waiting = Uint8Array.from(pending);
+    let left = 0;
+    for (let vertex = 0; vertex < mesh.vertices; vertex++) {
+      if (waiting[vertex] === 0) continue;
+      if (bodies[vertex] >= 0 && addPatch(mesh, rings, vertex, bodies[vertex], patches, sums.curves)) waiting[vertex] = 0;
+      else left++;
+    }
     patches.flush();
-    for (let face = 0; face < mesh.faces && left > 0; face++) left -= addOddFace(mesh, face, oddCorners, origins, sums);
-    if (left === 0) return true;
-    mesh = refineDooSabin(mesh, false);
+    const keep = Uint8Array.from(waiting);
+    for (let face = 0; face < mesh.faces && left > 0; face++) left -= addOddFace(mesh, rings, bodies, face, waiting, keep, origins, sums);
+    if (left === 0) {
+      joinSpokes(base, sums.curves);
+      return true;
+    }
+    mesh = refineDooSabin(mesh, waiting, keep);
   }
   return false;
 }
 
-/** Number of faces with other than four corners around each vertex. */
-function markOddFaces(mesh: LevelMesh): Uint8Array {
-  const odd = new Uint8Array(mesh.vertices);
-  for (let h = 0; h < mesh.vertexOf.length; h++) {
-    const face = mesh.faceOf[h];
-    if (mesh.starts[face + 1] - mesh.starts[face] !== 4) odd[mesh.vertexOf[h]]++;
-  }
-  return odd;
-}
+/** Body of a vertex without live faces, and of one whose faces are not all live and of one body. */
+const NO_BODY = -2;
+const SEVERAL_BODIES = -1;
 
-/** Hands the vertices among four quads to `patches`; returns how many live ones are left. */
-function addRegularVertices(mesh: LevelMesh, odd: Uint8Array, patches: RegularPatches): number {
-  const ring: number[] = [];
-  let left = 0;
-  const seen = new Uint8Array(mesh.vertices);
-  for (let h = 0; h < mesh.vertexOf.length; h++) {
-    const vertex = mesh.vertexOf[h];
-    if (mesh.live[vertex] === 0 || seen[vertex] === 1) continue;
-    seen[vertex] = 1;
-    if (odd[vertex] > 0) {
-      left++;
-      continue;
+/** The body that all faces at each of the cage's vertices are of. */
+function bodiesOfVertices(mesh: DooSabinMesh): Int32Array {
+  const bodies = new Int32Array(mesh.vertices).fill(NO_BODY);
+  const anyDead = new Uint8Array(mesh.vertices);
+  for (let face = 0; face < mesh.faces; face++) {
+    const body = mesh.bodyOf[face];
+    for (let h = mesh.starts[face]; h < mesh.starts[face + 1]; h++) {
+      const vertex = mesh.vertexOf[h];
+      if (mesh.live[face] === 0) anyDead[vertex] = 1;
+      else if (bodies[vertex] === NO_BODY) bodies[vertex] = body;
+      else if (bodies[vertex] !== body) bodies[vertex] = SEVERAL_BODIES;
     }
-    collectRing(mesh, h, ring);
-    put(mesh, 4, vertex);
-    for (let i = 0; i < 4; i++) {
-      const next = nextHalfEdge(mesh, ring[i]);
-      put(mesh, NEIGHBOURS[i], mesh.vertexOf[next]);
-      put(mesh, DIAGONALS[i], mesh.vertexOf[nextHalfEdge(mesh, next)]);
-    }
-    raiseNet(small, net);
-    patches.add(mesh.bodyOf[vertex], net);
-    mesh.live[vertex] = 0;
   }
-  return left;
+  for (let vertex = 0; vertex < mesh.vertices; vertex++) if (anyDead[vertex] === 1 && bodies[vertex] >= 0) bodies[vertex] = SEVERAL_BODIES;
+  return bodies;
 }
 
-/** Net entries (3 row + column) of the neighbours and diagonals, counter-clockwise. */
-const NEIGHBOURS = [7, 5, 1, 3];
-const DIAGONALS = [8, 2, 0, 6];
-
-function put(mesh: LevelMesh, entry: number, vertex: number): void {
-  small.set(mesh.positions.subarray(3 * vertex, 3 * vertex + 3), 3 * entry);
-}
-
-/** Integrates an n-gon whose corners have quads only besides; returns how many live vertices that settles. */
-function addOddFace(mesh: LevelMesh, face: number, odd: Uint8Array, origins: Float64Array, sums: LimitSums): number {
+/**
+ * Integrates an n-gon whose corners have quads only besides; returns how many waiting vertices that settles. Where it cannot be done yet, all corners are
+ * kept: those of a body that is not measured too, since the others need them.
+ */
+function addOddFace(
+  mesh: DooSabinMesh, rings: DooSabinRings, bodies: Int32Array, face: number, waiting: Uint8Array, keep: Uint8Array, origins: Float64Array, sums: LimitSums,
+): number {
   const start = mesh.starts[face];
   const n = mesh.starts[face + 1] - start;
   if (n === 4) return 0;
-  for (let h = start; h < start + n; h++) if (mesh.live[mesh.vertexOf[h]] === 0 || odd[mesh.vertexOf[h]] !== 1) return 0;
-  const fans: Fans = { starts: [0, n], corners: Array.from({ length: n }, (_, i) => start + i), closed: [true], sharpFirst: [false], centre: [SMOOTH_CENTRE] };
-  integrateFan(DOO_SABIN_KIT, mesh, fans, 0, origins, sums);
-  for (let h = start; h < start + n; h++) mesh.live[mesh.vertexOf[h]] = 0;
-  return n;
+  let settled = 0;
+  let apart = true;
+  for (let h = start; h < start + n; h++) {
+    const vertex = mesh.vertexOf[h];
+    settled += waiting[vertex];
+    if (rings.odd[vertex] !== 1 || rings.border[vertex] === 1 || rings.faces[vertex] !== 4 || bodies[vertex] < 0) apart = false;
+  }
+  if (settled === 0) return 0;
+  if (apart) {
+    const fans: Fans = { starts: [0, n], corners: Array.from({ length: n }, (_, i) => start + i), closed: [true], sharpFirst: [false], centre: [SMOOTH_CENTRE] };
+    integrateFan(DOO_SABIN_KIT, mesh, fans, 0, origins, sums);
+  }
+  for (let h = start; h < start + n; h++) {
+    if (apart) waiting[mesh.vertexOf[h]] = 0;
+    keep[mesh.vertexOf[h]] = apart ? 0 : 1;
+  }
+  return apart ? settled : 0;
 }

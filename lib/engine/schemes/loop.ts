@@ -1,7 +1,7 @@
+import { RegularPatches } from '../kernel/regular-patches';
+import { TRIANGLE_RULE } from '../kernel/regular-rules';
 import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
-import { MOMENTS } from '../moments/sums';
-import { boxSplineMoments, mendTriangleSurface, TRIANGLE_NODES } from '../patches/box-spline-moments';
 import { classifyVertices, isIsolated, isRegularFace, TRIANGLE_COUNTS } from './classify-vertices';
 import { integrateFan } from './integrate-fan';
 import type { LevelMesh } from './level-mesh';
@@ -15,8 +15,6 @@ const MOST_LEVELS = 16;
 
 const NO_SHIFT = new Float64Array(3);
 const net = new Float64Array(36);
-const solid = new Float64Array(MOMENTS);
-const surface = new Float64Array(MOMENTS);
 
 /**
  * Integrates the Loop limit surface of the live faces of `cage`, all triangles, about the bodies' origins. Regular triangles are exact quartic box splines,
@@ -24,16 +22,18 @@ const surface = new Float64Array(MOMENTS);
  */
 export function integrateLoop(cage: LevelMesh, rules: RefinementRules, origins: Float64Array, sums: LimitSums): boolean {
   let mesh = cage;
+  const patches = new RegularPatches(TRIANGLE_RULE, origins, sums);
   for (let level = 0; level <= MOST_LEVELS; level++) {
     const { kinds, fans } = classifyVertices(mesh, TRIANGLE_COUNTS);
     let left = 0;
     for (let face = 0; face < mesh.faces; face++) {
       if (mesh.live[face] === 0) continue;
       if (isRegularFace(mesh, TRIANGLE_COUNTS, kinds, face, -1)) {
-        addRegularTriangle(mesh, face, origins, sums, sums.curves);
+        addRegularTriangle(mesh, face, patches, sums.curves);
         mesh.live[face] = 0;
       } else left++;
     }
+    patches.flush();
     for (let fan = 0; fan < fans.centre.length && left > 0; fan++) {
       if (!isIsolated(mesh, TRIANGLE_COUNTS, kinds, fans, fan)) continue;
       integrateFan(LOOP_KIT, mesh, fans, fan, origins, sums);
@@ -46,15 +46,10 @@ export function integrateLoop(cage: LevelMesh, rules: RefinementRules, origins: 
   return false;
 }
 
-function addRegularTriangle(mesh: LevelMesh, face: number, origins: Float64Array, sums: LimitSums, curves: BorderCurves): void {
-  const body = mesh.bodyOf[face];
+function addRegularTriangle(mesh: LevelMesh, face: number, patches: RegularPatches, curves: BorderCurves): void {
   const start = mesh.starts[face];
-  const [ox, oy, oz] = origins.subarray(3 * body, 3 * body + 3);
   fillTriangleNet(mesh, start, net);
-  sums.solid.magnitudes[body] += boxSplineMoments(net, ox, oy, oz, TRIANGLE_NODES, solid, surface);
-  sums.surfaceError[body] += mendTriangleSurface(net, ox, oy, oz, surface);
-  sums.solid.add(body, solid, 0);
-  sums.surface.add(body, surface, 0);
+  patches.add(mesh.bodyOf[face], net);
   for (let side = 0; side < 3; side++) {
     const edge = mesh.borderOf[start + side];
     if (edge >= 0) addTriangleSide(curves, net, side, edge, 1, mesh.borderFrom[start + side], 2 ** -mesh.level, NO_SHIFT);
