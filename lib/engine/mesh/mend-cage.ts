@@ -11,7 +11,7 @@ import { weldVertices } from './weld-vertices';
  */
 export function mendCage(cage: Cage, options: MeasureOptions, findings: FindingList): { cage: Cage; joined: Int32Array } {
   let mended = cage;
-  let joined = new Int32Array(0);
+  let joined: Int32Array = new Int32Array(0);
   if (options.weld === true) {
     const weld = weldVertices(mended);
     joined = weld.joined;
