@@ -12,10 +12,6 @@ function isSemiSharp(mesh: LevelMesh, h: number): boolean {
   return mesh.twin[h] >= 0 && mesh.edgeSharpness[h] > 0 && mesh.edgeSharpness[h] < Infinity;
 }
 
-function isPlain(mesh: LevelMesh, h: number): boolean {
-  return mesh.twin[h] >= 0 && mesh.edgeSharpness[h] === 0;
-}
-
 /** Whether a crease runs straight on, equally sharp, through the start of its half-edge `h`: a vertex of four quads that nothing else touches. */
 function runsThrough(mesh: LevelMesh, h: number): boolean {
   if (mesh.vertexSharpness[mesh.vertexOf[h]] !== 0) return false;
@@ -52,11 +48,8 @@ export function stripSide(mesh: LevelMesh, kinds: Uint8Array, face: number): num
   if (mesh.starts[face + 1] - start !== 4) return -1;
   for (let h = start; h < start + 4; h++) {
     if (!isConstantCrease(mesh, h)) continue;
-    const side = nextHalfEdge(mesh, h);
-    const far = nextHalfEdge(mesh, side);
-    const back = nextHalfEdge(mesh, far);
-    if (!isPlain(mesh, side) || !isPlain(mesh, back)) return -1;
-    return isConstantCrease(mesh, far) || (isSettled(kinds[far]) && isSettled(kinds[back])) ? h : -1;
+    const far = nextHalfEdge(mesh, nextHalfEdge(mesh, h));
+    return isConstantCrease(mesh, far) || (isSettled(kinds[far]) && isSettled(kinds[nextHalfEdge(mesh, far)])) ? h : -1;
   }
   return -1;
 }
