@@ -46,7 +46,7 @@ describe('the engine’s own error estimate follows', () => {
     expect(estimate).toBeGreaterThanOrEqual(error);
   });
 
-  it.each([3, 6, 8])('a tail cut after %i levels', (levels) => {
+  it.each([2, 4, 6])('a tail cut after %i levels', (levels) => {
     const { weights } = fanTable(CATMULL_CLARK_KIT, makeFanState(3, true, false, SMOOTH_CENTRE));
     for (let k = levels; k < weights.length; k++) spoil(weights, k, 0);
     const { error, estimate } = judge('cube');

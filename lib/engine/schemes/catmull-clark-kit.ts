@@ -1,4 +1,5 @@
 import { ownKernel, PatchBlock } from '../kernel/patch-block';
+import { BICUBIC_RULE } from '../kernel/regular-rules';
 import { bicubicMoments } from '../patches/bicubic';
 import { bicubicArea, mendSurfaceMoments } from '../patches/bicubic-surface';
 import { gaussRule } from '../patches/gauss-rule';
@@ -58,4 +59,9 @@ export const CATMULL_CLARK_KIT: FanKit = {
   mendSurface: (values, ox, oy, oz, surface) => mendSurfaceMoments(values, ox, oy, oz, surface, bicubicArea(values)),
   addSide: (curves, values, side, edge, weight, from, share, shift) => curves.addSide(values, side, edge, weight, from, share, shift),
   outerSides: [[0, 1, 1, 0], [1, 1, 1, 1], [1, 2, 2, 0], [2, 2, 2, 1]],
+  rule: BICUBIC_RULE,
+  fillPoints: fillChildNet,
+  hasSpokes: true,
+  innerPoints: [0, 3, 9, 12],
+  rimNodes: 6,
 };

@@ -7,7 +7,7 @@ import { CATMULL_CLARK_KIT } from './catmull-clark-kit';
 import { fillNet } from './catmull-clark-net';
 import { refineAround } from './catmull-clark-refine';
 import { refineStrip, stripSide } from './crease-strip';
-import { integrateFan } from './integrate-fan';
+import { FanBatches } from './fan-batch';
 import { isSharpForGood, type LevelMesh } from './level-mesh';
 import type { RefinementRules } from './refinement-rules';
 
@@ -26,6 +26,7 @@ const net = new Float64Array(48);
 export function integrateCatmullClark(cage: LevelMesh, rules: RefinementRules, origins: Float64Array, sums: LimitSums): boolean {
   let mesh = cage;
   const patches = new RegularPatches(BICUBIC_RULE, origins, sums);
+  const batches = new FanBatches(CATMULL_CLARK_KIT, origins, sums);
   for (let level = 0; level <= MOST_LEVELS; level++) {
     const { kinds, fans } = classifyVertices(mesh, QUAD_COUNTS);
     let left = 0;
@@ -44,10 +45,11 @@ export function integrateCatmullClark(cage: LevelMesh, rules: RefinementRules, o
     patches.flush();
     for (let fan = 0; fan < fans.centre.length && left > 0; fan++) {
       if (!isIsolated(mesh, QUAD_COUNTS, kinds, fans, fan)) continue;
-      integrateFan(CATMULL_CLARK_KIT, mesh, fans, fan, origins, sums);
+      batches.add(mesh, fans, fan);
       for (let i = fans.starts[fan]; i < fans.starts[fan + 1]; i++) mesh.live[mesh.faceOf[fans.corners[i]]] = 0;
       left -= fans.starts[fan + 1] - fans.starts[fan];
     }
+    batches.flush();
     if (left === 0) return true;
     mesh = refineAround(mesh, rules);
   }

@@ -1,4 +1,5 @@
 import type { PatchBlock } from '../kernel/patch-block';
+import type { RegularRule } from '../kernel/regular-patches';
 import type { BorderCurves } from '../moments/border-curves';
 import type { FanState } from './fan-state';
 import type { LevelMesh } from './level-mesh';
@@ -11,6 +12,8 @@ export interface FanKit {
   /** Gauss nodes a direction that are exact, and the fewest that are worth trying. */
   mostNodes: number;
   fewestNodes: number;
+  /** Half-edge of side `side` of the sector at a fan's corner. */
+  sideAt(mesh: LevelMesh, corner: number, side: number): number;
   /** Modulus of the subdominant eigenvalue of the smooth rule, by valence; and what no fan exceeds. */
   smoothShrinkage(valence: number): number;
   largestShrinkage: number;
@@ -32,4 +35,13 @@ export interface FanKit {
   addSide(curves: BorderCurves, net: Float64Array, side: number, edge: number, weight: number, from: number, share: number, shift: ArrayLike<number>): void;
   /** Which sides of the children lie on sides of the sector's face away from the centre, and on which half of those. */
   outerSides: readonly (readonly [child: number, side: number, faceSide: number, half: number])[];
+  /** How the kernel computes child patches: nodes to begin with, those of the coarse area beside them, and how areas are mended. */
+  rule: RegularRule;
+  /** Fills the net of a child as that kernel wants it. */
+  fillPoints(fan: FanState, sector: number, child: number, points: Float64Array): void;
+  /** Which points refinement reads: the centre and rings 1 and 2 of the spokes, or none of those; and offsets of a sector's inner points. */
+  hasSpokes: boolean;
+  innerPoints: readonly number[];
+  /** Gauss nodes that are exact for second moments of chains along sides: degree 11 for cubics, 14 for quartics. */
+  rimNodes: number;
 }

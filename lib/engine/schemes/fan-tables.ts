@@ -1,26 +1,41 @@
 import { tailLevels, tailWeights } from '../moments/tail-weights';
 import { SMOOTH_CENTRE } from './classify-vertices';
 import type { FanKit } from './fan-kit';
-import { makeFanState, type FanState } from './fan-state';
+import { makeFanOperator, type FanOperator } from './fan-operator';
+import { makeFanRim, type FanRim } from './fan-rim';
+import type { FanState } from './fan-state';
+import { applyRows } from './sparse-rows';
 
-/** Digits to which a fan's tail is closed. */
-const TAIL_DIGITS = 15;
+/** Digits to which a fan's tail is closed: about its limit point, where the fan's own moments are small beside what its rim adds; and about any other point. */
+const TAIL_DIGITS = 14;
+const WIDE_DIGITS = 15;
 
-/** Digits to which the surface moments of a fan with a crease or corner are summed. */
+/** Digits to which the surface moments are summed. */
 const SURFACE_DIGITS = 12;
 
 /** Closing weights of one kind of fan. `check` are those of one level less, whose difference bounds the closing's error. */
 export interface FanTable {
+  /** For solid moments about the fan's limit point, whose terms shrink by |λ1 λ2 λ3| a level at least. */
   weights: Float64Array;
   check: Float64Array;
+  /** For solid moments about any other point: |λ1 λ2|. */
+  wideWeights: Float64Array;
+  wideCheck: Float64Array;
   /** The same for the surface moments, whose terms are no finite sum of powers. */
   surfaceWeights: Float64Array;
   surfaceCheck: Float64Array;
   /** For curves through the centre, whose terms shrink more slowly: levels are closed in pairs, or the weights would grow to 1e7 and their rounding with them. */
   curveWeights: Float64Array;
+  operator: FanOperator;
+  rim: FanRim;
 }
 
 const tables = new WeakMap<FanKit, Map<number, FanTable>>();
+
+/** Names a kind of fan among those of its scheme. */
+export function fanKey(sectors: number, closed: boolean, sharpFirst: boolean, centreRule: number): number {
+  return ((sectors * 2 + (closed ? 1 : 0)) * 2 + (sharpFirst ? 1 : 0)) * 3 + centreRule;
+}
 
 /** The table of a scheme's fans of one valence and kind, made on first need. */
 export function fanTable(kit: FanKit, fan: FanState): FanTable {
@@ -29,29 +44,40 @@ export function fanTable(kit: FanKit, fan: FanState): FanTable {
     known = new Map();
     tables.set(kit, known);
   }
-  const key = ((fan.sectors * 2 + (fan.closed ? 1 : 0)) * 2 + (fan.sharpFirst ? 1 : 0)) * 3 + fan.centreRule;
-  const made = known.get(key);
-  if (made !== undefined) return made;
-  // Iteration falls short where eigenvalues crowd; the closing does no worse for a little more.
-  const lambda = Math.min(isPlain(fan) ? kit.smoothShrinkage(fan.sectors) : 1.002 * dominantShrinkage(kit, fan), kit.largestShrinkage);
-  const largest = lambda * lambda;
-  const levels = tailLevels(largest, TAIL_DIGITS);
+  const key = fanKey(fan.sectors, fan.closed, fan.sharpFirst, fan.centreRule);
+  let table = known.get(key);
+  if (table === undefined) {
+    table = makeTable(kit, fan);
+    known.set(key, table);
+  }
+  return table;
+}
+
+function makeTable(kit: FanKit, fan: FanState): FanTable {
+  const operator = makeFanOperator(kit, fan);
+  const found = shrinkages(operator);
+  const lambda = Math.min(isPlain(fan) ? kit.smoothShrinkage(fan.sectors) : found[0], kit.largestShrinkage);
+  const area = lambda * lambda;
+  const volume = Math.min(area * lambda, found[2]);
+  const levels = tailLevels(volume, TAIL_DIGITS);
+  const wideLevels = tailLevels(area, WIDE_DIGITS);
   const curve = Math.max(lambda, 0.5) ** 2;
-  const pairs = tailWeights(curve, tailLevels(curve, TAIL_DIGITS));
-  const weights = tailWeights(largest, levels);
-  const check = tailWeights(largest, levels - 1);
+  const pairs = tailWeights(curve, tailLevels(curve, WIDE_DIGITS));
   // Around a smooth point the area's terms are as good as powers. Along creases and at corners two eigenvalues lie close together and the root
   // mixes them without end: there the levels are summed until the rest, a geometric one by then, no longer counts.
-  const surfaceLevels = Math.ceil(-SURFACE_DIGITS / Math.log10(largest));
-  const table = {
-    weights,
-    check,
-    surfaceWeights: isPlain(fan) ? weights : geometricWeights(largest, surfaceLevels),
-    surfaceCheck: isPlain(fan) ? check : geometricWeights(largest, surfaceLevels - 1),
+  const surfaceLevels = isPlain(fan) ? tailLevels(area, SURFACE_DIGITS) : Math.ceil(-SURFACE_DIGITS / Math.log10(area));
+  const surfaceWeights = isPlain(fan) ? tailWeights : geometricWeights;
+  return {
+    weights: tailWeights(volume, levels),
+    check: tailWeights(volume, levels - 1),
+    wideWeights: tailWeights(area, wideLevels),
+    wideCheck: tailWeights(area, wideLevels - 1),
+    surfaceWeights: surfaceWeights(area, surfaceLevels),
+    surfaceCheck: surfaceWeights(area, surfaceLevels - 1),
     curveWeights: Float64Array.from({ length: 2 * pairs.length }, (_, k) => pairs[k >> 1]),
+    operator,
+    rim: makeFanRim(kit, fan, operator.points),
   };
-  known.set(key, table);
-  return table;
 }
 
 function geometricWeights(ratio: number, levels: number): Float64Array {
@@ -64,35 +90,46 @@ function isPlain(fan: FanState): boolean {
   return fan.closed && !fan.sharpFirst && fan.centreRule === SMOOTH_CENTRE;
 }
 
+const STEPS = 200;
+const SETTLED = 140;
+
+/** Iteration falls short where eigenvalues crowd; the closing does no worse for a little more. */
+const MARGIN = 1.004;
+
 /**
- * Largest modulus of the refinement's eigenvalues but the 1 of constants: power iteration on the rings less their centre,
- * three independent starts at once (one a coordinate). Only the modulus is needed, so repeated and complex eigenvalues do no harm.
+ * |λ1|, |λ1 λ2|, |λ1 λ2 λ3| of the refinement's eigenvalues but the 1 of constants, with multiplicity: by how much lengths, areas and volumes in the space of
+ * rings (less their first point) shrink a step. Only moduli are needed, so repeated and complex eigenvalues do no harm. Slightly too large on purpose.
  */
-function dominantShrinkage(kit: FanKit, kind: FanState): number {
-  let state = makeFanState(kind.sectors, kind.closed, kind.sharpFirst, kind.centreRule);
-  let finer = makeFanState(kind.sectors, kind.closed, kind.sharpFirst, kind.centreRule);
+function shrinkages({ points, matrix }: FanOperator): [number, number, number] {
+  const size = 3 * points.count;
+  let state = new Float64Array(3 * matrix.rows);
+  let finer = new Float64Array(3 * matrix.rows);
   let seed = 1;
-  const noise = (): number => {
+  for (let i = 0; i < size; i++) {
     seed = (seed * 48271) % 2147483647;
-    return seed / 2147483647 - 0.5;
-  };
-  for (const values of [state.centre, state.spokes, state.inner]) for (let i = 0; i < values.length; i++) values[i] = noise();
-  const steps = 400;
-  const settle = 320;
-  let growth = 0;
-  for (let step = 0; step < steps; step++) {
-    kit.refine(state, finer);
-    [state, finer] = [finer, state];
-    let size = 0;
-    for (const values of [state.spokes, state.inner]) {
-      for (let i = 0; i < values.length; i++) {
-        values[i] -= state.centre[i % 3];
-        size = Math.max(size, Math.abs(values[i]));
-      }
-    }
-    state.centre.fill(0);
-    for (const values of [state.spokes, state.inner]) for (let i = 0; i < values.length; i++) values[i] /= size;
-    if (step >= settle) growth += Math.log(size);
+    state[i] = seed / 2147483647 - 0.5;
   }
-  return Math.exp(growth / (steps - settle));
+  const growth = [0, 0, 0];
+  for (let step = 0; step < STEPS; step++) {
+    applyRows(matrix, state, 0, finer, 0);
+    [state, finer] = [finer, state];
+    for (let axis = 0; axis < 3; axis++) for (let i = size - 3 + axis; i >= 0; i -= 3) state[i] -= state[axis];
+    // Gram-Schmidt on the three coordinates, each a vector of the rings.
+    for (let axis = 0; axis < 3; axis++) {
+      for (let before = 0; before < axis; before++) {
+        let product = 0;
+        for (let i = 0; i < size; i += 3) product += state[i + axis] * state[i + before];
+        for (let i = 0; i < size; i += 3) state[i + axis] -= product * state[i + before];
+      }
+      let square = 0;
+      for (let i = axis; i < size; i += 3) square += state[i] * state[i];
+      const length = Math.sqrt(square);
+      for (let i = axis; i < size; i += 3) state[i] /= length;
+      if (step >= SETTLED) growth[axis] += Math.log(length);
+    }
+  }
+  const steps = STEPS - SETTLED;
+  return [
+    MARGIN * Math.exp(growth[0] / steps), MARGIN * Math.exp((growth[0] + growth[1]) / steps), MARGIN * Math.exp((growth[0] + growth[1] + growth[2]) / steps),
+  ];
 }

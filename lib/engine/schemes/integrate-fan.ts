@@ -34,7 +34,7 @@ export function integrateFan(kit: FanKit, mesh: LevelMesh, fans: Fans, index: nu
   let state = makeFanState(fans.starts[index + 1] - fans.starts[index], fans.closed[index], fans.sharpFirst[index], fans.centre[index]);
   let finer = makeFanState(state.sectors, state.closed, state.sharpFirst, state.centreRule);
   const table = fanTable(kit, state);
-  const { weights, curveWeights } = table;
+  const { wideWeights: weights, curveWeights } = table;
   const levels = Math.max(weights.length, table.surfaceWeights.length);
   const corners = fans.corners.slice(fans.starts[index], fans.starts[index + 1]);
   const n = state.sectors;
@@ -43,7 +43,7 @@ export function integrateFan(kit: FanKit, mesh: LevelMesh, fans: Fans, index: nu
     solid: new Float64Array(MOMENTS * n), surface: new Float64Array(MOMENTS * n), checkSolid: new Float64Array(MOMENTS * n),
     checkArea: new Float64Array(n), magnitude: new Float64Array(n),
   };
-  const bordered = corners.some((corner) => [0, 1, 2, 3].some((side) => side < kit.sides && mesh.borderOf[sideOf(kit, mesh, corner, side)] >= 0));
+  const bordered = corners.some((corner) => [0, 1, 2, 3].some((side) => side < kit.sides && mesh.borderOf[kit.sideAt(mesh, corner, side)] >= 0));
   // About the limit point all rings shrink to 0 and so does their rounding, which the closing would else multiply.
   const limit = kit.limit(state);
   translateFan(state, limit);
@@ -134,8 +134,8 @@ function at(weights: Float64Array, k: number): number {
 
 function addPatch(own: FanSums, sector: number, table: FanTable, k: number, magnitude: number): void {
   const to = MOMENTS * sector;
-  const weight = at(table.weights, k);
-  const checkWeight = at(table.check, k);
+  const weight = at(table.wideWeights, k);
+  const checkWeight = at(table.wideCheck, k);
   const surfaceWeight = at(table.surfaceWeights, k);
   for (let i = 0; i < MOMENTS; i++) {
     own.solid[to + i] += weight * solid[i];
@@ -174,17 +174,11 @@ function addRestOfCurves(
     }
   }
   for (const corner of corners) {
-    const leaving = mesh.borderOf[sideOf(kit, mesh, corner, 0)];
-    const arriving = mesh.borderOf[sideOf(kit, mesh, corner, kit.arriving)];
+    const leaving = mesh.borderOf[kit.sideAt(mesh, corner, 0)];
+    const arriving = mesh.borderOf[kit.sideAt(mesh, corner, kit.arriving)];
     if (leaving >= 0) curves.ends.set(2 * leaving, [limit[0], limit[1], limit[2]]);
     if (arriving >= 0) curves.ends.set(2 * arriving + 1, [limit[0], limit[1], limit[2]]);
   }
-}
-
-/** Half-edge of side `side` of the face with corner 0 at `corner`. */
-function sideOf(kit: FanKit, mesh: LevelMesh, corner: number, side: number): number {
-  const start = mesh.starts[mesh.faceOf[corner]];
-  return start + ((corner - start + side) % kit.sides);
 }
 
 /** Adds the border curves that the child net in `net` holds at level k of a fan. Sides 0 leave the centre, sides `arriving` run towards it. */
@@ -194,7 +188,7 @@ function addFanCurves(
   const length = 2 ** -mesh.level;
   if (child !== 1 && weight !== 0) {
     const side = child === 0 ? 0 : kit.arriving;
-    const h = sideOf(kit, mesh, corner, side);
+    const h = kit.sideAt(mesh, corner, side);
     const share = length * 2 ** (-1 - k);
     const from = mesh.borderFrom[h] + (side === 0 ? share : length - 2 * share);
     if (mesh.borderOf[h] >= 0) kit.addSide(curves, net, side, mesh.borderOf[h], weight, from, share, limit);
@@ -202,7 +196,7 @@ function addFanCurves(
   if (k > 0) return;
   for (const [outerChild, side, faceSide, half] of kit.outerSides) {
     if (outerChild !== child) continue;
-    const h = sideOf(kit, mesh, corner, faceSide);
+    const h = kit.sideAt(mesh, corner, faceSide);
     if (mesh.borderOf[h] >= 0) kit.addSide(curves, net, side, mesh.borderOf[h], 1, mesh.borderFrom[h] + (half * length) / 2, length / 2, limit);
   }
 }

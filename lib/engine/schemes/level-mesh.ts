@@ -1,5 +1,6 @@
 import type { Boundary } from '../cage';
-import { borderEdgeOf, isBorder } from '../mesh/border-loops';
+import { borderEdgeOf } from '../mesh/border-loops';
+import { findBorderEdges } from '../mesh/partition';
 import type { Topology } from '../mesh/topology';
 
 /**
@@ -25,21 +26,36 @@ export function isSharpForGood(mesh: Topology, h: number): boolean {
   return mesh.twin[h] < 0 || mesh.edgeSharpness[h] === Infinity;
 }
 
-/** The cage as level 0. Blocked bodies are not live. The rule `edge-and-corner` makes a border vertex with one face a corner. */
-export function levelZero(mesh: Topology, positions: Float64Array, bodyOf: Int32Array, blocked: Uint8Array, boundary: Boundary): LevelMesh {
+/** Half-edge of a face's side, counted from its corner `corner`. */
+export function faceSideAt(mesh: Topology, corner: number, side: number): number {
+  const face = mesh.faceOf[corner];
+  const start = mesh.starts[face];
+  return start + ((corner - start + side) % (mesh.starts[face + 1] - start));
+}
+
+/**
+ * The cage as level 0. Blocked bodies are not live. The rule `edge-and-corner` makes a border vertex with one face a corner.
+ * `borders` are the half-edges with another body, or nothing, across.
+ */
+export function levelZero(
+  mesh: Topology, positions: Float64Array, bodyOf: Int32Array, blocked: Uint8Array, boundary: Boundary, borders = findBorderEdges(mesh, bodyOf),
+): LevelMesh {
   const live = new Uint8Array(mesh.faces);
   for (let face = 0; face < mesh.faces; face++) live[face] = blocked[bodyOf[face]] === 1 ? 0 : 1;
   const borderOf = new Int32Array(mesh.twin.length).fill(-1);
-  const cornersAt = new Uint8Array(mesh.vertices);
-  for (let h = 0; h < mesh.twin.length; h++) {
-    // One side's curve stands for both, so that what one body gains the other loses to the last bit.
-    if (isBorder(mesh, bodyOf, h) && borderEdgeOf(mesh, bodyOf, blocked, h) === h) borderOf[h] = h;
-    if (cornersAt[mesh.vertexOf[h]] < 2) cornersAt[mesh.vertexOf[h]]++;
-  }
-  let vertexSharpness = mesh.vertexSharpness;
-  if (boundary === 'edge-and-corner') {
-    vertexSharpness = vertexSharpness.slice();
-    for (let h = 0; h < mesh.twin.length; h++) if (mesh.twin[h] < 0 && cornersAt[mesh.vertexOf[h]] === 1) vertexSharpness[mesh.vertexOf[h]] = Infinity;
-  }
+  // One side's curve stands for both, so that what one body gains the other loses to the last bit.
+  for (const h of borders) if (borderEdgeOf(mesh, bodyOf, blocked, h) === h) borderOf[h] = h;
+  const vertexSharpness = boundary === 'edge-and-corner' ? withCorners(mesh, borders) : mesh.vertexSharpness;
   return { ...mesh, positions, bodyOf, live, level: 0, borderOf, borderFrom: new Float32Array(mesh.twin.length), vertexSharpness };
+}
+
+/** Vertex sharpness with the border vertices that have one face made corners. */
+function withCorners(mesh: Topology, borders: Int32Array): Float32Array {
+  const open = borders.filter((h) => mesh.twin[h] < 0);
+  if (open.length === 0) return mesh.vertexSharpness;
+  const faces = new Int32Array(mesh.vertices);
+  for (let h = 0; h < mesh.vertexOf.length; h++) faces[mesh.vertexOf[h]]++;
+  const sharpness = mesh.vertexSharpness.slice();
+  for (const h of open) if (faces[mesh.vertexOf[h]] === 1) sharpness[mesh.vertexOf[h]] = Infinity;
+  return sharpness;
 }

@@ -1,9 +1,10 @@
+import { TRIANGLE_RULE } from '../kernel/regular-rules';
 import type { BorderCurves } from '../moments/border-curves';
 import { triangleToPowers } from '../patches/box-spline';
 import { boxSplineMoments, mendTriangleSurface, TRIANGLE_NODES } from '../patches/box-spline-moments';
 import type { FanKit } from './fan-kit';
 import { spokeAt, type FanState } from './fan-state';
-import type { LevelMesh } from './level-mesh';
+import { faceSideAt, type LevelMesh } from './level-mesh';
 import { fillLoopChild, loopLimit, refineLoopFan } from './loop-fan';
 import { fillTriangleNet } from './loop-net';
 
@@ -34,6 +35,7 @@ function smoothShrinkage(n: number): number {
 export function addTriangleSide(
   curves: BorderCurves, values: Float64Array, side: number, edge: number, weight: number, from: number, share: number, shift: ArrayLike<number>,
 ): void {
+  if (curves.takeSide?.(values, side, edge, from, share, shift) === true) return;
   triangleToPowers(values, powers);
   // Values at five points of the side, s and t from corner to corner, give the quartic.
   const ends = [[0, 0, 1, 0], [1, 0, 0, 1], [0, 1, 0, 0]][side];
@@ -70,6 +72,7 @@ const SAMPLES_TO_POWERS: readonly (readonly number[])[] = [
 export const LOOP_KIT: FanKit = {
   sides: 3,
   arriving: 2,
+  sideAt: faceSideAt,
   mostNodes: TRIANGLE_NODES,
   fewestNodes: 4,
   smoothShrinkage,
@@ -84,4 +87,9 @@ export const LOOP_KIT: FanKit = {
   mendSurface: mendTriangleSurface,
   addSide: addTriangleSide,
   outerSides: [[0, 1, 1, 0], [2, 1, 1, 1]],
+  rule: TRIANGLE_RULE,
+  fillPoints: fillLoopChild,
+  hasSpokes: true,
+  innerPoints: [0],
+  rimNodes: 8,
 };

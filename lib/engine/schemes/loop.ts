@@ -3,7 +3,7 @@ import { TRIANGLE_RULE } from '../kernel/regular-rules';
 import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
 import { classifyVertices, isIsolated, isRegularFace, TRIANGLE_COUNTS } from './classify-vertices';
-import { integrateFan } from './integrate-fan';
+import { FanBatches } from './fan-batch';
 import type { LevelMesh } from './level-mesh';
 import { addTriangleSide, LOOP_KIT } from './loop-kit';
 import { fillTriangleNet } from './loop-net';
@@ -23,6 +23,7 @@ const net = new Float64Array(36);
 export function integrateLoop(cage: LevelMesh, rules: RefinementRules, origins: Float64Array, sums: LimitSums): boolean {
   let mesh = cage;
   const patches = new RegularPatches(TRIANGLE_RULE, origins, sums);
+  const batches = new FanBatches(LOOP_KIT, origins, sums);
   for (let level = 0; level <= MOST_LEVELS; level++) {
     const { kinds, fans } = classifyVertices(mesh, TRIANGLE_COUNTS);
     let left = 0;
@@ -36,10 +37,11 @@ export function integrateLoop(cage: LevelMesh, rules: RefinementRules, origins: 
     patches.flush();
     for (let fan = 0; fan < fans.centre.length && left > 0; fan++) {
       if (!isIsolated(mesh, TRIANGLE_COUNTS, kinds, fans, fan)) continue;
-      integrateFan(LOOP_KIT, mesh, fans, fan, origins, sums);
+      batches.add(mesh, fans, fan);
       for (let i = fans.starts[fan]; i < fans.starts[fan + 1]; i++) mesh.live[mesh.faceOf[fans.corners[i]]] = 0;
       left -= fans.starts[fan + 1] - fans.starts[fan];
     }
+    batches.flush();
     if (left === 0) return true;
     mesh = refineTriangles(mesh, rules);
   }
