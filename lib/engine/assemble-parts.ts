@@ -46,18 +46,21 @@ function emptyParts(mesh: Topology, bodies: Bodies): MeasuredPart[] {
     name, faces: 0, maxValence: 0, components: [], bounds: [Infinity, Infinity, Infinity, -Infinity, -Infinity, -Infinity],
     capAreaShare: 0, capVolumeShare: 0, openEdges: 0, looksLikeSheet: false,
   }));
+  const { vertexOf, starts } = mesh;
   const valence = new Int32Array(mesh.vertices);
-  for (let h = 0; h < mesh.vertexOf.length; h++) {
-    valence[mesh.vertexOf[h]]++;
+  for (let h = 0; h < vertexOf.length; h++) valence[vertexOf[h]]++;
+  for (const h of bodies.borders) {
     if (mesh.twin[h] >= 0) continue;
     const face = mesh.faceOf[h];
     parts[bodies.partOf[face]].openEdges++;
-    valence[mesh.vertexOf[h + 1 === mesh.starts[face + 1] ? mesh.starts[face] : h + 1]]++;
+    valence[vertexOf[h + 1 === starts[face + 1] ? starts[face] : h + 1]]++;
   }
-  for (let h = 0; h < mesh.vertexOf.length; h++) {
-    const part = parts[bodies.partOf[mesh.faceOf[h]]];
-    part.maxValence = Math.max(part.maxValence, valence[mesh.vertexOf[h]]);
+  const most = new Int32Array(parts.length);
+  for (let face = 0; face < mesh.faces; face++) {
+    const part = bodies.partOf[face];
+    for (let h = starts[face]; h < starts[face + 1]; h++) if (valence[vertexOf[h]] > most[part]) most[part] = valence[vertexOf[h]];
   }
+  for (let i = 0; i < parts.length; i++) parts[i].maxValence = most[i];
   return parts;
 }
 
@@ -78,7 +81,7 @@ function makeComponent(body: number, faces: number, frames: Frames, limit: Integ
     solid,
     surface: { area: surface.volume, centroid: surface.centroid, centralSecond: surface.centralSecond },
     cage,
-    hollow: null,
+    ...hollow,
     errorEstimate: solidErrorEstimate(moments[0], limit.solid.magnitudes[body], limit.closingError, MOMENTS * body, size, defect),
     surfaceErrorEstimate: surfaceErrorEstimate(area[0], limit.surfaceError[body]),
   };

@@ -1,5 +1,6 @@
 import type { Cage } from './cage';
 import type { MeasureOptions, Six, Three } from './measured';
+import { findBorderEdges } from './mesh/partition';
 import { buildTopology } from './mesh/topology';
 import type { Frames } from './mesh/frames';
 import { integrateCage, integrateLimit } from './moments/integrate-limit';
@@ -19,7 +20,7 @@ export interface RawMoments {
 export function limitConeMoments(cage: Cage, options: Omit<MeasureOptions, 'partsBy'>, apex: Three): RawMoments {
   const { mesh } = buildTopology(cage);
   const one = new Int32Array(mesh.faces);
-  const bodies = { partNames: [''], partOf: one, bodyOf: one, bodies: 1, partOfBody: new Int32Array(1), pieceOf: one, pieces: 1 };
+  const bodies = { partNames: [''], partOf: one, bodyOf: one, bodies: 1, partOfBody: new Int32Array(1), pieceOf: one, pieces: 1, borders: findBorderEdges(mesh, one) };
   const frames: Frames = {
     positions: cage.positions.map((value, i) => value - apex[i % 3]),
     pieceCentres: Float64Array.from(apex),
@@ -27,7 +28,7 @@ export function limitConeMoments(cage: Cage, options: Omit<MeasureOptions, 'part
     boxes: new Float64Array(6),
   };
   const blocked = new Uint8Array(1);
-  const sums = options.scheme === 'polyhedral' ? integrateCage(mesh, frames, bodies, blocked) : integrateLimit(mesh, frames, bodies, blocked, { ...options, partsBy: 'whole' });
+  const sums = options.scheme === 'polyhedral' ? integrateCage(mesh, frames, bodies, blocked, true) : integrateLimit(mesh, frames, bodies, blocked, { ...options, partsBy: 'whole' });
   if (!sums.resolved) throw new Error('the limit surface could not be resolved');
   const m = sums.solid.total(0);
   const first: Three = [0, 1, 2].map((axis) => m[1 + axis] + m[0] * apex[axis]) as Three;

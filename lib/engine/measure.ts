@@ -35,7 +35,7 @@ export function measureCage(given: Cage, options: MeasureOptions): MeasuredCage 
   if (options.scheme === 'loop') blockNotTriangles(cage, mesh, bodies, blocked, findings);
   if (options.scheme === 'doo-sabin') blockBorders(mesh, bodies, blocked, findings);
   const frames = makeFrames(mesh, cage.positions, bodies);
-  const ownCage = integrateCage(mesh, frames, bodies, blocked);
+  const ownCage = integrateCage(mesh, frames, bodies, blocked, options.scheme === 'polyhedral');
   const cageCaps = capBodies(mesh, frames, bodies, blocked, ownCage);
   const limit = options.scheme === 'polyhedral' ? ownCage : integrateLimit(mesh, frames, bodies, blocked, options);
   const caps = limit === ownCage ? cageCaps : capBodies(mesh, frames, bodies, blocked, limit);

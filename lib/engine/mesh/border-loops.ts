@@ -1,3 +1,4 @@
+import type { Bodies } from './partition';
 import { nextHalfEdge, previousHalfEdge, type Topology } from './topology';
 
 /** Loop number of the far side where nothing lies there is never this; used before loops are numbered. */
@@ -39,12 +40,12 @@ export function isBorder(mesh: Topology, bodyOf: Int32Array, h: number): boolean
 }
 
 /** Finds all borders of bodies and walks them loop by loop. Where bodies touch in a vertex, the body's own fan of faces says which edge comes next. */
-export function findBorders(mesh: Topology, bodyOf: Int32Array, blocked: Uint8Array): Borders {
+export function findBorders(mesh: Topology, { bodyOf, borders }: Bodies, blocked: Uint8Array): Borders {
   const segmentOf = new Map<number, number>();
   const segments: BorderSegment[] = [];
   const loops: BorderLoop[] = [];
-  for (let h = 0; h < mesh.twin.length; h++) {
-    if (!isBorder(mesh, bodyOf, h) || borderEdgeOf(mesh, bodyOf, blocked, h) !== h) continue;
+  for (const h of borders) {
+    if (borderEdgeOf(mesh, bodyOf, blocked, h) !== h) continue;
     segmentOf.set(h, segments.length);
     if (mesh.twin[h] >= 0) segmentOf.set(mesh.twin[h], segments.length);
     segments.push({ edge: h, left: NO_LOOP, right: NO_LOOP });

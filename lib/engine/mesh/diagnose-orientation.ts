@@ -14,7 +14,7 @@ export function diagnoseOrientation(
 ): void {
   const firstFace = new Int32Array(bodies.bodies).fill(-1);
   for (let face = mesh.faces - 1; face >= 0; face--) firstFace[bodies.bodyOf[face]] = face;
-  for (let h = 0; h < mesh.twin.length; h++) {
+  for (const h of bodies.borders) {
     if (mesh.twin[h] >= 0) continue;
     const face = mesh.faceOf[h];
     if (blocked[bodies.bodyOf[face]] === 1) continue;

@@ -13,15 +13,26 @@ export interface Frames {
   boxes: Float64Array;
 }
 
-function boxesOf(mesh: Topology, positions: Float64Array, groupOf: Int32Array, groups: number): Float64Array {
+const NO_GROUP = -1;
+
+/** Boxes of the vertices of each group's faces; `groupAt` receives a group of each vertex, NO_GROUP where it belongs to no face. */
+function boxesOf(mesh: Topology, positions: Float64Array, groupOf: Int32Array, groups: number, groupAt: Int32Array): Float64Array {
   const boxes = new Float64Array(6 * groups);
   for (let group = 0; group < groups; group++) boxes.fill(Infinity, 6 * group, 6 * group + 3).fill(-Infinity, 6 * group + 3, 6 * group + 6);
-  for (let h = 0; h < mesh.vertexOf.length; h++) {
-    const at = 6 * groupOf[mesh.faceOf[h]];
-    for (let axis = 0; axis < 3; axis++) {
-      const value = positions[3 * mesh.vertexOf[h] + axis];
-      if (value < boxes[at + axis]) boxes[at + axis] = value;
-      if (value > boxes[at + 3 + axis]) boxes[at + 3 + axis] = value;
+  groupAt.fill(NO_GROUP);
+  const { vertexOf, starts } = mesh;
+  for (let face = 0; face < mesh.faces; face++) {
+    const group = groupOf[face];
+    const at = 6 * group;
+    for (let h = starts[face]; h < starts[face + 1]; h++) {
+      const vertex = vertexOf[h];
+      if (groupAt[vertex] === group) continue;
+      groupAt[vertex] = group;
+      for (let axis = 0; axis < 3; axis++) {
+        const value = positions[3 * vertex + axis];
+        if (value < boxes[at + axis]) boxes[at + axis] = value;
+        if (value > boxes[at + 3 + axis]) boxes[at + 3 + axis] = value;
+      }
     }
   }
   return boxes;
@@ -30,15 +41,17 @@ function boxesOf(mesh: Topology, positions: Float64Array, groupOf: Int32Array, g
 /** Makes the local frames of a cage. */
 export function makeFrames(mesh: Topology, positions: Float64Array, bodies: Bodies): Frames {
   const { pieceOf } = bodies;
-  const pieceBoxes = boxesOf(mesh, positions, pieceOf, bodies.pieces);
-  const boxes = bodies.bodyOf === pieceOf ? pieceBoxes : boxesOf(mesh, positions, bodies.bodyOf, bodies.bodies);
+  const groupAt = new Int32Array(mesh.vertices);
+  const boxes = bodies.bodyOf === pieceOf ? null : boxesOf(mesh, positions, bodies.bodyOf, bodies.bodies, groupAt);
+  const pieceBoxes = boxesOf(mesh, positions, pieceOf, bodies.pieces, groupAt);
   const pieceOfBody = new Int32Array(bodies.bodies);
   const local = new Float64Array(positions.length);
   const centre = (all: Float64Array, group: number, axis: number): number => all[6 * group + axis] / 2 + all[6 * group + 3 + axis] / 2;
   const centres = Float64Array.from({ length: 3 * bodies.pieces }, (_, i) => centre(pieceBoxes, Math.floor(i / 3), i % 3));
-  for (let h = 0; h < mesh.vertexOf.length; h++) {
-    const v = 3 * mesh.vertexOf[h];
-    const at = 3 * pieceOf[mesh.faceOf[h]];
+  for (let vertex = 0; vertex < mesh.vertices; vertex++) {
+    if (groupAt[vertex] === NO_GROUP) continue;
+    const v = 3 * vertex;
+    const at = 3 * groupAt[vertex];
     local[v] = positions[v] - centres[at];
     local[v + 1] = positions[v + 1] - centres[at + 1];
     local[v + 2] = positions[v + 2] - centres[at + 2];
@@ -49,8 +62,8 @@ export function makeFrames(mesh: Topology, positions: Float64Array, bodies: Bodi
   for (let body = 0; body < bodies.bodies; body++) {
     for (let axis = 0; axis < 3; axis++) {
       pieceCentres[3 * body + axis] = centre(pieceBoxes, pieceOfBody[body], axis);
-      origins[3 * body + axis] = centre(boxes, body, axis) - pieceCentres[3 * body + axis];
+      origins[3 * body + axis] = centre(boxes ?? pieceBoxes, body, axis) - pieceCentres[3 * body + axis];
     }
   }
-  return { positions: local, pieceCentres, origins, boxes };
+  return { positions: local, pieceCentres, origins, boxes: boxes ?? pieceBoxes };
 }

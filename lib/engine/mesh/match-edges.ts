@@ -1,54 +1,56 @@
 import type { EdgeDefects, Topology } from './topology';
 import { nextHalfEdge, normalSharpness } from './topology';
 
-/** Half-edges of each vertex pair, bucketed by the lower vertex and ordered by the higher one. */
+/** Half-edges bucketed by the lower vertex of their edge, in the order of the half-edges; `higher` is the other vertex, in the same places. */
 interface EdgeBuckets {
   starts: Int32Array;
   halfEdges: Int32Array;
   higher: Int32Array;
 }
 
+/** A counting sort: the mesh is walked twice, nothing is hashed and nothing compared. */
 function bucketEdges(mesh: Topology): EdgeBuckets {
-  const count = mesh.vertexOf.length;
-  const starts = new Int32Array(mesh.vertices + 1);
-  const higher = new Int32Array(count);
-  const lower = new Int32Array(count);
-  for (let face = 0; face < mesh.faces; face++) {
-    const end = mesh.starts[face + 1];
-    let b = mesh.vertexOf[mesh.starts[face]];
-    for (let h = end - 1; h >= mesh.starts[face]; h--) {
-      const a = mesh.vertexOf[h];
-      lower[h] = a < b ? a : b;
-      higher[h] = a < b ? b : a;
-      starts[lower[h] + 1]++;
-      b = a;
+  const { vertexOf, starts: faceStarts, faces, vertices } = mesh;
+  const count = vertexOf.length;
+  const starts = new Int32Array(vertices + 1);
+  for (let face = 0; face < faces; face++) {
+    const first = faceStarts[face];
+    const end = faceStarts[face + 1];
+    if (first === end) continue;
+    let a = vertexOf[end - 1];
+    for (let h = first; h < end; h++) {
+      const b = vertexOf[h];
+      starts[(a < b ? a : b) + 1]++;
+      a = b;
     }
   }
-  for (let v = 0; v < mesh.vertices; v++) starts[v + 1] += starts[v];
-  const fill = starts.slice(0, mesh.vertices);
+  for (let v = 0; v < vertices; v++) starts[v + 1] += starts[v];
+  const fill = starts.slice(0, vertices);
   const halfEdges = new Int32Array(count);
-  for (let h = 0; h < count; h++) halfEdges[fill[lower[h]]++] = h;
-  for (let v = 0; v < mesh.vertices; v++) sortBucket(halfEdges, higher, starts[v], starts[v + 1]);
+  const higher = new Int32Array(count);
+  for (let face = 0; face < faces; face++) {
+    const first = faceStarts[face];
+    const last = faceStarts[face + 1] - 1;
+    for (let h = first; h <= last; h++) {
+      const a = vertexOf[h];
+      const b = vertexOf[h === last ? first : h + 1];
+      const place = a < b ? fill[a]++ : fill[b]++;
+      halfEdges[place] = h;
+      higher[place] = a < b ? b : a;
+    }
+  }
   return { starts, halfEdges, higher };
 }
 
-/** Buckets have about three entries, poles of a sphere some hundreds: insertion for the first, a real sort for the second. */
-function sortBucket(halfEdges: Int32Array, higher: Int32Array, from: number, to: number): void {
-  if (to - from > 24) {
-    const sorted = Array.from(halfEdges.subarray(from, to)).sort((x, y) => higher[x] - higher[y] || x - y);
-    halfEdges.set(sorted, from);
-    return;
-  }
-  for (let i = from + 1; i < to; i++) {
-    const h = halfEdges[i];
-    const key = higher[h];
-    let j = i - 1;
-    while (j >= from && higher[halfEdges[j]] > key) {
-      halfEdges[j + 1] = halfEdges[j];
-      j--;
-    }
-    halfEdges[j + 1] = h;
-  }
+/** Buckets have about four entries, poles of a sphere some hundreds: from this size on they are sorted by the higher vertex instead of searched. */
+const SORTED_FROM = 32;
+
+function sortBucket({ halfEdges, higher }: EdgeBuckets, from: number, to: number): void {
+  const order = Array.from({ length: to - from }, (_, i) => from + i).sort((x, y) => higher[x] - higher[y] || x - y);
+  const sortedEdges = order.map((place) => halfEdges[place]);
+  const sortedHigher = order.map((place) => higher[place]);
+  halfEdges.set(sortedEdges, from);
+  higher.set(sortedHigher, from);
 }
 
 /** Pairs half-edges into twins and puts the crease tags on them; the last tag of an edge wins. */
@@ -56,25 +58,43 @@ export function matchEdges(mesh: Topology, creaseVertices: Uint32Array, creaseSh
   const defects: EdgeDefects = { nonManifold: [], turned: [], strayCreases: [] };
   const buckets = bucketEdges(mesh);
   const { halfEdges, higher, starts } = buckets;
+  const { twin, vertexOf } = mesh;
+  // 1 at half-edges that were met from the first one of their edge.
+  const met = new Uint8Array(vertexOf.length);
   for (let v = 0; v < mesh.vertices; v++) {
-    let i = starts[v];
-    while (i < starts[v + 1]) {
+    const from = starts[v];
+    const to = starts[v + 1];
+    if (to - from >= SORTED_FROM) sortBucket(buckets, from, to);
+    for (let i = from; i < to; i++) {
       const first = halfEdges[i];
-      let j = i + 1;
-      while (j < starts[v + 1] && higher[halfEdges[j]] === higher[first]) j++;
-      if (j - i === 2) {
-        const second = halfEdges[i + 1];
-        if (mesh.vertexOf[first] === mesh.vertexOf[second]) defects.turned.push(first);
-        else {
-          mesh.twin[first] = second;
-          mesh.twin[second] = first;
-        }
-      } else if (j - i > 2) defects.nonManifold.push(first);
-      i = j;
+      if (met[first] === 1) continue;
+      const other = higher[i];
+      const reach = to - from >= SORTED_FROM ? endOfRun(higher, i, to) : to;
+      let second = -1;
+      let count = 1;
+      for (let j = i + 1; j < reach; j++) {
+        if (higher[j] !== other) continue;
+        count++;
+        second = halfEdges[j];
+        met[second] = 1;
+      }
+      if (count === 1) continue;
+      if (count > 2) defects.nonManifold.push(first);
+      else if (vertexOf[first] === vertexOf[second]) defects.turned.push(first);
+      else {
+        twin[first] = second;
+        twin[second] = first;
+      }
     }
   }
   tagCreases(mesh, buckets, creaseVertices, creaseSharpness, defects);
   return defects;
+}
+
+function endOfRun(higher: Int32Array, from: number, to: number): number {
+  let end = from + 1;
+  while (end < to && higher[end] === higher[from]) end++;
+  return end;
 }
 
 function tagCreases(mesh: Topology, buckets: EdgeBuckets, pairs: Uint32Array, sharpness: Float32Array, defects: EdgeDefects): void {
@@ -84,9 +104,8 @@ function tagCreases(mesh: Topology, buckets: EdgeBuckets, pairs: Uint32Array, sh
     let found = false;
     if (b < mesh.vertices) {
       for (let i = buckets.starts[a]; i < buckets.starts[a + 1]; i++) {
-        const h = buckets.halfEdges[i];
-        if (buckets.higher[h] !== b) continue;
-        mesh.edgeSharpness[h] = normalSharpness(sharpness[tag]);
+        if (buckets.higher[i] !== b) continue;
+        mesh.edgeSharpness[buckets.halfEdges[i]] = normalSharpness(sharpness[tag]);
         found = true;
       }
     }

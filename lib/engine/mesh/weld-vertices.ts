@@ -8,8 +8,19 @@ const WELD_SHARE = 1e-5;
 /** Vertices on open borders, ascending. */
 export function borderVertices(mesh: Topology): Int32Array {
   const onBorder = new Uint8Array(mesh.vertices);
-  for (let h = 0; h < mesh.twin.length; h++) if (mesh.twin[h] < 0) onBorder[mesh.vertexOf[h]] = onBorder[mesh.vertexOf[nextHalfEdge(mesh, h)]] = 1;
-  return Int32Array.from(onBorder.keys()).filter((vertex) => onBorder[vertex] === 1);
+  let found = 0;
+  const mark = (vertex: number): void => {
+    if (onBorder[vertex] === 0) found++;
+    onBorder[vertex] = 1;
+  };
+  for (let h = 0; h < mesh.twin.length; h++) {
+    if (mesh.twin[h] >= 0) continue;
+    mark(mesh.vertexOf[h]);
+    mark(mesh.vertexOf[nextHalfEdge(mesh, h)]);
+  }
+  const vertices = new Int32Array(found);
+  for (let vertex = mesh.vertices - 1; found > 0; vertex--) if (onBorder[vertex] === 1) vertices[--found] = vertex;
+  return vertices;
 }
 
 /** Distance in file units within which vertices on borders count as one: a share of the diagonal of the borders' box. */

@@ -1,5 +1,5 @@
 import type { MeasureOptions } from '../measured';
-import { borderEdgeOf, findBorders, isBorder } from '../mesh/border-loops';
+import { borderEdgeOf, findBorders } from '../mesh/border-loops';
 import type { Frames } from '../mesh/frames';
 import type { Bodies } from '../mesh/partition';
 import type { Topology } from '../mesh/topology';
@@ -10,7 +10,8 @@ import { integrateLoop } from '../schemes/loop';
 import { addCaps, type CapAmounts } from './caps';
 import { curveTable } from './curve-table';
 import { emptySums, type LimitSums } from './limit-sums';
-import { addPolyhedralMoments } from './polyhedral';
+import { watchShells } from '../shell/watch-shells';
+import { addPolyhedralMoments, addPolyhedralSurface } from './polyhedral';
 
 /** Moments of all bodies about their origins, caps not yet added. */
 export interface Integrated extends LimitSums {
@@ -18,13 +19,14 @@ export interface Integrated extends LimitSums {
   resolved: boolean;
 }
 
-/** Integrates the cage's own faces about the bodies' origins; border curves are the cage's edges. */
-export function integrateCage(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array): Integrated {
+/** Integrates the cage's own faces about the bodies' origins, their areas too where `withSurface`; border curves are the cage's edges. */
+export function integrateCage(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array, withSurface: boolean): Integrated {
   const sums = emptySums(bodies.bodies);
-  addPolyhedralMoments(mesh, frames.positions, bodies.bodyOf, frames.origins, sums.solid, sums.surface);
+  addPolyhedralMoments(mesh, frames.positions, bodies.bodyOf, frames.origins, sums.solid);
+  if (withSurface) addPolyhedralSurface(mesh, frames.positions, bodies.bodyOf, frames.origins, sums.surface);
   const p = frames.positions;
-  for (let h = 0; h < mesh.twin.length; h++) {
-    if (!isBorder(mesh, bodies.bodyOf, h) || borderEdgeOf(mesh, bodies.bodyOf, blocked, h) !== h) continue;
+  for (const h of bodies.borders) {
+    if (borderEdgeOf(mesh, bodies.bodyOf, blocked, h) !== h) continue;
     const face = mesh.faceOf[h];
     const a = 3 * mesh.vertexOf[h];
     const b = 3 * mesh.vertexOf[h + 1 === mesh.starts[face + 1] ? mesh.starts[face] : h + 1];
@@ -34,10 +36,11 @@ export function integrateCage(mesh: Topology, frames: Frames, bodies: Bodies, bl
 }
 
 /** Integrates the limit surface about the bodies' origins. */
-export function integrateLimit(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array, options: MeasureOptions): Integrated {
+export function integrateLimit(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array, options: MeasureOptions, shells = false): Integrated {
   const sums = emptySums(bodies.bodies);
-  const level = levelZero(mesh, frames.positions, bodies.bodyOf, blocked, options.boundary);
-  if (options.scheme === 'doo-sabin') return { ...sums, resolved: integrateDooSabin(level, frames.origins, sums) };
+  const level = levelZero(mesh, frames.positions, bodies.bodyOf, blocked, options.boundary, bodies.borders);
+  if (shells) watchShells(level, options.scheme, frames.origins, bodies.bodies, sums);
+  if (options.scheme === 'doo-sabin') return { ...sums, resolved: integrateDooSabin(level, options.boundary, frames.origins, sums) };
   const integrate = options.scheme === 'loop' ? integrateLoop : integrateCatmullClark;
   const resolved = integrate(level, options, frames.origins, sums);
   return { ...sums, resolved };
@@ -45,6 +48,6 @@ export function integrateLimit(mesh: Topology, frames: Frames, bodies: Bodies, b
 
 /** Closes the bodies by caps over their borders. */
 export function capBodies(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array, integrated: Integrated): CapAmounts {
-  const borders = findBorders(mesh, bodies.bodyOf, blocked);
+  const borders = findBorders(mesh, bodies, blocked);
   return addCaps(borders, curveTable(integrated.curves), frames.origins, integrated.solid, bodies.bodies);
 }

@@ -1,81 +1,125 @@
 import type { Topology } from '../mesh/topology';
 import { MOMENTS, type MomentSums } from './sums';
 
-/**
- * Adds the ten moments of the tetrahedron (0, a, b, c), signed by det(a, b, c), to `solid` [Mirtich 1996]: V; V/4 · Σv; V/20 · (Σ v vᵀ + (Σv)(Σv)ᵀ),
- * and the ten surface moments of the triangle a, b, c to `surface`: A; A/3 · Σv; A/12 · (the same). Returns the magnitude that the volume's rounding error is relative to.
- */
-function addTriangle(
-  ax: number, ay: number, az: number, bx: number, by: number, bz: number, cx: number, cy: number, cz: number, solid: Float64Array, surface: Float64Array,
-): number {
-  const px = ax * (by * cz - bz * cy), py = ay * (bz * cx - bx * cz), pz = az * (bx * cy - by * cx);
-  const volume = (px + py + pz) / 6;
-  const ux = bx - ax, uy = by - ay, uz = bz - az;
-  const vx = cx - ax, vy = cy - ay, vz = cz - az;
-  const nx = uy * vz - uz * vy, ny = uz * vx - ux * vz, nz = ux * vy - uy * vx;
-  const area = Math.sqrt(nx * nx + ny * ny + nz * nz) / 2;
-  const sx = ax + bx + cx, sy = ay + by + cy, sz = az + bz + cz;
-  const xx = ax * ax + bx * bx + cx * cx + sx * sx, yy = ay * ay + by * by + cy * cy + sy * sy, zz = az * az + bz * bz + cz * cz + sz * sz;
-  const xy = ax * ay + bx * by + cx * cy + sx * sy, xz = ax * az + bx * bz + cx * cz + sx * sz, yz = ay * az + by * bz + cy * cz + sy * sz;
-  addTen(solid, volume, volume / 4, volume / 20, sx, sy, sz, xx, yy, zz, xy, xz, yz);
-  addTen(surface, area, area / 3, area / 12, sx, sy, sz, xx, yy, zz, xy, xz, yz);
-  return (Math.abs(px) + Math.abs(py) + Math.abs(pz)) / 6;
-}
-
-function addTen(
-  out: Float64Array, zeroth: number, first: number, second: number, sx: number, sy: number, sz: number,
-  xx: number, yy: number, zz: number, xy: number, xz: number, yz: number,
-): void {
-  out[0] += zeroth;
-  out[1] += first * sx;
-  out[2] += first * sy;
-  out[3] += first * sz;
-  out[4] += second * xx;
-  out[5] += second * yy;
-  out[6] += second * zz;
-  out[7] += second * xy;
-  out[8] += second * xz;
-  out[9] += second * yz;
-}
+const moments = new Float64Array(MOMENTS);
 
 /**
- * Adds the moments of the cones from each body's origin to the cage's own faces, polygons as fans from their vertex mean.
- * `positions` and `origins` (x, y, z per body) share one frame. `surface` receives the surface moments about the same origins.
+ * Adds the moments of the cones from each body's origin to the cage's own faces, polygons as fans from their vertex mean. `positions` and `origins`
+ * (x, y, z per body) share one frame. A tetrahedron (0, a, b, c), signed by det(a, b, c), has V; V/4 · Σv; V/20 · (Σ v vᵀ + (Σv)(Σv)ᵀ) [Mirtich 1996].
  */
-export function addPolyhedralMoments(
-  mesh: Topology, positions: Float64Array, bodyOf: Int32Array, origins: Float64Array, solid: MomentSums, surface: MomentSums,
-): void {
+export function addPolyhedralMoments(mesh: Topology, positions: Float64Array, bodyOf: Int32Array, origins: Float64Array, solid: MomentSums): void {
+  const { starts, vertexOf } = mesh;
   const p = positions;
-  const faceSolid = new Float64Array(MOMENTS);
-  const faceSurface = new Float64Array(MOMENTS);
+  const apex = new Float64Array(3);
   for (let face = 0; face < mesh.faces; face++) {
-    const start = mesh.starts[face];
-    const end = mesh.starts[face + 1];
+    const start = starts[face];
+    const end = starts[face + 1];
     const n = end - start;
     const body = bodyOf[face];
     const ox = origins[3 * body], oy = origins[3 * body + 1], oz = origins[3 * body + 2];
+    fanApex(mesh, p, face, ox, oy, oz, apex);
+    const mx = apex[0], my = apex[1], mz = apex[2];
+    let v = 0, vx = 0, vy = 0, vz = 0, vxx = 0, vyy = 0, vzz = 0, vxy = 0, vxz = 0, vyz = 0, magnitude = 0;
     // Triangles are their own fan, from the first corner.
-    const first = 3 * mesh.vertexOf[start];
-    let mx = p[first] - ox, my = p[first + 1] - oy, mz = p[first + 2] - oz;
-    if (n !== 3) {
-      mx = my = mz = 0;
-      for (let h = start; h < end; h++) {
-        const v = 3 * mesh.vertexOf[h];
-        mx += (p[v] - ox) / n;
-        my += (p[v + 1] - oy) / n;
-        mz += (p[v + 2] - oz) / n;
-      }
+    let last = 3 * vertexOf[n === 3 ? start + 1 : end - 1];
+    let ax = p[last] - ox, ay = p[last + 1] - oy, az = p[last + 2] - oz;
+    for (let h = n === 3 ? start + 2 : start; h < end; h++) {
+      last = 3 * vertexOf[h];
+      const bx = p[last] - ox, by = p[last + 1] - oy, bz = p[last + 2] - oz;
+      const px = mx * (ay * bz - az * by), py = my * (az * bx - ax * bz), pz = mz * (ax * by - ay * bx);
+      const d = px + py + pz;
+      magnitude += Math.abs(px) + Math.abs(py) + Math.abs(pz);
+      const sx = mx + ax + bx, sy = my + ay + by, sz = mz + az + bz;
+      v += d;
+      vx += d * sx;
+      vy += d * sy;
+      vz += d * sz;
+      vxx += d * (mx * mx + ax * ax + bx * bx + sx * sx);
+      vyy += d * (my * my + ay * ay + by * by + sy * sy);
+      vzz += d * (mz * mz + az * az + bz * bz + sz * sz);
+      vxy += d * (mx * my + ax * ay + bx * by + sx * sy);
+      vxz += d * (mx * mz + ax * az + bx * bz + sx * sz);
+      vyz += d * (my * mz + ay * az + by * bz + sy * sz);
+      ax = bx;
+      ay = by;
+      az = bz;
     }
-    faceSolid.fill(0);
-    faceSurface.fill(0);
-    for (let h = n === 3 ? start + 1 : start; h < (n === 3 ? start + 2 : end); h++) {
-      const a = 3 * mesh.vertexOf[h];
-      const b = 3 * mesh.vertexOf[h + 1 === end ? start : h + 1];
-      const ax = p[a] - ox, ay = p[a + 1] - oy, az = p[a + 2] - oz;
-      const bx = p[b] - ox, by = p[b + 1] - oy, bz = p[b + 2] - oz;
-      solid.magnitudes[body] += addTriangle(mx, my, mz, ax, ay, az, bx, by, bz, faceSolid, faceSurface);
-    }
-    solid.add(body, faceSolid, 0);
-    surface.add(body, faceSurface, 0);
+    solid.magnitudes[body] += magnitude / 6;
+    put(v / 6, vx / 24, vy / 24, vz / 24, vxx / 120, vyy / 120, vzz / 120, vxy / 120, vxz / 120, vyz / 120);
+    solid.add(body, moments, 0);
   }
+}
+
+/** Adds the surface moments of the same triangles about the bodies' origins: A; A/3 · Σv; A/12 · (Σ v vᵀ + (Σv)(Σv)ᵀ). */
+export function addPolyhedralSurface(mesh: Topology, positions: Float64Array, bodyOf: Int32Array, origins: Float64Array, surface: MomentSums): void {
+  const { starts, vertexOf } = mesh;
+  const p = positions;
+  const apex = new Float64Array(3);
+  for (let face = 0; face < mesh.faces; face++) {
+    const start = starts[face];
+    const end = starts[face + 1];
+    const n = end - start;
+    const body = bodyOf[face];
+    const ox = origins[3 * body], oy = origins[3 * body + 1], oz = origins[3 * body + 2];
+    fanApex(mesh, p, face, ox, oy, oz, apex);
+    const mx = apex[0], my = apex[1], mz = apex[2];
+    let s = 0, x = 0, y = 0, z = 0, xx = 0, yy = 0, zz = 0, xy = 0, xz = 0, yz = 0;
+    let last = 3 * vertexOf[n === 3 ? start + 1 : end - 1];
+    let ax = p[last] - ox, ay = p[last + 1] - oy, az = p[last + 2] - oz;
+    for (let h = n === 3 ? start + 2 : start; h < end; h++) {
+      last = 3 * vertexOf[h];
+      const bx = p[last] - ox, by = p[last + 1] - oy, bz = p[last + 2] - oz;
+      const ux = ax - mx, uy = ay - my, uz = az - mz;
+      const wx = bx - mx, wy = by - my, wz = bz - mz;
+      const nx = uy * wz - uz * wy, ny = uz * wx - ux * wz, nz = ux * wy - uy * wx;
+      const area = Math.sqrt(nx * nx + ny * ny + nz * nz);
+      const sx = mx + ax + bx, sy = my + ay + by, sz = mz + az + bz;
+      s += area;
+      x += area * sx;
+      y += area * sy;
+      z += area * sz;
+      xx += area * (mx * mx + ax * ax + bx * bx + sx * sx);
+      yy += area * (my * my + ay * ay + by * by + sy * sy);
+      zz += area * (mz * mz + az * az + bz * bz + sz * sz);
+      xy += area * (mx * my + ax * ay + bx * by + sx * sy);
+      xz += area * (mx * mz + ax * az + bx * bz + sx * sz);
+      yz += area * (my * mz + ay * az + by * bz + sy * sz);
+      ax = bx;
+      ay = by;
+      az = bz;
+    }
+    put(s / 2, x / 6, y / 6, z / 6, xx / 24, yy / 24, zz / 24, xy / 24, xz / 24, yz / 24);
+    surface.add(body, moments, 0);
+  }
+}
+
+/** Where a face's fan starts, about the origin (ox, oy, oz): a triangle's first corner, else the mean of its vertices. */
+function fanApex({ starts, vertexOf }: Topology, p: Float64Array, face: number, ox: number, oy: number, oz: number, apex: Float64Array): void {
+  const start = starts[face];
+  const end = starts[face + 1];
+  const n = end - start;
+  let x = 0, y = 0, z = 0;
+  for (let h = start; h < (n === 3 ? start + 1 : end); h++) {
+    const v = 3 * vertexOf[h];
+    x += p[v] - ox;
+    y += p[v + 1] - oy;
+    z += p[v + 2] - oz;
+  }
+  const count = n === 3 ? 1 : n;
+  apex[0] = x / count;
+  apex[1] = y / count;
+  apex[2] = z / count;
+}
+
+function put(v: number, x: number, y: number, z: number, xx: number, yy: number, zz: number, xy: number, xz: number, yz: number): void {
+  moments[0] = v;
+  moments[1] = x;
+  moments[2] = y;
+  moments[3] = z;
+  moments[4] = xx;
+  moments[5] = yy;
+  moments[6] = zz;
+  moments[7] = xy;
+  moments[8] = xz;
+  moments[9] = yz;
 }
