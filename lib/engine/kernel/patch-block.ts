@@ -1,6 +1,6 @@
 import { inputStride, NET_VALUES, OUTPUT_STRIDE, type PatchKernel, type PatchKind } from './patch-kinds';
 import { scalarKernel } from './scalar-kernel';
-import { vectorKernel } from './vector-kernel';
+import { newVectorKernel, vectorKernel } from './vector-kernel';
 
 const MAGNITUDE_AT = 40;
 const COARSE_AREA_AT = 42;
@@ -30,11 +30,11 @@ export class PatchBlock {
     return (patch >> 1) * this.stride + (patch & 1);
   }
 
-  /** Puts a net (rows of x, y, z as the kind has them) and the point that its moments shall be about. */
-  put(patch: number, net: Float64Array, ox: number, oy: number, oz: number): void {
+  /** Puts a net (rows of x, y, z as the kind has them, from `net[from]` on) and the point that its moments shall be about. */
+  put(patch: number, net: Float64Array, ox: number, oy: number, oz: number, from = 0): void {
     const { input, values } = this;
     const at = this.at(patch);
-    for (let i = 0; i < values; i++) input[at + 2 * i] = net[i];
+    for (let i = 0; i < values; i++) input[at + 2 * i] = net[from + i];
     this.putOrigin(patch, ox, oy, oz);
   }
 
@@ -96,6 +96,11 @@ export function ownKernel(kind: PatchKind): PatchKernel {
     own.set(kind, kernel);
   }
   return kernel;
+}
+
+/** A kernel with a memory of its own, for work in between that must not overwrite what blocks over the thread's other kernels hold. */
+export function separateKernel(kind: PatchKind): PatchKernel {
+  return newVectorKernel(kind) ?? scalarKernel(kind);
 }
 
 /** Lets blocks of patches in this thread be computed by a team of threads (see `teamKernels`) from now on, or (null) by this thread alone again. */

@@ -23,7 +23,7 @@ const kernels = new Map<PatchKind, PatchKernel | null>();
 export function vectorKernel(kind: PatchKind): PatchKernel | null {
   let kernel = kernels.get(kind);
   if (kernel === undefined) {
-    kernel = makeKernel(kind);
+    kernel = newVectorKernel(kind);
     kernels.set(kind, kernel);
   }
   return kernel;
@@ -39,8 +39,8 @@ function compiled(): WebAssembly.Module | null {
   return code;
 }
 
-/** An instance of its own per kind, so that each has its own memory. */
-function makeKernel(kind: PatchKind): PatchKernel | null {
+/** A vector kernel of a kind with a memory of its own; null where this machine has none. */
+export function newVectorKernel(kind: PatchKind): PatchKernel | null {
   const made = compiled();
   if (made === null) return null;
   try {

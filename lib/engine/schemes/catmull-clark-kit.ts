@@ -1,11 +1,6 @@
-import { ownKernel, PatchBlock } from '../kernel/patch-block';
-import { BICUBIC_RULE } from '../kernel/regular-rules';
-import { bicubicMoments } from '../patches/bicubic';
-import { bicubicArea, mendSurfaceMoments } from '../patches/bicubic-surface';
-import { gaussRule } from '../patches/gauss-rule';
 import { approximateLimit, fillChildNet, refineFan } from './catmull-clark-fan';
 import { fillNet } from './catmull-clark-net';
-import type { FanKit } from './fan-kit';
+import { fanRule, type FanKit } from './fan-kit';
 import { spokeAt, type FanState } from './fan-state';
 import { faceSideAt, type LevelMesh } from './level-mesh';
 
@@ -34,14 +29,11 @@ function smoothShrinkage(n: number): number {
   return (5 + c + Math.sqrt((c + 9) * (c + 1))) / 16;
 }
 
-let block: PatchBlock | undefined;
-
 /** Fans of Catmull-Clark surfaces: sectors are quads, patches bicubic. */
 export const CATMULL_CLARK_KIT: FanKit = {
   sides: 4,
   arriving: 3,
   sideAt: faceSideAt,
-  mostNodes: 7,
   fewestNodes: 3,
   smoothShrinkage,
   largestShrinkage: smoothShrinkage(Infinity),
@@ -50,16 +42,9 @@ export const CATMULL_CLARK_KIT: FanKit = {
   refine: refineFan,
   limit: approximateLimit,
   fillChild: fillChildNet,
-  // This thread's own kernel even within a team: a fan has too few patches to share.
-  get block() {
-    block ??= new PatchBlock(ownKernel('bicubic'));
-    return block;
-  },
-  moments: (values, ox, oy, oz, nodes, solid, surface) => bicubicMoments(values, ox, oy, oz, gaussRule(nodes), solid, surface),
-  mendSurface: (values, ox, oy, oz, surface) => mendSurfaceMoments(values, ox, oy, oz, surface, bicubicArea(values)),
   addSide: (curves, values, side, edge, weight, from, share, shift) => curves.addSide(values, side, edge, weight, from, share, shift),
   outerSides: [[0, 1, 1, 0], [1, 1, 1, 1], [1, 2, 2, 0], [2, 2, 2, 1]],
-  rule: BICUBIC_RULE,
+  rule: fanRule('bicubic'),
   fillPoints: fillChildNet,
   hasSpokes: true,
   innerPoints: [0, 3, 9, 12],

@@ -1,14 +1,14 @@
-import { ownKernel, PatchBlock } from '../kernel/patch-block';
+import type { PatchBlock } from '../kernel/patch-block';
 import type { LimitSums } from '../moments/limit-sums';
 import { MOMENTS } from '../moments/sums';
-import { AREA_TOLERANCE, areaError } from '../patches/bicubic-surface';
+import { AREA_TOLERANCE, areaError, mendSurface } from '../patches/mend-surface';
 import type { Fans } from './classify-vertices';
 import type { FanKit } from './fan-kit';
 import { packPoints } from './fan-points';
 import { RIM_POWERS } from './fan-rim';
 import { makeFanState, type FanState } from './fan-state';
 import { fanKey, fanTable, type FanTable } from './fan-tables';
-import { integrateFan } from './integrate-fan';
+import { fanBlock, integrateFan } from './integrate-fan';
 import type { LevelMesh } from './level-mesh';
 import { addRimChain, moveMoments } from './rim-chain';
 import { applyRows } from './sparse-rows';
@@ -25,18 +25,6 @@ const LEVEL_SUMS = 2 * MOMENTS + 1;
 
 const solid = new Float64Array(MOMENTS);
 const surface = new Float64Array(MOMENTS);
-
-const blocks = new Map<FanKit, PatchBlock>();
-
-/** This thread's own kernel even within a team: batches are small. */
-function blockOf(kit: FanKit): PatchBlock {
-  let block = blocks.get(kit);
-  if (block === undefined) {
-    block = new PatchBlock(ownKernel(kit.rule.kind));
-    blocks.set(kit, block);
-  }
-  return block;
-}
 
 /**
  * Fans of one kind and one body whose moments are computed together: cones from each fan's limit point, a level sequence of 3n regular patches closed by
@@ -71,7 +59,7 @@ class FanBatch {
   constructor(private readonly kit: FanKit, kind: FanState, private readonly sums: LimitSums) {
     this.scratch = kind;
     this.table = fanTable(kit, kind);
-    this.block = blockOf(kit);
+    this.block = fanBlock(kit.rule.kind);
     this.net = new Float64Array(this.block.values);
     this.patches = 3 * kind.sectors;
     this.most = Math.max(1, Math.floor(this.block.size / this.patches));
@@ -193,7 +181,7 @@ class FanBatch {
     let error = areaError(surface[0], coarseArea);
     if (error > AREA_TOLERANCE * surface[0]) {
       this.block.net(place, this.net);
-      error = this.kit.rule.mend(this.net, 0, 0, 0, surface, coarseArea);
+      error = mendSurface(this.kit.rule.kind, this.net, 0, 0, 0, surface, coarseArea);
     }
     this.sums.surfaceError[this.body] += weight * error;
     if (error > this.worstError) {

@@ -1,16 +1,28 @@
-import type { PatchBlock } from '../kernel/patch-block';
-import type { RegularRule } from '../kernel/regular-patches';
+import type { PatchKind } from '../kernel/patch-kinds';
 import type { BorderCurves } from '../moments/border-curves';
+import { AREA_NODES } from '../patches/mend-surface';
 import type { FanState } from './fan-state';
 import type { LevelMesh } from './level-mesh';
+
+/** Kind of a fan's patches; Gauss nodes to begin with and of the coarse area beside them. */
+export interface FanRule {
+  kind: PatchKind;
+  nodes: number;
+  coarseNodes: number;
+}
+
+/** The rule for fans of a kind of patches: as many nodes as the area needs, the solid moments are exact then. */
+export function fanRule(kind: PatchKind): FanRule {
+  const [nodes, coarseNodes] = AREA_NODES[kind];
+  return { kind, nodes, coarseNodes };
+}
 
 /** What the level sequence of a fan needs to know of a scheme. Each sector has three regular children: 0 beside its first spoke, 1, and 2 beside its second. */
 export interface FanKit {
   /** Corners of a face; side 0 of a face leaves the centre, side `arriving` runs back to it. */
   sides: number;
   arriving: number;
-  /** Gauss nodes a direction that are exact, and the fewest that are worth trying. */
-  mostNodes: number;
+  /** Gauss nodes a direction, the fewest that are worth trying. */
   fewestNodes: number;
   /** Half-edge of side `side` of the sector at a fan's corner. */
   sideAt(mesh: LevelMesh, corner: number, side: number): number;
@@ -25,18 +37,14 @@ export interface FanKit {
   refine(from: FanState, to: FanState): void;
   /** Limit point of the centre. */
   limit(fan: FanState): Float64Array;
+  /** Fills the net of a child as `addSide` wants it. */
   fillChild(fan: FanState, sector: number, child: number, net: Float64Array): void;
-  /** Computes many patches at once as `moments` does, to the same bits; null where the scheme has no such kernel. */
-  block: PatchBlock | null;
-  /** Ten solid and ten surface moments of a child's patch about (ox, oy, oz); returns the magnitude that rounding is relative to. */
-  moments(net: Float64Array, ox: number, oy: number, oz: number, nodes: number, solid: Float64Array, surface: Float64Array): number;
-  /** Mends the surface moments found with `mostNodes`; returns the estimated error of the area. */
-  mendSurface(net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array): number;
+  /** Adds a side of a net that `fillChild` filled as a curve. */
   addSide(curves: BorderCurves, net: Float64Array, side: number, edge: number, weight: number, from: number, share: number, shift: ArrayLike<number>): void;
   /** Which sides of the children lie on sides of the sector's face away from the centre, and on which half of those. */
   outerSides: readonly (readonly [child: number, side: number, faceSide: number, half: number])[];
-  /** How the kernel computes child patches: nodes to begin with, those of the coarse area beside them, and how areas are mended. */
-  rule: RegularRule;
+  /** How the kernel computes child patches: nodes to begin with and those of the coarse area beside them. */
+  rule: FanRule;
   /** Fills the net of a child as that kernel wants it. */
   fillPoints(fan: FanState, sector: number, child: number, points: Float64Array): void;
   /** Which points refinement reads: the centre and rings 1 and 2 of the spokes, or none of those; and offsets of a sector's inner points. */

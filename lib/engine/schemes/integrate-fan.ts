@@ -1,6 +1,10 @@
+import { ownKernel, PatchBlock } from '../kernel/patch-block';
+import type { PatchKind } from '../kernel/patch-kinds';
+import { patchMoments } from '../kernel/scalar-kernel';
 import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
 import { MOMENTS } from '../moments/sums';
+import { mendSurface } from '../patches/mend-surface';
 import type { Fans } from './classify-vertices';
 import type { FanKit } from './fan-kit';
 import { makeFanState, translateFan, type FanState } from './fan-state';
@@ -53,34 +57,31 @@ export function integrateFan(kit: FanKit, mesh: LevelMesh, fans: Fans, index: nu
   };
   const centre = originOf(0);
   const reach = Math.hypot(centre[0], centre[1], centre[2]) + state.spokes.reduce((far, value) => Math.max(far, Math.abs(value)), 0);
-  let nodes = kit.mostNodes;
+  const { kind, coarseNodes } = kit.rule;
+  const block = fanBlock(kind);
+  let nodes = kit.rule.nodes;
   let solidScale = 0;
   let areaScale = 0;
   let worst = 0;
   let worstError = 0;
-  const shared = kit.block;
-  const block = shared !== null && 3 * n <= shared.size ? shared : null;
   for (let k = 0; k < levels; k++) {
     kit.refine(state, finer);
     [state, finer] = [finer, state];
-    if (block !== null) {
-      for (let patch = 0; patch < 3 * n; patch++) {
-        const j = Math.floor(patch / 3);
-        const [ox, oy, oz] = originOf(j);
-        kit.fillChild(state, j, patch % 3, net);
-        block.put(patch, net, ox, oy, oz);
-      }
-      block.run(3 * n, nodes, 0);
-    }
+    const checked = nodes === kit.rule.nodes;
     for (let j = 0; j < n; j++) {
       const [ox, oy, oz] = originOf(j);
+      // As many sectors together as the block holds.
+      const place = 3 * (j % Math.floor(block.size / 3));
+      if (place === 0) runSectors(kit, block, state, j, originOf, nodes, checked ? coarseNodes : 0);
       for (let child = 0; child < 3; child++) {
-        if (block === null) kit.fillChild(state, j, child, net);
-        else block.net(3 * j + child, net);
-        if (bordered) addFanCurves(kit, mesh, corners[j], child, k, at(curveWeights, k), limit, sums.curves);
-        const magnitude = block === null ? kit.moments(net, ox, oy, oz, nodes, solid, surface) : block.read(3 * j + child, solid, surface);
-        if (nodes === kit.mostNodes) {
-          const error = kit.mendSurface(net, ox, oy, oz, surface);
+        if (bordered) {
+          kit.fillChild(state, j, child, net);
+          addFanCurves(kit, mesh, corners[j], child, k, at(curveWeights, k), limit, sums.curves);
+        }
+        const magnitude = block.read(place + child, solid, surface);
+        if (checked) {
+          block.net(place + child, net);
+          const error = mendSurface(kind, net, ox, oy, oz, surface, block.coarseArea(place + child));
           sums.surfaceError[kit.body(mesh, corners[j])] += Math.abs(at(table.surfaceWeights, k)) * error;
           if (error > worstError) {
             worstError = error;
@@ -112,14 +113,41 @@ export function integrateFan(kit: FanKit, mesh: LevelMesh, fans: Fans, index: nu
   finishFan(kit, mesh, corners, own, sums);
 }
 
+const blocks = new Map<PatchKind, PatchBlock>();
+
+/** Block for the patches of fans. This thread's own kernel even within a team: they are too few to share. */
+export function fanBlock(kind: PatchKind): PatchBlock {
+  let block = blocks.get(kind);
+  if (block === undefined) {
+    block = new PatchBlock(ownKernel(kind));
+    blocks.set(kind, block);
+  }
+  return block;
+}
+
+/** Computes the patches of as many sectors from `first` on as the block holds. */
+function runSectors(
+  kit: FanKit, block: PatchBlock, state: FanState, first: number, originOf: (j: number) => [number, number, number], nodes: number, coarseNodes: number,
+): void {
+  const sectors = Math.min(state.sectors - first, Math.floor(block.size / 3));
+  for (let i = 0; i < sectors; i++) {
+    const [ox, oy, oz] = originOf(first + i);
+    for (let child = 0; child < 3; child++) {
+      kit.fillPoints(state, first + i, child, net);
+      block.put(3 * i + child, net, ox, oy, oz);
+    }
+  }
+  block.run(3 * sectors, nodes, coarseNodes);
+}
+
 /** Whether one node less would do for a patch; leaves both results in `solid`, `surface` and `coarseSolid`, `coarseSurface`. */
 function probe(
   kit: FanKit, state: FanState, sector: number, child: number, [ox, oy, oz]: [number, number, number], nodes: number, patches: number,
   solidScale: number, areaScale: number, reach: number,
 ): boolean {
-  kit.fillChild(state, sector, child, net);
-  kit.moments(net, ox, oy, oz, nodes, solid, surface);
-  kit.moments(net, ox, oy, oz, nodes - 1, coarseSolid, coarseSurface);
+  kit.fillPoints(state, sector, child, net);
+  patchMoments(kit.rule.kind, net, ox, oy, oz, nodes, solid, surface);
+  patchMoments(kit.rule.kind, net, ox, oy, oz, nodes - 1, coarseSolid, coarseSurface);
   if (!(patches * Math.abs(coarseSurface[0] - surface[0]) <= SURFACE_TOLERANCE * areaScale)) return false;
   for (let i = 0; i < MOMENTS; i++) {
     const scale = i === 0 ? 1 : i < 4 ? reach : reach * reach;

@@ -1,8 +1,6 @@
-import { TRIANGLE_RULE } from '../kernel/regular-rules';
 import type { BorderCurves } from '../moments/border-curves';
 import { triangleToPowers } from '../patches/box-spline';
-import { boxSplineMoments, mendTriangleSurface, TRIANGLE_NODES } from '../patches/box-spline-moments';
-import type { FanKit } from './fan-kit';
+import { fanRule, type FanKit } from './fan-kit';
 import { spokeAt, type FanState } from './fan-state';
 import { faceSideAt, type LevelMesh } from './level-mesh';
 import { fillLoopChild, loopLimit, refineLoopFan } from './loop-fan';
@@ -73,7 +71,6 @@ export const LOOP_KIT: FanKit = {
   sides: 3,
   arriving: 2,
   sideAt: faceSideAt,
-  mostNodes: TRIANGLE_NODES,
   fewestNodes: 4,
   smoothShrinkage,
   largestShrinkage: 5 / 8,
@@ -82,12 +79,9 @@ export const LOOP_KIT: FanKit = {
   refine: refineLoopFan,
   limit: loopLimit,
   fillChild: fillLoopChild,
-  block: null,
-  moments: boxSplineMoments,
-  mendSurface: mendTriangleSurface,
   addSide: addTriangleSide,
   outerSides: [[0, 1, 1, 0], [2, 1, 1, 1]],
-  rule: TRIANGLE_RULE,
+  rule: fanRule('triangle'),
   fillPoints: fillLoopChild,
   hasSpokes: true,
   innerPoints: [0],

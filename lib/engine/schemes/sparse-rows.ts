@@ -25,6 +25,15 @@ export class RowBuilder {
     }
   }
 
+  /** Sets a row by its factors of all columns. */
+  set(row: number, factors: readonly number[]): void {
+    factors.forEach((factor, column) => {
+      if (factor === 0) return;
+      this.columns[row].push(column);
+      this.factors[row].push(factor);
+    });
+  }
+
   /** A row as text: equal rows have equal text. */
   key(row: number): string {
     return `${this.columns[row].join()}|${this.factors[row].join()}`;

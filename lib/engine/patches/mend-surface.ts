@@ -1,0 +1,100 @@
+import { PatchBlock, separateKernel } from '../kernel/patch-block';
+import type { PatchKind } from '../kernel/patch-kinds';
+import { applyRows } from '../schemes/sparse-rows';
+import { splitMatrix } from './split-net';
+
+/** Gauss nodes a direction by which a patch's surface is measured, and of the rule whose area the finer one's is compared with. */
+export const AREA_NODES: Readonly<Record<PatchKind, readonly [fine: number, coarse: number]>> = { bicubic: [7, 4], biquadratic: [7, 4], triangle: [9, 6] };
+
+/** Part of a patch's area that its error may be; beyond it the patch is quartered. */
+export const AREA_TOLERANCE = 1e-12;
+
+const MOST_QUARTERINGS = 10;
+/** Share of a patch's difference that its quarters must take off it for more quartering to be worth while; a spoilt rule gains nothing. */
+const LEAST_GAIN = 0.3;
+/** Quarterings that need no gain: a sharp bend shows none before patches of its own size. */
+const PATIENCE = 5;
+
+/** For an analytic integrand the error of n nodes falls as ρ^−2n, so that of the finer rule is that of the coarser to the power 3/2 at least. */
+export function areaError(fine: number, coarse: number): number {
+  if (!(fine > 0)) return 0;
+  const change = Math.min(1, Math.abs(fine - coarse) / fine);
+  return fine * change * Math.sqrt(change);
+}
+
+interface Mender {
+  block: PatchBlock;
+  /** Nets of four quarters, by depth. */
+  nets: Float64Array[];
+}
+
+const menders = new Map<PatchKind, Mender>();
+const solid = new Float64Array(10);
+
+/**
+ * Mends the ten surface moments about (ox, oy, oz) of a patch with the net `net` [3 point + axis], whose area by the two rules of AREA_NODES is `surface[0]` and
+ * `coarseArea`: the integrand holds a root, so the error is estimated by comparing the rules, and the patch quartered until it is within `tolerance` (an area).
+ * Returns the estimated error of the area.
+ */
+export function mendSurface(
+  kind: PatchKind, net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array, coarseArea: number, tolerance = AREA_TOLERANCE * surface[0],
+): number {
+  const error = areaError(surface[0], coarseArea);
+  if (!(error > tolerance)) return error;
+  const before = Math.abs(surface[0] - coarseArea);
+  surface.fill(0);
+  return quarter(kind, menderOf(kind), net, 0, [ox, oy, oz], before, tolerance, 1, surface);
+}
+
+/** Puts the ten surface moments of a patch by the rules of AREA_NODES into `surface`, mended if need be; returns the estimated error of the area. */
+export function measureSurface(kind: PatchKind, net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array): number {
+  const { block } = menderOf(kind);
+  block.put(0, net, ox, oy, oz);
+  block.run(1, ...AREA_NODES[kind]);
+  block.read(0, solid, surface);
+  return mendSurface(kind, net, ox, oy, oz, surface, block.coarseArea(0));
+}
+
+function menderOf(kind: PatchKind): Mender {
+  let mender = menders.get(kind);
+  if (mender === undefined) {
+    mender = { block: new PatchBlock(separateKernel(kind)), nets: [] };
+    menders.set(kind, mender);
+  }
+  return mender;
+}
+
+/** Adds the moments of the quarters of the patch with the net at `source[from]`, quartered again where they err too much; returns their estimated error. */
+function quarter(
+  kind: PatchKind, mender: Mender, source: Float64Array, from: number, origin: readonly [number, number, number], before: number, tolerance: number, depth: number,
+  surface: Float64Array,
+): number {
+  const { block } = mender;
+  const values = block.values;
+  const nets = (mender.nets[depth] ??= new Float64Array(4 * values));
+  applyRows(splitMatrix(kind), source, from, nets, 0);
+  for (let i = 0; i < 4; i++) block.put(i, nets, origin[0], origin[1], origin[2], i * values);
+  const [fine, coarse] = AREA_NODES[kind];
+  block.run(4, fine, coarse);
+  const moments = new Float64Array(40);
+  const changes = [0, 0, 0, 0];
+  const errors = [0, 0, 0, 0];
+  for (let i = 0; i < 4; i++) {
+    const own = moments.subarray(10 * i, 10 * i + 10);
+    block.read(i, solid, own);
+    changes[i] = Math.abs(own[0] - block.coarseArea(i));
+    errors[i] = areaError(own[0], block.coarseArea(i));
+  }
+  const goOn = depth < PATIENCE || (depth < MOST_QUARTERINGS && changes[0] + changes[1] + changes[2] + changes[3] < (1 - LEAST_GAIN) * before);
+  let error = 0;
+  for (let i = 0; i < 4; i++) {
+    if (goOn && errors[i] > tolerance) {
+      error += quarter(kind, mender, nets, i * values, origin, changes[i], tolerance, depth + 1, surface);
+      continue;
+    }
+    // What is given up unresolved does not converge geometrically: there the whole difference counts.
+    error += errors[i] > tolerance ? changes[i] : errors[i];
+    for (let k = 0; k < 10; k++) surface[k] += moments[10 * i + k];
+  }
+  return error;
+}
