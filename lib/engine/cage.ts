@@ -55,6 +55,7 @@ export interface Cage {
   warnings: FormatWarning[];
 }
 
+/** What a file held that was odd but could be read; line and column from 1. */
 export interface FormatWarning {
   code: string;
   message: string;

@@ -10,6 +10,7 @@ export interface ComparedValue {
   freeAxes: '' | '12' | '23' | '123';
 }
 
+/** How two values of one part differ. */
 export interface ValueComparison {
   /** Relative: 0.09 where the mass grew by 9 %. */
   massChange: number;

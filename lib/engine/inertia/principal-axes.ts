@@ -6,6 +6,7 @@ export const FREE_AXES_GAP = 1e-6;
 
 export type FreeAxes = '' | '12' | '23' | '123';
 
+/** Principal moments and axes of an inertia matrix. */
 export interface PrincipalFrame {
   /** Principal moments, ascending. */
   principal: Three;

@@ -18,6 +18,7 @@ export interface BorderLoop {
   steps: number[];
 }
 
+/** Borders of bodies as segments and the loops that they make. */
 export interface Borders {
   segments: BorderSegment[];
   loops: BorderLoop[];

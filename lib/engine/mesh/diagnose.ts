@@ -49,6 +49,7 @@ export function diagnoseStructure(cage: Cage, mesh: Topology, defects: EdgeDefec
   return bad;
 }
 
+/** x, y, z of a vertex in the file's frame; null where there is no such vertex. */
 export function positionOf(cage: Cage, vertex: number): [number, number, number] | null {
   if (3 * vertex + 2 >= cage.positions.length) return null;
   return [cage.positions[3 * vertex], cage.positions[3 * vertex + 1], cage.positions[3 * vertex + 2]];

@@ -35,6 +35,7 @@ export interface Inside {
   outerFace: number;
 }
 
+/** How the connected pieces of a cage lie to each other. */
 export interface PieceRelations {
   pieceOf: Int32Array;
   /** First face of each piece. */

@@ -32,11 +32,13 @@ export interface EdgeDefects {
   strayCreases: number[];
 }
 
+/** The half-edge after this one around the same face, counter-clockwise. */
 export function nextHalfEdge(mesh: Topology, h: number): number {
   const face = mesh.faceOf[h];
   return h + 1 === mesh.starts[face + 1] ? mesh.starts[face] : h + 1;
 }
 
+/** The half-edge before this one around the same face. */
 export function previousHalfEdge(mesh: Topology, h: number): number {
   const face = mesh.faceOf[h];
   return h === mesh.starts[face] ? mesh.starts[face + 1] - 1 : h - 1;

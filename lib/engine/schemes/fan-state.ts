@@ -15,6 +15,7 @@ export interface FanState {
   inner: Float64Array;
 }
 
+/** A fan of so many sectors whose points are still zero. */
 export function makeFanState(sectors: number, closed: boolean, sharpFirst: boolean, centreRule: number): FanState {
   return {
     sectors, closed, sharpFirst, centreRule,
