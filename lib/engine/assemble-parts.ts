@@ -6,6 +6,8 @@ import type { CapAmounts } from './moments/caps';
 import { largestRuleDefect, solidErrorEstimate, surfaceErrorEstimate } from './moments/error-estimate';
 import type { Integrated } from './moments/integrate-limit';
 import { centralMoments, MOMENTS } from './moments/sums';
+import { makeHollow } from './shell/make-hollow';
+import type { ShellBody } from './shell/shell-sums';
 
 /** Volume relative to the cube of a body's size below which a centroid would be rounding only. */
 const NO_VOLUME = 1e-13;
@@ -14,9 +16,10 @@ const NO_VOLUME = 1e-13;
 const SHEET_CAP_SHARE = 0.25;
 const SHEET_ROUNDNESS = 0.02;
 
-/** Puts the sums into parts and components. */
+/** Puts the sums into parts and components; `shells` per body where they were measured. */
 export function assembleParts(
   mesh: Topology, bodies: Bodies, blocked: Uint8Array, frames: Frames, limit: Integrated, ownCage: Integrated, caps: CapAmounts,
+  shells: readonly ShellBody[] | null = null,
 ): MeasuredPart[] {
   const parts = emptyParts(mesh, bodies);
   const faces = new Int32Array(bodies.bodies);
@@ -33,7 +36,7 @@ export function assembleParts(
       part.bounds[3 + axis] = Math.max(part.bounds[3 + axis], frames.boxes[6 * body + 3 + axis]);
     }
     if (blocked[body] === 1) continue;
-    part.components.push(makeComponent(body, faces[body], frames, limit, ownCage, defect));
+    part.components.push(makeComponent(body, faces[body], frames, limit, ownCage, defect, shells?.[body] ?? null));
     capArea[index] += caps.area[body];
     capVolume[index] += caps.volume[body];
   }
@@ -64,7 +67,9 @@ function emptyParts(mesh: Topology, bodies: Bodies): MeasuredPart[] {
   return parts;
 }
 
-function makeComponent(body: number, faces: number, frames: Frames, limit: Integrated, ownCage: Integrated, defect: number): MeasuredComponent {
+function makeComponent(
+  body: number, faces: number, frames: Frames, limit: Integrated, ownCage: Integrated, defect: number, shell: ShellBody | null,
+): MeasuredComponent {
   const at = 3 * body;
   const origin: Three = [0, 1, 2].map((axis) => frames.pieceCentres[at + axis] + frames.origins[at + axis]) as Three;
   const box = frames.boxes.subarray(6 * body, 6 * body + 6);
@@ -76,6 +81,8 @@ function makeComponent(body: number, faces: number, frames: Frames, limit: Integ
   const solid = centralMoments(moments, origin, areaCentre, none);
   const cage: SolidMoments = limit === ownCage ? solid : centralMoments(ownCage.solid.total(body), origin, areaCentre, none);
   const surface = centralMoments(area, origin, areaCentre, 0);
+  const surfaceError = surfaceErrorEstimate(area[0], limit.surfaceError[body]);
+  const hollow = shell === null ? { hollow: null, hollowLimits: null } : makeHollow(area, surfaceError, shell, origin, solid.centroid, size);
   return {
     faces,
     solid,
@@ -83,7 +90,7 @@ function makeComponent(body: number, faces: number, frames: Frames, limit: Integ
     cage,
     ...hollow,
     errorEstimate: solidErrorEstimate(moments[0], limit.solid.magnitudes[body], limit.closingError, MOMENTS * body, size, defect),
-    surfaceErrorEstimate: surfaceErrorEstimate(area[0], limit.surfaceError[body]),
+    surfaceErrorEstimate: surfaceError,
   };
 }
 

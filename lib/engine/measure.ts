@@ -3,10 +3,9 @@ import type { Cage } from './cage';
 import type { MeasuredCage, MeasuredPart, MeasureOptions } from './measured';
 import { diagnoseOrientation } from './mesh/diagnose-orientation';
 import { diagnoseStructure, positionOf } from './mesh/diagnose';
+import { warnOfSharpness } from './mesh/diagnose-sharpness';
 import { counted, FindingList, placeOf } from './mesh/findings';
-import { isBorder } from './mesh/border-loops';
 import { makeFrames } from './mesh/frames';
-import { halfEdgeEnds } from './mesh/match-edges';
 import { mendCage } from './mesh/mend-cage';
 import { diagnoseNearCoincident } from './mesh/near-coincident';
 import { diagnoseOverlap } from './mesh/overlap';
@@ -14,9 +13,10 @@ import { partitionFaces, type Bodies } from './mesh/partition';
 import { relatePieces } from './mesh/relate-pieces';
 import { buildTopology, type Topology } from './mesh/topology';
 import { capBodies, integrateCage, integrateLimit } from './moments/integrate-limit';
+import { measuredShells } from './shell/measured-shells';
 
 /** Part of every geometry record's key: a change of any number that `measureCage` returns raises it. */
-export const ENGINE_VERSION = '1';
+export const ENGINE_VERSION = '2';
 
 /**
  * Measures a cage: per part and connected body volume, centroid and second moments of the limit solid, area and its moments, and the cage's own.
@@ -33,17 +33,17 @@ export function measureCage(given: Cage, options: MeasureOptions): MeasuredCage 
   const bad = findNotFinite(cage, findings) ? new Uint8Array(mesh.faces).fill(1) : diagnoseStructure(cage, mesh, defects, bodies, joined, findings);
   const blocked = blockedBodies(mesh, bodies, bad);
   if (options.scheme === 'loop') blockNotTriangles(cage, mesh, bodies, blocked, findings);
-  if (options.scheme === 'doo-sabin') blockBorders(mesh, bodies, blocked, findings);
+  if (options.scheme === 'doo-sabin') warnOfSharpness(cage, mesh, bodies, findings);
   const frames = makeFrames(mesh, cage.positions, bodies);
   const ownCage = integrateCage(mesh, frames, bodies, blocked, options.scheme === 'polyhedral');
   const cageCaps = capBodies(mesh, frames, bodies, blocked, ownCage);
-  const limit = options.scheme === 'polyhedral' ? ownCage : integrateLimit(mesh, frames, bodies, blocked, options);
+  const limit = options.scheme === 'polyhedral' ? ownCage : integrateLimit(mesh, frames, bodies, blocked, options, options.shells === true);
   const caps = limit === ownCage ? cageCaps : capBodies(mesh, frames, bodies, blocked, limit);
   if (!limit.resolved) {
     findings.add('not_resolved', 'problem', null, null, () => 'The surface could not be resolved by refinement; lower the sharpness of its creases.');
     blocked.fill(1);
   }
-  const parts = assembleParts(mesh, bodies, blocked, frames, limit, ownCage, caps);
+  const parts = assembleParts(mesh, bodies, blocked, frames, limit, ownCage, caps, measuredShells(mesh, frames, bodies, limit, options));
   const relations = relatePieces(mesh, cage.positions, bodies, leftOut(mesh, bodies, blocked, parts), options);
   diagnoseOrientation(cage, mesh, bodies, blocked, parts, relations, findings);
   diagnoseOverlap(cage, mesh, bodies, relations, findings);
@@ -84,19 +84,6 @@ function blockNotTriangles(cage: Cage, mesh: Topology, bodies: Bodies, blocked: 
   }
   const spoiltParts = new Uint8Array(bodies.partNames.length);
   for (let face = 0; face < mesh.faces; face++) if (spoilt[bodies.pieceOf[face]] === 1) spoiltParts[bodies.partOf[face]] = 1;
-  for (let body = 0; body < bodies.bodies; body++) if (spoiltParts[bodies.partOfBody[body]] === 1) blocked[body] = 1;
-}
-
-/** Doo-Sabin patches straddle the cage's edges and their borders are not measured yet: a body with a border, open or to another part, yields no number. */
-function blockBorders(mesh: Topology, bodies: Bodies, blocked: Uint8Array, findings: FindingList): void {
-  const spoiltParts = new Uint8Array(bodies.partNames.length);
-  for (let h = 0; h < mesh.twin.length; h++) {
-    if (!isBorder(mesh, bodies.bodyOf, h)) continue;
-    const part = bodies.partOf[mesh.faceOf[h]];
-    spoiltParts[part] = 1;
-    findings.add('scheme_not_measured', 'problem', bodies.partNames[part], placeOf({ face: mesh.faceOf[h], edge: halfEdgeEnds(mesh, h) }),
-      (n) => `${counted(n, 'edge is', 'edges are')} a border, which cannot be measured under the Doo-Sabin scheme yet; close the surface, take it whole or choose another scheme.`);
-  }
   for (let body = 0; body < bodies.bodies; body++) if (spoiltParts[bodies.partOfBody[body]] === 1) blocked[body] = 1;
 }
 

@@ -11,6 +11,8 @@ export interface MeasureOptions {
   weld?: boolean;
   /** Turns faces one way and outwards before measuring; not unless true. */
   turnFaces?: boolean;
+  /** Measures the walls of hollow parts too; not unless true. No other number depends on it, so it is in no key. */
+  shells?: boolean;
 }
 
 /** problem: no value; warning: a value to be looked at; note: worth knowing. */
@@ -58,6 +60,15 @@ export interface SurfaceMoments {
   centralSecond: Six;
 }
 
+/** How far the polynomials of a hollow component may be trusted. */
+export interface ShellLimits {
+  /** Largest inward principal curvature of its surface, 1/length, and where (file frame): walls thicker than 1/curvature overlap themselves there. 0 where it never bends inwards. */
+  curvature: number;
+  position: Three;
+  /** Coefficients of t, t², t³ of what the wall's volume may be off by, and the moments of degree k relative to size^k: integration, and (t³) the corners where sharp edges meet. */
+  error: Three;
+}
+
 /**
  * A connected component of a part: what a geometry record stores. Signed volume: negative when the component is inside out or bounds a cavity.
  * `hollow` holds the coefficients of the shell's ten moments about `solid.centroid` as polynomials in the wall thickness:
@@ -70,12 +81,14 @@ export interface MeasuredComponent {
   /** Polyhedral moments of the control cage's own faces of this component. */
   cage: SolidMoments;
   hollow: Float64Array | null;
+  hollowLimits: ShellLimits | null;
   /** Estimate of max |Δ| / (|V|·L^degree) of the integration alone (coordinates taken as exact). */
   errorEstimate: number;
   /** Relative error estimate of the surface moments. */
   surfaceErrorEstimate: number;
 }
 
+/** A part with its components (none where a problem forbids a number); lengths in file units. */
 export interface MeasuredPart {
   name: string;
   faces: number;
@@ -92,6 +105,7 @@ export interface MeasuredPart {
   looksLikeSheet: boolean;
 }
 
+/** What measuring a cage gave: its parts and everything that was found. */
 export interface MeasuredCage {
   parts: MeasuredPart[];
   findings: Finding[];

@@ -1,5 +1,5 @@
 import type { LimitSums } from '../moments/limit-sums';
-import { AREA_TOLERANCE, areaError } from '../patches/bicubic-surface';
+import { AREA_TOLERANCE, areaError } from '../patches/mend-surface';
 import { currentKernel, PatchBlock } from './patch-block';
 import { NET_VALUES, type PatchKind } from './patch-kinds';
 
@@ -69,6 +69,10 @@ export class RegularPatches {
         sums.surface.add(body, surface, 0);
       } else sums.surface.add(body, output, at + 20, 2);
       sums.surfaceError[body] += error;
+      if (sums.shells !== null) {
+        block.net(patch, this.net);
+        sums.shells.patch(body, this.net);
+      }
     }
     this.count = 0;
   }

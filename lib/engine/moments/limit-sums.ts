@@ -1,3 +1,4 @@
+import type { ShellVisitor } from '../shell/shell-visitor';
 import { BorderCurves } from './border-curves';
 import { MOMENTS, MomentSums } from './sums';
 
@@ -10,6 +11,8 @@ export interface LimitSums {
   /** Per body: estimated error of the area. */
   surfaceError: Float64Array;
   curves: BorderCurves;
+  /** Shown every regular patch and fan, where shells are measured too. */
+  shells: ShellVisitor | null;
 }
 
 /** Empty sums. */
@@ -20,5 +23,6 @@ export function emptySums(bodies: number): LimitSums {
     closingError: new Float64Array(MOMENTS * bodies),
     surfaceError: new Float64Array(bodies),
     curves: new BorderCurves(),
+    shells: null,
   };
 }

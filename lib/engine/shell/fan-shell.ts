@@ -1,0 +1,115 @@
+import { tailLevels, tailWeights } from '../moments/tail-weights';
+import { SMOOTH_CENTRE, type Fans } from '../schemes/classify-vertices';
+import { makeFanState, translateFan } from '../schemes/fan-state';
+import type { LevelMesh } from '../schemes/level-mesh';
+import type { ShellErrors } from './bicubic-shell';
+import { gaussImage, type ImageSide } from './gauss-image';
+import type { ShellKit } from './shell-kits';
+import type { ShellBody } from './shell-sums';
+import { PAIRS, SHELL_TERMS, TERM_STARTS, type CurvaturePeak } from './shell-terms';
+
+/** Digits to which the tail is closed. */
+const TAIL_DIGITS = 11;
+
+/** What a rule may err by at the first level, relatively; patches shrink, so that it may err by more from level to level. */
+const FIRST_TOLERANCE = 3e-10;
+const TOLERANCE_GROWTH = 1.7;
+
+/** Fans with a crease or corner have no closed formula for how their terms fall; this holds all but slow rests. */
+const OTHER_FALL = 0.6;
+
+/** Levels whose curvature counts for the smallest radius: at an extraordinary point it may grow without end, over a vanishing area. */
+const CURVATURE_LEVELS = 3;
+
+/** Gauss nodes on a stretch of the fan's rim, and of the rule it is compared with. */
+const IMAGE_NODES = 8;
+const COARSE_IMAGE_NODES = 6;
+
+const net = new Float64Array(48);
+
+/** Adds the shell terms of an isolated fan: a level sequence as `integrateFan` has it, its Gaussian curvature from the rim where the fan is smooth and whole. */
+export function addFanShell(kit: ShellKit, mesh: LevelMesh, fans: Fans, index: number, origins: Float64Array, shells: ShellBody[]): void {
+  const fan = kit.fan;
+  const corners = fans.corners.slice(fans.starts[index], fans.starts[index + 1]);
+  const n = corners.length;
+  let state = makeFanState(n, fans.closed[index], fans.sharpFirst[index], fans.centre[index]);
+  let finer = makeFanState(n, state.closed, state.sharpFirst, state.centreRule);
+  const plain = state.closed && !state.sharpFirst && state.centreRule === SMOOTH_CENTRE;
+  fan.read(mesh, corners, state);
+  const limit = fan.limit(state);
+  translateFan(state, limit);
+  const bodies = corners.map((corner) => fan.body(mesh, corner));
+  const fall = plain ? kit.fall(n) : OTHER_FALL;
+  const levels = tailLevels(fall, TAIL_DIGITS);
+  const weights = tailWeights(fall, levels);
+  const check = tailWeights(fall, levels - 1);
+  const sums = new Float64Array(SHELL_TERMS * n);
+  const earlier = new Float64Array(SHELL_TERMS * n);
+  const patch = new Float64Array(SHELL_TERMS);
+  const powers = new Float64Array(kit.coefficients);
+  const peaks = corners.map((): CurvaturePeak => ({ curvature: 0, x: 0, y: 0, z: 0 }));
+  const unused: CurvaturePeak = { curvature: Infinity, x: 0, y: 0, z: 0 };
+  const rim: ImageSide[] = [];
+  const whole = plain && bodies.every((body) => body === bodies[0]);
+  let tolerance = FIRST_TOLERANCE;
+  for (let k = 0; k < levels; k++, tolerance *= TOLERANCE_GROWTH) {
+    fan.refine(state, finer);
+    [state, finer] = [finer, state];
+    for (let j = 0; j < n; j++) {
+      const errors: ShellErrors = [0, 0, 0];
+      for (let child = 0; child < 3; child++) {
+        fan.fillChild(state, j, child, net);
+        kit.toPowers(net, powers);
+        patch.fill(0);
+        kit.add(powers, tolerance, patch, k < CURVATURE_LEVELS ? peaks[j] : unused, errors);
+        for (let i = 0; i < SHELL_TERMS; i++) {
+          sums[SHELL_TERMS * j + i] += weights[k] * patch[i];
+          if (k + 1 < levels) earlier[SHELL_TERMS * j + i] += check[k] * patch[i];
+        }
+        if (k === 0 && whole) for (const [c, side] of kit.outerSides) if (c === child) rim.push(imageSide(kit, powers.slice(), side));
+      }
+      for (let i = 0; i < 3; i++) shells[bodies[j]].errors[i] += Math.abs(weights[k]) * errors[i];
+    }
+  }
+  const image = whole ? gaussImage(rim, IMAGE_NODES) : null;
+  const coarse = image === null ? null : gaussImage(rim, COARSE_IMAGE_NODES);
+  if (image !== null) takeImage(sums, n, image);
+  for (let j = 0; j < n; j++) {
+    const shell = shells[bodies[j]];
+    const at = SHELL_TERMS * j;
+    shell.errors[1] += Math.abs(sums[at] - earlier[at]);
+    if (image === null) shell.errors[2] += Math.abs(sums[at + 1] - earlier[at + 1]);
+    const shift = [0, 1, 2].map((axis) => limit[axis] - origins[3 * bodies[j] + axis]);
+    addShifted(sums.subarray(at, at + SHELL_TERMS), shift, shell.terms);
+    if (peaks[j].curvature > shell.peak.curvature) {
+      Object.assign(shell.peak, { curvature: peaks[j].curvature, x: peaks[j].x + shift[0], y: peaks[j].y + shift[1], z: peaks[j].z + shift[2] });
+    }
+  }
+  if (image !== null && coarse !== null) shells[bodies[0]].errors[2] += Math.abs(image[0] - coarse[0]);
+}
+
+function imageSide(kit: ShellKit, powers: Float64Array, side: number): ImageSide {
+  return { jet: (along, out) => kit.sideJet(powers, side, along, out), u: kit.along[side][0], v: kit.along[side][1] };
+}
+
+/** Puts the integrals of K, K N and K N Nᵀ about the limit point, which the closing would leave the largest rest of, in the sectors' place: all in the first. */
+function takeImage(sums: Float64Array, sectors: number, image: Float64Array): void {
+  for (let j = 0; j < sectors; j++) {
+    const at = SHELL_TERMS * j;
+    const part = j === 0 ? 1 : 0;
+    sums[at + TERM_STARTS[1][0]] = part * image[0];
+    for (let i = 0; i < 3; i++) sums[at + TERM_STARTS[2][1] + i] = -part * image[1 + i];
+    for (let i = 0; i < 6; i++) sums[at + TERM_STARTS[3][2] + i] = part * image[4 + i];
+  }
+}
+
+/** Adds terms about one point to those about another, `shift` from which it lies. */
+function addShifted(terms: Float64Array, shift: readonly number[], out: Float64Array): void {
+  for (const [volume, first, second] of TERM_STARTS) {
+    const m0 = volume < 0 ? 0 : terms[volume];
+    const m1 = first < 0 ? [0, 0, 0] : [terms[first], terms[first + 1], terms[first + 2]];
+    if (volume >= 0) out[volume] += m0;
+    if (first >= 0) for (let i = 0; i < 3; i++) out[first + i] += m1[i] + shift[i] * m0;
+    PAIRS.forEach(([i, j], k) => (out[second + k] += terms[second + k] + shift[i] * m1[j] + shift[j] * m1[i] + shift[i] * shift[j] * m0));
+  }
+}

@@ -1,0 +1,28 @@
+/** Gauss nodes a direction beyond which a patch is quartered instead. */
+export const MOST_SHELL_NODES = 7;
+const FEWEST_SHELL_NODES = 2;
+
+/** Relative variation of tangents beyond which no rule is trusted. */
+const MOST_VARIATION = 0.5;
+
+/** Error of n nodes on [−½, ½] for t^2n: (n!)⁴ / ((2n + 1) ((2n)!)²), times 4^n since the variation is that over half the interval. */
+const RULE_ERRORS: readonly number[] = Array.from({ length: MOST_SHELL_NODES + 1 }, (_, n) => {
+  let ratio = 1;
+  for (let i = 1; i <= n; i++) ratio *= (i * i) / ((2 * i - 1) * 2 * i);
+  return (ratio * ratio * 4 ** n) / (2 * n + 1);
+});
+
+/** Both directions, and room for series whose coefficients grow before they fall. */
+const SAFETY = 8;
+
+/** Relative error of n nodes a direction where tangents vary by `variation` of their length over half the patch: the series' first power that the rule misses. */
+export function ruleError(nodes: number, variation: number): number {
+  return SAFETY * RULE_ERRORS[nodes] * variation ** (2 * nodes);
+}
+
+/** Fewest nodes a direction whose error stays below the tolerance; 0 where the patch bends too much for any. */
+export function chooseNodes(variation: number, tolerance: number): number {
+  if (!(variation < MOST_VARIATION)) return 0;
+  for (let nodes = FEWEST_SHELL_NODES; nodes <= MOST_SHELL_NODES; nodes++) if (ruleError(nodes, variation) <= tolerance) return nodes;
+  return 0;
+}

@@ -1,0 +1,128 @@
+import { triangleRule } from '../patches/box-spline';
+import type { ShellErrors } from './bicubic-shell';
+import { chooseNodes, MOST_SHELL_NODES, ruleError } from './shell-nodes';
+import { addShellNode, JET, type CurvaturePeak } from './shell-terms';
+
+/** Exponents of s and t of the fifteen monomials, as `triangleToPowers` orders them. */
+const EXPONENTS: readonly (readonly [number, number])[] = [0, 1, 2, 3, 4].flatMap((degree) => Array.from({ length: degree + 1 }, (_, j): [number, number] => [degree - j, j]));
+
+/** Quarterings after which a bend is taken as it is, its whole change counting as error. */
+const MOST_QUARTERINGS = 4;
+
+/** Values and derivatives of a monomial s^i t^j: value, ∂s, ∂t, ∂ss, ∂st, ∂tt. */
+function monomialJet([i, j]: readonly [number, number], s: number, t: number): number[] {
+  const power = (base: number, exponent: number): number => (exponent < 0 ? 0 : base ** exponent);
+  return [
+    power(s, i) * power(t, j), i * power(s, i - 1) * power(t, j), j * power(s, i) * power(t, j - 1),
+    i * (i - 1) * power(s, i - 2) * power(t, j), i * j * power(s, i - 1) * power(t, j - 1), j * (j - 1) * power(s, i) * power(t, j - 2),
+  ];
+}
+
+function monomialJets(s: number, t: number): Float64Array {
+  return Float64Array.from(EXPONENTS.flatMap((exponents) => monomialJet(exponents, s, t)));
+}
+
+/** Evaluates a quartic triangle in powers of s, t [3 monomial + axis] with its first and second derivatives. */
+export function triangleJet(powers: Float64Array, s: number, t: number, out: Float64Array): void {
+  fillJet(powers, monomialJets(s, t), 0, out);
+}
+
+function fillJet(p: Float64Array, table: Float64Array, at: number, out: Float64Array): void {
+  out.fill(0);
+  for (let monomial = 0; monomial < 15; monomial++) {
+    const x = p[3 * monomial], y = p[3 * monomial + 1], z = p[3 * monomial + 2];
+    for (let d = 0; d < 6; d++) {
+      const factor = table[at + 6 * monomial + d];
+      out[3 * d] += factor * x;
+      out[3 * d + 1] += factor * y;
+      out[3 * d + 2] += factor * z;
+    }
+  }
+}
+
+const tables: (Float64Array | undefined)[] = [];
+
+/** Jets of the monomials at the nodes of `triangleRule(nodes)`, 90 numbers each. */
+function tableOf(nodes: number): Float64Array {
+  const known = tables[nodes];
+  if (known !== undefined) return known;
+  const rule = triangleRule(nodes);
+  const table = new Float64Array(90 * rule.count);
+  for (let node = 0; node < rule.count; node++) table.set(monomialJets(rule.s[node], rule.t[node]), 90 * node);
+  tables[nodes] = table;
+  return table;
+}
+
+const jet = new Float64Array(JET);
+const CORNERS = [monomialJets(0, 0), monomialJets(1, 0), monomialJets(0, 1), monomialJets(1 / 3, 1 / 3)];
+const corners = [new Float64Array(JET), new Float64Array(JET), new Float64Array(JET), new Float64Array(JET)];
+
+/** Adds the shell terms of a quartic triangle in powers of s, t about the point that moments are about; the rest as `addBicubicShell`. */
+export function addTriangleShell(powers: Float64Array, tolerance: number, out: Float64Array, peak: CurvaturePeak, errors: ShellErrors): void {
+  addTriangle(powers, tolerance, 0, out, peak, errors);
+}
+
+function addTriangle(powers: Float64Array, tolerance: number, depth: number, out: Float64Array, peak: CurvaturePeak, errors: ShellErrors): void {
+  const { length, narrow, variation } = bendOf(powers);
+  if (length === 0) return;
+  const nodes = chooseNodes(variation, tolerance);
+  if (nodes === 0 && depth < MOST_QUARTERINGS) {
+    for (const [s, t, size] of QUARTERS) addTriangle(partOf(powers, s, t, size), tolerance, depth + 1, out, peak, errors);
+    return;
+  }
+  const { count, weights } = triangleRule(nodes === 0 ? MOST_SHELL_NODES : nodes);
+  const table = tableOf(nodes === 0 ? MOST_SHELL_NODES : nodes);
+  for (let node = 0; node < count; node++) {
+    fillJet(powers, table, 90 * node, jet);
+    addShellNode(jet, weights[node], out, peak);
+  }
+  const error = length * length * (nodes === 0 ? 1 : ruleError(nodes, variation));
+  const curvature = (4 * Math.min(1, variation)) / narrow;
+  errors[0] += error;
+  errors[1] += error * curvature;
+  errors[2] += error * curvature * curvature;
+}
+
+/** Corner 0 of each quarter and its signed size; the middle one stands on its head. */
+const QUARTERS: readonly (readonly [number, number, number])[] = [[0, 0, 0.5], [0.5, 0, 0.5], [0, 0.5, 0.5], [0.5, 0.5, -0.5]];
+
+/** How strongly a triangle bends: as for bicubic patches, from the tangents at its corners and middle. */
+function bendOf(powers: Float64Array): { length: number; narrow: number; variation: number } {
+  for (let i = 0; i < 4; i++) fillJet(powers, CORNERS[i], 0, corners[i]);
+  const middle = corners[3];
+  let alongS = 0, alongT = 0;
+  for (let i = 0; i < 3; i++) {
+    alongS = Math.max(alongS, Math.hypot(corners[i][3] - middle[3], corners[i][4] - middle[4], corners[i][5] - middle[5]));
+    alongT = Math.max(alongT, Math.hypot(corners[i][6] - middle[6], corners[i][7] - middle[7], corners[i][8] - middle[8]));
+  }
+  const ls = Math.hypot(middle[3], middle[4], middle[5]), lt = Math.hypot(middle[6], middle[7], middle[8]);
+  const across = Math.hypot(middle[4] * middle[8] - middle[5] * middle[7], middle[5] * middle[6] - middle[3] * middle[8], middle[3] * middle[7] - middle[4] * middle[6]);
+  const slant = across > 0 ? (ls * lt) / across : Infinity;
+  const length = Math.max(ls, lt, alongS, alongT);
+  // A third of the side from the middle to a corner is more than half, which the rules' estimate takes for the reach.
+  const variation = slant === Infinity ? Infinity : slant * Math.max(alongS / ls, alongT / lt);
+  return { length, narrow: Math.max(Math.min(ls, lt) / slant, 2 ** -40 * length), variation };
+}
+
+/** The triangle with corner 0 at (s, t) and sides `size` times as long, in powers of its own. */
+function partOf(powers: Float64Array, s0: number, t0: number, size: number): Float64Array {
+  const part = new Float64Array(45);
+  for (let monomial = 0; monomial < 15; monomial++) {
+    const [i, j] = EXPONENTS[monomial];
+    for (let a = 0; a <= i; a++) {
+      for (let b = 0; b <= j; b++) {
+        const factor = binomial(i, a) * binomial(j, b) * s0 ** (i - a) * t0 ** (j - b) * size ** (a + b);
+        const degree = a + b;
+        const to = 3 * ((degree * (degree + 1)) / 2 + b);
+        for (let axis = 0; axis < 3; axis++) part[to + axis] += factor * powers[3 * monomial + axis];
+      }
+    }
+  }
+  return part;
+}
+
+function binomial(n: number, k: number): number {
+  let value = 1;
+  for (let i = 0; i < k; i++) value = (value * (n - i)) / (i + 1);
+  return value;
+}
