@@ -67,3 +67,42 @@ export function fillNet(mesh: LevelMesh, first: number, fan: boolean, net: Float
     for (let column = 0; column < 4; column++) extrapolate(net, entry(row, column), entry(row + step, column), entry(row + 2 * step, column));
   }
 }
+
+/** Places of the four corners, or of the points that lie outwards of corner i across the sides i + `sides`, in a net whose values stand two apart. */
+function placesAt(...sides: number[]): readonly number[] {
+  return [0, 1, 2, 3].map((i) => {
+    const out = sides.map((side) => (i + side) & 3);
+    return 2 * entry(out.reduce((row, side) => row + OUT_ROW[side], CORNER_ROW[i]), out.reduce((column, side) => column + OUT_COLUMN[side], CORNER_COLUMN[i]));
+  });
+}
+
+const AT_CORNER = placesAt();
+const AT_SIDE = placesAt(0);
+const AT_SIDE_BEFORE = placesAt(3);
+const AT_DIAGONAL = placesAt(0, 3);
+
+/**
+ * Writes the same net for a face whose corners are all inner regular vertices among quads, nothing sharp: from `at` on, values two apart, as the kernels
+ * have them.
+ */
+export function fillInnerNet(mesh: LevelMesh, face: number, out: Float64Array, at: number): void {
+  const { starts, faceOf, vertexOf, twin, positions } = mesh;
+  const first = starts[face];
+  for (let i = 0; i < 4; i++) {
+    // Across side i lies a quad, and across that one's side at corner i the quad that meets this one in the corner.
+    const t = twin[first + i];
+    const start = starts[faceOf[t]];
+    const across = twin[start + ((t - start + 1) & 3)];
+    const far = starts[faceOf[across]];
+    write(positions, vertexOf[first + i], out, at + AT_CORNER[i]);
+    write(positions, vertexOf[start + ((t - start + 2) & 3)], out, at + AT_SIDE[i]);
+    write(positions, vertexOf[far + ((across - far + 2) & 3)], out, at + AT_SIDE_BEFORE[i]);
+    write(positions, vertexOf[far + ((across - far + 3) & 3)], out, at + AT_DIAGONAL[i]);
+  }
+}
+
+function write(positions: Float64Array, vertex: number, out: Float64Array, at: number): void {
+  out[at] = positions[3 * vertex];
+  out[at + 2] = positions[3 * vertex + 1];
+  out[at + 4] = positions[3 * vertex + 2];
+}

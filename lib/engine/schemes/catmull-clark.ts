@@ -2,9 +2,9 @@ import { RegularPatches } from '../kernel/regular-patches';
 import { BICUBIC_RULE } from '../kernel/regular-rules';
 import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
-import { classifyVertices, isIsolated, isRegularFace, QUAD_COUNTS } from './classify-vertices';
+import { classifyVertices, INNER, isIsolated, isRegularFace, QUAD_COUNTS } from './classify-vertices';
 import { CATMULL_CLARK_KIT } from './catmull-clark-kit';
-import { fillNet } from './catmull-clark-net';
+import { fillInnerNet, fillNet } from './catmull-clark-net';
 import { refineAround } from './catmull-clark-refine';
 import { refineStrip, stripSide } from './crease-strip';
 import { FanBatches } from './fan-batch';
@@ -38,7 +38,7 @@ export function integrateCatmullClark(cage: LevelMesh, rules: RefinementRules, o
         left++;
         continue;
       }
-      if (regular) addRegularFace(mesh, face, patches, sums.curves);
+      if (regular) addRegularFace(mesh, kinds, face, patches, sums.curves);
       else addStrip(mesh, side, rules, patches, sums.curves);
       mesh.live[face] = 0;
     }
@@ -56,11 +56,21 @@ export function integrateCatmullClark(cage: LevelMesh, rules: RefinementRules, o
   return false;
 }
 
-function addRegularFace(mesh: LevelMesh, face: number, patches: RegularPatches, curves: BorderCurves): void {
+function addRegularFace(mesh: LevelMesh, kinds: Uint8Array, face: number, patches: RegularPatches, curves: BorderCurves): void {
   const start = mesh.starts[face];
+  if (isInnerFace(mesh, kinds, start)) {
+    fillInnerNet(mesh, face, patches.input, patches.place(mesh.bodyOf[face]));
+    return;
+  }
   fillNet(mesh, start, false, net);
   patches.add(mesh.bodyOf[face], net);
   for (let side = 0; side < 4; side++) addBorder(mesh, start + side, net, side, 0, 1, curves);
+}
+
+/** Whether a regular face has inner corners alone and no side on a border of its body, as most have. */
+function isInnerFace({ borderOf }: LevelMesh, kinds: Uint8Array, start: number): boolean {
+  for (let h = start; h < start + 4; h++) if (kinds[h] !== INNER || borderOf[h] >= 0) return false;
+  return true;
 }
 
 /** `first` is the strip's side along the crease. */

@@ -23,6 +23,7 @@ export interface Fans {
   centre: number[];
 }
 
+/** The corners of the live faces by their rules, and the fans around extraordinary vertices. */
 export interface Classified {
   /** Kind of each corner; only set at vertices of live faces. */
   kinds: Uint8Array;
@@ -56,11 +57,32 @@ export function classifyVertices(mesh: LevelMesh, counts: RegularCounts): Classi
       const vertex = mesh.vertexOf[h];
       if (seen[vertex] === 1) continue;
       seen[vertex] = 1;
+      if (isPlainlyInner(mesh, counts, h, kinds)) continue;
       const closed = collectRing(mesh, h, ring);
       classifyRing(mesh, counts, vertex, ring, closed, kinds, fans);
     }
   }
   return { kinds, fans };
+}
+
+/** Whether `h` starts at a vertex as most are: inner, among the regular number of regular faces, nothing sharp. Then its corners are set; else nothing is said. */
+function isPlainlyInner(mesh: LevelMesh, counts: RegularCounts, h: number, kinds: Uint8Array): boolean {
+  const { starts, faceOf, twin, edgeSharpness } = mesh;
+  if (mesh.vertexSharpness[mesh.vertexOf[h]] > 0) return false;
+  let corner = h;
+  for (let j = 0; j < counts.inner; j++) {
+    if (corner < 0 || (j > 0 && corner === h)) return false;
+    const start = starts[faceOf[corner]];
+    if (edgeSharpness[corner] > 0 || starts[faceOf[corner] + 1] - start !== counts.corners) return false;
+    corner = twin[corner === start ? start + counts.corners - 1 : corner - 1];
+  }
+  if (corner !== h) return false;
+  for (let j = 0; j < counts.inner; j++) {
+    kinds[corner] = INNER;
+    const start = starts[faceOf[corner]];
+    corner = twin[corner === start ? start + counts.corners - 1 : corner - 1];
+  }
+  return true;
 }
 
 /** The corners around the start of `h`, counter-clockwise; from the border on where there is one (then false). */
