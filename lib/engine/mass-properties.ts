@@ -15,6 +15,7 @@ export interface MassComponent {
   surfaceErrorEstimate: number;
 }
 
+/** What a body's mass properties follow from: geometry in file units, the rest in SI. */
 export interface MassInput {
   components: readonly MassComponent[];
   metresPerUnit: number;
@@ -28,6 +29,7 @@ export interface MassInput {
   wallM?: number | null;
 }
 
+/** Mass properties in SI: centre of mass in the asset's axes and from its origin, inertia about the centre of mass in the same axes. */
 export interface MassProperties {
   ok: true;
   massKg: number;
@@ -48,12 +50,14 @@ export interface MassProperties {
 
 export type MassFailureCode = 'no_mass' | 'no_geometry' | 'bad_input' | 'inside_out' | 'no_wall' | 'wall_too_thick' | 'not_hollow_yet' | 'check_failed';
 
+/** Why there are no mass properties: a stable code and a sentence that says what to do. */
 export interface MassFailure {
   ok: false;
   code: MassFailureCode;
   message: string;
 }
 
+/** A failure with its code and its sentence. */
 export function massFailure(code: MassFailureCode, message: string): MassFailure {
   return { ok: false, code, message };
 }
