@@ -5,6 +5,7 @@ import { partitionFaces } from './mesh/partition';
 import { buildTopology, nextHalfEdge, previousHalfEdge } from './mesh/topology';
 import { dooSabinLimitPoints, limitPoints, loopSmoothLimit } from './schemes/limit-points';
 import { refineAround } from './schemes/catmull-clark-refine';
+import { dooSabinCage } from './schemes/doo-sabin-mesh';
 import { refineDooSabin } from './schemes/doo-sabin-refine';
 import { isSharpForGood, levelZero, type LevelMesh } from './schemes/level-mesh';
 import { refineTriangles } from './schemes/loop-refine';
@@ -60,7 +61,12 @@ function refineForDisplay(cage: LevelMesh, options: MeasureOptions, level: numbe
     return { ...fine, positions: limitPoints(fine, loopSmoothLimit) };
   }
   if (options.scheme === 'doo-sabin') {
-    for (let step = 0; step < level; step++) fine = refineDooSabin(fine, step === 0);
+    let dual = dooSabinCage(fine, options.boundary);
+    for (let step = 0; step < level; step++) {
+      const all = new Uint8Array(dual.vertices).fill(1);
+      dual = refineDooSabin(dual, all, all);
+    }
+    fine = dual;
     // Here parts belong to vertices: a face goes with its first.
     const bodyOf = Int32Array.from({ length: fine.faces }, (_, face) => fine.bodyOf[fine.vertexOf[fine.starts[face]]]);
     return { ...fine, bodyOf, positions: dooSabinLimitPoints(fine) };

@@ -1,7 +1,4 @@
-import { bicubicMoments } from '../patches/bicubic';
-import { bicubicArea, mendSurfaceMoments } from '../patches/bicubic-surface';
-import { gaussRule } from '../patches/gauss-rule';
-import type { FanKit } from './fan-kit';
+import { fanRule, type FanKit } from './fan-kit';
 import type { FanState } from './fan-state';
 import type { LevelMesh } from './level-mesh';
 import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
@@ -86,16 +83,21 @@ export function raiseNet(quadratic: Float64Array, net: Float64Array): void {
   }
 }
 
-/** Patches of the refined points (1, 0), (1, 1) and (0, 1) of a sector. */
-function fillChild(fan: FanState, sector: number, child: number, net: Float64Array): void {
+/** Patches of the refined points (1, 0), (1, 1) and (0, 1) of a sector, as biquadratics. */
+function fillPoints(fan: FanState, sector: number, child: number, net: Float64Array): void {
   const a0 = child === 2 ? -1 : 0;
   const b0 = child === 0 ? -1 : 0;
   for (let row = 0; row < 3; row++) {
     for (let column = 0; column < 3; column++) {
       const at = pointAt(fan, sector, a0 + row, b0 + column);
-      small.set(fan.inner.subarray(at, at + 3), 3 * (3 * row + column));
+      net.set(fan.inner.subarray(at, at + 3), 3 * (3 * row + column));
     }
   }
+}
+
+/** The same patches as bicubics. */
+function fillChild(fan: FanState, sector: number, child: number, net: Float64Array): void {
+  fillPoints(fan, sector, child, small);
   raiseNet(small, net);
 }
 
@@ -114,22 +116,37 @@ function readFan(mesh: LevelMesh, corners: readonly number[], fan: FanState): vo
   fan.centre.set(centroid(fan));
 }
 
-/** Fans of Doo-Sabin surfaces: n-gons with a patch for each corner. Their bodies belong to vertices; borders are not carried. */
+/** The half-edges from an n-gon's corner whose sides its patch has: to the corner before, into the quads on either side, to the corner after. */
+function sideAt(mesh: LevelMesh, corner: number, side: number): number {
+  if (side === 3) return corner;
+  if (side === 2) return nextHalfEdge(mesh, mesh.twin[corner]);
+  const back = mesh.twin[previousHalfEdge(mesh, corner)];
+  return side === 0 ? back : mesh.twin[previousHalfEdge(mesh, back)];
+}
+
+/** Modulus of the subdominant eigenvalue: ½, but where both first Fourier modes are one, ½ + ¼. */
+function smoothShrinkage(n: number): number {
+  return n === 2 ? 0.75 : 0.5;
+}
+
+/** Fans of Doo-Sabin surfaces: n-gons with a patch for each corner. Their bodies and borders belong to vertices. */
 export const DOO_SABIN_KIT: FanKit = {
-  sides: 0,
-  arriving: 0,
-  mostNodes: 5,
+  sides: 4,
+  arriving: 3,
+  sideAt,
   fewestNodes: 3,
-  smoothShrinkage: () => 0.5,
-  largestShrinkage: 0.5,
+  smoothShrinkage,
+  largestShrinkage: 0.75,
   body: (mesh, corner) => mesh.bodyOf[mesh.vertexOf[corner]],
   read: readFan,
   refine: refineDooSabinFan,
   limit: centroid,
   fillChild,
-  block: null,
-  moments: (values, ox, oy, oz, nodes, solid, surface) => bicubicMoments(values, ox, oy, oz, gaussRule(nodes), solid, surface),
-  mendSurface: (values, ox, oy, oz, surface) => mendSurfaceMoments(values, ox, oy, oz, surface, bicubicArea(values)),
-  addSide: () => undefined,
-  outerSides: [],
+  addSide: (curves, values, side, edge, weight, from, share, shift) => curves.addSide(values, side, edge, weight, from, share, shift),
+  outerSides: [[0, 1, 1, 0], [1, 1, 1, 1], [1, 2, 2, 0], [2, 2, 2, 1]],
+  rule: fanRule('biquadratic'),
+  fillPoints,
+  hasSpokes: false,
+  innerPoints: [0, 3, 9, 12],
+  rimNodes: 6,
 };

@@ -1,13 +1,14 @@
 import type { Boundary } from '../cage';
 import { RegularPatches } from '../kernel/regular-patches';
+import { BIQUADRATIC_RULE } from '../kernel/regular-rules';
 import type { LimitSums } from '../moments/limit-sums';
 import { SMOOTH_CENTRE, type Fans } from './classify-vertices';
 import { joinSpokes } from './doo-sabin-borders';
 import { DOO_SABIN_KIT } from './doo-sabin-fan';
+import { FanBatches } from './fan-batch';
 import { dooSabinCage, type DooSabinMesh } from './doo-sabin-mesh';
 import { addPatch, readRings, type DooSabinRings } from './doo-sabin-patches';
 import { refineDooSabin } from './doo-sabin-refine';
-import { integrateFan } from './integrate-fan';
 import type { LevelMesh } from './level-mesh';
 
 /** After the first step n-gons lie apart by one quad, after the second by three, which is enough; the border is regular from the second step on. */
@@ -23,7 +24,8 @@ const MOST_LEVELS = 6;
  */
 export function integrateDooSabin(cage: LevelMesh, boundary: Boundary, origins: Float64Array, sums: LimitSums): boolean {
   const base = dooSabinCage(cage, boundary);
-  const patches = new RegularPatches(origins, sums);
+  const patches = new RegularPatches(BIQUADRATIC_RULE, origins, sums);
+  const batches = new FanBatches(DOO_SABIN_KIT, origins, sums);
   let mesh = base;
   for (let level = 0; level <= MOST_LEVELS; level++) {
     const rings = readRings(mesh);
@@ -38,7 +40,8 @@ export function integrateDooSabin(cage: LevelMesh, boundary: Boundary, origins: 
     }
     patches.flush();
     const keep = Uint8Array.from(waiting);
-    for (let face = 0; face < mesh.faces && left > 0; face++) left -= addOddFace(mesh, rings, bodies, face, waiting, keep, origins, sums);
+    for (let face = 0; face < mesh.faces && left > 0; face++) left -= addOddFace(mesh, rings, bodies, face, waiting, keep, batches);
+    batches.flush();
     if (left === 0) {
       joinSpokes(base, sums.curves);
       return true;
@@ -74,7 +77,7 @@ function bodiesOfVertices(mesh: DooSabinMesh): Int32Array {
  * kept: those of a body that is not measured too, since the others need them.
  */
 function addOddFace(
-  mesh: DooSabinMesh, rings: DooSabinRings, bodies: Int32Array, face: number, waiting: Uint8Array, keep: Uint8Array, origins: Float64Array, sums: LimitSums,
+  mesh: DooSabinMesh, rings: DooSabinRings, bodies: Int32Array, face: number, waiting: Uint8Array, keep: Uint8Array, batches: FanBatches,
 ): number {
   const start = mesh.starts[face];
   const n = mesh.starts[face + 1] - start;
@@ -89,7 +92,7 @@ function addOddFace(
   if (settled === 0) return 0;
   if (apart) {
     const fans: Fans = { starts: [0, n], corners: Array.from({ length: n }, (_, i) => start + i), closed: [true], sharpFirst: [false], centre: [SMOOTH_CENTRE] };
-    integrateFan(DOO_SABIN_KIT, mesh, fans, 0, origins, sums);
+    batches.add(mesh, fans, 0);
   }
   for (let h = start; h < start + n; h++) {
     if (apart) waiting[mesh.vertexOf[h]] = 0;
