@@ -5,6 +5,8 @@ import type { Actor } from '@/lib/context';
 
 export interface HandOff {
   showId: string;
+  /** Of a shot's export. */
+  shotId?: string;
   format: string;
   selection: string;
   rows: number;
@@ -12,10 +14,27 @@ export interface HandOff {
   sha256: string;
 }
 
-/** Notes who took which rows with which checksum. A token that takes the same bytes again on the same day (UTC) is noted once. */
-export async function writeReceipt(db: Executor, actor: Actor, { showId, format, selection, rows, byteSize, sha256 }: HandOff): Promise<void> {
-  await db
-    .insert(receipts)
-    .values({ showId, userId: actor.userId, tokenId: actor.tokenId, format, selection, rows, byteSize, sha256, day: sql`(now() at time zone 'utc')::date` })
-    .onConflictDoNothing();
+/** A row that was handed off: which value of which part, and under which lock. */
+export interface HandedRow {
+  partId: string;
+  valueSha256: string | null;
+  lockId?: string;
+}
+
+/**
+ * Notes who took which rows with which checksum. A token that takes the same bytes again on the same day (UTC) is noted once.
+ * The caller's transaction, if it has one, holds both the receipt and its rows; else they are written in one of their own.
+ */
+export async function writeReceipt(db: Executor, actor: Actor, { showId, shotId, format, selection, rows, byteSize, sha256 }: HandOff, handed: readonly HandedRow[]): Promise<void> {
+  await db.transaction(async (tx) => {
+    const [receipt] = await tx
+      .insert(receipts)
+      .values({ showId, shotId, userId: actor.userId, tokenId: actor.tokenId, format, selection, rows, byteSize, sha256, day: sql`(now() at time zone 'utc')::date` })
+      .onConflictDoNothing()
+      .returning({ id: receipts.id });
+    if (!receipt || handed.length === 0) return;
+    await tx.execute(sql`
+      insert into receipt_rows (receipt_id, part_id, lock_id, value_sha256)
+      select ${receipt.id}::uuid, * from unnest(${sql.param(handed.map((row) => row.partId))}::uuid[], ${sql.param(handed.map((row) => row.lockId ?? null))}::uuid[], ${sql.param(handed.map((row) => row.valueSha256))}::text[])`);
+  });
 }

@@ -24,6 +24,8 @@ export function answerOf(row: ImportRow, counts: ImportCounts, createdBy: string
     scheme: row.scheme,
     boundary: row.boundary,
     parts_by: row.partsBy,
+    weld: row.weld,
+    turn_faces: row.turnFaces,
     created_by: createdBy,
     created_at: row.createdAt.toISOString(),
     submitted_at: row.submittedAt?.toISOString() ?? null,

@@ -29,6 +29,8 @@ export async function findGeometryRecord(db: Executor, { sha256, options }: Reco
         eq(r.triangles, options.triangles),
         eq(r.creasing, options.creasing),
         eq(r.partsBy, options.partsBy),
+        eq(r.weld, options.weld === true),
+        eq(r.turnFaces, options.turnFaces === true),
         eq(r.engineVersion, ENGINE_VERSION),
       ),
     );
@@ -104,6 +106,7 @@ async function writeComponents(tx: Transaction, cage: MeasuredCage, partIds: Rea
       cageCentroid: component.cage.centroid,
       cageCentralSecond: component.cage.centralSecond,
       hollow: component.hollow ? [...component.hollow] : null,
+      hollowLimits: component.hollowLimits ? [component.hollowLimits.curvature, ...component.hollowLimits.position, ...component.hollowLimits.error] : null,
       errorEstimate: component.errorEstimate,
       surfaceErrorEstimate: component.surfaceErrorEstimate,
     })),

@@ -40,8 +40,8 @@ export async function measureImportFile(work: FileWork, fileId: string, plan: Pl
   if (!file) return;
   if (file.attempts > MOST_ATTEMPTS) return failFile(work, fileId, giveUp(file.name));
   if (plan.asset === null) return failFile(work, fileId, { code: 'name_not_matched', message: 'The name does not match the show’s pattern. Give an asset, or change the pattern.', line: null, column: null });
-  const { scheme, boundary, triangles, creasing, partsBy } = importRow;
-  const key = { sha256: file.sha256, options: { scheme, boundary, triangles, creasing, partsBy } satisfies MeasureOptions };
+  const { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces } = importRow;
+  const key = { sha256: file.sha256, options: { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces } satisfies MeasureOptions };
   const known = await findGeometryRecord(db, key);
   let cage: MeasuredCage | null = null;
   if (known === null) {

@@ -22,6 +22,8 @@ export async function openImport(context: Context, input: OpenImportInput): Prom
         triangles: input.triangles,
         creasing: input.creasing,
         partsBy: input.parts_by ?? show.partsBy,
+        weld: input.weld,
+        turnFaces: input.turn_faces,
         createdBy: known.actor.userId,
       })
       .returning();

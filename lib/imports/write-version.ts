@@ -77,7 +77,9 @@ function isEqual(record: typeof geometryRecords.$inferSelect, { sha256, options 
     record.boundary === options.boundary &&
     record.triangles === options.triangles &&
     record.creasing === options.creasing &&
-    record.partsBy === options.partsBy
+    record.partsBy === options.partsBy &&
+    record.weld === (options.weld === true) &&
+    record.turnFaces === (options.turnFaces === true)
   );
 }
 

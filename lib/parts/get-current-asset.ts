@@ -33,6 +33,8 @@ export function measuredAs(record: CurrentAsset['record']): MeasuredAs {
     creasing: record.creasing,
     triangles: record.triangles,
     parts_by: record.partsBy,
+    weld: record.weld,
+    turn_faces: record.turnFaces,
     engine_version: record.engineVersion,
     content_sha256: record.contentSha256,
   };

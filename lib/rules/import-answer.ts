@@ -52,6 +52,9 @@ export interface ImportAnswer {
   scheme: SchemeWord;
   boundary: BoundaryWord;
   parts_by: PartitionWord;
+  /** Whether vertices on open borders that lie on each other are joined, and faces turned outwards, before measuring. */
+  weld: boolean;
+  turn_faces: boolean;
   created_by: string;
   created_at: string;
   submitted_at: string | null;

@@ -52,6 +52,9 @@ export interface MeasuredAs {
   creasing: string;
   triangles: string;
   parts_by: string;
+  /** Whether the import joined vertices on open borders and turned faces outwards before measuring. */
+  weld: boolean;
+  turn_faces: boolean;
   engine_version: string;
   /** SHA-256 of the file's bytes. */
   content_sha256: string;

@@ -38,4 +38,4 @@ export async function getShowAccess(db: Executor, actor: Actor, code: string, pe
   return { show: found.show, role, shots: found.member?.shots ?? [], assets: found.member?.assets ?? [] };
 }
 
-const WRITES: ReadonlySet<Permission> = new Set<Permission>(['editShow', 'editMembers', 'importCages', 'setValues']);
+const WRITES: ReadonlySet<Permission> = new Set<Permission>(['editShow', 'editMembers', 'importCages', 'setValues', 'askApproval', 'approveValues', 'editShots', 'lockValues', 'draftOverride']);

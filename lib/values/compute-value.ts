@@ -1,5 +1,5 @@
 import type { ValueFinding } from '@/db/schema/part-current';
-import { massProperties, type MassFailureCode, type MassProperties } from '@/lib/engine/mass-properties';
+import { massProperties, type MassFailureCode, type MassProperties, type TightBend } from '@/lib/engine/mass-properties';
 import type { MassSource, ValueState } from '@/lib/rules/states';
 import { massSource } from './mass-source';
 import { valueCanonical, valueHash } from './value-canonical';
@@ -37,7 +37,7 @@ const FAILURE_CODES: Record<MassFailureCode, string> = {
   inside_out: 'inside_out',
   no_wall: 'wall_missing',
   wall_too_thick: 'wall_too_thick',
-  not_hollow_yet: 'hollow_not_measured',
+  wall_not_measured: 'wall_not_measured',
   check_failed: 'value_check_failed',
 };
 
@@ -95,12 +95,22 @@ export function computeValue(inputs: ValueInputs): ComputedValue {
       value.densityKgPerM3 = source === 'target_mass' || setting.construction !== 'sheet' ? properties.densityKgPerM3 : value.densityKgPerM3;
       value.arealDensityKgPerM2 = properties.arealDensityKgPerM2;
       value.numericError = properties.numericError;
+      if (properties.tightBend) note('warning', 'wall_over_radius', describeTightBend(properties.tightBend));
       value.canonical = valueCanonical(inputs, value);
       value.valueSha256 = valueHash(value.canonical);
     }
   }
   if (setting.leftOut) return { ...value, state: 'left_out', properties: null, canonical: null, valueSha256: null };
   return value;
+}
+
+function describeTightBend({ radiusM, positionM }: TightBend): string {
+  const [x, y, z] = positionM.map(figure);
+  return `The wall is thicker than the smallest radius of the surface, ${figure(radiusM)} m at ${x}, ${y}, ${z} m, and overlaps itself there. Make it thinner, or the part solid.`;
+}
+
+function figure(value: number): string {
+  return String(Number(value.toPrecision(4)));
 }
 
 /** A component whose square would vanish below the smallest double is 0: the database squares it to check the unit length. */

@@ -1,5 +1,6 @@
 import { sql } from 'drizzle-orm';
 import type { Executor } from '@/db/client';
+import type { ShellLimits } from '@/lib/engine/measured';
 import type { Category, Construction, Origin } from '@/lib/rules/states';
 import { METRES_PER, type LinearUnit, type UpAxis } from '@/lib/rules/units';
 import type { StandingApproval } from './approval-of';
@@ -60,6 +61,7 @@ interface HeadRow {
   triangles: string;
   creasing: string;
   parts_by: string;
+  mended: string;
   engine_version: string;
   construction: Construction | null;
   target_mass_kg: number | null;
@@ -94,6 +96,7 @@ export async function loadValueInputs(db: Executor, assetIds: string[], partIds:
       s.id as setting_id, c.revision, a.code as asset, a.outside_id, a.category, a.scale, v.label as version,
       w.linear_unit, w.up_axis, p.name as part, g.faces, g.max_valence, g.min_x, g.min_y, g.min_z, g.max_x, g.max_y, g.max_z,
       r.content_sha256, r.scheme, r.boundary, r.triangles, r.creasing, r.parts_by, r.engine_version,
+      concat_ws(' ', case when r.weld then 'weld' end, case when r.turn_faces then 'turn_faces' end) as mended,
       s.construction, s.target_mass_kg, s.density_kg_m3, s.areal_density_kg_m2, s.wall_m, s.variant, s.left_out, s.set_from, s.set_at,
       u.name as set_by_name, m.id as material_id, m.name as material_name, m.revision as material_revision,
       m.density_kg_m3 as material_density, m.areal_density_kg_m2 as material_areal_density, coalesce(y.approvals, '[]') as approvals
@@ -130,6 +133,7 @@ interface ComponentRow {
   /** Centroid 3, central second 6, surface centroid 3, surface central second 6. */
   moments: number[];
   hollow: number[] | null;
+  hollow_limits: number[] | null;
 }
 
 /** Arrays travel as JSON, which the driver parses ten times faster than array literals and as exactly. */
@@ -138,7 +142,8 @@ async function loadComponents(db: Executor, heads: HeadRow[]): Promise<Map<strin
   const { rows } = await db.execute<ComponentRow & Record<string, unknown>>(sql`
     select geometry_part_id, volume, area, cage_volume, error_estimate, surface_error_estimate,
       to_json(centroid || central_second || surface_centroid || surface_central_second) as moments,
-      case when geometry_part_id = any(${sql.param(hollow)}::uuid[]) then to_json(hollow) end as hollow
+      case when geometry_part_id = any(${sql.param(hollow)}::uuid[]) then to_json(hollow) end as hollow,
+      case when geometry_part_id = any(${sql.param(hollow)}::uuid[]) then to_json(hollow_limits) end as hollow_limits
     from geometry_components
     where geometry_part_id = any(${sql.param(heads.map((head) => head.geometry_part_id))}::uuid[])
     order by geometry_part_id, ordinal`);
@@ -149,6 +154,7 @@ async function loadComponents(db: Executor, heads: HeadRow[]): Promise<Map<strin
       solid: { volume: row.volume, centroid: [m[0], m[1], m[2]], centralSecond: [m[3], m[4], m[5], m[6], m[7], m[8]] },
       surface: { area: row.area, centroid: [m[9], m[10], m[11]], centralSecond: [m[12], m[13], m[14], m[15], m[16], m[17]] },
       hollow: row.hollow ? Float64Array.from(row.hollow) : null,
+      hollowLimits: row.hollow_limits ? toShellLimits(row.hollow_limits) : null,
       errorEstimate: row.error_estimate,
       surfaceErrorEstimate: row.surface_error_estimate,
       cageVolume: row.cage_volume,
@@ -158,6 +164,10 @@ async function loadComponents(db: Executor, heads: HeadRow[]): Promise<Map<strin
     else byPart.set(row.geometry_part_id, [component]);
   }
   return byPart;
+}
+
+function toShellLimits([curvature, x, y, z, e1, e2, e3]: number[]): ShellLimits {
+  return { curvature, position: [x, y, z], error: [e1, e2, e3] };
 }
 
 /** Findings by record and part; those of a whole file stand under the empty name. */
@@ -210,6 +220,7 @@ function toLoadedPart(head: HeadRow, components: LoadedPart['components'], findi
       triangles: head.triangles,
       creasing: head.creasing,
       partsBy: head.parts_by,
+      mended: head.mended,
       engineVersion: head.engine_version,
     },
     part: head.part,

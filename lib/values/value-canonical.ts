@@ -14,7 +14,8 @@ export type ValueResults = Pick<ComputedValue, 'properties' | 'densityKgPerM3' |
  *
  * It is one JSON array without white space, its entries in this order:
  *  0  `"weighhouse-value-2"`, the name of this form
- *  1  `[content_sha256, scheme, boundary, triangles, creasing, parts_by, engine_version]`, the geometry record's key
+ *  1  `[content_sha256, scheme, boundary, triangles, creasing, parts_by, engine_version]`, the geometry record's key; where the import
+ *     mended the cage, `"weld"`, `"turn_faces"` or `"weld turn_faces"` comes after it
  *  2  `[asset, part]`
  *  3  metres per file unit
  *  4  scale of the asset
@@ -39,7 +40,7 @@ export function valueCanonical({ record, asset, part, metresPerUnit, scale, sett
   if (!properties) throw new Error('A value without numbers has no canonical form.');
   return JSON.stringify([
     VALUE_FORM,
-    [record.contentSha256, record.scheme, record.boundary, record.triangles, record.creasing, record.partsBy, record.engineVersion],
+    [record.contentSha256, record.scheme, record.boundary, record.triangles, record.creasing, record.partsBy, record.engineVersion, ...(record.mended ? [record.mended] : [])],
     [asset, part],
     metresPerUnit,
     scale,

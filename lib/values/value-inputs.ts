@@ -48,6 +48,8 @@ export interface RecordKey {
   triangles: string;
   creasing: string;
   partsBy: string;
+  /** `weld`, `turn_faces` or both, where the import asked for it; else empty. */
+  mended?: string;
   engineVersion: string;
 }
 
