@@ -1,5 +1,5 @@
-import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
-import { edgePoint, facePoint, vertexPoint, VertexStars } from './catmull-clark-masks';
+import { nextHalfEdge } from '../mesh/topology';
+import { edgePoint, facePoints, vertexPoint, VertexStars } from './catmull-clark-masks';
 import type { LevelMesh } from './level-mesh';
 import type { RefinementRules } from './refinement-rules';
 import { childEdgeSharpness, countSemiSharp, decayed } from './sharpness-decay';
@@ -30,32 +30,38 @@ export function refineAround(mesh: LevelMesh, rules: RefinementRules): LevelMesh
   const edgeSharpness = new Float32Array(4 * children);
   const bodyOf = new Int32Array(children);
   const live = new Uint8Array(children);
-  const borderOf = new Int32Array(4 * children).fill(-1);
+  const borderOf = new Int32Array(4 * children);
   const borderFrom = new Float32Array(4 * children);
   const half = 2 ** (-mesh.level - 1);
-  const childTwin = (corner: number, side: number): number => (corner < 0 || childOf[corner] < 0 ? -1 : 4 * childOf[corner] + side);
   for (let child = 0; child < children; child++) {
     const c = corners[child];
-    const p = previousHalfEdge(mesh, c);
     const face = mesh.faceOf[c];
+    const start = mesh.starts[face];
+    const end = mesh.starts[face + 1];
+    const p = c === start ? end - 1 : c - 1;
+    const next = c + 1 === end ? start : c + 1;
     const at = 4 * child;
     starts[child + 1] = at + 4;
-    faceOf.fill(child, at, at + 4);
+    faceOf[at] = faceOf[at + 1] = faceOf[at + 2] = faceOf[at + 3] = child;
     bodyOf[child] = mesh.bodyOf[face];
     live[child] = mesh.live[face];
     vertexOf[at] = points.ofVertex(mesh.vertexOf[c]);
     vertexOf[at + 1] = points.ofEdge(c);
     vertexOf[at + 2] = points.ofFace(face);
     vertexOf[at + 3] = points.ofEdge(p);
-    const acrossEdge = mesh.twin[c];
-    const acrossBefore = mesh.twin[p];
-    twin[at] = acrossEdge < 0 ? -1 : childTwin(nextHalfEdge(mesh, acrossEdge), 3);
-    twin[at + 1] = childTwin(nextHalfEdge(mesh, c), 2);
-    twin[at + 2] = childTwin(p, 1);
-    twin[at + 3] = childTwin(acrossBefore, 0);
-    edgeSharpness[at] = childEdgeSharpness(rules.creasing, mesh.edgeSharpness[c], mesh.vertexOf[c], semiSharp);
-    edgeSharpness[at + 3] = childEdgeSharpness(rules.creasing, mesh.edgeSharpness[p], mesh.vertexOf[c], semiSharp);
+    // A child's half-edges follow from its corner: side 0 lies across from side 3 of the child after the corner's twin, side 1 from side 2 of the next child.
+    const acrossEdge = mesh.twin[c] < 0 ? -1 : childOf[nextHalfEdge(mesh, mesh.twin[c])];
+    const acrossBefore = mesh.twin[p] < 0 ? -1 : childOf[mesh.twin[p]];
+    const after = childOf[next];
+    const before = childOf[p];
+    twin[at] = acrossEdge < 0 ? -1 : 4 * acrossEdge + 3;
+    twin[at + 1] = after < 0 ? -1 : 4 * after + 2;
+    twin[at + 2] = before < 0 ? -1 : 4 * before + 1;
+    twin[at + 3] = acrossBefore < 0 ? -1 : 4 * acrossBefore;
+    if (mesh.edgeSharpness[c] > 0) edgeSharpness[at] = childEdgeSharpness(rules.creasing, mesh.edgeSharpness[c], mesh.vertexOf[c], semiSharp);
+    if (mesh.edgeSharpness[p] > 0) edgeSharpness[at + 3] = childEdgeSharpness(rules.creasing, mesh.edgeSharpness[p], mesh.vertexOf[c], semiSharp);
     borderOf[at] = mesh.borderOf[c];
+    borderOf[at + 1] = borderOf[at + 2] = -1;
     borderOf[at + 3] = mesh.borderOf[p];
     borderFrom[at] = mesh.borderFrom[c];
     borderFrom[at + 3] = mesh.borderFrom[p] + half;
@@ -72,54 +78,56 @@ class ChildPoints {
   private readonly vertexIds: Int32Array;
   private readonly edgeIds: Int32Array;
   private readonly faceIds: Int32Array;
-  private readonly positions: number[] = [];
-  private readonly sharpness: number[] = [];
+  private readonly positions: Float64Array;
+  private readonly sharpness: Float32Array;
   private readonly stars: VertexStars;
-  private readonly point = new Float64Array(3);
+  private readonly facePoints: Float64Array;
+  private count = 0;
 
   constructor(
-    private readonly mesh: LevelMesh, private readonly rules: RefinementRules, corners: Int32Array, count: number,
+    private readonly mesh: LevelMesh, private readonly rules: RefinementRules, corners: Int32Array, children: number,
     private readonly semiSharp: ReturnType<typeof countSemiSharp>,
   ) {
     this.vertexIds = new Int32Array(mesh.vertices).fill(-1);
     this.edgeIds = new Int32Array(mesh.vertexOf.length).fill(-1);
     this.faceIds = new Int32Array(mesh.faces).fill(-1);
-    this.stars = new VertexStars(mesh, rules.creasing, corners, count, semiSharp);
-  }
-
-  private push(sharpness: number): number {
-    this.positions.push(this.point[0], this.point[1], this.point[2]);
-    this.sharpness.push(sharpness);
-    return this.sharpness.length - 1;
+    this.facePoints = facePoints(mesh, corners, children);
+    this.stars = new VertexStars(mesh, rules.creasing, corners, children, semiSharp, this.facePoints);
+    const most = Math.min(4 * children, mesh.vertices + mesh.vertexOf.length + mesh.faces);
+    this.positions = new Float64Array(3 * most);
+    this.sharpness = new Float32Array(most);
   }
 
   ofVertex(vertex: number): number {
-    if (this.vertexIds[vertex] < 0) {
-      vertexPoint(this.mesh, vertex, this.stars, this.point);
-      this.vertexIds[vertex] = this.push(decayed(this.mesh.vertexSharpness[vertex]));
+    let id = this.vertexIds[vertex];
+    if (id < 0) {
+      id = this.vertexIds[vertex] = this.count++;
+      vertexPoint(this.mesh, vertex, this.stars, this.positions, 3 * id);
+      this.sharpness[id] = decayed(this.mesh.vertexSharpness[vertex]);
     }
-    return this.vertexIds[vertex];
+    return id;
   }
 
   ofEdge(h: number): number {
-    if (this.edgeIds[h] < 0) {
-      edgePoint(this.mesh, h, this.rules, this.semiSharp, this.point);
-      const id = this.push(0);
-      this.edgeIds[h] = id;
+    let id = this.edgeIds[h];
+    if (id < 0) {
+      id = this.edgeIds[h] = this.count++;
+      edgePoint(this.mesh, h, this.rules, this.semiSharp, this.facePoints, this.positions, 3 * id);
       if (this.mesh.twin[h] >= 0) this.edgeIds[this.mesh.twin[h]] = id;
     }
-    return this.edgeIds[h];
+    return id;
   }
 
   ofFace(face: number): number {
-    if (this.faceIds[face] < 0) {
-      facePoint(this.mesh, face, this.point);
-      this.faceIds[face] = this.push(0);
+    let id = this.faceIds[face];
+    if (id < 0) {
+      id = this.faceIds[face] = this.count++;
+      for (let axis = 0; axis < 3; axis++) this.positions[3 * id + axis] = this.facePoints[3 * face + axis];
     }
-    return this.faceIds[face];
+    return id;
   }
 
   finish(): { positions: Float64Array; vertexSharpness: Float32Array } {
-    return { positions: Float64Array.from(this.positions), vertexSharpness: Float32Array.from(this.sharpness) };
+    return { positions: this.positions.subarray(0, 3 * this.count), vertexSharpness: this.sharpness.subarray(0, this.count) };
   }
 }

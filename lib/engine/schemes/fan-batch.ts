@@ -15,7 +15,7 @@ import { applyRows } from './sparse-rows';
 
 /** What a coarser rule may change, relative to the moments of the cones from the origin and to the area. */
 const SOLID_TOLERANCE = 1e-15;
-const SURFACE_TOLERANCE = 1e-12;
+const SURFACE_TOLERANCE = 1e-11;
 
 /** Times the difference of two closings: the earlier one errs about as much as they differ, so that the difference alone may fall short by a little. */
 const CLOSING_FACTOR = 2;

@@ -29,11 +29,11 @@ export function refineTriangles(mesh: LevelMesh, rules: RefinementRules): LevelM
     if (kept > 1) middleChild[face] = children++;
   }
   const semiSharp = countSemiSharp(mesh, corners, cornerCount);
-  const stars = new VertexStars(mesh, rules.creasing, corners, cornerCount, semiSharp);
-  const points = new TrianglePoints(mesh, rules, stars, semiSharp);
+  const stars = new VertexStars(mesh, rules.creasing, corners, cornerCount, semiSharp, null);
+  const points = new TrianglePoints(mesh, rules, stars, semiSharp, children);
   const fine: Omit<LevelMesh, 'positions' | 'vertexSharpness' | 'vertices'> = {
-    faces: children, starts: Int32Array.from({ length: children + 1 }, (_, i) => 3 * i), vertexOf: new Int32Array(3 * children),
-    faceOf: Int32Array.from({ length: 3 * children }, (_, h) => Math.floor(h / 3)), twin: new Int32Array(3 * children).fill(-1),
+    faces: children, starts: new Int32Array(children + 1).map((_, i) => 3 * i), vertexOf: new Int32Array(3 * children),
+    faceOf: new Int32Array(3 * children).map((_, h) => Math.floor(h / 3)), twin: new Int32Array(3 * children).fill(-1),
     edgeSharpness: new Float32Array(3 * children), bodyOf: new Int32Array(children), live: new Uint8Array(children), level: mesh.level + 1,
     borderOf: new Int32Array(3 * children).fill(-1), borderFrom: new Float32Array(3 * children),
   };
@@ -81,46 +81,57 @@ export function refineTriangles(mesh: LevelMesh, rules: RefinementRules): LevelM
 class TrianglePoints {
   private readonly vertexIds: Int32Array;
   private readonly edgeIds: Int32Array;
-  private readonly positions: number[] = [];
-  private readonly sharpness: number[] = [];
+  private readonly positions: Float64Array;
+  private readonly sharpness: Float32Array;
+  private count = 0;
 
-  constructor(private readonly mesh: LevelMesh, private readonly rules: RefinementRules, private readonly stars: VertexStars, private readonly semiSharp: SemiSharpAround) {
+  constructor(
+    private readonly mesh: LevelMesh, private readonly rules: RefinementRules, private readonly stars: VertexStars, private readonly semiSharp: SemiSharpAround, children: number,
+  ) {
     this.vertexIds = new Int32Array(mesh.vertices).fill(-1);
     this.edgeIds = new Int32Array(mesh.vertexOf.length).fill(-1);
+    const most = Math.min(3 * children, mesh.vertices + mesh.vertexOf.length);
+    this.positions = new Float64Array(3 * most);
+    this.sharpness = new Float32Array(most);
   }
 
   ofVertex(vertex: number): number {
     if (this.vertexIds[vertex] >= 0) return this.vertexIds[vertex];
-    const n = this.stars.edges[vertex];
+    const id = (this.vertexIds[vertex] = this.count++);
+    const { mesh, stars } = this;
+    const n = stars.edges[vertex];
     const weight = loopWeight(n);
-    const smooth = (axis: number): number => (1 - n * weight) * this.mesh.positions[3 * vertex + axis] + weight * this.stars.edgeSums[3 * vertex + axis];
-    for (let axis = 0; axis < 3; axis++) this.positions.push(blendVertexRules(this.mesh, vertex, this.stars, axis, smooth));
-    this.sharpness.push(decayed(this.mesh.vertexSharpness[vertex]));
-    return (this.vertexIds[vertex] = this.sharpness.length - 1);
+    const smooth = (axis: number): number => (1 - n * weight) * mesh.positions[3 * vertex + axis] + weight * stars.edgeSums[3 * vertex + axis];
+    const plain = mesh.vertexSharpness[vertex] === 0 && stars.sharp[vertex] < 2;
+    for (let axis = 0; axis < 3; axis++) this.positions[3 * id + axis] = plain ? smooth(axis) : blendVertexRules(mesh, vertex, stars, axis, smooth);
+    this.sharpness[id] = decayed(mesh.vertexSharpness[vertex]);
+    return id;
   }
 
   /** Edge point: the midpoint where sharp, (3a + 3b + c + d)/8 where smooth, mixed by a sharpness below 1. */
   ofEdge(h: number): number {
     if (this.edgeIds[h] >= 0) return this.edgeIds[h];
+    const id = (this.edgeIds[h] = this.count++);
     const { mesh, rules, semiSharp } = this;
-    const [from, to, twin] = [mesh.vertexOf[h], mesh.vertexOf[nextHalfEdge(mesh, h)], mesh.twin[h]];
+    const from = mesh.vertexOf[h];
+    const to = mesh.vertexOf[nextHalfEdge(mesh, h)];
+    const twin = mesh.twin[h];
     const sharpness = twin < 0 ? Infinity : mesh.edgeSharpness[h];
     const staysSharp = sharpness >= 1 || (sharpness > 0 && childEdgeSharpness(rules.creasing, sharpness, from, semiSharp) > 0
       && childEdgeSharpness(rules.creasing, sharpness, to, semiSharp) > 0);
     const crease = staysSharp ? 1 : sharpness;
+    const c = crease >= 1 ? from : mesh.vertexOf[previousHalfEdge(mesh, h)];
+    const d = crease >= 1 ? from : mesh.vertexOf[previousHalfEdge(mesh, twin)];
     for (let axis = 0; axis < 3; axis++) {
-      const at = (vertex: number): number => mesh.positions[3 * vertex + axis];
-      const ends = at(from) + at(to);
-      const smooth = crease >= 1 ? 0 : (3 * ends + at(mesh.vertexOf[previousHalfEdge(mesh, h)]) + at(mesh.vertexOf[previousHalfEdge(mesh, twin)])) / 8;
-      this.positions.push(crease >= 1 ? ends / 2 : (crease * ends) / 2 + (1 - crease) * smooth);
+      const ends = mesh.positions[3 * from + axis] + mesh.positions[3 * to + axis];
+      const smooth = (3 * ends + mesh.positions[3 * c + axis] + mesh.positions[3 * d + axis]) / 8;
+      this.positions[3 * id + axis] = crease >= 1 ? ends / 2 : crease === 0 ? smooth : (crease * ends) / 2 + (1 - crease) * smooth;
     }
-    this.sharpness.push(0);
-    this.edgeIds[h] = this.sharpness.length - 1;
-    if (twin >= 0) this.edgeIds[twin] = this.edgeIds[h];
-    return this.edgeIds[h];
+    if (twin >= 0) this.edgeIds[twin] = id;
+    return id;
   }
 
   finish(): { positions: Float64Array; vertexSharpness: Float32Array; vertices: number } {
-    return { positions: Float64Array.from(this.positions), vertexSharpness: Float32Array.from(this.sharpness), vertices: this.sharpness.length };
+    return { positions: this.positions.subarray(0, 3 * this.count), vertexSharpness: this.sharpness.subarray(0, this.count), vertices: this.count };
   }
 }
