@@ -27,6 +27,9 @@ export interface DeskOptions {
   scheme: SchemeWord;
   boundary: BoundaryWord;
   partsBy: PartitionWord;
+  /** Join vertices on open borders that lie on each other; turn faces one way and outwards. Off unless somebody asks. */
+  weld: boolean;
+  turnFaces: boolean;
 }
 
 /** What was dropped and stays here, with the reason. */
@@ -70,7 +73,7 @@ const sayOf = (error: unknown, otherwise: string): string => (error instanceof R
 /** Files on their way into a show: chosen, looked through, sent four at a time, submitted. */
 export function useImportDesk(preparation: ImportPreparation, onSubmitted: (importId: string) => void) {
   const [{ files, leftOut }, setChosen] = useState<{ files: DeskFile[]; leftOut: LeftOut }>({ files: [], leftOut: NONE });
-  const [options, setOptions] = useState<DeskOptions>({ scheme: preparation.scheme, boundary: preparation.boundary, partsBy: preparation.parts_by });
+  const [options, setOptions] = useState<DeskOptions>({ scheme: preparation.scheme, boundary: preparation.boundary, partsBy: preparation.parts_by, weld: false, turnFaces: false });
   const [phase, setPhase] = useState<DeskPhase>('choosing');
   const [refusal, setRefusal] = useState<string | null>(null);
   const importId = useRef<string | null>(null);
@@ -99,7 +102,7 @@ export function useImportDesk(preparation: ImportPreparation, onSubmitted: (impo
     setRefusal(null);
     setPhase('sending');
     try {
-      const body = { scheme: options.scheme, boundary: options.boundary, parts_by: options.partsBy };
+      const body = { scheme: options.scheme, boundary: options.boundary, parts_by: options.partsBy, weld: options.weld, turn_faces: options.turnFaces };
       importId.current ??= (await requestJson<{ id: string }>(imports, { method: 'POST', body })).id;
     } catch (error) {
       setRefusal(sayOf(error, 'The import could not be opened.'));

@@ -1,5 +1,7 @@
 'use client';
 
+import { useId } from 'react';
+import { Checkbox } from '@/components/ui/checkbox';
 import { Field } from '@/components/ui/field';
 import { Select } from '@/components/ui/select';
 import type { DeskOptions } from '@/hooks/use-import-desk';
@@ -43,6 +45,23 @@ export function DeskSettings({ options, standard, disabled, onChange }: DeskSett
           onValueChange={(value) => onChange({ ...options, partsBy: PARTITION_WORDS.find((word) => word === value) ?? options.partsBy })}
         />
       </Field>
+      <div className="order-last col-span-2 flex flex-col justify-end gap-1.5 pb-1 text-13">
+        <Mend label="Turn faces outwards" checked={options.turnFaces} disabled={disabled} onChange={(turnFaces) => onChange({ ...options, turnFaces })} />
+        <Mend label="Weld open borders" checked={options.weld} disabled={disabled} onChange={(weld) => onChange({ ...options, weld })} />
+      </div>
     </div>
+  );
+}
+
+/** A change to the cage before it is measured; the report notes what it did. */
+function Mend({ label, checked, disabled, onChange }: { label: string; checked: boolean; disabled: boolean; onChange: (checked: boolean) => void }) {
+  const id = useId();
+  return (
+    <span className="flex items-center gap-2">
+      <Checkbox id={id} checked={checked} disabled={disabled} onCheckedChange={(state) => onChange(state === true)} />
+      <label htmlFor={id} className="text-ink-2">
+        {label}
+      </label>
+    </span>
   );
 }

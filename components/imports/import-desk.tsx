@@ -55,7 +55,7 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
         <LeftOutWords leftOut={desk.leftOut} />
         <DeskSettings
           options={desk.options}
-          standard={{ scheme: preparation.scheme, boundary: preparation.boundary, partsBy: preparation.parts_by }}
+          standard={{ scheme: preparation.scheme, boundary: preparation.boundary, partsBy: preparation.parts_by, weld: false, turnFaces: false }}
           disabled={phase !== 'choosing'}
           onChange={desk.setOptions}
         />

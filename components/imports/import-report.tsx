@@ -112,6 +112,8 @@ export function ImportReport({ show, upAxis, initial, address, mayImport, namePa
         </div>
         <p className="text-13 text-ink-3">
           {detail.created_by}
+          {detail.turn_faces ? ' · Faces turned outwards' : ''}
+          {detail.weld ? ' · Open borders welded' : ''}
           {isLate ? ' · The server does not answer; what is shown may be old.' : isOver ? '' : ' · This page can be left; the import goes on.'}
         </p>
       </div>

@@ -9,6 +9,7 @@ export function MeasuredAsFacts({ detail }: { detail: PartDetail }) {
     ['Boundary', as.boundary],
     ['Creases', as.creasing],
     ['Parts by', as.parts_by],
+    ['Mended before measuring', [as.weld ? 'borders welded' : '', as.turn_faces ? 'faces turned outwards' : ''].filter(Boolean).join(', ') || 'no'],
     ['Caps, share of area', `${formatFixed(detail.cap_area_share * 100, 3)} %`],
     ['Caps, share of volume', `${formatFixed(detail.cap_volume_share * 100, 3)} %`],
     ['Engine', as.engine_version],

@@ -1,4 +1,4 @@
-import { check, integer, pgTable, text, timestamp, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
+import { boolean, check, integer, pgTable, text, timestamp, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
 import { BOUNDARY_WORDS, CREASING_WORDS, PARTITION_WORDS, SCHEME_WORDS, TRIANGLE_WORDS } from '../../lib/rules/measure-words';
 import { oneOf } from './checks';
 
@@ -13,6 +13,8 @@ export const geometryRecords = pgTable(
     triangles: text('triangles', { enum: TRIANGLE_WORDS }).notNull(),
     creasing: text('creasing', { enum: CREASING_WORDS }).notNull(),
     partsBy: text('parts_by', { enum: PARTITION_WORDS }).notNull(),
+    weld: boolean('weld').notNull().default(false),
+    turnFaces: boolean('turn_faces').notNull().default(false),
     engineVersion: text('engine_version').notNull(),
     faces: integer('faces').notNull(),
     vertices: integer('vertices').notNull(),
@@ -26,6 +28,8 @@ export const geometryRecords = pgTable(
       t.triangles,
       t.creasing,
       t.partsBy,
+      t.weld,
+      t.turnFaces,
       t.engineVersion,
     ),
     check('geometry_records_scheme', oneOf(t.scheme, SCHEME_WORDS)),

@@ -1,4 +1,4 @@
-import { check, index, pgTable, text, timestamp, uuid } from 'drizzle-orm/pg-core';
+import { boolean, check, index, pgTable, text, timestamp, uuid } from 'drizzle-orm/pg-core';
 import { BOUNDARY_WORDS, CREASING_WORDS, PARTITION_WORDS, SCHEME_WORDS, TRIANGLE_WORDS } from '../../lib/rules/measure-words';
 import { IMPORT_STATES } from '../../lib/rules/states';
 import { oneOf } from './checks';
@@ -19,6 +19,8 @@ export const imports = pgTable(
     triangles: text('triangles', { enum: TRIANGLE_WORDS }).notNull().default('catmark'),
     creasing: text('creasing', { enum: CREASING_WORDS }).notNull().default('uniform'),
     partsBy: text('parts_by', { enum: PARTITION_WORDS }).notNull(),
+    weld: boolean('weld').notNull().default(false),
+    turnFaces: boolean('turn_faces').notNull().default(false),
     createdBy: uuid('created_by')
       .notNull()
       .references(() => users.id, { onDelete: 'restrict' }),
