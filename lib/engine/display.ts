@@ -1,6 +1,8 @@
 import type { Cage } from './cage';
 import type { MeasureOptions, Three } from './measured';
+import { FindingList } from './mesh/findings';
 import { makeFrames } from './mesh/frames';
+import { mendCage } from './mesh/mend-cage';
 import { partitionFaces } from './mesh/partition';
 import { buildTopology, nextHalfEdge, previousHalfEdge } from './mesh/topology';
 import { dooSabinLimitPoints, limitPoints, loopSmoothLimit } from './schemes/limit-points';
@@ -33,9 +35,10 @@ export interface DisplayMesh {
 
 /**
  * Triangulates the limit surface: `level` uniform refinements, then every vertex on its limit point. `polyhedral` (and a level of 0) gives the cage.
- * Never throws; a cage with problems is drawn as far as its faces go.
+ * The cage is mended as it is for measuring. Never throws; a cage with problems is drawn as far as its faces go.
  */
-export function displayMesh(cage: Cage, options: MeasureOptions, level: number): DisplayMesh {
+export function displayMesh(given: Cage, options: MeasureOptions, level: number): DisplayMesh {
+  const { cage } = mendCage(given, options, new FindingList());
   const { mesh } = buildTopology(cage);
   const bodies = partitionFaces(cage, mesh, options.partsBy);
   const onePiece = { ...bodies, bodyOf: new Int32Array(mesh.faces), bodies: 1 };

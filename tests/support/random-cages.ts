@@ -3,7 +3,10 @@ import type { Cage } from '@/lib/engine/cage';
 import type { MeasureOptions } from '@/lib/engine/measured';
 import { buildTopology, nextHalfEdge } from '@/lib/engine/mesh/topology';
 import { refineAround } from '@/lib/engine/schemes/catmull-clark-refine';
-import { levelZero } from '@/lib/engine/schemes/level-mesh';
+import { dooSabinCage } from '@/lib/engine/schemes/doo-sabin-mesh';
+import { refineDooSabin } from '@/lib/engine/schemes/doo-sabin-refine';
+import { levelZero, type LevelMesh } from '@/lib/engine/schemes/level-mesh';
+import { refineTriangles } from '@/lib/engine/schemes/loop-refine';
 import { facesOf, referenceCage } from './engine-cages';
 
 /** Closed manifold cages: genus 0 and 1, quads, triangles and n-gons, valences 3 to 6. */
@@ -19,33 +22,48 @@ export interface RandomCage {
 const anySharpness = fc.constantFrom(0.4, 1, 1.7, 2.5, 10);
 
 /** A base cage with moved vertices and tags on some of its edges and vertices. */
-export const randomCage: fc.Arbitrary<RandomCage> = fc
-  .record({
-    base: fc.constantFrom(...BASES),
-    shifts: fc.array(fc.double({ min: -0.1, max: 0.1, noNaN: true }), { minLength: 24, maxLength: 24 }),
-    creases: fc.array(fc.tuple(fc.nat(200), anySharpness), { maxLength: 6 }),
-    corners: fc.array(fc.tuple(fc.nat(200), anySharpness), { maxLength: 2 }),
-  })
-  .map(({ base, shifts, creases, corners }) => {
-    const plain = referenceCage(base);
-    const faces = facesOf(plain);
-    const edges = faces.flatMap((face) => face.map((v, i): [number, number] => [v, face[(i + 1) % face.length]])).filter(([a, b]) => a < b);
-    const tagged = creases.map(([i, sharpness]) => [...edges[i % edges.length], sharpness] as const);
-    const cage: Cage = {
-      ...plain,
-      positions: plain.positions.map((value, i) => value + shifts[(7 * i) % shifts.length]),
-      creaseVertices: Uint32Array.from(tagged.flatMap(([a, b]) => [a, b])),
-      creaseSharpness: Float32Array.from(tagged.map(([, , sharpness]) => sharpness)),
-      cornerVertices: Uint32Array.from(corners.map(([i]) => i % (plain.positions.length / 3))),
-      cornerSharpness: Float32Array.from(corners.map(([, sharpness]) => sharpness)),
-    };
-    return { cage, base };
-  });
+export const randomCage: fc.Arbitrary<RandomCage> = cagesFrom(BASES);
 
-/** The cage after one refinement by the uniform rule, its tags decayed. */
+/** The same over closed cages of triangles, valences 3 to 6, for Loop. */
+export const randomTriangles: fc.Arbitrary<RandomCage> = cagesFrom(['tetra.obj', 'octa.obj', 'icosa.obj', 'cube_tri.obj', 'bipyramid_5.obj', 'torus_reg_tri.obj']);
+
+function cagesFrom(bases: readonly string[]): fc.Arbitrary<RandomCage> {
+  return fc
+    .record({
+      base: fc.constantFrom(...bases),
+      shifts: fc.array(fc.double({ min: -0.1, max: 0.1, noNaN: true }), { minLength: 24, maxLength: 24 }),
+      creases: fc.array(fc.tuple(fc.nat(200), anySharpness), { maxLength: 6 }),
+      corners: fc.array(fc.tuple(fc.nat(200), anySharpness), { maxLength: 2 }),
+    })
+    .map(({ base, shifts, creases, corners }) => {
+      const plain = referenceCage(base);
+      const faces = facesOf(plain);
+      const edges = faces.flatMap((face) => face.map((v, i): [number, number] => [v, face[(i + 1) % face.length]])).filter(([a, b]) => a < b);
+      const tagged = creases.map(([i, sharpness]) => [...edges[i % edges.length], sharpness] as const);
+      const cage: Cage = {
+        ...plain,
+        positions: plain.positions.map((value, i) => value + shifts[(7 * i) % shifts.length]),
+        creaseVertices: Uint32Array.from(tagged.flatMap(([a, b]) => [a, b])),
+        creaseSharpness: Float32Array.from(tagged.map(([, , sharpness]) => sharpness)),
+        cornerVertices: Uint32Array.from(corners.map(([i]) => i % (plain.positions.length / 3))),
+        cornerSharpness: Float32Array.from(corners.map(([, sharpness]) => sharpness)),
+      };
+      return { cage, base };
+    });
+}
+
+function refined(cage: LevelMesh, options: MeasureOptions): LevelMesh {
+  if (options.scheme === 'loop') return refineTriangles(cage, options);
+  if (options.scheme === 'catmull-clark') return refineAround(cage, options);
+  const all = new Uint8Array(cage.vertices).fill(1);
+  return refineDooSabin(dooSabinCage(cage, options.boundary), all, all);
+}
+
+/** The cage after one refinement by the scheme's rule, its tags decayed. */
 export function refinedOnce(cage: Cage, options: MeasureOptions): Cage {
   const { mesh } = buildTopology(cage);
-  const fine = refineAround(levelZero(mesh, cage.positions, new Int32Array(mesh.faces), new Uint8Array(1), options.boundary), options);
+  const coarse = levelZero(mesh, cage.positions, new Int32Array(mesh.faces), new Uint8Array(1), options.boundary);
+  const fine = refined(coarse, options);
   const creases: number[] = [];
   const sharpness: number[] = [];
   for (let h = 0; h < fine.twin.length; h++) {

@@ -4,6 +4,7 @@ import { growBox } from '../mesh/box-tree';
 import { previousHalfEdge, nextHalfEdge, type Topology } from '../mesh/topology';
 import { refineAround } from './catmull-clark-refine';
 import { collectRing } from './classify-vertices';
+import { dooSabinCage, type DooSabinMesh } from './doo-sabin-mesh';
 import { refineDooSabin } from './doo-sabin-refine';
 import { levelZero, type LevelMesh } from './level-mesh';
 import { dooSabinLimitPoints, limitPoints, loopSmoothLimit } from './limit-points';
@@ -24,18 +25,28 @@ export interface FaceTriangles {
  * A cage's surface on its way to the limit, element by element. Elements are the level's faces, and from the first Doo-Sabin refinement on its vertices,
  * since the patches belong to them; `live` and `bodyOf` count elements, and `bodyOf` is the cage's face that an element is a piece of.
  */
-export type LimitLevel = LevelMesh;
+export type LimitLevel = LevelMesh | DooSabinMesh;
 
 /** The cage as level 0; all faces are live. `positions` may be in any frame. */
 export function startLimit(mesh: Topology, positions: Float64Array, options: MeasureOptions): LimitLevel {
   const cage = levelZero(mesh, positions, new Int32Array(mesh.faces), new Uint8Array(1), options.boundary);
-  return { ...cage, bodyOf: Int32Array.from(cage.live.keys()) };
+  const level = { ...cage, bodyOf: Int32Array.from(cage.live.keys()) };
+  return options.scheme === 'doo-sabin' ? dooSabinCage(level, options.boundary) : level;
 }
 
 /** Refines the live elements by the scheme's rule. Loop takes triangles only, and `polyhedral` cannot be refined. */
 export function refineLimit(level: LimitLevel, options: MeasureOptions): LimitLevel {
-  if (options.scheme === 'doo-sabin') return refineDooSabin(level, level.level === 0);
+  if ('keepsCorners' in level) {
+    const vertices = level.level === 0 ? verticesOfLive(level) : level.live;
+    return refineDooSabin(level, vertices, vertices);
+  }
   return options.scheme === 'loop' ? refineTriangles(level, options) : refineAround(level, options);
+}
+
+function verticesOfLive(level: LimitLevel): Uint8Array {
+  const marks = new Uint8Array(level.vertices);
+  for (let h = 0; h < level.vertexOf.length; h++) if (level.live[level.faceOf[h]] === 1) marks[level.vertexOf[h]] = 1;
+  return marks;
 }
 
 /** A box (min x, y, z, max x, y, z) per element that holds its limit surface, by the hull of the points around it; of use for live elements only. */
