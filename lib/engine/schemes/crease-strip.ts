@@ -1,6 +1,6 @@
 import type { CreasingRule } from '../cage';
 import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
-import { INNER, TIP } from './classify-vertices';
+import { INNER, QUAD_COUNTS, TIP, type RegularCounts } from './classify-vertices';
 import type { LevelMesh } from './level-mesh';
 import { childEdgeSharpness, type SemiSharpAround } from './sharpness-decay';
 
@@ -12,26 +12,27 @@ function isSemiSharp(mesh: LevelMesh, h: number): boolean {
   return mesh.twin[h] >= 0 && mesh.edgeSharpness[h] > 0 && mesh.edgeSharpness[h] < Infinity;
 }
 
-/** Whether a crease runs straight on, equally sharp, through the start of its half-edge `h`: a vertex of four quads that nothing else touches. */
-function runsThrough(mesh: LevelMesh, h: number): boolean {
+/** Whether a crease runs straight on, equally sharp, through the start of its half-edge `h`: a vertex among regular faces that nothing else touches. */
+function runsThrough(mesh: LevelMesh, counts: RegularCounts, h: number): boolean {
   if (mesh.vertexSharpness[mesh.vertexOf[h]] !== 0) return false;
   let spoke = h;
-  for (let j = 0; j < 4; j++) {
+  for (let j = 0; j < counts.inner; j++) {
     if (spoke < 0) return false;
     const face = mesh.faceOf[spoke];
-    if (mesh.starts[face + 1] - mesh.starts[face] !== 4) return false;
-    if (mesh.edgeSharpness[spoke] !== (j % 2 === 0 ? mesh.edgeSharpness[h] : 0)) return false;
+    if (mesh.starts[face + 1] - mesh.starts[face] !== counts.corners) return false;
+    if (mesh.edgeSharpness[spoke] !== (j % counts.rim === 0 ? mesh.edgeSharpness[h] : 0)) return false;
     spoke = mesh.twin[previousHalfEdge(mesh, spoke)];
   }
   return spoke === h;
 }
 
 /** Whether the half-edge's edge is a piece of a crease of one sharpness that goes straight on at both its ends. */
-function isConstantCrease(mesh: LevelMesh, h: number): boolean {
-  return isSemiSharp(mesh, h) && runsThrough(mesh, h) && runsThrough(mesh, mesh.twin[h]);
+export function isConstantCrease(mesh: LevelMesh, counts: RegularCounts, h: number): boolean {
+  return isSemiSharp(mesh, h) && runsThrough(mesh, counts, h) && runsThrough(mesh, counts, mesh.twin[h]);
 }
 
-function isSettled(kind: number): boolean {
+/** Whether a corner's kind says that its vertex changes its rule no more and is regular on the corner's side. */
+export function isSettled(kind: number): boolean {
   return kind >= INNER && kind <= TIP;
 }
 
@@ -47,9 +48,9 @@ export function stripSide(mesh: LevelMesh, kinds: Uint8Array, face: number): num
   const start = mesh.starts[face];
   if (mesh.starts[face + 1] - start !== 4) return -1;
   for (let h = start; h < start + 4; h++) {
-    if (!isConstantCrease(mesh, h)) continue;
+    if (!isConstantCrease(mesh, QUAD_COUNTS, h)) continue;
     const far = nextHalfEdge(mesh, nextHalfEdge(mesh, h));
-    return isConstantCrease(mesh, far) || (isSettled(kinds[far]) && isSettled(kinds[nextHalfEdge(mesh, far)])) ? h : -1;
+    return isConstantCrease(mesh, QUAD_COUNTS, far) || (isSettled(kinds[far]) && isSettled(kinds[nextHalfEdge(mesh, far)])) ? h : -1;
   }
   return -1;
 }
@@ -81,7 +82,7 @@ export function refineStrip(net: Float64Array, near: number, far: number, creasi
 }
 
 /** Sharpness after one step of a crease that is equally sharp all along. */
-function childSharpness(sharpness: number, creasing: CreasingRule): number {
+export function childSharpness(sharpness: number, creasing: CreasingRule): number {
   around.sums[0] = 2 * sharpness;
   return childEdgeSharpness(creasing, sharpness, 0, around);
 }

@@ -8,6 +8,7 @@ import type { LevelMesh } from './level-mesh';
 import { addTriangleSide, LOOP_KIT } from './loop-kit';
 import { fillTriangleNet } from './loop-net';
 import { refineTriangles } from './loop-refine';
+import { splitTriangleStrip, triangleStripSide } from './loop-strip';
 import type { RefinementRules } from './refinement-rules';
 
 /** Refinements after which a cage that still is not resolved is given up; sharpness below 10 needs at most 12. */
@@ -18,7 +19,8 @@ const net = new Float64Array(36);
 
 /**
  * Integrates the Loop limit surface of the live faces of `cage`, all triangles, about the bodies' origins. Regular triangles are exact quartic box splines,
- * extraordinary fans closed level sequences; the rest is refined locally. Returns false where the cage could not be resolved.
+ * extraordinary fans closed level sequences; triangles along a crease of one semi-sharp sharpness are split where they lie, the rest is refined locally.
+ * Returns false where the cage could not be resolved.
  */
 export function integrateLoop(cage: LevelMesh, rules: RefinementRules, origins: Float64Array, sums: LimitSums): boolean {
   let mesh = cage;
@@ -32,7 +34,14 @@ export function integrateLoop(cage: LevelMesh, rules: RefinementRules, origins: 
       if (isRegularFace(mesh, TRIANGLE_COUNTS, kinds, face, -1)) {
         addRegularTriangle(mesh, face, patches, sums.curves);
         mesh.live[face] = 0;
-      } else left++;
+        continue;
+      }
+      const side = triangleStripSide(mesh, kinds, face);
+      if (side < 0) left++;
+      else {
+        splitTriangleStrip(mesh, side, rules.creasing, (piece) => patches.add(mesh.bodyOf[face], piece));
+        mesh.live[face] = 0;
+      }
     }
     patches.flush();
     for (let fan = 0; fan < fans.centre.length && left > 0; fan++) {
