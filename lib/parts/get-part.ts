@@ -1,4 +1,4 @@
-import { desc, eq, sql } from 'drizzle-orm';
+import { and, desc, eq, isNull, sql } from 'drizzle-orm';
 import type { Executor } from '@/db/client';
 import { geometryParts } from '@/db/schema/geometry-parts';
 import { materials } from '@/db/schema/materials';
@@ -85,7 +85,7 @@ async function partSettings(db: Executor, partId: string): Promise<PartSetting[]
     .from(settings)
     .innerJoin(users, eq(users.id, settings.setBy))
     .leftJoin(materials, eq(materials.id, settings.materialId))
-    .where(eq(settings.partId, partId))
+    .where(and(eq(settings.partId, partId), isNull(settings.shotId)))
     .orderBy(desc(settings.id))
     .limit(200);
   return rows.map(({ setting, material, setBy }) => ({

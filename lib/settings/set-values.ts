@@ -6,11 +6,13 @@ import type { ActorContext, Context } from '@/lib/context';
 import { recordEvent, type ChangedField } from '@/lib/history/record-event';
 import { findMaterials } from '@/lib/materials/find-materials';
 import { assetTotals } from '@/lib/parts/asset-totals';
+import { draftOverrides } from '@/lib/overrides/draft-overrides';
 import { partCounts } from '@/lib/parts/part-counts';
 import { partRowsById } from '@/lib/parts/part-rows-by-id';
 import type { SetValuesInput, SetValuesItem } from '@/lib/rules/inputs/set-values';
 import type { AssetTotal, PartCounts, PartRow } from '@/lib/rules/part-row';
 import { StudioError } from '@/lib/rules/studio-error';
+import { findShotIds } from '@/lib/shots/find-shot';
 import { getShowAccess } from '@/lib/shows/get-show-access';
 import { insertValueSetters } from '@/lib/values/insert-value-setters';
 import { loadValueInputs, type LoadedPart } from '@/lib/values/load-value-inputs';
@@ -37,16 +39,19 @@ export interface SetValuesAnswer {
  * Sets what parts' masses come from, in bulk: all items or none. Each item carries the revision of the row as it was read;
  * a row that changed since is a conflict, listed with the row as it is now. An item that changes nothing writes nothing.
  * Answers the rows as they are after the call, in the order of the items.
+ * An item with a shot drafts the part's override in that shot (artists may do that too); the row then stays as it is.
  * Errors: bad_input (unknown part or material, named per item), conflict (`changed_meanwhile` per item), not_found, forbidden, frozen.
  */
 export async function setValues(context: Context, input: SetValuesInput): Promise<SetValuesAnswer> {
   const acting = requireActor(context);
-  const { show } = await getShowAccess(acting.db, acting.actor, input.show, 'setValues');
+  const onlyOverrides = input.items.every((item) => item.shot !== undefined);
+  const { show } = await getShowAccess(acting.db, acting.actor, input.show, onlyOverrides ? 'draftOverride' : 'setValues');
   return acting.db.transaction(async (tx) => {
     const { revision, now } = await lockShowValues(tx, show.id);
     const found = await findItemParts(tx, show.id, input.items);
     const materials = await findMaterials(tx, show.id, input.items.flatMap((item) => (item.material ? [item.material] : [])));
-    const errors = checkItems(input.items, found, materials);
+    const shots = await findShotIds(tx, show.id, input.items.flatMap((item) => item.shot ?? []));
+    const errors = checkItems(input.items, found, materials, shots);
     const stale = await changedMeanwhile(tx, show.code, input.items, found);
     if (errors.length > 0) {
       const [first] = errors;
@@ -55,7 +60,11 @@ export async function setValues(context: Context, input: SetValuesInput): Promis
     }
     if (stale.length > 0) throw new StudioError('conflict', `${stale.length === 1 ? stale[0].message : `${stale.length} rows changed meanwhile.`} Nothing was overwritten.`, { errors: stale });
     const parts = found.filter((part): part is ItemPart => part !== null);
-    const changed = await applyItems(tx, acting, { showId: show.id, revision: revision + 1, now, items: input.items, parts, materials });
+    const own = input.items.flatMap((item, i) => (item.shot === undefined ? [{ item, part: parts[i] }] : []));
+    const ofShots = input.items.flatMap((item, i) => (item.shot === undefined ? [] : [{ item, part: parts[i], shotId: shots.get(item.shot.toLowerCase())! }]));
+    const changed =
+      (own.length === 0 ? 0 : await applyItems(tx, acting, { showId: show.id, revision: revision + 1, now, items: own.map(({ item }) => item), parts: own.map(({ part }) => part), materials })) +
+      (ofShots.length === 0 ? 0 : await draftOverrides(tx, acting, show.id, ofShots, materials));
     if (changed > 0) await tx.update(shows).set({ revision: revision + 1 }).where(eq(shows.id, show.id));
     const items = await partRowsById(tx, show.code, parts.map((part) => part.partId));
     const assetIds = [...new Set(parts.map((part) => part.assetId))];

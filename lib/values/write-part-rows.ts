@@ -1,11 +1,11 @@
 import { sql } from 'drizzle-orm';
 import type { Transaction } from '@/db/client';
 import { approvalOf } from './approval-of';
-import { computeValue } from './compute-value';
+import { computeValue, type ComputedValue } from './compute-value';
 import type { LoadedPart } from './load-value-inputs';
 
 /** Columns of part_current that a value fills, with their SQL types: the row's own bookkeeping is apart. */
-const COLUMNS = {
+export const PART_ROW_TYPES = {
   show_id: 'uuid',
   asset_id: 'uuid',
   version_id: 'uuid',
@@ -64,7 +64,7 @@ const COLUMNS = {
   max_valence: 'integer',
 } as const;
 
-type ColumnName = keyof typeof COLUMNS;
+type ColumnName = keyof typeof PART_ROW_TYPES;
 type RowColumns = Record<ColumnName, unknown>;
 
 /** What comes with the version alone: no setting changes it. */
@@ -72,12 +72,12 @@ const OF_VERSION: ReadonlySet<string> = new Set<ColumnName>([
   'show_id', 'asset_id', 'version_id', 'geometry_part_id', 'asset', 'outside_id', 'category', 'version', 'part', 'scale', 'area_m2', 'space', 'up_axis', 'bounds_m', 'faces', 'max_valence',
 ]);
 
-const names = Object.keys(COLUMNS);
+const names = Object.keys(PART_ROW_TYPES);
 const ofSetting = names.filter((name) => !OF_VERSION.has(name));
 const list = sql.raw(names.join(', '));
 const typesOf = (columns: Record<string, string>) => sql.raw(Object.entries({ part_id: 'uuid', revision: 'integer', ...columns }).map(([name, type]) => `${name} ${type}`).join(', '));
-const recordTypes = typesOf(COLUMNS);
-const settingTypes = typesOf(Object.fromEntries(Object.entries(COLUMNS).filter(([name]) => !OF_VERSION.has(name))));
+const recordTypes = typesOf(PART_ROW_TYPES);
+const settingTypes = typesOf(Object.fromEntries(Object.entries(PART_ROW_TYPES).filter(([name]) => !OF_VERSION.has(name))));
 const settingAssignments = sql.raw(ofSetting.map((name) => `${name} = given.${name}`).join(', '));
 const assignments = sql.raw(names.map((name) => `${name} = excluded.${name}`).join(', '));
 const stored = sql.raw(names.map((name) => `part_current.${name}`).join(', '));
@@ -92,7 +92,7 @@ const CHUNK = 2500;
 export async function writePartRows(tx: Transaction, parts: readonly LoadedPart[], showRevision: number): Promise<Set<string>> {
   const written = new Set<string>();
   for (let start = 0; start < parts.length; start += CHUNK) {
-    const rows = parts.slice(start, start + CHUNK).map((part) => ({ part_id: part.partId, revision: part.revision ?? 1, ...rowOf(part) }));
+    const rows = parts.slice(start, start + CHUNK).map((part) => ({ part_id: part.partId, revision: part.revision ?? 1, ...partRowOf(part, computeValue(part)) }));
     // Doubles travel as shortest decimals, which PostgreSQL reads back as the same doubles.
     const result = await tx.execute<{ part_id: string }>(sql`
       insert into part_current (part_id, revision, changed_revision, ${list})
@@ -113,7 +113,7 @@ export async function updatePartRows(tx: Transaction, parts: readonly LoadedPart
   const written = new Set<string>();
   for (let start = 0; start < parts.length; start += CHUNK) {
     const rows = parts.slice(start, start + CHUNK).map((part) => {
-      const row: Partial<RowColumns> = rowOf(part);
+      const row: Partial<RowColumns> = partRowOf(part, computeValue(part));
       return Object.fromEntries([['part_id', part.partId], ['revision', part.revision], ...Object.entries(row).filter(([name]) => !OF_VERSION.has(name))]);
     });
     const result = await tx.execute<{ part_id: string }>(sql`
@@ -126,8 +126,8 @@ export async function updatePartRows(tx: Transaction, parts: readonly LoadedPart
   return written;
 }
 
-function rowOf(part: LoadedPart): RowColumns {
-  const value = computeValue(part);
+/** The row of a part under its columns' names, with the value that its inputs give. */
+export function partRowOf(part: LoadedPart, value: ComputedValue): RowColumns {
   const { properties } = value;
   const [comX, comY, comZ] = properties?.comM ?? [null, null, null];
   const [ixx, iyy, izz, ixy, ixz, iyz] = properties?.inertiaKgM2 ?? [null, null, null, null, null, null];

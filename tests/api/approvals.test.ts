@@ -12,6 +12,7 @@ import type { OutdatedLock } from '@/lib/rules/outdated-lock';
 import type { PartPage, PartRow } from '@/lib/rules/part-row';
 import { call, expectProblem, type Answer, type Handler } from '../support/api';
 import { createCast, type Cast, type Person } from '../support/cast';
+import { asOwner } from '../support/database';
 import { boxPart, putCage } from '../support/put-cage';
 
 /** A show in metres with a crate whose body weighs 24 kg, set by the td, in one shot of one sequence. */
@@ -89,5 +90,41 @@ describe('the way of a value', () => {
     await setDensity(cast, 5);
     const refused = expectProblem(await send(cast, 'lead', approve, { items: [{ asset: 'crate', part: 'body', value_sha256 }] }), 409, 'conflict');
     expect(refused.errors).toMatchObject([{ code: 'changed_meanwhile', current: { density_kg_m3: 5 } }]);
+  });
+});
+
+describe('a shot override', () => {
+  const draft = (cast: Cast, who: Person, fields: object) => send(cast, who, PATCH, { items: [{ asset: 'crate', part: 'body', revision: 2, shot: 'fer_0010', ...fields }] }, { method: 'PATCH' });
+
+  test('is drafted by an artist, approved by a lead, locked in its shot alone, and no version moves it', async () => {
+    const cast = await createCrate();
+    await send(cast, 'td', shots, { items: [{ code: 'fer_0020', sequence: 'fer', assets: ['crate'] }] });
+    const drafted = await draft(cast, 'artist', { target_mass_kg: 99, reason: 'heavier for this one' });
+    expect(drafted.status, drafted.text).toBe(200);
+    expect(await bodyRow(cast)).toMatchObject({ state: 'measured', target_mass_kg: null, density_kg_m3: 1, revision: 2 });
+    const [stored] = await asOwner<{ value_sha256: string; mass_kg: number }>('select value_sha256, mass_kg from shot_overrides where dropped_at is null and drafted_by = $1', [cast.people.artist.id]);
+    expect(stored.mass_kg).toBeCloseTo(99, 12);
+
+    const approved = await send(cast, 'lead', approve, { items: [{ asset: 'crate', part: 'body', value_sha256: stored.value_sha256, shot: 'fer_0010' }] });
+    expect(approved.status, approved.text).toBe(201);
+    const [{ value_id }] = (approved.json as { items: { value_id: string }[] }).items;
+    expect(await bodyRow(cast)).toMatchObject({ state: 'measured', value_id: null });
+    const elsewhere = expectProblem(await send(cast, 'lead', lock, { items: [{ asset: 'crate', part: 'body', value_id }] }, { shot: 'fer_0020' }), 422, 'bad_input');
+    expect(elsewhere.detail).toMatch(/override of another shot/);
+    expect((await send(cast, 'lead', lock, { items: [{ asset: 'crate', part: 'body', value_id }] }, { shot: 'fer_0010' })).status).toBe(201);
+    const promised = await csvOf(cast);
+    expect(promised.text).toMatch(/heavier for this one/);
+
+    await putCage(cast.show, cast.people.td, 'crate', [boxPart('body', [0, 0, 0], [4, 3, 4]), boxPart('lid', [10, 0, 0], [11, 1, 1])]);
+    const stale = (await call(outdated, { params: { show: cast.show.code }, token: cast.tokenOf('artist') })).json as unknown as { items: OutdatedLock[] };
+    expect(stale.items).toEqual([]);
+    expect((await csvOf(cast)).text).toBe(promised.text);
+  });
+
+  test('needs a reason and a shot that is there', async () => {
+    const cast = await createCrate();
+    expectProblem(await draft(cast, 'artist', { target_mass_kg: 99 }), 422, 'bad_input', 'items.0.reason');
+    expectProblem(await draft(cast, 'artist', { target_mass_kg: 99, reason: 'x', shot: 'nope' }), 422, 'bad_input', 'items.0.shot');
+    expectProblem(await send(cast, 'artist', PATCH, { items: [{ asset: 'crate', part: 'body', revision: 2, density_kg_m3: 5 }] }, { method: 'PATCH' }), 403, 'forbidden');
   });
 });
