@@ -4,6 +4,7 @@
 import { readFile, writeFile } from 'node:fs/promises';
 import { fileURLToPath } from 'node:url';
 import asc from 'assemblyscript/asc';
+import { FAN_ROUTINES } from './support/fan-routines.mjs';
 import { scalar, statements, vector } from './support/kernel-dialects.mjs';
 import { area, AXES, DIVISORS, middle, moments, SHAPES, side, SUMS } from './support/kernel-shapes.mjs';
 
@@ -127,7 +128,7 @@ ${powersOf(shape)}
 async function compile(source) {
   let bytes = null;
   const { error, stderr } = await asc.main(
-    ['kernel.ts', '--outFile', 'kernel.wasm', '-O3', '--noAssert', '--runtime', 'stub', '--enable', 'simd', '--initialMemory', '6', '--maximumMemory', '6'],
+    ['kernel.ts', '--outFile', 'kernel.wasm', '-O3', '--noAssert', '--runtime', 'stub', '--enable', 'simd', '--initialMemory', '24', '--maximumMemory', '24'],
     { readFile: (name) => (name === 'kernel.ts' ? source : null), writeFile: (name, contents) => void (name === 'kernel.wasm' && (bytes = contents)), listFiles: () => [] },
   );
   if (error !== null || bytes === null) throw new Error(`the kernel does not compile: ${error?.message ?? ''} ${stderr.toString()}`);
@@ -147,7 +148,7 @@ ${lines.map((text) => `  '${text}',`).join('\n')}
 
 const files = Object.fromEntries([
   ...SHAPES.map((shape) => [`${shape.name}-scalar.ts`, scalarSource(shape)]),
-  ['kernel-bytes.ts', bytesSource(await compile(SHAPES.map(vectorSource).join('')))],
+  ['kernel-bytes.ts', bytesSource(await compile(SHAPES.map(vectorSource).join('') + FAN_ROUTINES))],
 ]);
 let differing = 0;
 for (const [name, text] of Object.entries(files)) {

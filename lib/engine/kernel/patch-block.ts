@@ -1,4 +1,4 @@
-import { inputStride, NET_VALUES, OUTPUT_STRIDE, type PatchKernel, type PatchKind } from './patch-kinds';
+import { inputStride, NET_VALUES, OUTPUT_STRIDE, type FanKernel, type PatchKernel, type PatchKind } from './patch-kinds';
 import { scalarKernel } from './scalar-kernel';
 import { newVectorKernel, vectorKernel } from './vector-kernel';
 
@@ -85,11 +85,11 @@ export class PatchBlock {
   }
 }
 
-const own = new Map<PatchKind, PatchKernel>();
+const own = new Map<PatchKind, FanKernel>();
 let team: ((kind: PatchKind) => PatchKernel) | null = null;
 
 /** The kernel of this thread alone. */
-export function ownKernel(kind: PatchKind): PatchKernel {
+export function ownKernel(kind: PatchKind): FanKernel {
   let kernel = own.get(kind);
   if (kernel === undefined) {
     kernel = vectorKernel(kind) ?? scalarKernel(kind);

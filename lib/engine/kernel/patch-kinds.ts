@@ -1,3 +1,5 @@
+import type { FanRoutines } from './scalar-fans';
+
 /** Shapes of regular patches that have a kernel: bicubic and biquadratic B-splines over a square, quartic box splines over a triangle. */
 export const PATCH_KINDS = ['bicubic', 'biquadratic', 'triangle'] as const;
 export type PatchKind = (typeof PATCH_KINDS)[number];
@@ -30,6 +32,11 @@ export interface PatchKernel {
   output: Float64Array;
   /** Computes the first `pairs` pairs with `count` Gauss nodes a direction, the coarse area with `coarseCount` (0: not at all). Counts up to MOST_NODES. */
   run(pairs: number, count: number, coarseCount: number): void;
+}
+
+/** A kernel of one thread, in whose memory fans are computed too. */
+export interface FanKernel extends PatchKernel {
+  fans: FanRoutines;
 }
 
 /** Gauss nodes a direction at most. */

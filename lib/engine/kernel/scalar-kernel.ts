@@ -3,7 +3,8 @@ import { gaussRule } from '../patches/gauss-rule';
 import { bicubicPowerArea, bicubicPowerMoments } from './bicubic-scalar';
 import { biquadraticNetToPowers } from './biquadratic-powers';
 import { biquadraticPowerArea, biquadraticPowerMoments } from './biquadratic-scalar';
-import { inputStride, MOST_PAIRS, NET_VALUES, OUTPUT_STRIDE, type PatchKernel, type PatchKind } from './patch-kinds';
+import { inputStride, MOST_PAIRS, NET_VALUES, OUTPUT_STRIDE, type FanKernel, type PatchKind } from './patch-kinds';
+import { FAN_ROOM, scalarFans } from './scalar-fans';
 import { triangleNetToPowers } from './triangle-powers';
 import { trianglePowerArea, trianglePowerMoments } from './triangle-scalar';
 
@@ -53,7 +54,7 @@ const solid = new Float64Array(10);
 const surface = new Float64Array(10);
 
 /** A kernel in JavaScript: the same layout, the same operations in the same order as the vector kernel, so the same bits. */
-export function scalarKernel(kind: PatchKind): PatchKernel {
+export function scalarKernel(kind: PatchKind): FanKernel {
   const values = NET_VALUES[kind];
   const steps = STEPS[kind];
   const stride = inputStride(kind);
@@ -79,5 +80,6 @@ export function scalarKernel(kind: PatchKind): PatchKernel {
     run(pairs, count, coarseCount) {
       for (let patch = 0; patch < 2 * pairs; patch++) runOne(patch, count, coarseCount);
     },
+    fans: scalarFans(new Float64Array(FAN_ROOM), input, stride, output, OUTPUT_STRIDE),
   };
 }

@@ -1,4 +1,6 @@
-import type { PatchBlock } from '../kernel/patch-block';
+import { ownKernel, type PatchBlock } from '../kernel/patch-block';
+import { inputStride, OUTPUT_STRIDE } from '../kernel/patch-kinds';
+import { FAN_ROOM, scalarFans, SUMMED_RESULTS, type FanRoutines } from '../kernel/scalar-fans';
 import type { LimitSums } from '../moments/limit-sums';
 import { MOMENTS } from '../moments/sums';
 import { AREA_TOLERANCE, areaError, mendSurface } from '../patches/mend-surface';
@@ -20,35 +22,51 @@ const SURFACE_TOLERANCE = 1e-11;
 /** Times the difference of two closings: the earlier one errs about as much as they differ, so that the difference alone may fall short by a little. */
 const CLOSING_FACTOR = 2;
 
-/** Ten solid and ten surface moments and the magnitude of a fan's patches at one level. */
-const LEVEL_SUMS = 2 * MOMENTS + 1;
-
 const solid = new Float64Array(MOMENTS);
 const surface = new Float64Array(MOMENTS);
+const coarseSolid = new Float64Array(MOMENTS);
+const coarseSurface = new Float64Array(MOMENTS);
+const differences = new Float64Array(2 * MOMENTS);
+
+/** Places of a batch's tables and sums in the memory of the routines, in doubles. */
+interface Places {
+  starts: number;
+  columns: number;
+  factors: number;
+  nets: number;
+  sums: number;
+  size: number;
+}
+
+/** The batch whose tables the routines hold. */
+const holders = new WeakMap<FanRoutines, FanBatch>();
 
 /**
  * Fans of one kind and one body whose moments are computed together: cones from each fan's limit point, a level sequence of 3n regular patches closed by
  * weights instead of eigenvectors, and chains along the rim that move the cones' apex to the body's origin.
  */
 class FanBatch {
-  /** A fan to be read into and added. */
-  readonly scratch: FanState;
   private readonly table: FanTable;
   private readonly block: PatchBlock;
+  private readonly routines: FanRoutines;
+  private readonly places: Places;
   private readonly patches: number;
   /** Fans that are computed at once. */
   private readonly most: number;
+  /** Doubles of a fan's points, and those of the fans that wait. */
+  private readonly width: number;
+  private readonly waiting: Float64Array;
+  /** Doubles from fan to fan in the routines' memory, and where the level's points and the next one's stand there. */
   private readonly stride: number;
-  private state: Float64Array;
-  private finer: Float64Array;
+  private state: number;
+  private finer: number;
   /** The origin as seen from each fan's limit point. */
   private readonly origins: Float64Array;
   private readonly rimPowers: Float64Array;
-  /** Per fan: sums of one level, closed sums, and the same closed one level earlier. */
-  private readonly level: Float64Array;
+  private readonly net: Float64Array;
+  /** Per fan: closed sums, and how they differ from those closed one level earlier. */
   private readonly closed: Float64Array;
   private readonly check: Float64Array;
-  private readonly net: Float64Array;
   private count = 0;
   private body = -1;
   private reach = 0;
@@ -56,20 +74,32 @@ class FanBatch {
   private worst = 0;
   private worstError = 0;
 
-  constructor(private readonly kit: FanKit, kind: FanState, private readonly sums: LimitSums) {
-    this.scratch = kind;
-    this.table = fanTable(kit, kind);
-    this.block = fanBlock(kit.rule.kind);
-    this.net = new Float64Array(this.block.values);
-    this.patches = 3 * kind.sectors;
+  /** `scratch` is a fan of the kind, to be read into before `add`. */
+  constructor(private readonly kit: FanKit, readonly scratch: FanState, private readonly sums: LimitSums) {
+    const { kind } = kit.rule;
+    this.table = fanTable(kit, scratch);
+    this.block = fanBlock(kind);
+    this.patches = 3 * scratch.sectors;
     this.most = Math.max(1, Math.floor(this.block.size / this.patches));
-    this.stride = 3 * this.table.operator.matrix.rows;
-    this.state = new Float64Array(this.most * this.stride);
-    this.finer = new Float64Array(this.most * this.stride);
+    const { points, matrix, nets } = this.table.operator;
+    this.width = 3 * points.count;
+    this.stride = 3 * matrix.rows;
+    const starts = 0;
+    const columns = starts + Math.ceil((matrix.rows + 1) / 2);
+    const factors = columns + Math.ceil(matrix.columns.length / 2);
+    const netsAt = factors + matrix.factors.length;
+    const sumsAt = netsAt + Math.ceil(nets.length / 2);
+    this.state = sumsAt + SUMMED_RESULTS * this.most;
+    this.finer = this.state + this.most * this.stride;
+    this.places = { starts, columns, factors, nets: netsAt, sums: sumsAt, size: this.finer + this.most * this.stride };
+    const own = ownKernel(kind);
+    // A fan too large for the kernel's memory has one of its own.
+    this.routines = this.places.size <= FAN_ROOM ? own.fans : scalarFans(new Float64Array(this.places.size), own.input, inputStride(kind), own.output, OUTPUT_STRIDE);
+    this.waiting = new Float64Array(this.most * this.width);
     this.origins = new Float64Array(3 * this.most);
     this.rimPowers = new Float64Array(3 * RIM_POWERS * this.table.rim.curves);
-    this.level = new Float64Array(LEVEL_SUMS * this.most);
-    this.closed = new Float64Array(LEVEL_SUMS * this.most);
+    this.net = new Float64Array(this.block.values);
+    this.closed = new Float64Array(SUMMED_RESULTS * this.most);
     this.check = new Float64Array((MOMENTS + 1) * this.most);
   }
 
@@ -77,111 +107,102 @@ class FanBatch {
   add(body: number, ox: number, oy: number, oz: number): void {
     if (this.count === this.most || (this.count > 0 && body !== this.body)) this.flush();
     this.body = body;
-    const fan = this.scratch;
-    const limit = this.kit.limit(fan);
+    const limit = this.kit.limit(this.scratch);
     const at = 3 * this.count;
     this.origins[at] = ox - limit[0];
     this.origins[at + 1] = oy - limit[1];
     this.origins[at + 2] = oz - limit[2];
-    packPoints(this.table.operator.points, fan, limit, this.state, this.count * this.stride);
+    // About the limit point all rings shrink to 0 and so does their rounding, which the closing would else multiply.
+    packPoints(this.table.operator.points, this.scratch, limit, this.waiting, this.count * this.width);
     this.count++;
   }
 
   /** Computes and adds what is waiting. */
   flush(): void {
     if (this.count === 0) return;
-    const { kit, table, closed } = this;
-    closed.fill(0, 0, LEVEL_SUMS * this.count);
+    const { kit, table, routines, places } = this;
+    const { matrix } = table.operator;
+    const sums = routines.memory.subarray(places.sums, places.sums + SUMMED_RESULTS * this.count);
+    this.closed.fill(0);
     this.check.fill(0);
     this.worst = 0;
     this.worstError = 0;
+    this.load();
     this.addRims();
     const levels = Math.max(table.weights.length, table.surfaceWeights.length);
     let nodes = kit.rule.nodes;
     let solidScale = 0;
     let areaScale = 0;
     for (let k = 0; k < levels; k++) {
-      for (let fan = 0; fan < this.count; fan++) applyRows(table.operator.matrix, this.state, fan * this.stride, this.finer, fan * this.stride);
+      routines.refine(this.count, this.stride, matrix.rows, places.starts, places.columns, places.factors, this.state, this.finer);
       [this.state, this.finer] = [this.finer, this.state];
-      this.sumLevel(nodes, Math.abs(at(table.surfaceWeights, k)));
+      sums.fill(0);
+      this.sumLevel(nodes, Math.abs(at(table.surfaceWeights, k)), sums);
       if (k === 0) {
-        for (let fan = 0; fan < this.count; fan++) areaScale += this.level[LEVEL_SUMS * fan + MOMENTS];
+        for (let fan = 0; fan < this.count; fan++) areaScale += sums[SUMMED_RESULTS * fan + MOMENTS];
         solidScale = (areaScale * this.reach) / 3;
       }
-      this.addLevel(k);
+      this.addLevel(k, sums);
       if (k + 1 < levels) while (nodes > kit.fewestNodes && this.mayCoarsen(k, nodes, solidScale, areaScale)) nodes--;
     }
     this.finish();
     this.count = 0;
   }
 
+  /** Puts tables and the waiting fans into the routines' memory. */
+  private load(): void {
+    const { routines, places, width, stride, waiting } = this;
+    const { matrix, nets } = this.table.operator;
+    if (holders.get(routines) !== this) {
+      routines.integers.set(matrix.starts, 2 * places.starts);
+      routines.integers.set(matrix.columns.map((point) => 3 * point), 2 * places.columns);
+      routines.memory.set(matrix.factors, places.factors);
+      routines.integers.set(nets.map((row) => 3 * row), 2 * places.nets);
+      holders.set(routines, this);
+    }
+    for (let fan = 0; fan < this.count; fan++) routines.memory.set(waiting.subarray(fan * width, (fan + 1) * width), this.state + fan * stride);
+  }
+
   private addRims(): void {
     const { rim } = this.table;
     this.reach = 0;
     for (let fan = 0; fan < this.count; fan++) {
-      const [ox, oy, oz] = this.origins.subarray(3 * fan, 3 * fan + 3);
-      this.reach = Math.max(this.reach, Math.hypot(ox, oy, oz));
-      applyRows(rim.matrix, this.state, fan * this.stride, this.rimPowers, 0);
+      const ox = this.origins[3 * fan], oy = this.origins[3 * fan + 1], oz = this.origins[3 * fan + 2];
+      this.reach = Math.max(this.reach, Math.sqrt(ox * ox + oy * oy + oz * oz));
+      applyRows(rim.matrix, this.waiting, fan * this.width, this.rimPowers, 0);
       solid.fill(0);
       this.sums.solid.magnitudes[this.body] += addRimChain(this.rimPowers, rim.curves, ox, oy, oz, this.kit.rimNodes, solid);
       this.sums.solid.add(this.body, solid, 0);
     }
   }
 
-  /** Sums the moments of all patches of this level by fan. */
-  private sumLevel(nodes: number, surfaceWeight: number): void {
-    const { block, kit, level } = this;
+  /** Sums the results of all patches of this level by fan. */
+  private sumLevel(nodes: number, surfaceWeight: number, sums: Float64Array): void {
+    const { block, kit, routines, places, patches } = this;
     const coarse = nodes === kit.rule.nodes ? kit.rule.coarseNodes : 0;
-    const total = this.count * this.patches;
-    level.fill(0, 0, LEVEL_SUMS * this.count);
+    const total = this.count * patches;
     for (let first = 0; first < total; first += block.size) {
       const size = Math.min(block.size, total - first);
-      this.gather(first, size);
+      routines.gather(first, size, patches, block.values / 3, places.nets, this.state, this.stride);
       block.run(size, nodes, coarse);
-      for (let i = 0; i < size; i++) {
-        const to = LEVEL_SUMS * Math.floor((first + i) / this.patches);
-        level[to + 2 * MOMENTS] += block.read(i, solid, surface);
-        if (coarse > 0) this.checkArea(first + i, i, surfaceWeight);
-        for (let m = 0; m < MOMENTS; m++) {
-          level[to + m] += solid[m];
-          level[to + MOMENTS + m] += surface[m];
-        }
-      }
+      routines.sum(first, size, patches, places.sums);
+      if (coarse > 0) for (let i = 0; i < size; i++) this.checkArea(first + i, i, surfaceWeight, sums);
     }
   }
 
-  /** Puts the nets of patches into the block. */
-  private gather(first: number, size: number): void {
+  /** Estimates the error of a patch's area and mends it in its fan's sums where that is too large. */
+  private checkArea(patch: number, place: number, weight: number, sums: Float64Array): void {
     const { block } = this;
-    for (let i = 0; i < size; i++) {
-      this.put(first + i, i);
-      block.putOrigin(i, 0, 0, 0);
-    }
-  }
-
-  private put(patch: number, place: number): void {
-    const netPoints = this.block.values / 3;
-    const { nets } = this.table.operator;
-    const { input } = this.block;
-    const fan = Math.floor(patch / this.patches);
-    const base = fan * this.stride;
-    const list = (patch - fan * this.patches) * netPoints;
-    let to = this.block.at(place);
-    for (let i = list; i < list + netPoints; i++, to += 6) {
-      const from = base + 3 * nets[i];
-      input[to] = this.state[from];
-      input[to + 2] = this.state[from + 1];
-      input[to + 4] = this.state[from + 2];
-    }
-  }
-
-  /** Estimates the error of the area in `surface` and mends it where that is too large. */
-  private checkArea(patch: number, place: number, weight: number): void {
-    const coarseArea = this.block.coarseArea(place);
-    let error = areaError(surface[0], coarseArea);
-    if (error > AREA_TOLERANCE * surface[0]) {
-      this.block.net(place, this.net);
+    const area = block.output[block.resultAt(place) + 2 * MOMENTS];
+    const coarseArea = block.coarseArea(place);
+    let error = areaError(area, coarseArea);
+    if (error > AREA_TOLERANCE * area) {
+      const to = SUMMED_RESULTS * Math.floor(patch / this.patches) + MOMENTS;
+      block.net(place, this.net);
+      block.read(place, solid, surface);
+      for (let m = 0; m < MOMENTS; m++) sums[to + m] -= surface[m];
       error = mendSurface(this.kit.rule.kind, this.net, 0, 0, 0, surface, coarseArea);
+      for (let m = 0; m < MOMENTS; m++) sums[to + m] += surface[m];
     }
     this.sums.surfaceError[this.body] += weight * error;
     if (error > this.worstError) {
@@ -190,14 +211,14 @@ class FanBatch {
     }
   }
 
-  private addLevel(k: number): void {
-    const { table, level, closed, check } = this;
+  private addLevel(k: number, level: Float64Array): void {
+    const { table, closed, check } = this;
     const weight = at(table.weights, k);
     const surfaceWeight = at(table.surfaceWeights, k);
     const checkWeight = at(table.check, k);
     const checkSurface = at(table.surfaceCheck, k);
     for (let fan = 0; fan < this.count; fan++) {
-      const to = LEVEL_SUMS * fan;
+      const to = SUMMED_RESULTS * fan;
       for (let m = 0; m < MOMENTS; m++) {
         closed[to + m] += weight * level[to + m];
         closed[to + MOMENTS + m] += surfaceWeight * level[to + MOMENTS + m];
@@ -213,16 +234,19 @@ class FanBatch {
     const { block, reach, sums, body } = this;
     const total = this.count * this.patches;
     const probes = [this.worst, (7 * k + 3) % total];
-    probes.forEach((patch, i) => {
-      this.put(patch, i);
-      block.putOrigin(i, 0, 0, 0);
-    });
-    block.run(2, nodes, 0);
-    const fine = probes.map((_, i) => this.readAbout(i));
-    block.run(2, nodes - 1, 0);
-    const coarse = probes.map((_, i) => this.readAbout(i));
-    const differences = new Float64Array(2 * MOMENTS);
-    for (let i = 0; i < 2; i++) for (let m = 0; m < 2 * MOMENTS; m++) differences[m] = Math.max(differences[m], total * Math.abs(fine[i][m] - coarse[i][m]));
+    differences.fill(0);
+    for (const patch of probes) {
+      // Each by itself, both lanes alike.
+      for (let lane = 0; lane < 2; lane++) this.putPatch(patch, lane);
+      block.run(2, nodes, 0);
+      block.read(0, solid, surface);
+      block.run(2, nodes - 1, 0);
+      block.read(1, coarseSolid, coarseSurface);
+      for (let m = 0; m < MOMENTS; m++) {
+        differences[m] = Math.max(differences[m], total * Math.abs(solid[m] - coarseSolid[m]));
+        differences[MOMENTS + m] = Math.max(differences[MOMENTS + m], total * Math.abs(surface[m] - coarseSurface[m]));
+      }
+    }
     if (!(differences[MOMENTS] <= SURFACE_TOLERANCE * areaScale)) return false;
     // About the origin, `reach` away at most.
     const bounds = [differences[0]];
@@ -235,16 +259,24 @@ class FanBatch {
     return true;
   }
 
-  private readAbout(place: number): number[] {
-    this.block.read(place, solid, surface);
-    return [...solid, ...surface];
+  private putPatch(patch: number, place: number): void {
+    const { block, net, stride, patches, routines } = this;
+    const { nets } = this.table.operator;
+    const points = block.values / 3;
+    const fan = Math.floor(patch / patches);
+    const list = (patch - fan * patches) * points;
+    for (let i = 0; i < points; i++) {
+      const from = this.state + fan * stride + 3 * nets[list + i];
+      for (let axis = 0; axis < 3; axis++) net[3 * i + axis] = routines.memory[from + axis];
+    }
+    block.put(place, net, 0, 0, 0);
   }
 
   private finish(): void {
     const { sums, body, closed, check } = this;
     for (let fan = 0; fan < this.count; fan++) {
-      const [ox, oy, oz] = this.origins.subarray(3 * fan, 3 * fan + 3);
-      const from = LEVEL_SUMS * fan;
+      const ox = this.origins[3 * fan], oy = this.origins[3 * fan + 1], oz = this.origins[3 * fan + 2];
+      const from = SUMMED_RESULTS * fan;
       moveMoments(closed, from, ox, oy, oz);
       moveMoments(closed, from + MOMENTS, ox, oy, oz);
       sums.solid.add(body, closed, from);
