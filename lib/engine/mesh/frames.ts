@@ -38,12 +38,43 @@ function boxesOf(mesh: Topology, positions: Float64Array, groupOf: Int32Array, g
   return boxes;
 }
 
+/** Gives pieces that share a vertex, as they do beside a defect, the box of all of them: a vertex has one position, so they need one frame. */
+function joinTouching(mesh: Topology, pieceOf: Int32Array, boxes: Float64Array): void {
+  const rootOf = Int32Array.from({ length: boxes.length / 6 }, (_, piece) => piece);
+  const find = (piece: number): number => {
+    while (rootOf[piece] !== piece) piece = rootOf[piece] = rootOf[rootOf[piece]];
+    return piece;
+  };
+  const pieceAt = new Int32Array(mesh.vertices).fill(NO_GROUP);
+  let joined = false;
+  for (let face = 0; face < mesh.faces; face++) {
+    for (let h = mesh.starts[face]; h < mesh.starts[face + 1]; h++) {
+      const known = pieceAt[mesh.vertexOf[h]];
+      pieceAt[mesh.vertexOf[h]] = pieceOf[face];
+      if (known === NO_GROUP || known === pieceOf[face]) continue;
+      rootOf[find(known)] = find(pieceOf[face]);
+      joined = true;
+    }
+  }
+  if (!joined) return;
+  for (let piece = 0; piece < rootOf.length; piece++) {
+    const [from, to] = [6 * piece, 6 * find(piece)];
+    for (let axis = 0; axis < 3; axis++) {
+      boxes[to + axis] = Math.min(boxes[to + axis], boxes[from + axis]);
+      boxes[to + 3 + axis] = Math.max(boxes[to + 3 + axis], boxes[from + 3 + axis]);
+    }
+  }
+  for (let piece = 0; piece < rootOf.length; piece++) boxes.copyWithin(6 * piece, 6 * find(piece), 6 * find(piece) + 6);
+}
+
 /** Makes the local frames of a cage. */
 export function makeFrames(mesh: Topology, positions: Float64Array, bodies: Bodies): Frames {
   const { pieceOf } = bodies;
   const groupAt = new Int32Array(mesh.vertices);
   const boxes = bodies.bodyOf === pieceOf ? null : boxesOf(mesh, positions, bodies.bodyOf, bodies.bodies, groupAt);
   const pieceBoxes = boxesOf(mesh, positions, pieceOf, bodies.pieces, groupAt);
+  const bodyBoxes = boxes ?? pieceBoxes.slice();
+  if (bodies.pieces > 1) joinTouching(mesh, pieceOf, pieceBoxes);
   const pieceOfBody = new Int32Array(bodies.bodies);
   const local = new Float64Array(positions.length);
   const centre = (all: Float64Array, group: number, axis: number): number => all[6 * group + axis] / 2 + all[6 * group + 3 + axis] / 2;
@@ -62,8 +93,8 @@ export function makeFrames(mesh: Topology, positions: Float64Array, bodies: Bodi
   for (let body = 0; body < bodies.bodies; body++) {
     for (let axis = 0; axis < 3; axis++) {
       pieceCentres[3 * body + axis] = centre(pieceBoxes, pieceOfBody[body], axis);
-      origins[3 * body + axis] = centre(boxes ?? pieceBoxes, body, axis) - pieceCentres[3 * body + axis];
+      origins[3 * body + axis] = centre(bodyBoxes, body, axis) - pieceCentres[3 * body + axis];
     }
   }
-  return { positions: local, pieceCentres, origins, boxes: boxes ?? pieceBoxes };
+  return { positions: local, pieceCentres, origins, boxes: bodyBoxes };
 }
