@@ -31,7 +31,8 @@ export type ValueResults = Pick<ComputedValue, 'properties' | 'densityKgPerM3' |
  * 14  the row's numbers: density_kg_m3, areal_density_kg_m2, area_m2, volume_m3, mass_kg, com_x_m, com_y_m, com_z_m, ixx_kg_m2,
  *     iyy_kg_m2, izz_kg_m2, ixy_kg_m2, ixz_kg_m2, iyz_kg_m2, i1_kg_m2, i2_kg_m2, i3_kg_m2, axes_quat_w, axes_quat_x, axes_quat_y,
  *     axes_quat_z, numeric_error, and last free_axes as text (`""` where none is free)
- * What is not given is `null`. Numbers are written as ECMAScript writes them: the shortest decimal that reads back as the same double.
+ * What is not given is `null`. Numbers are written as ECMAScript writes them: the shortest decimal that reads back as the same double; a zero
+ * has no sign.
  * Text is taken as it is, escaped as `JSON.stringify` escapes it.
  */
 export function valueCanonical({ record, asset, part, metresPerUnit, scale, setting, upAxis }: ValueInputs, results: ValueResults): string {
