@@ -16,9 +16,16 @@ function at(a: number, b: number): number {
   return 3 * (WIDTH * (b + 4) + a + 4);
 }
 
-/** Net of a triangle like the first, at (a, b), or of one that is turned into the corners (0, 0), (0, 1), (−1, 1): where its points are in the lattice. */
-function piece(a: number, b: number, turned: boolean): readonly number[] {
-  return TRIANGLE_NET.map(([x, y]) => at(a + (turned ? -y : x), b + (turned ? x + y : y)));
+/** A triangle like the first, at (a, b), or one that is turned into the corners (0, 0), (0, 1), (−1, 1): where the points of its net are in the lattice. */
+interface Piece {
+  a: number;
+  b: number;
+  turned: boolean;
+  places: readonly number[];
+}
+
+function piece(a: number, b: number, turned: boolean): Piece {
+  return { a, b, turned, places: TRIANGLE_NET.map(([x, y]) => at(a + (turned ? -y : x), b + (turned ? x + y : y))) };
 }
 
 /** The two triangles as they stay where the crease is gone, and the finer ones that they become by one more step. */
@@ -27,7 +34,7 @@ const QUARTERS = [
   [piece(0, 0, false), piece(1, 0, false), piece(0, 1, false), piece(1, 0, true)],
   [piece(0, 0, true), piece(0, 1, true), piece(-1, 1, true), piece(-1, 1, false)],
 ];
-const FINE_POINTS = [...new Set(QUARTERS.flat(2))];
+const FINE_POINTS = [...new Set(QUARTERS.flat().flatMap(({ places }) => places))];
 
 /** Net entry of a lattice point. */
 function entry(a: number, b: number): number {
@@ -35,18 +42,20 @@ function entry(a: number, b: number): number {
 }
 
 /**
- * The half-edge of a triangle along which a semi-sharp crease of one sharpness runs, where nothing but that crease has a say in the triangle's surface and
- * none of its sides is a border; else -1.
+ * The half-edge of a triangle along which a semi-sharp crease of one sharpness runs, where nothing but that crease has a say in the triangle's surface;
+ * else -1.
  */
 export function triangleStripSide(mesh: LevelMesh, kinds: Uint8Array, face: number): number {
   const start = mesh.starts[face];
-  let side = -1;
-  for (let i = 0; i < 3; i++) {
-    if (mesh.borderOf[start + i] >= 0) return -1;
-    if (isSettled(kinds[start + ((i + 2) % 3)]) && isConstantCrease(mesh, TRIANGLE_COUNTS, start + i)) side = start + i;
-  }
-  return side;
+  for (let i = 0; i < 3; i++) if (isSettled(kinds[start + ((i + 2) % 3)]) && isConstantCrease(mesh, TRIANGLE_COUNTS, start + i)) return start + i;
+  return -1;
 }
+
+/**
+ * Takes the net of a piece of a triangle: of the one with the corners (s, t), (s + size, t), (s, t + size) in the triangle's own parameters, or, where `size`
+ * is 0, of one within it that none of its sides touches.
+ */
+export type TakeTriangle = (net: Float64Array, s: number, t: number, size: number) => void;
 
 const net = new Float64Array(36);
 const near = new Float64Array(45);
@@ -61,7 +70,7 @@ const rows = new Float64Array(60);
  * sharp for good, so that up to the last row it is one quartic: one piece. The row is that of ⌊sharpness⌋ steps, 2^(⌊sharpness⌋ + 1) − 1 triangles,
  * refined once more where a fraction of sharpness is left.
  */
-export function splitTriangleStrip(mesh: LevelMesh, h: number, creasing: CreasingRule, take: (net: Float64Array) => void): void {
+export function splitTriangleStrip(mesh: LevelMesh, h: number, creasing: CreasingRule, take: TakeTriangle): void {
   let sharpness = mesh.edgeSharpness[h];
   let steps = 1;
   for (; sharpness >= 1; sharpness = childSharpness(sharpness, creasing)) steps *= 2;
@@ -71,7 +80,7 @@ export function splitTriangleStrip(mesh: LevelMesh, h: number, creasing: Creasin
   if (steps > 1) {
     for (let b = -1; b <= 2; b++) fillRow(near, size + (1 - size) * b, 1 - size, b);
     TRIANGLE_NET.forEach(([a, b], i) => control(b, (1 - size) * a, net, 3 * i));
-    take(net);
+    take(net, 0, size, 1 - size);
   }
   fillRow(beyond, size, size, -1);
   for (let b = 0; b <= 2; b++) fillRow(near, b * size, size, b);
@@ -79,11 +88,11 @@ export function splitTriangleStrip(mesh: LevelMesh, h: number, creasing: Creasin
     // The quartic beyond has its triangle turned by half a turn: (s, t) is (1 − s, −t) there.
     for (const [a, b] of LATTICE) control(b, b < 0 ? 1 - (i + a) * size : (i + a) * size, lattice, at(a, b));
     if (sharpness > 0) for (const to of FINE_POINTS) finePoint(to, sharpness);
-    const [points, pieces] = sharpness > 0 ? [fine, QUARTERS] : [lattice, WHOLE];
+    const [points, pieces, own] = sharpness > 0 ? [fine, QUARTERS, size / 2] : [lattice, WHOLE, size];
     for (let half = 0; half < (i === 0 ? 1 : 2); half++) {
-      for (const places of pieces[half]) {
+      for (const { a, b, turned, places } of pieces[half]) {
         for (let point = 0; point < 12; point++) copy(points, places[point], net, 3 * point);
-        take(net);
+        take(net, i * size + a * own, b * own, turned ? 0 : own);
       }
     }
   }

@@ -39,7 +39,7 @@ export function integrateLoop(cage: LevelMesh, rules: RefinementRules, origins: 
       const side = triangleStripSide(mesh, kinds, face);
       if (side < 0) left++;
       else {
-        splitTriangleStrip(mesh, side, rules.creasing, (piece) => patches.add(mesh.bodyOf[face], piece));
+        addStrip(mesh, side, rules, patches, sums.curves);
         mesh.live[face] = 0;
       }
     }
@@ -61,8 +61,26 @@ function addRegularTriangle(mesh: LevelMesh, face: number, patches: RegularPatch
   const start = mesh.starts[face];
   fillTriangleNet(mesh, start, net);
   patches.add(mesh.bodyOf[face], net);
-  for (let side = 0; side < 3; side++) {
-    const edge = mesh.borderOf[start + side];
-    if (edge >= 0) addTriangleSide(curves, net, side, edge, 1, mesh.borderFrom[start + side], 2 ** -mesh.level, NO_SHIFT);
-  }
+  for (let side = 0; side < 3; side++) addBorder(mesh, start + side, net, side, 0, 1, curves);
+}
+
+/** `first` is the strip's side along the crease. */
+function addStrip(mesh: LevelMesh, first: number, rules: RefinementRules, patches: RegularPatches, curves: BorderCurves): void {
+  const face = mesh.faceOf[first];
+  const [crease, leaving, arriving] = [0, 1, 2].map((i) => mesh.starts[face] + ((first - mesh.starts[face] + i) % 3));
+  splitTriangleStrip(mesh, first, rules.creasing, (piece, s, t, size) => {
+    patches.add(mesh.bodyOf[face], piece);
+    if (size === 0) return;
+    if (t === 0) addBorder(mesh, crease, piece, 0, s, size, curves);
+    if (s + t + size === 1) addBorder(mesh, leaving, piece, 1, t, size, curves);
+    if (s === 0) addBorder(mesh, arriving, piece, 2, 1 - t - size, size, curves);
+  });
+}
+
+/** Adds side `side` of a net where it is a piece of a border: of half-edge `h` the share `share`, `from` its start. */
+function addBorder(mesh: LevelMesh, h: number, values: Float64Array, side: number, from: number, share: number, curves: BorderCurves): void {
+  const edge = mesh.borderOf[h];
+  if (edge < 0) return;
+  const length = 2 ** -mesh.level;
+  addTriangleSide(curves, values, side, edge, 1, mesh.borderFrom[h] + from * length, share * length, NO_SHIFT);
 }
