@@ -19,6 +19,9 @@ import { applyRows } from './sparse-rows';
 const SOLID_TOLERANCE = 1e-15;
 const SURFACE_TOLERANCE = 1e-11;
 
+/** Nodes that the first level may do without where patches are smooth. */
+const FIRST_SAVING = 2;
+
 /** Times the difference of two closings: the earlier one errs about as much as they differ, so that the difference alone may fall short by a little. */
 const CLOSING_FACTOR = 2;
 
@@ -70,6 +73,11 @@ class FanBatch {
   private count = 0;
   private body = -1;
   private reach = 0;
+  /** Volume and area that errors are relative to. */
+  private solidScale = 0;
+  private areaScale = 0;
+  /** Whether the first level wants all nodes. */
+  private rough = false;
   /** The patch that erred most. */
   private worst = 0;
   private worstError = 0;
@@ -131,22 +139,33 @@ class FanBatch {
     this.addRims();
     const levels = Math.max(table.weights.length, table.surfaceWeights.length);
     let nodes = kit.rule.nodes;
-    let solidScale = 0;
-    let areaScale = 0;
     for (let k = 0; k < levels; k++) {
       routines.refine(this.count, this.stride, matrix.rows, places.starts, places.columns, places.factors, this.state, this.finer);
       [this.state, this.finer] = [this.finer, this.state];
-      sums.fill(0);
-      this.sumLevel(nodes, Math.abs(at(table.surfaceWeights, k)), sums);
-      if (k === 0) {
-        for (let fan = 0; fan < this.count; fan++) areaScale += sums[SUMMED_RESULTS * fan + MOMENTS];
-        solidScale = (areaScale * this.reach) / 3;
-      }
+      if (k === 0 && !this.rough && this.tryFirst(sums)) nodes = kit.rule.nodes - FIRST_SAVING;
+      else this.sumLevel(nodes, Math.abs(at(table.surfaceWeights, k)), sums);
+      if (k === 0) this.setScales(sums);
       this.addLevel(k, sums);
-      if (k + 1 < levels) while (nodes > kit.fewestNodes && this.mayCoarsen(k, nodes, solidScale, areaScale)) nodes--;
+      if (k + 1 < levels) while (nodes > kit.fewestNodes && this.compare(k, nodes, nodes - 1)) nodes--;
     }
     this.finish();
     this.count = 0;
+  }
+
+  private setScales(sums: Float64Array): void {
+    this.areaScale = 0;
+    for (let fan = 0; fan < this.count; fan++) this.areaScale += sums[SUMMED_RESULTS * fan + MOMENTS];
+    this.solidScale = (this.areaScale * this.reach) / 3;
+  }
+
+  /** Sums the first level by fewer nodes; false, and no more tried with this kind, where the patch whose coarse area differs most says that they are too few. */
+  private tryFirst(sums: Float64Array): boolean {
+    const { nodes } = this.kit.rule;
+    this.sumLevel(nodes - FIRST_SAVING, 0, sums);
+    this.setScales(sums);
+    this.rough = !this.compare(0, nodes, nodes - FIRST_SAVING);
+    this.worstError = 0;
+    return !this.rough;
   }
 
   /** Puts tables and the waiting fans into the routines' memory. */
@@ -179,14 +198,17 @@ class FanBatch {
   /** Sums the results of all patches of this level by fan. */
   private sumLevel(nodes: number, surfaceWeight: number, sums: Float64Array): void {
     const { block, kit, routines, places, patches } = this;
-    const coarse = nodes === kit.rule.nodes ? kit.rule.coarseNodes : 0;
+    const checked = nodes === kit.rule.nodes;
+    const coarse = checked ? kit.rule.coarseNodes : surfaceWeight === 0 ? kit.rule.coarseNodes - 1 : 0;
     const total = this.count * patches;
+    sums.fill(0);
     for (let first = 0; first < total; first += block.size) {
       const size = Math.min(block.size, total - first);
       routines.gather(first, size, patches, block.values / 3, places.nets, this.state, this.stride);
       block.run(size, nodes, coarse);
       routines.sum(first, size, patches, places.sums);
-      if (coarse > 0) for (let i = 0; i < size; i++) this.checkArea(first + i, i, surfaceWeight, sums);
+      if (checked) for (let i = 0; i < size; i++) this.checkArea(first + i, i, surfaceWeight, sums);
+      else if (coarse > 0) for (let i = 0; i < size; i++) this.noteWorst(first + i, Math.abs(block.output[block.resultAt(i) + 2 * MOMENTS] - block.coarseArea(i)));
     }
   }
 
@@ -205,10 +227,13 @@ class FanBatch {
       for (let m = 0; m < MOMENTS; m++) sums[to + m] += surface[m];
     }
     this.sums.surfaceError[this.body] += weight * error;
-    if (error > this.worstError) {
-      this.worstError = error;
-      this.worst = patch;
-    }
+    this.noteWorst(patch, error);
+  }
+
+  private noteWorst(patch: number, error: number): void {
+    if (!(error > this.worstError)) return;
+    this.worstError = error;
+    this.worst = patch;
   }
 
   private addLevel(k: number, level: Float64Array): void {
@@ -229,9 +254,9 @@ class FanBatch {
     }
   }
 
-  /** Whether one node less would do from the next level on: the patch that erred most and one in turn speak for all. */
-  private mayCoarsen(k: number, nodes: number, solidScale: number, areaScale: number): boolean {
-    const { block, reach, sums, body } = this;
+  /** Whether `fewer` nodes do as well as `nodes`: the patch that erred most and one in turn speak for all. If so, what they may err by is noted. */
+  private compare(k: number, nodes: number, fewer: number): boolean {
+    const { block, reach, sums, body, solidScale, areaScale } = this;
     const total = this.count * this.patches;
     const probes = [this.worst, (7 * k + 3) % total];
     differences.fill(0);
@@ -240,7 +265,7 @@ class FanBatch {
       for (let lane = 0; lane < 2; lane++) this.putPatch(patch, lane);
       block.run(2, nodes, 0);
       block.read(0, solid, surface);
-      block.run(2, nodes - 1, 0);
+      block.run(2, fewer, 0);
       block.read(1, coarseSolid, coarseSurface);
       for (let m = 0; m < MOMENTS; m++) {
         differences[m] = Math.max(differences[m], total * Math.abs(solid[m] - coarseSolid[m]));
