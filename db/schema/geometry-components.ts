@@ -29,6 +29,8 @@ export const geometryComponents = pgTable(
     cageCentralSecond: doublePrecision('cage_central_second').array().notNull(),
     /** Coefficients of the hollow solid's ten moments in the wall thickness, t¹ to t⁵ each; null where not computed. */
     hollow: doublePrecision('hollow').array(),
+    /** Largest inward curvature, where (x y z), and the coefficients in t, t², t³ of what the wall's moments may be off by; null with `hollow`. */
+    hollowLimits: doublePrecision('hollow_limits').array(),
     errorEstimate: doublePrecision('error_estimate').notNull(),
     surfaceErrorEstimate: doublePrecision('surface_error_estimate').notNull(),
   },
@@ -37,7 +39,7 @@ export const geometryComponents = pgTable(
     check('geometry_components_volume', sql`${finite(t.volume)} and ${finite(t.cageVolume)}`),
     check('geometry_components_area', finiteNotNegative(t.area)),
     check('geometry_components_error', sql`${finiteNotNegative(t.errorEstimate)} and ${finiteNotNegative(t.surfaceErrorEstimate)}`),
-    check('geometry_components_shapes', sql`cardinality(${t.centroid}) = 3 and cardinality(${t.centralSecond}) = 6 and cardinality(${t.surfaceCentroid}) = 3 and cardinality(${t.surfaceCentralSecond}) = 6 and cardinality(${t.cageCentroid}) = 3 and cardinality(${t.cageCentralSecond}) = 6 and (${t.hollow} is null or cardinality(${t.hollow}) = 50)`),
+    check('geometry_components_shapes', sql`cardinality(${t.centroid}) = 3 and cardinality(${t.centralSecond}) = 6 and cardinality(${t.surfaceCentroid}) = 3 and cardinality(${t.surfaceCentralSecond}) = 6 and cardinality(${t.cageCentroid}) = 3 and cardinality(${t.cageCentralSecond}) = 6 and (${t.hollow} is null or cardinality(${t.hollow}) = 50) and (${t.hollowLimits} is null or cardinality(${t.hollowLimits}) = 7)`),
     check('geometry_components_finite', sql`not ('NaN'::float8 = any (${t.centroid} || ${t.centralSecond} || ${t.surfaceCentroid} || ${t.surfaceCentralSecond}) or 'Infinity'::float8 = any (${t.centroid} || ${t.centralSecond} || ${t.surfaceCentroid} || ${t.surfaceCentralSecond}) or '-Infinity'::float8 = any (${t.centroid} || ${t.centralSecond} || ${t.surfaceCentroid} || ${t.surfaceCentralSecond}))`),
   ],
 );

@@ -1,7 +1,8 @@
 import { checkMassFrame } from './inertia/check-mass-frame';
 import { inertiaOfSecondMoments, shiftInertia } from './inertia/inertia-matrix';
 import { FREE_AXES_GAP, principalAxes, type FreeAxes } from './inertia/principal-axes';
-import type { Six, SolidMoments, SurfaceMoments, Three } from './measured';
+import type { ShellLimits, Six, SolidMoments, SurfaceMoments, Three } from './measured';
+import { wallMoments, type HollowComponent } from './shell/wall-moments';
 
 export const CONSTRUCTIONS = ['solid', 'hollow', 'sheet'] as const;
 export type Construction = (typeof CONSTRUCTIONS)[number];
@@ -11,6 +12,7 @@ export interface MassComponent {
   solid: SolidMoments;
   surface: SurfaceMoments;
   hollow: Float64Array | null;
+  hollowLimits: ShellLimits | null;
   errorEstimate: number;
   surfaceErrorEstimate: number;
 }
@@ -46,9 +48,17 @@ export interface MassProperties {
   freeAxes: FreeAxes;
   /** Of the integration alone, max |Δ| / (|V|·L^k); coordinates taken as exact. */
   numericError: number;
+  /** Where the wall of a hollow part is thicker than its surface's local radius and so counts some space twice; null where it is not. */
+  tightBend: TightBend | null;
 }
 
-export type MassFailureCode = 'no_mass' | 'no_geometry' | 'bad_input' | 'inside_out' | 'no_wall' | 'wall_too_thick' | 'not_hollow_yet' | 'check_failed';
+/** The smallest local radius of a surface that bends inwards, and where: m, the asset's axes. */
+export interface TightBend {
+  radiusM: number;
+  positionM: Three;
+}
+
+export type MassFailureCode = 'no_mass' | 'no_geometry' | 'bad_input' | 'inside_out' | 'no_wall' | 'wall_too_thick' | 'wall_not_measured' | 'check_failed';
 
 /** Why there are no mass properties: a stable code and a sentence that says what to do. */
 export interface MassFailure {
@@ -114,7 +124,6 @@ export function massProperties(input: MassInput): MassProperties | MassFailure {
   }
   const length = input.metresPerUnit * input.scale;
   const surface = gather(components.map((c) => ({ measure: c.surface.area, centroid: c.surface.centroid, centralSecond: c.surface.centralSecond, error: c.surfaceErrorEstimate })));
-  if (construction === 'hollow') return massFailure('not_hollow_yet', 'Hollow parts cannot be weighed yet; choose solid or sheet.');
   const areaM2 = surface.measure * length * length;
   if (construction === 'sheet') {
     const areal = given(input.targetMassKg) ? input.targetMassKg / areaM2 : input.arealDensityKgPerM2;
@@ -123,22 +132,51 @@ export function massProperties(input: MassInput): MassProperties | MassFailure {
   }
   const solid = gather(components.map((c) => ({ measure: c.solid.volume, centroid: c.solid.centroid, centralSecond: c.solid.centralSecond, error: c.errorEstimate })));
   if (!(solid.measure > 0)) return massFailure('inside_out', 'The part encloses no positive volume; reverse its faces or make it a sheet.');
+  if (construction === 'hollow') return hollowProperties(input, length, areaM2, solid.measure);
   const volumeM3 = solid.measure * length ** 3;
   const density = given(input.targetMassKg) ? input.targetMassKg / volumeM3 : input.densityKgPerM3;
   if (!given(density)) return massFailure('no_mass', 'Set a density or a target mass.');
   return finish(solid, length, density * length ** 3, { volumeM3, areaM2, densityKgPerM3: density, arealDensityKgPerM2: null });
 }
 
+/** A hollow part: the wall of each component, in the density's material. Scale acts on the geometry alone, so the wall keeps its thickness in metres. */
+function hollowProperties(input: MassInput, length: number, areaM2: number, enclosed: number): MassProperties | MassFailure {
+  if (!given(input.wallM)) return massFailure('no_wall', 'Set the wall thickness.');
+  const components: HollowComponent[] = [];
+  for (const { solid, hollow, hollowLimits } of input.components) if (hollow !== null && hollowLimits !== null) components.push({ solid, hollow, hollowLimits });
+  if (components.length < input.components.length) {
+    return massFailure('wall_not_measured', 'This version was measured before hollow parts could be weighed; import its file again.');
+  }
+  const t = input.wallM / length;
+  const pieces = components.map((component) => wallMoments(component, t));
+  const inner = pieces.reduce((sum, piece) => sum + piece.innerArea, 0);
+  const wall = gather(pieces);
+  if (!(inner > 0) || !(wall.measure > 0) || !(wall.measure < enclosed)) {
+    return massFailure('wall_too_thick', 'The wall leaves no hollow in the part; make it thinner or the part solid.');
+  }
+  const volumeM3 = wall.measure * length ** 3;
+  const density = given(input.targetMassKg) ? input.targetMassKg / volumeM3 : input.densityKgPerM3;
+  if (!given(density)) return massFailure('no_mass', 'Set a density or a target mass.');
+  return finish(wall, length, density * length ** 3, { volumeM3, areaM2, densityKgPerM3: density, arealDensityKgPerM2: null, tightBend: tightBend(components, t, length) });
+}
+
+function tightBend(components: readonly HollowComponent[], t: number, length: number): TightBend | null {
+  const tightest = components.reduce((worst, one) => (one.hollowLimits.curvature > worst.hollowLimits.curvature ? one : worst)).hollowLimits;
+  if (!(t * tightest.curvature > 1)) return null;
+  const [x, y, z] = tightest.position;
+  return { radiusM: length / tightest.curvature, positionM: [x * length, y * length, z * length] };
+}
+
 /** `massPerMeasure` is the mass of one file unit cubed (or squared, for sheets). */
 function finish(
   body: Gathered, length: number, massPerMeasure: number,
-  amounts: Pick<MassProperties, 'volumeM3' | 'areaM2' | 'densityKgPerM3' | 'arealDensityKgPerM2'>,
+  amounts: Pick<MassProperties, 'volumeM3' | 'areaM2' | 'densityKgPerM3' | 'arealDensityKgPerM2'> & Partial<Pick<MassProperties, 'tightBend'>>,
 ): MassProperties | MassFailure {
   const massKg = massPerMeasure * body.measure;
   const comM: Three = [body.centroid[0] * length, body.centroid[1] * length, body.centroid[2] * length];
   const factor = massPerMeasure * length * length;
   const inertiaKgM2 = inertiaOfSecondMoments(body.second.map((value) => value * factor) as Six).map((value) => value + 0) as Six;
-  return framed({ massKg, comM, inertiaKgM2, numericError: body.error, ...amounts });
+  return framed({ massKg, comM, inertiaKgM2, numericError: body.error, tightBend: null, ...amounts });
 }
 
 type Unframed = Omit<MassProperties, 'ok' | 'principalKgM2' | 'quatWxyz' | 'freeAxes'>;
@@ -179,6 +217,7 @@ export function mergeMassProperties(members: readonly MassMember[]): MassPropert
     arealDensityKgPerM2: null,
     comM,
     inertiaKgM2,
+    tightBend: null,
     numericError: members.reduce((worst, member) => Math.max(worst, member.numericError ?? 0), 0),
   });
 }

@@ -24,6 +24,7 @@ const CUBE: ValueInputs = {
       solid: { volume: 1, centroid: [0.5, 0.5, 0.5], centralSecond: [1 / 12, 1 / 12, 1 / 12, 0, 0, 0] },
       surface: { area: 6, centroid: [0.5, 0.5, 0.5], centralSecond: [5 / 6, 5 / 6, 5 / 6, 0, 0, 0] },
       hollow: null,
+      hollowLimits: null,
       errorEstimate: 1e-16,
       surfaceErrorEstimate: 1e-16,
       cageVolume: 1,

@@ -52,66 +52,61 @@ export function addBicubicShell(powers: Float64Array, tolerance: number, out: Fl
 }
 
 function addSquare(powers: Float64Array, tolerance: number, depth: number, out: Float64Array, peak: CurvaturePeak, errors: ShellErrors): void {
-  const bend = bendOf(powers);
-  if (bend.length === 0) return;
-  const nodes = chooseNodes(bend.variation, tolerance);
+  const variation = normalVariation(powers);
+  const nodes = chooseNodes(variation, tolerance);
   if (nodes === 0 && depth < MOST_QUARTERINGS) {
+    if (!powers.some((value, i) => i > 2 && value !== 0)) return;
     for (let i = 0; i < 4; i++) addSquare(quarterOf(powers, i & 1 ? 0.25 : -0.25, i & 2 ? 0.25 : -0.25), tolerance, depth + 1, out, peak, errors);
     return;
   }
   const rule = gaussRule(nodes === 0 ? MOST_SHELL_NODES : nodes);
   const count = rule.nodes.length;
+  let curvature = 0;
   for (let i = 0; i < count; i++) {
     fillRow(powers, rule.nodes[i]);
     for (let j = 0; j < count; j++) {
       finishJet(rule.nodes[j], jet);
-      addShellNode(jet, rule.weights[i] * rule.weights[j], out, peak);
+      curvature = Math.max(curvature, addShellNode(jet, rule.weights[i] * rule.weights[j], out, peak));
     }
   }
-  const error = bend.length * bend.length * (nodes === 0 ? 1 : ruleError(nodes, bend.variation));
-  // Second derivatives are at most four times the variation over half the patch.
-  const curvature = (4 * Math.min(1, bend.variation)) / bend.narrow;
+  addRuleError(errors, nodes, variation, middle, curvature);
+}
+
+/** Adds what a rule of `nodes` (0: none that is trusted) may err by on a patch of about `area`. */
+export function addRuleError(errors: ShellErrors, nodes: number, variation: number, area: number, curvature: number): void {
+  const error = area * (nodes === 0 ? 1 : ruleError(nodes, variation));
   errors[0] += error;
   errors[1] += error * curvature;
   errors[2] += error * curvature * curvature;
 }
 
-interface Bend {
-  /** Longer tangent in the middle, and what of the shorter one stands across it. */
-  length: number;
-  narrow: number;
-  /** Most that a tangent changes from the middle to the rim, relative to `narrow`. */
-  variation: number;
-}
+const ENDS = [-0.5, 0.5];
+const corners = new Float64Array(12);
+/** Length of X_u × X_v in the middle of the patch that was looked at last: about its area. */
+let middle = 0;
 
-const bend: Bend = { length: 0, narrow: 0, variation: 0 };
-
-/** How strongly a patch bends. */
-function bendOf(p: Float64Array): Bend {
-  let alongU = 0, alongV = 0;
-  for (let i = 0; i < 4; i++) {
-    for (let j = 0; j < 4; j++) {
-      if (i + j < 2) continue;
-      const at = 12 * i + 3 * j;
-      const size = Math.sqrt(p[at] * p[at] + p[at + 1] * p[at + 1] + p[at + 2] * p[at + 2]);
-      const scale = size * HALVES[i + j - 1];
-      alongU += i * scale;
-      alongV += j * scale;
+/** Most that X_u × X_v differs at a corner from the middle, relative to its length there: all integrands are polynomials over powers of that length. */
+function normalVariation(p: Float64Array): number {
+  for (let i = 0; i < 2; i++) {
+    fillRow(p, ENDS[i]);
+    for (let j = 0; j < 2; j++) {
+      finishJet(ENDS[j], jet);
+      normalTo(jet, corners, 3 * (2 * i + j));
     }
   }
-  const ux = p[12], uy = p[13], uz = p[14], vx = p[3], vy = p[4], vz = p[5];
-  const lu = Math.sqrt(ux * ux + uy * uy + uz * uz), lv = Math.sqrt(vx * vx + vy * vy + vz * vz);
-  const nx = uy * vz - uz * vy, ny = uz * vx - ux * vz, nz = ux * vy - uy * vx;
-  const across = Math.sqrt(nx * nx + ny * ny + nz * nz);
-  // Each direction's change counts against its own length, narrowed by the angle between them.
-  const slant = across > 0 ? (lu * lv) / across : Infinity;
-  bend.length = Math.max(lu, lv, alongU, alongV);
-  bend.narrow = Math.max(Math.min(lu, lv) / slant, 2 ** -40 * bend.length);
-  bend.variation = slant === Infinity ? Infinity : slant * Math.max(alongU / lu, alongV / lv);
-  return bend;
+  const nx = p[13] * p[5] - p[14] * p[4], ny = p[14] * p[3] - p[12] * p[5], nz = p[12] * p[4] - p[13] * p[3];
+  middle = Math.sqrt(nx * nx + ny * ny + nz * nz);
+  let square = 0;
+  for (let k = 0; k < 12; k += 3) square = Math.max(square, (corners[k] - nx) ** 2 + (corners[k + 1] - ny) ** 2 + (corners[k + 2] - nz) ** 2);
+  return middle > 0 ? Math.sqrt(square) / middle : Infinity;
 }
 
-const HALVES = [1, 1 / 2, 1 / 4, 1 / 8, 1 / 16, 1 / 32];
+/** X_u × X_v of a jet. */
+export function normalTo(j: Float64Array, out: Float64Array, at: number): void {
+  out[at] = j[4] * j[8] - j[5] * j[7];
+  out[at + 1] = j[5] * j[6] - j[3] * j[8];
+  out[at + 2] = j[3] * j[7] - j[4] * j[6];
+}
 
 /** The patch over the quarter with the middle (u, v), in powers about that. */
 function quarterOf(powers: Float64Array, u: number, v: number): Float64Array {

@@ -12,6 +12,9 @@ export interface CreasePiece {
   shift: ArrayLike<number>;
 }
 
+/** Shorter pieces towards an extraordinary point are left out: their normals drown in rounding where the surface's tangents turn parallel there. */
+const LEAST_SHARE = 2 ** -18;
+
 /** The patches' sides along sharp edges, by the cage's half-edge whose face lies on the left. */
 export type CreaseSides = Map<number, CreasePiece[]>;
 
@@ -33,6 +36,7 @@ export function collectSides(cage: LevelMesh, curves: BorderCurves, coefficients
   const { twin, edgeSharpness } = cage;
   curves.takeSide = (net, side, edge, from, share, shift) => {
     if (twin[edge] < 0 || edgeSharpness[edge] !== Infinity) return false;
+    if (share < LEAST_SHARE) return !borders.has(edge);
     const powers = new Float64Array(coefficients);
     toPowers(net, powers);
     const piece = { powers, side, from, share, shift };

@@ -9,10 +9,10 @@ import type { ShellBody } from './shell-sums';
 import { PAIRS, SHELL_TERMS, TERM_STARTS, type CurvaturePeak } from './shell-terms';
 
 /** Digits to which the tail is closed. */
-const TAIL_DIGITS = 11;
+const TAIL_DIGITS = 10;
 
 /** What a rule may err by at the first level, relatively; patches shrink, so that it may err by more from level to level. */
-const FIRST_TOLERANCE = 3e-10;
+const FIRST_TOLERANCE = 2e-9;
 const TOLERANCE_GROWTH = 1.7;
 
 /** Fans with a crease or corner have no closed formula for how their terms fall; this holds all but slow rests. */

@@ -11,6 +11,9 @@ import { JET } from './shell-terms';
 const NODES = 6;
 const COARSE_NODES = 4;
 
+/** Pieces of an edge from which on a bend across it counts: towards an extraordinary point it may grow without end, over a vanishing length. */
+const BEND_SHARE = 1 / 32;
+
 /** Stands for tan(θ/2) where two faces are folded onto each other. */
 const MOST_TANGENT = 1e6;
 
@@ -20,6 +23,8 @@ const jet = new Float64Array(JET);
 interface SidePoint extends Pick<EdgePoint, 'tangent' | 'curvature' | 'own' | 'bend'> {
   place: number[];
   speed: number;
+  /** Whether the piece is long enough for its bend to count. */
+  settled: boolean;
 }
 
 /** An edge's end at a vertex: tan(θ/2) there, the tangent that leaves the edge, and the bodies on both sides. */
@@ -83,7 +88,9 @@ function integrateEdge(kit: ShellKit, own: CreasePiece[], across: CreasePiece[],
         const points = [sideAt(kit, own, x), sideAt(kit, across, 1 - x)];
         points.forEach((side, s) => {
           const place = side.place.map((value, axis) => value - origins[3 * bodies[s] + axis]);
-          total += addMitre({ ...side, point: place, across: points[1 - s].own }, ds * side.speed, into[s]);
+          const tangent = addMitre({ ...side, bend: side.settled ? side.bend : 0, point: place, across: points[1 - s].own }, ds * side.speed, into[s]);
+          total += tangent;
+          if (!side.settled) into[s].errors[2] += Math.abs(tangent * side.bend * (tangent / (ds * side.speed)) ** 2);
         });
       }
       return total;
@@ -114,7 +121,7 @@ function sideAt(kit: ShellKit, pieces: readonly CreasePiece[], x: number): SideP
   const second = rows.map((row) => row[2]);
   const forth = dot(second, tangent);
   const curvature = second.map((value, axis) => (value - forth * tangent[axis]) / (speed * speed));
-  return { place: rows.map((row) => row[0]), speed: speed / piece.share, tangent, own, curvature, bend: bendAcross(tangent, own) };
+  return { place: rows.map((row) => row[0]), speed: speed / piece.share, tangent, own, curvature, bend: bendAcross(tangent, own), settled: piece.share >= BEND_SHARE };
 }
 
 /** Normal curvature across the edge of the surface whose jet is in `jet`, positive where it bends inwards: −II(M, M), M = N × T. */

@@ -2,7 +2,7 @@
 export const MOST_SHELL_NODES = 7;
 const FEWEST_SHELL_NODES = 2;
 
-/** Relative variation of tangents beyond which no rule is trusted. */
+/** Relative variation of the normal vector X_u × X_v beyond which no rule is trusted. */
 const MOST_VARIATION = 0.5;
 
 /** Error of n nodes on [−½, ½] for t^2n: (n!)⁴ / ((2n + 1) ((2n)!)²), times 4^n since the variation is that over half the interval. */
@@ -15,7 +15,7 @@ const RULE_ERRORS: readonly number[] = Array.from({ length: MOST_SHELL_NODES + 1
 /** Both directions, and room for series whose coefficients grow before they fall. */
 const SAFETY = 8;
 
-/** Relative error of n nodes a direction where tangents vary by `variation` of their length over half the patch: the series' first power that the rule misses. */
+/** Relative error of n nodes a direction where the normal vector varies by `variation` of its length over half the patch: the series' first power that the rule misses. */
 export function ruleError(nodes: number, variation: number): number {
   return SAFETY * RULE_ERRORS[nodes] * variation ** (2 * nodes);
 }

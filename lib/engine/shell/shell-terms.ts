@@ -22,15 +22,18 @@ export interface CurvaturePeak {
   z: number;
 }
 
-/** Adds `weight` times the 35 terms of one node to `out`, and raises `peak`. X_u × X_v points outwards. A node without a tangent plane adds nothing. */
-export function addShellNode(jet: Float64Array, weight: number, out: Float64Array, peak: CurvaturePeak): void {
+/**
+ * Adds `weight` times the 35 terms of one node to `out`, and raises `peak`. X_u × X_v points outwards. A node without a tangent plane adds nothing.
+ * Returns the larger of the principal curvatures' moduli.
+ */
+export function addShellNode(jet: Float64Array, weight: number, out: Float64Array, peak: CurvaturePeak): number {
   const x = jet[0], y = jet[1], z = jet[2];
   const ux = jet[3], uy = jet[4], uz = jet[5], vx = jet[6], vy = jet[7], vz = jet[8];
   const nx = uy * vz - uz * vy, ny = uz * vx - ux * vz, nz = ux * vy - uy * vx;
   const square = nx * nx + ny * ny + nz * nz;
   const area = Math.sqrt(square);
   const inverse = 1 / area;
-  if (!(inverse < Infinity)) return;
+  if (!(inverse < Infinity)) return 0;
   const X = nx * inverse, Y = ny * inverse, Z = nz * inverse;
   const L = jet[9] * X + jet[10] * Y + jet[11] * Z;
   const M = jet[12] * X + jet[13] * Y + jet[14] * Z;
@@ -38,7 +41,8 @@ export function addShellNode(jet: Float64Array, weight: number, out: Float64Arra
   const E = ux * ux + uy * uy + uz * uz, F = ux * vx + uy * vy + uz * vz, G = vx * vx + vy * vy + vz * vz;
   const twiceMean = -(E * P - 2 * F * M + G * L) * inverse * inverse;
   const gauss = (L * P - M * M) * inverse * inverse;
-  const curvature = (twiceMean + Math.sqrt(Math.max(0, twiceMean * twiceMean - 4 * gauss))) / 2;
+  const apart = Math.sqrt(Math.max(0, twiceMean * twiceMean - 4 * gauss));
+  const curvature = (twiceMean + apart) / 2;
   if (curvature > peak.curvature) {
     peak.curvature = curvature;
     peak.x = x;
@@ -86,6 +90,7 @@ export function addShellNode(jet: Float64Array, weight: number, out: Float64Arra
   out[32] += cx * Y;
   out[33] += cx * Z;
   out[34] += cy * Z;
+  return (Math.abs(twiceMean) + apart) / 2;
 }
 
 /** Rows and columns of xx, yy, zz, xy, xz, yz. */

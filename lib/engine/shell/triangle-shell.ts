@@ -1,6 +1,6 @@
 import { triangleRule } from '../patches/box-spline';
-import type { ShellErrors } from './bicubic-shell';
-import { chooseNodes, MOST_SHELL_NODES, ruleError } from './shell-nodes';
+import { addRuleError, normalTo, type ShellErrors } from './bicubic-shell';
+import { chooseNodes, MOST_SHELL_NODES } from './shell-nodes';
 import { addShellNode, JET, type CurvaturePeak } from './shell-terms';
 
 /** Exponents of s and t of the fifteen monomials, as `triangleToPowers` orders them. */
@@ -55,7 +55,7 @@ function tableOf(nodes: number): Float64Array {
 
 const jet = new Float64Array(JET);
 const CORNERS = [monomialJets(0, 0), monomialJets(1, 0), monomialJets(0, 1), monomialJets(1 / 3, 1 / 3)];
-const corners = [new Float64Array(JET), new Float64Array(JET), new Float64Array(JET), new Float64Array(JET)];
+const normals = new Float64Array(12);
 
 /** Adds the shell terms of a quartic triangle in powers of s, t about the point that moments are about; the rest as `addBicubicShell`. */
 export function addTriangleShell(powers: Float64Array, tolerance: number, out: Float64Array, peak: CurvaturePeak, errors: ShellErrors): void {
@@ -63,45 +63,38 @@ export function addTriangleShell(powers: Float64Array, tolerance: number, out: F
 }
 
 function addTriangle(powers: Float64Array, tolerance: number, depth: number, out: Float64Array, peak: CurvaturePeak, errors: ShellErrors): void {
-  const { length, narrow, variation } = bendOf(powers);
-  if (length === 0) return;
+  const variation = normalVariation(powers);
   const nodes = chooseNodes(variation, tolerance);
   if (nodes === 0 && depth < MOST_QUARTERINGS) {
+    if (!powers.some((value, i) => i > 2 && value !== 0)) return;
     for (const [s, t, size] of QUARTERS) addTriangle(partOf(powers, s, t, size), tolerance, depth + 1, out, peak, errors);
     return;
   }
+  const area = Math.hypot(normals[9], normals[10], normals[11]) / 2;
   const { count, weights } = triangleRule(nodes === 0 ? MOST_SHELL_NODES : nodes);
   const table = tableOf(nodes === 0 ? MOST_SHELL_NODES : nodes);
+  let curvature = 0;
   for (let node = 0; node < count; node++) {
     fillJet(powers, table, 90 * node, jet);
-    addShellNode(jet, weights[node], out, peak);
+    curvature = Math.max(curvature, addShellNode(jet, weights[node], out, peak));
   }
-  const error = length * length * (nodes === 0 ? 1 : ruleError(nodes, variation));
-  const curvature = (4 * Math.min(1, variation)) / narrow;
-  errors[0] += error;
-  errors[1] += error * curvature;
-  errors[2] += error * curvature * curvature;
+  addRuleError(errors, nodes, variation, area, curvature);
 }
 
 /** Corner 0 of each quarter and its signed size; the middle one stands on its head. */
 const QUARTERS: readonly (readonly [number, number, number])[] = [[0, 0, 0.5], [0.5, 0, 0.5], [0, 0.5, 0.5], [0.5, 0.5, -0.5]];
 
-/** How strongly a triangle bends: as for bicubic patches, from the tangents at its corners and middle. */
-function bendOf(powers: Float64Array): { length: number; narrow: number; variation: number } {
-  for (let i = 0; i < 4; i++) fillJet(powers, CORNERS[i], 0, corners[i]);
-  const middle = corners[3];
-  let alongS = 0, alongT = 0;
-  for (let i = 0; i < 3; i++) {
-    alongS = Math.max(alongS, Math.hypot(corners[i][3] - middle[3], corners[i][4] - middle[4], corners[i][5] - middle[5]));
-    alongT = Math.max(alongT, Math.hypot(corners[i][6] - middle[6], corners[i][7] - middle[7], corners[i][8] - middle[8]));
+/** Most that X_s × X_t differs at a corner from the middle, relative to its length there; leaves it in the last of `normals`. */
+function normalVariation(powers: Float64Array): number {
+  for (let i = 0; i < 4; i++) {
+    fillJet(powers, CORNERS[i], 0, jet);
+    normalTo(jet, normals, 3 * i);
   }
-  const ls = Math.hypot(middle[3], middle[4], middle[5]), lt = Math.hypot(middle[6], middle[7], middle[8]);
-  const across = Math.hypot(middle[4] * middle[8] - middle[5] * middle[7], middle[5] * middle[6] - middle[3] * middle[8], middle[3] * middle[7] - middle[4] * middle[6]);
-  const slant = across > 0 ? (ls * lt) / across : Infinity;
-  const length = Math.max(ls, lt, alongS, alongT);
-  // A third of the side from the middle to a corner is more than half, which the rules' estimate takes for the reach.
-  const variation = slant === Infinity ? Infinity : slant * Math.max(alongS / ls, alongT / lt);
-  return { length, narrow: Math.max(Math.min(ls, lt) / slant, 2 ** -40 * length), variation };
+  const [nx, ny, nz] = normals.subarray(9);
+  let square = 0;
+  for (let k = 0; k < 9; k += 3) square = Math.max(square, (normals[k] - nx) ** 2 + (normals[k + 1] - ny) ** 2 + (normals[k + 2] - nz) ** 2);
+  const length = Math.sqrt(nx * nx + ny * ny + nz * nz);
+  return length > 0 ? Math.sqrt(square) / length : Infinity;
 }
 
 /** The triangle with corner 0 at (s, t) and sides `size` times as long, in powers of its own. */
