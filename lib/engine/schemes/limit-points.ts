@@ -26,14 +26,20 @@ export function loopSmoothLimit(mesh: LevelMesh, vertex: number, ring: readonly 
   return sum / (0.375 + ring.length * weight);
 }
 
-/** Middle of a Doo-Sabin vertex' biquadratic patch: (1, 6, 1)/8 in both directions; the point itself where a border leaves no patch. */
+/** Middle of a Doo-Sabin vertex' biquadratic patch: (1, 6, 1)/8 in both directions; at the border the middle of the patch' end there; a corner itself. */
 export function dooSabinLimitPoints(mesh: LevelMesh): Float64Array {
   const p = mesh.positions;
   const limit = p.slice();
   const ring: number[] = [];
   for (let h = 0; h < mesh.vertexOf.length; h++) {
     const vertex = mesh.vertexOf[h];
-    if (!collectRing(mesh, h, ring) || ring.length !== 4) continue;
+    const closed = collectRing(mesh, h, ring);
+    if (!closed && ring.length > 1) {
+      const ahead = mesh.vertexOf[nextHalfEdge(mesh, ring[0])];
+      const behind = mesh.vertexOf[previousHalfEdge(mesh, ring[ring.length - 1])];
+      for (let axis = 0; axis < 3; axis++) limit[3 * vertex + axis] = (p[3 * behind + axis] + 6 * p[3 * vertex + axis] + p[3 * ahead + axis]) / 8;
+    }
+    if (!closed || ring.length !== 4) continue;
     for (let axis = 0; axis < 3; axis++) {
       let sum = 36 * p[3 * vertex + axis];
       for (const corner of ring) {
