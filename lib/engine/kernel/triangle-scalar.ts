@@ -35,7 +35,7 @@ export function trianglePowerMoments(p: Float64Array, along: GaussRule, rule: Ga
   const half = count >> 1;
   for (let i = 0; i < count + 1; i++) {
     const u = alongNodes[i];
-    const rest = (1 / 2) - u;
+    const rest = (1 * (1 / 2)) - u;
     const wu = alongWeights[i] * rest;
     const u2 = u * u;
     const ud2 = 2 * u;
@@ -263,7 +263,7 @@ export function trianglePowerArea(p: Float64Array, along: GaussRule, rule: Gauss
   const half = count >> 1;
   for (let i = 0; i < count + 1; i++) {
     const u = alongNodes[i];
-    const rest = (1 / 2) - u;
+    const rest = (1 * (1 / 2)) - u;
     const wu = alongWeights[i] * rest;
     const u2 = u * u;
     const ud2 = 2 * u;

@@ -31,7 +31,7 @@ function parse(text) {
 /** Plain JavaScript, one patch at a time. */
 export const scalar = {
   leaf: (text) => text,
-  binary: (left, operator, right) => `(${left} ${operator} ${right})`,
+  binary: (left, operator, right) => (operator === '/' && /^\d+$/.test(right) ? `(${left} * (1 / ${right}))` : `(${left} ${operator} ${right})`),
   call: (name, inner) => `Math.${name}(${inner})`,
   declare: (name, value) => `const ${name} = ${value};`,
   start: (name) => `let ${name} = 0;`,
@@ -48,7 +48,11 @@ export const vector = {
     if (array === undefined) return text;
     return PER_PATCH.has(array) ? `v128.load(${array} + ((${index}) << 4))` : `v128.load64_splat(${array} + ((${index}) << 3))`;
   },
-  binary: (left, operator, right) => `f64x2.${NAMES[operator]}(${left}, ${right})`,
+  binary(left, operator, right) {
+    // A multiplication by the reciprocal is faster.
+    const divisor = operator === '/' ? right.match(/^f64x2\.splat\((\d+)\)$/) : null;
+    return divisor === null ? `f64x2.${NAMES[operator]}(${left}, ${right})` : `f64x2.mul(${left}, f64x2.splat(${1 / Number(divisor[1])}))`;
+  },
   call: (name, inner) => `f64x2.${name}(${inner})`,
   declare: (name, value) => `const ${name}: v128 = ${value};`,
   start: (name) => `let ${name}: v128 = f64x2.splat(0);`,

@@ -26,8 +26,8 @@ const bicubic = {
   /** B-spline values to powers of t − ½, as lib/engine/patches/bicubic-powers.ts does it. */
   toPowers: [
     'let c0 = p[at]', 'let c1 = p[at + stride]', 'let c2 = p[at + 2 * stride]', 'let c3 = p[at + 3 * stride]',
-    'let s0 = c0 + c3', 'let s1 = c1 + c2', 'let d0 = c3 - c0', 'let d1 = c2 - c1',
-    'p[at] := (s0 + 23 * s1) / 48', 'p[at + stride] := (d0 + 5 * d1) / 8', 'p[at + 2 * stride] := (s0 - s1) / 4', 'p[at + 3 * stride] := (d0 - 3 * d1) / 6',
+    'let s1 = c1 + c2', 'let t = (c0 + c3) - s1', 'let d0 = c3 - c0', 'let d1 = c2 - c1',
+    'p[at] := s1 / 2 + t / 48', 'p[at + stride] := (d0 + 5 * d1) / 8', 'p[at + 2 * stride] := t / 4', 'p[at + 3 * stride] := (d0 - 3 * d1) / 6',
   ],
   order: 4,
   /** The line u = const: coefficients in v of X (a) and X_u (d). */
