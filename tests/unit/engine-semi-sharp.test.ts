@@ -101,6 +101,29 @@ describe('faces along a semi-sharp crease', () => {
     }
   }
 
+  it('a crease that ends where half as many edges meet as on a regular vertex, 2 of quads and 3 of triangles', () => {
+    const box = gridBox([1, 1, 1], (i, j, k) => [i, 1.3 * j, k + 0.2 * i * j]);
+    // The top is halved from corner to corner by way of a vertex in its middle.
+    const top = box.faces.findIndex((face) => face.every((v) => box.positions[v][2] >= 1));
+    const [a, b, c, d] = box.faces[top];
+    const middle = box.positions.length;
+    const quads = [...box.faces.filter((_, f) => f !== top), [a, b, c, middle], [a, middle, c, d]];
+    const below = box.positions.findIndex((p) => p[0] === box.positions[a][0] && p[1] === box.positions[a][1] && p[2] < 1);
+    const tetrahedron = [[1, 1, 1], [1, -1, -1], [-1, 1, -1.5], [-1, -1, 1]];
+    for (const s of [0.7, 1.7, 2.5]) {
+      const cages: [Scheme, Cage][] = [
+        ['catmull-clark', cageOf([...box.positions, [0.4, 0.6, 1.5]], quads, [[middle, a, s], [a, below, s]])],
+        ['loop', cageOf(tetrahedron, [[0, 1, 2], [0, 2, 3], [0, 3, 1], [1, 3, 2]], [[0, 1, s]])],
+      ];
+      for (const [scheme, cage] of cages) {
+        const options: MeasureOptions = { ...CATMULL_CLARK, scheme };
+        const [found, wanted] = [cage, worn(cage, options)].map((one) => totalMoments(measureCage(one, options).parts));
+        expect(wanted.volume).not.toBe(0);
+        expect(momentError(found, wanted, cageSize(cage))).toBeLessThan(1e-14);
+      }
+    }
+  });
+
   it('an open plate with lines as borders of parts: as when all is refined until the sharpness is gone', () => {
     const n = 5;
     const positions = Array.from({ length: (n + 1) ** 2 }, (_, v) => [v % (n + 1), Math.floor(v / (n + 1)), 2 + Math.sin(1.3 * v) / 3]);

@@ -17,7 +17,8 @@ function runsThrough(mesh: LevelMesh, counts: RegularCounts, h: number): boolean
   if (mesh.vertexSharpness[mesh.vertexOf[h]] !== 0) return false;
   let spoke = h;
   for (let j = 0; j < counts.inner; j++) {
-    if (spoke < 0) return false;
+    // A border, or a vertex of half the valence, round which the walk would go twice.
+    if (spoke < 0 || (j > 0 && spoke === h)) return false;
     const face = mesh.faceOf[spoke];
     if (mesh.starts[face + 1] - mesh.starts[face] !== counts.corners) return false;
     if (mesh.edgeSharpness[spoke] !== (j % counts.rim === 0 ? mesh.edgeSharpness[h] : 0)) return false;
