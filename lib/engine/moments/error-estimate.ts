@@ -10,7 +10,7 @@ const ROUNDINGS = 16;
 /** Largest defect of the rules in use, so that a node or weight gone wrong shows in every estimate. */
 export function largestRuleDefect(): number {
   let worst = 0;
-  for (const count of [3, 4, 5, 6, 7]) {
+  for (const count of [2, 3, 4, 5, 6, 7, 8, 9, 10]) {
     const rule = gaussRule(count);
     worst = Math.max(worst, ruleDefect(rule.nodes, rule.weights));
   }

@@ -134,7 +134,7 @@ export const DOO_SABIN_KIT: FanKit = {
   sides: 4,
   arriving: 3,
   sideAt,
-  fewestNodes: 3,
+  fewestNodes: 2,
   smoothShrinkage,
   largestShrinkage: 0.75,
   body: (mesh, corner) => mesh.bodyOf[mesh.vertexOf[corner]],

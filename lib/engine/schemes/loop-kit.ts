@@ -71,7 +71,7 @@ export const LOOP_KIT: FanKit = {
   sides: 3,
   arriving: 2,
   sideAt: faceSideAt,
-  fewestNodes: 4,
+  fewestNodes: 2,
   smoothShrinkage,
   largestShrinkage: 5 / 8,
   body: (mesh, corner) => mesh.bodyOf[mesh.faceOf[corner]],
