@@ -12,10 +12,10 @@ export function addBorderCurves(mesh: DooSabinMesh, at: Offspring, keptCorners: 
     fine.borderFrom[h] = from;
   };
   const half = 2 ** -(mesh.level + 1);
-  for (let h = 0; h < mesh.twin.length; h++) {
+  for (const h of at.active) {
     const curve = mesh.borderOf[h];
     const t = mesh.twin[h];
-    if (curve < 0 || at.ids[h] < 0) continue;
+    if (curve < 0) continue;
     const from = mesh.borderFrom[h];
     const quad = at.inEdge[t >= 0 && t < h ? t : h];
     if (quad < 0) continue;
@@ -38,19 +38,19 @@ export function addBorderCurves(mesh: DooSabinMesh, at: Offspring, keptCorners: 
       set(at.inFace[h], curve, from + half);
     }
   }
-  addRims(mesh, at.rimIds, keptCorners, firstCorner, fine);
+  addRims(mesh, at, keptCorners, firstCorner, fine);
   if (mesh.level === 0) addSpokes(mesh, at, fine);
 }
 
 /** Which stretch of the border each new border vertex' patch ends in. */
-function addRims(mesh: DooSabinMesh, rimIds: Int32Array, keptCorners: readonly number[], firstCorner: number, fine: DooSabinMesh): void {
+function addRims(mesh: DooSabinMesh, { active, rimIds }: Offspring, keptCorners: readonly number[], firstCorner: number, fine: DooSabinMesh): void {
   const set = (id: number, edge: number, from: number, share: number): void => {
     fine.rimOf[id] = edge;
     fine.rimFrom[id] = from;
     fine.rimShare[id] = share;
   };
   if (mesh.level > 0) {
-    for (let h = 0; h < rimIds.length; h++) {
+    for (const h of active) {
       if (rimIds[h] < 0) continue;
       const after = nextHalfEdge(mesh, h);
       const a = mesh.vertexOf[h];
@@ -64,7 +64,7 @@ function addRims(mesh: DooSabinMesh, rimIds: Int32Array, keptCorners: readonly n
     keptCorners.forEach((h, i) => set(firstCorner + i, mesh.rimOf[mesh.vertexOf[h]], 0, mesh.rimShare[mesh.vertexOf[h]] / 2));
     return;
   }
-  for (let h = 0; h < rimIds.length; h++) {
+  for (const h of active) {
     if (rimIds[h] < 0) continue;
     set(rimIds[h], h, 0, 0.5);
     set(rimIds[h] + 1, h, 0.5, 0.5);

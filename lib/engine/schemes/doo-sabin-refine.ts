@@ -5,6 +5,8 @@ import type { DooSabinMesh } from './doo-sabin-mesh';
 
 /** Where the parts of a mesh are found in the refined one. Half-edge numbers unless said; -1 where there is none. */
 export interface Offspring {
+  /** The half-edges of the faces that are refined, ascending; all others have none of the following. */
+  active: Int32Array;
   /** New vertex of each corner. */
   ids: Int32Array;
   /** By border half-edge: the first of its two new vertices, that near its start; the other follows. */
@@ -29,10 +31,12 @@ export function refineDooSabin(mesh: DooSabinMesh, pending: Uint8Array, keep: Ui
   const { vertexOf, faceOf, twin, starts } = mesh;
   const halfEdges = vertexOf.length;
   const none = (): Int32Array => new Int32Array(halfEdges).fill(-1);
-  const at: Offspring = { ids: none(), rimIds: none(), inFace: none(), inVertex: none(), closing: none(), inEdge: none() };
   const touched = new Uint8Array(mesh.faces);
   for (let h = 0; h < halfEdges; h++) if (keep[vertexOf[h]] === 1) touched[faceOf[h]] = 1;
-
+  const active = new Int32Array(halfEdges);
+  let count = 0;
+  for (let face = 0; face < mesh.faces; face++) if (touched[face] === 1) for (let h = starts[face]; h < starts[face + 1]; h++) active[count++] = h;
+  const at: Offspring = { active: active.subarray(0, count), ids: none(), rimIds: none(), inFace: none(), inVertex: none(), closing: none(), inEdge: none() };
   let vertices = 0;
   let faces = 0;
   let kept = 0;
@@ -53,7 +57,7 @@ export function refineDooSabin(mesh: DooSabinMesh, pending: Uint8Array, keep: Ui
     }
   }
   const corners = vertices;
-  for (let h = 0; h < halfEdges; h++) {
+  for (const h of at.active) {
     if (twin[h] >= 0 || (keep[vertexOf[h]] === 0 && keep[vertexOf[nextHalfEdge(mesh, h)]] === 0)) continue;
     at.rimIds[h] = vertices;
     vertices += 2;
@@ -67,7 +71,7 @@ export function refineDooSabin(mesh: DooSabinMesh, pending: Uint8Array, keep: Ui
     lay.close();
   }
   const keptCorners: number[] = [];
-  for (let h = 0; h < halfEdges; h++) {
+  for (const h of at.active) {
     if (keep[vertexOf[h]] === 0 || at.inVertex[h] >= 0) continue;
     let first = h;
     for (let t = twin[first]; t >= 0; t = twin[first]) {
@@ -91,9 +95,9 @@ export function refineDooSabin(mesh: DooSabinMesh, pending: Uint8Array, keep: Ui
     }
     lay.close();
   }
-  for (let h = 0; h < halfEdges; h++) {
+  for (const h of at.active) {
     const t = twin[h];
-    if (at.ids[h] < 0 || (t >= 0 && t < h)) continue;
+    if (t >= 0 && t < h) continue;
     const after = nextHalfEdge(mesh, h);
     if (keep[vertexOf[h]] === 0 && keep[vertexOf[after]] === 0) continue;
     if (t < 0) {
@@ -121,7 +125,7 @@ export function refineDooSabin(mesh: DooSabinMesh, pending: Uint8Array, keep: Ui
     firstSpoke: mesh.firstSpoke, spokes: mesh.spokes,
   };
   placeCorners(mesh, touched, at.ids, pending, fine);
-  placeBorder(mesh, at.rimIds, keptCorners, rims, pending, fine);
+  placeBorder(mesh, at, keptCorners, rims, pending, fine);
   addBorderCurves(mesh, at, keptCorners, rims, fine);
   return fine;
 }
@@ -214,12 +218,12 @@ function placeCorners(mesh: DooSabinMesh, touched: Uint8Array, ids: Int32Array, 
 }
 
 /** The new vertices along the border, at ¾ and ¼ of its edges, and the kept corners. */
-function placeBorder(mesh: DooSabinMesh, rimIds: Int32Array, keptCorners: number[], firstCorner: number, pending: Uint8Array, fine: DooSabinMesh): void {
+function placeBorder(mesh: DooSabinMesh, { active, rimIds }: Offspring, keptCorners: number[], firstCorner: number, pending: Uint8Array, fine: DooSabinMesh): void {
   const own = (id: number, vertex: number, face: number): void => {
     fine.bodyOf[id] = mesh.bodyOf[mesh.level === 0 ? face : vertex];
     fine.live[id] = pending[vertex] === 1 && (mesh.level > 0 || mesh.live[face] === 1) ? 1 : 0;
   };
-  for (let h = 0; h < rimIds.length; h++) {
+  for (const h of active) {
     const id = rimIds[h];
     if (id < 0) continue;
     const a = mesh.vertexOf[h];
