@@ -8,28 +8,56 @@ function cage(positions: Float64Array, faceStarts: Uint32Array, faceVertices: Ui
   };
 }
 
-/** A torus of n × m quads, every vertex regular. */
-export function quadTorus(n: number, m: number): Cage {
-  const positions = new Float64Array(3 * n * m);
-  const faces = new Uint32Array(4 * n * m);
+/** How a torus of n × n quads is cut: not at all, one quad in a hundred or each of them in two, or each in two along diagonals that take turns. */
+export const CUTS = ['none', 'some', 'all', 'alternating'] as const;
+export type Cut = (typeof CUTS)[number];
+
+/** Quads between those that `some` cuts, each way. */
+const SOME = 10;
+
+/**
+ * A torus of n × n quads (n even), every vertex regular to Catmull-Clark and Doo-Sabin until quads are cut in two. With `all` every vertex is regular to
+ * Loop and none to the others; with `alternating` the valences are 4 and 8, so that none is to anybody.
+ */
+export function torus(n: number, cut: Cut): Cage {
+  const positions = new Float64Array(3 * n * n);
+  const starts = [0];
+  const corners: number[] = [];
+  const add = (...face: number[]): void => {
+    for (const vertex of face) corners.push(vertex);
+    starts.push(corners.length);
+  };
   for (let i = 0; i < n; i++) {
-    for (let j = 0; j < m; j++) {
-      const [a, b] = [(2 * Math.PI * i) / n, (2 * Math.PI * j) / m];
-      positions.set([(3 + Math.cos(b)) * Math.cos(a), (3 + Math.cos(b)) * Math.sin(a), Math.sin(b)], 3 * (i * m + j));
-      const at = (x: number, y: number): number => (x % n) * m + (y % m);
-      faces.set([at(i, j), at(i + 1, j), at(i + 1, j + 1), at(i, j + 1)], 4 * (i * m + j));
+    for (let j = 0; j < n; j++) {
+      const [a, b] = [(2 * Math.PI * i) / n, (2 * Math.PI * j) / n];
+      positions.set([(3 + Math.cos(b)) * Math.cos(a), (3 + Math.cos(b)) * Math.sin(a), Math.sin(b)], 3 * (i * n + j));
+      const at = (x: number, y: number): number => (x % n) * n + (y % n);
+      const [p, q, r, s] = [at(i, j), at(i + 1, j), at(i + 1, j + 1), at(i, j + 1)];
+      if (cut === 'none' || (cut === 'some' && (i % SOME > 0 || j % SOME > 0))) add(p, q, r, s);
+      else if (cut === 'alternating' && (i + j) % 2 === 1) {
+        add(p, q, s);
+        add(q, r, s);
+      } else {
+        add(p, q, r);
+        add(p, r, s);
+      }
     }
   }
-  return cage(positions, Uint32Array.from({ length: n * m + 1 }, (_, f) => 4 * f), faces);
+  return cage(positions, Uint32Array.from(starts), Uint32Array.from(corners));
 }
 
-/** The same with each quad cut in two: every vertex and every face is extraordinary to Catmull-Clark. */
-export function triangleTorus(n: number, m: number): Cage {
-  const quads = quadTorus(n, m);
-  const faces = new Uint32Array(6 * n * m);
-  for (let f = 0; f < n * m; f++) {
-    const [a, b, c, d] = quads.faceVertices.subarray(4 * f, 4 * f + 4);
-    faces.set([a, b, c, a, c, d], 6 * f);
-  }
-  return cage(quads.positions, Uint32Array.from({ length: 2 * n * m + 1 }, (_, f) => 3 * f), faces);
+/** A cage as the bytes of an OBJ file, coordinates with all digits. */
+export function objBytes({ positions, faceStarts, faceVertices }: Cage): Uint8Array {
+  const pieces: Buffer[] = [];
+  let lines: string[] = [];
+  const put = (line: string): void => {
+    lines.push(line);
+    if (lines.length < 50_000) return;
+    pieces.push(Buffer.from(`${lines.join('\n')}\n`));
+    lines = [];
+  };
+  for (let v = 0; v < positions.length; v += 3) put(`v ${positions[v]} ${positions[v + 1]} ${positions[v + 2]}`);
+  for (let face = 0; face + 1 < faceStarts.length; face++) put(`f ${Array.from(faceVertices.subarray(faceStarts[face], faceStarts[face + 1]), (vertex) => vertex + 1).join(' ')}`);
+  pieces.push(Buffer.from(`${lines.join('\n')}\n`));
+  return Buffer.concat(pieces);
 }

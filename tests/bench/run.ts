@@ -1,61 +1,43 @@
-import { createHash } from 'node:crypto';
-import { mkdirSync, readFileSync, writeFileSync } from 'node:fs';
-import type { Cage } from '@/lib/engine/cage';
-import { measureCage } from '@/lib/engine/measure';
-import type { MeasureOptions } from '@/lib/engine/measured';
-import { readObj } from '@/lib/formats/obj';
-import { quadTorus, triangleTorus } from './bench-cages';
+import { spawnSync } from 'node:child_process';
+import { mkdirSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs';
+import { cpus, loadavg } from 'node:os';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { build } from 'esbuild';
+import type { Scheme } from '@/lib/engine/cage';
+import { makeCage, type RowAnswer, type RowTask } from './bench-row';
 import { cppWay } from './cpp-way';
-import { plainVolume } from './plain-way';
 
-/** Size series of the engine beside the plain way. `--quick` leaves out the million; results also go to bench-results/ as JSON. `intake` measures an import instead, `horns` what smoothing removes. */
-
-const OPTIONS: MeasureOptions = { scheme: 'catmull-clark', boundary: 'edge-and-corner', triangles: 'catmark', creasing: 'uniform', partsBy: 'whole' };
-
+/**
+ * Size series of the engine per scheme, from a parsed cage and from a file's bytes to values, beside the plain way and patch quadrature in C++. Also written
+ * to bench-results/engine.json. `--quick` leaves out what takes long; `intake` measures an import instead, `horns` what smoothing removes.
+ */
 interface Row {
+  scheme: Scheme;
   cage: string;
   way: string;
   faces: number;
-  /** Processor time of this process, so that other work on the machine counts less. */
+  /** The best of `rounds`: processor time of the row's process, and wall clock. */
   cpuMs: number;
   wallMs: number;
+  rounds: number;
+  /** By processor time; with two threads by the wall clock. */
   facesPerSecond: number;
   /** |V − V exact| / |V| against the engine's own value. */
   volumeError: number;
   ownEstimate: number | null;
-  residentMb: number;
+  bytesPerFace: number;
+  peakMb: number;
   hash: string;
 }
 
-function timed<T>(work: () => T): { result: T; cpuMs: number; wallMs: number } {
-  const cpu = process.cpuUsage();
-  const start = performance.now();
-  const result = work();
-  const used = process.cpuUsage(cpu);
-  return { result, cpuMs: (used.user + used.system) / 1000, wallMs: performance.now() - start };
-}
-
-function hashOf(values: readonly number[]): string {
-  return createHash('sha256').update(Buffer.from(Float64Array.from(values).buffer)).digest('hex').slice(0, 12);
-}
-
-function measureRow(name: string, cage: Cage): { row: Row; volume: number } {
-  const faces = cage.faceStarts.length - 1;
-  const { result, cpuMs, wallMs } = timed(() => measureCage(cage, OPTIONS));
-  const components = result.parts.flatMap((part) => part.components);
-  const volume = components.reduce((sum, c) => sum + c.solid.volume, 0);
-  const estimate = Math.max(...components.map((c) => c.errorEstimate));
-  const hash = hashOf(components.flatMap((c) => [c.solid.volume, ...c.solid.centroid, ...c.solid.centralSecond]));
-  return { volume, row: { cage: name, way: 'exact', faces, cpuMs, wallMs, facesPerSecond: (1000 * faces) / cpuMs, volumeError: 0, ownEstimate: estimate, residentMb: process.memoryUsage.rss() / 2 ** 20, hash } };
-}
-
-function plainRow(name: string, cage: Cage, refinements: number, exact: number): Row {
-  const faces = cage.faceStarts.length - 1;
-  const { result, cpuMs, wallMs } = timed(() => plainVolume(cage, OPTIONS, refinements));
-  return {
-    cage: name, way: `refine ${refinements}×, tetrahedra`, faces, cpuMs, wallMs, facesPerSecond: (1000 * faces) / cpuMs,
-    volumeError: Math.abs(result / exact - 1), ownEstimate: null, residentMb: process.memoryUsage.rss() / 2 ** 20, hash: hashOf([result]),
-  };
+interface Series {
+  scheme: Scheme;
+  name: string;
+  cage: RowTask['cage'];
+  /** Refinements of the plain way; 0: left out. */
+  plain: number;
+  ways: readonly ('cage' | 'team' | 'file')[];
 }
 
 if (process.argv.includes('intake')) {
@@ -70,46 +52,87 @@ if (process.argv.includes('horns')) {
   process.exit(0);
 }
 
-const spot = readObj(readFileSync(new URL('../reference/cages/spot.obj', import.meta.url)));
-const series: [string, Cage, number][] = [
-  ['spot', spot, 5],
-  ['quads 1 k', quadTorus(32, 32), 4],
-  ['quads 10 k', quadTorus(100, 100), 2],
-  ['quads 100 k', quadTorus(320, 320), 1],
-  ['triangles 2 k', triangleTorus(32, 32), 3],
-  ['triangles 20 k', triangleTorus(100, 100), 1],
-];
-if (!process.argv.includes('--quick')) series.push(['quads 1 M', quadTorus(1000, 1000), 0]);
-
-// The first runs pay for the compiler; what is shown is what a worker reaches.
-for (let i = 0; i < 5; i++) measureCage(spot, OPTIONS);
-for (let i = 0; i < 3; i++) measureCage(series[2][1], OPTIONS);
-
+const quick = process.argv.includes('--quick');
+const WAYS = { cage: 'cage to values', team: 'cage to values, two threads', file: 'file to values' };
 const CPP_WAY = 'C++ patches to 1e-9';
 
-/** The C++ row of a cage. It computes solid moments alone: no area, diagnosis or cage; `wallMs` is its processor time too. */
-function cppRow(name: string, cage: Cage, exact: number): Row {
-  const faces = cage.faceStarts.length - 1;
-  if (cpp === null) return { cage: name, way: `${CPP_WAY}: not installed`, faces, cpuMs: NaN, wallMs: NaN, facesPerSecond: NaN, volumeError: NaN, ownEstimate: null, residentMb: NaN, hash: '' };
-  const { isolation, cpuMs, volume, peakMb } = cpp.measure(cage, exact);
-  return {
-    cage: name, way: `${CPP_WAY}, isolation ${isolation}`, faces, cpuMs, wallMs: cpuMs, facesPerSecond: (1000 * faces) / cpuMs,
-    volumeError: Math.abs(volume / exact - 1), ownEstimate: null, residentMb: peakMb, hash: hashOf([volume]),
-  };
+/** Quads each way and the plain way's refinements. */
+const SIZES: [label: string, quads: number, plain: number][] = quick ? [['1 k', 32, 4], ['100 k', 320, 1]] : [['1 k', 32, 4], ['10 k', 100, 2], ['100 k', 320, 1], ['1 M', 1000, 0]];
+
+function seriesOf(scheme: Scheme): Series[] {
+  const series: Series[] = [];
+  for (const [label, quads, plain] of SIZES) {
+    // Two triangles a quad: a little fewer quads for the same number of faces.
+    const triangles = 2 * Math.round(quads / Math.SQRT2 / 2);
+    const ways: Series['ways'] = label === '1 k' || label === '10 k' ? ['cage', 'file'] : ['cage', 'team', 'file'];
+    series.push({ scheme, name: `regular ${label}`, cage: scheme === 'loop' ? { quads: triangles, cut: 'all' } : { quads, cut: 'none' }, plain, ways });
+    if (label === '1 M') continue;
+    if (scheme === 'catmull-clark') series.push({ scheme, name: `one quad in 100 cut, ${label}`, cage: { quads, cut: 'some' }, plain, ways: ['cage', 'file'] });
+    if (!quick || label === '1 k') series.push({ scheme, name: `irregular ${label}`, cage: { quads: triangles, cut: scheme === 'loop' ? 'alternating' : 'all' }, plain, ways: ['cage'] });
+  }
+  return series;
 }
 
-const cpp = cppWay();
+const spot: Series = {
+  scheme: 'catmull-clark', name: 'spot', cage: { file: fileURLToPath(new URL('../reference/cages/spot.obj', import.meta.url)) }, plain: 5, ways: ['cage', 'file'],
+};
+const schemes: Scheme[] = ['catmull-clark', 'loop', 'doo-sabin'];
+const folder = mkdtempSync(join(import.meta.dirname, '../../.bench-'));
 const rows: Row[] = [];
-for (const [name, cage, refinements] of series) {
-  const { row, volume } = measureRow(name, cage);
-  rows.push(row);
-  if (refinements > 0) rows.push(plainRow(name, cage, refinements, volume));
-  rows.push(cppRow(name, cage, volume));
+const cpp = cppWay();
+try {
+  const program = join(folder, 'row.mjs');
+  await build({
+    entryPoints: [fileURLToPath(new URL('row-process.ts', import.meta.url))], outfile: program, bundle: true, platform: 'node', target: 'node20', format: 'esm',
+    tsconfig: fileURLToPath(new URL('../../tsconfig.json', import.meta.url)), packages: 'external', logLevel: 'error',
+  });
+  const ask = (task: RowTask): RowAnswer => {
+    const { status, stdout, stderr } = spawnSync(process.execPath, ['--max-old-space-size=16384', program, JSON.stringify(task)], { encoding: 'utf8' });
+    if (status !== 0) throw new Error(`a row failed: ${stderr}`);
+    return JSON.parse(stdout) as RowAnswer;
+  };
+  for (const series of [spot, ...schemes.flatMap(seriesOf)]) {
+    const { scheme, name, cage, plain, ways } = series;
+    const put = (way: string, answer: RowAnswer, exact: number): void => {
+      const { volume, ...rest } = answer;
+      const row: Row = { scheme, cage: name, way, ...rest, facesPerSecond: (1000 * answer.faces) / (way === WAYS.team ? answer.wallMs : answer.cpuMs), volumeError: Math.abs(volume / exact - 1) };
+      rows.push(row);
+      console.log(lineOf(row));
+    };
+    let exact = NaN;
+    for (const way of ways) {
+      const answer = ask({ scheme, cage, way });
+      if (Number.isNaN(exact)) exact = answer.volume;
+      put(WAYS[way], answer, exact);
+    }
+    if (plain > 0) put(`refine ${plain}×, tetrahedra`, ask({ scheme, cage, way: { refinements: plain } }), exact);
+    if (scheme !== 'catmull-clark' || name.endsWith('1 M')) continue;
+    const none = { scheme, cage: name, faces: rows[rows.length - 1].faces, cpuMs: NaN, wallMs: NaN, rounds: 0, facesPerSecond: NaN, volumeError: NaN, ownEstimate: null, bytesPerFace: NaN, peakMb: NaN, hash: '' };
+    if (cpp === null) rows.push({ ...none, way: `${CPP_WAY}: not installed` });
+    else {
+      // It computes solid moments alone: no area, no borders, no diagnosis, no moments of the cage.
+      const { isolation, cpuMs, volume, peakMb } = cpp.measure(makeCage(cage), exact);
+      rows.push({
+        ...none, way: `${CPP_WAY}, isolation ${isolation}`, cpuMs, wallMs: cpuMs, facesPerSecond: (1000 * none.faces) / cpuMs,
+        volumeError: Math.abs(volume / exact - 1), bytesPerFace: (peakMb * 2 ** 20) / none.faces, peakMb,
+      });
+    }
+    console.log(lineOf(rows[rows.length - 1]));
+  }
+} finally {
+  cpp?.close();
+  rmSync(folder, { recursive: true, force: true });
 }
-cpp?.close();
+
+function lineOf(row: Row): string {
+  return `${row.scheme}  ${row.cage}  ${row.way}  ${row.cpuMs.toFixed(1)} ms`;
+}
+
 console.table(rows.map((row) => ({
-  cage: row.cage, way: row.way, faces: row.faces, 'cpu ms': Math.round(row.cpuMs), 'wall ms': Math.round(row.wallMs), 'faces/s': Math.round(row.facesPerSecond),
-  'volume error': row.volumeError.toExponential(1), 'own estimate': row.ownEstimate?.toExponential(1) ?? '', 'memory MB': Math.round(row.residentMb), hash: row.hash,
+  scheme: row.scheme, cage: row.cage, way: row.way, faces: row.faces, 'cpu ms': Number(row.cpuMs.toPrecision(4)), 'wall ms': Number(row.wallMs.toPrecision(4)), 'faces/s': Math.round(row.facesPerSecond),
+  'volume error': row.volumeError.toExponential(1), 'own estimate': row.ownEstimate?.toExponential(1) ?? '', 'peak MB': Math.round(row.peakMb),
+  'peak B/face': Math.round(row.bytesPerFace), hash: row.hash,
 })));
+console.log(`node ${process.version}, ${cpus()[0].model}, ${cpus().length} cores, load ${loadavg()[0].toFixed(1)}`);
 mkdirSync('bench-results', { recursive: true });
-writeFileSync('bench-results/engine.json', `${JSON.stringify({ node: process.version, rows }, null, 1)}\n`);
+writeFileSync('bench-results/engine.json', `${JSON.stringify({ node: process.version, processor: cpus()[0].model, cores: cpus().length, load: loadavg(), rows }, null, 1)}\n`);

@@ -1,0 +1,120 @@
+import { createHash } from 'node:crypto';
+import { readFileSync } from 'node:fs';
+import { Worker } from 'node:worker_threads';
+import type { Cage, Scheme } from '@/lib/engine/cage';
+import { setPatchTeam } from '@/lib/engine/kernel/patch-block';
+import { dismissTeam, helpTeam, teamKernels, teamMemory } from '@/lib/engine/kernel/patch-team';
+import { measureCage } from '@/lib/engine/measure';
+import type { MeasuredCage, MeasureOptions } from '@/lib/engine/measured';
+import { readObj } from '@/lib/formats/obj';
+import { objBytes, torus, type Cut } from './bench-cages';
+import { plainVolume } from './plain-way';
+
+/** What a row's own process is asked. */
+export interface RowTask {
+  scheme: Scheme;
+  /** Path of an OBJ file, or the quads each way of a torus and how they are cut. */
+  cage: { file: string } | { quads: number; cut: Cut };
+  /** From a parsed cage to values on one core or on two, from the file's bytes to values, or the plain way with so many refinements. */
+  way: 'cage' | 'team' | 'file' | { refinements: number };
+}
+
+/** What it answers: the best of some rounds after the compiler has warmed up. */
+export interface RowAnswer {
+  faces: number;
+  /** Wall clock, and processor time of the whole process, in which other work on the machine counts less. */
+  wallMs: number;
+  cpuMs: number;
+  rounds: number;
+  volume: number;
+  ownEstimate: number | null;
+  /** Bytes a face that the process took at its peak beyond what it had before the cage was made. */
+  bytesPerFace: number;
+  peakMb: number;
+  hash: string;
+}
+
+/** A row goes on until it has run so long and so often. */
+const LEAST_MS = 800;
+const LEAST_ROUNDS = 2;
+const MOST_ROUNDS = 200;
+
+export function optionsOf(scheme: Scheme): MeasureOptions {
+  return { scheme, boundary: 'edge-and-corner', triangles: 'catmark', creasing: 'uniform', partsBy: 'whole' };
+}
+
+export function makeCage(cage: RowTask['cage']): Cage {
+  return 'file' in cage ? readObj(readFileSync(cage.file)) : torus(cage.quads, cage.cut);
+}
+
+function hashOf(values: readonly number[]): string {
+  return createHash('sha256').update(Buffer.from(Float64Array.from(values).buffer)).digest('hex').slice(0, 12);
+}
+
+/** Runs a row's work in this process. */
+export async function runRow({ scheme, cage: spec, way }: RowTask): Promise<RowAnswer> {
+  const options = optionsOf(scheme);
+  const bytesBefore = process.memoryUsage.rss();
+  let cage: Cage | null = makeCage(spec);
+  const faces = cage.faceStarts.length - 1;
+  let work: () => { volume: number; estimate: number | null; hash: string };
+  let close = async (): Promise<void> => undefined;
+  if (typeof way === 'object') {
+    const kept = cage;
+    work = () => {
+      const volume = plainVolume(kept, options, way.refinements);
+      return { volume, estimate: null, hash: hashOf([volume]) };
+    };
+  } else if (way === 'file') {
+    const bytes = objBytes(cage);
+    cage = null;
+    work = () => summary(measureCage(readObj(bytes), options));
+  } else {
+    const kept = cage;
+    work = () => summary(measureCage(kept, options));
+    if (way === 'team') close = await startTeam();
+  }
+  let wallMs = Infinity;
+  let cpuMs = Infinity;
+  let rounds = 0;
+  let result = work();
+  for (const start = performance.now(); rounds < MOST_ROUNDS && (rounds < LEAST_ROUNDS || performance.now() - start < LEAST_MS); rounds++) {
+    const cpuBefore = process.cpuUsage();
+    const begin = performance.now();
+    result = work();
+    wallMs = Math.min(wallMs, performance.now() - begin);
+    const { user, system } = process.cpuUsage(cpuBefore);
+    cpuMs = Math.min(cpuMs, (user + system) / 1000);
+  }
+  await close();
+  const peak = 1024 * process.resourceUsage().maxRSS;
+  return {
+    faces, wallMs, cpuMs, rounds, volume: result.volume, ownEstimate: result.estimate, bytesPerFace: (peak - bytesBefore) / faces, peakMb: peak / 2 ** 20, hash: result.hash,
+  };
+}
+
+function summary(measured: MeasuredCage): { volume: number; estimate: number; hash: string } {
+  const components = measured.parts.flatMap((part) => part.components);
+  const volume = components.reduce((sum, c) => sum + c.solid.volume, 0);
+  const hash = hashOf(components.flatMap((c) => [c.solid.volume, ...c.solid.centroid, ...c.solid.centralSecond]));
+  return { volume, estimate: Math.max(...components.map((c) => c.errorEstimate)), hash };
+}
+
+/** One helper beside this thread; answers how to send it home. */
+async function startTeam(): Promise<() => Promise<void>> {
+  const memory = teamMemory();
+  const worker = new Worker(new URL(import.meta.url), { workerData: memory });
+  await new Promise((resolve, reject) => worker.once('message', resolve).once('error', reject));
+  setPatchTeam(teamKernels(memory));
+  return async () => {
+    setPatchTeam(null);
+    dismissTeam(memory);
+    await worker.terminate();
+  };
+}
+
+/** In the helper's thread: helps until it is dismissed. */
+export function help(memory: SharedArrayBuffer, ready: () => void): void {
+  ready();
+  helpTeam(memory);
+}
