@@ -37,6 +37,9 @@ export interface ShowSettings {
   parts_by: PartitionWord;
   name_pattern: string | null;
   self_approval: boolean;
+  tolerance_mass_percent: number;
+  tolerance_com_percent: number;
+  tolerance_moments_percent: number;
   frozen: boolean;
   archived: boolean;
 }
@@ -47,13 +50,26 @@ interface ShowSettingsFormProps {
   send: (input: z.input<typeof editShowInput>) => Promise<ActionResult<unknown>>;
 }
 
+const TOLERANCES = [
+  { name: 'tolerance_mass_percent', label: 'Mass', unit: '% of it' },
+  { name: 'tolerance_com_percent', label: 'Centre of mass', unit: '% of size' },
+  { name: 'tolerance_moments_percent', label: 'Inertia', unit: '% of it' },
+] as const;
+
+/** A typed percentage; with a comma for a point too. What is none is left for the schema to refuse. */
+function readPercent(typed: string | number): number {
+  const text = String(typed).trim().replace(',', '.');
+  return text === '' ? Number.NaN : Number(text);
+}
+
 /** Settings of a show. Only what was changed is sent, so that two leads do not undo each other. */
 export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps) {
   const router = useRouter();
   const [more, setMore] = useState(false);
   const { code, title, linear_unit, up_axis, scheme: storedScheme, boundary, parts_by, self_approval, frozen, archived } = show;
+  const { tolerance_mass_percent, tolerance_com_percent, tolerance_moments_percent } = show;
   const name_pattern = show.name_pattern ?? '';
-  const stored = { show: code, title, linear_unit, up_axis, scheme: storedScheme, boundary, parts_by, name_pattern, self_approval };
+  const stored = { show: code, title, linear_unit, up_axis, scheme: storedScheme, boundary, parts_by, name_pattern, self_approval, tolerance_mass_percent, tolerance_com_percent, tolerance_moments_percent };
   const { form, onSubmit, refusal, busy, errorOf } = useActionForm({
     schema: editShowInput,
     defaultValues: stored,
@@ -144,8 +160,24 @@ export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps)
           />
         </div>
       </fieldset>
-      <fieldset>
+      <fieldset className="flex min-w-0 flex-col gap-4">
         <legend className="mb-2 text-16 font-medium">Approval</legend>
+        <div className="grid gap-x-5 gap-y-4 sm:grid-cols-3">
+          {TOLERANCES.map(({ name, label, unit }) => (
+            <Field key={name} label={label} unit={unit} error={errorOf(name)}>
+              <Input
+                inputMode="decimal"
+                autoComplete="off"
+                disabled={locked}
+                className="font-mono"
+                {...form.register(name, { setValueAs: readPercent })}
+              />
+            </Field>
+          ))}
+          <p className="text-13 text-ink-3 sm:col-span-3">
+            A value that moves no more than this can be carried over, and nobody is told.
+          </p>
+        </div>
         <CheckField
           control={control}
           name="self_approval"

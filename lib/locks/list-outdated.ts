@@ -2,12 +2,14 @@ import { sql, type SQL } from 'drizzle-orm';
 import type { Executor } from '@/db/client';
 import { compareNumbers, numbersOf } from '@/lib/approvals/compare-with-approvals';
 import type { ValueNumbers } from '@/lib/approvals/to-compared-value';
+import { toDifferencesAnswer } from '@/lib/approvals/to-differences-answer';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
 import type { ShowRefInput } from '@/lib/rules/inputs/show-ref';
 import type { OutdatedLock } from '@/lib/rules/outdated-lock';
 import { isWithinTolerance, verdictWords } from '@/lib/rules/verdict';
 import { getShowAccess, type Show } from '@/lib/shows/get-show-access';
+import { APPROVAL_OF_OVERRIDE, LOCK_IS_OUTDATED, NOW_OF_LOCK } from './lock-standing';
 
 /** Every live lock of the show whose part has another value by now, or none, with the differences. */
 export async function listOutdated(context: Context, input: ShowRefInput): Promise<{ items: OutdatedLock[] }> {
@@ -51,12 +53,8 @@ export async function findOutdated(db: Executor, show: Show, where: SQL): Promis
     from locks l
     join shots s on s.id = l.shot_id
     join approvals a on a.id = l.approval_id
-    left join shot_overrides o on o.shot_id = l.shot_id and o.part_id = l.part_id and o.dropped_at is null
-    left join lateral (select id from approvals n where n.shot_id = l.shot_id and n.part_id = l.part_id and n.value_sha256 = o.value_sha256
-      and not exists (select 1 from withdrawals w where w.approval_id = n.id) order by n.ordinal desc limit 1) n on o.id is not null
-    left join part_current c on c.part_id = l.part_id
-    where l.show_id = ${show.id} and l.unlocked_at is null and ${where}
-      and (case when o.id is null then c.value_sha256 else o.value_sha256 end) is distinct from l.value_sha256
+    ${NOW_OF_LOCK} ${APPROVAL_OF_OVERRIDE}
+    where l.show_id = ${show.id} and l.unlocked_at is null and ${where} and ${LOCK_IS_OUTDATED}
     order by s.sequence collate "C", s.code collate "C", a.asset collate "C", a.part collate "C", l.copy`);
   return rows.map((row) => toOutdated(show, row));
 }
@@ -78,13 +76,6 @@ function toOutdated(show: Show, row: Found): OutdatedLock {
     state: row.present ? row.state : null,
     verdict: !row.present ? 'not in the current version' : differences === null ? 'no value any more' : verdictWords(differences, show.linearUnit),
     beyond_tolerance: differences === null || !isWithinTolerance(differences, show),
-    differences: differences && {
-      mass_change: differences.massChange,
-      com_shift_m: differences.comShiftM,
-      com_shift_of_size: differences.comShiftOfSize,
-      principal_change: differences.principalChange,
-      inertia_change: differences.inertiaChange,
-      rotation_deg: differences.rotationDeg,
-    },
+    differences: differences && toDifferencesAnswer(differences),
   };
 }

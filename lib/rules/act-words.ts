@@ -10,6 +10,11 @@ const ACT_WORDS: Record<string, string> = {
   'retry-import': 'tried failed files again',
   'import-version': 'imported a version',
   'set-values': 'set values',
+  'ask-for-approval': 'asked for approval',
+  'take-question-back': 'took a question back',
+  'approve-values': 'approved',
+  'carry-over': 'carried approvals over',
+  'withdraw-approvals': 'took approvals back',
   'add-material': 'added a material',
   'edit-material': 'changed a material',
 };
@@ -32,6 +37,9 @@ const FIELD_WORDS: Record<string, string> = {
   boundary: 'boundary rule',
   name_pattern: 'name pattern',
   self_approval: 'own values may be approved',
+  tolerance_mass_percent: 'tolerance of the mass, %',
+  tolerance_com_percent: 'tolerance of the centre of mass, % of size',
+  tolerance_moments_percent: 'tolerance of the inertia, %',
   left_out: 'left out',
 };
 

@@ -19,6 +19,9 @@ const COLUMN = {
   parts_by: 'partsBy',
   name_pattern: 'namePattern',
   self_approval: 'selfApproval',
+  tolerance_mass_percent: 'toleranceMassPercent',
+  tolerance_com_percent: 'toleranceComPercent',
+  tolerance_moments_percent: 'toleranceMomentsPercent',
 } as const satisfies Partial<Record<keyof EditShowInput, keyof Show>>;
 type Field = keyof typeof COLUMN;
 
@@ -54,12 +57,12 @@ export async function editShow(context: Context, input: EditShowInput): Promise<
 }
 
 /** The value that the field is to have; undefined where the input leaves it out. */
-function wanted(input: EditShowInput, field: Field): string | boolean | null | undefined {
+function wanted(input: EditShowInput, field: Field): string | number | boolean | null | undefined {
   return field === 'name_pattern' && input.name_pattern !== undefined ? input.name_pattern || null : input[field];
 }
 
 function changes(show: Show, input: EditShowInput): ChangedField[] {
-  const text = (value: string | boolean | null) => (value === null ? null : String(value));
+  const text = (value: string | number | boolean | null) => (value === null ? null : String(value));
   const fields = (Object.keys(COLUMN) as Field[]).flatMap((field): ChangedField[] => {
     const after = wanted(input, field);
     const before = show[COLUMN[field]];

@@ -4,6 +4,8 @@ import { BOUNDARY_WORDS, PARTITION_WORDS, SCHEME_WORDS } from '../measure-words'
 import { checkNamePattern } from '../name-pattern';
 import { LINEAR_UNITS, UP_AXES } from '../units';
 
+const tolerance = z.number('Give a percentage, such as 0.5.').min(0, 'A tolerance is 0 or more.').max(100, 'A tolerance is at most 100 %.');
+
 /** Changes of a show: what is left out stays. An empty name pattern is the built-in one. */
 export const editShowInput = z
   .strictObject({
@@ -16,6 +18,10 @@ export const editShowInput = z
     parts_by: z.enum(PARTITION_WORDS).optional(),
     name_pattern: z.string().trim().max(500).nullish(),
     self_approval: z.boolean().optional(),
+    /** Percent of the mass, of the part's size for its centre of mass, and of the inertia. */
+    tolerance_mass_percent: tolerance.optional(),
+    tolerance_com_percent: tolerance.optional(),
+    tolerance_moments_percent: tolerance.optional(),
     archived: z.boolean().optional(),
   })
   .superRefine((input, check) => {
