@@ -1,10 +1,10 @@
 import { availableParallelism } from 'node:os';
-import { fileURLToPath } from 'node:url';
 import { MessageChannel } from 'node:worker_threads';
 import { Piscina } from 'piscina';
 import { config } from '@/lib/config';
 import type { MeasureOptions } from '@/lib/engine/measured';
 import type { MeasureOutcome, MeasureTask } from './engine-thread';
+import { threadFile } from './thread-file';
 
 /** What measures files beside the event loop, so that heartbeats go on during a long solve. */
 export interface EnginePool {
@@ -18,27 +18,28 @@ const isOutOfMemory = (error: unknown): boolean => error instanceof Error && 'co
 
 /** Starts threads on demand; they end when they are idle for a while. */
 export function startEnginePool(threads = config().engineThreads ?? availableParallelism()): EnginePool {
-  // Beside this module as source, beside the worker's bundle in production: the ending is the same as our own.
-  const extension = import.meta.url.endsWith('.ts') ? '.ts' : '.mjs';
   const pool = new Piscina<MeasureTask, MeasureOutcome>({
-    filename: fileURLToPath(new URL(`./engine-thread${extension}`, import.meta.url)),
+    ...threadFile('engine-thread'),
     minThreads: 0,
     maxThreads: threads,
     idleTimeout: 30_000,
-    execArgv: extension === '.ts' ? ['--import', 'tsx'] : [],
   });
+  let busy = 0;
   return {
     threads,
     async measure(file, onMeasuring) {
       const { port1, port2 } = new MessageChannel();
       port1.on('message', () => onMeasuring?.());
       port1.unref();
+      busy++;
       try {
-        return await pool.run({ ...file, port: port2 }, { transferList: [port2] });
+        // What other files leave idle may help with this one, should it be large.
+        return await pool.run({ ...file, idleThreads: Math.max(0, threads - busy), port: port2 }, { transferList: [port2] });
       } catch (error) {
         if (!isOutOfMemory(error)) throw error;
         return { ok: false, code: 'too_complex', message: 'the file needs more memory than a measuring thread may have', line: null, column: null, excerpt: null };
       } finally {
+        busy--;
         port1.close();
       }
     },

@@ -4,11 +4,14 @@ import type { MeasuredCage, MeasureOptions } from '@/lib/engine/measured';
 import { MeshError } from '@/lib/formats/mesh-error';
 import { readCage } from '@/lib/imports/cage-formats';
 import { readBlob } from '@/lib/storage/read-blob';
+import { LARGE_CAGE_FACES, withPatchHelpers } from './with-patch-helpers';
 
 export interface MeasureTask {
   name: string;
   sha256: string;
   options: MeasureOptions;
+  /** Threads that nothing else was using when the task was given. */
+  idleThreads: number;
   /** Told `measuring` once the file is read. */
   port: MessagePort | null;
 }

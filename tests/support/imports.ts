@@ -12,7 +12,7 @@ import { putImportFileInput } from '@/lib/rules/inputs/put-import-file';
 import { parseInput } from '@/lib/rules/parse-input';
 
 /** The engine in the test's own thread. */
-export const ownThread: JobTools['engine'] = { measure: (file) => measureFile({ ...file, port: null }) };
+export const ownThread: JobTools['engine'] = { measure: (file) => measureFile({ ...file, idleThreads: 0, port: null }) };
 
 export interface SentFile {
   text: string;

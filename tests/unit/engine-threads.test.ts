@@ -4,6 +4,7 @@ import { setPatchTeam } from '@/lib/engine/kernel/patch-block';
 import { dismissTeam, teamKernels, teamMemory } from '@/lib/engine/kernel/patch-team';
 import { measureCage } from '@/lib/engine/measure';
 import type { MeasuredCage } from '@/lib/engine/measured';
+import { withPatchHelpers } from '@/lib/jobs/with-patch-helpers';
 import { startHelper } from '../support/patch-helper';
 import { cageOf } from '../support/put-cage';
 
@@ -41,4 +42,11 @@ test('one, two and three threads give the same bits as none beside', async () =>
     dismissTeam(memory);
     await Promise.all(workers.map((worker) => worker.terminate()));
   }
+}, 120_000);
+
+test('a measuring thread gives the same bits with threads that join while it works and with none', () => {
+  const cage = tube(180, 110);
+  const alone = measure(cage);
+  expect(withPatchHelpers(0, () => measure(cage))).toEqual(alone);
+  expect(withPatchHelpers(2, () => [1, 2, 3, 4].map(() => measure(cage)))).toEqual([alone, alone, alone, alone]);
 }, 120_000);
