@@ -7,7 +7,7 @@ import { cn } from '@/components/ui/cn';
 import { Figure } from '@/components/ui/figure';
 import { useElementWidth } from '@/hooks/use-element-width';
 import { useVirtualRows } from '@/hooks/use-virtual-rows';
-import { LOUD_REMARKS, REMARKS, type ImportFileAnswer, type Remark } from '@/lib/rules/import-answer';
+import { doubtsUnit, LOUD_REMARKS, REMARKS, type ImportFileAnswer } from '@/lib/rules/import-answer';
 import { placeWords } from '@/lib/rules/import-note';
 import { versionLabel, type PlannedFile } from '@/lib/rules/import-plan';
 import { FilePath } from './file-path';
@@ -147,11 +147,9 @@ function VersionWords({ file, plan }: Pick<FileProps, 'file' | 'plan'>) {
   return <span className="text-ink-3">{versionLabel(plan.version, 1)}</span>;
 }
 
-const isUnitRemark = (remark: Remark): boolean => remark === 'unit_too_large' || remark === 'unit_too_small';
-
 function Size({ file, upAxis }: { file: ImportFileAnswer; upAxis: 'y' | 'z' }) {
   if (!file.size_m) return null;
-  const wrong = file.remarks.some(isUnitRemark);
+  const wrong = file.remarks.some(doubtsUnit);
   return (
     <span className="flex items-center gap-2">
       <SizeFigure size={file.size_m} upAxis={upAxis} wrong={wrong} />
@@ -175,7 +173,7 @@ function ToKnow({ file }: { file: ImportFileAnswer }) {
   const remarks = file.remarks.filter((remark) => remark !== 'unchanged');
   if (remarks.length === 0) return null;
   const isLoud = remarks.some((remark) => LOUD_REMARKS.includes(remark));
-  const isWrong = remarks.some(isUnitRemark);
+  const isWrong = remarks.some(doubtsUnit);
   const text = [...remarks].sort((a, b) => Number(LOUD_REMARKS.includes(b)) - Number(LOUD_REMARKS.includes(a))).map((remark) => REMARKS[remark]).join(' ');
   return (
     <p className={cn('flex items-start gap-1.5 text-13', isWrong ? 'text-wrong' : isLoud ? 'text-ink' : 'text-ink-2')} title={text}>

@@ -1,4 +1,4 @@
-import { and, asc, eq } from 'drizzle-orm';
+import { and, eq } from 'drizzle-orm';
 import type { Executor, Transaction } from '@/db/client';
 import { findings } from '@/db/schema/findings';
 import { geometryComponents } from '@/db/schema/geometry-components';
@@ -114,13 +114,8 @@ async function writeComponents(tx: Transaction, cage: MeasuredCage, partIds: Rea
   await inChunks(rows, (chunk) => tx.insert(geometryComponents).values(chunk));
 }
 
-/** What an import says of a record: its parts, how many findings block, and the whole asset's box in file units. */
-export async function summariseRecord(db: Executor, recordId: string): Promise<{ parts: number; problems: number; size: [number, number, number] | null }> {
-  const parts = await db.select().from(geometryParts).where(eq(geometryParts.recordId, recordId)).orderBy(asc(geometryParts.ordinal));
-  const blocking = await db.$count(findings, and(eq(findings.recordId, recordId), eq(findings.severity, 'problem')));
-  const measured = parts.filter((part) => part.maxX > part.minX || part.maxY > part.minY || part.maxZ > part.minZ);
-  if (measured.length === 0) return { parts: parts.length, problems: blocking, size: null };
-  const extent = (low: 'minX' | 'minY' | 'minZ', high: 'maxX' | 'maxY' | 'maxZ') =>
-    Math.max(...measured.map((part) => part[high])) - Math.min(...measured.map((part) => part[low]));
-  return { parts: parts.length, problems: blocking, size: [extent('minX', 'maxX'), extent('minY', 'maxY'), extent('minZ', 'maxZ')] };
+/** What an import says of a record: its parts, and how many findings block. */
+export async function summariseRecord(db: Executor, recordId: string): Promise<{ parts: number; problems: number }> {
+  const parts = await db.$count(geometryParts, eq(geometryParts.recordId, recordId));
+  return { parts, problems: await db.$count(findings, and(eq(findings.recordId, recordId), eq(findings.severity, 'problem'))) };
 }

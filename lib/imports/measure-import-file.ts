@@ -1,20 +1,18 @@
 import { randomUUID } from 'node:crypto';
-import { eq } from 'drizzle-orm';
 import type { Database, Transaction } from '@/db/client';
-import { shows } from '@/db/schema/shows';
 import type { Actor } from '@/lib/context';
 import type { MeasuredCage, MeasureOptions } from '@/lib/engine/measured';
 import { recordEvent } from '@/lib/history/record-event';
 import type { EnginePool } from '@/lib/jobs/engine-pool';
 import { log } from '@/lib/log';
-import { LARGEST_ASSET_M, SMALLEST_ASSET_M, type ImportFileError, type Remark } from '@/lib/rules/import-answer';
+import type { ImportFileError } from '@/lib/rules/import-answer';
 import type { PlannedFile } from '@/lib/rules/import-plan';
-import { METRES_PER } from '@/lib/rules/units';
 import { refreshAssetValues } from '@/lib/values/refresh-asset-values';
 import { endFile, lockHeldFile } from './end-file';
 import { findGeometryRecord, summariseRecord, writeGeometryRecord } from './geometry-record';
 import type { ImportRow } from './get-import-row';
 import { markMeasuring, startFile } from './lease';
+import { unitRemarks } from './unit-remarks';
 import { writeVersion } from './write-version';
 
 /** A file that was begun this often and never ended is given up. */
@@ -74,20 +72,12 @@ async function endMeasured(
   const recordId = known ?? (await writeGeometryRecord(tx, key, cage!));
   const version = await writeVersion(tx, { showId, plan, outsideId: held.outsideIdOverride, recordId, ...key, importFileId: fileId, createdBy });
   const summary = await summariseRecord(tx, recordId);
-  const remarks = [...version.remarks, ...(await unitRemarks(tx, showId, summary.size))];
+  const remarks = [...version.remarks, ...(await unitRemarks(tx, { showId, assetId: version.assetId, recordId }))];
   if (version.changed) {
     await recordEvent(tx, { actor: work.actor, origin: 'import' }, { showId, act: 'import-version', subject: version.asset, items: [{ field: 'version', before: version.before, after: version.label }] });
     await refreshAssetValues(tx, { assetId: version.assetId, importedBy: createdBy });
   }
   await endFile(tx, held, { state: 'done', assetId: version.assetId, versionId: version.versionId, parts: summary.parts, problems: summary.problems, remark: remarks.join(' ') || null });
-}
-
-/** An asset far too small or large for what a show films was most likely written in another unit. */
-async function unitRemarks(tx: Transaction, showId: string, size: [number, number, number] | null): Promise<Remark[]> {
-  if (!size) return [];
-  const [show] = await tx.select({ unit: shows.linearUnit }).from(shows).where(eq(shows.id, showId));
-  const largest = Math.max(...size) * METRES_PER[show.unit];
-  return largest < SMALLEST_ASSET_M ? ['unit_too_small'] : largest > LARGEST_ASSET_M ? ['unit_too_large'] : [];
 }
 
 async function failFile(work: FileWork, fileId: string, error: ImportFileError): Promise<void> {

@@ -22,8 +22,8 @@ export async function openImport(context: Context, input: OpenImportInput): Prom
         triangles: input.triangles,
         creasing: input.creasing,
         partsBy: input.parts_by ?? show.partsBy,
-        weld: input.weld,
-        turnFaces: input.turn_faces,
+        weld: input.weld ?? false,
+        turnFaces: input.turn_faces ?? false,
         createdBy: known.actor.userId,
       })
       .returning();

@@ -11,11 +11,16 @@ export const REMARKS = {
   qualified: 'The same name came from another folder too, so the folder is part of the asset’s code.',
   unit_too_small: 'The whole asset measures less than 5 mm. The file’s unit does not look like the show’s.',
   unit_too_large: 'The whole asset measures more than 200 m. The file’s unit does not look like the show’s.',
+  unit_unlike_before: 'This version is larger or smaller than the one before by the ratio of two units. Export it in the show’s unit.',
+  unit_unlike_show: 'The whole asset is more than 50 times larger or smaller than the show’s assets usually are. Check the unit of the file.',
 } as const;
 export type Remark = keyof typeof REMARKS;
 
+/** Whether a remark doubts the unit that a file was written in. */
+export const doubtsUnit = (remark: Remark): boolean => remark.startsWith('unit_');
+
 /** Remarks that deserve a look; the others are for the record. */
-export const LOUD_REMARKS: readonly Remark[] = ['unit_too_small', 'unit_too_large', 'next_take', 'gap', 'qualified'];
+export const LOUD_REMARKS: readonly Remark[] = ['unit_too_small', 'unit_too_large', 'unit_unlike_before', 'unit_unlike_show', 'next_take', 'gap', 'qualified'];
 
 /** Largest dimension of an asset, metres, outside which its unit is doubted. */
 export const SMALLEST_ASSET_M = 0.005;

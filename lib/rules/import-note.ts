@@ -1,4 +1,4 @@
-import type { ImportFileAnswer } from './import-answer';
+import { doubtsUnit, type ImportFileAnswer } from './import-answer';
 
 /** Where an error sits, as people say it; empty where the whole file is meant. */
 export function placeWords(error: { line: number | null; column: number | null }): string {
@@ -10,7 +10,7 @@ export function placeWords(error: { line: number | null; column: number | null }
 export function noteToModelling(show: string, files: readonly ImportFileAnswer[], link: string): string {
   const failed = files.filter((file) => file.state === 'failed' && file.error?.code !== 'cancelled');
   const blocked = files.filter((file) => file.state === 'done' && (file.problems ?? 0) > 0);
-  const odd = files.filter((file) => file.state === 'done' && file.remarks.some((remark) => remark === 'unit_too_large' || remark === 'unit_too_small'));
+  const odd = files.filter((file) => file.state === 'done' && file.remarks.some(doubtsUnit));
   const paragraphs = [
     ...(failed.length > 0 ? [`These files could not be read:`] : []),
     ...failed.map((file) => {

@@ -160,3 +160,19 @@ test('every version has its act in the history, and a show is frozen by its firs
   const [show] = await asOwner<{ frozen_at: Date | null }>('select frozen_at from shows where id = $1', [cast.show.id]);
   expect(show.frozen_at).not.toBeNull();
 });
+
+test('a version that is unlike the one before by the ratio of two units is doubted, one that merely grew is not', async () => {
+  const cast = await createCast();
+  await bring(cast, { 'ox_v001.obj': cubeObj({ size: 200 }) });
+  const remarksOf = async (name: string, size: number) => (await bring(cast, { [name]: cubeObj({ size }) })).files[0].remarks;
+  expect(await remarksOf('ox_v002.obj', 300)).toEqual([]);
+  expect(await remarksOf('ox_v003.obj', 3)).toEqual(['unit_unlike_before']);
+  expect(await remarksOf('ox_v004.obj', 3 * 2.54)).toEqual(['unit_unlike_before']);
+});
+
+test('an asset far from what the show’s assets measure is doubted once there are some', async () => {
+  const cast = await createCast();
+  await bring(cast, Object.fromEntries(['a', 'b', 'c', 'd', 'e'].map((name, i) => [`${name}.obj`, cubeObj({ size: 100 + i })])));
+  const { files } = await bring(cast, { 'far.obj': cubeObj({ size: 8_000 }), 'near.obj': cubeObj({ size: 900 }) });
+  expect(files.map((file) => [file.name, file.remarks.filter((remark) => remark.startsWith('unit'))])).toEqual([['far.obj', ['unit_unlike_show']], ['near.obj', []]]);
+});

@@ -10,9 +10,9 @@ export const openImportInput = z.strictObject({
   triangles: z.enum(TRIANGLE_WORDS, `triangles is one of ${TRIANGLE_WORDS.join(', ')}.`).optional(),
   creasing: z.enum(CREASING_WORDS, `creasing is one of ${CREASING_WORDS.join(', ')}.`).optional(),
   parts_by: z.enum(PARTITION_WORDS, `parts_by is one of ${PARTITION_WORDS.join(', ')}.`).optional(),
-  /** Join vertices on open borders that lie on each other. */
-  weld: z.boolean('weld is true or false.').default(false),
-  /** Turn faces one way and outwards. */
-  turn_faces: z.boolean('turn_faces is true or false.').default(false),
+  /** Join vertices on open borders that lie on each other; not unless true. */
+  weld: z.boolean('weld is true or false.').optional(),
+  /** Turn faces one way and outwards; not unless true. */
+  turn_faces: z.boolean('turn_faces is true or false.').optional(),
 });
 export type OpenImportInput = z.infer<typeof openImportInput>;
