@@ -7,7 +7,7 @@ import { splitMatrix } from './split-net';
 export const AREA_NODES: Readonly<Record<PatchKind, readonly [fine: number, coarse: number]>> = { bicubic: [7, 4], biquadratic: [7, 4], triangle: [9, 6] };
 
 /** Part of a patch's area that its error may be; beyond it the patch is quartered. */
-export const AREA_TOLERANCE = 1e-12;
+export const AREA_TOLERANCE = 1e-11;
 
 const MOST_QUARTERINGS = 10;
 /** Share of a patch's difference that its quarters must take off it for more quartering to be worth while; a spoilt rule gains nothing. */

@@ -135,6 +135,7 @@ class FanBatch {
     this.check.fill(0);
     this.worst = 0;
     this.worstError = 0;
+    this.areaScale = 0;
     this.load();
     this.addRims();
     const levels = Math.max(table.weights.length, table.surfaceWeights.length);
@@ -165,6 +166,7 @@ class FanBatch {
     this.setScales(sums);
     this.rough = !this.compare(0, nodes, nodes - FIRST_SAVING);
     this.worstError = 0;
+    if (this.rough) this.areaScale = 0;
     return !this.rough;
   }
 
@@ -218,12 +220,14 @@ class FanBatch {
     const area = block.output[block.resultAt(place) + 2 * MOMENTS];
     const coarseArea = block.coarseArea(place);
     let error = areaError(area, coarseArea);
-    if (error > AREA_TOLERANCE * area) {
+    // Small patches of later levels need no more than those of the first.
+    const tolerance = AREA_TOLERANCE * Math.max(area, this.areaScale / (this.count * this.patches));
+    if (error > tolerance) {
       const to = SUMMED_RESULTS * Math.floor(patch / this.patches) + MOMENTS;
       block.net(place, this.net);
       block.read(place, solid, surface);
       for (let m = 0; m < MOMENTS; m++) sums[to + m] -= surface[m];
-      error = mendSurface(this.kit.rule.kind, this.net, 0, 0, 0, surface, coarseArea);
+      error = mendSurface(this.kit.rule.kind, this.net, 0, 0, 0, surface, coarseArea, tolerance);
       for (let m = 0; m < MOMENTS; m++) sums[to + m] += surface[m];
     }
     this.sums.surfaceError[this.body] += weight * error;

@@ -11,7 +11,7 @@ const TAIL_DIGITS = 14;
 const WIDE_DIGITS = 15;
 
 /** Digits to which the surface moments are summed. */
-const SURFACE_DIGITS = 12;
+const SURFACE_DIGITS = 11;
 
 /** Closing weights of one kind of fan. `check` are those of one level less, whose difference bounds the closing's error. */
 export interface FanTable {
@@ -63,21 +63,32 @@ function makeTable(kit: FanKit, fan: FanState): FanTable {
   const wideLevels = tailLevels(area, WIDE_DIGITS);
   const curve = Math.max(lambda, 0.5) ** 2;
   const pairs = tailWeights(curve, tailLevels(curve, WIDE_DIGITS));
-  // Around a smooth point the area's terms are as good as powers. Along creases and at corners two eigenvalues lie close together and the root
-  // mixes them without end: there the levels are summed until the rest, a geometric one by then, no longer counts.
-  const surfaceLevels = isPlain(fan) ? tailLevels(area, SURFACE_DIGITS) : Math.ceil(-SURFACE_DIGITS / Math.log10(area));
-  const surfaceWeights = isPlain(fan) ? tailWeights : geometricWeights;
+  const surface = isPlain(fan) ? smoothSurface(area, Math.min(area, lambda * (found[2] / found[1]))) : geometricSurface(area);
   return {
     weights: tailWeights(volume, levels),
     check: tailWeights(volume, levels - 1),
     wideWeights: tailWeights(area, wideLevels),
     wideCheck: tailWeights(area, wideLevels - 1),
-    surfaceWeights: surfaceWeights(area, surfaceLevels),
-    surfaceCheck: surfaceWeights(area, surfaceLevels - 1),
+    ...surface,
     curveWeights: Float64Array.from({ length: 2 * pairs.length }, (_, k) => pairs[k >> 1]),
     operator,
     rim: makeFanRim(kit, fan, operator.points),
   };
+}
+
+/** Around a smooth point the area's terms are as good as powers: the tangent plane's, `area`, and others that fall by `next`. */
+function smoothSurface(area: number, next: number): Pick<FanTable, 'surfaceWeights' | 'surfaceCheck'> {
+  const levels = 1 + tailLevels(next, SURFACE_DIGITS);
+  return { surfaceWeights: tailWeights(next, levels, area), surfaceCheck: tailWeights(next, levels - 1, area) };
+}
+
+/**
+ * Along creases and at corners two eigenvalues lie close together and the root mixes them without end: there the levels are summed until the rest,
+ * a geometric one by then, no longer counts.
+ */
+function geometricSurface(area: number): Pick<FanTable, 'surfaceWeights' | 'surfaceCheck'> {
+  const levels = Math.ceil(-SURFACE_DIGITS / Math.log10(area));
+  return { surfaceWeights: geometricWeights(area, levels), surfaceCheck: geometricWeights(area, levels - 1) };
 }
 
 function geometricWeights(ratio: number, levels: number): Float64Array {
