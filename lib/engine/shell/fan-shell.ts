@@ -19,7 +19,7 @@ const TOLERANCE_GROWTH = 1.7;
 const OTHER_FALL = 0.6;
 
 /** Levels whose curvature counts for the smallest radius: at an extraordinary point it may grow without end, over a vanishing area. */
-const CURVATURE_LEVELS = 3;
+const CURVATURE_LEVELS = 1;
 
 /** Gauss nodes on a stretch of the fan's rim, and of the rule it is compared with. */
 const IMAGE_NODES = 8;
