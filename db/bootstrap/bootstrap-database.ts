@@ -1,6 +1,7 @@
 import { Client, escapeIdentifier } from 'pg';
 import { migrateDatabase, type MigrationReport } from '@/db/migrate';
 import { grantToApplication } from './grants';
+import { guardAppendOnly } from './guards';
 import { readMarks } from './marks';
 import { prepareQueueSchema } from './queue-schema';
 import { ensureApplicationRole, roleOf } from './roles';
@@ -27,6 +28,7 @@ export async function bootstrapDatabase(ownerUrl: string, appUrl: string, folder
     await client.query('select pg_advisory_lock($1)', [BOOTSTRAP_LOCK]);
     const hasApplicationRole = await ensureApplicationRole(client, appUrl);
     const migrations = await migrateDatabase(client, folder);
+    await guardAppendOnly(client);
     const appRole = hasApplicationRole ? roleOf(appUrl).name : roleOf(ownerUrl).name;
     await prepareQueueSchema(client, appRole);
     if (hasApplicationRole && appRole !== roleOf(ownerUrl).name) {

@@ -8,6 +8,7 @@ import { installDependencies } from './support/dependencies.mjs';
 import { loadEnvironment } from './support/environment.mjs';
 import { inRoot } from './support/paths.mjs';
 import { postgresPrograms } from './support/postgres-programs.mjs';
+import { python } from './support/python.mjs';
 import { runMain } from './support/stop.mjs';
 import { playwrightCounts, vitestCounts } from './support/test-counts.mjs';
 
@@ -79,7 +80,7 @@ async function playwright(env) {
 async function test() {
   loadEnvironment();
   const env = testEnvironment();
-  await Promise.all([postgresPrograms().then(chromium), installDependencies()]);
+  await Promise.all([postgresPrograms().then(chromium).then(python), installDependencies()]);
   // Two lanes for two processors. The types are checked before the build, which writes into what the check reads.
   await Promise.all([
     step('type check', () => typecheck(env)).then(() => step('production build', () => build(env))),
