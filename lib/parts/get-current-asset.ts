@@ -12,17 +12,20 @@ export interface CurrentAsset {
   record: typeof geometryRecords.$inferSelect;
 }
 
-/** An asset of a show with its current version (highest number, then take) and that version's record; throws not_found. */
-export async function getCurrentAsset(db: Executor, showId: string, code: string): Promise<CurrentAsset> {
+/**
+ * An asset of a show with its current version (highest number, then take) and that version's record; throws not_found.
+ * @param label of another version to take in place of the current one
+ */
+export async function getCurrentAsset(db: Executor, showId: string, code: string, label?: string): Promise<CurrentAsset> {
   const [found] = await db
     .select({ asset: assets, version: assetVersions, record: geometryRecords })
     .from(assets)
     .innerJoin(assetVersions, eq(assetVersions.assetId, assets.id))
     .innerJoin(geometryRecords, eq(geometryRecords.id, assetVersions.recordId))
-    .where(and(eq(assets.showId, showId), eq(assets.code, code), isNull(assets.archivedAt)))
+    .where(and(eq(assets.showId, showId), eq(assets.code, code), isNull(assets.archivedAt), label === undefined ? undefined : eq(assetVersions.label, label)))
     .orderBy(desc(assetVersions.number), desc(assetVersions.take))
     .limit(1);
-  if (!found) throw new StudioError('not_found', `There is no asset ${code}.`);
+  if (!found) throw new StudioError('not_found', label === undefined ? `There is no asset ${code}.` : `${code} has no version ${label}.`);
   return found;
 }
 

@@ -10,9 +10,11 @@ import type { PartRefInput } from '@/lib/rules/inputs/part-ref';
 import type { DetailFinding, PartDetail, PartSetting, PartVersion } from '@/lib/rules/part-detail';
 import { StudioError } from '@/lib/rules/studio-error';
 import { METRES_PER } from '@/lib/rules/units';
+import { findSlots } from '@/lib/shots/find-slots';
 import { getShowAccess } from '@/lib/shows/get-show-access';
 import { findStoredFindings } from './find-stored-findings';
 import { getCurrentAsset, measuredAs } from './get-current-asset';
+import { lockCounts } from './lock-counts';
 import { findingsOfRow } from './part-rows-with-findings';
 import { ROW_COLUMNS, type StoredRow } from './row-columns';
 import { toPartRow } from './to-part-row';
@@ -36,10 +38,11 @@ export async function getPart(context: Context, input: PartRefInput): Promise<Pa
     ? await db.select({ area: geometryParts.capAreaShare, volume: geometryParts.capVolumeShare }).from(geometryParts).where(eq(geometryParts.id, stored.geometry_part_id))
     : [];
   return {
-    row: toPartRow(show.code, stored, found),
+    row: toPartRow(show.code, stored, found, (await lockCounts(db, [stored.part_id])).get(stored.part_id)),
     findings,
     versions: await partVersions(db, asset.id, stored.part, METRES_PER[show.linearUnit] * asset.scale),
     settings: await partSettings(db, stored.part_id),
+    shots: await findSlots(db, show, { partId: stored.part_id }),
     measured_as: measuredAs(record),
     cap_area_share: caps?.area ?? 0,
     cap_volume_share: caps?.volume ?? 0,

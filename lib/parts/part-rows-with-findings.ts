@@ -2,6 +2,7 @@ import { sql } from 'drizzle-orm';
 import type { Executor } from '@/db/client';
 import type { PartRow, RowFinding } from '@/lib/rules/part-row';
 import { NO_PROBLEM_OF_A_SHEET } from '@/lib/values/compute-value';
+import { lockCounts } from './lock-counts';
 import type { StoredRow } from './row-columns';
 import { toPartRow } from './to-part-row';
 
@@ -11,7 +12,7 @@ interface FoundFinding extends RowFinding, Record<string, unknown> {
 
 const SEVERITY_ORDER: Record<RowFinding['severity'], number> = { problem: 0, warning: 1, note: 2 };
 
-/** Rows as the API answers them, each with the findings of its geometry and of its setting, problems first. One query for all. */
+/** Rows as the API answers them, each with the findings of its geometry and of its setting, problems first, and with its locks. Two queries for all. */
 export async function partRowsWithFindings(db: Executor, show: string, rows: readonly StoredRow[]): Promise<PartRow[]> {
   if (rows.length === 0) return [];
   const { rows: found } = await db.execute<FoundFinding>(sql`
@@ -27,7 +28,8 @@ export async function partRowsWithFindings(db: Executor, show: string, rows: rea
     if (list) list.push({ code, severity, message, count });
     else byPart.set(partId, [{ code, severity, message, count }]);
   }
-  return rows.map((row) => toPartRow(show, row, findingsOfRow(row, byPart.get(row.part_id) ?? [])));
+  const locks = await lockCounts(db, rows.map((row) => row.part_id));
+  return rows.map((row) => toPartRow(show, row, findingsOfRow(row, byPart.get(row.part_id) ?? []), locks.get(row.part_id)));
 }
 
 /** What is a problem of a solid may be a plain fact about a sheet: then it is a note. */

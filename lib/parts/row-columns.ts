@@ -3,7 +3,7 @@ import type { ValueFinding } from '@/db/schema/part-current';
 import type { PartRow } from '@/lib/rules/part-row';
 
 /** A row of part_current under the names of the API, as the driver reads it: no mapping in between, since pages are long and rows wide. */
-export interface StoredRow extends Omit<PartRow, 'schema' | 'show' | 'sequence' | 'shot' | 'copy' | 'reason' | 'locked_at' | 'problems' | 'part' | 'part_id' | 'bounds_m'>, Record<string, unknown> {
+export interface StoredRow extends Omit<PartRow, 'schema' | 'show' | 'sequence' | 'shot' | 'copy' | 'reason' | 'locked_at' | 'problems' | 'part' | 'part_id' | 'bounds_m' | 'locked_in' | 'outdated_in'>, Record<string, unknown> {
   part_id: string;
   asset_id: string;
   geometry_part_id: string | null;

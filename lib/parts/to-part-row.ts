@@ -1,9 +1,10 @@
 import { CSV_SCHEMA } from '@/lib/rules/csv-columns';
 import type { PartRow, RowFinding } from '@/lib/rules/part-row';
+import { NO_LOCKS, type LockCounts } from './lock-counts';
 import type { StoredRow } from './row-columns';
 
 /** A stored row as the API answers it. What is not given is null. */
-export function toPartRow(show: string, row: StoredRow, problems: RowFinding[]): PartRow {
+export function toPartRow(show: string, row: StoredRow, problems: RowFinding[], locks: LockCounts = NO_LOCKS): PartRow {
   return {
     schema: CSV_SCHEMA,
     show,
@@ -67,6 +68,7 @@ export function toPartRow(show: string, row: StoredRow, problems: RowFinding[]):
     cage_volume_m3: row.cage_volume_m3,
     faces: row.faces,
     max_valence: row.max_valence,
+    ...locks,
   };
 }
 

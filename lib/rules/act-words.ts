@@ -15,6 +15,12 @@ const ACT_WORDS: Record<string, string> = {
   'approve-values': 'approved',
   'carry-over': 'carried approvals over',
   'withdraw-approvals': 'took approvals back',
+  'put-shots': 'put into shots',
+  'remove-from-shot': 'took out of a shot',
+  'lock-values': 'locked',
+  'unlock-values': 'unlocked',
+  'draft-override': 'drafted an override',
+  'drop-override': 'dropped an override',
   'add-material': 'added a material',
   'edit-material': 'changed a material',
 };

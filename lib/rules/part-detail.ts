@@ -1,4 +1,5 @@
 import type { AssetTotal, PartRow, RowFinding } from './part-row';
+import type { ShotSlot } from './shot-detail';
 import type { Construction, Origin } from './states';
 
 /** Where a finding sits in the cage. Faces, edges and vertices count from 0, lines of the file from 1; positions in file units. */
@@ -66,6 +67,8 @@ export interface PartDetail {
   findings: DetailFinding[];
   versions: PartVersion[];
   settings: PartSetting[];
+  /** The shots that the part is in. */
+  shots: ShotSlot[];
   measured_as: MeasuredAs;
   /** Shares of the closed part's area and volume that are caps over its borders and holes. */
   cap_area_share: number;

@@ -80,6 +80,9 @@ export interface PartRow {
   cage_volume_m3: number | null;
   faces: number;
   max_valence: number;
+  /** Shots that have the part locked, and how many of these are out of date. */
+  locked_in: number;
+  outdated_in: number;
 }
 
 /** Totals of an asset over its parts that have a mass, combined by the parallel-axis theorem; SI, asset axes. */

@@ -65,6 +65,8 @@ export function makePartRow(different: Partial<PartRow>): PartRow {
     cage_volume_m3: 2.2,
     faces: 6,
     max_valence: 3,
+    locked_in: 0,
+    outdated_in: 0,
     ...different,
   };
 }

@@ -1,0 +1,71 @@
+import { sql, type SQL } from 'drizzle-orm';
+import { z } from 'zod';
+import { requireActor } from '@/lib/auth/require-actor';
+import type { Context } from '@/lib/context';
+import type { ListShotsInput, ShotFilter } from '@/lib/rules/inputs/list-shots';
+import type { AssetInShot, ShotPage } from '@/lib/rules/shot-detail';
+import { shotVerdict } from '@/lib/rules/shot-words';
+import { StudioError } from '@/lib/rules/studio-error';
+import { getShowAccess } from '@/lib/shows/get-show-access';
+import { shotFilter } from './shot-filter';
+import { shotStanding } from './shot-standing';
+
+interface FoundShot extends Record<string, unknown> {
+  code: string;
+  sequence: string;
+  title: string | null;
+  assets: AssetInShot[] | null;
+  locked: number;
+  missing: number;
+  outdated: number;
+  overrides: number;
+}
+
+const IN_STATE: Record<ShotFilter, SQL> = {
+  missing: sql`t.missing > 0`,
+  outdated: sql`t.outdated > 0`,
+  complete: sql`t.missing = 0 and t.outdated = 0 and t.locked > 0`,
+};
+
+const ORDER = sql`s.sequence collate "C", s.code collate "C"`;
+
+/**
+ * A page of a show's shots by sequence and code, each with its assets and what is locked, missing and out of date. One query.
+ * Without a state to look for, only the page's own shots are counted.
+ * Errors: not_found for outsiders and guests, bad_input naming the field for what the query cannot say.
+ */
+export async function listShots(context: Context, input: ListShotsInput): Promise<ShotPage> {
+  const { db, actor } = requireActor(context);
+  const { show } = await getShowAccess(db, actor, input.show, 'readShow');
+  const cursor = input.cursor === undefined ? null : decodeCursor(input.cursor);
+  const behind = cursor === null ? sql`true` : sql`(s.sequence collate "C", s.code collate "C") > (${cursor[0]}::text collate "C", ${cursor[1]}::text collate "C")`;
+  const wanted = sql`${shotFilter(show.id, input)} and ${behind}`;
+  const limit = sql`limit ${input.limit + 1}`;
+  const { rows } = await db.execute<FoundShot>(sql`
+    with chosen as materialized (select s.id, s.code, s.sequence, s.title from shots s where ${wanted} order by ${ORDER} ${input.state === undefined ? limit : sql``}),
+      standing as materialized (${shotStanding(show.id, sql`select id from chosen`)})
+    select s.code, s.sequence, s.title, t.assets, coalesce(t.locked, 0) as locked, coalesce(t.missing, 0) as missing, coalesce(t.outdated, 0) as outdated, coalesce(t.overrides, 0) as overrides
+    from chosen s left join standing t on t.shot_id = s.id
+    where ${input.state === undefined ? sql`true` : IN_STATE[input.state]}
+    order by ${ORDER} ${limit}`);
+  const page = rows.slice(0, input.limit);
+  const last = page.at(-1);
+  return {
+    items: page.map(({ code, sequence, title, assets, locked, missing, outdated, overrides }) => ({ code, sequence, title, assets: assets ?? [], locked, missing, outdated, overrides, verdict: shotVerdict({ locked, missing, outdated }) })),
+    next_cursor: rows.length > input.limit && last ? encodeCursor(last) : null,
+  };
+}
+
+const cursorShape = z.tuple([z.string(), z.string()]);
+
+function encodeCursor({ sequence, code }: { sequence: string; code: string }): string {
+  return Buffer.from(JSON.stringify([sequence, code])).toString('base64url');
+}
+
+function decodeCursor(text: string): [sequence: string, code: string] {
+  try {
+    return cursorShape.parse(JSON.parse(Buffer.from(text, 'base64url').toString('utf8')));
+  } catch {
+    throw new StudioError('bad_input', 'cursor: This is no cursor of this list.', { field: 'cursor' });
+  }
+}
