@@ -26,7 +26,8 @@ export default async function measureFile(task: MeasureTask): Promise<MeasureOut
   try {
     const cage = await readCage(task.name, await readBlob(task.sha256));
     task.port?.postMessage('measuring');
-    const measured = measureCage(cage, { ...task.options, shells: true });
+    const isLarge = cage.faceStarts.length > LARGE_CAGE_FACES;
+    const measured = withPatchHelpers(isLarge ? task.idleThreads : 0, () => measureCage(cage, { ...task.options, shells: true }));
     const notes = cage.warnings.map((warning) => ({
       code: warning.code,
       severity: 'note' as const,
