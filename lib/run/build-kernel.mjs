@@ -15,7 +15,7 @@ function nodeLoops(dialect, shape, node, point, integer) {
   for (let i${integer} = 0; i < ${shape.alongCount}; i++) {
 ${write(shape.line(point), 2)}
     for (let j${integer} = 0; j < half; j++) {
-${write([...shape.pair(point), ...side('l', '+', point), ...node('l'), ...side('r', '-', point), ...node('r')], 3)}
+${write([...shape.pair(point), ...side('l', '+', point), ...side('r', '-', point), ...node('l', 'r')], 3)}
     }
     if ((count & 1) === 1) {
 ${write([...middle(point), ...node('m')], 3)}

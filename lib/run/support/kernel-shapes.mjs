@@ -133,22 +133,29 @@ const normal = (t) => [
   `let nx${t} = yu${t} * zv${t} - zu${t} * yv${t}`, `let ny${t} = zu${t} * xv${t} - xu${t} * zv${t}`, `let nz${t} = xu${t} * yv${t} - yu${t} * xv${t}`,
 ];
 
-/** One node: everything into the sums. */
-export const moments = (t) => [
+const products = (t) => [
   ...normal(t),
   ...AXES.map((axis) => `let p${axis}${t} = ${axis}${t} * n${axis}${t}`),
   `let d${t} = w * (px${t} + py${t} + pz${t})`,
-  `magnitude += w * (abs(px${t}) + abs(py${t}) + abs(pz${t}))`,
   `let a${t} = w * sqrt(nx${t} * nx${t} + ny${t} * ny${t} + nz${t} * nz${t})`,
-  ...[['m', 'd'], ['s', 'a']].flatMap(([sum, weight]) => [
-    ...AXES.map((axis) => `let ${weight}${axis}${t} = ${weight}${t} * ${axis}${t}`),
-    ...SUMS.map((name) => {
-      if (name.length === 0) return `${sum} += ${weight}${t}`;
-      if (name.length === 1) return `${sum}${name} += ${weight}${name}${t}`;
-      return `${sum}${name} += ${weight}${name[0]}${t} * ${name[1]}${t}`;
-    }),
-  ]),
+  ...['d', 'a'].flatMap((weight) => AXES.map((axis) => `let ${weight}${axis}${t} = ${weight}${t} * ${axis}${t}`)),
 ];
 
-/** One node: its area. */
-export const area = (t) => [...normal(t), `s += w * sqrt(nx${t} * nx${t} + ny${t} * ny${t} + nz${t} * nz${t})`];
+/** One node or the two of a pair, named by their tags: everything into the sums, once for both, since there are more sums than a processor has registers. */
+export const moments = (...tags) => {
+  const both = (write) => tags.map(write).join(' + ');
+  return [
+    ...tags.flatMap(products),
+    `magnitude += w * (${both((t) => `abs(px${t}) + abs(py${t}) + abs(pz${t})`)})`,
+    ...[['m', 'd'], ['s', 'a']].flatMap(([sum, weight]) => SUMS.map((name) => {
+      if (name.length < 2) return `${sum}${name} += (${both((t) => `${weight}${name}${t}`)})`;
+      return `${sum}${name} += (${both((t) => `${weight}${name[0]}${t} * ${name[1]}${t}`)})`;
+    })),
+  ];
+};
+
+/** The same for the area alone. */
+export const area = (...tags) => [
+  ...tags.flatMap(normal),
+  `s += w * (${tags.map((t) => `sqrt(nx${t} * nx${t} + ny${t} * ny${t} + nz${t} * nz${t})`).join(' + ')})`,
+];
