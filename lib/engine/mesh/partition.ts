@@ -87,12 +87,12 @@ export function partitionFaces(cage: Cage, mesh: Topology, by: Partition): Bodie
   const { of: bodyOf, count: bodies } = by === 'piece' || partNames.length < 2 ? pieces : floodFaces(mesh, partOf);
   const partOfBody = new Int32Array(bodies);
   for (let face = 0; face < mesh.faces; face++) partOfBody[bodyOf[face]] = partOf[face];
-  return { partNames, partOf, bodyOf, bodies, partOfBody, pieceOf: pieces.of, pieces: pieces.count, borders: findBorderEdges(mesh, bodyOf) };
+  return { partNames, partOf, bodyOf, bodies, partOfBody, pieceOf: pieces.of, pieces: pieces.count, borders: findBorderEdges(mesh, bodyOf === pieces.of ? null : bodyOf) };
 }
 
-/** The half-edges across whose edge another group of faces, or nothing, lies; ascending. */
-export function findBorderEdges({ twin, faceOf }: Topology, groupOf: Int32Array): Int32Array {
+/** The half-edges across whose edge another group of faces, or nothing, lies; ascending. Without groups only those with nothing. */
+export function findBorderEdges({ twin, faceOf }: Topology, groupOf: Int32Array | null): Int32Array {
   const found: number[] = [];
-  for (let h = 0; h < twin.length; h++) if (twin[h] < 0 || groupOf[faceOf[twin[h]]] !== groupOf[faceOf[h]]) found.push(h);
+  for (let h = 0; h < twin.length; h++) if (twin[h] < 0 || (groupOf !== null && groupOf[faceOf[twin[h]]] !== groupOf[faceOf[h]])) found.push(h);
   return Int32Array.from(found);
 }
