@@ -4,7 +4,7 @@ import { applyRows } from '../schemes/sparse-rows';
 import { splitMatrix } from './split-net';
 
 /** Gauss nodes a direction by which a patch's surface is measured, and of the rule whose area the finer one's is compared with. */
-export const AREA_NODES: Readonly<Record<PatchKind, readonly [fine: number, coarse: number]>> = { bicubic: [7, 4], biquadratic: [7, 4], triangle: [9, 6] };
+export const AREA_NODES: Readonly<Record<PatchKind, readonly [fine: number, coarse: number]>> = { bicubic: [7, 4], biquadratic: [7, 4], triangle: [9, 5] };
 
 /** Part of a patch's area that its error may be; beyond it the patch is quartered. */
 export const AREA_TOLERANCE = 1e-11;
