@@ -50,14 +50,14 @@ export function packPoints(points: FanPoints, fan: FanState, shift: Float64Array
 }
 
 /**
- * Calls `use` with unit vectors, three at a time: point `first` moved by `unit` along x, the next along y, the one after along z; `fan` is clear again afterwards.
+ * Calls `visit` with unit vectors, three at a time: point `first` moved by `unit` along x, the next along y, the one after along z; `fan` is clear again afterwards.
  * What a linear map makes of x, y and z are then its factors of three points.
  */
-export function forUnitVectors(points: FanPoints, fan: FanState, use: (first: number) => void): void {
+export function forUnitVectors(points: FanPoints, fan: FanState, visit: (first: number) => void): void {
   for (let first = 0; first < points.count; first += 3) {
     for (const value of [1, 0]) {
       for (let axis = 0; axis < 3 && first + axis < points.count; axis++) pointArray(points, fan, first + axis)[points.offsets[first + axis] + axis] = value;
-      if (value === 1) use(first);
+      if (value === 1) visit(first);
     }
   }
 }
