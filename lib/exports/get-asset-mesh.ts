@@ -6,7 +6,7 @@ import type { Context } from '@/lib/context';
 import { fileStream } from '@/lib/http/file-stream';
 import { matchesEtag } from '@/lib/http/matches-etag';
 import { getCurrentAsset } from '@/lib/parts/get-current-asset';
-import type { AssetRefInput } from '@/lib/rules/inputs/part-ref';
+import type { AssetMeshInput } from '@/lib/rules/inputs/part-ref';
 import { StudioError } from '@/lib/rules/studio-error';
 import { METRES_PER } from '@/lib/rules/units';
 import { getShowAccess } from '@/lib/shows/get-show-access';
@@ -23,11 +23,11 @@ function displayLevel(faces: number): number {
   return faces <= 3_000 ? 3 : faces <= 12_000 ? 2 : faces <= 100_000 ? 1 : 0;
 }
 
-/** The display mesh of an asset's current version as GLB (see assetGlb), made on first view. Strong ETag, 304 for who has it. */
-export async function getAssetMesh(context: Context, input: AssetRefInput, request: Request): Promise<Response> {
+/** The display mesh of an asset's version, the current one unless another is named, as GLB (see assetGlb), made on first view. Strong ETag, 304 for who has it. */
+export async function getAssetMesh(context: Context, input: AssetMeshInput, request: Request): Promise<Response> {
   const { db, actor } = requireActor(context);
   const { show } = await getShowAccess(db, actor, input.show, 'readShow');
-  const { asset, version, record } = await getCurrentAsset(db, show.id, input.asset);
+  const { asset, version, record } = await getCurrentAsset(db, show.id, input.asset, input.version);
   const [file] = version.importFileId ? await db.select({ name: importFiles.name }).from(importFiles).where(eq(importFiles.id, version.importFileId)) : [];
   if (!file) throw new StudioError('not_found', `The cage of ${asset.code} ${version.label} is not in storage.`);
   const { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces, contentSha256: sha256 } = record;

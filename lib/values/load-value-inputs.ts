@@ -84,13 +84,15 @@ interface HeadRow {
 /**
  * The named parts (or all parts) of the assets' current versions with geometry, newest setting and findings, in the order of asset and part.
  * A part that the current version does not have is not among them. Three queries, however many parts.
+ * @param versionIds other versions to take the geometry from, one an asset, in place of the current ones
  */
-export async function loadValueInputs(db: Executor, assetIds: string[], partIds: string[] | null): Promise<LoadedPart[]> {
+export async function loadValueInputs(db: Executor, assetIds: string[], partIds: string[] | null, versionIds: string[] | null = null): Promise<LoadedPart[]> {
+  const onlyVersions = versionIds === null ? sql`` : sql`and id = any(${sql.param(versionIds)}::uuid[])`;
   const onlyParts = partIds === null ? sql`` : sql`and p.id = any(${sql.param(partIds)}::uuid[])`;
   const { rows: heads } = await db.execute<HeadRow & Record<string, unknown>>(sql`
     with current as (
       select distinct on (asset_id) id, asset_id, label, record_id from asset_versions
-      where asset_id = any(${sql.param(assetIds)}::uuid[]) order by asset_id, number desc, take desc
+      where asset_id = any(${sql.param(assetIds)}::uuid[]) ${onlyVersions} order by asset_id, number desc, take desc
     )
     select p.id as part_id, a.show_id, a.id as asset_id, v.id as version_id, v.record_id, g.id as geometry_part_id,
       s.id as setting_id, c.revision, a.code as asset, a.outside_id, a.category, a.scale, v.label as version,

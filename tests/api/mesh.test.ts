@@ -24,9 +24,9 @@ async function putStoredCage(cast: Cast, asset: string, parts: TestPart[], scale
   await asOwner(
     `with i as (insert into imports (show_id, scheme, boundary, parts_by, created_by) values ($1, 'polyhedral', 'edge-and-corner', 'group', $2) returning id)
      insert into import_files (id, import_id, name, state, sha256, byte_size, ended_at) select $3, i.id, $4, 'done', $5, $6, now() from i`,
-    [cast.show.id, cast.people.td.id, fileId, `${asset}_v001.obj`, sha256, byteSize],
+    [cast.show.id, cast.people.td.id, fileId, `${asset}.obj`, sha256, byteSize],
   );
-  await asOwner('update asset_versions set import_file_id = $1 where asset_id = $2', [fileId, assetId]);
+  await asOwner('update asset_versions set import_file_id = $1 where asset_id = $2 and import_file_id is null', [fileId, assetId]);
 }
 
 async function createStored(): Promise<Cast> {
@@ -35,8 +35,8 @@ async function createStored(): Promise<Cast> {
   return cast;
 }
 
-const fetchMesh = (cast: Cast, headers: Record<string, string> = {}) => {
-  const url = new URL('http://127.0.0.1:3000/api/v1/test');
+const fetchMesh = (cast: Cast, headers: Record<string, string> = {}, version?: string) => {
+  const url = new URL(`http://127.0.0.1:3000/api/v1/test${version ? `?version=${version}` : ''}`);
   return GET(new Request(url, { headers: { host: url.host, authorization: `Bearer ${cast.people.artist.token}`, ...headers } }), {
     params: Promise.resolve({ show: cast.show.code, asset: 'crate' }),
   });
@@ -79,6 +79,18 @@ describe('the display mesh', () => {
     await first.arrayBuffer();
     const again = await fetchMesh(cast, { 'if-none-match': first.headers.get('etag') ?? '' });
     expect(again.status).toBe(304);
+  });
+
+  test('of an older version when it is named, and not found where there is no such version', async () => {
+    const cast = await createStored();
+    const first = await fetchMesh(cast);
+    const before = Buffer.from(await first.arrayBuffer());
+    await putStoredCage(cast, 'crate', [boxPart('body.L', [0, 0, 0], [20, 30, 50])], 2);
+    const now = Buffer.from(await (await fetchMesh(cast)).arrayBuffer());
+    expect(now.equals(before)).toBe(false);
+    expect(Buffer.from(await (await fetchMesh(cast, {}, 'v001')).arrayBuffer()).equals(before)).toBe(true);
+    expect(Buffer.from(await (await fetchMesh(cast, {}, 'v002')).arrayBuffer()).equals(now)).toBe(true);
+    expect((await fetchMesh(cast, {}, 'v003')).status).toBe(404);
   });
 
   test('an asset that is not there is not found', async () => {

@@ -1,5 +1,5 @@
 import { route } from '@/lib/endpoint';
 import { getAssetMesh } from '@/lib/exports/get-asset-mesh';
-import { assetRefInput } from '@/lib/rules/inputs/part-ref';
+import { assetMeshInput } from '@/lib/rules/inputs/part-ref';
 
-export const GET = route(assetRefInput, getAssetMesh);
+export const GET = route(assetMeshInput, getAssetMesh);
