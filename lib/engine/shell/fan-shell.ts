@@ -11,9 +11,9 @@ import { PAIRS, SHELL_TERMS, TERM_STARTS, type CurvaturePeak } from './shell-ter
 /** Digits to which the tail is closed. */
 const TAIL_DIGITS = 10;
 
-/** What a rule may err by at the first level, relatively; patches shrink, so that it may err by more from level to level. */
-const FIRST_TOLERANCE = 2e-9;
-const TOLERANCE_GROWTH = 1.7;
+/** What a rule may err by at the first level, relatively; terms fall from level to level, and it may err by more as fast, but for the weights' sake. */
+const FIRST_TOLERANCE = 1e-8;
+const GROWTH_SHARE = 0.9;
 
 /** Fans with a crease or corner have no closed formula for how their terms fall; this holds all but slow rests. */
 const OTHER_FALL = 0.6;
@@ -21,9 +21,9 @@ const OTHER_FALL = 0.6;
 /** Levels whose curvature counts for the smallest radius: at an extraordinary point it may grow without end, over a vanishing area. */
 const CURVATURE_LEVELS = 1;
 
-/** Gauss nodes on a stretch of the fan's rim, and of the rule it is compared with. */
-const IMAGE_NODES = 8;
-const COARSE_IMAGE_NODES = 6;
+/** Gauss nodes on a stretch of the fan's rim: one rule and the finer one that it is compared with, until they agree. */
+const IMAGE_NODES: readonly (readonly [number, number])[] = [[3, 4], [5, 7], [8, 10]];
+const IMAGE_TOLERANCE = 1e-8;
 
 const net = new Float64Array(48);
 
@@ -52,7 +52,7 @@ export function addFanShell(kit: ShellKit, mesh: LevelMesh, fans: Fans, index: n
   const rim: ImageSide[] = [];
   const whole = plain && bodies.every((body) => body === bodies[0]);
   let tolerance = FIRST_TOLERANCE;
-  for (let k = 0; k < levels; k++, tolerance *= TOLERANCE_GROWTH) {
+  for (let k = 0; k < levels; k++, tolerance *= GROWTH_SHARE / fall) {
     fan.refine(state, finer);
     [state, finer] = [finer, state];
     for (let j = 0; j < n; j++) {
@@ -62,34 +62,48 @@ export function addFanShell(kit: ShellKit, mesh: LevelMesh, fans: Fans, index: n
         kit.toPowers(net, powers);
         patch.fill(0);
         kit.add(powers, tolerance, patch, k < CURVATURE_LEVELS ? peaks[j] : unused, errors);
-        for (let i = 0; i < SHELL_TERMS; i++) {
-          sums[SHELL_TERMS * j + i] += weights[k] * patch[i];
-          if (k + 1 < levels) earlier[SHELL_TERMS * j + i] += check[k] * patch[i];
-        }
+        addWeighted(sums, j, weights[k], patch);
+        if (k + 1 < levels) addWeighted(earlier, j, check[k], patch);
         if (k === 0 && whole) for (const [c, side] of kit.outerSides) if (c === child) rim.push(imageSide(kit, powers.slice(), side));
       }
       for (let i = 0; i < 3; i++) shells[bodies[j]].errors[i] += Math.abs(weights[k]) * errors[i];
     }
   }
-  const image = whole ? gaussImage(rim, IMAGE_NODES) : null;
-  const coarse = image === null ? null : gaussImage(rim, COARSE_IMAGE_NODES);
-  if (image !== null) takeImage(sums, n, image);
+  const seen = whole ? closeImage(rim) : null;
+  if (seen !== null) takeImage(sums, n, seen.image);
   for (let j = 0; j < n; j++) {
     const shell = shells[bodies[j]];
     const at = SHELL_TERMS * j;
     shell.errors[1] += Math.abs(sums[at] - earlier[at]);
-    if (image === null) shell.errors[2] += Math.abs(sums[at + 1] - earlier[at + 1]);
+    if (seen === null) shell.errors[2] += Math.abs(sums[at + 1] - earlier[at + 1]);
     const shift = [0, 1, 2].map((axis) => limit[axis] - origins[3 * bodies[j] + axis]);
     addShifted(sums.subarray(at, at + SHELL_TERMS), shift, shell.terms);
     if (peaks[j].curvature > shell.peak.curvature) {
       Object.assign(shell.peak, { curvature: peaks[j].curvature, x: peaks[j].x + shift[0], y: peaks[j].y + shift[1], z: peaks[j].z + shift[2] });
     }
   }
-  if (image !== null && coarse !== null) shells[bodies[0]].errors[2] += Math.abs(image[0] - coarse[0]);
+  if (seen !== null) shells[bodies[0]].errors[2] += seen.error;
+}
+
+/** The Gauss map's integrals from the rim with an estimate of what they err by; null where it spreads too far. */
+function closeImage(rim: readonly ImageSide[]): { image: Float64Array; error: number } | null {
+  for (const [nodes, finer] of IMAGE_NODES) {
+    const coarse = gaussImage(rim, nodes);
+    const image = coarse === null ? null : gaussImage(rim, finer);
+    if (coarse === null || image === null) return null;
+    const error = image.reduce((worst, value, i) => Math.max(worst, Math.abs(value - coarse[i])), 0);
+    if (error <= IMAGE_TOLERANCE || finer === IMAGE_NODES[IMAGE_NODES.length - 1][1]) return { image, error };
+  }
+  return null;
 }
 
 function imageSide(kit: ShellKit, powers: Float64Array, side: number): ImageSide {
   return { jet: (along, out) => kit.sideJet(powers, side, along, out), u: kit.along[side][0], v: kit.along[side][1] };
+}
+
+function addWeighted(sums: Float64Array, sector: number, weight: number, patch: Float64Array): void {
+  const at = patch.length * sector;
+  for (let i = 0; i < patch.length; i++) sums[at + i] += weight * patch[i];
 }
 
 /** Puts the integrals of K, K N and K N Nᵀ about the limit point, which the closing would leave the largest rest of, in the sectors' place: all in the first. */

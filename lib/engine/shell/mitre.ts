@@ -1,8 +1,13 @@
 import type { ShellBody } from './shell-sums';
-import { PAIRS, symmetricProduct } from './shell-terms';
+import { PAIRS } from './shell-terms';
 
 /** 1 + cos θ below which two faces lie back to back: no mitre closes them. */
 const FOLDED = 1e-6;
+
+const p = new Float64Array(3);
+const q = new Float64Array(3);
+const first = new Float64Array(3);
+const bentFirst = new Float64Array(3);
 
 /** Where a sharp edge is looked at. Lengths in the cage's unit; vectors in one frame. */
 export interface EdgePoint {
@@ -47,33 +52,35 @@ export function addMitre(edge: EdgePoint, ds: number, shell: ShellBody): number 
   }
   const { point: C, own, across, curvature: c } = edge;
   const cosine = own[0] * across[0] + own[1] * across[1] + own[2] * across[2];
-  const p = [own[0], own[1], own[2]];
-  const q = [0, 1, 2].map((axis) => (own[axis] + across[axis]) / (1 + cosine));
   const area = (-tangent / 2) * ds;
-  const cp = c[0] * p[0] + c[1] * p[1] + c[2] * p[2];
-  const cq = c[0] * q[0] + c[1] * q[1] + c[2] * q[2];
-  // Triangle 0, p, q: ∫ αᵃβᵇ = 2A a! b!/(a + b + 2)!, y = αp + βq.
-  const first = [0, 1, 2].map((axis) => (area * (p[axis] + q[axis])) / 3);
-  const bent = (area * (cp + cq)) / 3 - (edge.bend * tangent ** 3 * ds) / 6;
-  const bentFirst = [0, 1, 2].map((axis) => (area * (p[axis] * (2 * cp + cq) + q[axis] * (cp + 2 * cq))) / 12);
-  const pp = symmetricProduct(p, p), pq = symmetricProduct(p, q), qq = symmetricProduct(q, q), cc = symmetricProduct(C, C);
-  const out = shell.mitres;
-  const add = (moment: number, power: number, value: number): void => {
-    out[5 * moment + power - 1] += value;
-  };
-  add(0, 2, area);
-  add(0, 3, bent);
+  let cp = 0, cq = 0;
   for (let axis = 0; axis < 3; axis++) {
-    add(1 + axis, 2, area * C[axis]);
-    add(1 + axis, 3, bent * C[axis] - first[axis]);
-    add(1 + axis, 4, -bentFirst[axis]);
+    p[axis] = own[axis];
+    q[axis] = (own[axis] + across[axis]) / (1 + cosine);
+    cp += c[axis] * p[axis];
+    cq += c[axis] * q[axis];
   }
-  const cFirst = symmetricProduct(C, first), cBent = symmetricProduct(C, bentFirst);
+  // Triangle 0, p, q: ∫ αᵃβᵇ = 2A a! b!/(a + b + 2)!, y = αp + βq.
+  const bent = (area * (cp + cq)) / 3 - (edge.bend * tangent ** 3 * ds) / 6;
+  const out = shell.mitres;
+  out[1] += area;
+  out[2] += bent;
+  for (let axis = 0; axis < 3; axis++) {
+    first[axis] = (area * (p[axis] + q[axis])) / 3;
+    bentFirst[axis] = (area * (p[axis] * (2 * cp + cq) + q[axis] * (cp + 2 * cq))) / 12;
+    const at = 5 * (1 + axis);
+    out[at + 1] += area * C[axis];
+    out[at + 2] += bent * C[axis] - first[axis];
+    out[at + 3] -= bentFirst[axis];
+  }
   for (let k = 0; k < PAIRS.length; k++) {
-    add(4 + k, 2, (area * cc[k]) / 2);
-    add(4 + k, 3, (bent * cc[k]) / 2 - cFirst[k]);
-    add(4 + k, 4, (area * (pp[k] / 2 + qq[k] / 2 + pq[k] / 2)) / 6 - cBent[k]);
-    add(4 + k, 5, 2 * area * ((pp[k] / 2) * (cp / 20 + cq / 60) + pq[k] * (cp / 60 + cq / 60) + (qq[k] / 2) * (cp / 60 + cq / 20)));
+    const [i, j] = PAIRS[k];
+    const pp = p[i] * p[j], qq = q[i] * q[j], pq = p[i] * q[j] + q[i] * p[j], cc = C[i] * C[j];
+    const at = 5 * (4 + k);
+    out[at + 1] += area * cc;
+    out[at + 2] += bent * cc - (C[i] * first[j] + first[i] * C[j]);
+    out[at + 3] += (area * (2 * pp + 2 * qq + pq)) / 12 - (C[i] * bentFirst[j] + bentFirst[i] * C[j]);
+    out[at + 4] += 2 * area * (pp * (cp / 20 + cq / 60) + (pq * (cp + cq)) / 60 + qq * (cp / 60 + cq / 20));
   }
   return tangent * ds;
 }

@@ -3,7 +3,7 @@ export const MOST_SHELL_NODES = 7;
 const FEWEST_SHELL_NODES = 2;
 
 /** Relative variation of the normal vector X_u × X_v beyond which no rule is trusted. */
-const MOST_VARIATION = 0.5;
+const MOST_VARIATION = 0.8;
 
 /** Error of n nodes on [−½, ½] for t^2n: (n!)⁴ / ((2n + 1) ((2n)!)²), times 4^n since the variation is that over half the interval. */
 const RULE_ERRORS: readonly number[] = Array.from({ length: MOST_SHELL_NODES + 1 }, (_, n) => {
@@ -23,6 +23,8 @@ export function ruleError(nodes: number, variation: number): number {
 /** Fewest nodes a direction whose error stays below the tolerance; 0 where the patch bends too much for any. */
 export function chooseNodes(variation: number, tolerance: number): number {
   if (!(variation < MOST_VARIATION)) return 0;
-  for (let nodes = FEWEST_SHELL_NODES; nodes <= MOST_SHELL_NODES; nodes++) if (ruleError(nodes, variation) <= tolerance) return nodes;
+  const square = variation * variation;
+  let power = SAFETY * square ** FEWEST_SHELL_NODES;
+  for (let nodes = FEWEST_SHELL_NODES; nodes <= MOST_SHELL_NODES; nodes++, power *= square) if (RULE_ERRORS[nodes] * power <= tolerance) return nodes;
   return 0;
 }

@@ -1,5 +1,3 @@
-import type { Six } from '../measured';
-
 /**
  * Terms of a shell's moments that come from integrals over its surface. For a point X with outward unit normal N the wall of thickness t holds
  * X − sN, 0 ≤ s ≤ t, with volume element (1 − 2Hs + Ks²) dA ds [Weyl 1939], where dN = S dX, H = tr S / 2, K = det S: H is 1/R on a sphere of radius R.
@@ -95,8 +93,3 @@ export function addShellNode(jet: Float64Array, weight: number, out: Float64Arra
 
 /** Rows and columns of xx, yy, zz, xy, xz, yz. */
 export const PAIRS: readonly (readonly [number, number])[] = [[0, 0], [1, 1], [2, 2], [0, 1], [0, 2], [1, 2]];
-
-/** Six entries of a symmetric product p qᵀ + q pᵀ. */
-export function symmetricProduct(p: ArrayLike<number>, q: ArrayLike<number>): Six {
-  return PAIRS.map(([i, j]) => p[i] * q[j] + q[i] * p[j]) as Six;
-}

@@ -6,7 +6,7 @@ import { emptyShells, type ShellBody } from './shell-sums';
 import { SHELL_TERMS } from './shell-terms';
 
 /** What a rule may err by on a regular patch, relatively. */
-const TOLERANCE = 1e-9;
+const TOLERANCE = 5e-9;
 
 /** Takes the shell integrals of each patch and fan that an integration of a limit surface comes by. */
 export class ShellVisitor {
@@ -30,7 +30,7 @@ export class ShellVisitor {
     const shell = shells[body];
     terms.fill(0);
     kit.add(powers, TOLERANCE, terms, shell.peak, shell.errors);
-    for (let i = 0; i < SHELL_TERMS; i++) shell.terms[i] += terms[i];
+    for (let i = 0; i < terms.length; i++) shell.terms[i] += terms[i];
   }
 
   /** An isolated fan. */

@@ -28,16 +28,48 @@ export function triangleJet(powers: Float64Array, s: number, t: number, out: Flo
 }
 
 function fillJet(p: Float64Array, table: Float64Array, at: number, out: Float64Array): void {
-  out.fill(0);
-  for (let monomial = 0; monomial < 15; monomial++) {
-    const x = p[3 * monomial], y = p[3 * monomial + 1], z = p[3 * monomial + 2];
-    for (let d = 0; d < 6; d++) {
-      const factor = table[at + 6 * monomial + d];
-      out[3 * d] += factor * x;
-      out[3 * d + 1] += factor * y;
-      out[3 * d + 2] += factor * z;
-    }
+  let x = 0, y = 0, z = 0, sx = 0, sy = 0, sz = 0, tx = 0, ty = 0, tz = 0;
+  let ssx = 0, ssy = 0, ssz = 0, stx = 0, sty = 0, stz = 0, ttx = 0, tty = 0, ttz = 0;
+  for (let k = 0, row = at; k < 45; k += 3, row += 6) {
+    const px = p[k], py = p[k + 1], pz = p[k + 2];
+    const value = table[row], s = table[row + 1], t = table[row + 2], ss = table[row + 3], st = table[row + 4], tt = table[row + 5];
+    x += value * px;
+    y += value * py;
+    z += value * pz;
+    sx += s * px;
+    sy += s * py;
+    sz += s * pz;
+    tx += t * px;
+    ty += t * py;
+    tz += t * pz;
+    ssx += ss * px;
+    ssy += ss * py;
+    ssz += ss * pz;
+    stx += st * px;
+    sty += st * py;
+    stz += st * pz;
+    ttx += tt * px;
+    tty += tt * py;
+    ttz += tt * pz;
   }
+  out[0] = x;
+  out[1] = y;
+  out[2] = z;
+  out[3] = sx;
+  out[4] = sy;
+  out[5] = sz;
+  out[6] = tx;
+  out[7] = ty;
+  out[8] = tz;
+  out[9] = ssx;
+  out[10] = ssy;
+  out[11] = ssz;
+  out[12] = stx;
+  out[13] = sty;
+  out[14] = stz;
+  out[15] = ttx;
+  out[16] = tty;
+  out[17] = ttz;
 }
 
 const tables: (Float64Array | undefined)[] = [];
