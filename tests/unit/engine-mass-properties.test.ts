@@ -174,3 +174,48 @@ describe('principal frames', () => {
     [0, 0, 1].forEach((value, i) => expect(axis1[i]).toBeCloseTo(value, 12));
   });
 });
+
+describe('hollow parts', () => {
+  const hollow = { ...plain, construction: 'hollow' as const, densityKgPerM3: 1000 };
+  const box = (): MassInput['components'] => componentsOf(cuboid(2, 2, 2), { ...POLYHEDRAL, shells: true });
+  const codeOf = (input: MassInput): string => {
+    const result = massProperties(input);
+    return result.ok ? 'ok' : result.code;
+  };
+
+  it('weighs the wall of a cuboid but for its corners, whose share stands in the error', () => {
+    const t = 0.01;
+    const body = weigh({ ...hollow, components: box(), wallM: t });
+    const exact = 1000 * (8 - (2 - 2 * t) ** 3);
+    expect(Math.abs(body.massKg / exact - 1)).toBeLessThanOrEqual(body.numericError);
+    expect(body.numericError).toBeLessThan(1e-3);
+    body.comM.forEach((value) => expect(value).toBeCloseTo(0, 12));
+  });
+
+  it('keeps the wall where the asset is scaled', () => {
+    const [one, two] = [weigh({ ...hollow, components: box(), wallM: 0.01, scale: 2 }), weigh({ ...hollow, components: componentsOf(cuboid(4, 4, 4), { ...POLYHEDRAL, shells: true }), wallM: 0.01 })];
+    expect(one.massKg / two.massKg).toBeCloseTo(1, 12);
+    one.principalKgM2.forEach((value, i) => expect(value / two.principalKgM2[i]).toBeCloseTo(1, 12));
+  });
+
+  it('lets the density follow from a target mass', () => {
+    const body = weigh({ ...hollow, densityKgPerM3: null, targetMassKg: 7, components: box(), wallM: 0.05 });
+    expect(body.massKg).toBeCloseTo(7, 12);
+    expect(body.densityKgPerM3! * body.volumeM3!).toBeCloseTo(7, 12);
+  });
+
+  it('refuses what it cannot weigh, by name', () => {
+    expect(codeOf({ ...hollow, components: box() })).toBe('no_wall');
+    expect(codeOf({ ...hollow, components: box(), wallM: 1.1 })).toBe('wall_too_thick');
+    expect(codeOf({ ...hollow, components: componentsOf(cuboid(2, 2, 2)), wallM: 0.1 })).toBe('wall_not_measured');
+    expect(codeOf({ ...hollow, densityKgPerM3: null, components: box(), wallM: 0.1 })).toBe('no_mass');
+  });
+
+  it('tells where the wall exceeds the radius of the surface', () => {
+    const components = componentsOf(referenceCage('cube.obj'), { ...CATMULL_CLARK, shells: true });
+    const { curvature } = components[0].hollowLimits!;
+    expect(weigh({ ...hollow, components, wallM: 0.9 / curvature }).tightBend).toBeNull();
+    expect(weigh({ ...hollow, components, wallM: 1.02 / curvature }).tightBend!.radiusM).toBeCloseTo(1 / curvature, 12);
+    expect(weigh({ ...hollow, components: box(), wallM: 0.3 }).tightBend).toBeNull();
+  });
+});

@@ -135,6 +135,30 @@ describe('the value of a unit cube', () => {
     expect(value).toMatchObject({ volumeM3: null, densityKgPerM3: null, arealDensityKgPerM2: 2 });
   });
 
+  /** A unit cube's wall to t² (6t − 12t²), with a surface that bends by a radius of 0.2 somewhere. */
+  const walled = CUBE.components.map((component) => {
+    const hollow = new Float64Array(50);
+    [[0, 6, -12], [4, 5 / 6, -11 / 3], [5, 5 / 6, -11 / 3], [6, 5 / 6, -11 / 3]].forEach(([moment, t1, t2]) => hollow.set([t1, t2], 5 * moment));
+    return { ...component, hollow, hollowLimits: { curvature: 5, position: [0.1, 0.2, 0.3] as [number, number, number], error: [0, 0, 16] as [number, number, number] } };
+  });
+
+  test('hollow: mass = density × wall', () => {
+    const value = valueOf({ construction: 'hollow', densityKgPerM3: 100, wallM: 0.01 }, { components: walled });
+    expect(value).toMatchObject({ state: 'measured', volumeM3: 1, warningCodes: [] });
+    expect(value.properties?.massKg).toBeCloseTo(100 * (0.06 - 0.0012), 12);
+  });
+
+  test('hollow: a wall over the smallest radius is a warning with its place, one that fills the part a problem', () => {
+    const value = valueOf({ construction: 'hollow', densityKgPerM3: 100, wallM: 0.22 }, { components: walled, metresPerUnit: 1, scale: 1 });
+    expect(value).toMatchObject({ state: 'measured', warningCodes: ['wall_over_radius'] });
+    expect(value.valueFindings[0].message).toContain('0.2 m at 0.1, 0.2, 0.3 m');
+    expect(valueOf({ construction: 'hollow', densityKgPerM3: 100, wallM: 0.4 }, { components: walled })).toMatchObject({ state: 'blocked', problemCodes: ['wall_too_thick'] });
+  });
+
+  test('hollow: a record of an engine without walls is refused by name', () => {
+    expect(valueOf({ construction: 'hollow', densityKgPerM3: 100, wallM: 0.01 })).toMatchObject({ state: 'blocked', problemCodes: ['wall_not_measured'] });
+  });
+
   test('a volume is known before a mass', () => {
     expect(valueOf({})).toMatchObject({ state: 'unset', properties: null, volumeM3: 1, cageVolumeM3: 1, valueSha256: null });
   });
