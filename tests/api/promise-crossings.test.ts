@@ -135,6 +135,7 @@ describe('people who go', () => {
     const cast = await createCrateShow();
     await lockBody(cast, await approveBody(cast));
     const promised = await pull(cast);
+    await addMember(cast.show, await createUser(), 'lead');
     await disableUser(cast.contextOf('admin'), { email: cast.people.lead.email });
     await disableUser(cast.contextOf('admin'), { email: cast.people.td.email });
     expect((await pull(cast)).text).toBe(promised.text);
