@@ -8,17 +8,18 @@ import { FAN_ROUTINES } from './support/fan-routines.mjs';
 import { scalar, statements, vector } from './support/kernel-dialects.mjs';
 import { area, AXES, DIVISORS, middle, moments, SHAPES, side, SUMS } from './support/kernel-shapes.mjs';
 
-/** A kernel's loops over all nodes. */
-function nodeLoops(dialect, shape, node, point, integer) {
-  const write = (lines, depth) => statements(dialect, lines).map((text) => `${'  '.repeat(depth)}${text}`).join('\n');
-  return `  const half${integer} = count >> 1;
-  for (let i${integer} = 0; i < ${shape.alongCount}; i++) {
-${write(shape.line(point), 2)}
-    for (let j${integer} = 0; j < half; j++) {
-${write([...shape.pair(point), ...side('l', '+', point), ...side('r', '-', point), ...node('l', 'r')], 3)}
+const lines = (dialect, list, depth) => statements(dialect, list).map((text) => `${'  '.repeat(depth)}${text}`).join('\n');
+
+/** The vector kernel's loops over all nodes. */
+function nodeLoops(shape, node, point) {
+  return `  const half: i32 = count >> 1;
+  for (let i: i32 = 0; i < ${shape.alongCount}; i++) {
+${lines(vector, shape.line(point), 2)}
+    for (let j: i32 = 0; j < half; j++) {
+${lines(vector, [...shape.pair(point), ...side('l', '+', point), ...side('r', '-', point), ...node('l', 'r')], 3)}
     }
     if ((count & 1) === 1) {
-${write([...middle(point), ...node('m')], 3)}
+${lines(vector, [...middle(point), ...node('m')], 3)}
     }
   }`;
 }
@@ -30,36 +31,89 @@ const capital = (name) => `${name[0].toUpperCase()}${name.slice(1)}`;
 /** The triangle's twelve points to its fifteen coefficients, by the table of their weights. */
 const triangleSums = AXES.map((axis, k) => [axis, k]);
 
+/** In JavaScript a node's values and the sums stand in arrays, so that one piece of code adds up for all shapes. */
+const PARTS = AXES.flatMap((axis) => ['e', 'o', 'ue', 'uo', 've', 'vo'].map((part) => `${axis}${part}`));
+const WEIGHT_AT = PARTS.length;
+const TOTALS = ['magnitude', ...sums('m'), ...sums('s')];
+
+/** What the lines declare of a node goes to the array instead. */
+const toNode = (list) => list.map((text) => {
+  const [, name, value] = text.match(/^let (\w+) = (.*)$/);
+  const part = PARTS.indexOf(name.replace(/^([xyz])([uv]?)m$/, '$1$2e'));
+  if (name !== 'w' && part < 0) return text;
+  return `node[${name === 'w' ? WEIGHT_AT : part}] := ${value}`;
+});
+
+/** And the totals are those in the array. */
+const toTotals = (list) => list.map((text) => {
+  const [, name, value] = text.match(/^(\w+) \+= (.*)$/) ?? [];
+  return name === undefined ? text : `totals[${TOTALS.indexOf(name)}] += ${value}`;
+});
+
+const HEADER = '// Written by lib/run/build-kernel.mjs, from the same operations as the vector kernel: change them there.';
+
 function scalarSource(shape) {
-  const put = (array, letter, divisors) => SUMS.map((name, i) => `  ${array}[${i}] = ${letter}${name}${divisors ? ` / ${DIVISORS[i]}` : ''};`).join('\n');
   const two = shape.alongNodes !== 'nodes';
-  const rules = two ? 'along: GaussRule, rule: GaussRule' : 'rule: GaussRule';
-  const unpack = `  const { nodes, weights } = rule;\n${two ? '  const alongNodes = along.nodes;\n  const alongWeights = along.weights;\n' : ''}  const count = nodes.length;`;
   return `import type { GaussRule } from '../patches/gauss-rule';
+import type { NodeSums } from './node-sums';
 
-// Written by lib/run/build-kernel.mjs, from the same operations as the vector kernel: change them there.
+${HEADER}
 
-/**
- * Ten solid and ten surface moments of the ${shape.name} patch with the power coefficients \`p\`, about the point that they are relative to.
- * Returns ∮ (|x n_x| + |y n_y| + |z n_z|)/3.
- */
-export function ${shape.name}PowerMoments(p: Float64Array, ${rules}, solid: Float64Array, surface: Float64Array): number {
-${unpack}
-${start(scalar, ['magnitude', ...sums('m'), ...sums('s')])}
-${nodeLoops(scalar, shape, moments, true, '')}
-${put('solid', 'm', true)}
-${put('surface', 's', false)}
-  return magnitude / 3;
-}
+const node = new Float64Array(${WEIGHT_AT + 1});
 
-/** Area of the patch with the power coefficients \`p\` by a rule. */
-export function ${shape.name}PowerArea(p: Float64Array, ${rules}): number {
-${unpack}
-  let s = 0;
-${nodeLoops(scalar, shape, area, false, '')}
-  return s;
+/** Visits the nodes of a ${shape.name} patch with the power coefficients \`p\` and lets \`sums\` add them to \`totals\`. */
+export function ${shape.name}Nodes(p: Float64Array, ${two ? 'along: GaussRule, rule' : '_along: GaussRule, rule'}: GaussRule, sums: NodeSums, totals: Float64Array): void {
+  const { nodes, weights } = rule;
+${two ? '  const alongNodes = along.nodes;\n  const alongWeights = along.weights;\n' : ''}  const count = nodes.length;
+  const half = count >> 1;
+  for (let i = 0; i < ${shape.alongCount}; i++) {
+${lines(scalar, shape.line(true), 2)}
+    for (let j = 0; j < half; j++) {
+${lines(scalar, toNode(shape.pair(true)), 3)}
+      sums.addPair(node, totals);
+    }
+    if ((count & 1) === 1) {
+${lines(scalar, toNode(middle(true)), 3)}
+      sums.addMiddle(node, totals);
+    }
+  }
 }
 `;
+}
+
+/** What is added at a node, for all shapes. */
+function nodeSumsSource() {
+  const unpack = (names) => names.map((name) => `  const ${name} = node[${PARTS.indexOf(name)}];`).join('\n');
+  const pairOf = (node, point) => `${unpack(PARTS.filter((name) => point || name.length > 2))}
+  const w = node[${WEIGHT_AT}];
+${lines(scalar, toTotals([...side('l', '+', point), ...side('r', '-', point), ...node('l', 'r')]), 1)}`;
+  const middleOf = (node, point) => `${AXES.flatMap((axis) => (point ? ['', 'u', 'v'] : ['u', 'v']).map((part) => `  const ${axis}${part}m = node[${PARTS.indexOf(`${axis}${part}e`)}];`)).join('\n')}
+  const w = node[${WEIGHT_AT}];
+${lines(scalar, toTotals(node('m')), 1)}`;
+  const sumsOf = (name, comment, node, point) => `/** ${comment} */
+export const ${name}: NodeSums = { addPair: ${name}Pair, addMiddle: ${name}Middle };
+
+function ${name}Pair(node: Float64Array, totals: Float64Array): void {
+${pairOf(node, point)}
+}
+
+function ${name}Middle(node: Float64Array, totals: Float64Array): void {
+${middleOf(node, point)}
+}
+`;
+  return `${HEADER}
+
+/** Totals: magnitude, ten solid and ten surface moments. */
+export const TOTALS = ${TOTALS.length};
+
+/** Adds what two nodes ±v (in even and odd parts) or one in the middle contribute. A node is, per axis, position, ∂u and ∂v, even and odd part each; then the weight. */
+export interface NodeSums {
+  addPair(node: Float64Array, totals: Float64Array): void;
+  addMiddle(node: Float64Array, totals: Float64Array): void;
+}
+
+${sumsOf('MOMENT_SUMS', 'All totals.', moments, true)}
+${sumsOf('AREA_SUMS', 'The area alone, which is the first surface moment.', area, false)}`.replaceAll(/\b(MOMENT|AREA)_SUMS(Pair|Middle)/g, (_, kind, what) => `add${kind === 'MOMENT' ? 'Moments' : 'Area'}Of${what}`);
 }
 
 /** How a pair's net at \`input\` becomes powers at \`scratch\`. */
@@ -76,7 +130,7 @@ function powersOf(shape) {
 }
 
 function powersSource(shape) {
-  const write = (lines, depth) => statements(vector, lines).map((text) => `${'  '.repeat(depth)}${text}`).join('\n');
+  const write = (list, depth) => lines(vector, list, depth);
   if (shape.name !== 'triangle') return `function ${shape.name}Powers(p: i32, at: i32, stride: i32): void {\n${write(shape.toPowers, 1)}\n}`;
   return `function trianglePowers(net: i32, p: i32, table: i32): void {
   for (let m: i32 = 0; m < 15; m++) {
@@ -98,7 +152,7 @@ ${powersSource(shape)}
 
 function ${shape.name}Moments(p: i32, ${rules}, out: i32): void {
 ${start(vector, ['magnitude', ...sums('m'), ...sums('s')])}
-${nodeLoops(vector, shape, moments, true, ': i32')}
+${nodeLoops(shape, moments, true)}
 ${put('m', 0, true)}
 ${put('s', 10, false)}
   v128.store(out + 320, f64x2.div(magnitude, f64x2.splat(3)));
@@ -106,7 +160,7 @@ ${put('s', 10, false)}
 
 function ${shape.name}Area(p: i32, ${rules}, out: i32): void {
   let s: v128 = f64x2.splat(0);
-${nodeLoops(vector, shape, area, false, ': i32')}
+${nodeLoops(shape, area, false)}
   v128.store(out, s);
 }
 
@@ -136,18 +190,19 @@ async function compile(source) {
 }
 
 function bytesSource(bytes) {
-  const lines = Buffer.from(bytes).toString('base64').match(/.{1,120}/g);
+  const pieces = Buffer.from(bytes).toString('base64').match(/.{1,120}/g);
   return `// Written by lib/run/build-kernel.mjs: the vector kernels as WebAssembly, kept in the source so that server, threads and browser have them without a request.
 
 /** Base64 of the module. */
 export const KERNEL_BYTES = [
-${lines.map((text) => `  '${text}',`).join('\n')}
+${pieces.map((text) => `  '${text}',`).join('\n')}
 ].join('');
 `;
 }
 
 const files = Object.fromEntries([
   ...SHAPES.map((shape) => [`${shape.name}-scalar.ts`, scalarSource(shape)]),
+  ['node-sums.ts', nodeSumsSource()],
   ['kernel-bytes.ts', bytesSource(await compile(SHAPES.map(vectorSource).join('') + FAN_ROUTINES))],
 ]);
 let differing = 0;

@@ -1,7 +1,7 @@
 import { spawnSync } from 'node:child_process';
 import { mkdirSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { cpus, loadavg } from 'node:os';
-import { join } from 'node:path';
+import { join, resolve } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { build } from 'esbuild';
 import type { Scheme } from '@/lib/engine/cage';
@@ -77,7 +77,9 @@ const spot: Series = {
   scheme: 'catmull-clark', name: 'spot', cage: { file: fileURLToPath(new URL('../reference/cages/spot.obj', import.meta.url)) }, plain: 5, ways: ['cage', 'file'],
 };
 const schemes: Scheme[] = ['catmull-clark', 'loop', 'doo-sabin'];
-const folder = mkdtempSync(join(import.meta.dirname, '../../.bench-'));
+// Within the checkout, where the bundle finds the packages.
+mkdirSync('bench-results', { recursive: true });
+const folder = mkdtempSync(resolve('bench-results', 'rows-'));
 const rows: Row[] = [];
 const cpp = cppWay();
 try {
@@ -134,5 +136,4 @@ console.table(rows.map((row) => ({
   'peak B/face': Math.round(row.bytesPerFace), hash: row.hash,
 })));
 console.log(`node ${process.version}, ${cpus()[0].model}, ${cpus().length} cores, load ${loadavg()[0].toFixed(1)}`);
-mkdirSync('bench-results', { recursive: true });
 writeFileSync('bench-results/engine.json', `${JSON.stringify({ node: process.version, processor: cpus()[0].model, cores: cpus().length, load: loadavg(), rows }, null, 1)}\n`);

@@ -1,39 +1,40 @@
 import { netToPowers } from '../patches/bicubic-powers';
 import { gaussRule } from '../patches/gauss-rule';
-import { bicubicPowerArea, bicubicPowerMoments } from './bicubic-scalar';
+import { bicubicNodes } from './bicubic-scalar';
 import { biquadraticNetToPowers } from './biquadratic-powers';
-import { biquadraticPowerArea, biquadraticPowerMoments } from './biquadratic-scalar';
-import { inputStride, MOST_PAIRS, NET_VALUES, OUTPUT_STRIDE, type FanKernel, type PatchKind } from './patch-kinds';
+import { biquadraticNodes } from './biquadratic-scalar';
+import { AREA_SUMS, MOMENT_SUMS, TOTALS } from './node-sums';
+import { ALONG_EXTRA, inputStride, MOST_PAIRS, NET_VALUES, OUTPUT_STRIDE, type FanKernel, type PatchKind } from './patch-kinds';
 import { FAN_ROOM, scalarFans } from './scalar-fans';
 import { triangleNetToPowers } from './triangle-powers';
-import { trianglePowerArea, trianglePowerMoments } from './triangle-scalar';
+import { triangleNodes } from './triangle-scalar';
 
-/** What the kernels do with one patch. */
-interface Steps {
-  toPowers(net: Float64Array, powers: Float64Array): void;
-  moments(powers: Float64Array, nodes: number, solid: Float64Array, surface: Float64Array): number;
-  area(powers: Float64Array, nodes: number): number;
+const TO_POWERS = { bicubic: netToPowers, biquadratic: biquadraticNetToPowers, triangle: triangleNetToPowers };
+const NODES = { bicubic: bicubicNodes, biquadratic: biquadraticNodes, triangle: triangleNodes };
+
+/** What ten solid moments are sums of: ∮ f(X) det(X, X_u, X_v) is 3 + deg f times the moment. */
+const DIVISORS = [3, 4, 4, 4, 5, 5, 5, 5, 5, 5];
+
+const totals = new Float64Array(TOTALS);
+const powers = new Float64Array(48);
+
+/** As `patchMoments`, of the patch with the power coefficients `p` about the point that they are relative to. */
+function powerMoments(kind: PatchKind, p: Float64Array, nodes: number, solid: Float64Array, surface: Float64Array): number {
+  totals.fill(0);
+  NODES[kind](p, gaussRule(nodes + ALONG_EXTRA[kind]), gaussRule(nodes), MOMENT_SUMS, totals);
+  for (let i = 0; i < 10; i++) {
+    solid[i] = totals[1 + i] / DIVISORS[i];
+    surface[i] = totals[11 + i];
+  }
+  return totals[0] / 3;
 }
 
-const STEPS: Readonly<Record<PatchKind, Steps>> = {
-  bicubic: {
-    toPowers: netToPowers,
-    moments: (powers, nodes, solid, surface) => bicubicPowerMoments(powers, gaussRule(nodes), solid, surface),
-    area: (powers, nodes) => bicubicPowerArea(powers, gaussRule(nodes)),
-  },
-  biquadratic: {
-    toPowers: biquadraticNetToPowers,
-    moments: (powers, nodes, solid, surface) => biquadraticPowerMoments(powers, gaussRule(nodes), solid, surface),
-    area: (powers, nodes) => biquadraticPowerArea(powers, gaussRule(nodes)),
-  },
-  triangle: {
-    toPowers: triangleNetToPowers,
-    moments: (powers, nodes, solid, surface) => trianglePowerMoments(powers, gaussRule(nodes + 1), gaussRule(nodes), solid, surface),
-    area: (powers, nodes) => trianglePowerArea(powers, gaussRule(nodes + 1), gaussRule(nodes)),
-  },
-};
-
-const powers = new Float64Array(48);
+/** Area of the patch with the power coefficients `p` by so many nodes a direction. */
+function powerArea(kind: PatchKind, p: Float64Array, nodes: number): number {
+  totals.fill(0);
+  NODES[kind](p, gaussRule(nodes + ALONG_EXTRA[kind]), gaussRule(nodes), AREA_SUMS, totals);
+  return totals[11];
+}
 
 /**
  * Ten solid and ten surface moments of one patch about (ox, oy, oz), by `nodes` Gauss nodes a direction (one more along a triangle's first side).
@@ -41,12 +42,11 @@ const powers = new Float64Array(48);
  * bicubics, 5 for biquadratics, 9 for triangles. Returns ∮ (|x n_x| + |y n_y| + |z n_z|)/3, which the volume's rounding error is relative to.
  */
 export function patchMoments(kind: PatchKind, net: Float64Array, ox: number, oy: number, oz: number, nodes: number, solid: Float64Array, surface: Float64Array): number {
-  const steps = STEPS[kind];
-  steps.toPowers(net, powers);
+  TO_POWERS[kind](net, powers);
   powers[0] -= ox;
   powers[1] -= oy;
   powers[2] -= oz;
-  return steps.moments(powers, nodes, solid, surface);
+  return powerMoments(kind, powers, nodes, solid, surface);
 }
 
 const net = new Float64Array(48);
@@ -56,7 +56,6 @@ const surface = new Float64Array(10);
 /** A kernel in JavaScript: the same layout, the same operations in the same order as the vector kernel, so the same bits. */
 export function scalarKernel(kind: PatchKind): FanKernel {
   const values = NET_VALUES[kind];
-  const steps = STEPS[kind];
   const stride = inputStride(kind);
   const input = new Float64Array(MOST_PAIRS * stride);
   const output = new Float64Array(MOST_PAIRS * OUTPUT_STRIDE);
@@ -70,7 +69,7 @@ export function scalarKernel(kind: PatchKind): FanKernel {
       output[to + 2 * i] = solid[i];
       output[to + 2 * (10 + i)] = surface[i];
     }
-    if (coarseCount > 0) output[to + 42] = steps.area(powers, coarseCount);
+    if (coarseCount > 0) output[to + 42] = powerArea(kind, powers, coarseCount);
   };
   return {
     kind,
