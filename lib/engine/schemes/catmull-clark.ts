@@ -7,7 +7,7 @@ import { CATMULL_CLARK_KIT } from './catmull-clark-kit';
 import { fillInnerNet, fillNet } from './catmull-clark-net';
 import { refineAround } from './catmull-clark-refine';
 import { refineStrip, stripSide } from './crease-strip';
-import { FanBatches } from './fan-batch';
+import { FanBatches } from './fan-batches';
 import { isSharpForGood, type LevelMesh } from './level-mesh';
 import type { RefinementRules } from './refinement-rules';
 

@@ -4,14 +4,12 @@ import { FAN_ROOM, scalarFans, SUMMED_RESULTS, type FanRoutines } from '../kerne
 import type { LimitSums } from '../moments/limit-sums';
 import { MOMENTS } from '../moments/sums';
 import { AREA_TOLERANCE, areaError, mendSurface } from '../patches/mend-surface';
-import type { Fans } from './classify-vertices';
 import type { FanKit } from './fan-kit';
 import { packPoints } from './fan-points';
 import { RIM_POWERS } from './fan-rim';
-import { makeFanState, type FanState } from './fan-state';
-import { fanKey, fanTable, type FanTable } from './fan-tables';
-import { fanBlock, integrateFan } from './integrate-fan';
-import type { LevelMesh } from './level-mesh';
+import type { FanState } from './fan-state';
+import { fanTable, type FanTable } from './fan-tables';
+import { fanBlock } from './integrate-fan';
 import { addRimChain, moveMoments } from './rim-chain';
 import { applyRows } from './sparse-rows';
 
@@ -48,7 +46,7 @@ const holders = new WeakMap<FanRoutines, FanBatch>();
  * Fans of one kind and one body whose moments are computed together: cones from each fan's limit point, a level sequence of 3n regular patches closed by
  * weights instead of eigenvectors, and chains along the rim that move the cones' apex to the body's origin.
  */
-class FanBatch {
+export class FanBatch {
   private readonly table: FanTable;
   private readonly block: PatchBlock;
   private readonly routines: FanRoutines;
@@ -320,47 +318,4 @@ class FanBatch {
 
 function at(weights: Float64Array, k: number): number {
   return k < weights.length ? weights[k] : 0;
-}
-
-/** Fans on their way into the sums: those of one kind together; those with borders or of several bodies by themselves. */
-export class FanBatches {
-  private readonly batches = new Map<number, FanBatch>();
-
-  /** `origins` has x, y, z per body: the points that moments are about. */
-  constructor(private readonly kit: FanKit, private readonly origins: Float64Array, private readonly sums: LimitSums) {}
-
-  /** Takes an isolated fan. */
-  add(mesh: LevelMesh, fans: Fans, index: number): void {
-    const { kit, origins, sums } = this;
-    sums.shells?.fan(mesh, fans, index);
-    const corners = fans.corners.slice(fans.starts[index], fans.starts[index + 1]);
-    const body = kit.body(mesh, corners[0]);
-    if (!isWhole(kit, mesh, corners, body)) {
-      integrateFan(kit, mesh, fans, index, origins, sums);
-      return;
-    }
-    const closed = fans.closed[index], sharpFirst = fans.sharpFirst[index], centre = fans.centre[index];
-    const key = fanKey(corners.length, closed, sharpFirst, centre);
-    let batch = this.batches.get(key);
-    if (batch === undefined) {
-      batch = new FanBatch(kit, makeFanState(corners.length, closed, sharpFirst, centre), sums);
-      this.batches.set(key, batch);
-    }
-    kit.read(mesh, corners, batch.scratch);
-    batch.add(body, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2]);
-  }
-
-  /** Computes and adds what is waiting. */
-  flush(): void {
-    for (const batch of this.batches.values()) batch.flush();
-  }
-}
-
-/** Whether a fan is of one body and none of its sides is a border. */
-function isWhole(kit: FanKit, mesh: LevelMesh, corners: readonly number[], body: number): boolean {
-  for (const corner of corners) {
-    if (kit.body(mesh, corner) !== body) return false;
-    for (let side = 0; side < kit.sides; side++) if (mesh.borderOf[kit.sideAt(mesh, corner, side)] >= 0) return false;
-  }
-  return true;
 }

@@ -1,6 +1,5 @@
 import { ownKernel, PatchBlock } from '../kernel/patch-block';
 import type { PatchKind } from '../kernel/patch-kinds';
-import { patchMoments } from '../kernel/scalar-kernel';
 import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
 import { MOMENTS } from '../moments/sums';
@@ -145,9 +144,13 @@ function probe(
   kit: FanKit, state: FanState, sector: number, child: number, [ox, oy, oz]: [number, number, number], nodes: number, patches: number,
   solidScale: number, areaScale: number, reach: number,
 ): boolean {
+  const block = fanBlock(kit.rule.kind);
   kit.fillPoints(state, sector, child, net);
-  patchMoments(kit.rule.kind, net, ox, oy, oz, nodes, solid, surface);
-  patchMoments(kit.rule.kind, net, ox, oy, oz, nodes - 1, coarseSolid, coarseSurface);
+  block.put(0, net, ox, oy, oz);
+  block.run(1, nodes, 0);
+  block.read(0, solid, surface);
+  block.run(1, nodes - 1, 0);
+  block.read(0, coarseSolid, coarseSurface);
   if (!(patches * Math.abs(coarseSurface[0] - surface[0]) <= SURFACE_TOLERANCE * areaScale)) return false;
   for (let i = 0; i < MOMENTS; i++) {
     const scale = i === 0 ? 1 : i < 4 ? reach : reach * reach;

@@ -3,7 +3,7 @@ import { TRIANGLE_RULE } from '../kernel/regular-rules';
 import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
 import { classifyVertices, isIsolated, isRegularFace, TRIANGLE_COUNTS } from './classify-vertices';
-import { FanBatches } from './fan-batch';
+import { FanBatches } from './fan-batches';
 import type { LevelMesh } from './level-mesh';
 import { addTriangleSide, LOOP_KIT } from './loop-kit';
 import { fillTriangleNet } from './loop-net';
