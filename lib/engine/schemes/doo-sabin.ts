@@ -5,7 +5,7 @@ import type { LimitSums } from '../moments/limit-sums';
 import { SMOOTH_CENTRE, type Fans } from './classify-vertices';
 import { joinSpokes } from './doo-sabin-borders';
 import { DOO_SABIN_KIT } from './doo-sabin-fan';
-import { FanBatches } from './fan-batch';
+import { FanBatches } from './fan-batches';
 import { dooSabinCage, type DooSabinMesh } from './doo-sabin-mesh';
 import { addPatch, readRings, type DooSabinRings } from './doo-sabin-patches';
 import { refineDooSabin } from './doo-sabin-refine';
