@@ -33,7 +33,7 @@ const types = sql.raw(NAMES.map((name) => `${name} ${PART_ROW_TYPES[name as keyo
 export async function draftOverrides(tx: Transaction, acting: ActorContext, showId: string, drafts: readonly Draft[], materials: ReadonlyMap<string, MaterialNow>): Promise<number> {
   const loaded = new Map<string, LoadedPart>();
   const assetIds = [...new Set(drafts.map(({ part }) => part.assetId))];
-  for (const part of await loadValueInputs(tx, assetIds, drafts.map(({ part }) => part.partId))) loaded.set(part.partId, part);
+  for (const part of await loadValueInputs(tx, assetIds, drafts.map(({ part }) => part.partId), null, drafts.map(({ part }) => part.partId))) loaded.set(part.partId, part);
   const standing = await loadOverrideSettings(tx, drafts.map(({ part, shotId }) => ({ partId: part.partId, shotId })));
   const history: ChangedField[] = [];
   const made = drafts.map(({ item, part, shotId }) => {

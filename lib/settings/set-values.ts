@@ -85,7 +85,8 @@ interface Application {
 async function applyItems(tx: Transaction, acting: ActorContext, { showId, revision, now, items, parts, materials }: Application): Promise<number> {
   const loaded = new Map<string, LoadedPart>();
   const assetIds = [...new Set(parts.map((part) => part.assetId))];
-  for (const part of await loadValueInputs(tx, assetIds, parts.map((one) => one.partId))) loaded.set(part.partId, part);
+  const becomingHollow = parts.filter((_, index) => items[index].construction === 'hollow').map((one) => one.partId);
+  for (const part of await loadValueInputs(tx, assetIds, parts.map((one) => one.partId), null, becomingHollow)) loaded.set(part.partId, part);
   const changed: LoadedPart[] = [];
   const history: ChangedField[] = [];
   items.forEach((item, index) => {

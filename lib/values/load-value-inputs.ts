@@ -85,8 +85,9 @@ interface HeadRow {
  * The named parts (or all parts) of the assets' current versions with geometry, newest setting and findings, in the order of asset and part.
  * A part that the current version does not have is not among them. Three queries, however many parts.
  * @param versionIds other versions to take the geometry from, one an asset, in place of the current ones
+ * @param becomingHollow parts whose walls' polynomials are wanted though their settings are not hollow yet
  */
-export async function loadValueInputs(db: Executor, assetIds: string[], partIds: string[] | null, versionIds: string[] | null = null): Promise<LoadedPart[]> {
+export async function loadValueInputs(db: Executor, assetIds: string[], partIds: string[] | null, versionIds: string[] | null = null, becomingHollow: readonly string[] = []): Promise<LoadedPart[]> {
   const onlyVersions = versionIds === null ? sql`` : sql`and id = any(${sql.param(versionIds)}::uuid[])`;
   const onlyParts = partIds === null ? sql`` : sql`and p.id = any(${sql.param(partIds)}::uuid[])`;
   const { rows: heads } = await db.execute<HeadRow & Record<string, unknown>>(sql`
@@ -120,7 +121,7 @@ export async function loadValueInputs(db: Executor, assetIds: string[], partIds:
     where a.archived_at is null ${onlyParts}
     order by a.code collate "C", p.name collate "C"`);
   if (heads.length === 0) return [];
-  const components = await loadComponents(db, heads);
+  const components = await loadComponents(db, heads, new Set(becomingHollow));
   const findings = await loadFindings(db, heads);
   return heads.map((head) => toLoadedPart(head, components.get(head.geometry_part_id) ?? [], findingsOf(findings, head)));
 }
@@ -139,8 +140,8 @@ interface ComponentRow {
 }
 
 /** Arrays travel as JSON, which the driver parses ten times faster than array literals and as exactly. */
-async function loadComponents(db: Executor, heads: HeadRow[]): Promise<Map<string, ValueInputs['components'][number][]>> {
-  const hollow = heads.filter((head) => head.construction === 'hollow').map((head) => head.geometry_part_id);
+async function loadComponents(db: Executor, heads: HeadRow[], becomingHollow: ReadonlySet<string>): Promise<Map<string, ValueInputs['components'][number][]>> {
+  const hollow = heads.filter((head) => head.construction === 'hollow' || becomingHollow.has(head.part_id)).map((head) => head.geometry_part_id);
   const { rows } = await db.execute<ComponentRow & Record<string, unknown>>(sql`
     select geometry_part_id, volume, area, cage_volume, error_estimate, surface_error_estimate,
       to_json(centroid || central_second || surface_centroid || surface_central_second) as moments,

@@ -93,6 +93,18 @@ describe('setting values', () => {
     expect(row.problems.map((one) => one.code)).toContain('wall_missing');
   });
 
+  test('a hollow part weighs its wall, in whose corners its error lies', async () => {
+    const cast = await createBoxes();
+    const [solid] = itemsOf((await patch(cast, [{ asset: 'crate', part: 'body', revision: 1, density_kg_m3: 700 }])).json);
+    const [row] = itemsOf((await patch(cast, [{ asset: 'crate', part: 'body', revision: 2, construction: 'hollow', density_kg_m3: 700, wall_m: 0.01 }])).json);
+    expect(row).toMatchObject({ state: 'measured', construction: 'hollow', wall_m: 0.01, mass_source: 'density', volume_m3: solid.volume_m3 });
+    // The box less the one inside it, each side of which is two walls shorter.
+    const sides = [row.com_x_m, row.com_y_m, row.com_z_m].map((half) => 2 * half);
+    const wall = sides[0] * sides[1] * sides[2] - (sides[0] - 0.02) * (sides[1] - 0.02) * (sides[2] - 0.02);
+    expect(Math.abs(row.mass_kg / (700 * wall) - 1)).toBeLessThanOrEqual(row.numeric_error);
+    expect(row.numeric_error).toBeLessThan(0.01);
+  });
+
   test('left out: no value, no total; taken in again it is as before', async () => {
     const cast = await createBoxes();
     const [before] = itemsOf((await patch(cast, [{ asset: 'crate', part: 'body', revision: 1, density_kg_m3: 700 }])).json);

@@ -76,7 +76,7 @@ export interface PutOptions {
 export async function putCage(show: { id: string }, by: { id: string }, asset: string, parts: readonly TestPart[], { category = 'prop', scale, version, options, contentSha256 }: PutOptions = {}): Promise<string> {
   const cage = cageOf(parts);
   const measure = { ...POLYHEDRAL, ...options };
-  const measured = measureCage(cage, measure);
+  const measured = measureCage(cage, { ...measure, shells: true });
   const sha256 = contentSha256 ?? createHash('sha256').update(JSON.stringify(parts)).digest('hex');
   return database().transaction(async (tx) => {
     await tx.insert(assets).values({ showId: show.id, code: asset, category, scale }).onConflictDoNothing();
