@@ -99,9 +99,9 @@ describe('setting values', () => {
     const [row] = itemsOf((await patch(cast, [{ asset: 'crate', part: 'body', revision: 2, construction: 'hollow', density_kg_m3: 700, wall_m: 0.01 }])).json);
     expect(row).toMatchObject({ state: 'measured', construction: 'hollow', wall_m: 0.01, mass_source: 'density', volume_m3: solid.volume_m3 });
     // The box less the one inside it, each side of which is two walls shorter.
-    const sides = [row.com_x_m, row.com_y_m, row.com_z_m].map((half) => 2 * half);
+    const sides = [row.com_x_m, row.com_y_m, row.com_z_m].map((half) => 2 * half!);
     const wall = sides[0] * sides[1] * sides[2] - (sides[0] - 0.02) * (sides[1] - 0.02) * (sides[2] - 0.02);
-    expect(Math.abs(row.mass_kg / (700 * wall) - 1)).toBeLessThanOrEqual(row.numeric_error);
+    expect(Math.abs(row.mass_kg! / (700 * wall) - 1)).toBeLessThanOrEqual(row.numeric_error!);
     expect(row.numeric_error).toBeLessThan(0.01);
   });
 
