@@ -18,6 +18,7 @@ export const PART_COLUMNS = [
   'i3',
   'volume',
   'problems',
+  'locks',
   'state',
 ] as const;
 export type PartColumn = (typeof PART_COLUMNS)[number];

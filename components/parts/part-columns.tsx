@@ -9,6 +9,7 @@ import type { ShowFrame } from '@/lib/rules/show-frame';
 import { VALUE_STATES } from '@/lib/rules/states';
 import { METRES_PER } from '@/lib/rules/units';
 import { ConstructionCell } from './construction-cell';
+import { LocksCell } from './locks-cell';
 import { AssetName, PartName } from './name-cell';
 import { BlockedCount, ProblemCounts } from './problem-counts';
 import { SourceCell } from './source-cell';
@@ -178,6 +179,18 @@ export const COLUMN_SPECS: readonly ColumnSpec[] = [
     part: ({ row }) => <ProblemCounts findings={row.problems} />,
     asset: ({ total }) => <BlockedCount blocked={total.blocked} />,
     order: (of) => (isPart(of) ? problemWeight(of) : -of.blocked * 1000),
+  },
+  {
+    id: 'locks',
+    label: 'Locks',
+    name: 'Shots that have it locked, and those out of date',
+    width: 72,
+    givesWay: 2,
+    part: ({ row }, frame) => (
+      <LocksCell show={frame.code} asset={row.asset} lockedIn={row.locked_in} outdatedIn={row.outdated_in} />
+    ),
+    asset: () => null,
+    order: (of) => (isPart(of) && of.locked_in > 0 ? -(of.outdated_in * 1e6 + of.locked_in) : undefined),
   },
   {
     id: 'state',

@@ -25,6 +25,7 @@ import { Findings } from './findings';
 import { GeometryFacts } from './geometry-facts';
 import { MeasuredAsFacts } from './measured-as-facts';
 import { PartSettings } from './part-settings';
+import { PartShots } from './part-shots';
 import { PartVersions } from './part-versions';
 import { SetBy } from './set-by';
 import { SetMassDialog } from './set-mass-dialog';
@@ -81,6 +82,7 @@ export function PartPage({ frame, initial }: { frame: ShowFrame; initial: PartDe
             label="More about the part"
             className="px-4 pt-2 pb-8 md:px-6"
             tabs={[
+              { value: 'shots', label: 'Shots', content: <PartShots show={frame.code} slots={detail.shots} /> },
               {
                 value: 'versions',
                 label: 'Versions',

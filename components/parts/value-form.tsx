@@ -1,6 +1,6 @@
 'use client';
 
-import { useState, type SubmitEvent } from 'react';
+import { useState, type ReactNode, type SubmitEvent } from 'react';
 import { Button } from '@/components/ui/button';
 import { Checkbox } from '@/components/ui/checkbox';
 import { Field } from '@/components/ui/field';
@@ -31,10 +31,14 @@ interface ValueFormProps {
   materials: readonly MaterialOption[];
   busy: boolean;
   onSet: (changes: RowChange[]) => void;
+  /** For an override of one shot: nothing is left out there. */
+  forShot?: boolean;
+  /** What the caller asks beside the value, above the buttons. */
+  children?: ReactNode;
 }
 
 /** Mass, construction and whether a part counts, for one row or many at once. */
-export function ValueForm({ rows, frame, materials, busy, onSet }: ValueFormProps) {
+export function ValueForm({ rows, frame, materials, busy, onSet, forShot = false, children }: ValueFormProps) {
   const [form, setForm] = useState<Form>(() => startForm(rows, frame.linear_unit));
   const [refusal, setRefusal] = useState<Extract<FormReading, { ok: false }> | null>(null);
   const change = (part: Partial<Form>) => {
@@ -115,16 +119,21 @@ export function ValueForm({ rows, frame, materials, busy, onSet }: ValueFormProp
           </Field>
         ) : null}
       </div>
+      {children}
       <div className="flex items-center justify-between gap-2 border-t border-rule pt-4">
-        <Button
-          look="quiet"
-          disabled={busy}
-          onClick={() => onSet(rows.map((row) => ({ row, change: { left_out: !allLeftOut } })))}
-        >
-          {allLeftOut ? 'Take in' : 'Leave out'}
-        </Button>
+        {forShot ? (
+          <span />
+        ) : (
+          <Button
+            look="quiet"
+            disabled={busy}
+            onClick={() => onSet(rows.map((row) => ({ row, change: { left_out: !allLeftOut } })))}
+          >
+            {allLeftOut ? 'Take in' : 'Leave out'}
+          </Button>
+        )}
         <Button type="submit" look="filled" disabled={busy}>
-          {rows.length === 1 ? 'Set' : `Set ${rows.length.toLocaleString('en')} parts`}
+          {forShot ? 'Draft override' : rows.length === 1 ? 'Set' : `Set ${rows.length.toLocaleString('en')} parts`}
         </Button>
       </div>
     </form>

@@ -3,28 +3,13 @@ import type { Executor } from '@/db/client';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
 import type { LockShotsInput } from '@/lib/rules/inputs/lock-values';
+import type { LockShotsAnswer } from '@/lib/rules/lock-answers';
 import type { ValueState } from '@/lib/rules/states';
 import { StudioError } from '@/lib/rules/studio-error';
 import { getShowAccess } from '@/lib/shows/get-show-access';
 import { lockShowValues } from '@/lib/values/lock-show-values';
 import { findLockable, type Lockable } from './find-lockable';
 import { applyLocks } from './lock-values';
-
-/** A part of a shot that has nothing to be locked to. */
-export interface MissingValue {
-  shot: string;
-  asset: string;
-  part: string;
-  copy: string;
-  state: ValueState;
-  /** It has an override in the shot that nobody approved yet. */
-  override: boolean;
-}
-
-export interface LockShotsAnswer {
-  locked: number;
-  missing: MissingValue[];
-}
 
 /**
  * Locks whatever is approved in whole shots, a sequence, or one asset wherever it is, and not locked yet; an approved override comes
