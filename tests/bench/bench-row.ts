@@ -34,9 +34,13 @@ export interface RowAnswer {
   hash: string;
 }
 
+/** Quads each way of the torus that warms the compiler up, and for how long. */
+const WARM_QUADS = 60;
+const WARM_MS = 600;
+
 /** A row goes on until it has run so long and so often. */
-const LEAST_MS = 800;
-const LEAST_ROUNDS = 2;
+const LEAST_MS = 1_000;
+const LEAST_ROUNDS = 3;
 const MOST_ROUNDS = 200;
 
 export function optionsOf(scheme: Scheme): MeasureOptions {
@@ -54,26 +58,10 @@ function hashOf(values: readonly number[]): string {
 /** Runs a row's work in this process. */
 export async function runRow({ scheme, cage: spec, way }: RowTask): Promise<RowAnswer> {
   const options = optionsOf(scheme);
+  warmUp(workOn('file' in spec ? makeCage(spec) : torus(WARM_QUADS, spec.cut), options, way));
   const bytesBefore = process.memoryUsage.rss();
-  let cage: Cage | null = makeCage(spec);
-  const faces = cage.faceStarts.length - 1;
-  let work: () => { volume: number; estimate: number | null; hash: string };
-  let close = async (): Promise<void> => undefined;
-  if (typeof way === 'object') {
-    const kept = cage;
-    work = () => {
-      const volume = plainVolume(kept, options, way.refinements);
-      return { volume, estimate: null, hash: hashOf([volume]) };
-    };
-  } else if (way === 'file') {
-    const bytes = objBytes(cage);
-    cage = null;
-    work = () => summary(measureCage(readObj(bytes), options));
-  } else {
-    const kept = cage;
-    work = () => summary(measureCage(kept, options));
-    if (way === 'team') close = await startTeam();
-  }
+  const { faces, work } = countedWork(makeCage(spec), options, way);
+  const close = way === 'team' ? await startTeam() : undefined;
   let wallMs = Infinity;
   let cpuMs = Infinity;
   let rounds = 0;
@@ -86,14 +74,45 @@ export async function runRow({ scheme, cage: spec, way }: RowTask): Promise<RowA
     const { user, system } = process.cpuUsage(cpuBefore);
     cpuMs = Math.min(cpuMs, (user + system) / 1000);
   }
-  await close();
+  await close?.();
   const peak = 1024 * process.resourceUsage().maxRSS;
   return {
     faces, wallMs, cpuMs, rounds, volume: result.volume, ownEstimate: result.estimate, bytesPerFace: (peak - bytesBefore) / faces, peakMb: peak / 2 ** 20, hash: result.hash,
   };
 }
 
-function summary(measured: MeasuredCage): { volume: number; estimate: number; hash: string } {
+interface Outcome {
+  volume: number;
+  estimate: number | null;
+  hash: string;
+}
+
+/** What a way does with a cage; from a file on, the cage itself is not kept. */
+function workOn(cage: Cage, options: MeasureOptions, way: RowTask['way']): () => Outcome {
+  if (typeof way === 'object') {
+    return () => {
+      const volume = plainVolume(cage, options, way.refinements);
+      return { volume, estimate: null, hash: hashOf([volume]) };
+    };
+  }
+  if (way !== 'file') return () => summary(measureCage(cage, options));
+  return workOnFile(objBytes(cage), options);
+}
+
+function workOnFile(bytes: Uint8Array, options: MeasureOptions): () => Outcome {
+  return () => summary(measureCage(readObj(bytes), options));
+}
+
+function countedWork(cage: Cage, options: MeasureOptions, way: RowTask['way']): { faces: number; work: () => Outcome } {
+  return { faces: cage.faceStarts.length - 1, work: workOn(cage, options, way) };
+}
+
+/** The first rounds pay for the compiler: what is shown is what a thread that has measured before reaches. */
+function warmUp(work: () => Outcome): void {
+  for (const start = performance.now(); performance.now() - start < WARM_MS; ) work();
+}
+
+function summary(measured: MeasuredCage): Outcome {
   const components = measured.parts.flatMap((part) => part.components);
   const volume = components.reduce((sum, c) => sum + c.solid.volume, 0);
   const hash = hashOf(components.flatMap((c) => [c.solid.volume, ...c.solid.centroid, ...c.solid.centralSecond]));
