@@ -9,8 +9,9 @@ import type { Topology } from './topology';
 export function warnOfSharpness(cage: Cage, mesh: Topology, bodies: Bodies, findings: FindingList): void {
   const seen = new Uint8Array(mesh.vertices);
   for (let h = 0; h < mesh.vertexOf.length; h++) {
-    const part = bodies.partNames[bodies.partOf[mesh.faceOf[h]]];
     const vertex = mesh.vertexOf[h];
+    if (!(mesh.edgeSharpness[h] > 0) && !(mesh.vertexSharpness[vertex] > 0)) continue;
+    const part = bodies.partNames[bodies.partOf[mesh.faceOf[h]]];
     const position = positionOf(cage, vertex);
     if (mesh.edgeSharpness[h] > 0 && !(mesh.twin[h] >= 0 && mesh.twin[h] < h)) {
       findings.add('crease_not_carried', 'warning', part, placeOf({ face: mesh.faceOf[h], edge: halfEdgeEnds(mesh, h), position }),
