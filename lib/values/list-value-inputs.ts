@@ -2,12 +2,12 @@ import { sql } from 'drizzle-orm';
 import type { Executor } from '@/db/client';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
+import { VALUE_FORM } from '@/lib/rules/canonical-form';
 import type { ListValueInputsInput } from '@/lib/rules/inputs/list-value-inputs';
 import { findShot } from '@/lib/shots/find-shot';
 import { getShowAccess } from '@/lib/shows/get-show-access';
 import { computeValue } from './compute-value';
 import { loadValueInputs } from './load-value-inputs';
-import { VALUE_FORM } from './value-canonical';
 
 /** What a value follows from beside the cells of its row: with both, the hash can be made again (docs/conventions). */
 export interface ValueInputsEntry {

@@ -57,8 +57,8 @@ async function newestEvent(): Promise<number> {
   return Number(rows[0].id ?? 0);
 }
 
-async function look<Row extends Record<string, unknown>>(text: string): Promise<Row[]> {
-  return (await database().execute<Row>(text)).rows;
+async function look<Row extends object>(text: string): Promise<Row[]> {
+  return (await database().execute(text)).rows as unknown as Row[];
 }
 
 async function oneAct(random: (below: number) => number): Promise<RaceAct | null> {
@@ -75,10 +75,10 @@ async function oneAct(random: (below: number) => number): Promise<RaceAct | null
   if (choice < 2) return done('set', row.value_sha256, null, await send(set, plan.setter, 'PATCH', params, { items: [{ ...item, revision: row.revision, density_kg_m3: 1 + random(3) }] }));
   if (choice < 5) return done('approve', row.value_sha256, null, await send(approve, plan.lead, 'POST', params, { items: [{ ...item, value_sha256: row.value_sha256 }] }));
   const approval = approvals.length > 0 ? approvals[random(approvals.length)].id : null;
-  if (choice < 6) return approval && done('withdraw', approval, null, await send(withdraw, plan.lead, 'POST', params, { items: [{ value_id: approval }], reason: 'race' }));
-  if (choice < 8) return approval && done('lock', approval, shot, await send(lock, plan.lead, 'POST', { ...params, shot }, { items: [{ ...item, value_id: approval }] }));
+  if (choice < 6) return approval === null ? null : done('withdraw', approval, null, await send(withdraw, plan.lead, 'POST', params, { items: [{ value_id: approval }], reason: 'race' }));
+  if (choice < 8) return approval === null ? null : done('lock', approval, shot, await send(lock, plan.lead, 'POST', { ...params, shot }, { items: [{ ...item, value_id: approval }] }));
   const held = locks.length > 0 ? locks[random(locks.length)] : null;
-  return held && done('unlock', held.id, held.code, await send(unlock, plan.lead, 'POST', { ...params, shot: held.code }, { items: [{ lock: held.id }], reason: 'race' }));
+  return held === null ? null : done('unlock', held.id, held.code, await send(unlock, plan.lead, 'POST', { ...params, shot: held.code }, { items: [{ lock: held.id }], reason: 'race' }));
 }
 
 async function client(index: number): Promise<void> {
