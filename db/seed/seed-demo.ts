@@ -10,6 +10,7 @@ import { setMember } from '@/lib/shows/set-member';
 import { demoFiles, type DemoFile } from './cages/demo-files';
 import { contextOf, CREW, seedCrew } from './demo-crew';
 import { seedMasses } from './demo-masses';
+import { seedShots } from './demo-shots';
 import { importDemoFiles } from './import-demo-files';
 import { seedMaterials } from './seed-materials';
 
@@ -24,6 +25,8 @@ export interface DemoReport {
   files: number;
   failed: number;
   massesSet: number;
+  /** Steps of the shots' story done by this call; 0 where all of it was there. */
+  shotSteps: number;
 }
 
 /** Of each asset the newest version comes with the second import, the older ones with the first. */
@@ -47,7 +50,7 @@ async function ensureShow(db: Database): Promise<string> {
 }
 
 /**
- * The demo: people, material library, show, cages by the real import path, masses by the real verb. Running it again does
+ * The demo: people, material library, show, cages by the real import path, masses, shots, approvals and locks by the real verbs. Running it again does
  * what is missing and nothing twice.
  */
 export async function seedDemo(db: Database, dataFolder: string): Promise<DemoReport> {
@@ -61,7 +64,7 @@ export async function seedDemo(db: Database, dataFolder: string): Promise<DemoRe
   const seeded = files.filter((file) => !file.path.endsWith(`/${TO_DROP}`));
   const td = await contextOf(db, CREW.ilvo);
   const done = await db.$count(imports, and(eq(imports.showId, showId), eq(imports.state, 'done')));
-  const report: DemoReport = { toDrop, files: 0, failed: 0, massesSet: 0 };
+  const report: DemoReport = { toDrop, files: 0, failed: 0, massesSet: 0, shotSteps: 0 };
   for (const batch of inTwoImports(seeded).slice(done)) {
     const { counts } = await importDemoFiles(td, DEMO_SHOW, batch);
     report.files += counts.total;
@@ -69,5 +72,6 @@ export async function seedDemo(db: Database, dataFolder: string): Promise<DemoRe
   }
   const isSet = await db.$count(auditEvents, and(eq(auditEvents.showId, showId), eq(auditEvents.act, 'set-values')));
   if (isSet === 0) report.massesSet = await seedMasses(td, DEMO_SHOW);
+  report.shotSteps = await seedShots({ td, lead: await contextOf(db, CREW.tamsel), artist: await contextOf(db, CREW.hesta) }, showId, DEMO_SHOW);
   return report;
 }
