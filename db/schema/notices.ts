@@ -3,12 +3,19 @@ import { mails } from './mails';
 import { shows } from './shows';
 import { users } from './users';
 
-/** What a notice says: a subject and short lines, with the page it is about. */
+/** What a notice says. */
 export interface NoticeText {
+  /** What happened where, in a few words. */
   subject: string;
+  /** Who did what, the reason if there is one: a sentence each. */
   lines: string[];
-  /** Path of the page, without the address of the studio. */
+  /** What it is about, one a line. */
+  list: string[];
+  /** Label of the link, and the path of its page without the address of the studio. */
+  label: string;
   path: string;
+  /** Why this person is told. */
+  why: string;
 }
 
 /** Something that a person is to be told, at once or in the daily digest, as they chose. `key` keeps one thing from being told twice. */

@@ -14,6 +14,8 @@ export const users = pgTable(
     passwordHash: text('password_hash'),
     /** How the person wants to be told: each thing at once, once a day, or not at all. */
     mailChoice: text('mail_choice', { enum: MAIL_CHOICES }).notNull().default('at_once'),
+    /** When the person was last sent a digest. */
+    digestAt: timestamp('digest_at', { withTimezone: true }),
     isAdmin: boolean('is_admin').notNull().default(false),
     /** Raised to end every session of the user. */
     sessionEpoch: integer('session_epoch').notNull().default(0),
