@@ -4,7 +4,8 @@ const nextConfig = {
   poweredByHeader: false,
   compress: true,
   agentRules: false,
-  experimental: { agentUpgrade: false },
+  // As much as a call of the API may send: one act may name every part of a large show.
+  experimental: { agentUpgrade: false, serverActions: { bodySizeLimit: '16mb' } },
   // Types are checked by `npm test`; a first start need not wait for them.
   typescript: { ignoreBuildErrors: true },
   headers: async () => [{ source: '/:path*', headers: [{ key: 'X-Content-Type-Options', value: 'nosniff' }] }],

@@ -10,6 +10,8 @@ export interface TableActs {
   /** Starts typing a mass with this text. */
   type: (start: string) => void;
   form: () => void;
+  /** Asks for the approval of what is chosen. */
+  ask: () => void;
   open: () => void;
   /** Opens (true) or closes the asset of the active row. */
   unfold: (open: boolean) => void;
@@ -42,6 +44,8 @@ export function answerTableKey(event: KeyboardEvent, acts: TableActs, pageRows: 
     F2: () => acts.type(''),
     m: acts.form,
     M: acts.form,
+    a: acts.ask,
+    A: acts.ask,
     i: acts.inspect,
     I: acts.inspect,
     '/': acts.find,

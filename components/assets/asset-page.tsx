@@ -2,6 +2,7 @@
 
 import Link from 'next/link';
 import { useState } from 'react';
+import { AssetApproval } from '@/components/approvals/asset-approval';
 import { RowBeam } from '@/components/beam/row-beam';
 import { Facts, Section } from '@/components/parts/facts';
 import { Findings } from '@/components/parts/findings';
@@ -9,6 +10,7 @@ import { massFact, WeightFacts } from '@/components/parts/weight-facts';
 import { StateMark } from '@/components/states/state-mark';
 import { PartViewer } from '@/components/viewer/part-viewer';
 import { useAssetMesh } from '@/components/viewer/use-asset-mesh';
+import type { ApprovalActions } from '@/lib/rules/approval-actions';
 import type { AssetDetail } from '@/lib/rules/part-detail';
 import type { ShowFrame } from '@/lib/rules/show-frame';
 import { CATEGORY_WORDS } from '@/lib/rules/states';
@@ -17,7 +19,7 @@ import { AssetParts } from './asset-parts';
 import { AssetVersions } from './asset-versions';
 
 /** An asset: its surface, its parts and what they weigh together. */
-export function AssetPage({ frame, detail }: { frame: ShowFrame; detail: AssetDetail }) {
+export function AssetPage({ frame, detail, actions }: { frame: ShowFrame; detail: AssetDetail; actions: ApprovalActions }) {
   const { total, parts, findings, versions, scale } = detail;
   const [chosen, setChosen] = useState(parts[0]?.part ?? '');
   const mesh = useAssetMesh(frame.code, total.asset, total.version);
@@ -73,6 +75,9 @@ export function AssetPage({ frame, detail }: { frame: ShowFrame; detail: AssetDe
               <Findings findings={ofFile} />
             </Section>
           )}
+          <Section title="Approval">
+            <AssetApproval frame={frame} asset={total.asset} rows={detail.approvals} actions={actions} />
+          </Section>
           <Section title="Balance along the longest axis">
             <RowBeam of={total} unit={unit} />
           </Section>

@@ -15,6 +15,8 @@ interface RowBeamProps {
   /** Longest box edge among the asset's parts, metres; without it the beam takes its full length. */
   largest?: number;
   partner?: Weighed | null;
+  /** Centre of mass of the approved value, metres. */
+  approved?: readonly [number, number, number] | null;
 }
 
 function centreOf(of: Weighed): [number, number, number] | null {
@@ -30,7 +32,7 @@ function inertiaOf(of: Weighed): [number, number, number] | null {
 }
 
 /** The beam of a row or of an asset's total; nothing without a box. */
-export function RowBeam({ of, unit, largest, partner = null }: RowBeamProps) {
+export function RowBeam({ of, unit, largest, partner = null, approved = null }: RowBeamProps) {
   if (of.bounds_m === null) return null;
   const geometry = beamGeometry({
     bounds: of.bounds_m,
@@ -39,6 +41,7 @@ export function RowBeam({ of, unit, largest, partner = null }: RowBeamProps) {
     inertia: inertiaOf(of),
     largest: largest ?? longestAxis(of.bounds_m).extent,
     partner: partner === null ? null : centreOf(partner),
+    approved,
   });
   return (
     <Beam

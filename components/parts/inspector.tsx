@@ -26,18 +26,20 @@ interface InspectorProps {
   shown: readonly PartNode[];
   frame: ShowFrame;
   onSet: () => void;
+  /** Null where nothing chosen can be asked for. */
+  onAsk: (() => void) | null;
 }
 
 /** Everything about what is chosen, with its units beside the labels. */
-export function Inspector({ active, chosen, shown, frame, onSet }: InspectorProps) {
+export function Inspector({ active, chosen, shown, frame, onSet, onAsk }: InspectorProps) {
   const one = chosen.length === 1 ? chosen[0] : null;
   if (active?.kind === 'asset' && chosen.length === active.parts.length)
-    return <AssetFacts node={active} frame={frame} onSet={onSet} />;
-  if (one !== null) return <PartFacts node={one} frame={frame} onSet={onSet} />;
-  if (chosen.length > 1) return <SelectionSummary parts={chosen} onSet={frame.may_set ? onSet : null} />;
+    return <AssetFacts node={active} frame={frame} onSet={onSet} onAsk={onAsk} />;
+  if (one !== null) return <PartFacts node={one} frame={frame} onSet={onSet} onAsk={onAsk} />;
+  if (chosen.length > 1) return <SelectionSummary parts={chosen} onSet={frame.may_set ? onSet : null} onAsk={onAsk} />;
   return (
     <>
-      <SelectionSummary parts={shown} onSet={null} />
+      <SelectionSummary parts={shown} onSet={null} onAsk={null} />
       <Section title="Rows">
         <p className="text-13 text-ink-2">Choose a row to see all of its numbers. Several rows can be set at once.</p>
       </Section>
@@ -45,14 +47,21 @@ export function Inspector({ active, chosen, shown, frame, onSet }: InspectorProp
   );
 }
 
-function Acts({ frame, onSet, href }: { frame: ShowFrame; onSet: () => void; href?: string }) {
+type ActsProps = Pick<InspectorProps, 'frame' | 'onSet' | 'onAsk'>;
+
+function Acts({ frame, onSet, onAsk, href }: ActsProps & { href?: string }) {
   return (
-    <div className="flex gap-2 px-4 pb-3">
+    <div className="flex flex-wrap gap-2 px-4 pb-3">
       {frame.may_set ? (
         <Button size="small" onClick={onSet}>
           Set mass
         </Button>
       ) : null}
+      {onAsk === null ? null : (
+        <Button size="small" onClick={onAsk}>
+          Ask for approval
+        </Button>
+      )}
       {href === undefined ? null : (
         <Button size="small" look="quiet" asChild>
           <Link href={href}>Open part</Link>
@@ -62,7 +71,7 @@ function Acts({ frame, onSet, href }: { frame: ShowFrame; onSet: () => void; hre
   );
 }
 
-function PartFacts({ node, frame, onSet }: { node: PartNode; frame: ShowFrame; onSet: () => void }) {
+function PartFacts({ node, frame, onSet, onAsk }: ActsProps & { node: PartNode }) {
   const { row } = node;
   return (
     <>
@@ -74,7 +83,7 @@ function PartFacts({ node, frame, onSet }: { node: PartNode; frame: ShowFrame; o
           <StateMark state={row.state} />
         </p>
       </header>
-      <Acts frame={frame} onSet={onSet} href={partHref(frame.code, row)} />
+      <Acts frame={frame} onSet={onSet} onAsk={onAsk} href={partHref(frame.code, row)} />
       {row.problems.length === 0 ? null : (
         <Section title="Problems and warnings">
           <Findings findings={row.problems} />
@@ -96,7 +105,7 @@ function PartFacts({ node, frame, onSet }: { node: PartNode; frame: ShowFrame; o
   );
 }
 
-function AssetFacts({ node, frame, onSet }: { node: AssetNode; frame: ShowFrame; onSet: () => void }) {
+function AssetFacts({ node, frame, onSet, onAsk }: ActsProps & { node: AssetNode }) {
   const { total } = node;
   return (
     <>
@@ -108,7 +117,7 @@ function AssetFacts({ node, frame, onSet }: { node: AssetNode; frame: ShowFrame;
           <StateMark state={total.state} />
         </p>
       </header>
-      <Acts frame={frame} onSet={onSet} />
+      <Acts frame={frame} onSet={onSet} onAsk={onAsk} />
       <Section title="Balance along the longest axis">
         <RowBeam of={total} unit={frame.linear_unit} />
       </Section>

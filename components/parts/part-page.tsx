@@ -2,6 +2,7 @@
 
 import Link from 'next/link';
 import { useMemo, useState } from 'react';
+import { PartApproval } from '@/components/approvals/part-approval';
 import { RowBeam } from '@/components/beam/row-beam';
 import { StateMark } from '@/components/states/state-mark';
 import { Button } from '@/components/ui/button';
@@ -13,6 +14,7 @@ import { useMaterials } from '@/hooks/use-materials';
 import { usePart } from '@/hooks/use-part';
 import { useSaveActs } from '@/hooks/use-save-acts';
 import { useSetValues } from '@/hooks/use-set-values';
+import type { ApprovalActions } from '@/lib/rules/approval-actions';
 import type { PartDetail } from '@/lib/rules/part-detail';
 import { rowName } from '@/lib/rules/part-key';
 import type { PartRow } from '@/lib/rules/part-row';
@@ -32,7 +34,7 @@ import { SetMassDialog } from './set-mass-dialog';
 import { massFact, WeightFacts } from './weight-facts';
 
 /** One part: its surface, its numbers, where they come from and what was set before. */
-export function PartPage({ frame, initial }: { frame: ShowFrame; initial: PartDetail }) {
+export function PartPage({ frame, initial, actions }: { frame: ShowFrame; initial: PartDetail; actions: ApprovalActions }) {
   const { data: detail } = usePart(frame.code, initial);
   const { row } = detail;
   const mesh = useAssetMesh(frame.code, row.asset, row.version);
@@ -86,7 +88,7 @@ export function PartPage({ frame, initial }: { frame: ShowFrame; initial: PartDe
               {
                 value: 'versions',
                 label: 'Versions',
-                content: <PartVersions versions={detail.versions} unit={unit} />,
+                content: <PartVersions frame={frame} asset={row.asset} part={rowName(row)} versions={detail.versions} />,
               },
               { value: 'set', label: 'What was set', content: <PartSettings settings={detail.settings} unit={unit} /> },
               { value: 'measured', label: 'How it was measured', content: <MeasuredAsFacts detail={detail} /> },
@@ -103,8 +105,13 @@ export function PartPage({ frame, initial }: { frame: ShowFrame; initial: PartDe
               <Findings findings={detail.findings} />
             </Section>
           )}
+          {detail.approval === null ? null : (
+            <Section title="Approval">
+              <PartApproval frame={frame} row={detail.approval} actions={actions} />
+            </Section>
+          )}
           <Section title="Balance along the longest axis">
-            <RowBeam of={row} unit={unit} />
+            <RowBeam of={row} unit={unit} approved={detail.approval?.last?.com_m ?? null} />
           </Section>
           <Section title="Mass">
             <Facts facts={[massFact(row.mass_kg), { label: 'Construction', value: row.construction }]} />

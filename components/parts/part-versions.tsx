@@ -1,11 +1,22 @@
+import Link from 'next/link';
 import { Figure, ENGINEERING_WIDTHS } from '@/components/ui/figure';
 import { Table, TableCell, TableHead, TableRow } from '@/components/ui/table';
 import { Moment } from '@/components/ui/moment';
+import { compareHref } from '@/lib/rules/compare-href';
 import type { PartVersion } from '@/lib/rules/part-detail';
-import { METRES_PER, type LinearUnit } from '@/lib/rules/units';
+import type { ShowFrame } from '@/lib/rules/show-frame';
+import { METRES_PER } from '@/lib/rules/units';
+
+interface PartVersionsProps {
+  frame: ShowFrame;
+  asset: string;
+  part: string;
+  versions: readonly PartVersion[];
+}
 
 /** The part in each version of its asset, newest first, its volume against the version before. */
-export function PartVersions({ versions, unit }: { versions: readonly PartVersion[]; unit: LinearUnit }) {
+export function PartVersions({ frame, asset, part, versions }: PartVersionsProps) {
+  const unit = frame.linear_unit;
   const cubic = METRES_PER[unit] ** 3;
   const square = METRES_PER[unit] ** 2;
   return (
@@ -19,6 +30,9 @@ export function PartVersions({ versions, unit }: { versions: readonly PartVersio
           <TableHead className="text-right">Area, {unit}²</TableHead>
           <TableHead className="text-right">Faces</TableHead>
           <TableHead>Imported</TableHead>
+          <TableHead>
+            <span className="sr-only">Compare</span>
+          </TableHead>
         </tr>
       </thead>
       <tbody>
@@ -56,6 +70,13 @@ export function PartVersions({ versions, unit }: { versions: readonly PartVersio
             )}
             <TableCell className="text-13 text-ink-2">
               <Moment at={version.created_at} /> by {version.created_by}
+            </TableCell>
+            <TableCell className="text-13">
+              {version.current || !version.present ? null : (
+                <Link href={compareHref(frame.code, { asset, part, a: version.version, b: 'current' })} className="link">
+                  Compare<span className="sr-only"> {version.version} with the current version</span>
+                </Link>
+              )}
             </TableCell>
           </TableRow>
         ))}

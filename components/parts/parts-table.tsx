@@ -3,6 +3,7 @@
 import { useRouter } from 'next/navigation';
 import { useMemo, useRef, useState, type ClipboardEvent } from 'react';
 import { toast } from 'sonner';
+import { askableRows, useQuestion } from '@/components/approvals/use-question';
 import { answerTableKey, type TableActs } from '@/hooks/answer-table-key';
 import { useArrangedRows } from '@/hooks/use-arranged-rows';
 import { useMaterials } from '@/hooks/use-materials';
@@ -14,6 +15,7 @@ import { useSaveActs } from '@/hooks/use-save-acts';
 import { useSetValues } from '@/hooks/use-set-values';
 import { groupByAsset, partNodes, passes, type TableNode } from '@/lib/rules/arrange-parts';
 import { entryChanges } from '@/lib/rules/entry-changes';
+import type { ApprovalActions } from '@/lib/rules/approval-actions';
 import type { MassEntry as Entry } from '@/lib/rules/parse-mass-entry';
 import { assetKey, partKey } from '@/lib/rules/part-key';
 import type { PartRow } from '@/lib/rules/part-row';
@@ -22,12 +24,12 @@ import { moveActive, NO_SELECTION, selectRow, type SelectHow } from '@/lib/rules
 import type { ShowFrame } from '@/lib/rules/show-frame';
 import { ConflictDialog } from './conflict-dialog';
 import { Inspector } from './inspector';
-import { KeysDialog } from './keys-dialog';
 import { MassEntry } from './mass-entry';
 import { COLUMN_SPECS } from './part-columns';
 import { partHref } from './part-href';
 import { PartsGrid } from './parts-grid';
 import { PartsHeading } from './parts-heading';
+import { PartsKeys } from './parts-keys';
 import { PartsStatusBar } from './parts-status-bar';
 import { PartsToolbar } from './parts-toolbar';
 import { PhoneActs } from './phone-acts';
@@ -35,7 +37,7 @@ import { SetMassDialog } from './set-mass-dialog';
 import { NoParts, NothingFits, NotRead, TableSkeleton } from './table-states';
 
 /** The show's parts: read, found, chosen and set. */
-export function PartsTable({ frame }: { frame: ShowFrame }) {
+export function PartsTable({ frame, actions }: { frame: ShowFrame; actions: ApprovalActions }) {
   const router = useRouter();
   const online = useOnline();
   const parts = useParts(frame.code);
@@ -44,6 +46,7 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
   const materialNames = useMemo(() => materials.map((material) => material.name), [materials]);
   const values = useSetValues(frame.code);
   const save = useSaveActs(values);
+  const question = useQuestion(frame, actions);
   const filters = usePartFilters();
   const [{ q, state, category, sort, down, flat, columns }, setFilters] = filters;
 
@@ -94,6 +97,9 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
     if (frame.may_set && targetRows.length > 0) setFormRows(targetRows);
   }
 
+  const askable = askableRows(targetRows);
+  const openQuestion = frame.may_ask && askable.length > 0 ? () => question.open(askable) : null;
+
   function enter(entry: Entry) {
     const together = active?.kind === 'asset' && targets.length === active.parts.length;
     const changes = entryChanges(entry, targetRows, together);
@@ -127,6 +133,7 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
     none: () => setSelection((now) => ({ ...now, chosen: new Set() })),
     type: (start) => selection.active !== null && edit(selection.active, start),
     form: openForm,
+    ask: () => openQuestion?.(),
     open: () => open(active),
     unfold: (wanted) =>
       active !== null && fold(active.kind === 'asset' ? active.key : assetKey(active.row.asset), wanted),
@@ -197,11 +204,11 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
             tabIndex={0}
             className="w-74 shrink-0 overflow-y-auto border-l border-rule bg-bench max-lg:hidden"
           >
-            <Inspector active={active} chosen={targets} shown={shown} frame={frame} onSet={openForm} />
+            <Inspector active={active} chosen={targets} shown={shown} frame={frame} onSet={openForm} onAsk={openQuestion} />
           </aside>
         ) : null}
       </div>
-      <PhoneActs chosen={targetRows} frame={frame} onSet={openForm} onLetGo={acts.none} />
+      <PhoneActs chosen={targetRows} frame={frame} onSet={openForm} onAsk={openQuestion} onLetGo={acts.none} />
       <PartsStatusBar
         parts={shown.length}
         assets={assets}
@@ -231,7 +238,8 @@ export function PartsTable({ frame }: { frame: ShowFrame }) {
         onSetMine={(changes) => void save.set(changes)}
         onClose={save.leaveConflict}
       />
-      <KeysDialog open={keysOpen} onClose={() => setKeysOpen(false)} />
+      {question.dialog}
+      <PartsKeys open={keysOpen} onClose={() => setKeysOpen(false)} />
     </>
   );
 }

@@ -10,11 +10,13 @@ interface PhoneActsProps {
   chosen: readonly PartRow[];
   frame: ShowFrame;
   onSet: () => void;
+  /** Null where nothing chosen can be asked for. */
+  onAsk: (() => void) | null;
   onLetGo: () => void;
 }
 
 /** What can be done with the chosen rows where there is no inspector beside the table. */
-export function PhoneActs({ chosen, frame, onSet, onLetGo }: PhoneActsProps) {
+export function PhoneActs({ chosen, frame, onSet, onAsk, onLetGo }: PhoneActsProps) {
   if (chosen.length === 0) return null;
   return (
     <div className="flex items-center gap-2 border-t border-rule bg-raised px-4 py-2 lg:hidden">
@@ -23,6 +25,7 @@ export function PhoneActs({ chosen, frame, onSet, onLetGo }: PhoneActsProps) {
           {chosen.length === 1 ? 'Set mass' : `Set ${chosen.length.toLocaleString('en')} parts`}
         </Button>
       ) : null}
+      {onAsk === null ? null : <Button onClick={onAsk}>Ask</Button>}
       {chosen.length === 1 ? (
         <Button asChild>
           <Link href={partHref(frame.code, chosen[0])}>Open part</Link>

@@ -8,7 +8,7 @@ import { massFact } from './weight-facts';
 const STATES: readonly RowState[] = ['locked', ...VALUE_STATES];
 
 /** Several rows at once: what they weigh together and how they stand. */
-export function SelectionSummary({ parts, onSet }: { parts: readonly PartNode[]; onSet: (() => void) | null }) {
+export function SelectionSummary({ parts, onSet, onAsk }: { parts: readonly PartNode[]; onSet: (() => void) | null; onAsk: (() => void) | null }) {
   const rows = parts.map((part) => part.row);
   const weighed = rows.filter((row) => row.mass_kg !== null);
   const assets = new Set(rows.map((row) => row.asset)).size;
@@ -21,11 +21,18 @@ export function SelectionSummary({ parts, onSet }: { parts: readonly PartNode[];
           of {assets === 1 ? rows[0].asset : `${assets.toLocaleString('en')} assets`}
         </p>
       </header>
-      {onSet === null ? null : (
-        <div className="px-4 pb-3">
-          <Button size="small" onClick={onSet}>
-            Set mass
-          </Button>
+      {onSet === null && onAsk === null ? null : (
+        <div className="flex flex-wrap gap-2 px-4 pb-3">
+          {onSet === null ? null : (
+            <Button size="small" onClick={onSet}>
+              Set mass
+            </Button>
+          )}
+          {onAsk === null ? null : (
+            <Button size="small" onClick={onAsk}>
+              Ask for approval
+            </Button>
+          )}
         </div>
       )}
       <Section title="Together">

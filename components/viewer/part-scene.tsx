@@ -7,6 +7,7 @@ import type { TokenColours } from '@/hooks/use-token-colours';
 import { equalEllipsoid } from '@/lib/rules/equal-ellipsoid';
 import type { UpAxis } from '@/lib/rules/units';
 import { EqualSolid } from './equal-solid';
+import { Light } from './light';
 import { Outline } from './outline';
 import { PrincipalAxes } from './principal-axes';
 import type { DrawnAsset } from './read-asset-mesh';
@@ -119,19 +120,6 @@ export default function PartScene({ asset, part, weight, choices, up, fit, colou
         </>
       ) : null}
     </Canvas>
-  );
-}
-
-/** Neutral light that comes along with the eye, so that no side is ever dark. */
-function Light() {
-  const camera = useThree((state) => state.camera);
-  return (
-    <>
-      <hemisphereLight intensity={1.1} groundColor="#777777" />
-      <primitive object={camera}>
-        <directionalLight position={[0.6, 0.8, 1]} intensity={1.7} />
-      </primitive>
-    </>
   );
 }
 

@@ -2,12 +2,14 @@
 
 import { Maximize } from 'lucide-react';
 import dynamic from 'next/dynamic';
-import { Component, useState, useSyncExternalStore, type ReactNode } from 'react';
+import { useState } from 'react';
 import { Chip } from '@/components/ui/chip';
 import { IconButton } from '@/components/ui/icon-button';
+import { useDrawable } from '@/hooks/use-drawable';
 import { useTokenColours } from '@/hooks/use-token-colours';
 import type { LinearUnit, UpAxis } from '@/lib/rules/units';
 import { describeWeight } from './describe-weight';
+import { DrawingBoundary } from './drawing-boundary';
 import type { DrawnWeight, ViewChoices } from './part-scene';
 import type { DrawnAsset } from './read-asset-mesh';
 
@@ -38,7 +40,7 @@ export function PartViewer({ asset, part, weight, unit, up, failure = null, with
   const [choices, setChoices] = useState<ViewChoices>({ cage: false, axes: true, solid: false, rest: withRest });
   const [fit, setFit] = useState(0);
   const colours = useTokenColours();
-  const drawable = useSyncExternalStore(noChange, canDraw, () => true);
+  const drawable = useDrawable();
   const told = failure ?? (drawable ? null : 'This browser cannot draw in three dimensions.');
 
   return (
@@ -89,31 +91,4 @@ export function PartViewer({ asset, part, weight, unit, up, failure = null, with
       <figcaption className="sr-only">{describeWeight(part, weight, unit)}</figcaption>
     </figure>
   );
-}
-
-const noChange = () => () => undefined;
-
-let drawableHere: boolean | null = null;
-
-function canDraw(): boolean {
-  drawableHere ??= document.createElement('canvas').getContext('webgl2') !== null;
-  return drawableHere;
-}
-
-/** A drawing that breaks does not take the numbers with it. */
-class DrawingBoundary extends Component<{ children: ReactNode }, { broken: boolean }> {
-  override state = { broken: false };
-
-  static getDerivedStateFromError() {
-    return { broken: true };
-  }
-
-  override render() {
-    if (!this.state.broken) return this.props.children;
-    return (
-      <p className="flex h-full items-center justify-center px-6 text-14 text-ink-2">
-        The surface could not be drawn. The numbers stand beside it.
-      </p>
-    );
-  }
 }

@@ -11,6 +11,8 @@ interface PrincipalAxesProps {
   reach: number;
   /** Axes that could as well lie elsewhere in their plane are broken lines. */
   free: string;
+  /** Set behind each number, to tell two sets of axes apart. */
+  mark?: string;
   colour: string;
   ground: string;
 }
@@ -22,7 +24,7 @@ const DIRECTIONS = [
 ] as const;
 
 /** The three principal axes through the centre of mass, neutral in colour and told apart by their numbers. */
-export function PrincipalAxes({ centre, quaternion: [w, x, y, z], reach, free, colour, ground }: PrincipalAxesProps) {
+export function PrincipalAxes({ centre, quaternion: [w, x, y, z], reach, free, mark = '', colour, ground }: PrincipalAxesProps) {
   const rotation = useMemo(() => new Quaternion(x, y, z, w), [w, x, y, z]);
   return (
     <group position={[...centre]} quaternion={rotation}>
@@ -30,7 +32,7 @@ export function PrincipalAxes({ centre, quaternion: [w, x, y, z], reach, free, c
         <Axis
           key={index}
           direction={direction}
-          number={index + 1}
+          label={`${index + 1}${mark}`}
           reach={reach}
           free={free.includes(String(index + 1))}
           colour={colour}
@@ -46,16 +48,16 @@ const LABEL_SIZE: [number, number, number] = [0.024, 0.024, 1];
 
 interface AxisProps {
   direction: readonly [number, number, number];
-  number: number;
+  label: string;
   reach: number;
   free: boolean;
   colour: string;
   ground: string;
 }
 
-function Axis({ direction, number, reach, free, colour, ground }: AxisProps) {
+function Axis({ direction, label: text, reach, free, colour, ground }: AxisProps) {
   const geometry = useMemo(() => lineGeometry(direction, reach, free), [direction, reach, free]);
-  const label = useMemo(() => labelTexture(String(number), colour, ground), [number, colour, ground]);
+  const label = useMemo(() => labelTexture(text, colour, ground), [text, colour, ground]);
   return (
     <>
       <lineSegments geometry={geometry}>

@@ -81,10 +81,10 @@ export function lockedValue(db: Executor, lockId: string): Promise<PartValue[]> 
     from locks l join approvals a on a.id = l.approval_id join users u on u.id = a.approved_by where l.id = ${lockId}`);
 }
 
-/** The override that stands for a lock's part in its shot; none where the shot uses the part's own value. */
-export function overrideOfLock(db: Executor, lockId: string): Promise<PartValue[]> {
+/** The override that stands for a part in a shot; none where the shot uses the part's own value. */
+export function overrideValue(db: Executor, shotId: string, assetId: string, part: string): Promise<PartValue[]> {
   return storedValues(db, sql`
     select o.part, o.version, o.scale, ${numbersOf('o')} as numbers, o.volume_m3, o.area_m2, u.name as by, o.drafted_at as at
-    from locks l join shot_overrides o on o.shot_id = l.shot_id and o.part_id = l.part_id and o.dropped_at is null and o.mass_kg is not null
-    join users u on u.id = o.drafted_by where l.id = ${lockId}`);
+    from shot_overrides o join parts p on p.id = o.part_id join users u on u.id = o.drafted_by
+    where o.shot_id = ${shotId} and p.asset_id = ${assetId} and p.name = ${part} and o.dropped_at is null and o.mass_kg is not null`);
 }

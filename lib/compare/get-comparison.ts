@@ -10,8 +10,9 @@ import type { ComparedSide, ComparisonAnswer } from '@/lib/rules/comparison';
 import type { GetComparisonInput } from '@/lib/rules/inputs/get-comparison';
 import { StudioError } from '@/lib/rules/studio-error';
 import { isWithinTolerance, verdictWords } from '@/lib/rules/verdict';
+import { findShot } from '@/lib/shots/find-shot';
 import { getShowAccess, type Show } from '@/lib/shows/get-show-access';
-import { approvedValues, lockedValue, overrideOfLock, valuesOfVersion, type PartValue } from './compared-sides';
+import { approvedValues, lockedValue, overrideValue, valuesOfVersion, type PartValue } from './compared-sides';
 import { mergePartValues } from './merge-part-values';
 
 interface Subject {
@@ -22,10 +23,13 @@ interface Subject {
   /** Newest first. */
   versions: { id: string; label: string }[];
   lock: FoundLock | null;
+  /** The lock's, or that of the override asked for. */
+  shot: { id: string; code: string } | null;
 }
 
 interface FoundLock extends Record<string, unknown> {
   id: string;
+  shot_id: string;
   shot: string;
   copy: string;
   asset: string;
@@ -34,7 +38,8 @@ interface FoundLock extends Record<string, unknown> {
 
 /**
  * Two values of a part, or of an asset's parts together, with their differences: `a` before, `b` after. Without `a` it is the last
- * standing approval, or where there is none the version before the current one; without `b` what is current.
+ * standing approval, or where there is none the version before the current one; without `b` what is current. With a shot its override
+ * stands against the part's own value.
  * Errors: bad_input, not_found for an asset, part, version or lock that the show does not have.
  */
 export async function getComparison(context: Context, input: GetComparisonInput): Promise<ComparisonAnswer> {
@@ -44,8 +49,9 @@ export async function getComparison(context: Context, input: GetComparisonInput)
   const approved = await approvedValues(db, subject.assetId, subject.part);
   const [current] = subject.versions;
   const previous = subject.versions[1] ?? current;
-  const before = subject.lock ? await lockSide(db, subject, subject.lock) : await sideOf(db, subject, approved, input.a ?? (approved.length > 0 ? 'approved' : previous.label));
-  const after = await sideOf(db, subject, approved, input.b ?? 'current');
+  const usual = input.shot !== undefined ? 'current' : approved.length > 0 ? 'approved' : previous.label;
+  const before = subject.lock ? await lockSide(db, subject, subject.lock) : await sideOf(db, subject, approved, input.a ?? usual);
+  const after = await sideOf(db, subject, approved, input.b ?? (input.shot === undefined ? 'current' : 'override'));
   const differences = before.numbers && after.numbers ? compareNumbers(before.numbers, after.numbers) : null;
   const box = before.numbers?.bounds_m ?? null;
   return {
@@ -78,12 +84,13 @@ async function findSubject(db: Executor, show: Show, input: GetComparisonInput):
     const { rows } = await db.execute(sql`select 1 from parts where asset_id = ${asset.id} and name = ${part}`);
     if (rows.length === 0) throw new StudioError('not_found', `${asset.code} has no part ${part}.`);
   }
-  return { assetId: asset.id, asset: asset.code, part, scale: asset.scale, versions, lock };
+  const shot = lock ? { id: lock.shot_id, code: lock.shot } : input.shot === undefined ? null : await findShot(db, show.id, input.shot);
+  return { assetId: asset.id, asset: asset.code, part, scale: asset.scale, versions, lock, shot };
 }
 
 async function getLock(db: Executor, showId: string, id: string): Promise<FoundLock> {
   const { rows } = await db.execute<FoundLock>(sql`
-    select l.id, s.code as shot, l.copy, a.asset, a.part from locks l join shots s on s.id = l.shot_id join approvals a on a.id = l.approval_id
+    select l.id, s.id as shot_id, s.code as shot, l.copy, a.asset, a.part from locks l join shots s on s.id = l.shot_id join approvals a on a.id = l.approval_id
     where l.id = ${id} and l.show_id = ${showId}`);
   if (rows.length === 0) throw new StudioError('not_found', `There is no lock ${id} in this show.`);
   return rows[0];
@@ -95,10 +102,11 @@ async function sideOf(db: Executor, subject: Subject, approved: PartValue[], ref
     const version = approved.length === 1 ? approved[0].version : null;
     return toSide(subject, approved, { ref, name: 'the last approval', version: version ?? current.label, about: version ? `Approved with ${version}.` : 'Approved, each part as it last was.', missing: 'Nothing is approved.' });
   }
-  const override = ref === 'current' && subject.lock ? await overrideOfLock(db, subject.lock.id) : [];
-  if (override.length > 0) {
-    return toSide(subject, override, { ref, name: `the override in ${subject.lock?.shot}`, version: override[0].version, about: `Override as it stands, with ${override[0].version}.`, missing: '' });
-  }
+  const { shot, part } = subject;
+  const asked = ref === 'override' || (ref === 'current' && subject.lock !== null);
+  const override = asked && shot && part !== null ? await overrideValue(db, shot.id, subject.assetId, part) : [];
+  if (override.length > 0) return toSide(subject, override, { ref, name: `the override in ${shot?.code}`, version: override[0].version, about: `Override as it stands, with ${override[0].version}.`, missing: '' });
+  if (ref === 'override') throw new StudioError('not_found', `${part} has no override in ${shot?.code ?? 'this shot'}.`);
   const version = ref === 'current' ? current : subject.versions.find((one) => one.label === ref);
   if (!version) throw new StudioError('not_found', `${subject.asset} has no version ${ref}.`);
   const values = await valuesOfVersion(db, subject.assetId, version.id, subject.part);

@@ -4,6 +4,7 @@ import { assetVersions } from '@/db/schema/asset-versions';
 import { geometryRecords } from '@/db/schema/geometry-records';
 import { importFiles } from '@/db/schema/import-files';
 import { users } from '@/db/schema/users';
+import { readQueueRows } from '@/lib/approvals/read-queue-rows';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
 import type { AssetRefInput } from '@/lib/rules/inputs/part-ref';
@@ -31,6 +32,7 @@ export async function getAsset(context: Context, input: AssetRefInput): Promise<
     parts: await partRowsWithFindings(db, show.code, stored.rows),
     findings: await findStoredFindings(db, record.id),
     versions: await assetVersionEntries(db, asset.id),
+    approvals: await readQueueRows(db, show, actor, stored.rows.map((row) => ({ partId: row.part_id, shotId: null }))),
     measured_as: measuredAs(record),
   };
 }

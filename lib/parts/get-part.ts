@@ -4,6 +4,7 @@ import { geometryParts } from '@/db/schema/geometry-parts';
 import { materials } from '@/db/schema/materials';
 import { settings } from '@/db/schema/settings';
 import { users } from '@/db/schema/users';
+import { readQueueRows } from '@/lib/approvals/read-queue-rows';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
 import type { PartRefInput } from '@/lib/rules/inputs/part-ref';
@@ -43,6 +44,7 @@ export async function getPart(context: Context, input: PartRefInput): Promise<Pa
     versions: await partVersions(db, asset.id, stored.part, METRES_PER[show.linearUnit] * asset.scale),
     settings: await partSettings(db, stored.part_id),
     shots: await findSlots(db, show, { partId: stored.part_id }),
+    approval: (await readQueueRows(db, show, actor, [{ partId: stored.part_id, shotId: null }]))[0] ?? null,
     measured_as: measuredAs(record),
     cap_area_share: caps?.area ?? 0,
     cap_volume_share: caps?.volume ?? 0,

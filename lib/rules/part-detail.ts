@@ -1,3 +1,4 @@
+import type { QueueRow } from './approval-queue';
 import type { AssetTotal, PartRow, RowFinding } from './part-row';
 import type { ShotSlot } from './shot-detail';
 import type { Construction, Origin } from './states';
@@ -69,6 +70,8 @@ export interface PartDetail {
   settings: PartSetting[];
   /** The shots that the part is in. */
   shots: ShotSlot[];
+  /** How its value stands to its last approval; null while it has none. */
+  approval: QueueRow | null;
   measured_as: MeasuredAs;
   /** Shares of the closed part's area and volume that are caps over its borders and holes. */
   cap_area_share: number;
@@ -94,5 +97,7 @@ export interface AssetDetail {
   /** Findings of the whole file, and of its parts under their names. */
   findings: (DetailFinding & { part: string | null })[];
   versions: AssetVersionEntry[];
+  /** How the values of its parts stand to their last approvals; parts without a value are absent. */
+  approvals: QueueRow[];
   measured_as: MeasuredAs;
 }

@@ -8,6 +8,9 @@ export interface ShowFrame {
   up_axis: UpAxis;
   /** Whether the reader may set masses and construction here. */
   may_set: boolean;
+  /** Whether the reader may ask for approvals here, and whether they may give them. */
+  may_ask: boolean;
+  may_approve: boolean;
   /** Whether the reader may import cages here. */
   may_import: boolean;
 }

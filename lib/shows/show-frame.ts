@@ -11,6 +11,8 @@ export function showFrame({ show, role }: Pick<ShowAccess, 'show' | 'role'>): Sh
     linear_unit: show.linearUnit,
     up_axis: show.upAxis,
     may_set: writable && may(role, 'setValues'),
+    may_ask: writable && may(role, 'askApproval'),
+    may_approve: writable && may(role, 'approveValues'),
     may_import: writable && may(role, 'importCages'),
   };
 }

@@ -7,6 +7,7 @@ export function showNavItems({ show, role }: Pick<ShowAccess, 'show' | 'role'>):
   return [
     ...(may(role, 'readShow') ? [{ href, label: 'Parts' }] : []),
     ...(may(role, 'importCages') && !show.archivedAt ? [{ href: `${href}/import`, label: 'Import', covers: `${href}/imports` }] : []),
+    ...(may(role, 'readShow') ? [{ href: `${href}/approvals`, label: 'Approvals', covers: `${href}/compare` }] : []),
     ...(may(role, 'readShow') ? [{ href: `${href}/shots`, label: 'Shots', covers: `${href}/sequences` }] : []),
     ...(may(role, 'exportRows') ? [{ href: `${href}/export`, label: 'Export' }] : []),
     ...(may(role, 'readHistory') ? [{ href: `${href}/history`, label: 'History' }] : []),

@@ -13,12 +13,16 @@ import { makePartPage, makePartRow } from '../support/make-part-row';
 vi.setConfig({ testTimeout: 60_000 });
 vi.mock('next/navigation', () => ({ useRouter: () => ({ push: vi.fn() }) }));
 
+const actions = { approve: vi.fn(), withdraw: vi.fn(), ask: vi.fn() };
+
 const frame = {
   code: 'tarn',
   title: 'Tarn',
   linear_unit: 'cm',
   up_axis: 'y',
   may_set: true,
+  may_ask: true,
+  may_approve: false,
   may_import: true,
 } as const;
 
@@ -94,7 +98,7 @@ function show(search = '') {
     <NuqsTestingAdapter searchParams={search} hasMemory>
       <QueryClientProvider client={makeQueryClient()}>
         <TooltipProvider>
-          <PartsTable frame={frame} />
+          <PartsTable frame={frame} actions={actions} />
         </TooltipProvider>
         <Toaster />
       </QueryClientProvider>
@@ -203,7 +207,7 @@ describe('PartsTable', () => {
       <NuqsTestingAdapter>
         <QueryClientProvider client={makeQueryClient()}>
           <TooltipProvider>
-            <PartsTable frame={{ ...frame, may_set: false, may_import: false }} />
+            <PartsTable frame={{ ...frame, may_set: false, may_import: false, may_ask: false }} actions={actions} />
           </TooltipProvider>
         </QueryClientProvider>
       </NuqsTestingAdapter>,

@@ -1,0 +1,122 @@
+'use client';
+
+import { Canvas } from '@react-three/fiber';
+import { useMemo } from 'react';
+import { Box3, DoubleSide, Matrix4, Sphere, Vector3, type BufferGeometry } from 'three';
+import { Light } from '@/components/viewer/light';
+import type { DrawnWeight } from '@/components/viewer/part-scene';
+import { PrincipalAxes } from '@/components/viewer/principal-axes';
+import type { DrawnAsset } from '@/components/viewer/read-asset-mesh';
+import { ViewControls } from '@/components/viewer/view-controls';
+import type { TokenColours } from '@/hooks/use-token-colours';
+import type { UpAxis } from '@/lib/rules/units';
+import { Ghost } from './ghost';
+
+/** One side as it is drawn; metres, the asset's axes. */
+export interface DrawnSide {
+  asset: DrawnAsset;
+  /** What the surface is multiplied by, about the asset's origin. */
+  scale: number;
+  weight: DrawnWeight | null;
+}
+
+interface CompareSceneProps {
+  before: DrawnSide | null;
+  after: DrawnSide | null;
+  /** Null: all parts. */
+  part: string | null;
+  /** Which of the two is the solid one; the other is a ghost. */
+  solid: 'before' | 'after';
+  axes: boolean;
+  up: UpAxis;
+  fit: number;
+  colours: TokenColours;
+}
+
+type Three = [number, number, number];
+
+function surfacesOf(side: DrawnSide | null, part: string | null): BufferGeometry[] {
+  return side?.asset.parts.flatMap((one) => (one.surface !== null && (part === null || one.name === part) ? [one.surface] : [])) ?? [];
+}
+
+/** Where a side's geometry lies in the drawing, whose own origin is that of `base`, so that digits last. */
+function placeOf(side: DrawnSide, base: Three): Three {
+  return [0, 1, 2].map((i) => side.asset.origin[i] * side.scale - base[i]) as Three;
+}
+
+/** Both limit surfaces over one another, one solid and one as a ghost, with both centres of mass and both sets of axes. */
+export default function CompareScene({ before, after, part, solid, axes, up, fit, colours }: CompareSceneProps) {
+  const origin = after ?? before;
+  const base = useMemo((): Three => (origin === null ? [0, 0, 0] : (origin.asset.origin.map((value) => value * origin.scale) as Three)), [origin]);
+  const sphere = useMemo(() => {
+    const box = new Box3();
+    for (const side of [before, after]) {
+      if (side === null) continue;
+      const place = new Matrix4().makeTranslation(...placeOf(side, base)).scale(new Vector3(side.scale, side.scale, side.scale));
+      for (const geometry of surfacesOf(side, part)) {
+        geometry.computeBoundingBox();
+        if (geometry.boundingBox !== null) box.union(geometry.boundingBox.clone().applyMatrix4(place));
+      }
+    }
+    return box.isEmpty() ? new Sphere() : box.getBoundingSphere(new Sphere());
+  }, [before, after, base, part]);
+
+  return (
+    <Canvas frameloop="demand" dpr={[1, 2]} camera={{ fov: 30 }} gl={{ antialias: true, alpha: true }} resize={{ scroll: false }}>
+      <ViewControls centre={sphere.center.toArray()} radius={sphere.radius || 1} up={up} fit={fit} />
+      <Light />
+      {(['before', 'after'] as const).map((which) => {
+        const side = which === 'before' ? before : after;
+        return side === null ? null : (
+          <group key={which} position={placeOf(side, base)} scale={side.scale}>
+            {surfacesOf(side, part).map((geometry) => (solid === which ? <Solid key={geometry.uuid} geometry={geometry} /> : <Ghost key={geometry.uuid} geometry={geometry} colour={colours.ink} />))}
+          </group>
+        );
+      })}
+      {before?.weight ? <Balance weight={before.weight} base={base} radius={sphere.radius} which="before" axes={axes} colours={colours} /> : null}
+      {after?.weight ? <Balance weight={after.weight} base={base} radius={sphere.radius} which="after" axes={axes} colours={colours} /> : null}
+    </Canvas>
+  );
+}
+
+function Solid({ geometry }: { geometry: BufferGeometry }) {
+  return (
+    <mesh geometry={geometry}>
+      <meshStandardMaterial color="#8b8b89" roughness={0.82} metalness={0} side={DoubleSide} polygonOffset polygonOffsetFactor={1} polygonOffsetUnits={1} />
+    </mesh>
+  );
+}
+
+interface BalanceProps {
+  weight: DrawnWeight;
+  base: Three;
+  radius: number;
+  which: 'before' | 'after';
+  axes: boolean;
+  colours: TokenColours;
+}
+
+/** Centre of mass and axes of one side: a full brass ball after, a hollow cage of a ball before. */
+function Balance({ weight, base, radius, which, axes, colours }: BalanceProps) {
+  const centre = [0, 1, 2].map((i) => weight.centreM[i] - base[i]) as Three;
+  const after = which === 'after';
+  return (
+    <>
+      <mesh position={centre} renderOrder={after ? 8 : 9}>
+        <sphereGeometry args={after ? [radius * 0.02, 20, 14] : [radius * 0.028, 10, 7]} />
+        <meshBasicMaterial color={after ? colours.brass : colours.ink} wireframe={!after} depthTest={false} transparent opacity={after ? 1 : 0.8} />
+      </mesh>
+      {axes ? (
+        <PrincipalAxes
+          centre={centre}
+          quaternion={weight.quatWxyz}
+          reach={radius * (after ? 0.95 : 0.78)}
+          free={weight.freeAxes}
+          mark={after ? '' : '′'}
+          colour={after ? colours.ink : colours['ink-3']}
+          ground={colours.ground}
+        />
+      ) : null}
+    </>
+  );
+}

@@ -1,0 +1,83 @@
+import type { ComparedNumbers, ComparisonAnswer } from './comparison';
+import { METRES_PER, type LinearUnit } from './units';
+
+/** One line of the table of differences, in the unit that its group or label names. */
+export interface DifferenceLine {
+  key: string;
+  label: string;
+  unit: string | null;
+  before: number | null;
+  after: number | null;
+  difference: number | null;
+  /** Of what the group says; null where there is nothing to take it of. */
+  percent: number | null;
+  /** The show's tolerance for this line, in percent. */
+  limitPercent: number | null;
+}
+
+export interface DifferenceGroup {
+  title: string;
+  /** What the percentages of the group are of. */
+  percentOf: string;
+  lines: DifferenceLine[];
+}
+
+const INERTIA = ['ixx', 'iyy', 'izz', 'ixy', 'ixz', 'iyz'] as const;
+const SUBSCRIPTS = { ixx: 'Ixx', iyy: 'Iyy', izz: 'Izz', ixy: 'Ixy', ixz: 'Ixz', iyz: 'Iyz' } as const;
+
+/** Before, after and the difference of everything that is compared, lengths in the show's unit. */
+export function differenceGroups(of: ComparisonAnswer, unit: LinearUnit): DifferenceGroup[] {
+  const { before: a, after: b } = { before: of.before.numbers, after: of.after.numbers };
+  const length = METRES_PER[unit];
+  const line = (key: string, label: string, lineUnit: string | null, pick: (numbers: ComparedNumbers) => number | null, more: { per?: number; percentOf?: number | null; limitPercent?: number } = {}): DifferenceLine => {
+    const per = more.per ?? 1;
+    const [before, after] = [a && pick(a), b && pick(b)].map((value) => (value === null ? null : value / per));
+    const difference = before === null || after === null ? null : after - before;
+    const whole = more.percentOf === undefined ? before : more.percentOf === null ? null : more.percentOf / per;
+    return { key, label, unit: lineUnit, before, after, difference, percent: difference === null || !whole ? null : (difference / Math.abs(whole)) * 100, limitPercent: more.limitPercent ?? null };
+  };
+  const alone = (key: string, label: string, lineUnit: string | null, difference: number | null, percent: number | null, limitPercent: number | null): DifferenceLine => ({ key, label, unit: lineUnit, before: null, after: null, difference, percent, limitPercent });
+  const { differences: d, tolerances } = of;
+  const shiftM = d && Math.hypot(...d.com_shift_m);
+  const largest = a?.i3_kg_m2 ?? null;
+  return [
+    {
+      title: 'Mass and surface',
+      percentOf: 'of the value before',
+      lines: [
+        line('mass', 'Mass', 'kg', (n) => n.mass_kg, { limitPercent: tolerances.mass_percent }),
+        line('volume', 'Volume', `${unit}³`, (n) => n.volume_m3, { per: length ** 3 }),
+        line('area', 'Area', `${unit}²`, (n) => n.area_m2, { per: length ** 2 }),
+      ],
+    },
+    {
+      title: `Centre of mass in the axes of ${of.asset}`,
+      percentOf: 'of its size',
+      lines: [
+        ...(['x', 'y', 'z'] as const).map((axis) => line(`com_${axis}`, axis, unit, (n) => n[`com_${axis}_m`], { per: length, percentOf: of.size_m })),
+        alone('shift', 'Shift', unit, shiftM === null ? null : shiftM / length, d && d.com_shift_of_size * 100, tolerances.com_percent),
+      ],
+    },
+    {
+      title: 'Principal moments and axes',
+      percentOf: 'of the moment before',
+      lines: [
+        ...([1, 2, 3] as const).map((index) => line(`i${index}`, `I${index}`, 'kg m²', (n) => n[`i${index}_kg_m2`])),
+        alone('rotation', d?.rotation_deg === null ? 'Rotation of the axes, free' : 'Rotation of the axes', '°', d?.rotation_deg ?? null, null, null),
+      ],
+    },
+    {
+      title: 'Inertia matrix about the centre of mass',
+      percentOf: 'of the largest moment before',
+      lines: [
+        ...INERTIA.map((entry) => line(entry, SUBSCRIPTS[entry], 'kg m²', (n) => n[`${entry}_kg_m2`], { percentOf: largest })),
+        alone('inertia', 'Matrix as a whole', null, null, d && d.inertia_change * 100, tolerances.moments_percent),
+      ],
+    },
+  ];
+}
+
+/** Whether a line's change is beyond the show's tolerance; null where none is set for it or nothing is compared. */
+export function isBeyond(line: Pick<DifferenceLine, 'percent' | 'limitPercent'>): boolean | null {
+  return line.limitPercent === null || line.percent === null ? null : Math.abs(line.percent) > line.limitPercent;
+}
