@@ -24,7 +24,7 @@ export async function importDemoFiles(context: ActorContext, show: string, files
   await submitImport(context, { show, import: id });
   const deadline = Date.now() + LONGEST_WAIT_MS;
   while (Date.now() < deadline) {
-    await drainQueue(context.db, { measure: (file) => measureFile({ ...file, port: null }) });
+    await drainQueue(context.db, { measure: (file) => measureFile({ ...file, idleThreads: 0, port: null }) });
     const detail = await getImport(context, { show, import: id });
     if (detail.state === 'done') return detail;
     await wait(200);
