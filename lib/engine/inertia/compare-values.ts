@@ -29,7 +29,7 @@ export interface ValueComparison {
 
 /**
  * Differences of a value from an earlier one. `sizeM` is the diagonal of the part's box, m; where it is 0 the shift over it is 0.
- * Axes have no sign, so the rotation is the least over the four proper choices of signs. It is silent where axes are free in either
+ * Axes have no sign, so the rotation is the least over the four proper choices of signs, 120° at most. It is silent where axes are free in either
  * value and where a gap between two moments is below ten times their change, both at equal trace: growing alone turns nothing.
  */
 export function compareValues(before: ComparedValue, after: ComparedValue, sizeM: number): ValueComparison {
@@ -67,11 +67,11 @@ function leastRotation(before: ComparedValue, after: ComparedValue): number | nu
   const free23 = free('23', 1);
   if (free12 && free23) return null;
   const [w, x, y, z] = relativeQuaternion(before.quatWxyz, after.quatWxyz);
-  if (free12) return degrees(2 * Math.atan2(Math.hypot(x, y), Math.hypot(w, z)));
-  if (free23) return degrees(2 * Math.atan2(Math.hypot(y, z), Math.hypot(w, x)));
+  if (free12) return lineDegrees(2 * Math.atan2(Math.hypot(x, y), Math.hypot(w, z)));
+  if (free23) return lineDegrees(2 * Math.atan2(Math.hypot(y, z), Math.hypot(w, x)));
   const real = Math.max(Math.abs(w), Math.abs(x), Math.abs(y), Math.abs(z));
   const rest = [w, x, y, z].map(Math.abs).sort((p, q) => p - q).slice(0, 3);
-  return degrees(2 * Math.atan2(Math.hypot(...rest), real));
+  return (2 * Math.atan2(Math.hypot(...rest), real) * 180) / Math.PI;
 }
 
 /** Rotation from the axes before to those after, in the axes before: conj(before) · after. */
@@ -86,7 +86,7 @@ function relativeQuaternion(p: readonly number[], q: readonly number[]): [number
   ];
 }
 
-/** An axis has no direction: no angle between two is above 90°. */
-function degrees(angle: number): number {
+/** Of the one axis that is not free: it has no direction, so no angle between two is above 90°. */
+function lineDegrees(angle: number): number {
   return (Math.min(angle, Math.PI - angle) * 180) / Math.PI;
 }
