@@ -27,7 +27,7 @@ const SUBSCRIPTS = { ixx: 'Ixx', iyy: 'Iyy', izz: 'Izz', ixy: 'Ixy', ixz: 'Ixz',
 
 /** Before, after and the difference of everything that is compared, lengths in the show's unit. */
 export function differenceGroups(of: ComparisonAnswer, unit: LinearUnit): DifferenceGroup[] {
-  const { before: a, after: b } = { before: of.before.numbers, after: of.after.numbers };
+  const [a, b] = [of.before.numbers, of.after.numbers];
   const length = METRES_PER[unit];
   const line = (key: string, label: string, lineUnit: string | null, pick: (numbers: ComparedNumbers) => number | null, more: { per?: number; percentOf?: number | null; limitPercent?: number } = {}): DifferenceLine => {
     const per = more.per ?? 1;
@@ -63,7 +63,7 @@ export function differenceGroups(of: ComparisonAnswer, unit: LinearUnit): Differ
       percentOf: 'of the moment before',
       lines: [
         ...([1, 2, 3] as const).map((index) => line(`i${index}`, `I${index}`, 'kg m²', (n) => n[`i${index}_kg_m2`])),
-        alone('rotation', d?.rotation_deg === null ? 'Rotation of the axes, free' : 'Rotation of the axes', '°', d?.rotation_deg ?? null, null, null),
+        alone('rotation', `Rotation of the axes${d?.rotation_deg === null ? silentWords(a, b) : ''}`, '°', d?.rotation_deg ?? null, null, null),
       ],
     },
     {
@@ -75,6 +75,11 @@ export function differenceGroups(of: ComparisonAnswer, unit: LinearUnit): Differ
       ],
     },
   ];
+}
+
+/** Why nothing is said of the axes: they are free, or their moments lie too close for what they changed by. */
+function silentWords(before: ComparedNumbers | null, after: ComparedNumbers | null): string {
+  return [before, after].some((one) => one !== null && one.free_axes !== '') ? ', free' : ', moments too close to tell';
 }
 
 /** Whether a line's change is beyond the show's tolerance; null where none is set for it or nothing is compared. */
