@@ -14,6 +14,8 @@ const schema = z.object({
   /** smtp(s)://user:password@host:port; without it messages land in the local mailbox. */
   SMTP_URL: z.string().min(1).optional(),
   MAIL_FROM: z.string().min(3).default('Weighhouse <weighhouse@localhost>'),
+  /** Hour of the day, in UTC, when daily digests go out. */
+  WEIGHHOUSE_DIGEST_HOUR: z.coerce.number().int().min(0).max(23).default(7),
   LOG_LEVEL: z.enum(['trace', 'debug', 'info', 'warn', 'error', 'silent']).default('info'),
   WEIGHHOUSE_MAX_FILE_BYTES: z.coerce.number().int().positive().default(2 * 1024 ** 3),
   WEIGHHOUSE_MAX_IMPORT_FILES: z.coerce.number().int().positive().default(20_000),
@@ -40,6 +42,7 @@ function read() {
     authSecret: env.NEXTAUTH_SECRET ?? null,
     smtpUrl: env.SMTP_URL ?? null,
     mailFrom: env.MAIL_FROM,
+    digestHour: env.WEIGHHOUSE_DIGEST_HOUR,
     logLevel: env.LOG_LEVEL,
     maxFileBytes: env.WEIGHHOUSE_MAX_FILE_BYTES,
     maxImportFiles: env.WEIGHHOUSE_MAX_IMPORT_FILES,

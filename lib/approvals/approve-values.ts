@@ -4,6 +4,7 @@ import { shows } from '@/db/schema/shows';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
 import { recordEvent } from '@/lib/history/record-event';
+import { tellOfApprovals } from '@/lib/notices/tell-of-approvals';
 import type { ApproveValuesInput } from '@/lib/rules/inputs/approve-values';
 import { StudioError } from '@/lib/rules/studio-error';
 import { getShowAccess } from '@/lib/shows/get-show-access';
@@ -41,10 +42,11 @@ export async function approveValues(context: Context, input: ApproveValuesInput)
       const own = fresh.filter((one) => one.shotId === null).map((one) => one.partId);
       await refreshApprovalStates(tx, own, revision + 1);
       await tx.update(shows).set({ revision: revision + 1 }).where(eq(shows.id, show.id));
-      await tx.update(approvalRequests).set({ closedAt: sql`now()` }).where(and(inArray(approvalRequests.partId, own), isNull(approvalRequests.closedAt)));
+      const asked = await tx.update(approvalRequests).set({ closedAt: sql`now()` }).where(and(inArray(approvalRequests.partId, own), isNull(approvalRequests.closedAt))).returning({ partId: approvalRequests.partId, askedBy: approvalRequests.askedBy });
       const subject = fresh.length === 1 ? `${fresh[0].asset}/${fresh[0].part}` : `${fresh.length} values`;
-      const items = fresh.map((one) => ({ partId: one.partId, field: one.shotId === null ? 'approval' : 'override_approval', before: one.lastApprovalId, after: ids.get(approvalKey(one.partId, one.shotId)) ?? null }));
-      await recordEvent(tx, acting, { showId: show.id, act: input.carry_over ? 'carry-over' : 'approve-values', subject, reason: input.note || null, items });
+      const items = fresh.map((one) => ({ partId: one.partId, shotId: one.shotId, field: one.shotId === null ? 'approval' : 'override_approval', before: one.lastApprovalId, after: ids.get(approvalKey(one.partId, one.shotId)) ?? null }));
+      const eventId = await recordEvent(tx, acting, { showId: show.id, act: input.carry_over ? 'carry-over' : 'approve-values', subject, reason: input.note || null, items });
+      await tellOfApprovals(tx, acting, show, { eventId, note: input.note || null, valueIds: [...ids.values()], asked });
     }
     return { items: candidates.map((one) => ({ asset: one.asset, part: one.part, value_id: one.valueId ?? ids.get(approvalKey(one.partId, one.shotId)) ?? '' })) };
   });

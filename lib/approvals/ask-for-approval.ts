@@ -2,6 +2,7 @@ import { sql } from 'drizzle-orm';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
 import { recordEvent } from '@/lib/history/record-event';
+import { tellOfQuestion } from '@/lib/notices/tell-of-approvals';
 import type { AskForApprovalInput } from '@/lib/rules/inputs/ask-for-approval';
 import { STATE_WORDS } from '@/lib/rules/states';
 import { StudioError, type ItemError } from '@/lib/rules/studio-error';
@@ -34,7 +35,8 @@ export async function askForApproval(context: Context, input: AskForApprovalInpu
     if (concerned === 0) return { asked: 0 };
     const subject = parts.length === 1 ? `${parts[0].asset}/${parts[0].part}` : `${concerned} values`;
     const items = parts.map((one) => ({ partId: one.partId, field: 'asked', before: null, after: input.take_back ? null : one.valueSha256 }));
-    await recordEvent(tx, acting, { showId: show.id, act: input.take_back ? 'take-question-back' : 'ask-for-approval', subject, reason: input.note || null, items });
+    const eventId = await recordEvent(tx, acting, { showId: show.id, act: input.take_back ? 'take-question-back' : 'ask-for-approval', subject, reason: input.note || null, items });
+    if (!input.take_back) await tellOfQuestion(tx, acting, show, { eventId, note: input.note || null, parts });
     return { asked: concerned };
   });
 }

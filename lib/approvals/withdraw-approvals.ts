@@ -4,6 +4,7 @@ import { shows } from '@/db/schema/shows';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
 import { recordEvent } from '@/lib/history/record-event';
+import { tellOfWithdrawals } from '@/lib/notices/tell-of-approvals';
 import type { WithdrawApprovalsInput } from '@/lib/rules/inputs/withdraw-approvals';
 import { StudioError, type ItemError } from '@/lib/rules/studio-error';
 import { getShowAccess } from '@/lib/shows/get-show-access';
@@ -43,8 +44,9 @@ export async function withdrawApprovals(context: Context, input: WithdrawApprova
     await refreshApprovalStates(tx, taken.filter((one) => one.shot_id === null).map((one) => one.part_id), revision + 1);
     await tx.update(shows).set({ revision: revision + 1 }).where(eq(shows.id, show.id));
     const subject = taken.length === 1 ? `${taken[0].asset}/${taken[0].part}` : `${taken.length} approvals`;
-    const items = taken.map((one) => ({ partId: one.part_id, field: one.shot_id === null ? 'approval' : 'override_approval', before: one.id, after: null }));
-    await recordEvent(tx, acting, { showId: show.id, act: 'withdraw-approvals', subject, reason: input.reason, items });
+    const items = taken.map((one) => ({ partId: one.part_id, shotId: one.shot_id, field: one.shot_id === null ? 'approval' : 'override_approval', before: one.id, after: null }));
+    const eventId = await recordEvent(tx, acting, { showId: show.id, act: 'withdraw-approvals', subject, reason: input.reason, items });
+    await tellOfWithdrawals(tx, acting, show, { eventId, reason: input.reason, valueIds: taken.map((one) => one.id) });
     return { items: taken.map((one) => ({ asset: one.asset, part: one.part, value_id: one.id })) };
   });
 }

@@ -6,12 +6,14 @@ import type { ActorContext } from '@/lib/context';
 
 export interface ChangedField {
   partId?: string | null;
+  /** Of a lock, an override, or what is in a shot. */
+  shotId?: string | null;
   field: string;
   before: string | null;
   after: string | null;
 }
 
-/** Writes one act and the fields it changed to the history, within the change's own transaction. */
+/** Writes one act and the fields it changed to the history, within the change's own transaction. Answers the act's id. */
 export async function recordEvent(
   tx: Transaction,
   context: Pick<ActorContext, 'actor' | 'origin'>,
@@ -31,11 +33,11 @@ export async function recordEvent(
     })
     .returning({ id: auditEvents.id });
   if (items.length > 0) {
-    const rows = items.map((item) => ({ part_id: item.partId ?? null, field: item.field, before: item.before, after: item.after }));
+    const rows = items.map((item) => ({ part_id: item.partId ?? null, shot_id: item.shotId ?? null, field: item.field, before: item.before, after: item.after }));
     await tx.execute(sql`
-      insert into audit_items (event_id, part_id, field, before, after)
-      select ${row.id}::bigint, part_id, field, before, after
-      from json_to_recordset(${JSON.stringify(rows)}::json) as given(part_id uuid, field text, before text, after text)`);
+      insert into audit_items (event_id, part_id, shot_id, field, before, after)
+      select ${row.id}::bigint, part_id, shot_id, field, before, after
+      from json_to_recordset(${JSON.stringify(rows)}::json) as given(part_id uuid, shot_id uuid, field text, before text, after text)`);
   }
   return row.id;
 }

@@ -4,11 +4,13 @@ import { imports } from '@/db/schema/imports';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
 import { recordEvent } from '@/lib/history/record-event';
+import { ensureQueues } from '@/lib/jobs/send-jobs';
 import type { ImportAnswer } from '@/lib/rules/import-answer';
 import type { ImportRefInput } from '@/lib/rules/inputs/import-ref';
 import { StudioError } from '@/lib/rules/studio-error';
 import { getShowAccess } from '@/lib/shows/get-show-access';
 import { describeImport } from './describe-import';
+import { sendTelling } from './end-file';
 import { getImportRow } from './get-import-row';
 import { notifyImport } from './notify-import';
 
@@ -20,6 +22,7 @@ export async function cancelImport(context: Context, input: ImportRefInput): Pro
   const { show } = await getShowAccess(context.db, known.actor, input.show, 'importCages');
   const row = await getImportRow(context.db, show.id, input.import);
   if (row.state === 'done') throw new StudioError('conflict', 'This import is done already.');
+  await ensureQueues(context.db);
   await context.db.transaction(async (tx) => {
     // Files first, as everywhere: a worker that is ending one holds its row and then wants the import's.
     const waiting = await tx
@@ -39,6 +42,7 @@ export async function cancelImport(context: Context, input: ImportRefInput): Pro
       .set({ state: 'failed', errorCode: 'cancelled', errorMessage: 'The import was cancelled before this file was measured.', endedAt: sql`now()`, leaseBy: null, leaseUntil: null })
       .where(and(eq(importFiles.importId, row.id), inArray(importFiles.state, UNFINISHED)));
     await recordEvent(tx, known, { showId: show.id, act: 'cancel-import', subject: row.id, items: [{ field: 'files', before: null, after: String(waiting.length) }] });
+    await sendTelling(tx, row.id);
     await notifyImport(tx, row.id);
   });
   const now = await getImportRow(context.db, show.id, row.id);

@@ -2,6 +2,7 @@ import { and, eq, inArray, sql } from 'drizzle-orm';
 import type { Transaction } from '@/db/client';
 import { importFiles } from '@/db/schema/import-files';
 import { imports } from '@/db/schema/imports';
+import { sendJobs } from '@/lib/jobs/send-jobs';
 import type { ImportFileError } from '@/lib/rules/import-answer';
 import type { ImportFile } from './lease';
 import { notifyImport } from './notify-import';
@@ -33,11 +34,11 @@ export async function endFile(tx: Transaction, file: ImportFile, end: FileEnd): 
 
 /**
  * Ends the import when no file is left. Its row is locked first, so that of two last files that end side by side the later
- * one sees the other's end. Lock order everywhere: files, asset, show, import.
+ * one sees the other's end. Lock order everywhere: files, asset, show, import. A job follows that tells people what it moved.
  */
 export async function endImportWhenOver(tx: Transaction, importId: string): Promise<void> {
   await tx.select({ id: imports.id }).from(imports).where(eq(imports.id, importId)).for('no key update');
-  await tx
+  const ended = await tx
     .update(imports)
     .set({ state: 'done', endedAt: sql`now()` })
     .where(
@@ -46,5 +47,13 @@ export async function endImportWhenOver(tx: Transaction, importId: string): Prom
         inArray(imports.state, ['queued', 'running']),
         sql`not exists (select 1 from import_files where import_id = ${importId} and state in ('queued', 'reading', 'measuring'))`,
       ),
-    );
+    )
+    .returning({ id: imports.id });
+  if (ended.length > 0) await sendTelling(tx, importId);
+}
+
+/** Queues the telling of an import that has ended; of one that was tried again, of what came since. */
+export async function sendTelling(tx: Transaction, importId: string): Promise<void> {
+  const { rows } = await tx.execute<{ since: string | null }>(sql`select max(at)::text as since from audit_events where act = 'retry-import' and subject = ${importId}::text`);
+  await sendJobs(tx, 'tell-import', [{ importId, since: rows[0].since }]);
 }

@@ -1,10 +1,12 @@
 import PgBoss from 'pg-boss';
 import { sql } from 'drizzle-orm';
+import type { z } from 'zod';
 import type { Database } from '@/db/client';
 import { log } from '@/lib/log';
 import type { EnginePool } from './engine-pool';
 import { importFilesHandler } from './handlers/import-files';
-import { importFilesJob } from './registry';
+import { tellImportHandler } from './handlers/tell-import';
+import { importFilesJob, tellImportJob } from './registry';
 import { ensureQueues } from './send-jobs';
 import { sweepLostFiles } from './sweep-lost-files';
 
@@ -27,17 +29,12 @@ export async function runQueues({ db, url, engine }: { db: Database; url: string
   const ending = new AbortController();
   for (let loop = 0; loop <= engine.threads; loop++) {
     const id: string = await boss.work<unknown>('import-files', { batchSize: 1, pollingIntervalSeconds: POLLING_S }, async ([job]) => {
-      const payload = importFilesJob.safeParse(job.data);
-      if (!payload.success) {
-        await makeFinal(db, job.id);
-        log.error({ jobId: job.id, issues: payload.error.issues }, 'a job has a payload that cannot be read');
-        throw new Error('The payload cannot be read.');
-      }
-      await importFilesHandler({ db, engine, signal: ending.signal }, payload.data);
+      await importFilesHandler({ db, engine, signal: ending.signal }, await payloadOf(db, importFilesJob, job));
       // There may be more: ask at once instead of after the polling interval.
       boss.notifyWorker(id);
     });
   }
+  await boss.work<unknown>('tell-import', { batchSize: 1, pollingIntervalSeconds: POLLING_S }, async ([job]) => tellImportHandler(db, await payloadOf(db, tellImportJob, job)));
   const sweeper = setInterval(() => void sweepLostFiles(db).catch((error: unknown) => log.warn({ err: error }, 'the sweep for lost files failed')), SWEEP_MS);
   return {
     async stop() {
@@ -46,6 +43,15 @@ export async function runQueues({ db, url, engine }: { db: Database; url: string
       await boss.stop({ graceful: true, wait: true, timeout: 60_000 });
     },
   };
+}
+
+/** What the job says; one that cannot be read fails for good. */
+async function payloadOf<Payload>(db: Database, schema: z.ZodType<Payload>, job: { id: string; data: unknown }): Promise<Payload> {
+  const payload = schema.safeParse(job.data);
+  if (payload.success) return payload.data;
+  await makeFinal(db, job.id);
+  log.error({ jobId: job.id, issues: payload.error.issues }, 'a job has a payload that cannot be read');
+  throw new Error('The payload cannot be read.');
 }
 
 /** The job fails for good with its next failure. */

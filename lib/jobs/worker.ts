@@ -4,6 +4,7 @@ import { log } from '@/lib/log';
 import { runMailSweep } from '@/lib/mail/run-mail-sweep';
 import { sweepUploads } from '@/lib/storage/sweep-uploads';
 import { startEnginePool } from './engine-pool';
+import { runDigestSweep } from './run-digest-sweep';
 import { runQueues } from './run-queues';
 
 /** The worker process: takes jobs from the queue and sends waiting messages until it is told to end. */
@@ -13,6 +14,7 @@ async function main(): Promise<void> {
   const engine = startEnginePool();
   const queues = await runQueues({ db: database(), url, engine });
   const mails = runMailSweep(database());
+  const digests = runDigestSweep(database());
   log.info({ threads: engine.threads }, 'worker is ready');
   void sweepUploads().catch((error: unknown) => log.warn({ err: error }, 'old uploads could not be removed'));
   let isEnding = false;
@@ -20,7 +22,7 @@ async function main(): Promise<void> {
     if (isEnding) return;
     isEnding = true;
     log.info({ signal }, 'worker ends');
-    await Promise.all([queues.stop(), mails.stop()]);
+    await Promise.all([queues.stop(), mails.stop(), digests.stop()]);
     await engine.close();
     await closeDatabase();
     process.exit(0);

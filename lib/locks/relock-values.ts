@@ -1,6 +1,7 @@
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
 import { recordEvent } from '@/lib/history/record-event';
+import { tellOfUnlock } from '@/lib/notices/tell-of-unlock';
 import type { RelockValuesInput } from '@/lib/rules/inputs/lock-values';
 import { StudioError, type ItemError } from '@/lib/rules/studio-error';
 import { getShowAccess } from '@/lib/shows/get-show-access';
@@ -31,8 +32,9 @@ export async function relockValues(context: Context, input: RelockValuesInput): 
     const moving = (found as Lockable[]).flatMap((one, i) => (one.approval_id === replaced[i].approval_id ? [] : [i]));
     if (moving.length > 0) {
       await endLocks(tx, moving.map((i) => ids[i]), acting.actor.userId, input.reason);
-      const items = moving.map((i) => ({ partId: replaced[i].part_id, field: `lock ${replaced[i].shot}${replaced[i].copy ? ` ${replaced[i].copy}` : ''}`, before: replaced[i].approval_id, after: null }));
-      await recordEvent(tx, acting, { showId: show.id, act: 'unlock-values', subject: moving.length === 1 ? replaced[moving[0]].shot : `${moving.length} locks`, reason: input.reason, items });
+      const items = moving.map((i) => ({ partId: replaced[i].part_id, shotId: replaced[i].shot_id, field: `lock ${replaced[i].shot}${replaced[i].copy ? ` ${replaced[i].copy}` : ''}`, before: replaced[i].approval_id, after: null }));
+      const eventId = await recordEvent(tx, acting, { showId: show.id, act: 'unlock-values', subject: moving.length === 1 ? replaced[moving[0]].shot : `${moving.length} locks`, reason: input.reason, items });
+      await tellOfUnlock(tx, acting, show, { eventId, reason: input.reason, ended: moving.map((i) => ({ lock: replaced[i], becomes: found[i]!.approval_id })) });
     }
     return { items: await applyLocks(tx, acting, show, at, (found as Lockable[]).map((one, i) => (moving.includes(i) ? { ...one, lock_id: null } : one))) };
   });

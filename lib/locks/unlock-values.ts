@@ -3,6 +3,7 @@ import { shows } from '@/db/schema/shows';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
 import { recordEvent } from '@/lib/history/record-event';
+import { tellOfUnlock } from '@/lib/notices/tell-of-unlock';
 import type { UnlockValuesInput } from '@/lib/rules/inputs/lock-values';
 import { StudioError } from '@/lib/rules/studio-error';
 import { findShot } from '@/lib/shots/find-shot';
@@ -27,8 +28,9 @@ export async function unlockValues(context: Context, input: UnlockValuesInput): 
     await endLocks(tx, ids, acting.actor.userId, input.reason);
     await tx.update(shows).set({ revision: revision + 1 }).where(eq(shows.id, show.id));
     const ended = ids.map((id) => found.get(id)!);
-    const items = ended.map((lock) => ({ partId: lock.part_id, field: `lock ${lock.shot}${lock.copy ? ` ${lock.copy}` : ''}`, before: lock.approval_id, after: null }));
-    await recordEvent(tx, acting, { showId: show.id, act: 'unlock-values', subject: shot.code, reason: input.reason, items });
+    const items = ended.map((lock) => ({ partId: lock.part_id, shotId: lock.shot_id, field: `lock ${lock.shot}${lock.copy ? ` ${lock.copy}` : ''}`, before: lock.approval_id, after: null }));
+    const eventId = await recordEvent(tx, acting, { showId: show.id, act: 'unlock-values', subject: shot.code, reason: input.reason, items });
+    await tellOfUnlock(tx, acting, show, { eventId, reason: input.reason, ended: ended.map((lock) => ({ lock, becomes: null })) });
     return { items: ended.map((lock) => ({ lock: lock.id, asset: lock.asset, part: lock.part })) };
   });
 }

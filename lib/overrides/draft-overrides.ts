@@ -42,7 +42,7 @@ export async function draftOverrides(tx: Transaction, acting: ActorContext, show
     const before = standing.get(`${part.partId} ${shotId}`) ?? { ...own.setting, leftOut: false };
     const material = item.material ? materials.get(item.material.toLowerCase()) : item.material;
     const setting = mergeSetting(before, item, material as MaterialNow | null | undefined);
-    for (const change of settingChanges(before, setting)) history.push({ partId: part.partId, ...change, field: `${item.shot}: ${change.field}` });
+    for (const change of settingChanges(before, setting)) history.push({ partId: part.partId, shotId, ...change, field: `${item.shot}: ${change.field}` });
     const inputs: LoadedPart = { ...own, setting, approvals: [] };
     return { inputs, value: computeValue(inputs), shotId, reason: item.reason ?? '' };
   });

@@ -23,7 +23,7 @@ export async function dropOverride(context: Context, input: DropOverrideInput): 
     const ended = rows.length === 0 ? [] : await dropStanding(tx, [{ partId: rows[0].id, shotId: shot.id }], acting.actor.userId);
     if (ended.length === 0) throw new StudioError('not_found', `${input.asset}/${input.part} has no override in ${shot.code}.`);
     await tx.update(shows).set({ revision: revision + 1 }).where(eq(shows.id, show.id));
-    const items = [{ partId: rows[0].id, field: `${shot.code}: override`, before: ended[0].reason, after: null }];
+    const items = [{ partId: rows[0].id, shotId: shot.id, field: `${shot.code}: override`, before: ended[0].reason, after: null }];
     await recordEvent(tx, acting, { showId: show.id, act: 'drop-override', subject: `${input.asset}/${input.part} in ${shot.code}`, reason: input.reason, items });
     return { dropped: ended.length };
   });

@@ -40,16 +40,17 @@ export async function putShots(context: Context, input: PutShotsInput): Promise<
       select shot_id, asset_id, copy from json_to_recordset(${JSON.stringify(rows)}::json) as given(shot_id uuid, asset_id uuid, copy text)
       on conflict do nothing returning shot_id, asset_id`);
     const history: ChangedField[] = [
-      ...fresh.map((shot) => ({ field: 'shot', before: null, after: `${shot.sequence}/${shot.code}` })),
-      ...inShots(added.rows, there, assetIds).map((after) => ({ field: 'in_shot', before: null, after })),
+      ...fresh.map((shot) => ({ shotId: there.get(shot.code.toLowerCase())!.id, field: 'shot', before: null, after: `${shot.sequence}/${shot.code}` })),
+      ...inShots(added.rows, there, assetIds).map((one) => ({ field: 'in_shot', before: null, ...one })),
     ];
     if (history.length > 0) await recordEvent(tx, acting, { showId: show.id, act: 'put-shots', subject: wanted.length === 1 ? wanted[0].code : `${wanted.length} shots`, items: history });
     return { items: wanted.map((shot) => ({ code: shot.code, sequence: shot.sequence, title: shot.title, assets: [...shot.assets].map(([asset, copies]) => ({ asset, copies })) })) };
   });
 }
 
-function inShots(added: readonly { shot_id: string; asset_id: string }[], there: ReadonlyMap<string, ShotThere>, assetIds: ReadonlyMap<string, string>): string[] {
+function inShots(added: readonly { shot_id: string; asset_id: string }[], there: ReadonlyMap<string, ShotThere>, assetIds: ReadonlyMap<string, string>): { shotId: string; after: string }[] {
   const codeOf = new Map([...there.values()].map((shot) => [shot.id, shot.code]));
   const assetOf = new Map([...assetIds].map(([code, id]) => [id, code]));
-  return [...new Set(added.map((row) => `${codeOf.get(row.shot_id)}: ${assetOf.get(row.asset_id)}`))];
+  const unique = new Map(added.map((row) => [`${codeOf.get(row.shot_id)}: ${assetOf.get(row.asset_id)}`, row.shot_id]));
+  return [...unique].map(([after, shotId]) => ({ shotId, after }));
 }

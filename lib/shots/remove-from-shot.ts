@@ -31,11 +31,11 @@ export async function removeFromShot(context: Context, input: RemoveFromShotInpu
     if (locked > 0) throw new StudioError('conflict', `${locked} of ${input.asset} ${locked === 1 ? 'is' : 'are'} locked in ${shot.code}. Unlock first; nothing was taken out.`, { field: 'asset' });
     const [{ asset_id: assetId }] = held;
     await tx.execute(sql`delete from shot_assets where shot_id = ${shot.id} and asset_id = ${assetId} and copy = any(${sql.param(going.map((one) => one.copy))}::text[])`);
-    const history: ChangedField[] = going.map((one) => ({ field: 'in_shot', before: `${shot.code}: ${assetInShot(input.asset, one.copy)}`, after: null }));
+    const history: ChangedField[] = going.map((one) => ({ shotId: shot.id, field: 'in_shot', before: `${shot.code}: ${assetInShot(input.asset, one.copy)}`, after: null }));
     if (going.length === held.length) {
       const { rows: parts } = await tx.execute<{ id: string; reason: string }>(sql`select p.id, o.reason from parts p join shot_overrides o on o.part_id = p.id where p.asset_id = ${assetId} and o.shot_id = ${shot.id} and o.dropped_at is null`);
       await dropStanding(tx, parts.map((part) => ({ partId: part.id, shotId: shot.id })), acting.actor.userId);
-      for (const { id, reason } of parts) history.push({ partId: id, field: `${shot.code}: override`, before: reason, after: null });
+      for (const { id, reason } of parts) history.push({ partId: id, shotId: shot.id, field: `${shot.code}: override`, before: reason, after: null });
     }
     await recordEvent(tx, acting, { showId: show.id, act: 'remove-from-shot', subject: `${input.asset} in ${shot.code}`, items: history });
     return { asset: input.asset, removed: going.length };
