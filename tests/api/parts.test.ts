@@ -160,7 +160,7 @@ describe('what is refused changes nothing', () => {
     ['a negative mass', { asset: 'crate', part: 'lid', revision: 1, target_mass_kg: -1 }, 'bad_input', 'target_mass_kg'],
     ['an unknown field', { asset: 'crate', part: 'lid', revision: 1, mass_kg: 1 }, 'bad_input', ''],
     ['a rigid body', { asset: 'crate', body: 'rb', revision: 1, density_kg_m3: 1 }, 'not_available', 'body'],
-    ['a shot override', { asset: 'crate', part: 'lid', revision: 1, density_kg_m3: 1, shot: 'fer_0010' }, 'not_available', 'shot'],
+    ['an override of a shot that is not there', { asset: 'crate', part: 'lid', revision: 1, density_kg_m3: 1, shot: 'fer_0010', reason: 'light' }, 'not_found', 'shot'],
     ['a part named twice', { asset: 'crate', part: 'body', revision: 1, density_kg_m3: 1 }, 'bad_input', 'part'],
   ])('%s', async (_, item, code, field) => {
     const cast = await createBoxes();
