@@ -44,3 +44,15 @@ export function gridBoxObj(steps: number, size = 2): string {
   }
   return [...lines, 'g body', ...faces, ''].join('\n');
 }
+
+/** Boxes as groups of one OBJ, each from the origin to its corner, side by side along x, 100 apart. */
+export function boxesObj(boxes: Record<string, readonly [number, number, number]>): string {
+  const lines: string[] = [];
+  Object.entries(boxes).forEach(([name, [x, y, z]], index) => {
+    const from = 100 * index;
+    const corners = [[0, 0, 0], [x, 0, 0], [x, y, 0], [0, y, 0], [0, 0, z], [x, 0, z], [x, y, z], [0, y, z]];
+    lines.push(`g ${name}`, ...corners.map(([a, b, c]) => `v ${from + a} ${b} ${c}`));
+    for (const face of [[1, 4, 3, 2], [1, 2, 6, 5], [2, 3, 7, 6], [3, 4, 8, 7], [4, 1, 5, 8], [5, 6, 7, 8]]) lines.push(`f ${face.map((vertex) => 8 * index + vertex).join(' ')}`);
+  });
+  return `${lines.join('\n')}\n`;
+}
