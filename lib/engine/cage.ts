@@ -44,8 +44,13 @@ export interface Cage {
   /** Tagged vertices and their sharpness. */
   cornerVertices: Uint32Array;
   cornerSharpness: Float32Array;
+  /** Faces that the file marks as holes: they shape the surface and are no part of it. Left out where the format knows none. */
+  holes?: Uint32Array;
   /** Boundary rule that the file itself asks for; null where it is silent. */
   boundary: Boundary | null;
+  /** Scheme and triangle rule that the file itself asks for; null or left out where it is silent. */
+  scheme?: Scheme | null;
+  triangles?: TriangleRule | null;
   /** Line of each face in the file (from 1), for places in messages; null where the format has none. */
   faceLines: Uint32Array | null;
   /** Metres per file unit and up axis, where the format says so. */

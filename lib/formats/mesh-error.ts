@@ -14,6 +14,8 @@ export interface MeshErrorFields {
   expected?: string | null;
   found?: string | null;
   place?: TextPlace | null;
+  /** Where in a binary file, in bytes from its beginning; `detail` is given it. */
+  offset?: number | null;
 }
 
 const EXCERPT_BEFORE = 48;
@@ -31,13 +33,18 @@ export class MeshError extends Error {
   readonly expected: string | null;
   readonly found: string | null;
   readonly excerpt: string | null;
+  /** Bytes from the file's beginning; null in text files, and where the whole file is meant. */
+  readonly offset: number | null;
 
   constructor(fields: MeshErrorFields) {
     const place = fields.place ?? null;
-    super(place ? `line ${place.line}, column ${place.column}: ${fields.detail}` : fields.detail);
+    const offset = fields.offset ?? null;
+    const detail = offset === null ? fields.detail : `${fields.detail} (byte ${offset})`;
+    super(place ? `line ${place.line}, column ${place.column}: ${detail}` : detail);
     this.name = 'MeshError';
     this.code = fields.code;
-    this.detail = fields.detail;
+    this.detail = detail;
+    this.offset = offset;
     this.line = place?.line ?? null;
     this.column = place?.column ?? null;
     this.expected = fields.expected ?? null;

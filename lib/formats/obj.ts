@@ -3,35 +3,18 @@ import { FaceLabeller } from './face-labeller';
 import { growingFloat64, growingUint32 } from './growing-array';
 import { LineCursor } from './line-cursor';
 import { MeshError } from './mesh-error';
+import { MAX_COORDINATE, MESH_LIMITS, MIN_CORNERS, MOST_LINE_BYTES, type MeshLimits } from './mesh-limits';
 import { ObjTags } from './obj-tags';
 import { TextLines, type LineJoint } from './text-lines';
 import { outOfRange, VertexReferences } from './vertex-references';
 import { WarningList } from './warning-list';
 
-/** Bounds on what one file may ask of memory. A cage is far below them; a damaged or hostile file is not. */
-export interface ObjLimits {
-  vertices: number;
-  faces: number;
-  /** Face corners in all. */
-  corners: number;
-  /** Distinct names of one kind (groups, objects or materials). */
-  names: number;
-  nameLength: number;
+export interface ObjLimits extends MeshLimits {
   lineBytes: number;
 }
 
-export const OBJ_LIMITS: ObjLimits = {
-  vertices: 16_000_000,
-  faces: 16_000_000,
-  corners: 64_000_000,
-  names: 65_536,
-  nameLength: 1_024,
-  lineBytes: 4 * 1024 * 1024,
-};
+export const OBJ_LIMITS: ObjLimits = { ...MESH_LIMITS, lineBytes: MOST_LINE_BYTES };
 
-/** Beyond this the second moments of a solid leave the range of a double. */
-const MAX_COORDINATE = 1e50;
-const MIN_CORNERS = 3;
 const LETTER_F = 0x66;
 const LETTER_V = 0x76;
 const SLASH = 0x2f;
