@@ -40,7 +40,12 @@ export function AssetApproval({ frame, asset, rows, actions }: AssetApprovalProp
 
   return (
     <div className="flex flex-col gap-2 text-13">
-      <p className="text-14">{stateWords(rows)}</p>
+      <p className="text-14">
+        {stateWords(rows)}{' '}
+        <Link href={compareHref(frame.code, { asset })} className="link ml-2 text-13">
+          Compare
+        </Link>
+      </p>
       {waiting.length > clean.length && frame.may_approve ? <p className="text-ink-2">{heldWords(waiting)}</p> : null}
       <FormRefusal>{refusal?.message ?? null}</FormRefusal>
       <div className="flex flex-wrap gap-2">
@@ -59,9 +64,6 @@ export function AssetApproval({ frame, asset, rows, actions }: AssetApprovalProp
             Ask for approval of {unasked.length.toLocaleString('en')}
           </Button>
         ) : null}
-        <Button size="small" look="quiet" asChild>
-          <Link href={compareHref(frame.code, { asset })}>Compare</Link>
-        </Button>
       </div>
       <WordsDialog wish={wish} onClose={() => setWish(null)} />
     </div>

@@ -30,14 +30,19 @@ export function PartApproval({ frame, row, actions }: PartApprovalProps) {
   const atOnce = async (send: () => Promise<ActRefusal>) => setRefusal(await send());
   return (
     <div className="flex flex-col gap-2 text-13">
-      <p className="text-14">
+      <p className="flex flex-wrap gap-x-3 text-14">
         {verdictSentence(row)}
-        {row.beyond_tolerance === null ? null : <ToleranceMark beyond={row.beyond_tolerance} className="ml-3" />}
+        {row.beyond_tolerance === null ? null : <ToleranceMark beyond={row.beyond_tolerance} />}
       </p>
       {row.last === null ? null : (
         <p className="text-ink-2">
           {row.last.version}, approved by {row.last.approved_by}, <Moment at={row.last.approved_at} />
-          {row.last.note === null ? '.' : `: “${row.last.note}”`}
+          {row.last.note === null ? '. ' : `: “${row.last.note}” `}
+          {row.value_id !== null ? null : (
+            <Link href={compareHref(frame.code, { asset: row.asset, part: row.part })} className="link">
+              Compare
+            </Link>
+          )}
         </p>
       )}
       {row.request === null ? null : (
@@ -70,11 +75,6 @@ export function PartApproval({ frame, row, actions }: PartApprovalProps) {
             Take back
           </Button>
         ) : null}
-        {row.last === null || row.value_id !== null ? null : (
-          <Button size="small" look="quiet" asChild>
-            <Link href={compareHref(frame.code, { asset: row.asset, part: row.part })}>Compare</Link>
-          </Button>
-        )}
       </div>
       <WordsDialog wish={wish} onClose={() => setWish(null)} />
     </div>

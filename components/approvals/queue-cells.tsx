@@ -1,10 +1,11 @@
 import { ProblemCounts } from '@/components/parts/problem-counts';
-import { Moment } from '@/components/ui/moment';
 import { cn } from '@/components/ui/cn';
+import { Moment } from '@/components/ui/moment';
 import type { Refusal } from '@/hooks/use-approval-acts';
+import { ORIGIN_WORDS } from '@/lib/rules/act-words';
 import { verdictSentence, whyNotApprovable, type QueueRow } from '@/lib/rules/approval-queue';
 import { formatProse } from '@/lib/rules/format-figure';
-import { setByWords } from '@/lib/rules/source-words';
+import { sourceSentence } from '@/lib/rules/source-words';
 import { ToleranceMark } from './tolerance-mark';
 
 /** What moved since the last approval, and under it what it is measured against, or why nothing was done. */
@@ -31,49 +32,61 @@ function RefusalLine({ refusal }: { refusal: Refusal }) {
 
 function Against({ row }: { row: QueueRow }) {
   if (row.own) return <span className="truncate text-13 text-ink-2">{whyNotApprovable(row)}</span>;
-  if (row.last === null) return row.reason === null ? null : <Reason row={row} />;
+  if (row.reason !== null && row.last === null) return <Quiet words={`“${row.reason}”`} />;
+  if (row.last === null) return <Quiet words={`${row.construction}; ${lower(sourceSentence(row))}`} />;
   return (
     <span className="flex min-w-0 items-center gap-3 text-13 text-ink-3">
       {row.beyond_tolerance === null ? null : <ToleranceMark beyond={row.beyond_tolerance} />}
       <span className="truncate" title={row.last.note ?? undefined}>
-        {row.value_id === null ? `against ${row.last.version}, approved by` : 'by'} {row.last.approved_by}, <Moment at={row.last.approved_at} />
+        {row.value_id === null ? `against ${row.last.version} by` : 'by'} {row.last.approved_by}, <Moment at={row.last.approved_at} />
         {row.last.note === null ? null : <>: “{row.last.note}”</>}
       </span>
     </span>
   );
 }
 
-function Reason({ row }: { row: QueueRow }) {
+function Quiet({ words }: { words: string }) {
   return (
-    <span className="truncate text-13 text-ink-2" title={row.reason ?? undefined}>
-      “{row.reason}”
+    <span className="truncate text-13 text-ink-3" title={words}>
+      {words}
     </span>
   );
 }
 
-/** Who set the value, and who asks for it with which words. */
+function lower(sentence: string): string {
+  return sentence.charAt(0).toLowerCase() + sentence.slice(1).replace(/\.$/, '');
+}
+
+/** What somebody asks with which words, and who asked and who set the value. */
 export function PeopleCell({ row }: { row: QueueRow }) {
-  const setBy = row.set_from === null && row.set_by !== null ? `Drafted by ${row.set_by}` : setByWords(row);
+  const { request } = row;
+  const words = peopleWords(row);
   return (
     <span className="flex min-w-0 flex-col justify-center text-13">
-      {row.request === null ? null : <AskedLine row={row} />}
-      <span className="truncate text-ink-3" title={row.setters.length > 1 ? `Set since by ${row.setters.join(', ')}` : undefined}>
-        {setBy ?? 'With its version'}
+      {request === null ? null : (
+        <span className="flex min-w-0 items-center gap-1.5 text-ink" title={request.note ?? undefined}>
+          <AskedShape />
+          <span className="truncate">{request.note === null ? 'asked for' : `“${request.note}”`}</span>
+          {request.changed ? <span className="shrink-0 text-ink-2">changed since</span> : null}
+        </span>
+      )}
+      <span className="truncate text-ink-3" title={words}>
+        {words}
       </span>
     </span>
   );
 }
 
-function AskedLine({ row: { request } }: { row: QueueRow }) {
-  if (request === null) return null;
-  const words = `Asked by ${request.own ? 'you' : request.asked_by}${request.note === null ? '' : `: “${request.note}”`}`;
-  return (
-    <span className="flex min-w-0 items-center gap-1.5 text-ink" title={words}>
-      <AskedShape />
-      <span className="truncate">{words}</span>
-      {request.changed ? <span className="shrink-0 text-ink-2">changed since</span> : null}
-    </span>
-  );
+/** Who asked and who set it, once where both are one. */
+function peopleWords({ request, set_by: setBy, set_from: from, shot, setters }: QueueRow): string {
+  const origin = from === null || ORIGIN_WORDS[from] === '' ? '' : `, ${ORIGIN_WORDS[from]}`;
+  const setWord = shot === null ? 'set' : 'drafted';
+  const asked = request === null ? null : request.own ? 'you' : request.asked_by;
+  const others = setters.filter((name) => name !== setBy);
+  const more = others.length === 0 ? '' : `, with ${others.join(', ')}`;
+  if (setBy === null) return asked === null ? 'came with its version' : `asked by ${asked}`;
+  if (request !== null && request.asked_by === setBy) return `asked and ${setWord} by ${asked}${more}${origin}`;
+  return `${asked === null ? '' : `asked by ${asked}, `}${setWord} by ${setBy}${more}${origin}`;
 }
 
 /** A raised hand drawn as a flag on its staff. */

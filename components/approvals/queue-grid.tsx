@@ -55,6 +55,11 @@ export function QueueGrid(props: QueueGridProps) {
     remeasure();
   });
 
+  // The queue is there to be worked by keyboard: it takes the focus at first, unless something of the page has it.
+  useEffect(() => {
+    if (document.activeElement === document.body) scroller.current?.focus({ preventScroll: true });
+  }, [scroller]);
+
   const revealed = useRef<string | null>(null);
   useEffect(() => {
     if (activeIndex < 0 || revealed.current === selection.active) return;

@@ -19,7 +19,7 @@ export const COMPACT_ROW_HEIGHT = 116;
 
 /** Part, verdict, mass, balance, people, warnings, state; what does not fit gives way from the middle. */
 export const QUEUE_TEMPLATE =
-  'grid-cols-[minmax(9rem,13rem)_minmax(16rem,1fr)_7.5rem_4rem_6.5rem] lg:grid-cols-[minmax(9rem,13rem)_minmax(16rem,1fr)_7.5rem_minmax(12rem,17rem)_4.5rem_6.5rem] xl:grid-cols-[minmax(9rem,13rem)_minmax(16rem,1fr)_7.5rem_11.5rem_minmax(12rem,18rem)_4.5rem_6.5rem]';
+  'grid-cols-[minmax(9rem,13rem)_minmax(16rem,1fr)_7.5rem_4rem_8rem] lg:grid-cols-[minmax(9rem,13rem)_minmax(16rem,1fr)_7.5rem_minmax(12rem,17rem)_4.5rem_8rem] xl:grid-cols-[minmax(9rem,13rem)_minmax(16rem,1fr)_7.5rem_11.5rem_minmax(12rem,18rem)_4.5rem_8rem]';
 
 interface QueueRowProps {
   node: QueueNode;
@@ -51,6 +51,8 @@ export const QueueGridRow = memo(function QueueGridRow(props: QueueRowProps) {
         'absolute inset-x-0 cursor-default border-b border-rule select-none',
         asset ? 'flex h-10 items-center gap-4 bg-bench px-4 md:px-6' : compact ? 'h-29 bg-ground px-4 py-2' : cn('grid h-13 bg-ground hover:bg-bench', QUEUE_TEMPLATE),
         chosen && 'bg-selected shadow-[inset_2px_0_0_var(--brass)] hover:bg-selected forced-colors:outline-2 forced-colors:-outline-offset-2',
+        active && !asset && 'shadow-[inset_2px_0_0_var(--edge)]',
+        active && chosen && 'shadow-[inset_2px_0_0_var(--brass)]',
         active &&
           'after:pointer-events-none after:absolute after:inset-0 after:z-2 group-focus-visible/grid:after:outline-2 group-focus-visible/grid:after:-outline-offset-2 group-focus-visible/grid:after:outline-brass',
       )}
@@ -136,7 +138,7 @@ function CompactCells({ node: { row }, refusal }: { node: QueueValueNode; refusa
       </div>
       <div role="gridcell" className="flex min-w-0 items-center justify-between gap-3">
         <span className="min-w-0">
-          {row.request === null ? <span className="block truncate text-13 text-ink-3">{row.shot === null ? row.version : `override in ${row.shot}`}</span> : <PeopleCell row={{ ...row, set_by: null, set_from: null }} />}
+          {row.request === null ? <span className="block truncate text-13 text-ink-3">{row.shot === null ? row.version : `override in ${row.shot}`}</span> : <PeopleCell row={row} />}
         </span>
         <span className="flex shrink-0 items-center gap-3">
           <WarningsCell row={row} />
@@ -163,8 +165,10 @@ function AssetCells({ node, frame, onApprove }: { node: QueueAssetNode; frame: S
       <div role="gridcell" className="ml-auto">
         {frame.may_approve && clean > 0 ? (
           <Button size="small" tabIndex={-1} onClick={() => onApprove(node)} className="pointer-coarse:h-9">
-            Approve {clean.toLocaleString('en')}
-            <span className="max-sm:sr-only">without warnings</span>
+            <span>
+              Approve {clean.toLocaleString('en')}
+              <span className="max-sm:sr-only"> without warnings</span>
+            </span>
           </Button>
         ) : null}
       </div>

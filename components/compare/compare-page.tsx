@@ -80,6 +80,7 @@ function SideFacts({ label, side }: { label: string; side: ComparedSide }) {
   );
 }
 
+/** A version's label keeps its small letter. */
 function capital(words: string): string {
-  return words.charAt(0).toUpperCase() + words.slice(1);
+  return /^v\d/.test(words) ? words : words.charAt(0).toUpperCase() + words.slice(1);
 }

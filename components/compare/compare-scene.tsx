@@ -2,7 +2,7 @@
 
 import { Canvas } from '@react-three/fiber';
 import { useMemo } from 'react';
-import { Box3, DoubleSide, Matrix4, Sphere, Vector3, type BufferGeometry } from 'three';
+import { Box3, CanvasTexture, DoubleSide, Matrix4, Sphere, SRGBColorSpace, Vector3, type BufferGeometry } from 'three';
 import { Light } from '@/components/viewer/light';
 import type { DrawnWeight } from '@/components/viewer/part-scene';
 import { PrincipalAxes } from '@/components/viewer/principal-axes';
@@ -67,7 +67,8 @@ export default function CompareScene({ before, after, part, solid, axes, up, fit
       <Light />
       {(['before', 'after'] as const).map((which) => {
         const side = which === 'before' ? before : after;
-        return side === null ? null : (
+        // The same surface twice is drawn once.
+        return side === null || (which !== solid && before?.asset === after?.asset && before?.scale === after?.scale) ? null : (
           <group key={which} position={placeOf(side, base)} scale={side.scale}>
             {surfacesOf(side, part).map((geometry) => (solid === which ? <Solid key={geometry.uuid} geometry={geometry} /> : <Ghost key={geometry.uuid} geometry={geometry} colour={colours.ink} />))}
           </group>
@@ -96,21 +97,25 @@ interface BalanceProps {
   colours: TokenColours;
 }
 
-/** Centre of mass and axes of one side: a full brass ball after, a hollow cage of a ball before. */
+/** Centre of mass and axes of one side: a full brass ball after, an open ring before, which stays in sight around the ball. */
 function Balance({ weight, base, radius, which, axes, colours }: BalanceProps) {
   const centre = [0, 1, 2].map((i) => weight.centreM[i] - base[i]) as Three;
   const after = which === 'after';
   return (
     <>
-      <mesh position={centre} renderOrder={after ? 8 : 9}>
-        <sphereGeometry args={after ? [radius * 0.02, 20, 14] : [radius * 0.028, 10, 7]} />
-        <meshBasicMaterial color={after ? colours.brass : colours.ink} wireframe={!after} depthTest={false} transparent opacity={after ? 1 : 0.8} />
-      </mesh>
+      {after ? (
+        <mesh position={centre} renderOrder={8}>
+          <sphereGeometry args={[radius * 0.018, 20, 14]} />
+          <meshBasicMaterial color={colours.brass} depthTest={false} transparent />
+        </mesh>
+      ) : (
+        <Ring position={centre} colour={colours.ink} ground={colours.ground} />
+      )}
       {axes ? (
         <PrincipalAxes
           centre={centre}
           quaternion={weight.quatWxyz}
-          reach={radius * (after ? 0.95 : 0.78)}
+          reach={radius * (after ? 0.72 : 0.58)}
           free={weight.freeAxes}
           mark={after ? '' : '′'}
           colour={after ? colours.ink : colours['ink-3']}
@@ -119,4 +124,34 @@ function Balance({ weight, base, radius, which, axes, colours }: BalanceProps) {
       ) : null}
     </>
   );
+}
+
+/** Share of the view's height, whatever the distance. */
+const RING_SIZE: Three = [0.034, 0.034, 1];
+
+function Ring({ position, colour, ground }: { position: Three; colour: string; ground: string }) {
+  const texture = useMemo(() => ringTexture(colour, ground), [colour, ground]);
+  return (
+    <sprite position={position} scale={RING_SIZE} renderOrder={9}>
+      <spriteMaterial map={texture} depthTest={false} sizeAttenuation={false} transparent />
+    </sprite>
+  );
+}
+
+function ringTexture(colour: string, ground: string): CanvasTexture {
+  const canvas = document.createElement('canvas');
+  canvas.width = canvas.height = 64;
+  const context = canvas.getContext('2d');
+  if (context !== null) {
+    for (const [style, width] of [[ground, 12], [colour, 6]] as const) {
+      context.beginPath();
+      context.arc(32, 32, 24, 0, 2 * Math.PI);
+      context.strokeStyle = style;
+      context.lineWidth = width;
+      context.stroke();
+    }
+  }
+  const texture = new CanvasTexture(canvas);
+  texture.colorSpace = SRGBColorSpace;
+  return texture;
 }

@@ -31,6 +31,7 @@ export function CompareViewer({ of, frame }: { of: ComparisonAnswer; frame: Show
   const failure = meshes.before.error ?? meshes.after.error;
   const told = failure !== null ? failure.message : drawable ? null : 'This browser cannot draw in three dimensions.';
   const reading = (meshes.before.isPending || meshes.after.isPending) && failure === null;
+  const same = of.before.version === of.after.version && of.before.mesh_scale === of.after.mesh_scale;
   const name = of.part ?? of.asset;
   const words = (which: 'before' | 'after') => `${which === 'before' ? 'Before' : 'After'}, ${of[which].name}: ${describeWeight(name, weightOf(of[which].numbers), frame.linear_unit)}`;
 
@@ -56,12 +57,18 @@ export function CompareViewer({ of, frame }: { of: ComparisonAnswer; frame: Show
         )}
       </div>
       <div className="flex items-center gap-2 overflow-x-auto border-t border-rule px-4 py-2">
-        <Chip pressed={solid === 'after'} onClick={() => setSolid('after')}>
-          After solid
-        </Chip>
-        <Chip pressed={solid === 'before'} onClick={() => setSolid('before')}>
-          Before solid
-        </Chip>
+        {same ? (
+          <p className="text-13 whitespace-nowrap text-ink-2">One surface, {of.after.version}</p>
+        ) : (
+          <>
+            <Chip pressed={solid === 'after'} onClick={() => setSolid('after')}>
+              After solid
+            </Chip>
+            <Chip pressed={solid === 'before'} onClick={() => setSolid('before')}>
+              Before solid
+            </Chip>
+          </>
+        )}
         <Chip pressed={axes} onClick={() => setAxes((now) => !now)}>
           Principal axes
         </Chip>

@@ -15,9 +15,9 @@ export function DifferenceTable({ of, unit }: { of: ComparisonAnswer; unit: Line
         <thead>
           <tr className="sticky top-0 z-1 bg-bench">
             <Head className="pl-4 text-left">Quantity</Head>
-            <Head>Before</Head>
-            <Head>After</Head>
-            <Head>Difference</Head>
+            <Head className="pr-11">Before</Head>
+            <Head className="pr-11">After</Head>
+            <Head className="pr-11">Difference</Head>
             <Head>Difference, %</Head>
             <Head className="pr-4 text-left">Tolerance</Head>
           </tr>
@@ -49,16 +49,16 @@ function Head({ className, children }: { className?: string; children: string })
 
 function Line({ line }: { line: DifferenceLine }) {
   const beyond = isBeyond(line);
-  const figure = (value: number | null) => (value === null && line.before === null && line.after === null ? null : <Figure value={value} notation="engineering" align={ENGINEERING_WIDTHS} />);
+  const alone = line.before === null && line.after === null;
   return (
     <tr className={cn('h-7 border-b border-rule', beyond && 'bg-selected')}>
-      <th scope="row" className="pl-4 text-left font-normal whitespace-nowrap text-ink-2">
+      <th scope="row" className="pr-2 pl-4 text-left font-normal text-ink-2">
         {line.label}
         {line.unit === null ? null : <span className="text-ink-3">, {line.unit}</span>}
       </th>
-      <td className="px-2 text-right">{figure(line.before)}</td>
-      <td className="px-2 text-right">{figure(line.after)}</td>
-      <td className="px-2 text-right">{line.difference === null && line.before === null ? null : <Figure value={line.difference} notation="engineering" align={ENGINEERING_WIDTHS} />}</td>
+      <td className="px-1 text-right">{alone ? null : <Amount value={line.before} line={line} />}</td>
+      <td className="px-1 text-right">{alone ? null : <Amount value={line.after} line={line} />}</td>
+      <td className="px-1 text-right">{line.difference === null && alone ? null : <Amount value={line.difference} line={line} />}</td>
       <td className="px-2 text-right">{line.percent === null ? null : <Figure value={line.percent} decimals={3} align={PERCENT} />}</td>
       <td className="pr-4 pl-2">
         {beyond === null ? null : (
@@ -68,5 +68,16 @@ function Line({ line }: { line: DifferenceLine }) {
         )}
       </td>
     </tr>
+  );
+}
+
+/** A figure with the place of an exponent behind it, so that a column keeps its points under one another. */
+function Amount({ value, line }: { value: number | null; line: DifferenceLine }) {
+  if (line.notation === 'engineering') return <Figure value={value !== null && Math.abs(value) < line.noise ? 0 : value} full={value} notation="engineering" align={ENGINEERING_WIDTHS} />;
+  return (
+    <>
+      <Figure value={value} decimals={3} align={ENGINEERING_WIDTHS} />
+      <span aria-hidden className="inline-block w-8.5" />
+    </>
   );
 }

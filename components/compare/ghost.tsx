@@ -20,15 +20,15 @@ const FRAGMENT = `
   varying vec3 towards;
   void main() {
     float rim = 1.0 - abs(dot(normalize(outwards), normalize(towards)));
-    gl_FragColor = vec4(colour, strength * (0.05 + 0.95 * rim * rim * rim));
+    gl_FragColor = vec4(colour, strength * rim * rim * rim);
     #include <colorspace_fragment>
   }
 `;
 
 /** A surface as a ghost: clear where it is looked at straight, drawn where it turns away. What lies inside the solid shows through, fainter. */
 export function Ghost({ geometry, colour }: { geometry: BufferGeometry; colour: string }) {
-  const outside = useMemo(() => ghostMaterial(colour, 0.95, true), [colour]);
-  const inside = useMemo(() => ghostMaterial(colour, 0.5, false), [colour]);
+  const outside = useMemo(() => ghostMaterial(colour, 0.9, true), [colour]);
+  const inside = useMemo(() => ghostMaterial(colour, 0.28, false), [colour]);
   return (
     <>
       <mesh geometry={geometry} material={outside} renderOrder={3} />

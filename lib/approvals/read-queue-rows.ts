@@ -4,6 +4,7 @@ import type { ValueFinding } from '@/db/schema/part-current';
 import type { Actor } from '@/lib/context';
 import type { QueueRow } from '@/lib/rules/approval-queue';
 import type { RowFinding } from '@/lib/rules/part-row';
+import type { SourceFields } from '@/lib/rules/source-words';
 import type { Origin } from '@/lib/rules/states';
 import { isWithinTolerance, verdictWords } from '@/lib/rules/verdict';
 import type { Show } from '@/lib/shows/get-show-access';
@@ -17,7 +18,7 @@ export interface QueueKey {
   shotId: string | null;
 }
 
-interface FoundRow extends Record<string, unknown> {
+interface FoundRow extends SourceFields, Record<string, unknown> {
   ordinal: number;
   part_id: string;
   asset: string;
@@ -41,6 +42,9 @@ interface FoundRow extends Record<string, unknown> {
   findings: RowFinding[];
 }
 
+const SOURCE = ['mass_source', 'construction', 'material', 'target_mass_kg', 'density_kg_m3', 'areal_density_kg_m2'] as const;
+const sourceOf = (table: string) => sql.raw(SOURCE.map((name) => `${table}.${name}`).join(', '));
+
 const iso = (column: string) => sql.raw(`to_char(${column} at time zone 'utc', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"')`);
 
 /** The named values as the queue shows them to the actor, in the order of the keys; one without a value is left out. One query. */
@@ -51,17 +55,17 @@ export async function readQueueRows(db: Executor, show: Show, actor: Actor, keys
     with given as (select * from json_to_recordset(${JSON.stringify(given)}::json) as given(ordinal integer, part_id uuid, shot_id uuid)
     ), v as (
       select g.ordinal, g.part_id, g.shot_id, null::text as shot, null::text as reason, c.version_id, c.asset, c.category, c.version, c."row", c.part, c.value_sha256,
-        ${numbersOf('c')} as numbers, c.value_findings, c.set_by, c.set_from, c.set_at
+        ${numbersOf('c')} as numbers, ${sourceOf('c')}, c.value_findings, c.set_by, c.set_from, c.set_at
       from given g join part_current c on c.part_id = g.part_id and c.value_sha256 is not null where g.shot_id is null
       union all
       select g.ordinal, g.part_id, g.shot_id, s.code, o.reason, o.version_id, o.asset, o.category, o.version, o."row", o.part, o.value_sha256,
-        ${numbersOf('o')}, o.value_findings, u.name, null, o.drafted_at
+        ${numbersOf('o')}, ${sourceOf('o')}, o.value_findings, u.name, null, o.drafted_at
       from given g
       join shot_overrides o on o.part_id = g.part_id and o.shot_id = g.shot_id and o.dropped_at is null and o.value_sha256 is not null
       join shots s on s.id = o.shot_id
       join users u on u.id = o.drafted_by
     )
-    select v.ordinal, v.part_id, v.asset, v.category, v.version, v."row", v.part, v.shot, v.reason, v.value_sha256, v.numbers, v.value_findings, v.set_by, v.set_from, ${iso('v.set_at')} as set_at,
+    select v.ordinal, v.part_id, v.asset, v.category, v.version, v."row", v.part, v.shot, v.reason, v.value_sha256, v.numbers, ${sourceOf('v')}, v.value_findings, v.set_by, v.set_from, ${iso('v.set_at')} as set_at,
       exact.id as value_id, last.shown as last,
       coalesce((select json_object_agg(u.id, u.name) from value_setters t join users u on u.id = t.user_id
         where t.part_id = v.part_id and t.shot_id is not distinct from v.shot_id and t.id > coalesce(last.setter_mark, 0)), '{}') as setters,
@@ -104,6 +108,12 @@ function toQueueRow(show: Show, actor: Actor, row: FoundRow): QueueRow {
     iyy_kg_m2: numbers.iyy_kg_m2,
     izz_kg_m2: numbers.izz_kg_m2,
     bounds_m: boxOf(numbers.bounds_m),
+    mass_source: row.mass_source,
+    construction: row.construction,
+    material: row.material,
+    target_mass_kg: row.target_mass_kg,
+    density_kg_m3: row.density_kg_m3,
+    areal_density_kg_m2: row.areal_density_kg_m2,
     set_by: row.set_by,
     set_from: row.set_from,
     set_at: row.set_at,

@@ -12,6 +12,9 @@ export interface PartValue {
   /** Version and scale of the geometry behind it. */
   version: string;
   scale: number;
+  /** Of the limit surface. */
+  volumeM3: number | null;
+  areaM2: number | null;
   numbers: ComparedNumbers | null;
   /** Why there are no numbers. */
   why: string;
@@ -27,7 +30,7 @@ export async function valuesOfVersion(db: Executor, assetId: string, versionId: 
     .map((one) => {
       const value = computeValue(one);
       const { properties } = value;
-      const shared = { part: one.part, version: one.version, scale: one.scale, by: null, at: null };
+      const shared = { part: one.part, version: one.version, scale: one.scale, volumeM3: value.volumeM3, areaM2: value.areaM2, by: null, at: null };
       if (!properties) return { ...shared, numbers: null, why: STATE_WORDS[value.state] };
       const [comX, comY, comZ] = properties.comM;
       const [ixx, iyy, izz, ixy, ixz, iyz] = properties.inertiaKgM2;
@@ -41,8 +44,6 @@ export async function valuesOfVersion(db: Executor, assetId: string, versionId: 
         axes_quat_w: w, axes_quat_x: x, axes_quat_y: y, axes_quat_z: z,
         free_axes: properties.freeAxes,
         bounds_m: value.boundsM,
-        volume_m3: value.volumeM3,
-        area_m2: value.areaM2,
       };
       return { ...shared, numbers, why: '' };
     });
@@ -61,7 +62,7 @@ interface StoredValue extends Record<string, unknown> {
 
 async function storedValues(db: Executor, from: SQL): Promise<PartValue[]> {
   const { rows } = await db.execute<StoredValue>(from);
-  return rows.map(({ part, version, scale, numbers, volume_m3, area_m2, by, at }) => ({ part, version, scale, numbers: { ...numbers, volume_m3, area_m2 }, why: '', by, at: new Date(at).toISOString() }));
+  return rows.map(({ part, version, scale, numbers, volume_m3, area_m2, by, at }) => ({ part, version, scale, volumeM3: volume_m3, areaM2: area_m2, numbers, why: '', by, at: new Date(at).toISOString() }));
 }
 
 /** The newest standing approval of each part, or of one, by name. */

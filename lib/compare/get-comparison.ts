@@ -59,7 +59,7 @@ export async function getComparison(context: Context, input: GetComparisonInput)
     part: subject.part,
     before,
     after,
-    verdict: differences ? verdictWords(differences, show.linearUnit) : `${before.numbers ? after.name : before.name} has no value to compare`,
+    verdict: differences ? verdictWords(differences, show.linearUnit) : `no value to compare ${before.numbers ? 'after' : 'before'}`,
     beyond_tolerance: differences && !isWithinTolerance(differences, show),
     differences: differences && toDifferencesAnswer(differences),
     size_m: box && Math.hypot(box[3] - box[0], box[4] - box[1], box[5] - box[2]),
@@ -135,11 +135,28 @@ function toSide(subject: Subject, values: readonly PartValue[], words: { ref: st
     version: words.version,
     mesh_scale: first ? first.scale / subject.scale : 1,
     name: words.name,
-    about: numbers ? words.about : one ? `${first.part}: ${first.why}.` : words.missing,
+    about: numbers ? `${words.about}${subject.part === null ? countWords(values) : ''}` : one && subject.part !== null ? `${capital(first.why)}.` : words.missing,
     by: one ? first.by : null,
     at: one ? first.at : null,
     numbers,
+    volume_m3: sumOf(values.map((value) => value.volumeM3)),
+    area_m2: sumOf(values.map((value) => value.areaM2)),
   };
+}
+
+function capital(words: string): string {
+  return words.charAt(0).toUpperCase() + words.slice(1);
+}
+
+/** How many of the parts taken together count at all. */
+function countWords(values: readonly PartValue[]): string {
+  const counted = values.filter((value) => value.numbers !== null).length;
+  return counted === values.length ? ` ${counted === 1 ? 'One part' : `${counted} parts`}.` : ` ${counted} of ${values.length} parts have a value.`;
+}
+
+function sumOf(values: readonly (number | null)[]): number | null {
+  const given = values.filter((value) => value !== null);
+  return given.length === 0 ? null : given.reduce((total, value) => total + value, 0);
 }
 
 async function partNames(db: Executor, assetId: string): Promise<string[]> {

@@ -1,7 +1,7 @@
 import { mergeMassProperties } from '@/lib/engine/mass-properties';
 import type { ComparedNumbers } from '@/lib/rules/comparison';
 
-/** Parts taken together, by the parallel-axis theorem; null for none. Volume and area are sums, the box is around all. */
+/** Parts taken together, by the parallel-axis theorem; null for none. The box is around all. */
 export function mergePartValues(parts: readonly ComparedNumbers[]): ComparedNumbers | null {
   if (parts.length === 0) return null;
   if (parts.length === 1) return parts[0];
@@ -13,10 +13,6 @@ export function mergePartValues(parts: readonly ComparedNumbers[]): ComparedNumb
     })),
   );
   if (!merged.ok) return null;
-  const sum = (key: 'volume_m3' | 'area_m2'): number | null => {
-    const given = parts.flatMap((one) => one[key] ?? []);
-    return given.length === 0 ? null : given.reduce((total, value) => total + value, 0);
-  };
   const [comX, comY, comZ] = merged.comM;
   const [ixx, iyy, izz, ixy, ixz, iyz] = merged.inertiaKgM2;
   const [i1, i2, i3] = merged.principalKgM2;
@@ -29,8 +25,6 @@ export function mergePartValues(parts: readonly ComparedNumbers[]): ComparedNumb
     axes_quat_w: w, axes_quat_x: x, axes_quat_y: y, axes_quat_z: z,
     free_axes: merged.freeAxes,
     bounds_m: boxAround(parts.flatMap((one) => (one.bounds_m?.length === 6 ? [one.bounds_m] : []))),
-    volume_m3: sum('volume_m3'),
-    area_m2: sum('area_m2'),
   };
 }
 

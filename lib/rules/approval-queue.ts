@@ -1,5 +1,6 @@
 import type { DifferencesAnswer } from './outdated-lock';
 import type { PartRow, RowFinding } from './part-row';
+import type { SourceFields } from './source-words';
 import type { Category, Origin, ValueState } from './states';
 
 /** What the queue is narrowed to: all that waits, what somebody asked for, what is out of date, what is approved. */
@@ -38,7 +39,7 @@ export interface ShownRequest {
 type Numbers = Pick<PartRow, 'mass_kg' | 'com_x_m' | 'com_y_m' | 'com_z_m' | 'ixx_kg_m2' | 'iyy_kg_m2' | 'izz_kg_m2' | 'bounds_m'>;
 
 /** A value with all that a lead needs to answer for it; SI, the asset's axes. */
-export interface QueueRow extends Numbers {
+export interface QueueRow extends Numbers, SourceFields {
   part_id: string;
   asset: string;
   category: Category;

@@ -9,8 +9,6 @@ export type ComparedNumbers = Record<Key, number> & {
   free_axes: '' | '12' | '23' | '123';
   /** Box, m: min xyz, max xyz. */
   bounds_m: number[] | null;
-  volume_m3: number | null;
-  area_m2: number | null;
 };
 
 /** One of the two that are compared. */
@@ -30,6 +28,9 @@ export interface ComparedSide {
   at: string | null;
   /** Null where it has no value. */
   numbers: ComparedNumbers | null;
+  /** Of its surface; also where it has no mass. */
+  volume_m3: number | null;
+  area_m2: number | null;
 }
 
 /** Answer of GET /api/v1/shows/{show}/compare. */

@@ -13,6 +13,10 @@ export interface DifferenceLine {
   percent: number | null;
   /** The show's tolerance for this line, in percent. */
   limitPercent: number | null;
+  /** Lengths and angles count from an origin; what spans magnitudes has its exponent apart. */
+  notation: 'fixed' | 'engineering';
+  /** What is below it is rounding, and shown as zero. */
+  noise: number;
 }
 
 export interface DifferenceGroup {
@@ -22,6 +26,18 @@ export interface DifferenceGroup {
   lines: DifferenceLine[];
 }
 
+interface LineOptions {
+  /** Divides the numbers into the line's unit. */
+  per?: number;
+  percentOf?: number | null;
+  limitPercent?: number;
+  notation?: DifferenceLine['notation'];
+  noise?: number;
+}
+
+/** Share of the largest moment below which a matrix entry is what rounding left. */
+const ROUNDING = 1e-12;
+
 const INERTIA = ['ixx', 'iyy', 'izz', 'ixy', 'ixz', 'iyz'] as const;
 const SUBSCRIPTS = { ixx: 'Ixx', iyy: 'Iyy', izz: 'Izz', ixy: 'Ixy', ixz: 'Ixz', iyz: 'Iyz' } as const;
 
@@ -29,14 +45,15 @@ const SUBSCRIPTS = { ixx: 'Ixx', iyy: 'Iyy', izz: 'Izz', ixy: 'Ixy', ixz: 'Ixz',
 export function differenceGroups(of: ComparisonAnswer, unit: LinearUnit): DifferenceGroup[] {
   const [a, b] = [of.before.numbers, of.after.numbers];
   const length = METRES_PER[unit];
-  const line = (key: string, label: string, lineUnit: string | null, pick: (numbers: ComparedNumbers) => number | null, more: { per?: number; percentOf?: number | null; limitPercent?: number } = {}): DifferenceLine => {
+  const line = (key: string, label: string, lineUnit: string | null, [first, second]: readonly (number | null)[], more: LineOptions = {}): DifferenceLine => {
     const per = more.per ?? 1;
-    const [before, after] = [a && pick(a), b && pick(b)].map((value) => (value === null ? null : value / per));
+    const [before, after] = [first, second].map((value) => (value === null ? null : value / per));
     const difference = before === null || after === null ? null : after - before;
     const whole = more.percentOf === undefined ? before : more.percentOf === null ? null : more.percentOf / per;
-    return { key, label, unit: lineUnit, before, after, difference, percent: difference === null || !whole ? null : (difference / Math.abs(whole)) * 100, limitPercent: more.limitPercent ?? null };
+    return { key, label, unit: lineUnit, before, after, difference, percent: difference === null || !whole ? null : (difference / Math.abs(whole)) * 100, limitPercent: more.limitPercent ?? null, notation: more.notation ?? 'engineering', noise: more.noise ?? 0 };
   };
-  const alone = (key: string, label: string, lineUnit: string | null, difference: number | null, percent: number | null, limitPercent: number | null): DifferenceLine => ({ key, label, unit: lineUnit, before: null, after: null, difference, percent, limitPercent });
+  const alone = (key: string, label: string, lineUnit: string | null, difference: number | null, percent: number | null, limitPercent: number | null): DifferenceLine => ({ key, label, unit: lineUnit, before: null, after: null, difference, percent, limitPercent, notation: 'fixed', noise: 0 });
+  const both = (pick: (numbers: ComparedNumbers) => number): (number | null)[] => [a && pick(a), b && pick(b)];
   const { differences: d, tolerances } = of;
   const shiftM = d && Math.hypot(...d.com_shift_m);
   const largest = a?.i3_kg_m2 ?? null;
@@ -45,16 +62,16 @@ export function differenceGroups(of: ComparisonAnswer, unit: LinearUnit): Differ
       title: 'Mass and surface',
       percentOf: 'of the value before',
       lines: [
-        line('mass', 'Mass', 'kg', (n) => n.mass_kg, { limitPercent: tolerances.mass_percent }),
-        line('volume', 'Volume', `${unit}³`, (n) => n.volume_m3, { per: length ** 3 }),
-        line('area', 'Area', `${unit}²`, (n) => n.area_m2, { per: length ** 2 }),
+        line('mass', 'Mass', 'kg', both((n) => n.mass_kg), { limitPercent: tolerances.mass_percent }),
+        line('volume', 'Volume', `${unit}³`, [of.before.volume_m3, of.after.volume_m3], { per: length ** 3 }),
+        line('area', 'Area', `${unit}²`, [of.before.area_m2, of.after.area_m2], { per: length ** 2 }),
       ],
     },
     {
       title: `Centre of mass in the axes of ${of.asset}`,
       percentOf: 'of its size',
       lines: [
-        ...(['x', 'y', 'z'] as const).map((axis) => line(`com_${axis}`, axis, unit, (n) => n[`com_${axis}_m`], { per: length, percentOf: of.size_m })),
+        ...(['x', 'y', 'z'] as const).map((axis) => line(`com_${axis}`, axis, unit, both((n) => n[`com_${axis}_m`]), { per: length, percentOf: of.size_m, notation: 'fixed' })),
         alone('shift', 'Shift', unit, shiftM === null ? null : shiftM / length, d && d.com_shift_of_size * 100, tolerances.com_percent),
       ],
     },
@@ -62,7 +79,7 @@ export function differenceGroups(of: ComparisonAnswer, unit: LinearUnit): Differ
       title: 'Principal moments and axes',
       percentOf: 'of the moment before',
       lines: [
-        ...([1, 2, 3] as const).map((index) => line(`i${index}`, `I${index}`, 'kg m²', (n) => n[`i${index}_kg_m2`])),
+        ...([1, 2, 3] as const).map((index) => line(`i${index}`, `I${index}`, 'kg m²', both((n) => n[`i${index}_kg_m2`]))),
         alone('rotation', `Rotation of the axes${d?.rotation_deg === null ? silentWords(a, b) : ''}`, '°', d?.rotation_deg ?? null, null, null),
       ],
     },
@@ -70,7 +87,7 @@ export function differenceGroups(of: ComparisonAnswer, unit: LinearUnit): Differ
       title: 'Inertia matrix about the centre of mass',
       percentOf: 'of the largest moment before',
       lines: [
-        ...INERTIA.map((entry) => line(entry, SUBSCRIPTS[entry], 'kg m²', (n) => n[`${entry}_kg_m2`], { percentOf: largest })),
+        ...INERTIA.map((entry) => line(entry, SUBSCRIPTS[entry], 'kg m²', both((n) => n[`${entry}_kg_m2`]), { percentOf: largest, noise: ROUNDING * (largest ?? 0) })),
         alone('inertia', 'Matrix as a whole', null, null, d && d.inertia_change * 100, tolerances.moments_percent),
       ],
     },

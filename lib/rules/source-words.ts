@@ -23,8 +23,11 @@ export function sourceWord(row: Pick<PartRow, 'mass_source' | 'material'>): stri
   return row.mass_source === 'material' ? (row.material ?? SOURCE_WORDS.material) : SOURCE_WORDS[row.mass_source];
 }
 
+/** What a sentence about the source is made of. */
+export type SourceFields = Pick<PartRow, 'mass_source' | 'construction' | 'material' | 'target_mass_kg' | 'density_kg_m3' | 'areal_density_kg_m2'>;
+
 /** The same with the number that was set and its unit, for a sentence. */
-export function sourceSentence(row: PartRow): string {
+export function sourceSentence(row: SourceFields): string {
   switch (row.mass_source) {
     case null:
       return 'No mass yet.';

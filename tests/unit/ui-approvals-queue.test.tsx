@@ -112,7 +112,8 @@ describe('the approvals queue', () => {
     await opened();
     expect(within(await row('ox/torso')).getByText('+9 %, 31 mm along +z; 3 locked shots')).toBeInTheDocument();
     expect(within(await row('ox/torso')).getByText('beyond tolerance')).toBeInTheDocument();
-    expect(within(await row('ox/head')).getByText('Asked by Ilvo Brackmere: “for the lake shots”')).toBeInTheDocument();
+    expect(within(await row('ox/head')).getByText('“for the lake shots”')).toBeInTheDocument();
+    expect(within(await row('ox/head')).getByText('asked by Ilvo Brackmere, set by Mara Quill')).toBeInTheDocument();
     expect(within(await row('ox/hoof')).getByText(/somebody else approves it/)).toBeInTheDocument();
     expect([...document.querySelectorAll<HTMLElement>('[data-key]')].map((one) => one.dataset.key)).toEqual(['ox/', 'ox/head', 'ox/torso', 'ox/tail', 'ox/hoof', 'bell/', 'bell/shell']);
     expect(activeKey()).toBe('ox/head');

@@ -13,12 +13,13 @@ function cuboid(a: number, b: number, c: number, density: number): ComparedNumbe
   return {
     mass_kg: m, com_x_m: a / 2, com_y_m: b / 2, com_z_m: c / 2, ixx_kg_m2: ixx, iyy_kg_m2: iyy, izz_kg_m2: izz, ixy_kg_m2: 0, ixz_kg_m2: 0, iyz_kg_m2: 0,
     i1_kg_m2: i1, i2_kg_m2: i2, i3_kg_m2: i3, axes_quat_w: 1, axes_quat_x: 0, axes_quat_y: 0, axes_quat_z: 0, free_axes: '',
-    bounds_m: [0, 0, 0, a, b, c], volume_m3: a * b * c, area_m2: 2 * (a * b + b * c + a * c),
+    bounds_m: [0, 0, 0, a, b, c],
   };
 }
 
 function side(ref: string, numbers: ComparedNumbers | null): ComparedSide {
-  return { ref, version: 'v001', mesh_scale: 1, name: ref, about: '', by: null, at: null, numbers };
+  const [, , , a, b, c] = numbers?.bounds_m ?? [];
+  return { ref, version: 'v001', mesh_scale: 1, name: ref, about: '', by: null, at: null, numbers, volume_m3: numbers && a * b * c, area_m2: numbers && 2 * (a * b + b * c + a * c) };
 }
 
 function comparison(before: ComparedNumbers | null, after: ComparedNumbers | null): ComparisonAnswer {
