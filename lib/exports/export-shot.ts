@@ -29,7 +29,7 @@ export function exportShotAs(format: ExportFormat) {
     const headers = { etag: `"${sha256}"`, 'cache-control': 'private, no-cache, no-transform', vary: 'authorization, cookie' };
     if (matchesEtag(request.headers.get('if-none-match'), sha256)) return new Response(null, { status: 304, headers });
     const selection = new URLSearchParams({ ...(input.guard === '1' ? { guard: '1' } : {}), shot: shot.code }).toString();
-    await writeReceipt(db, actor, { showId: show.id, shotId: shot.id, format, selection, rows: locked.length, byteSize: bytes.length, sha256 }, locked);
+    await writeReceipt(db, actor, { showId: show.id, shotId: shot.id, format, selection, rows: locked.length, byteSize: bytes.length, sha256 }, [locked]);
     return new Response(bytes, {
       headers: {
         ...headers,

@@ -43,10 +43,10 @@ export async function getAssetMesh(context: Context, input: AssetMeshInput, requ
   const made = await make();
   const headers = { etag: `"${made.sha256}"`, 'cache-control': 'private, no-cache, no-transform', vary: 'authorization, cookie' };
   if (matchesEtag(request.headers.get('if-none-match'), made.sha256)) return new Response(null, { status: 304, headers });
-  const send = (path: string) => fileStream(path, () => Promise.resolve());
-  const body = await send(made.path).catch(async () => {
+  const body = await fileStream(made.path, made.byteSize).catch(async () => {
     meshCache.forget(key);
-    return send((await make()).path);
+    const again = await make();
+    return fileStream(again.path, again.byteSize);
   });
   return new Response(body, { headers: { ...headers, 'content-type': 'model/gltf-binary', 'content-length': String(made.byteSize) } });
 }

@@ -21,17 +21,17 @@ export async function makeExport(db: Database, show: { id: string; code: string 
     async (tx) => {
       const key = exportKey(show.id, await showRevision(tx, show.id), format, selection);
       const writer = EXPORT_WRITERS[format];
-      const write = async (put: (text: string) => Promise<void>): Promise<number> => {
-        let rows = 0;
-        await put(writer.head(show.code));
-        for await (const page of exportPages(tx, show, selection)) {
-          await put(writer.rows(page, rows === 0, selection.guard === '1'));
-          rows += page.length;
-        }
-        await put(writer.tail);
-        return rows;
-      };
-      const file = await exportCache.keep(key, (path) => spoolExport(path, write));
+      const file = await exportCache.keep(key, (path) =>
+        spoolExport(path, async (put) => {
+          let isFirst = true;
+          await put(writer.head(show.code));
+          for await (const page of exportPages(tx, show, selection)) {
+            await put(writer.rows(page, isFirst, selection.guard === '1'), page);
+            isFirst = false;
+          }
+          await put(writer.tail);
+        }),
+      );
       return { ...file, key };
     },
     { isolationLevel: 'repeatable read', accessMode: 'read only' },

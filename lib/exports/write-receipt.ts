@@ -24,17 +24,20 @@ export interface HandedRow {
 /**
  * Notes who took which rows with which checksum. A token that takes the same bytes again on the same day (UTC) is noted once.
  * The caller's transaction, if it has one, holds both the receipt and its rows; else they are written in one of their own.
+ * @param handed the rows in pages, which are read only where the receipt is new
  */
-export async function writeReceipt(db: Executor, actor: Actor, { showId, shotId, format, selection, rows, byteSize, sha256 }: HandOff, handed: readonly HandedRow[]): Promise<void> {
+export async function writeReceipt(db: Executor, actor: Actor, { showId, shotId, format, selection, rows, byteSize, sha256 }: HandOff, handed: Iterable<readonly HandedRow[]> | AsyncIterable<readonly HandedRow[]>): Promise<void> {
   await db.transaction(async (tx) => {
     const [receipt] = await tx
       .insert(receipts)
       .values({ showId, shotId, userId: actor.userId, tokenId: actor.tokenId, format, selection, rows, byteSize, sha256, day: sql`(now() at time zone 'utc')::date` })
       .onConflictDoNothing()
       .returning({ id: receipts.id });
-    if (!receipt || handed.length === 0) return;
-    await tx.execute(sql`
-      insert into receipt_rows (receipt_id, part_id, lock_id, value_sha256)
-      select ${receipt.id}::uuid, * from unnest(${sql.param(handed.map((row) => row.partId))}::uuid[], ${sql.param(handed.map((row) => row.lockId ?? null))}::uuid[], ${sql.param(handed.map((row) => row.valueSha256))}::text[])`);
+    if (!receipt) return;
+    for await (const page of handed) {
+      await tx.execute(sql`
+        insert into receipt_rows (receipt_id, part_id, lock_id, value_sha256)
+        select ${receipt.id}::uuid, * from unnest(${sql.param(page.map((row) => row.partId))}::uuid[], ${sql.param(page.map((row) => row.lockId ?? null))}::uuid[], ${sql.param(page.map((row) => row.valueSha256))}::text[])`);
+    }
   });
 }

@@ -1,22 +1,28 @@
-import { open } from 'node:fs/promises';
+import { open, type FileHandle } from 'node:fs/promises';
 
 const CHUNK_BYTES = 256 * 1024;
 
 /**
- * A file as a stream that reads as fast as it is drained. The file is open when this resolves, so that removing it no longer
- * matters. `onSent` runs after the last byte was taken and before the stream ends; a reader that leaves early never reaches it.
- * Rejects with ENOENT where there is no such file.
+ * The first bytes of a file as a stream that reads as fast as it is drained. The file is open when this resolves, so that removing
+ * it no longer matters. `onSent` runs after the last byte was taken and before the stream ends, and may read on from there; a
+ * reader that leaves early never reaches it. Rejects with ENOENT where there is no such file.
  */
-export async function fileStream(path: string, onSent: () => Promise<void>): Promise<ReadableStream<Uint8Array>> {
+export async function fileStream(path: string, byteSize: number, onSent: (file: FileHandle) => Promise<void> = () => Promise.resolve()): Promise<ReadableStream<Uint8Array>> {
   const handle = await open(path, 'r');
+  let left = byteSize;
   return new ReadableStream<Uint8Array>(
     {
       async pull(controller) {
         try {
-          const { bytesRead, buffer } = await handle.read(new Uint8Array(CHUNK_BYTES), 0, CHUNK_BYTES, null);
-          if (bytesRead > 0) return controller.enqueue(buffer.subarray(0, bytesRead));
+          if (left > 0) {
+            const most = Math.min(CHUNK_BYTES, left);
+            const { bytesRead, buffer } = await handle.read(new Uint8Array(most), 0, most, null);
+            if (bytesRead === 0) throw new Error(`${left} bytes of ${path} are missing.`);
+            left -= bytesRead;
+            return controller.enqueue(buffer.subarray(0, bytesRead));
+          }
+          await onSent(handle);
           await handle.close();
-          await onSent();
           controller.close();
         } catch (error) {
           await handle.close().catch(() => undefined);
