@@ -64,6 +64,22 @@ describe('changing a show', () => {
     expect(await asOwner('select name_pattern from shows where id = $1', [cast.show.id])).toEqual([{ name_pattern: null }]);
   });
 
+  test('tolerances are percentages, each with its history, and nothing else is one', async () => {
+    const lead = cast.contextOf('lead');
+    const show = cast.show.code;
+    expect(await editShow(lead, editShowInput.parse({ show, tolerance_mass_percent: 2.5, tolerance_com_percent: 0, tolerance_moments_percent: 1 }))).toMatchObject({
+      tolerance_mass_percent: 2.5, tolerance_com_percent: 0, tolerance_moments_percent: 1,
+    });
+    const { items } = await listEvents(lead, listEventsInput.parse({ show }));
+    expect(items[0].items).toEqual([
+      { part: null, field: 'tolerance_mass_percent', before: '0.5', after: '2.5' },
+      { part: null, field: 'tolerance_com_percent', before: '0.5', after: '0' },
+    ]);
+    for (const wrong of [-0.1, 101, Number.NaN, Number.POSITIVE_INFINITY, '1']) {
+      expect(editShowInput.safeParse({ show, tolerance_mass_percent: wrong }).error?.issues[0].path, String(wrong)).toEqual(['tolerance_mass_percent']);
+    }
+  });
+
   test('an archived show comes back and takes nothing else', async () => {
     const lead = cast.contextOf('lead');
     const show = cast.show.code;
