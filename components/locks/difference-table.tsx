@@ -1,4 +1,4 @@
-import { ENGINEERING_WIDTHS, Figure } from '@/components/ui/figure';
+import { Figure } from '@/components/ui/figure';
 import { Table, TableCell, TableHead, TableRow } from '@/components/ui/table';
 import type { OutdatedLock } from '@/lib/rules/outdated-lock';
 import { assetInShot } from '@/lib/rules/shot-words';
@@ -55,10 +55,10 @@ function DifferenceRow({ lock, unit }: { lock: OutdatedLock; unit: LinearUnit })
       </TableCell>
       <TableCell className="font-mono text-13 text-ink-2">{locked.version === current?.version ? locked.version : `${locked.version} → ${current?.version ?? '–'}`}</TableCell>
       <TableCell className="text-right">
-        <Figure value={locked.mass_kg} notation="engineering" align={ENGINEERING_WIDTHS} />
+        <Figure value={locked.mass_kg} notation="engineering" />
       </TableCell>
       <TableCell className="text-right">
-        <Figure value={current?.mass_kg ?? null} notation="engineering" align={ENGINEERING_WIDTHS} />
+        <Figure value={current?.mass_kg ?? null} notation="engineering" />
       </TableCell>
       {[percent(d?.mass_change), shift, percent(d?.com_shift_of_size), percent(d?.principal_change[0]), percent(d?.principal_change[1]), percent(d?.principal_change[2]), d?.rotation_deg ?? null].map((value, i) => (
         <TableCell key={i} className="text-right">

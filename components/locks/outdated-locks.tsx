@@ -21,11 +21,13 @@ interface OutdatedLocksProps {
   unit: LinearUnit;
   locks: readonly OutdatedLock[];
   mayLock: boolean;
+  /** Re-locking is what the screen is there for. */
+  primary: boolean;
   relock: (input: RelockValuesInput) => Promise<ActionResult<{ items: unknown[] }>>;
 }
 
 /** Locks whose part has another value by now, with the differences; those with an approved new value can be re-locked together. */
-export function OutdatedLocks({ show, unit, locks, mayLock, relock }: OutdatedLocksProps) {
+export function OutdatedLocks({ show, unit, locks, mayLock, primary, relock }: OutdatedLocksProps) {
   const [chosen, setChosen] = useState<ReadonlySet<string>>(new Set());
   const [asking, setAsking] = useState<readonly OutdatedLock[] | null>(null);
   const [done, setDone] = useState<string | null>(null);
@@ -43,7 +45,7 @@ export function OutdatedLocks({ show, unit, locks, mayLock, relock }: OutdatedLo
           {done ?? `${counted(locks.length, 'lock')} out of date, ${ready.length === 0 ? 'none' : ready.length.toLocaleString('en')} with an approved new value.`}
         </p>
         {mayLock && ready.length > 0 ? (
-          <Button look="filled" size="small" className="ml-auto" onClick={() => setAsking(picked.length > 0 ? picked : ready)}>
+          <Button look={primary ? 'filled' : 'outline'} size="small" className="ml-auto" onClick={() => setAsking(picked.length > 0 ? picked : ready)}>
             Re-lock {(picked.length > 0 ? picked : ready).length.toLocaleString('en')}…
           </Button>
         ) : null}
@@ -64,14 +66,14 @@ export function OutdatedLocks({ show, unit, locks, mayLock, relock }: OutdatedLo
             <TableHead className={mayLock ? undefined : 'pl-4 md:pl-6'}>Shot</TableHead>
             <TableHead>Asset and part</TableHead>
             <TableHead>Difference</TableHead>
-            <TableHead>Locked to</TableHead>
-            <TableHead className="text-right">Locked, kg</TableHead>
-            <TableHead>Now</TableHead>
-            <TableHead className="text-right">Now, kg</TableHead>
-            <TableHead>New value</TableHead>
-            <TableHead className="w-full pr-4 md:pr-6">
+            <TableHead>
               <span className="sr-only">Compare</span>
             </TableHead>
+            <TableHead>Locked to</TableHead>
+            <TableHead className="pr-11 text-right">Locked, kg</TableHead>
+            <TableHead>Now</TableHead>
+            <TableHead className="pr-11 text-right">Now, kg</TableHead>
+            <TableHead className="w-full pr-4 md:pr-6">New value</TableHead>
           </tr>
         </thead>
         <tbody>
@@ -99,6 +101,11 @@ export function OutdatedLocks({ show, unit, locks, mayLock, relock }: OutdatedLo
                 <span className={lock.beyond_tolerance ? 'font-medium' : 'text-ink-2'}>{lock.verdict}</span>
                 {lock.beyond_tolerance ? null : <span className="ml-2 text-13 text-ink-3">within tolerance</span>}
               </TableCell>
+              <TableCell>
+                <Link href={compareHref(show, lock.lock)} className="link text-13">
+                  Compare<span className="sr-only"> {lock.shot} {lock.asset} {lock.part ?? lock.body}</span>
+                </Link>
+              </TableCell>
               <TableCell className="font-mono text-13 text-ink-2">{lock.locked.version}</TableCell>
               <TableCell className="text-right">
                 <Figure value={lock.locked.mass_kg} notation="engineering" align={ENGINEERING_WIDTHS} />
@@ -107,11 +114,8 @@ export function OutdatedLocks({ show, unit, locks, mayLock, relock }: OutdatedLo
               <TableCell className="text-right">
                 <Figure value={lock.current?.mass_kg ?? null} notation="engineering" align={ENGINEERING_WIDTHS} />
               </TableCell>
-              <TableCell>{lock.state === null ? <span className="text-13 text-ink-3">not in the version</span> : <StateMark state={lock.current?.value_id ? 'approved' : lock.state} />}</TableCell>
-              <TableCell className="pr-4 text-right md:pr-6">
-                <Link href={compareHref(show, lock.lock)} className="link text-13">
-                  Compare<span className="sr-only"> {lock.shot} {lock.asset} {lock.part ?? lock.body}</span>
-                </Link>
+              <TableCell className="pr-4 md:pr-6">
+                <NewValue lock={lock} />
               </TableCell>
             </TableRow>
           ))}
@@ -137,4 +141,12 @@ export function OutdatedLocks({ show, unit, locks, mayLock, relock }: OutdatedLo
       />
     </>
   );
+}
+
+/** Whether there is anything to re-lock to. */
+function NewValue({ lock: { state, current } }: { lock: OutdatedLock }) {
+  if (current?.value_id) return <StateMark state="approved" />;
+  if (state === null) return <span className="text-13 text-ink-2">not in the current version</span>;
+  if (state === 'measured' || state === 'outdated') return <span className="text-13 text-ink-2">not approved yet</span>;
+  return <StateMark state={state} />;
 }

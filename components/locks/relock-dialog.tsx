@@ -43,7 +43,7 @@ export function RelockDialog({ locks, unit, busy, refusal, onRelock, onClose }: 
       onOpenChange={(open) => !open && onClose()}
       title={ready.length === 0 ? 'Nothing to re-lock yet' : `Re-lock ${counted(ready.length, 'part')} in ${counted(shots, 'shot')}`}
       description={ready.length === 0 ? 'None of the new values is approved.' : 'From the locked value to the one that is approved now.'}
-      className="sm:w-[min(64rem,calc(100vw-4rem))]"
+      className="sm:w-[min(68rem,calc(100vw-4rem))]"
     >
       <form onSubmit={submit} noValidate className="flex flex-col gap-4">
         {ready.length === 0 ? null : <DifferenceTable locks={ready} unit={unit} />}

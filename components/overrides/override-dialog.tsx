@@ -40,7 +40,7 @@ function OverrideForm({ slot, frame, busy, refusal, onDraft, onClose }: Override
       open
       onOpenChange={(open) => !open && onClose()}
       title={`Override ${slot.asset} ${slot.part}`}
-      description={`In ${slot.shot} alone; every other shot keeps the part's own value. A lead approves it before it can be locked.`}
+      description={`In ${slot.shot} alone; every other shot keeps the part’s own value. A lead approves it before it can be locked.`}
     >
       {part.isError ? (
         <p role="alert" className="text-14 text-wrong">

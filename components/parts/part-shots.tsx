@@ -16,7 +16,7 @@ export function PartShots({ show, slots }: { show: string; slots: readonly ShotS
           <TableHead className="pl-0">Shot</TableHead>
           <TableHead>State</TableHead>
           <TableHead>Locked to</TableHead>
-          <TableHead className="text-right">Mass, kg</TableHead>
+          <TableHead className="pr-11 text-right">Mass, kg</TableHead>
           <TableHead className="w-full">Against the value now</TableHead>
         </tr>
       </thead>

@@ -14,7 +14,7 @@ export function SequenceMatrix({ show, sequence }: { show: string; sequence: Seq
           <TableHead>Verdict</TableHead>
           {sequence.assets.map((asset) => (
             <TableHead key={asset}>
-              <Link href={`/shows/${encodeURIComponent(show)}?q=${encodeURIComponent(asset)}`} className="link">
+              <Link href={`/shows/${encodeURIComponent(show)}?q=${encodeURIComponent(asset)}`} className="link text-ink-2">
                 {asset}
               </Link>
             </TableHead>

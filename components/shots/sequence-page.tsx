@@ -72,7 +72,7 @@ export function SequencePage({ show, unit, acts, sequence, lockShots, relock }: 
           <h2 id="outdated-heading" className="px-4 pt-4 md:px-6">
             Out of date
           </h2>
-          <OutdatedLocks show={show} unit={unit} locks={sequence.outdated_locks} mayLock={acts.may_lock} relock={relock} />
+          <OutdatedLocks show={show} unit={unit} locks={sequence.outdated_locks} mayLock={acts.may_lock} primary={sequence.missing === 0} relock={relock} />
         </section>
       )}
     </>

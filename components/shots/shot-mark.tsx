@@ -10,7 +10,7 @@ const INK: Record<ShotState, string> = { complete: 'text-pewter', missing: 'text
 export function ShotMark({ of, className }: { of: Standing; className?: string }) {
   const state = shotState(of);
   return (
-    <span className={cn('inline-flex items-center gap-1.5 text-13 whitespace-nowrap', INK[state], className)}>
+    <span className={cn('inline-flex items-center gap-1.5 align-middle text-13 whitespace-nowrap', INK[state], className)}>
       <StateShape state={SHAPE[state]} className={state === 'missing' ? 'text-ink-2' : undefined} />
       {of.missing > 0 && of.outdated > 0 ? <StateShape state="outdated" className="-ml-0.5" /> : null}
       {shotVerdict(of)}

@@ -12,6 +12,7 @@ import { Button } from '@/components/ui/button';
 import { EmptyState } from '@/components/ui/empty-state';
 import { useShotActs, type ShotActions } from '@/hooks/use-shot-acts';
 import type { ShotActs, ShotDetail } from '@/lib/rules/shot-detail';
+import { counted } from '@/lib/rules/shot-words';
 import type { ShowFrame } from '@/lib/rules/show-frame';
 import { SlotBar } from './slot-bar';
 import { SlotTable } from './slot-table';
@@ -36,6 +37,7 @@ export function ShotPage({ frame, acts, shot, assets, actions }: ShotPageProps) 
   const [chosen, setChosen] = useState<ReadonlySet<string>>(new Set());
   const act = useShotActs(frame.code, shot, actions, () => setChosen(new Set()));
   const picked = shot.slots.filter((slot) => chosen.has(slotKey(slot)));
+  const overrides = shot.slots.filter((slot) => slot.override !== null).length;
   const choose = (keys: readonly string[], on: boolean) =>
     setChosen((now) => (on ? new Set([...now, ...keys]) : new Set([...now].filter((key) => !keys.includes(key)))));
 
@@ -58,6 +60,7 @@ export function ShotPage({ frame, acts, shot, assets, actions }: ShotPageProps) 
         <p className="flex flex-wrap items-baseline gap-x-3">
           <ShotMark of={shot} className="text-16 font-medium [&_svg]:size-4" />
           <span className="text-13 text-ink-3">{shot.locked.toLocaleString('en')} locked</span>
+          {overrides === 0 ? null : <span className="border-l-2 border-brass pl-1.5 text-13 text-ink-2">{counted(overrides, 'override')}</span>}
         </p>
         <div className="ml-auto flex flex-wrap items-center gap-2">
           {shot.locked === 0 ? null : (

@@ -88,7 +88,7 @@ function Against({ show, slot }: { show: string; slot: ShotSlot }) {
       </span>
     );
   }
-  if (lock === null) return <span className={slot.ready_value_id === null ? 'text-ink-2' : 'text-verdigris'}>{waitsFor(slot)}</span>;
+  if (lock === null) return <span className="text-13 text-ink-2">{waitsFor(slot)}</span>;
   return <span className="text-13 text-ink-3">the same</span>;
 }
 

@@ -40,7 +40,7 @@ export function SlotTable({ show, slots, chosen, onChoose, selectable, ...acts }
           <TableHead>State</TableHead>
           <TableHead className="w-full min-w-56">Against the value now</TableHead>
           <TableHead>Locked to</TableHead>
-          <TableHead className="text-right">Mass, kg</TableHead>
+          <TableHead className="pr-11 text-right">Mass, kg</TableHead>
           <TableHead>Locked by</TableHead>
           <TableHead className="pr-4 md:pr-6">
             <span className="sr-only">Acts</span>

@@ -61,7 +61,7 @@ function drawing(state: RowState) {
 /** Shape and word of a state. */
 export function StateMark({ state, className }: { state: RowState; className?: string }) {
   return (
-    <span className={cn('inline-flex items-center gap-1.5 text-13 whitespace-nowrap', INK[state], className)}>
+    <span className={cn('inline-flex items-center gap-1.5 align-middle text-13 whitespace-nowrap', INK[state], className)}>
       <StateShape state={state} />
       {STATE_WORDS[state]}
     </span>

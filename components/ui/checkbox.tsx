@@ -10,7 +10,7 @@ export function Checkbox({ className, ...props }: ComponentProps<typeof Primitiv
   return (
     <Primitive.Root
       className={cn(
-        'group inline-flex size-4 shrink-0 items-center justify-center rounded-[3px] border border-edge bg-ground text-on-brass hover:border-ink-2 disabled:opacity-50 data-[state=checked]:border-brass data-[state=checked]:bg-brass data-[state=indeterminate]:border-brass data-[state=indeterminate]:bg-brass',
+        'group inline-flex size-4 shrink-0 align-middle items-center justify-center rounded-[3px] border border-edge bg-ground text-on-brass hover:border-ink-2 disabled:opacity-50 data-[state=checked]:border-brass data-[state=checked]:bg-brass data-[state=indeterminate]:border-brass data-[state=indeterminate]:bg-brass',
         className,
       )}
       {...props}

@@ -1,6 +1,6 @@
 import { whyMissing, type MissingValue } from './lock-answers';
 import type { ShotSlot } from './shot-detail';
-import type { RowState } from './states';
+import { STATE_WORDS, type RowState } from './states';
 
 /** One key for each part of each copy in each shot. */
 export const slotKey = (slot: ShotSlot): string => `${slot.shot} ${slot.asset} ${slot.copy ?? ''} ${slot.part}`;
@@ -16,9 +16,11 @@ export function missingOf(slot: ShotSlot): MissingValue {
   return { shot: slot.shot, asset: slot.asset, part: slot.part, copy: slot.copy ?? '', state: slot.current?.state ?? 'unset', override: slot.override !== null };
 }
 
-/** What a part without a lock waits for. */
+/** What a part without a lock waits for, where its state does not say it already. */
 export function waitsFor(slot: ShotSlot): string {
-  return slot.ready_value_id === null ? whyMissing(missingOf(slot)) : 'approved, ready to lock';
+  if (slot.ready_value_id !== null) return 'missing, ready to lock';
+  const why = whyMissing(missingOf(slot));
+  return why === STATE_WORDS[slotState(slot)] ? 'missing' : `missing, ${why}`;
 }
 
 /** Whether the chosen parts can be locked, unlocked or re-locked. */

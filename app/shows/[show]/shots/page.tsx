@@ -68,7 +68,7 @@ async function outdatedLocks(context: ActorContext, access: ShowAccess, { show, 
   const { items } = await listOutdated(context, { show });
   const locks = items.filter((lock) => (asset === undefined || lock.asset === asset) && words.every((word) => `${lock.sequence} ${lock.shot}`.toLowerCase().includes(word)));
   if (locks.length === 0) return <EmptyState title="Nothing is out of date">What is locked is what the parts weigh now.</EmptyState>;
-  return <OutdatedLocks show={show} unit={access.show.linearUnit} locks={locks} mayLock={shotActs(access).may_lock} relock={relockValuesAction} />;
+  return <OutdatedLocks show={show} unit={access.show.linearUnit} locks={locks} mayLock={shotActs(access).may_lock} primary relock={relockValuesAction} />;
 }
 
 async function listedShots(context: ActorContext, input: ListShotsInput) {
