@@ -26,7 +26,18 @@ export function answerQueueKey(event: KeyboardEvent, acts: QueueActs, pageRows: 
   const { key, shiftKey } = event;
   if (event.altKey) return false;
   if (event.ctrlKey || event.metaKey) return key === 'a' && !shiftKey ? answered(acts.all) : false;
-  const moves: Record<string, number> = { ArrowDown: 1, j: 1, J: 1, ArrowUp: -1, k: -1, K: -1, PageDown: pageRows, PageUp: -pageRows, Home: -FAR, End: FAR };
+  const moves: Record<string, number> = {
+    ArrowDown: 1,
+    j: 1,
+    J: 1,
+    ArrowUp: -1,
+    k: -1,
+    K: -1,
+    PageDown: pageRows,
+    PageUp: -pageRows,
+    Home: -FAR,
+    End: FAR,
+  };
   if (key in moves) return answered(() => acts.move(moves[key], shiftKey));
   const plain: Record<string, () => void> = {
     x: acts.toggle,

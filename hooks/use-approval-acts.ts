@@ -28,14 +28,23 @@ export function useApprovalActs(show: string, actions: ApprovalActions) {
   const [refusals, setRefusals] = useState<ReadonlyMap<string, Refusal>>(NONE);
   const [busy, setBusy] = useState(false);
 
-  async function run(keys: readonly string[], send: () => Promise<ActionResult<unknown>>, done: string, leaves: readonly string[]): Promise<ActRefusal> {
+  async function run(
+    keys: readonly string[],
+    send: () => Promise<ActionResult<unknown>>,
+    done: string,
+    leaves: readonly string[],
+  ): Promise<ActRefusal> {
     setBusy(true);
     const result = await send().catch((): ActionResult<unknown> => unreached);
     setBusy(false);
     const refused = result.ok ? [] : refusalsOf(result.errors, keys);
     setRefusals((now) => new Map([...[...now].filter(([key]) => !keys.includes(key)), ...refused]));
     if (result.ok) {
-      if (leaves.length > 0) client.setQueriesData<QueueData>({ queryKey: queuesKey(show) }, (data) => data && withoutKeys(data, new Set(leaves)));
+      if (leaves.length > 0)
+        client.setQueriesData<QueueData>(
+          { queryKey: queuesKey(show) },
+          (data) => data && withoutKeys(data, new Set(leaves)),
+        );
       toast(done);
     }
     // What was refused has most often changed meanwhile, so that what stands here is read again either way.
@@ -45,7 +54,8 @@ export function useApprovalActs(show: string, actions: ApprovalActions) {
     return result.ok ? null : { message: result.message, placed: refused.length > 0 };
   }
 
-  const named = (rows: readonly Pick<QueueRow, 'asset' | 'part'>[], what: (count: number) => string) => (rows.length === 1 ? `${rows[0].asset} ${rows[0].part}` : what(rows.length));
+  const named = (rows: readonly Pick<QueueRow, 'asset' | 'part'>[], what: (count: number) => string) =>
+    rows.length === 1 ? `${rows[0].asset} ${rows[0].part}` : what(rows.length);
 
   return {
     busy,
@@ -53,24 +63,49 @@ export function useApprovalActs(show: string, actions: ApprovalActions) {
     forget: () => setRefusals(NONE),
     approve: (rows: readonly QueueRow[], note: string) => {
       const keys = rows.map(queueKey);
-      return run(keys, () => actions.approve({ show, items: rows.map(approvalItem), note }), `Approved ${named(rows, values)}`, keys);
+      return run(
+        keys,
+        () => actions.approve({ show, items: rows.map(approvalItem), note }),
+        `Approved ${named(rows, values)}`,
+        keys,
+      );
     },
     carryOver: (rows: readonly CarryOverRow[], note: string) => {
       const items = rows.map((row) => ({ ...row, shot: null }));
       const keys = items.map(queueKey);
-      return run(keys, () => actions.approve({ show, items: items.map(approvalItem), note, carry_over: true }), `Carried over ${named(rows, values)}`, keys);
+      return run(
+        keys,
+        () => actions.approve({ show, items: items.map(approvalItem), note, carry_over: true }),
+        `Carried over ${named(rows, values)}`,
+        keys,
+      );
     },
     takeBack: (rows: readonly QueueRow[], reason: string) => {
       const ids = rows.flatMap((row) => approvalOf(row) ?? []);
       const keys = rows.map(queueKey);
       const leaves = rows.filter((row) => row.value_id !== null).map(queueKey);
-      return run(keys, () => actions.withdraw({ show, items: ids.map((value_id) => ({ value_id })), reason }), `Took the approval of ${named(rows, values)} back`, leaves);
+      return run(
+        keys,
+        () => actions.withdraw({ show, items: ids.map((value_id) => ({ value_id })), reason }),
+        `Took the approval of ${named(rows, values)} back`,
+        leaves,
+      );
     },
     ask: (rows: readonly AskedRow[], note: string) => {
-      return run(rows.map(queueKey), () => actions.ask({ show, items: rows.map(askItem), note }), `Asked for the approval of ${named(rows, values)}`, []);
+      return run(
+        rows.map(queueKey),
+        () => actions.ask({ show, items: rows.map(askItem), note }),
+        `Asked for the approval of ${named(rows, values)}`,
+        [],
+      );
     },
     takeQuestionBack: (rows: readonly AskedRow[]) => {
-      return run(rows.map(queueKey), () => actions.ask({ show, items: rows.map(askItem), take_back: true }), `Took the question about ${named(rows, values)} back`, []);
+      return run(
+        rows.map(queueKey),
+        () => actions.ask({ show, items: rows.map(askItem), take_back: true }),
+        `Took the question about ${named(rows, values)} back`,
+        [],
+      );
     },
   };
 }
@@ -90,7 +125,9 @@ export function approvalOf(row: Pick<QueueRow, 'value_id' | 'last'>): string | n
 function refusalsOf(errors: readonly ItemError[], keys: readonly string[]): [string, Refusal][] {
   return errors.flatMap((error): [string, Refusal][] => {
     const key = keys[error.index];
-    return key === undefined ? [] : [[key, { message: error.message, current: isRow(error.current) ? error.current : null }]];
+    return key === undefined
+      ? []
+      : [[key, { message: error.message, current: isRow(error.current) ? error.current : null }]];
   });
 }
 
@@ -103,7 +140,11 @@ function withoutKeys(data: QueueData, keys: ReadonlySet<string>): QueueData {
   const gone = data.pages.flatMap((page) => page.items.filter((row) => keys.has(queueKey(row))));
   return {
     ...data,
-    pages: data.pages.map((page) => ({ ...page, items: page.items.filter((row) => !keys.has(queueKey(row))), counts: page.counts && lessened(page.counts, gone) })),
+    pages: data.pages.map((page) => ({
+      ...page,
+      items: page.items.filter((row) => !keys.has(queueKey(row))),
+      counts: page.counts && lessened(page.counts, gone),
+    })),
   };
 }
 
@@ -118,4 +159,10 @@ function lessened(counts: NonNullable<QueueData['pages'][number]['counts']>, gon
   };
 }
 
-const unreached: ActionResult<unknown> = { ok: false, code: 'not_reached', message: 'The server was not reached. Nothing was done; try again.', field: null, errors: [] };
+const unreached: ActionResult<unknown> = {
+  ok: false,
+  code: 'not_reached',
+  message: 'The server was not reached. Nothing was done; try again.',
+  field: null,
+  errors: [],
+};

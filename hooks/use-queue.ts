@@ -2,7 +2,13 @@
 
 import { useInfiniteQuery, type InfiniteData } from '@tanstack/react-query';
 import { useMemo } from 'react';
-import { queueKey, type QueueCounts, type QueueFilter, type QueuePage, type QueueRow } from '@/lib/rules/approval-queue';
+import {
+  queueKey,
+  type QueueCounts,
+  type QueueFilter,
+  type QueuePage,
+  type QueueRow,
+} from '@/lib/rules/approval-queue';
 import { requestJson } from './request-json';
 
 const PAGE_ROWS = 200;
@@ -17,7 +23,11 @@ export function useQueue(show: string, state: QueueFilter) {
     queryKey: [...queuesKey(show), state],
     initialPageParam: null as string | null,
     queryFn: ({ pageParam, signal }) => {
-      const search = new URLSearchParams({ state, limit: String(PAGE_ROWS), ...(pageParam === null ? {} : { cursor: pageParam }) });
+      const search = new URLSearchParams({
+        state,
+        limit: String(PAGE_ROWS),
+        ...(pageParam === null ? {} : { cursor: pageParam }),
+      });
       return requestJson<QueuePage>(`/api/v1/shows/${encodeURIComponent(show)}/approvals?${search}`, { signal });
     },
     getNextPageParam: (page) => page.next_cursor,
@@ -25,7 +35,14 @@ export function useQueue(show: string, state: QueueFilter) {
   });
   const { data } = query;
   // A value whose place changed between two readings may stand on both pages.
-  const rows = useMemo((): QueueRow[] => [...new Map((data?.pages ?? []).flatMap((page) => page.items.map((row) => [queueKey(row), row] as const))).values()], [data]);
+  const rows = useMemo(
+    (): QueueRow[] => [
+      ...new Map(
+        (data?.pages ?? []).flatMap((page) => page.items.map((row) => [queueKey(row), row] as const)),
+      ).values(),
+    ],
+    [data],
+  );
   const counts: QueueCounts | null = data?.pages[0]?.counts ?? null;
   return { ...query, rows, counts };
 }

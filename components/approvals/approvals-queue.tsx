@@ -39,11 +39,14 @@ export function ApprovalsQueue({ frame, actions }: { frame: ShowFrame; actions: 
   const nodes = useMemo(() => arrangeQueue(queue.rows), [queue.rows]);
   const selectable = useMemo(() => selectableNodes(nodes), [nodes]);
   // The first value is where the keyboard begins, and where it goes on when the active one has left.
-  const activeKey = nodes.some((node) => node.key === selection.active) ? selection.active : (nodes.find((node) => node.kind === 'value')?.key ?? null);
+  const activeKey = nodes.some((node) => node.key === selection.active)
+    ? selection.active
+    : (nodes.find((node) => node.kind === 'value')?.key ?? null);
   const standing = { ...selection, active: activeKey };
   const active = nodes.find((node) => node.key === activeKey) ?? null;
   const chosen = queue.rows.filter((row) => selection.chosen.has(queueKey(row)));
-  const targets = chosen.length > 0 ? chosen : active === null ? [] : active.kind === 'asset' ? active.rows : [active.row];
+  const targets =
+    chosen.length > 0 ? chosen : active === null ? [] : active.kind === 'asset' ? active.rows : [active.row];
 
   const { hasNextPage, isFetching, fetchNextPage } = queue;
   const readOn = useCallback(() => {
@@ -83,7 +86,8 @@ export function ApprovalsQueue({ frame, actions }: { frame: ShowFrame; actions: 
     if (node.rows.at(-1) === queue.rows.at(-1) && hasNextPage) {
       const read = await queue.fetchNextPage();
       const all = read.data?.pages.flatMap((page) => page.items) ?? [];
-      if (all.at(-1)?.asset === node.asset && read.hasNextPage) return void toast('The asset is still being read. Try again in a moment.');
+      if (all.at(-1)?.asset === node.asset && read.hasNextPage)
+        return void toast('The asset is still being read. Try again in a moment.');
       rows = all.filter((row) => row.asset === node.asset);
     }
     const able = withoutWarnings(rows);
@@ -104,7 +108,12 @@ export function ApprovalsQueue({ frame, actions }: { frame: ShowFrame; actions: 
       if (rows.length > 0) void actAtOnce(rows, () => acts.approve(rows, ''));
     },
     approveAsset: () => {
-      const of = nodes.find((node) => node.kind === 'asset' && active !== null && node.asset === (active.kind === 'asset' ? active.asset : active.row.asset));
+      const of = nodes.find(
+        (node) =>
+          node.kind === 'asset' &&
+          active !== null &&
+          node.asset === (active.kind === 'asset' ? active.asset : active.row.asset),
+      );
       if (frame.may_approve && !acts.busy && of?.kind === 'asset') void approveAsset(of);
     },
     note: () => {
@@ -116,14 +125,21 @@ export function ApprovalsQueue({ frame, actions }: { frame: ShowFrame; actions: 
       if (!frame.may_approve) return;
       const rows = targets.filter((row) => approvalOf(row) !== null);
       if (rows.length === 0) return void (targets.length > 0 && toast('There is no approval to take back.'));
-      setWish(takeBackWish(rows, (reason) => act(filter === 'approved' ? rows : [], () => acts.takeBack(rows, reason))));
+      setWish(
+        takeBackWish(rows, (reason) => act(filter === 'approved' ? rows : [], () => acts.takeBack(rows, reason))),
+      );
     },
     ask: () => {
       if (!frame.may_ask) return;
       const own = targets.filter((row) => row.request?.own);
       if (own.length > 0) return void actAtOnce([], () => acts.takeQuestionBack(own));
       const rows = targets.filter((row) => row.value_id === null && row.shot === null);
-      if (rows.length > 0) setWish(questionWish(rows.length === 1 ? `${rows[0].asset} ${rows[0].part}` : `${rows.length} values`, (note) => act([], () => acts.ask(rows, note))));
+      if (rows.length > 0)
+        setWish(
+          questionWish(rows.length === 1 ? `${rows[0].asset} ${rows[0].part}` : `${rows.length} values`, (note) =>
+            act([], () => acts.ask(rows, note)),
+          ),
+        );
     },
     carryOver: () => frame.may_approve && setCarrying(true),
     compare: () => {
@@ -137,12 +153,21 @@ export function ApprovalsQueue({ frame, actions }: { frame: ShowFrame; actions: 
   };
 
   function open(row: QueueRow) {
-    router.push(`/shows/${encodeURIComponent(frame.code)}/assets/${encodeURIComponent(row.asset)}/${encodeURIComponent(row.part)}`);
+    router.push(
+      `/shows/${encodeURIComponent(frame.code)}/assets/${encodeURIComponent(row.asset)}/${encodeURIComponent(row.part)}`,
+    );
   }
 
   return (
     <>
-      <QueueHeading frame={frame} targets={targets} chosen={chosen.length} outdated={queue.counts?.outdated ?? 0} busy={acts.busy} acts={keys} />
+      <QueueHeading
+        frame={frame}
+        targets={targets}
+        chosen={chosen.length}
+        outdated={queue.counts?.outdated ?? 0}
+        busy={acts.busy}
+        acts={keys}
+      />
       <QueueToolbar
         frame={frame}
         counts={queue.counts}
@@ -177,10 +202,28 @@ export function ApprovalsQueue({ frame, actions }: { frame: ShowFrame; actions: 
           />
         )}
       </div>
-      <QueueFooter shown={queue.rows.length} counts={queue.counts} filter={filter} chosen={chosen.length} mayApprove={frame.may_approve} onKeys={keys.keys} />
+      <QueueFooter
+        shown={queue.rows.length}
+        counts={queue.counts}
+        filter={filter}
+        chosen={chosen.length}
+        mayApprove={frame.may_approve}
+        onKeys={keys.keys}
+      />
       <WordsDialog wish={wish} onClose={() => setWish(null)} />
-      {carrying ? <CarryOverDialog show={frame.code} onCarry={(rows) => acts.carryOver(rows, '')} onClose={() => setCarrying(false)} /> : null}
-      <QueueKeys mayApprove={frame.may_approve} mayAsk={frame.may_ask} open={keysOpen} onClose={() => setKeysOpen(false)} />
+      {carrying ? (
+        <CarryOverDialog
+          show={frame.code}
+          onCarry={(rows) => acts.carryOver(rows, '')}
+          onClose={() => setCarrying(false)}
+        />
+      ) : null}
+      <QueueKeys
+        mayApprove={frame.may_approve}
+        mayAsk={frame.may_ask}
+        open={keysOpen}
+        onClose={() => setKeysOpen(false)}
+      />
     </>
   );
 }

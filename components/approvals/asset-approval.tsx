@@ -54,13 +54,28 @@ export function AssetApproval({ frame, asset, rows, actions }: AssetApprovalProp
             <Button size="small" disabled={acts.busy} onClick={() => void done(() => acts.approve(clean, ''))}>
               Approve {clean.length.toLocaleString('en')} without warnings
             </Button>
-            <Button size="small" look="quiet" onClick={() => setWish(noteWish(clean, (note) => done(() => acts.approve(clean, note))))}>
+            <Button
+              size="small"
+              look="quiet"
+              onClick={() => setWish(noteWish(clean, (note) => done(() => acts.approve(clean, note))))}
+            >
               With a note
             </Button>
           </>
         ) : null}
         {frame.may_ask && !frame.may_approve && unasked.length > 0 ? (
-          <Button size="small" disabled={acts.busy} onClick={() => setWish(questionWish(unasked.length === 1 ? `${asset} ${unasked[0].part}` : `${unasked.length} values of ${asset}`, (note) => done(() => acts.ask(unasked, note))))}>
+          <Button
+            size="small"
+            disabled={acts.busy}
+            onClick={() =>
+              setWish(
+                questionWish(
+                  unasked.length === 1 ? `${asset} ${unasked[0].part}` : `${unasked.length} values of ${asset}`,
+                  (note) => done(() => acts.ask(unasked, note)),
+                ),
+              )
+            }
+          >
             Ask for approval of {unasked.length.toLocaleString('en')}
           </Button>
         ) : null}
@@ -85,6 +100,9 @@ function stateWords(rows: readonly QueueRow[]): string {
 function heldWords(waiting: readonly QueueRow[]): string {
   const own = waiting.filter((row) => row.own).length;
   const warned = waiting.filter((row) => !row.own && row.warnings.length > 0).length;
-  const parts = [own > 0 ? `${own.toLocaleString('en')} you set yourself` : '', warned > 0 ? `${warned.toLocaleString('en')} with warnings` : ''].filter(Boolean);
+  const parts = [
+    own > 0 ? `${own.toLocaleString('en')} you set yourself` : '',
+    warned > 0 ? `${warned.toLocaleString('en')} with warnings` : '',
+  ].filter(Boolean);
   return `Not among them: ${parts.join(', ')}.`;
 }

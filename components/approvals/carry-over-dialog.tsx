@@ -20,7 +20,8 @@ interface CarryOverDialogProps {
 export function CarryOverDialog({ show, onCarry, onClose }: CarryOverDialogProps) {
   const { data, error } = useQuery({
     queryKey: ['carry-over', show],
-    queryFn: ({ signal }) => requestJson<CarryOverAnswer>(`/api/v1/shows/${encodeURIComponent(show)}/carry-over`, { signal }),
+    queryFn: ({ signal }) =>
+      requestJson<CarryOverAnswer>(`/api/v1/shows/${encodeURIComponent(show)}/carry-over`, { signal }),
     staleTime: 0,
   });
   const [refusal, setRefusal] = useState<ActRefusal>(null);
@@ -96,6 +97,9 @@ export function CarryOverDialog({ show, onCarry, onClose }: CarryOverDialogProps
 }
 
 function restWords({ own, beyond_tolerance: beyond }: CarryOverAnswer): string {
-  const parts = [beyond > 0 ? `${beyond.toLocaleString('en')} moved more` : '', own > 0 ? `${own.toLocaleString('en')} you set yourself` : ''].filter(Boolean);
+  const parts = [
+    beyond > 0 ? `${beyond.toLocaleString('en')} moved more` : '',
+    own > 0 ? `${own.toLocaleString('en')} you set yourself` : '',
+  ].filter(Boolean);
   return `${parts.join(', ')}; ${beyond + own === 1 ? 'it waits' : 'they wait'} in the queue.`;
 }

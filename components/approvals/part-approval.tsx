@@ -51,7 +51,8 @@ export function PartApproval({ frame, row, actions }: PartApprovalProps) {
             <AskedShape />
           </span>
           <span>
-            {row.request.own ? 'You ask' : `${row.request.asked_by} asks`} for its approval, <Moment at={row.request.asked_at} />
+            {row.request.own ? 'You ask' : `${row.request.asked_by} asks`} for its approval,{' '}
+            <Moment at={row.request.asked_at} />
             {row.request.note === null ? '.' : `: “${row.request.note}”`}
           </span>
         </p>
@@ -64,14 +65,29 @@ export function PartApproval({ frame, row, actions }: PartApprovalProps) {
             <Button size="small" disabled={acts.busy} onClick={() => void atOnce(() => acts.approve([row], ''))}>
               Approve
             </Button>
-            <Button size="small" look="quiet" onClick={() => setWish(noteWish([row], (note) => acts.approve([row], note)))}>
+            <Button
+              size="small"
+              look="quiet"
+              onClick={() => setWish(noteWish([row], (note) => acts.approve([row], note)))}
+            >
               With a note
             </Button>
           </>
         ) : null}
-        {frame.may_ask && row.value_id === null && (!frame.may_approve || row.own || row.request?.own) ? <AskAct row={row} busy={acts.busy} onTakeBack={() => void atOnce(() => acts.takeQuestionBack([row]))} onAsk={() => setWish(questionWish(`${row.asset} ${row.part}`, (note) => acts.ask([row], note)))} /> : null}
+        {frame.may_ask && row.value_id === null && (!frame.may_approve || row.own || row.request?.own) ? (
+          <AskAct
+            row={row}
+            busy={acts.busy}
+            onTakeBack={() => void atOnce(() => acts.takeQuestionBack([row]))}
+            onAsk={() => setWish(questionWish(`${row.asset} ${row.part}`, (note) => acts.ask([row], note)))}
+          />
+        ) : null}
         {frame.may_approve && approvalOf(row) !== null ? (
-          <Button size="small" look="quiet" onClick={() => setWish(takeBackWish([row], (reason) => acts.takeBack([row], reason)))}>
+          <Button
+            size="small"
+            look="quiet"
+            onClick={() => setWish(takeBackWish([row], (reason) => acts.takeBack([row], reason)))}
+          >
             Take back
           </Button>
         ) : null}
@@ -81,7 +97,17 @@ export function PartApproval({ frame, row, actions }: PartApprovalProps) {
   );
 }
 
-function AskAct({ row, busy, onAsk, onTakeBack }: { row: QueueRow; busy: boolean; onAsk: () => void; onTakeBack: () => void }) {
+function AskAct({
+  row,
+  busy,
+  onAsk,
+  onTakeBack,
+}: {
+  row: QueueRow;
+  busy: boolean;
+  onAsk: () => void;
+  onTakeBack: () => void;
+}) {
   return row.request?.own ? (
     <Button size="small" disabled={busy} onClick={onTakeBack}>
       Take question back

@@ -12,7 +12,10 @@ import { ToleranceMark } from './tolerance-mark';
 export function VerdictCell({ row, refusal }: { row: QueueRow; refusal: Refusal | null }) {
   return (
     <span className="flex min-w-0 flex-col justify-center">
-      <span className={cn('truncate text-14', row.beyond_tolerance && 'font-medium', row.value_id !== null && 'text-ink-2')} title={verdictSentence(row)}>
+      <span
+        className={cn('truncate text-14', row.beyond_tolerance && 'font-medium', row.value_id !== null && 'text-ink-2')}
+        title={verdictSentence(row)}
+      >
         {verdictSentence(row)}
       </span>
       {refusal === null ? <Against row={row} /> : <RefusalLine refusal={refusal} />}
@@ -21,7 +24,10 @@ export function VerdictCell({ row, refusal }: { row: QueueRow; refusal: Refusal 
 }
 
 function RefusalLine({ refusal }: { refusal: Refusal }) {
-  const now = refusal.current?.mass_kg == null ? '' : ` Now ${formatProse(refusal.current.mass_kg)} kg${refusal.current.set_by === null ? '' : `, set by ${refusal.current.set_by}`}.`;
+  const now =
+    refusal.current?.mass_kg == null
+      ? ''
+      : ` Now ${formatProse(refusal.current.mass_kg)} kg${refusal.current.set_by === null ? '' : `, set by ${refusal.current.set_by}`}.`;
   return (
     <span role="alert" className="truncate text-13 text-wrong" title={refusal.message + now}>
       {refusal.message}
@@ -38,7 +44,8 @@ function Against({ row }: { row: QueueRow }) {
     <span className="flex min-w-0 items-center gap-3 text-13 text-ink-3">
       {row.beyond_tolerance === null ? null : <ToleranceMark beyond={row.beyond_tolerance} />}
       <span className="truncate" title={row.last.note ?? undefined}>
-        {row.value_id === null ? `against ${row.last.version} by` : 'by'} {row.last.approved_by}, <Moment at={row.last.approved_at} />
+        {row.value_id === null ? `against ${row.last.version} by` : 'by'} {row.last.approved_by},{' '}
+        <Moment at={row.last.approved_at} />
         {row.last.note === null ? null : <>: “{row.last.note}”</>}
       </span>
     </span>
@@ -92,7 +99,16 @@ function peopleWords({ request, set_by: setBy, set_from: from, shot, setters }: 
 /** A raised hand drawn as a flag on its staff. */
 export function AskedShape() {
   return (
-    <svg viewBox="0 0 12 14" width="12" height="14" aria-hidden fill="none" stroke="currentColor" strokeWidth="1.5" className="shrink-0 text-brass">
+    <svg
+      viewBox="0 0 12 14"
+      width="12"
+      height="14"
+      aria-hidden
+      fill="none"
+      stroke="currentColor"
+      strokeWidth="1.5"
+      className="shrink-0 text-brass"
+    >
       <path d="M2.5 13V1.5M2.5 2H10L8 4.75 10 7.5H2.5" strokeLinejoin="round" />
     </svg>
   );

@@ -15,7 +15,9 @@ export function QueueFooter({ shown, counts, filter, chosen, mayApprove, onKeys 
   return (
     <footer className="flex h-9 shrink-0 items-center gap-6 border-t border-rule bg-bench px-4 text-12 whitespace-nowrap text-ink-2 md:px-6">
       <p role="status">
-        {shown < all ? `${shown.toLocaleString('en')} of ${all.toLocaleString('en')} values read` : `${all.toLocaleString('en')} ${all === 1 ? 'value' : 'values'}`}
+        {shown < all
+          ? `${shown.toLocaleString('en')} of ${all.toLocaleString('en')} values read`
+          : `${all.toLocaleString('en')} ${all === 1 ? 'value' : 'values'}`}
         {chosen > 0 ? ` · ${chosen.toLocaleString('en')} chosen` : ''}
       </p>
       <p className="ml-auto text-ink-3 max-lg:hidden">

@@ -33,7 +33,18 @@ interface QueueGridProps {
 
 /** The rows in sight. The grid itself holds the focus and names the active row, so that rows may come and go as it scrolls. */
 export function QueueGrid(props: QueueGridProps) {
-  const { gridRef: scroller, nodes, frame, selection, refusals, onSelect, onOpen, onApproveAsset, onNearEnd, onKey } = props;
+  const {
+    gridRef: scroller,
+    nodes,
+    frame,
+    selection,
+    refusals,
+    onSelect,
+    onOpen,
+    onApproveAsset,
+    onNearEnd,
+    onKey,
+  } = props;
   const idBase = useId();
   const width = useElementWidth(scroller);
   const compact = width !== null && width < COMPACT_BELOW;
@@ -72,7 +83,10 @@ export function QueueGrid(props: QueueGridProps) {
     if (nodes.length > 0 && lastSeen >= nodes.length - READ_AHEAD) onNearEnd();
   }, [lastSeen, nodes.length, onNearEnd]);
 
-  const keyOf = (event: MouseEvent): string | null => (event.target instanceof Element && !event.target.closest('button') ? (event.target.closest<HTMLElement>('[data-key]')?.dataset.key ?? null) : null);
+  const keyOf = (event: MouseEvent): string | null =>
+    event.target instanceof Element && !event.target.closest('button')
+      ? (event.target.closest<HTMLElement>('[data-key]')?.dataset.key ?? null)
+      : null;
 
   return (
     <div
@@ -85,7 +99,8 @@ export function QueueGrid(props: QueueGridProps) {
       aria-activedescendant={activeIndex < 0 ? undefined : rowId(nodes[activeIndex].key)}
       onKeyDown={(event) => {
         if (event.target instanceof Element && event.target.closest('button')) return;
-        if (onKey(event, Math.max(1, Math.floor((scroller.current?.clientHeight ?? 0) / VALUE_ROW_HEIGHT) - 1))) event.preventDefault();
+        if (onKey(event, Math.max(1, Math.floor((scroller.current?.clientHeight ?? 0) / VALUE_ROW_HEIGHT) - 1)))
+          event.preventDefault();
       }}
       onClick={(event) => {
         const key = keyOf(event);
@@ -110,7 +125,11 @@ export function QueueGrid(props: QueueGridProps) {
               top={item.start}
               frame={frame}
               compact={compact}
-              chosen={node.kind === 'asset' ? node.rows.every((row) => selection.chosen.has(queueKey(row))) : selection.chosen.has(node.key)}
+              chosen={
+                node.kind === 'asset'
+                  ? node.rows.every((row) => selection.chosen.has(queueKey(row)))
+                  : selection.chosen.has(node.key)
+              }
               active={selection.active === node.key}
               refusal={refusals.get(node.key) ?? null}
               onApproveAsset={onApproveAsset}
@@ -134,9 +153,17 @@ const HEADS: readonly (readonly [label: string, className: string])[] = [
 
 function Head() {
   return (
-    <div role="row" aria-rowindex={1} className={cn('sticky top-0 z-20 grid h-9 border-b border-rule bg-ground', QUEUE_TEMPLATE)}>
+    <div
+      role="row"
+      aria-rowindex={1}
+      className={cn('sticky top-0 z-20 grid h-9 border-b border-rule bg-ground', QUEUE_TEMPLATE)}
+    >
       {HEADS.map(([label, className]) => (
-        <div key={label} role="columnheader" className={cn('flex min-w-0 items-center px-2.5 text-12 text-ink-3', className)}>
+        <div
+          key={label}
+          role="columnheader"
+          className={cn('flex min-w-0 items-center px-2.5 text-12 text-ink-3', className)}
+        >
           <span className="truncate">{label}</span>
         </div>
       ))}

@@ -30,7 +30,9 @@ export function QueueHeading({ frame, targets, chosen, outdated, busy, acts }: Q
           </Button>
           {frame.may_ask && !frame.may_approve ? (
             <Button look="filled" disabled={busy || approved || targets.length === 0} onClick={acts.ask}>
-              {targets.some((row) => row.request?.own) ? 'Take question back' : `Ask for approval${chosen > 1 ? ` of ${chosen.toLocaleString('en')}` : ''}`}
+              {targets.some((row) => row.request?.own)
+                ? 'Take question back'
+                : `Ask for approval${chosen > 1 ? ` of ${chosen.toLocaleString('en')}` : ''}`}
             </Button>
           ) : null}
           {frame.may_approve ? (

@@ -49,8 +49,13 @@ export const QueueGridRow = memo(function QueueGridRow(props: QueueRowProps) {
       data-key={node.key}
       className={cn(
         'absolute inset-x-0 cursor-default border-b border-rule select-none',
-        asset ? 'flex h-10 items-center gap-4 bg-bench px-4 md:px-6' : compact ? 'h-29 bg-ground px-4 py-2' : cn('grid h-13 bg-ground hover:bg-bench', QUEUE_TEMPLATE),
-        chosen && 'bg-selected shadow-[inset_2px_0_0_var(--brass)] hover:bg-selected forced-colors:outline-2 forced-colors:-outline-offset-2',
+        asset
+          ? 'flex h-10 items-center gap-4 bg-bench px-4 md:px-6'
+          : compact
+            ? 'h-29 bg-ground px-4 py-2'
+            : cn('grid h-13 bg-ground hover:bg-bench', QUEUE_TEMPLATE),
+        chosen &&
+          'bg-selected shadow-[inset_2px_0_0_var(--brass)] hover:bg-selected forced-colors:outline-2 forced-colors:-outline-offset-2',
         active && !asset && 'shadow-[inset_2px_0_0_var(--edge)]',
         active && chosen && 'shadow-[inset_2px_0_0_var(--brass)]',
         active &&
@@ -77,7 +82,15 @@ function Cell({ children, className, head = false }: { children?: ReactNode; cla
   );
 }
 
-function ValueCells({ node: { row, largest }, frame, refusal }: { node: QueueValueNode; frame: ShowFrame; refusal: Refusal | null }) {
+function ValueCells({
+  node: { row, largest },
+  frame,
+  refusal,
+}: {
+  node: QueueValueNode;
+  frame: ShowFrame;
+  refusal: Refusal | null;
+}) {
   return (
     <>
       <Cell head className="pl-8 md:pl-10">
@@ -138,7 +151,13 @@ function CompactCells({ node: { row }, refusal }: { node: QueueValueNode; refusa
       </div>
       <div role="gridcell" className="flex min-w-0 items-center justify-between gap-3">
         <span className="min-w-0">
-          {row.request === null ? <span className="block truncate text-13 text-ink-3">{row.shot === null ? row.version : `override in ${row.shot}`}</span> : <PeopleCell row={row} />}
+          {row.request === null ? (
+            <span className="block truncate text-13 text-ink-3">
+              {row.shot === null ? row.version : `override in ${row.shot}`}
+            </span>
+          ) : (
+            <PeopleCell row={row} />
+          )}
         </span>
         <span className="flex shrink-0 items-center gap-3">
           <WarningsCell row={row} />
@@ -149,7 +168,15 @@ function CompactCells({ node: { row }, refusal }: { node: QueueValueNode; refusa
   );
 }
 
-function AssetCells({ node, frame, onApprove }: { node: QueueAssetNode; frame: ShowFrame; onApprove: (node: QueueAssetNode) => void }) {
+function AssetCells({
+  node,
+  frame,
+  onApprove,
+}: {
+  node: QueueAssetNode;
+  frame: ShowFrame;
+  onApprove: (node: QueueAssetNode) => void;
+}) {
   const clean = withoutWarnings(node.rows).length;
   const asked = node.rows.filter((row) => row.request !== null).length;
   return (

@@ -12,7 +12,11 @@ interface QueueToolbarProps {
 /** What the queue shows; the choice goes into the address. */
 export function QueueToolbar({ frame, counts, filter, onFilter }: QueueToolbarProps) {
   return (
-    <div role="group" aria-label="Filters" className="flex items-center gap-2 border-b border-rule bg-bench px-4 py-1.5 md:px-6">
+    <div
+      role="group"
+      aria-label="Filters"
+      className="flex items-center gap-2 border-b border-rule bg-bench px-4 py-1.5 md:px-6"
+    >
       <div className="flex min-w-0 flex-1 gap-2 overflow-x-auto py-0.5">
         {QUEUE_FILTERS.map((one) => (
           <Chip key={one} pressed={filter === one} count={counts?.[one]} onClick={() => onFilter(one)}>

@@ -7,11 +7,20 @@ const REASON_LENGTH = 500;
 
 type Send = (text: string) => Promise<ActRefusal>;
 
-const named = (rows: readonly Pick<QueueRow, 'asset' | 'part'>[]) => (rows.length === 1 ? `${rows[0].asset} ${rows[0].part}` : `${rows.length.toLocaleString('en')} values`);
+const named = (rows: readonly Pick<QueueRow, 'asset' | 'part'>[]) =>
+  rows.length === 1 ? `${rows[0].asset} ${rows[0].part}` : `${rows.length.toLocaleString('en')} values`;
 
 /** Approving with a note, which stands beside the approval from then on. */
 export function noteWish(rows: readonly QueueRow[], send: Send): WordsWish {
-  return { title: `Approve ${named(rows)}`, description: rows.length === 1 ? rows[0].verdict : undefined, label: 'Note', required: false, act: 'Approve', maxLength: NOTE_LENGTH, send };
+  return {
+    title: `Approve ${named(rows)}`,
+    description: rows.length === 1 ? rows[0].verdict : undefined,
+    label: 'Note',
+    required: false,
+    act: 'Approve',
+    maxLength: NOTE_LENGTH,
+    send,
+  };
 }
 
 /** Taking an approval back; the shots where it is locked are named before the server refuses it. */
@@ -19,7 +28,10 @@ export function takeBackWish(rows: readonly QueueRow[], send: Send): WordsWish {
   const locked = [...new Set(rows.flatMap((row) => row.locked_shots))];
   return {
     title: `Take back the approval of ${named(rows)}`,
-    description: locked.length === 0 ? undefined : `Locked in ${locked.join(', ')}. Where it is locked to this approval it is unlocked first.`,
+    description:
+      locked.length === 0
+        ? undefined
+        : `Locked in ${locked.join(', ')}. Where it is locked to this approval it is unlocked first.`,
     label: 'Reason',
     required: true,
     act: 'Take back',
@@ -30,5 +42,13 @@ export function takeBackWish(rows: readonly QueueRow[], send: Send): WordsWish {
 
 /** Asking the leads for an approval. */
 export function questionWish(subject: string, send: Send): WordsWish {
-  return { title: `Ask for the approval of ${subject}`, description: 'The leads see it first in their queue.', label: 'Note', required: false, act: 'Ask', maxLength: NOTE_LENGTH, send };
+  return {
+    title: `Ask for the approval of ${subject}`,
+    description: 'The leads see it first in their queue.',
+    label: 'Note',
+    required: false,
+    act: 'Ask',
+    maxLength: NOTE_LENGTH,
+    send,
+  };
 }

@@ -23,18 +23,37 @@ export function CompareChoices({ of }: { of: ComparisonAnswer }) {
     router.replace(`${path}?${query}`, { scroll: false });
   }
 
-  const parts = [{ value: WHOLE, label: 'All parts together' }, ...of.parts.map((part) => ({ value: part, label: part }))];
+  const parts = [
+    { value: WHOLE, label: 'All parts together' },
+    ...of.parts.map((part) => ({ value: part, label: part })),
+  ];
   return (
     <div className="grid gap-x-4 gap-y-3 border-b border-rule bg-bench px-4 py-3 sm:grid-cols-3 md:px-6">
       <Field label="Part">
         <Select
           value={of.part ?? WHOLE}
-          options={of.part === null || of.parts.includes(of.part) ? parts : [...parts, { value: of.part, label: of.part, detail: 'not current' }]}
-          onValueChange={(part) => choose({ asset: of.asset, part: part === WHOLE ? null : part, lock: null, shot: null, ...(of.lock ? { a: null } : {}) })}
+          options={
+            of.part === null || of.parts.includes(of.part)
+              ? parts
+              : [...parts, { value: of.part, label: of.part, detail: 'not current' }]
+          }
+          onValueChange={(part) =>
+            choose({
+              asset: of.asset,
+              part: part === WHOLE ? null : part,
+              lock: null,
+              shot: null,
+              ...(of.lock ? { a: null } : {}),
+            })
+          }
         />
       </Field>
       <Field label="Before">
-        <Select value={of.before.ref} options={sideOptions(of, of.before)} onValueChange={(a) => choose({ asset: of.asset, part: of.part, a, lock: null })} />
+        <Select
+          value={of.before.ref}
+          options={sideOptions(of, of.before)}
+          onValueChange={(a) => choose({ asset: of.asset, part: of.part, a, lock: null })}
+        />
       </Field>
       <Field label="After">
         <Select value={of.after.ref} options={sideOptions(of, of.after)} onValueChange={(b) => choose({ b })} />
@@ -50,5 +69,7 @@ function sideOptions(of: ComparisonAnswer, side: ComparedSide): SelectOption[] {
     ...(of.has_approval ? [{ value: 'approved', label: 'The last approval' }] : []),
     ...of.versions.map((version) => ({ value: version, label: version, detail: 'with what is set today' })),
   ];
-  return usual.some((option) => option.value === side.ref) ? usual : [{ value: side.ref, label: side.name.charAt(0).toUpperCase() + side.name.slice(1) }, ...usual];
+  return usual.some((option) => option.value === side.ref)
+    ? usual
+    : [{ value: side.ref, label: side.name.charAt(0).toUpperCase() + side.name.slice(1) }, ...usual];
 }

@@ -43,7 +43,11 @@ export function ComparePage({ frame, of }: { frame: ShowFrame; of: ComparisonAns
         </p>
         <div className="mt-0.5 flex flex-wrap items-center gap-x-5 gap-y-1">
           <h1>{capital(of.verdict)}</h1>
-          {of.beyond_tolerance === null ? null : <ToleranceMark beyond={of.beyond_tolerance}>{of.beyond_tolerance ? 'beyond the show’s tolerance' : 'within the show’s tolerance'}</ToleranceMark>}
+          {of.beyond_tolerance === null ? null : (
+            <ToleranceMark beyond={of.beyond_tolerance}>
+              {of.beyond_tolerance ? 'beyond the show’s tolerance' : 'within the show’s tolerance'}
+            </ToleranceMark>
+          )}
         </div>
       </header>
       <CompareChoices of={of} />
@@ -51,7 +55,10 @@ export function ComparePage({ frame, of }: { frame: ShowFrame; of: ComparisonAns
         <div className="flex h-[26rem] min-w-0 flex-col lg:h-auto">
           <CompareViewer of={of} frame={frame} />
         </div>
-        <aside aria-label="Differences" className="border-rule bg-bench pb-6 max-lg:border-t lg:overflow-y-auto lg:border-l">
+        <aside
+          aria-label="Differences"
+          className="border-rule bg-bench pb-6 max-lg:border-t lg:overflow-y-auto lg:border-l"
+        >
           <dl className="grid grid-cols-[auto_1fr] gap-x-4 gap-y-1 border-b border-rule px-4 py-3 text-13">
             <SideFacts label="Before" side={of.before} />
             <SideFacts label="After" side={of.after} />

@@ -2,11 +2,12 @@
 
 import { Canvas } from '@react-three/fiber';
 import { useMemo } from 'react';
-import { Box3, CanvasTexture, DoubleSide, Matrix4, Sphere, SRGBColorSpace, Vector3, type BufferGeometry } from 'three';
+import { CanvasTexture, DoubleSide, Matrix4, SRGBColorSpace, Vector3, type BufferGeometry } from 'three';
 import { Light } from '@/components/viewer/light';
 import type { DrawnWeight } from '@/components/viewer/part-scene';
 import { PrincipalAxes } from '@/components/viewer/principal-axes';
 import type { DrawnAsset } from '@/components/viewer/read-asset-mesh';
+import { sphereOf } from '@/components/viewer/sphere-of';
 import { ViewControls } from '@/components/viewer/view-controls';
 import type { TokenColours } from '@/hooks/use-token-colours';
 import type { UpAxis } from '@/lib/rules/units';
@@ -36,7 +37,11 @@ interface CompareSceneProps {
 type Three = [number, number, number];
 
 function surfacesOf(side: DrawnSide | null, part: string | null): BufferGeometry[] {
-  return side?.asset.parts.flatMap((one) => (one.surface !== null && (part === null || one.name === part) ? [one.surface] : [])) ?? [];
+  return (
+    side?.asset.parts.flatMap((one) =>
+      one.surface !== null && (part === null || one.name === part) ? [one.surface] : [],
+    ) ?? []
+  );
 }
 
 /** Where a side's geometry lies in the drawing, whose own origin is that of `base`, so that digits last. */
@@ -47,35 +52,60 @@ function placeOf(side: DrawnSide, base: Three): Three {
 /** Both limit surfaces over one another, one solid and one as a ghost, with both centres of mass and both sets of axes. */
 export default function CompareScene({ before, after, part, solid, axes, up, fit, colours }: CompareSceneProps) {
   const origin = after ?? before;
-  const base = useMemo((): Three => (origin === null ? [0, 0, 0] : (origin.asset.origin.map((value) => value * origin.scale) as Three)), [origin]);
+  const base = useMemo(
+    (): Three => (origin === null ? [0, 0, 0] : (origin.asset.origin.map((value) => value * origin.scale) as Three)),
+    [origin],
+  );
   const sphere = useMemo(() => {
-    const box = new Box3();
-    for (const side of [before, after]) {
-      if (side === null) continue;
-      const place = new Matrix4().makeTranslation(...placeOf(side, base)).scale(new Vector3(side.scale, side.scale, side.scale));
-      for (const geometry of surfacesOf(side, part)) {
-        geometry.computeBoundingBox();
-        if (geometry.boundingBox !== null) box.union(geometry.boundingBox.clone().applyMatrix4(place));
-      }
-    }
-    return box.isEmpty() ? new Sphere() : box.getBoundingSphere(new Sphere());
+    const placed = [before, after].flatMap((side) => {
+      if (side === null) return [];
+      const place = new Matrix4()
+        .makeTranslation(...placeOf(side, base))
+        .scale(new Vector3(side.scale, side.scale, side.scale));
+      return surfacesOf(side, part).map((geometry) => ({ geometry, place }));
+    });
+    return sphereOf(placed);
   }, [before, after, base, part]);
 
   return (
-    <Canvas frameloop="demand" dpr={[1, 2]} camera={{ fov: 30 }} gl={{ antialias: true, alpha: true }} resize={{ scroll: false }}>
+    <Canvas
+      frameloop="demand"
+      dpr={[1, 2]}
+      camera={{ fov: 30 }}
+      gl={{ antialias: true, alpha: true }}
+      resize={{ scroll: false }}
+    >
       <ViewControls centre={sphere.center.toArray()} radius={sphere.radius || 1} up={up} fit={fit} />
       <Light />
       {(['before', 'after'] as const).map((which) => {
         const side = which === 'before' ? before : after;
         // The same surface twice is drawn once.
-        return side === null || (which !== solid && before?.asset === after?.asset && before?.scale === after?.scale) ? null : (
+        return side === null ||
+          (which !== solid && before?.asset === after?.asset && before?.scale === after?.scale) ? null : (
           <group key={which} position={placeOf(side, base)} scale={side.scale}>
-            {surfacesOf(side, part).map((geometry) => (solid === which ? <Solid key={geometry.uuid} geometry={geometry} /> : <Ghost key={geometry.uuid} geometry={geometry} colour={colours.ink} />))}
+            {surfacesOf(side, part).map((geometry) =>
+              solid === which ? (
+                <Solid key={geometry.uuid} geometry={geometry} />
+              ) : (
+                <Ghost key={geometry.uuid} geometry={geometry} colour={colours.ink} />
+              ),
+            )}
           </group>
         );
       })}
-      {before?.weight ? <Balance weight={before.weight} base={base} radius={sphere.radius} which="before" axes={axes} colours={colours} /> : null}
-      {after?.weight ? <Balance weight={after.weight} base={base} radius={sphere.radius} which="after" axes={axes} colours={colours} /> : null}
+      {before?.weight ? (
+        <Balance
+          weight={before.weight}
+          base={base}
+          radius={sphere.radius}
+          which="before"
+          axes={axes}
+          colours={colours}
+        />
+      ) : null}
+      {after?.weight ? (
+        <Balance weight={after.weight} base={base} radius={sphere.radius} which="after" axes={axes} colours={colours} />
+      ) : null}
     </Canvas>
   );
 }
@@ -83,7 +113,15 @@ export default function CompareScene({ before, after, part, solid, axes, up, fit
 function Solid({ geometry }: { geometry: BufferGeometry }) {
   return (
     <mesh geometry={geometry}>
-      <meshStandardMaterial color="#8b8b89" roughness={0.82} metalness={0} side={DoubleSide} polygonOffset polygonOffsetFactor={1} polygonOffsetUnits={1} />
+      <meshStandardMaterial
+        color="#8b8b89"
+        roughness={0.82}
+        metalness={0}
+        side={DoubleSide}
+        polygonOffset
+        polygonOffsetFactor={1}
+        polygonOffsetUnits={1}
+      />
     </mesh>
   );
 }
@@ -143,7 +181,10 @@ function ringTexture(colour: string, ground: string): CanvasTexture {
   canvas.width = canvas.height = 64;
   const context = canvas.getContext('2d');
   if (context !== null) {
-    for (const [style, width] of [[ground, 12], [colour, 6]] as const) {
+    for (const [style, width] of [
+      [ground, 12],
+      [colour, 6],
+    ] as const) {
       context.beginPath();
       context.arc(32, 32, 24, 0, 2 * Math.PI);
       context.strokeStyle = style;

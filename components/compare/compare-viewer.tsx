@@ -6,10 +6,9 @@ import { useMemo, useState } from 'react';
 import { Chip } from '@/components/ui/chip';
 import { IconButton } from '@/components/ui/icon-button';
 import { describeWeight } from '@/components/viewer/describe-weight';
-import { DrawingBoundary } from '@/components/viewer/drawing-boundary';
 import type { DrawnWeight } from '@/components/viewer/part-scene';
 import { useAssetMesh } from '@/components/viewer/use-asset-mesh';
-import { useDrawable } from '@/hooks/use-drawable';
+import { ViewerFrame } from '@/components/viewer/viewer-frame';
 import { useTokenColours } from '@/hooks/use-token-colours';
 import type { ComparedNumbers, ComparisonAnswer } from '@/lib/rules/comparison';
 import type { ShowFrame } from '@/lib/rules/show-frame';
@@ -24,38 +23,39 @@ export function CompareViewer({ of, frame }: { of: ComparisonAnswer; frame: Show
   const [axes, setAxes] = useState(true);
   const [fit, setFit] = useState(0);
   const colours = useTokenColours();
-  const drawable = useDrawable();
-  const meshes = { before: useAssetMesh(frame.code, of.asset, of.before.version), after: useAssetMesh(frame.code, of.asset, of.after.version) };
+  const meshes = {
+    before: useAssetMesh(frame.code, of.asset, of.before.version),
+    after: useAssetMesh(frame.code, of.asset, of.after.version),
+  };
   const before = useSide(meshes.before.data, of.before);
   const after = useSide(meshes.after.data, of.after);
   const failure = meshes.before.error ?? meshes.after.error;
-  const told = failure !== null ? failure.message : drawable ? null : 'This browser cannot draw in three dimensions.';
   const reading = (meshes.before.isPending || meshes.after.isPending) && failure === null;
   const same = of.before.version === of.after.version && of.before.mesh_scale === of.after.mesh_scale;
   const name = of.part ?? of.asset;
-  const words = (which: 'before' | 'after') => `${which === 'before' ? 'Before' : 'After'}, ${of[which].name}: ${describeWeight(name, weightOf(of[which].numbers), frame.linear_unit)}`;
+  const words = (which: 'before' | 'after') =>
+    `${which === 'before' ? 'Before' : 'After'}, ${of[which].name}: ${describeWeight(name, weightOf(of[which].numbers), frame.linear_unit)}`;
 
   return (
     <figure className="flex min-h-0 flex-1 flex-col">
-      <div
-        data-viewer
-        tabIndex={told === null ? 0 : undefined}
-        role="group"
-        aria-label={`Limit surfaces of ${name} before and after. Arrow keys turn them.`}
-        className="relative min-h-80 flex-1 touch-none overflow-hidden focus-visible:-outline-offset-2"
+      <ViewerFrame
+        label={`Limit surfaces of ${name}, before and after.`}
+        failure={failure?.message ?? null}
+        reading={reading || colours === null ? 'Reading the surfaces' : null}
       >
-        {told !== null ? (
-          <p className="flex h-full items-center justify-center px-6 text-14 text-ink-2">{told}</p>
-        ) : reading || colours === null ? (
-          <p role="status" className="flex h-full items-center justify-center text-14 text-ink-3">
-            Reading the surfaces
-          </p>
-        ) : (
-          <DrawingBoundary>
-            <CompareScene before={before} after={after} part={of.part} solid={solid} axes={axes} up={frame.up_axis} fit={fit} colours={colours} />
-          </DrawingBoundary>
+        {colours === null ? null : (
+          <CompareScene
+            before={before}
+            after={after}
+            part={of.part}
+            solid={solid}
+            axes={axes}
+            up={frame.up_axis}
+            fit={fit}
+            colours={colours}
+          />
         )}
-      </div>
+      </ViewerFrame>
       <div className="flex items-center gap-2 overflow-x-auto border-t border-rule px-4 py-2">
         {same ? (
           <p className="text-13 whitespace-nowrap text-ink-2">One surface, {of.after.version}</p>
@@ -94,7 +94,15 @@ export function CompareViewer({ of, frame }: { of: ComparisonAnswer; frame: Show
 /** The centre of mass as it is drawn: a hollow ring before, a full brass dot after. */
 function CentreShape({ full }: { full: boolean }) {
   return (
-    <svg viewBox="0 0 12 12" width="12" height="12" aria-hidden fill={full ? 'var(--brass)' : 'none'} stroke={full ? 'none' : 'var(--ink-2)'} strokeWidth="1.5">
+    <svg
+      viewBox="0 0 12 12"
+      width="12"
+      height="12"
+      aria-hidden
+      fill={full ? 'var(--brass)' : 'none'}
+      stroke={full ? 'none' : 'var(--ink-2)'}
+      strokeWidth="1.5"
+    >
       <circle cx="6" cy="6" r={full ? 4 : 4.5} />
     </svg>
   );
@@ -102,7 +110,10 @@ function CentreShape({ full }: { full: boolean }) {
 
 function useSide(mesh: DrawnSide['asset'] | undefined, side: ComparisonAnswer['before']): DrawnSide | null {
   const { numbers, mesh_scale: scale } = side;
-  return useMemo(() => (mesh === undefined ? null : { asset: mesh, scale, weight: weightOf(numbers) }), [mesh, scale, numbers]);
+  return useMemo(
+    () => (mesh === undefined ? null : { asset: mesh, scale, weight: weightOf(numbers) }),
+    [mesh, scale, numbers],
+  );
 }
 
 function weightOf(n: ComparedNumbers | null): DrawnWeight | null {

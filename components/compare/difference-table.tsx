@@ -25,7 +25,11 @@ export function DifferenceTable({ of, unit }: { of: ComparisonAnswer; unit: Line
         {differenceGroups(of, unit).map((group) => (
           <tbody key={group.title}>
             <tr>
-              <th scope="rowgroup" colSpan={6} className="border-b border-rule px-4 pt-4 pb-1 text-left text-12 font-normal text-ink-3">
+              <th
+                scope="rowgroup"
+                colSpan={6}
+                className="border-b border-rule px-4 pt-4 pb-1 text-left text-12 font-normal text-ink-3"
+              >
                 {group.title} · % {group.percentOf}
               </th>
             </tr>
@@ -41,7 +45,13 @@ export function DifferenceTable({ of, unit }: { of: ComparisonAnswer; unit: Line
 
 function Head({ className, children }: { className?: string; children: string }) {
   return (
-    <th scope="col" className={cn('h-9 border-b border-rule px-2 text-right text-12 font-normal whitespace-nowrap text-ink-3', className)}>
+    <th
+      scope="col"
+      className={cn(
+        'h-9 border-b border-rule px-2 text-right text-12 font-normal whitespace-nowrap text-ink-3',
+        className,
+      )}
+    >
       {children}
     </th>
   );
@@ -58,8 +68,12 @@ function Line({ line }: { line: DifferenceLine }) {
       </th>
       <td className="px-1 text-right">{alone ? null : <Amount value={line.before} line={line} />}</td>
       <td className="px-1 text-right">{alone ? null : <Amount value={line.after} line={line} />}</td>
-      <td className="px-1 text-right">{line.difference === null && alone ? null : <Amount value={line.difference} line={line} />}</td>
-      <td className="px-2 text-right">{line.percent === null ? null : <Figure value={line.percent} decimals={3} align={PERCENT} />}</td>
+      <td className="px-1 text-right">
+        {line.difference === null && alone ? null : <Amount value={line.difference} line={line} />}
+      </td>
+      <td className="px-2 text-right">
+        {line.percent === null ? null : <Figure value={line.percent} decimals={3} align={PERCENT} />}
+      </td>
       <td className="pr-4 pl-2">
         {beyond === null ? null : (
           <ToleranceMark beyond={beyond}>
@@ -73,7 +87,15 @@ function Line({ line }: { line: DifferenceLine }) {
 
 /** A figure with the place of an exponent behind it, so that a column keeps its points under one another. */
 function Amount({ value, line }: { value: number | null; line: DifferenceLine }) {
-  if (line.notation === 'engineering') return <Figure value={value !== null && Math.abs(value) < line.noise ? 0 : value} full={value} notation="engineering" align={ENGINEERING_WIDTHS} />;
+  if (line.notation === 'engineering')
+    return (
+      <Figure
+        value={value !== null && Math.abs(value) < line.noise ? 0 : value}
+        full={value}
+        notation="engineering"
+        align={ENGINEERING_WIDTHS}
+      />
+    );
   return (
     <>
       <Figure value={value} decimals={3} align={ENGINEERING_WIDTHS} />

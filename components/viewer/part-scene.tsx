@@ -2,7 +2,7 @@
 
 import { Canvas, useThree } from '@react-three/fiber';
 import { useMemo } from 'react';
-import { Box3, DoubleSide, Sphere, type BufferGeometry } from 'three';
+import { DoubleSide, type BufferGeometry } from 'three';
 import type { TokenColours } from '@/hooks/use-token-colours';
 import { equalEllipsoid } from '@/lib/rules/equal-ellipsoid';
 import type { UpAxis } from '@/lib/rules/units';
@@ -11,6 +11,7 @@ import { Light } from './light';
 import { Outline } from './outline';
 import { PrincipalAxes } from './principal-axes';
 import type { DrawnAsset } from './read-asset-mesh';
+import { sphereOf } from './sphere-of';
 import { ViewControls } from './view-controls';
 
 /** Mass properties to draw; metres, the asset's axes. */
@@ -39,26 +40,19 @@ interface PartSceneProps {
   colours: TokenColours;
 }
 
-function sphereOf(geometries: readonly BufferGeometry[]): Sphere {
-  const box = new Box3();
-  for (const geometry of geometries) {
-    geometry.computeBoundingBox();
-    if (geometry.boundingBox !== null) box.union(geometry.boundingBox);
-  }
-  return box.isEmpty() ? new Sphere() : box.getBoundingSphere(new Sphere());
-}
-
 /** The part's limit surface with what is chosen over it. Everything is drawn relative to the mesh's own origin, so that digits last. */
 export default function PartScene({ asset, part, weight, choices, up, fit, colours }: PartSceneProps) {
   const drawn = asset.parts.find((one) => one.name === part) ?? null;
   const rest = choices.rest ? asset.parts.filter((one) => one.name !== part) : [];
   const geometries = useMemo(
     () =>
-      asset.parts.flatMap((one) => (one.surface !== null && (choices.rest || one.name === part) ? [one.surface] : [])),
+      asset.parts.flatMap((one) =>
+        one.surface !== null && (choices.rest || one.name === part) ? [{ geometry: one.surface }] : [],
+      ),
     [asset, part, choices.rest],
   );
   const sphere = useMemo(() => sphereOf(geometries), [geometries]);
-  const own = useMemo(() => sphereOf(drawn?.surface ? [drawn.surface] : []), [drawn]);
+  const own = useMemo(() => sphereOf(drawn?.surface ? [{ geometry: drawn.surface }] : []), [drawn]);
   const centre =
     weight === null ? null : ([0, 1, 2].map((i) => weight.centreM[i] - asset.origin[i]) as [number, number, number]);
   const semiAxes = useMemo(

@@ -5,13 +5,12 @@ import dynamic from 'next/dynamic';
 import { useState } from 'react';
 import { Chip } from '@/components/ui/chip';
 import { IconButton } from '@/components/ui/icon-button';
-import { useDrawable } from '@/hooks/use-drawable';
 import { useTokenColours } from '@/hooks/use-token-colours';
 import type { LinearUnit, UpAxis } from '@/lib/rules/units';
 import { describeWeight } from './describe-weight';
-import { DrawingBoundary } from './drawing-boundary';
 import type { DrawnWeight, ViewChoices } from './part-scene';
 import type { DrawnAsset } from './read-asset-mesh';
+import { ViewerFrame } from './viewer-frame';
 
 // three.js is read only where something is drawn.
 const PartScene = dynamic(() => import('./part-scene'), { ssr: false });
@@ -40,38 +39,18 @@ export function PartViewer({ asset, part, weight, unit, up, failure = null, with
   const [choices, setChoices] = useState<ViewChoices>({ cage: false, axes: true, solid: false, rest: withRest });
   const [fit, setFit] = useState(0);
   const colours = useTokenColours();
-  const drawable = useDrawable();
-  const told = failure ?? (drawable ? null : 'This browser cannot draw in three dimensions.');
 
   return (
     <figure className="flex min-h-0 flex-1 flex-col">
-      <div
-        data-viewer
-        tabIndex={told === null ? 0 : undefined}
-        role="group"
-        aria-label={`Limit surface of ${part}. Arrow keys turn it.`}
-        className="relative min-h-80 flex-1 touch-none overflow-hidden focus-visible:-outline-offset-2"
+      <ViewerFrame
+        label={`Limit surface of ${part}.`}
+        failure={failure}
+        reading={asset === null || colours === null ? 'Reading the surface' : null}
       >
-        {told !== null ? (
-          <p className="flex h-full items-center justify-center px-6 text-14 text-ink-2">{told}</p>
-        ) : asset === null || colours === null ? (
-          <p role="status" className="flex h-full items-center justify-center text-14 text-ink-3">
-            Reading the surface
-          </p>
-        ) : (
-          <DrawingBoundary>
-            <PartScene
-              asset={asset}
-              part={part}
-              weight={weight}
-              choices={choices}
-              up={up}
-              fit={fit}
-              colours={colours}
-            />
-          </DrawingBoundary>
+        {asset === null || colours === null ? null : (
+          <PartScene asset={asset} part={part} weight={weight} choices={choices} up={up} fit={fit} colours={colours} />
         )}
-      </div>
+      </ViewerFrame>
       <div className="flex items-center gap-2 overflow-x-auto border-t border-rule px-4 py-2">
         {CHOICES.map(({ key, label, needsWeight }) => (
           <Chip

@@ -24,7 +24,15 @@ const DIRECTIONS = [
 ] as const;
 
 /** The three principal axes through the centre of mass, neutral in colour and told apart by their numbers. */
-export function PrincipalAxes({ centre, quaternion: [w, x, y, z], reach, free, mark = '', colour, ground }: PrincipalAxesProps) {
+export function PrincipalAxes({
+  centre,
+  quaternion: [w, x, y, z],
+  reach,
+  free,
+  mark = '',
+  colour,
+  ground,
+}: PrincipalAxesProps) {
   const rotation = useMemo(() => new Quaternion(x, y, z, w), [w, x, y, z]);
   return (
     <group position={[...centre]} quaternion={rotation}>

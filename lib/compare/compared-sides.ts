@@ -5,6 +5,7 @@ import type { ComparedNumbers } from '@/lib/rules/comparison';
 import { STATE_WORDS } from '@/lib/rules/states';
 import { computeValue } from '@/lib/values/compute-value';
 import { loadValueInputs } from '@/lib/values/load-value-inputs';
+import { toComparedNumbers } from './to-compared-numbers';
 
 /** The value of one part on one side. */
 export interface PartValue {
@@ -32,20 +33,7 @@ export async function valuesOfVersion(db: Executor, assetId: string, versionId: 
       const { properties } = value;
       const shared = { part: one.part, version: one.version, scale: one.scale, volumeM3: value.volumeM3, areaM2: value.areaM2, by: null, at: null };
       if (!properties) return { ...shared, numbers: null, why: STATE_WORDS[value.state] };
-      const [comX, comY, comZ] = properties.comM;
-      const [ixx, iyy, izz, ixy, ixz, iyz] = properties.inertiaKgM2;
-      const [i1, i2, i3] = properties.principalKgM2;
-      const [w, x, y, z] = properties.quatWxyz;
-      const numbers: ComparedNumbers = {
-        mass_kg: properties.massKg,
-        com_x_m: comX, com_y_m: comY, com_z_m: comZ,
-        ixx_kg_m2: ixx, iyy_kg_m2: iyy, izz_kg_m2: izz, ixy_kg_m2: ixy, ixz_kg_m2: ixz, iyz_kg_m2: iyz,
-        i1_kg_m2: i1, i2_kg_m2: i2, i3_kg_m2: i3,
-        axes_quat_w: w, axes_quat_x: x, axes_quat_y: y, axes_quat_z: z,
-        free_axes: properties.freeAxes,
-        bounds_m: value.boundsM,
-      };
-      return { ...shared, numbers, why: '' };
+      return { ...shared, numbers: toComparedNumbers(properties, value.boundsM), why: '' };
     });
 }
 

@@ -1,5 +1,6 @@
 import { mergeMassProperties } from '@/lib/engine/mass-properties';
 import type { ComparedNumbers } from '@/lib/rules/comparison';
+import { toComparedNumbers } from './to-compared-numbers';
 
 /** Parts taken together, by the parallel-axis theorem; null for none. The box is around all. */
 export function mergePartValues(parts: readonly ComparedNumbers[]): ComparedNumbers | null {
@@ -12,20 +13,7 @@ export function mergePartValues(parts: readonly ComparedNumbers[]): ComparedNumb
       inertiaKgM2: [one.ixx_kg_m2, one.iyy_kg_m2, one.izz_kg_m2, one.ixy_kg_m2, one.ixz_kg_m2, one.iyz_kg_m2],
     })),
   );
-  if (!merged.ok) return null;
-  const [comX, comY, comZ] = merged.comM;
-  const [ixx, iyy, izz, ixy, ixz, iyz] = merged.inertiaKgM2;
-  const [i1, i2, i3] = merged.principalKgM2;
-  const [w, x, y, z] = merged.quatWxyz;
-  return {
-    mass_kg: merged.massKg,
-    com_x_m: comX, com_y_m: comY, com_z_m: comZ,
-    ixx_kg_m2: ixx, iyy_kg_m2: iyy, izz_kg_m2: izz, ixy_kg_m2: ixy, ixz_kg_m2: ixz, iyz_kg_m2: iyz,
-    i1_kg_m2: i1, i2_kg_m2: i2, i3_kg_m2: i3,
-    axes_quat_w: w, axes_quat_x: x, axes_quat_y: y, axes_quat_z: z,
-    free_axes: merged.freeAxes,
-    bounds_m: boxAround(parts.flatMap((one) => (one.bounds_m?.length === 6 ? [one.bounds_m] : []))),
-  };
+  return merged.ok ? toComparedNumbers(merged, boxAround(parts.flatMap((one) => (one.bounds_m?.length === 6 ? [one.bounds_m] : [])))) : null;
 }
 
 function boxAround(boxes: readonly number[][]): number[] | null {
