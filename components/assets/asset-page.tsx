@@ -1,7 +1,7 @@
 'use client';
 
 import Link from 'next/link';
-import { useState } from 'react';
+import { useState, type ReactNode } from 'react';
 import { AssetApproval } from '@/components/approvals/asset-approval';
 import { RowBeam } from '@/components/beam/row-beam';
 import { Facts, Section } from '@/components/parts/facts';
@@ -19,7 +19,7 @@ import { AssetParts } from './asset-parts';
 import { AssetVersions } from './asset-versions';
 
 /** An asset: its surface, its parts and what they weigh together. */
-export function AssetPage({ frame, detail, actions }: { frame: ShowFrame; detail: AssetDetail; actions: ApprovalActions }) {
+export function AssetPage({ frame, detail, actions, tellMe }: { frame: ShowFrame; detail: AssetDetail; actions: ApprovalActions; tellMe: ReactNode }) {
   const { total, parts, findings, versions, scale } = detail;
   const [chosen, setChosen] = useState(parts[0]?.part ?? '');
   const mesh = useAssetMesh(frame.code, total.asset, total.version);
@@ -97,6 +97,7 @@ export function AssetPage({ frame, detail, actions }: { frame: ShowFrame; detail
             />
           </Section>
           <WeightFacts of={total} unit={unit} />
+          <Section title="Telling">{tellMe}</Section>
         </aside>
       </div>
     </>

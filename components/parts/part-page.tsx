@@ -26,6 +26,7 @@ import { Facts, Section } from './facts';
 import { Findings } from './findings';
 import { GeometryFacts } from './geometry-facts';
 import { MeasuredAsFacts } from './measured-as-facts';
+import { partHref } from './part-href';
 import { PartSettings } from './part-settings';
 import { PartShots } from './part-shots';
 import { PartVersions } from './part-versions';
@@ -57,7 +58,10 @@ export function PartPage({ frame, initial, actions }: { frame: ShowFrame; initia
             <Link href={`/shows/${encodeURIComponent(frame.code)}?q=${encodeURIComponent(row.asset)}`} className="link">
               {row.asset}
             </Link>{' '}
-            · {CATEGORY_WORDS[row.category]} · <span className="font-mono">{row.version}</span>
+            · {CATEGORY_WORDS[row.category]} · <span className="font-mono">{row.version}</span> ·{' '}
+            <Link href={`${partHref(frame.code, row)}/history`} className="link">
+              History
+            </Link>
           </p>
           <h1 className="break-words">{rowName(row)}</h1>
         </div>

@@ -1,95 +1,77 @@
-import { and, asc, desc, eq, exists, ilike, inArray, lt, or, sql } from 'drizzle-orm';
+import { sql } from 'drizzle-orm';
 import type { Database } from '@/db/client';
-import { assets } from '@/db/schema/assets';
-import { auditEvents } from '@/db/schema/audit-events';
-import { auditItems } from '@/db/schema/audit-items';
-import { parts } from '@/db/schema/parts';
-import { users } from '@/db/schema/users';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
 import type { HistoryEvent, HistoryItem } from '@/lib/rules/history-event';
 import type { ListEventsInput } from '@/lib/rules/inputs/list-events';
+import type { Origin } from '@/lib/rules/states';
 import { getShowAccess } from '@/lib/shows/get-show-access';
+import { eventCondition, itemCondition } from './event-filter';
+import { valueWords } from './value-words';
 
 const EVENTS_PER_PAGE = 50;
 const ITEMS_SHOWN = 20;
+
+interface FoundEvent extends Record<string, unknown> {
+  id: string;
+  act: string;
+  subject: string;
+  reason: string | null;
+  origin: Origin;
+  name: string | null;
+  email: string | null;
+  at: string;
+}
 
 /** What happened in a show, the newest first. `next` continues with older ones. */
 export async function listEvents(context: Context, input: ListEventsInput): Promise<{ items: HistoryEvent[]; next: number | null }> {
   const { actor, db } = requireActor(context);
   const { show } = await getShowAccess(db, actor, input.show, 'readHistory');
-  const rows = await db
-    .select({ event: auditEvents, name: users.name, email: users.email })
-    .from(auditEvents)
-    .leftJoin(users, eq(users.id, auditEvents.actorId))
-    .where(
-      and(
-        eq(auditEvents.showId, show.id),
-        input.act ? eq(auditEvents.act, input.act) : undefined,
-        input.person ? sql`lower(${users.email}) = lower(${input.person})` : undefined,
-        input.part ? touches(db, input.part) : undefined,
-        input.before ? lt(auditEvents.id, input.before) : undefined,
-      ),
-    )
-    .orderBy(desc(auditEvents.id))
-    .limit(EVENTS_PER_PAGE + 1);
+  const { rows } = await db.execute<FoundEvent>(sql`
+    select e.id, e.act, e.subject, e.reason, e.origin, u.name, u.email, to_char(e.at at time zone 'utc', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"') as at
+    from audit_events e left join users u on u.id = e.actor_id
+    where ${eventCondition(show.id, input)} ${input.before === undefined ? sql`` : sql`and e.id < ${input.before}`}
+    order by e.id desc limit ${EVENTS_PER_PAGE + 1}`);
   const page = rows.slice(0, EVENTS_PER_PAGE);
-  const items = await itemsOf(db, page.map((row) => row.event.id));
-  const events = page.map(({ event, name, email }) => ({
-    id: event.id,
-    act: event.act,
-    subject: event.subject,
-    reason: event.reason,
-    origin: event.origin,
-    person: name !== null && email !== null ? { name, email } : null,
-    at: event.at.toISOString(),
-    item_count: event.items,
-    items: items.get(event.id) ?? [],
-  }));
+  const items = await itemsOf(db, show.id, input, page.map((row) => Number(row.id)));
+  const events = page.map(({ id, name, email, ...event }): HistoryEvent => {
+    const found = items.get(Number(id));
+    return { ...event, id: Number(id), person: name !== null && email !== null ? { name, email } : null, item_count: found?.count ?? 0, items: found?.items ?? [] };
+  });
   return { items: events, next: rows.length > EVENTS_PER_PAGE ? events[events.length - 1].id : null };
 }
 
-/** Events with an item about a part whose name, or whose `asset/part`, contains the text. */
-function touches(db: Database, text: string) {
-  const like = `%${text.replace(/[\\%_]/g, '\\$&')}%`;
-  return exists(
-    db
-      .select({ one: sql`1` })
-      .from(auditItems)
-      .innerJoin(parts, eq(parts.id, auditItems.partId))
-      .innerJoin(assets, eq(assets.id, parts.assetId))
-      .where(and(eq(auditItems.eventId, auditEvents.id), or(ilike(parts.name, like), ilike(sql`${assets.code} || '/' || ${parts.name}`, like)))),
-  );
+interface FoundItem extends Record<string, unknown> {
+  event_id: string;
+  part: string | null;
+  shot: string | null;
+  field: string;
+  before: string | null;
+  after: string | null;
+  count: number;
 }
 
-/** The first items of each event. */
-async function itemsOf(db: Database, eventIds: number[]): Promise<Map<number, HistoryItem[]>> {
-  const found = new Map<number, HistoryItem[]>();
+/** The first items of each event that the filter is about, and how many there are. */
+async function itemsOf(db: Database, showId: string, input: ListEventsInput, eventIds: number[]): Promise<Map<number, { count: number; items: HistoryItem[] }>> {
+  const found = new Map<number, { count: number; items: HistoryItem[] }>();
   if (eventIds.length === 0) return found;
-  const numbered = db
-    .select({
-      id: auditItems.id,
-      eventId: auditItems.eventId,
-      partId: auditItems.partId,
-      field: auditItems.field,
-      before: auditItems.before,
-      after: auditItems.after,
-      place: sql<number>`row_number() over (partition by ${auditItems.eventId} order by ${auditItems.id})`.as('place'),
-    })
-    .from(auditItems)
-    .where(inArray(auditItems.eventId, eventIds))
-    .as('numbered');
-  const rows = await db
-    .select({ eventId: numbered.eventId, field: numbered.field, before: numbered.before, after: numbered.after, asset: assets.code, part: parts.name })
-    .from(numbered)
-    .leftJoin(parts, eq(parts.id, numbered.partId))
-    .leftJoin(assets, eq(assets.id, parts.assetId))
-    .where(sql`${numbered.place} <= ${ITEMS_SHOWN}`)
-    .orderBy(asc(numbered.id));
-  for (const { eventId, asset, part, ...change } of rows) {
-    const list = found.get(eventId) ?? [];
-    list.push({ part: asset !== null && part !== null ? `${asset}/${part}` : null, ...change });
-    found.set(eventId, list);
+  const condition = itemCondition(showId, input);
+  const { rows } = await db.execute<FoundItem>(sql`
+    select n.event_id, a.code || '/' || p.name as part, s.code as shot, n.field, n.before, n.after, n.count
+    from (
+      select i.*, row_number() over (partition by i.event_id order by i.id) as place, (count(*) over (partition by i.event_id))::int as count
+      from audit_items i join audit_events e on e.id = i.event_id
+      where i.event_id = any(${sql.param(eventIds)}::bigint[]) ${condition === null ? sql`` : sql`and (e.act = 'import-version' or (${condition}))`}
+    ) n
+    left join parts p on p.id = n.part_id left join assets a on a.id = p.asset_id left join shots s on s.id = n.shot_id
+    where n.place <= ${ITEMS_SHOWN}
+    order by n.id`);
+  const words = await valueWords(db, rows);
+  const wordsOf = (text: string | null): string | null => (text === null ? null : (words.get(text) ?? null));
+  for (const { event_id: eventId, count, ...item } of rows) {
+    const event = found.get(Number(eventId)) ?? { count, items: [] };
+    event.items.push({ ...item, before_words: wordsOf(item.before), after_words: wordsOf(item.after) });
+    found.set(Number(eventId), event);
   }
   return found;
 }

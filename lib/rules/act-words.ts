@@ -21,6 +21,7 @@ const ACT_WORDS: Record<string, string> = {
   'unlock-values': 'unlocked',
   'draft-override': 'drafted an override',
   'drop-override': 'dropped an override',
+  'set-told': 'chose what they are told of',
   'add-material': 'added a material',
   'edit-material': 'changed a material',
 };
@@ -47,8 +48,26 @@ const FIELD_WORDS: Record<string, string> = {
   tolerance_com_percent: 'tolerance of the centre of mass, % of size',
   tolerance_moments_percent: 'tolerance of the inertia, %',
   left_out: 'left out',
+  override_approval: 'approval of the override',
+  asked: 'asked for',
+  in_shot: 'in shot',
+  told: 'told of it',
 };
 
+/** Fields that are yes or no. */
+const YES_OR_NO: ReadonlySet<string> = new Set(['self_approval', 'archived', 'left_out', 'told']);
+
+/** A field in words; of a lock and of an override the shot comes with it: `lock fer_0010 2`, `mil_0020: target_mass_kg`. */
 export function fieldWords(field: string): string {
+  const lock = /^lock (\S+)(?: (\S+))?$/.exec(field);
+  if (lock) return `lock in ${lock[1]}${lock[2] === undefined ? '' : `, copy ${lock[2]}`}`;
+  const ofShot = /^([^:\s]+): (.+)$/.exec(field);
+  if (ofShot) return `${fieldWords(ofShot[2])} in ${ofShot[1]}`;
   return FIELD_WORDS[field] ?? field.replaceAll('_', ' ');
+}
+
+/** What a field was or became, as a reader says it. */
+export function changeWords(field: string, text: string): string {
+  const plain = field.replace(/^[^:\s]+: /, '');
+  return YES_OR_NO.has(plain) && (text === 'true' || text === 'false') ? (text === 'true' ? 'yes' : 'no') : text;
 }

@@ -4,9 +4,14 @@ import type { Origin } from './states';
 export interface HistoryItem {
   /** `asset/part`; null for what is not about a part. */
   part: string | null;
+  /** Code of the shot; null for what is not about one. */
+  shot: string | null;
   field: string;
   before: string | null;
   after: string | null;
+  /** What `before` and `after` stand for where they are ids, such as `585.1 kg (v012)`; null where they speak for themselves. */
+  before_words: string | null;
+  after_words: string | null;
 }
 
 /** One act in a show's history, as pages and lists have it. */
@@ -18,7 +23,7 @@ export interface HistoryEvent {
   origin: Origin;
   person: { name: string; email: string } | null;
   at: string;
-  /** How many fields changed in all; `items` has the first of them. */
+  /** How many of the fields that changed are asked for; `items` has the first of them. */
   item_count: number;
   items: HistoryItem[];
 }

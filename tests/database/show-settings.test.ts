@@ -56,7 +56,7 @@ describe('changing a show', () => {
     const { items } = await listEvents(lead, listEventsInput.parse({ show }));
     expect(items).toHaveLength(1);
     expect(items[0]).toMatchObject({ act: 'edit-show', person: { email: cast.people.lead.email }, item_count: 2, origin: 'api' });
-    expect(items[0].items).toEqual([
+    expect(items[0].items).toMatchObject([
       { part: null, field: 'name_pattern', before: null, after: '{asset}_v{version}' },
       { part: null, field: 'self_approval', before: 'false', after: 'true' },
     ]);
@@ -71,7 +71,7 @@ describe('changing a show', () => {
       tolerance_mass_percent: 2.5, tolerance_com_percent: 0, tolerance_moments_percent: 1,
     });
     const { items } = await listEvents(lead, listEventsInput.parse({ show }));
-    expect(items[0].items).toEqual([
+    expect(items[0].items).toMatchObject([
       { part: null, field: 'tolerance_mass_percent', before: '0.5', after: '2.5' },
       { part: null, field: 'tolerance_com_percent', before: '0.5', after: '0' },
     ]);

@@ -1,6 +1,9 @@
 import type { Metadata } from 'next';
 import { approvalActions } from '@/app/shows/[show]/approvals/approval-actions';
+import { setToldAction } from '@/app/shows/[show]/actions';
 import { AssetPage } from '@/components/assets/asset-page';
+import { TellMe } from '@/components/notices/tell-me';
+import { getTold } from '@/lib/notices/get-told';
 import { getPageAsset } from '@/lib/parts/get-page-part';
 import { getPageShow } from '@/lib/shows/get-page-show';
 import { showFrame } from '@/lib/shows/show-frame';
@@ -14,5 +17,9 @@ export async function generateMetadata({ params }: Props): Promise<Metadata> {
 export default async function OneAssetPage({ params }: Props) {
   const { show, asset } = await params;
   const { context, access } = await getPageShow(show, 'readShow');
-  return <AssetPage frame={showFrame(access)} detail={await getPageAsset(context, access.show.code, asset)} actions={approvalActions} />;
+  const { code } = access.show;
+  const detail = await getPageAsset(context, code, asset);
+  const told = await getTold(context, { show: code, asset: detail.total.asset });
+  const tellMe = <TellMe show={code} asset={detail.total.asset} answer={told} send={setToldAction} />;
+  return <AssetPage frame={showFrame(access)} detail={detail} actions={approvalActions} tellMe={tellMe} />;
 }
