@@ -6,6 +6,7 @@ import { fileURLToPath } from 'node:url';
 import asc from 'assemblyscript/asc';
 import { FAN_ROUTINES } from './support/fan-routines.mjs';
 import { scalar, statements, vector } from './support/kernel-dialects.mjs';
+import { shellScalarSource, shellVectorSource } from './support/shell-kernel.mjs';
 import { area, AXES, DIVISORS, middle, moments, SHAPES, side, SUMS } from './support/kernel-shapes.mjs';
 
 const lines = (dialect, list, depth) => statements(dialect, list).map((text) => `${'  '.repeat(depth)}${text}`).join('\n');
@@ -189,12 +190,12 @@ async function compile(source) {
   return bytes;
 }
 
-function bytesSource(bytes) {
+function bytesSource(bytes, what = 'the vector kernels', name = 'KERNEL_BYTES') {
   const pieces = Buffer.from(bytes).toString('base64').match(/.{1,120}/g);
-  return `// Written by lib/run/build-kernel.mjs: the vector kernels as WebAssembly, kept in the source so that server, threads and browser have them without a request.
+  return `// Written by lib/run/build-kernel.mjs: ${what} as WebAssembly, kept in the source so that server, threads and browser have them without a request.
 
 /** Base64 of the module. */
-export const KERNEL_BYTES = [
+export const ${name} = [
 ${pieces.map((text) => `  '${text}',`).join('\n')}
 ].join('');
 `;
@@ -204,6 +205,8 @@ const files = Object.fromEntries([
   ...SHAPES.map((shape) => [`${shape.name}-scalar.ts`, scalarSource(shape)]),
   ['node-sums.ts', nodeSumsSource()],
   ['kernel-bytes.ts', bytesSource(await compile(SHAPES.map(vectorSource).join('') + FAN_ROUTINES))],
+  ['../shell/shell-scalar.ts', shellScalarSource(HEADER)],
+  ['../shell/shell-bytes.ts', bytesSource(await compile(shellVectorSource(powersSource, powersOf)), 'the vector kernels of walls', 'SHELL_BYTES')],
 ]);
 let differing = 0;
 for (const [name, text] of Object.entries(files)) {

@@ -17,10 +17,10 @@ export class FanBatches {
   /** Takes an isolated fan. */
   add(mesh: LevelMesh, fans: Fans, index: number): void {
     const { kit, origins, sums } = this;
-    sums.shells?.fan(mesh, fans, index);
     const corners = fans.corners.slice(fans.starts[index], fans.starts[index + 1]);
     const body = kit.body(mesh, corners[0]);
     if (!isWhole(kit, mesh, corners, body)) {
+      sums.shells?.loneFan(mesh, fans, index);
       integrateFan(kit, mesh, fans, index, origins, sums);
       return;
     }
@@ -32,6 +32,7 @@ export class FanBatches {
       this.batches.set(key, batch);
     }
     kit.read(mesh, corners, batch.scratch);
+    if (sums.shells?.fan(batch.scratch, kit.limit(batch.scratch), body) === false) sums.shells.loneFan(mesh, fans, index);
     batch.add(body, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2]);
   }
 

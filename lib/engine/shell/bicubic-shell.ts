@@ -1,5 +1,5 @@
 import { gaussRule } from '../patches/gauss-rule';
-import { chooseNodes, MOST_SHELL_NODES, ruleError } from './shell-nodes';
+import { chooseNodes, ruleError, UNTRUSTED_NODES } from './shell-nodes';
 import { addShellNode, JET, type CurvaturePeak } from './shell-terms';
 
 const jet = new Float64Array(JET);
@@ -59,22 +59,32 @@ function addSquare(powers: Float64Array, tolerance: number, depth: number, out: 
     for (let i = 0; i < 4; i++) addSquare(quarterOf(powers, i & 1 ? 0.25 : -0.25, i & 2 ? 0.25 : -0.25), tolerance, depth + 1, out, peak, errors);
     return;
   }
-  const rule = gaussRule(nodes === 0 ? MOST_SHELL_NODES : nodes);
+  const rule = gaussRule(nodes === 0 ? UNTRUSTED_NODES : nodes);
   const count = rule.nodes.length;
+  const area = middle;
   let curvature = 0;
   for (let i = 0; i < count; i++) {
     fillRow(powers, rule.nodes[i]);
     for (let j = 0; j < count; j++) {
       finishJet(rule.nodes[j], jet);
+      const h = out[0], k = out[1];
       curvature = Math.max(curvature, addShellNode(jet, rule.weights[i] * rule.weights[j], out, peak));
+      if (nodes === 0) addWhole(errors, out[0] - h, out[1] - k);
     }
   }
-  addRuleError(errors, nodes, variation, middle, curvature);
+  if (nodes === 0) errors[0] += area;
+  else addRuleError(errors, nodes, variation, area, curvature);
 }
 
-/** Adds what a rule of `nodes` (0: none that is trusted) may err by on a patch of about `area`. */
+/** Counts what a node of a rule that is not trusted adds to ∫ 2H and ∫ K, all of it. */
+export function addWhole(errors: ShellErrors, mean: number, gauss: number): void {
+  errors[1] += Math.abs(mean);
+  errors[2] += Math.abs(gauss);
+}
+
+/** Adds what a rule of `nodes` may err by on a patch of about `area`. */
 export function addRuleError(errors: ShellErrors, nodes: number, variation: number, area: number, curvature: number): void {
-  const error = area * (nodes === 0 ? 1 : ruleError(nodes, variation));
+  const error = area * ruleError(nodes, variation);
   errors[0] += error;
   errors[1] += error * curvature;
   errors[2] += error * curvature * curvature;

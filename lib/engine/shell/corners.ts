@@ -15,9 +15,9 @@ export const TIP_SHARE = (4 * Math.PI) / 3;
  * A right-angled corner has 1. It is estimated, not added: corners of more planes have no single w.
  */
 export class Corners {
-  /** Σ N Nᵀ (six) and Σ N (three) per vertex. */
+  /** Σ N Nᵀ (six) and Σ N, later w, (three) per vertex. */
   private readonly sums: Float64Array;
-  /** Ends of edges counted at each vertex. */
+  /** Ends of sharp edges at each vertex, which the caller counts. */
   readonly ends: Int32Array;
 
   constructor(vertices: number) {
@@ -25,42 +25,41 @@ export class Corners {
     this.ends = new Int32Array(vertices);
   }
 
-  /** Counts an edge's end between faces with the outward unit normals `own` and `across`. */
-  count(vertex: number, own: ArrayLike<number>, across: ArrayLike<number>): void {
-    this.ends[vertex]++;
-    this.addNormal(9 * vertex, own);
-    this.addNormal(9 * vertex, across);
-  }
-
-  private addNormal(at: number, n: ArrayLike<number>): void {
+  /** Counts the normal of a face at one of its corners. */
+  addNormal(vertex: number, x: number, y: number, z: number): void {
     const { sums } = this;
-    sums[at] += n[0] * n[0];
-    sums[at + 1] += n[0] * n[1];
-    sums[at + 2] += n[0] * n[2];
-    sums[at + 3] += n[1] * n[1];
-    sums[at + 4] += n[1] * n[2];
-    sums[at + 5] += n[2] * n[2];
-    for (let axis = 0; axis < 3; axis++) sums[at + 6 + axis] += n[axis];
+    const at = 9 * vertex;
+    sums[at] += x * x;
+    sums[at + 1] += x * y;
+    sums[at + 2] += x * z;
+    sums[at + 3] += y * y;
+    sums[at + 4] += y * z;
+    sums[at + 5] += z * z;
+    sums[at + 6] += x;
+    sums[at + 7] += y;
+    sums[at + 8] += z;
   }
 
-  /** Adds an end's estimate to the bodies on both sides, once all ends are counted. `outwards` is the unit tangent that leaves the edge there, `tangent` tan(θ/2). */
-  estimate(vertex: number, tangent: number, outwards: ArrayLike<number>, own: ShellBody, across: ShellBody): void {
-    const w = this.apex(vertex);
-    const share = (SAFETY * Math.abs(tangent * (w[0] * outwards[0] + w[1] * outwards[1] + w[2] * outwards[2]))) / 3;
+  /** Once all ends are counted: puts the w with N·w nearest to 1 for all normals N of each corner in place of Σ N. */
+  solve(): void {
+    const m = this.sums;
+    for (let at = 0; at < m.length; at += 9) {
+      const ridge = RIDGE * (m[at] + m[at + 3] + m[at + 5]);
+      if (ridge === 0) continue;
+      const a = m[at] + ridge, b = m[at + 1], c = m[at + 2], d = m[at + 3] + ridge, e = m[at + 4], f = m[at + 5] + ridge;
+      const x = m[at + 6], y = m[at + 7], z = m[at + 8];
+      const det = a * (d * f - e * e) - b * (b * f - c * e) + c * (b * e - c * d);
+      m[at + 6] = (x * (d * f - e * e) + y * (c * e - b * f) + z * (b * e - c * d)) / det;
+      m[at + 7] = (x * (c * e - b * f) + y * (a * f - c * c) + z * (b * c - a * e)) / det;
+      m[at + 8] = (x * (b * e - c * d) + y * (b * c - a * e) + z * (a * d - b * b)) / det;
+    }
+  }
+
+  /** Adds an end's estimate to the bodies on both sides, once corners are solved. (x, y, z) is the unit tangent that leaves the edge there, `tangent` tan(θ/2). */
+  estimate(vertex: number, tangent: number, x: number, y: number, z: number, own: ShellBody, across: ShellBody): void {
+    const w = 9 * vertex + 6;
+    const share = (SAFETY * Math.abs(tangent * (this.sums[w] * x + this.sums[w + 1] * y + this.sums[w + 2] * z))) / 3;
     own.corners += share;
     if (across !== own) across.corners += share;
-  }
-
-  /** The w with N·w nearest to 1 for all normals N. */
-  private apex(vertex: number): [number, number, number] {
-    const m = this.sums.subarray(9 * vertex, 9 * vertex + 9);
-    const ridge = RIDGE * (m[0] + m[3] + m[5]);
-    const a = m[0] + ridge, b = m[1], c = m[2], d = m[3] + ridge, e = m[4], f = m[5] + ridge, r = m.subarray(6);
-    const det = a * (d * f - e * e) - b * (b * f - c * e) + c * (b * e - c * d);
-    return [
-      (r[0] * (d * f - e * e) + r[1] * (c * e - b * f) + r[2] * (b * e - c * d)) / det,
-      (r[0] * (c * e - b * f) + r[1] * (a * f - c * c) + r[2] * (b * c - a * e)) / det,
-      (r[0] * (b * e - c * d) + r[1] * (b * c - a * e) + r[2] * (a * d - b * b)) / det,
-    ];
   }
 }

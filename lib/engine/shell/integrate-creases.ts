@@ -5,11 +5,11 @@ import { Corners, TIP_SHARE } from './corners';
 import type { CreasePiece, CreaseSides } from './crease-sides';
 import { addMitre, mitreTangent, type EdgePoint } from './mitre';
 import type { ShellKit } from './shell-kits';
-import { emptyShells, type ShellBody } from './shell-sums';
+import type { ShellBody } from './shell-sums';
 import { JET } from './shell-terms';
 
-const NODES = 6;
-const COARSE_NODES = 4;
+/** Gauss nodes on a stretch of an edge and fewer to compare with, by its share of the edge: towards an extraordinary point stretches halve, and so does what they turn. */
+const STRETCH_NODES: readonly (readonly [share: number, nodes: number, coarse: number])[] = [[1 / 16, 6, 4], [1 / 256, 4, 3], [0, 3, 2]];
 
 /** Pieces of an edge from which on a bend across it counts: towards an extraordinary point it may grow without end, over a vanishing length. */
 const BEND_SHARE = 1 / 32;
@@ -19,13 +19,27 @@ const MOST_TANGENT = 1e6;
 
 const jet = new Float64Array(JET);
 
-/** One side of a sharp edge at a point: place, unit tangent along the own half-edge, speed, curvature, normal, bend across. */
-interface SidePoint extends Pick<EdgePoint, 'tangent' | 'curvature' | 'own' | 'bend'> {
-  place: number[];
+/** One side of a sharp edge at a point: place (`point`, in the cage's frame), unit tangent along the own half-edge, speed, curvature, normal, bend across. */
+interface SidePoint extends EdgePoint {
+  point: Float64Array;
+  tangent: Float64Array;
+  curvature: Float64Array;
+  own: Float64Array;
   speed: number;
   /** Whether the piece is long enough for its bend to count. */
   settled: boolean;
 }
+
+function makeSide(): SidePoint {
+  const vector = (): Float64Array => new Float64Array(3);
+  const across = vector();
+  return { point: vector(), tangent: vector(), curvature: vector(), own: vector(), across, bend: 0, speed: 0, settled: true };
+}
+
+/** The two sides of the edge that is looked at, each across from the other. */
+const SIDES = [makeSide(), makeSide()] as const;
+SIDES[0].across = SIDES[1].own;
+SIDES[1].across = SIDES[0].own;
 
 /** An edge's end at a vertex: tan(θ/2) there, the tangent that leaves the edge, and the bodies on both sides. */
 interface EdgeEnd {
@@ -48,15 +62,19 @@ export function integrateCreases(kit: ShellKit, cage: LevelMesh, sides: CreaseSi
     const bodies = [cage.bodyOf[cage.faceOf[edge]], cage.bodyOf[cage.faceOf[twin]]];
     integrateEdge(kit, own, across, bodies, origins, shells);
     for (const [end, vertex] of [cage.vertexOf[edge], cage.vertexOf[twin]].entries()) {
-      const [point, other] = [sideAt(kit, own, end), sideAt(kit, across, 1 - end)];
-      corners.count(vertex, point.own, other.own);
-      const tangent = mitreTangent({ tangent: point.tangent, own: point.own, across: other.own }) ?? MOST_TANGENT;
+      const [point, other] = SIDES;
+      lookAt(kit, own, across, end);
+      corners.addNormal(vertex, point.own[0], point.own[1], point.own[2]);
+      corners.addNormal(vertex, other.own[0], other.own[1], other.own[2]);
+      corners.ends[vertex]++;
+      const tangent = mitreTangent(point) ?? MOST_TANGENT;
       ends.push({ vertex, tangent, outwards: Array.from(point.tangent, (value) => (end === 0 ? -value : value)), bodies });
     }
   }
+  corners.solve();
   // Two edges make a crease that runs on, one a dart, unless the vertex is sharp itself.
   for (const { vertex, tangent, outwards, bodies } of ends) {
-    if (corners.ends[vertex] > 2 || cage.vertexSharpness[vertex] === Infinity) corners.estimate(vertex, tangent, outwards, shells[bodies[0]], shells[bodies[1]]);
+    if (corners.ends[vertex] > 2 || cage.vertexSharpness[vertex] === Infinity) corners.estimate(vertex, tangent, outwards[0], outwards[1], outwards[2], shells[bodies[0]], shells[bodies[1]]);
   }
 }
 
@@ -77,61 +95,91 @@ function integrateEdge(kit: ShellKit, own: CreasePiece[], across: CreasePiece[],
   for (const { from, share } of own) breaks.add(from).add(from + share);
   for (const { from, share } of across) breaks.add(1 - from).add(1 - from - share);
   const ends = [...breaks].sort((a, b) => a - b);
-  const unused = emptyShells(1)[0];
   for (let i = 0; i + 1 < ends.length; i++) {
-    const sum = (nodes: number, into: ShellBody[]): number => {
-      let total = 0;
-      const rule = gaussRule(nodes);
-      for (let k = 0; k < nodes; k++) {
-        const x = (ends[i] + ends[i + 1]) / 2 + (ends[i + 1] - ends[i]) * rule.nodes[k];
-        const ds = rule.weights[k] * (ends[i + 1] - ends[i]);
-        const points = [sideAt(kit, own, x), sideAt(kit, across, 1 - x)];
-        points.forEach((side, s) => {
-          const place = side.place.map((value, axis) => value - origins[3 * bodies[s] + axis]);
-          const tangent = addMitre({ ...side, bend: side.settled ? side.bend : 0, point: place, across: points[1 - s].own }, ds * side.speed, into[s]);
-          total += tangent;
-          if (!side.settled) into[s].errors[2] += Math.abs(tangent * side.bend * (tangent / (ds * side.speed)) ** 2);
-        });
-      }
-      return total;
-    };
-    const fine = sum(NODES, bodies.map((body) => shells[body]));
-    const error = Math.abs(fine - sum(COARSE_NODES, [unused, unused]));
+    const share = ends[i + 1] - ends[i];
+    const middle = (ends[i] + ends[i + 1]) / 2;
+    const [, nodes, coarse] = STRETCH_NODES.find(([least]) => share >= least) ?? STRETCH_NODES[0];
+    const rule = gaussRule(nodes);
+    let fine = 0;
+    for (let k = 0; k < nodes; k++) {
+      lookAt(kit, own, across, middle + share * rule.nodes[k]);
+      const ds = rule.weights[k] * share;
+      for (let s = 0; s < 2; s++) fine += addSide(SIDES[s], ds, origins, bodies[s], shells[bodies[s]]);
+    }
+    const error = Math.abs(fine - turning(kit, own, across, middle, share, coarse));
     for (const body of bodies) shells[body].errors[1] += error;
   }
 }
 
+/** Adds a side's half of the mitre over `ds` of the edge's parameter; returns ∫ tan(θ/2) ds. */
+function addSide(side: SidePoint, ds: number, origins: Float64Array, body: number, shell: ShellBody): number {
+  const { bend, point } = side;
+  for (let axis = 0; axis < 3; axis++) point[axis] -= origins[3 * body + axis];
+  if (!side.settled) side.bend = 0;
+  const length = ds * side.speed;
+  const tangent = addMitre(side, length, shell);
+  if (!side.settled) shell.errors[2] += Math.abs(tangent * bend * (tangent / length) ** 2);
+  return tangent;
+}
+
+/** ∫ tan(θ/2) ds of both sides over a stretch of the edge by so many nodes. */
+function turning(kit: ShellKit, own: CreasePiece[], across: CreasePiece[], middle: number, share: number, nodes: number): number {
+  const rule = gaussRule(nodes);
+  let total = 0;
+  for (let k = 0; k < nodes; k++) {
+    lookAt(kit, own, across, middle + share * rule.nodes[k]);
+    for (let s = 0; s < 2; s++) total += (mitreTangent(SIDES[s]) ?? 0) * rule.weights[k] * share * SIDES[s].speed;
+  }
+  return total;
+}
+
+/** Sets both SIDES to x, 0 … 1 along the own half-edge. */
+function lookAt(kit: ShellKit, own: readonly CreasePiece[], across: readonly CreasePiece[], x: number): void {
+  fillSide(kit, own, x, SIDES[0]);
+  fillSide(kit, across, 1 - x, SIDES[1]);
+}
+
 /** A side of a sharp edge at x, 0 … 1 along its own half-edge. At its ends the sequences towards extraordinary points leave a rest, where their last piece's end stands. */
-function sideAt(kit: ShellKit, pieces: readonly CreasePiece[], x: number): SidePoint {
+function fillSide(kit: ShellKit, pieces: readonly CreasePiece[], x: number, out: SidePoint): void {
   let piece = pieces[0];
   for (const one of pieces) if (one.from <= x) piece = one;
   const along = Math.max(-0.5, Math.min(0.5, (x - piece.from) / piece.share - 0.5));
   kit.sideJet(piece.powers, piece.side, along, jet);
   const [a, b] = kit.along[piece.side];
-  const at = (axis: number): [number, number, number] => [
-    jet[axis] + piece.shift[axis], a * jet[3 + axis] + b * jet[6 + axis], a * a * jet[9 + axis] + 2 * a * b * jet[12 + axis] + b * b * jet[15 + axis],
-  ];
-  const rows = [at(0), at(1), at(2)];
-  const speed = Math.hypot(rows[0][1], rows[1][1], rows[2][1]);
-  const tangent = rows.map((row) => row[1] / speed);
-  const u = jet.subarray(3, 6), v = jet.subarray(6, 9);
-  const n = [u[1] * v[2] - u[2] * v[1], u[2] * v[0] - u[0] * v[2], u[0] * v[1] - u[1] * v[0]];
-  const area = Math.hypot(n[0], n[1], n[2]);
-  const own = n.map((value) => value / area);
-  const second = rows.map((row) => row[2]);
-  const forth = dot(second, tangent);
-  const curvature = second.map((value, axis) => (value - forth * tangent[axis]) / (speed * speed));
-  return { place: rows.map((row) => row[0]), speed: speed / piece.share, tangent, own, curvature, bend: bendAcross(tangent, own), settled: piece.share >= BEND_SHARE };
+  const { point, tangent, curvature, own } = out;
+  for (let axis = 0; axis < 3; axis++) {
+    point[axis] = jet[axis] + piece.shift[axis];
+    tangent[axis] = a * jet[3 + axis] + b * jet[6 + axis];
+    curvature[axis] = a * a * jet[9 + axis] + 2 * a * b * jet[12 + axis] + b * b * jet[15 + axis];
+  }
+  const speed = Math.sqrt(dot(tangent, tangent));
+  own[0] = jet[4] * jet[8] - jet[5] * jet[7];
+  own[1] = jet[5] * jet[6] - jet[3] * jet[8];
+  own[2] = jet[3] * jet[7] - jet[4] * jet[6];
+  const area = Math.sqrt(dot(own, own));
+  for (let axis = 0; axis < 3; axis++) {
+    tangent[axis] /= speed;
+    own[axis] /= area;
+  }
+  const forth = dot(curvature, tangent);
+  for (let axis = 0; axis < 3; axis++) curvature[axis] = (curvature[axis] - forth * tangent[axis]) / (speed * speed);
+  out.speed = speed / piece.share;
+  out.bend = bendAcross(tangent, own);
+  out.settled = piece.share >= BEND_SHARE;
 }
 
 /** Normal curvature across the edge of the surface whose jet is in `jet`, positive where it bends inwards: −II(M, M), M = N × T. */
-function bendAcross(tangent: number[], n: number[]): number {
-  const m = [n[1] * tangent[2] - n[2] * tangent[1], n[2] * tangent[0] - n[0] * tangent[2], n[0] * tangent[1] - n[1] * tangent[0]];
-  const u = jet.subarray(3, 6), v = jet.subarray(6, 9);
-  const E = dot(u, u), F = dot(u, v), G = dot(v, v), mu = dot(m, u), mv = dot(m, v);
+function bendAcross(t: Float64Array, n: Float64Array): number {
+  const mx = n[1] * t[2] - n[2] * t[1], my = n[2] * t[0] - n[0] * t[2], mz = n[0] * t[1] - n[1] * t[0];
+  const ux = jet[3], uy = jet[4], uz = jet[5], vx = jet[6], vy = jet[7], vz = jet[8];
+  const E = ux * ux + uy * uy + uz * uz, F = ux * vx + uy * vy + uz * vz, G = vx * vx + vy * vy + vz * vz;
+  const mu = mx * ux + my * uy + mz * uz, mv = mx * vx + my * vy + mz * vz;
   const square = E * G - F * F;
   const a = (G * mu - F * mv) / square, b = (E * mv - F * mu) / square;
-  const bend = -(a * a * dot(jet.subarray(9, 12), n) + 2 * a * b * dot(jet.subarray(12, 15), n) + b * b * dot(jet.subarray(15, 18), n));
+  const L = jet[9] * n[0] + jet[10] * n[1] + jet[11] * n[2];
+  const M = jet[12] * n[0] + jet[13] * n[1] + jet[14] * n[2];
+  const P = jet[15] * n[0] + jet[16] * n[1] + jet[17] * n[2];
+  const bend = -(a * a * L + 2 * a * b * M + b * b * P);
   return Number.isFinite(bend) ? bend : 0;
 }
 

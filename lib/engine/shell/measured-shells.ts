@@ -10,6 +10,6 @@ import type { ShellBody } from './shell-sums';
 export function measuredShells(mesh: Topology, frames: Frames, bodies: Bodies, limit: LimitSums, options: MeasureOptions): ShellBody[] | null {
   if (options.shells !== true) return null;
   if (options.scheme === 'polyhedral') return integratePolyhedralShells(mesh, frames.positions, bodies.bodyOf, frames.origins, bodies.bodies);
-  limit.shells?.finish();
+  limit.shells?.close();
   return limit.shells?.shells ?? null;
 }

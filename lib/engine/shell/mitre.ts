@@ -2,7 +2,7 @@ import type { ShellBody } from './shell-sums';
 import { PAIRS } from './shell-terms';
 
 /** 1 + cos θ below which two faces lie back to back: no mitre closes them. */
-const FOLDED = 1e-6;
+export const FOLDED = 1e-6;
 
 const p = new Float64Array(3);
 const q = new Float64Array(3);
@@ -74,7 +74,7 @@ export function addMitre(edge: EdgePoint, ds: number, shell: ShellBody): number 
     out[at + 3] -= bentFirst[axis];
   }
   for (let k = 0; k < PAIRS.length; k++) {
-    const [i, j] = PAIRS[k];
+    const i = PAIRS[k][0], j = PAIRS[k][1];
     const pp = p[i] * p[j], qq = q[i] * q[j], pq = p[i] * q[j] + q[i] * p[j], cc = C[i] * C[j];
     const at = 5 * (4 + k);
     out[at + 1] += area * cc;

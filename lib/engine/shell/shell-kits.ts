@@ -24,8 +24,8 @@ export interface ShellKit {
   inwards: readonly (readonly [number, number])[];
   /** Sides [child, side] of a sector's children that bound the fan. */
   outerSides: readonly (readonly [number, number])[];
-  /** Squared largest eigenvalues of the smooth rule at a valence by which the fan's shell terms fall, those apart that `gaussImage` takes. */
-  fall(valence: number): number;
+  /** First and second largest moduli of the smooth rule's eigenvalues at a valence, 1 apart. */
+  modes(valence: number): readonly [lambda: number, mu: number];
 }
 
 const QUAD_ALONG: readonly (readonly [number, number])[] = [[1, 0], [0, 1], [-1, 0], [0, -1]];
@@ -33,13 +33,22 @@ const QUAD_INWARDS: readonly (readonly [number, number])[] = [[0, 1], [-1, 0], [
 const QUAD_OUTER: readonly (readonly [number, number])[] = [[0, 1], [1, 1], [1, 2], [2, 2]];
 
 function quadSideJet(powers: Float64Array, side: number, along: number, out: Float64Array): void {
-  const [u, v] = [[along, -0.5], [0.5, along], [-along, 0.5], [-0.5, -along]][side];
-  bicubicJet(powers, u, v, out);
+  if (side === 0) bicubicJet(powers, along, -0.5, out);
+  else if (side === 1) bicubicJet(powers, 0.5, along, out);
+  else if (side === 2) bicubicJet(powers, -along, 0.5, out);
+  else bicubicJet(powers, -0.5, -along, out);
 }
 
-/** Terms fall by λ² (areas), by the second modes' μ (∫ 2H), and by λ (μ/λ)² (∫ K X), λ and μ the first and second largest moduli. */
-function largestFall(lambda: number, mu: number): number {
+/** By how much a smooth fan's terms fall from level to level: λ² (areas), the second modes' μ (∫ 2H), and λ (μ/λ)² (∫ K X), those apart that `imageFall` is for. */
+export function shellFall(kit: ShellKit, valence: number): number {
+  const [lambda, mu] = kit.modes(valence);
   return Math.max(lambda * lambda, mu, (mu * mu) / lambda);
+}
+
+/** The same for the Gauss map's integrals, those of K, K N and K N Nᵀ. */
+export function imageFall(kit: ShellKit, valence: number): number {
+  const [lambda, mu] = kit.modes(valence);
+  return (mu / lambda) ** 2;
 }
 
 /** Larger eigenvalue of the Catmull-Clark rule's Fourier mode with cosine c [Stam 1998]. */
@@ -47,17 +56,17 @@ function catmullClarkMode(c: number): number {
   return (5 + c + Math.sqrt((c + 9) * (c + 1))) / 16;
 }
 
-const QUAD: Omit<ShellKit, 'fan' | 'fall'> = {
+const QUAD: Omit<ShellKit, 'fan' | 'modes'> = {
   coefficients: 48, toPowers: netToPowers, regularToPowers: netToPowers, add: addBicubicShell, sideJet: quadSideJet, along: QUAD_ALONG, inwards: QUAD_INWARDS, outerSides: QUAD_OUTER,
 };
 
 export const CATMULL_CLARK_SHELL: ShellKit = {
   ...QUAD,
   fan: CATMULL_CLARK_KIT,
-  fall(n) {
-    // The rotation-invariant mode: (3n − 7 + √(5n² − 30n + 49))/(8n); ¼ comes from the outer rings.
+  modes(n) {
+    // The rotation-invariant mode: (3n − 7 + √(5n² − 30n + 49))/(8n); ⅛ comes from the outer rings.
     const even = (3 * n - 7 + Math.sqrt(5 * n * n - 30 * n + 49)) / (8 * n);
-    return largestFall(n > 2 ? catmullClarkMode(Math.cos((2 * Math.PI) / n)) : 0.5, Math.max(0.25, even, n > 3 ? catmullClarkMode(Math.cos((4 * Math.PI) / n)) : 0));
+    return [n > 2 ? catmullClarkMode(Math.cos((2 * Math.PI) / n)) : 0.5, Math.max(0.125, even, n > 3 ? catmullClarkMode(Math.cos((4 * Math.PI) / n)) : 0)];
   },
 };
 
@@ -70,7 +79,7 @@ export const DOO_SABIN_SHELL: ShellKit = {
     raiseNet(net, raised);
     netToPowers(raised, powers);
   },
-  fall: () => largestFall(0.5, 0.25),
+  modes: () => [0.5, 0.25],
 };
 
 export const LOOP_SHELL: ShellKit = {
@@ -87,8 +96,8 @@ export const LOOP_SHELL: ShellKit = {
   along: [[1, 0], [-1, 1], [0, -1]],
   inwards: [[0, 1], [-1, 0], [1, 0]],
   outerSides: [[0, 1], [2, 1]],
-  fall(n) {
+  modes(n) {
     const mode = (k: number): number => 3 / 8 + Math.cos((2 * Math.PI * k) / n) / 4;
-    return largestFall(Math.max(mode(1), mode(1) ** 2, 0.25), Math.max(0.25, mode(1) ** 2, n > 3 ? mode(2) : 0));
+    return [mode(1), Math.max(0.125, mode(1) ** 2, n > 3 ? mode(2) : 0)];
   },
 };

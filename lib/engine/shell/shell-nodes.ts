@@ -1,5 +1,7 @@
 /** Gauss nodes a direction beyond which a patch is quartered instead. */
-export const MOST_SHELL_NODES = 7;
+export const MOST_SHELL_NODES = 12;
+/** Nodes where none are trusted. */
+export const UNTRUSTED_NODES = 7;
 const FEWEST_SHELL_NODES = 2;
 
 /** Relative variation of the normal vector X_u × X_v beyond which no rule is trusted. */

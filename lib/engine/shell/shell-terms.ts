@@ -93,3 +93,22 @@ export function addShellNode(jet: Float64Array, weight: number, out: Float64Arra
 
 /** Rows and columns of xx, yy, zz, xy, xz, yz. */
 export const PAIRS: readonly (readonly [number, number])[] = [[0, 0], [1, 1], [2, 2], [0, 1], [0, 2], [1, 2]];
+
+/** Signs of the terms: kernels sum them all with a plus. */
+export const TERM_SIGNS: Float64Array = Float64Array.from({ length: SHELL_TERMS }, (_, i) => (i === 0 || (i > 1 && i < 5) || (i > 7 && i < 17) || (i > 22 && i < 29) ? -1 : 1));
+
+/** Adds terms about one point to those about another, from which it lies (sx, sy, sz). */
+export function addShifted(terms: Float64Array, from: number, sx: number, sy: number, sz: number, out: Float64Array): void {
+  const shift = [sx, sy, sz];
+  for (let p = 0; p < TERM_STARTS.length; p++) {
+    const [volume, first, second] = TERM_STARTS[p];
+    const m0 = volume < 0 ? 0 : terms[from + volume];
+    if (volume >= 0) out[volume] += m0;
+    if (first >= 0) for (let i = 0; i < 3; i++) out[first + i] += terms[from + first + i] + shift[i] * m0;
+    for (let k = 0; k < PAIRS.length; k++) {
+      const [i, j] = PAIRS[k];
+      const mi = first < 0 ? 0 : terms[from + first + i], mj = first < 0 ? 0 : terms[from + first + j];
+      out[second + k] += terms[from + second + k] + shift[i] * mj + shift[j] * mi + shift[i] * shift[j] * m0;
+    }
+  }
+}

@@ -1,9 +1,12 @@
-import type { Fans } from '../schemes/classify-vertices';
+import { SMOOTH_CENTRE, type Fans } from '../schemes/classify-vertices';
+import { makeFanState, type FanState } from '../schemes/fan-state';
 import type { LevelMesh } from '../schemes/level-mesh';
+import { closesInBatch, FanBatchShell } from './fan-batch-shell';
 import { addFanShell } from './fan-shell';
+import { ShellBlock } from './shell-block';
 import type { ShellKit } from './shell-kits';
 import { emptyShells, type ShellBody } from './shell-sums';
-import { SHELL_TERMS } from './shell-terms';
+import { SHELL_TERMS, TERM_SIGNS } from './shell-terms';
 
 /** What a rule may err by on a regular patch, relatively. */
 const TOLERANCE = 5e-9;
@@ -13,28 +16,67 @@ export class ShellVisitor {
   readonly shells: ShellBody[];
   /** Adds what sharp edges and corners hold, once all patches were seen. */
   finish: () => void = () => undefined;
-  private readonly powers: Float64Array;
-  private readonly terms = new Float64Array(SHELL_TERMS);
+  private readonly block: ShellBlock;
+  private readonly bodies: Int32Array;
+  private count = 0;
+  private readonly fans: ShellBlock;
+  /** Batches of smooth fans by valence; null where they fall too slowly for one. */
+  private readonly batches: (FanBatchShell | null | undefined)[] = [];
 
   /** `origins` has x, y, z per body: the points that moments are about. */
   constructor(readonly kit: ShellKit, private readonly origins: Float64Array, bodies: number) {
     this.shells = emptyShells(bodies);
-    this.powers = new Float64Array(kit.coefficients);
+    this.block = new ShellBlock(kit, 'patches');
+    this.fans = new ShellBlock(kit, 'fans');
+    this.bodies = new Int32Array(this.block.size);
   }
 
   /** A regular patch by its net. */
   patch(body: number, net: Float64Array): void {
-    const { kit, powers, origins, shells, terms } = this;
-    kit.regularToPowers(net, powers);
-    for (let axis = 0; axis < 3; axis++) powers[axis] -= origins[3 * body + axis];
-    const shell = shells[body];
-    terms.fill(0);
-    kit.add(powers, TOLERANCE, terms, shell.peak, shell.errors);
-    for (let i = 0; i < terms.length; i++) shell.terms[i] += terms[i];
+    const { origins, block } = this;
+    block.put(this.count, net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2]);
+    this.bodies[this.count++] = body;
+    if (this.count === block.size) this.flushPatches();
   }
 
-  /** An isolated fan. */
-  fan(mesh: LevelMesh, fans: Fans, index: number): void {
-    addFanShell(this.kit, mesh, fans, index, this.origins, this.shells);
+  private flushPatches(): void {
+    const { block, bodies, shells, count } = this;
+    if (count === 0) return;
+    block.compute(count, TOLERANCE);
+    const { output } = block.kernel;
+    for (let patch = 0; patch < count; patch++) {
+      const shell = shells[bodies[patch]];
+      const at = block.resultAt(patch);
+      for (let i = 0; i < SHELL_TERMS; i++) shell.terms[i] += TERM_SIGNS[i] * output[at + 2 * i];
+      for (let i = 0; i < 3; i++) shell.errors[i] += block.errors[3 * patch + i];
+      block.raise(patch, TOLERANCE, shell.peak);
+    }
+    this.count = 0;
+  }
+
+  /** An isolated fan of one body with its limit point. */
+  fan(fan: FanState, limit: Float64Array, body: number): boolean {
+    const { kit, fans, batches, origins, shells } = this;
+    if (!fan.closed || fan.sharpFirst || fan.centreRule !== SMOOTH_CENTRE) return false;
+    const n = fan.sectors;
+    let batch = batches[n];
+    if (batch === undefined) {
+      batch = closesInBatch(kit, n) ? new FanBatchShell(kit, fans, makeFanState(n, true, false, SMOOTH_CENTRE), shells) : null;
+      batches[n] = batch;
+    }
+    batch?.add(fan, limit, body, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2]);
+    return batch !== null;
+  }
+
+  /** An isolated fan that `fan` does not take, or of several bodies. */
+  loneFan(mesh: LevelMesh, fans: Fans, index: number): void {
+    addFanShell(this.kit, this.fans, mesh, fans, index, this.origins, this.shells);
+  }
+
+  /** Computes and adds what is waiting, and what sharp edges and corners hold. */
+  close(): void {
+    this.flushPatches();
+    for (const batch of this.batches) batch?.flush();
+    this.finish();
   }
 }

@@ -1,6 +1,6 @@
 import { triangleRule } from '../patches/box-spline';
-import { addRuleError, normalTo, type ShellErrors } from './bicubic-shell';
-import { chooseNodes, MOST_SHELL_NODES } from './shell-nodes';
+import { addRuleError, addWhole, normalTo, type ShellErrors } from './bicubic-shell';
+import { chooseNodes, UNTRUSTED_NODES } from './shell-nodes';
 import { addShellNode, JET, type CurvaturePeak } from './shell-terms';
 
 /** Exponents of s and t of the fifteen monomials, as `triangleToPowers` orders them. */
@@ -9,22 +9,35 @@ const EXPONENTS: readonly (readonly [number, number])[] = [0, 1, 2, 3, 4].flatMa
 /** Quarterings after which a bend is taken as it is, its whole change counting as error. */
 const MOST_QUARTERINGS = 4;
 
-/** Values and derivatives of a monomial s^i t^j: value, ∂s, ∂t, ∂ss, ∂st, ∂tt. */
-function monomialJet([i, j]: readonly [number, number], s: number, t: number): number[] {
-  const power = (base: number, exponent: number): number => (exponent < 0 ? 0 : base ** exponent);
-  return [
-    power(s, i) * power(t, j), i * power(s, i - 1) * power(t, j), j * power(s, i) * power(t, j - 1),
-    i * (i - 1) * power(s, i - 2) * power(t, j), i * j * power(s, i - 1) * power(t, j - 1), j * (j - 1) * power(s, i) * power(t, j - 2),
-  ];
+/** Values and derivatives of the monomials s^i t^j at (s, t): value, ∂s, ∂t, ∂ss, ∂st, ∂tt each. */
+function monomialJets(s: number, t: number, out = new Float64Array(90)): Float64Array {
+  for (let monomial = 0; monomial < EXPONENTS.length; monomial++) {
+    const i = EXPONENTS[monomial][0], j = EXPONENTS[monomial][1];
+    const s0 = power(s, i), s1 = i * power(s, i - 1), s2 = i * (i - 1) * power(s, i - 2);
+    const t0 = power(t, j), t1 = j * power(t, j - 1), t2 = j * (j - 1) * power(t, j - 2);
+    const at = 6 * monomial;
+    out[at] = s0 * t0;
+    out[at + 1] = s1 * t0;
+    out[at + 2] = s0 * t1;
+    out[at + 3] = s2 * t0;
+    out[at + 4] = s1 * t1;
+    out[at + 5] = s0 * t2;
+  }
+  return out;
 }
 
-function monomialJets(s: number, t: number): Float64Array {
-  return Float64Array.from(EXPONENTS.flatMap((exponents) => monomialJet(exponents, s, t)));
+/** base^exponent; 0 for exponents below 0, which stand beside a factor 0. */
+function power(base: number, exponent: number): number {
+  let value = exponent < 0 ? 0 : 1;
+  for (let i = 0; i < exponent; i++) value *= base;
+  return value;
 }
+
+const jets = new Float64Array(90);
 
 /** Evaluates a quartic triangle in powers of s, t [3 monomial + axis] with its first and second derivatives. */
 export function triangleJet(powers: Float64Array, s: number, t: number, out: Float64Array): void {
-  fillJet(powers, monomialJets(s, t), 0, out);
+  fillJet(powers, monomialJets(s, t, jets), 0, out);
 }
 
 function fillJet(p: Float64Array, table: Float64Array, at: number, out: Float64Array): void {
@@ -103,14 +116,17 @@ function addTriangle(powers: Float64Array, tolerance: number, depth: number, out
     return;
   }
   const area = Math.hypot(normals[9], normals[10], normals[11]) / 2;
-  const { count, weights } = triangleRule(nodes === 0 ? MOST_SHELL_NODES : nodes);
-  const table = tableOf(nodes === 0 ? MOST_SHELL_NODES : nodes);
+  const { count, weights } = triangleRule(nodes === 0 ? UNTRUSTED_NODES : nodes);
+  const table = tableOf(nodes === 0 ? UNTRUSTED_NODES : nodes);
   let curvature = 0;
   for (let node = 0; node < count; node++) {
     fillJet(powers, table, 90 * node, jet);
+    const h = out[0], k = out[1];
     curvature = Math.max(curvature, addShellNode(jet, weights[node], out, peak));
+    if (nodes === 0) addWhole(errors, out[0] - h, out[1] - k);
   }
-  addRuleError(errors, nodes, variation, area, curvature);
+  if (nodes === 0) errors[0] += area;
+  else addRuleError(errors, nodes, variation, area, curvature);
 }
 
 /** Corner 0 of each quarter and its signed size; the middle one stands on its head. */

@@ -1,6 +1,8 @@
 // The two languages that lib/run/build-kernel.mjs writes the kernels in, from one list of operations.
 
-/** Reads an expression of + - * / ( ) abs( ) sqrt( ), names, numbers and p[…] into a tree. */
+const CALLS = new Set(['abs', 'sqrt', 'inverse']);
+
+/** Reads an expression of + - * / ( ) abs( ) sqrt( ) inverse( ), names, numbers and p[…] into a tree. */
 function parse(text) {
   const tokens = text.match(/[A-Za-z_]\w*(\[[^\]]*\])?|\d+|[-+*/()]/g);
   let at = 0;
@@ -16,7 +18,7 @@ function parse(text) {
       at++;
       return inner;
     }
-    if (tokens[at] === '(' && (token === 'abs' || token === 'sqrt')) {
+    if (tokens[at] === '(' && CALLS.has(token)) {
       at++;
       const inner = sum();
       at++;
@@ -32,13 +34,14 @@ function parse(text) {
 export const scalar = {
   leaf: (text) => text,
   binary: (left, operator, right) => (operator === '/' && /^\d+$/.test(right) ? `(${left} * (1 / ${right}))` : `(${left} ${operator} ${right})`),
-  call: (name, inner) => `Math.${name}(${inner})`,
+  call: (name, inner) => (name === 'inverse' ? `inverse(${inner})` : `Math.${name}(${inner})`),
+  larger: (left, right) => `Math.max(${left}, ${right})`,
   declare: (name, value) => `const ${name} = ${value};`,
   start: (name) => `let ${name} = 0;`,
   store: (target, value) => `${target} = ${value};`,
 };
 
-const PER_PATCH = new Set(['p', 'net']);
+const PER_PATCH = new Set(['p', 'net', 'bends']);
 const NAMES = { '+': 'add', '-': 'sub', '*': 'mul', '/': 'div' };
 /** AssemblyScript, a patch in either lane; arrays of vectors are PER_PATCH, all others hold a number for both lanes. */
 export const vector = {
@@ -53,7 +56,8 @@ export const vector = {
     const divisor = operator === '/' ? right.match(/^f64x2\.splat\((\d+)\)$/) : null;
     return divisor === null ? `f64x2.${NAMES[operator]}(${left}, ${right})` : `f64x2.mul(${left}, f64x2.splat(${1 / Number(divisor[1])}))`;
   },
-  call: (name, inner) => `f64x2.${name}(${inner})`,
+  call: (name, inner) => (name === 'inverse' ? `inverse(${inner})` : `f64x2.${name}(${inner})`),
+  larger: (left, right) => `f64x2.max(${left}, ${right})`,
   declare: (name, value) => `const ${name}: v128 = ${value};`,
   start: (name) => `let ${name}: v128 = f64x2.splat(0);`,
   store(target, value) {
@@ -81,12 +85,13 @@ function balanced(text) {
   return true;
 }
 
-/** `let name = expression`, `name := expression` for a store, `name += expression`. */
+/** `let name = expression`, `name := expression` for a store, `name += expression`, `name max= expression`. */
 export function statements(dialect, lines) {
   return lines.map((line) => {
     const declared = line.match(/^let (\w+) = (.*)$/);
     if (declared) return dialect.declare(declared[1], print(dialect, declared[2]));
-    const [, target, operator, value] = line.match(/^(.+?) (:=|\+=) (.*)$/);
+    const [, target, operator, value] = line.match(/^(.+?) (:=|\+=|max=) (.*)$/);
+    if (operator === 'max=') return dialect.store(target, dialect.larger(target, print(dialect, value)));
     return dialect.store(target, print(dialect, operator === '+=' ? `${target} + ${value}` : value));
   });
 }

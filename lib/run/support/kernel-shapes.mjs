@@ -129,7 +129,8 @@ export const middle = (point) => [
   ...perAxis((axis) => [...(point ? [`let ${axis}m = ${axis}a0`] : []), `let ${axis}um = ${axis}d0`, `let ${axis}vm = ${axis}a1`]),
 ];
 
-const normal = (t) => [
+/** X_u × X_v of a node. */
+export const normal = (t) => [
   `let nx${t} = yu${t} * zv${t} - zu${t} * yv${t}`, `let ny${t} = zu${t} * xv${t} - xu${t} * zv${t}`, `let nz${t} = xu${t} * yv${t} - yu${t} * xv${t}`,
 ];
 
