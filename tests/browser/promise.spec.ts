@@ -117,7 +117,7 @@ test('a value is set, asked for, approved by somebody else, locked, and stays wh
   await test.step('five shots are re-locked to the new value, with every difference first', async () => {
     for (const shot of MOVED) {
       await lead.goto(`/shows/tarn/shots/${shot}`);
-      await lead.getByRole('checkbox', { name: /Every part|Everything|All parts/ }).first().check();
+      await lead.getByRole('checkbox', { name: 'Every part of the shot' }).first().check();
       await lead.getByRole('button', { name: /^Re-lock/ }).click();
       const dialog = lead.getByRole('dialog');
       await expect(dialog.getByRole('table')).toContainText('trunk');
