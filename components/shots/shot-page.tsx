@@ -1,10 +1,11 @@
 'use client';
 
 import Link from 'next/link';
-import { useState } from 'react';
+import { useState, type ReactNode } from 'react';
 import { LockReport } from '@/components/locks/lock-report';
 import { RelockDialog } from '@/components/locks/relock-dialog';
 import { UnlockDialog } from '@/components/locks/unlock-dialog';
+import { Section } from '@/components/parts/facts';
 import { ActRefusal } from '@/components/forms/act-refusal';
 import { DropOverrideDialog } from '@/components/overrides/drop-override-dialog';
 import { OverrideDialog } from '@/components/overrides/override-dialog';
@@ -17,7 +18,7 @@ import type { ShowFrame } from '@/lib/rules/show-frame';
 import { SlotBar } from './slot-bar';
 import { SlotTable } from './slot-table';
 import { ShotAssets } from './shot-assets';
-import { sequenceHref, shotCsvHref, shotJsonHref, shotsHref } from './shot-hrefs';
+import { sequenceHref, shotCsvHref, shotHref, shotJsonHref, shotsHref } from './shot-hrefs';
 import { ShotMark } from './shot-mark';
 import { ShotPulls } from './shot-pulls';
 import { ShotSince } from './shot-since';
@@ -30,10 +31,12 @@ interface ShotPageProps {
   /** Codes of the show's assets. */
   assets: readonly string[];
   actions: ShotActions;
+  /** Whether its reader is told of the shot, and who is. */
+  tellMe: ReactNode;
 }
 
 /** A shot: its verdict, what is locked to what, who took it, and what changed since its reader took it. */
-export function ShotPage({ frame, acts, shot, assets, actions }: ShotPageProps) {
+export function ShotPage({ frame, acts, shot, assets, actions, tellMe }: ShotPageProps) {
   const [chosen, setChosen] = useState<ReadonlySet<string>>(new Set());
   const act = useShotActs(frame.code, shot, actions, () => setChosen(new Set()));
   const picked = shot.slots.filter((slot) => chosen.has(slotKey(slot)));
@@ -53,7 +56,10 @@ export function ShotPage({ frame, acts, shot, assets, actions }: ShotPageProps) 
             <Link href={sequenceHref(frame.code, shot.sequence)} className="link">
               {shot.sequence}
             </Link>
-            {shot.title === null ? null : ` · ${shot.title}`}
+            {shot.title === null ? null : ` · ${shot.title}`} ·{' '}
+            <Link href={`${shotHref(frame.code, shot.code)}/history`} className="link">
+              History
+            </Link>
           </p>
           <h1 className="break-words">{shot.code}</h1>
         </div>
@@ -117,6 +123,7 @@ export function ShotPage({ frame, acts, shot, assets, actions }: ShotPageProps) 
           <ShotSince since={shot.since} />
           <ShotPulls pulls={shot.pulls} />
           <ShotAssets show={frame.code} shot={shot} assets={assets} mayEdit={acts.may_edit} put={actions.put} remove={actions.remove} />
+          <Section title="Telling">{tellMe}</Section>
         </aside>
       </div>
       <UnlockDialog slots={act.asking?.kind === 'unlock' ? act.asking.slots : null} key={act.dialogKey('unlock')} shot={shot.code} busy={act.busy} refusal={act.refusal} onUnlock={act.unlock} onClose={act.stopAsking} />

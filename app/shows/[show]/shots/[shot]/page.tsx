@@ -1,5 +1,8 @@
 import type { Metadata } from 'next';
+import { setToldAction } from '@/app/shows/[show]/actions';
+import { TellMe } from '@/components/notices/tell-me';
 import { ShotPage } from '@/components/shots/shot-page';
+import { getTold } from '@/lib/notices/get-told';
 import { getPageShot } from '@/lib/shots/get-page-shot';
 import { listAssetCodes } from '@/lib/shots/list-asset-codes';
 import { shotActs } from '@/lib/shots/shot-acts';
@@ -17,6 +20,7 @@ export default async function Page({ params }: Props) {
   const { show, shot: code } = await params;
   const { context, access } = await getPageShow(show, 'readShow');
   const shot = await getPageShot(context, access.show.code, code);
+  const told = await getTold(context, { show: access.show.code, shot: shot.code });
   const acts = shotActs(access);
   const assets = acts.may_edit ? await listAssetCodes(context, { show: access.show.code }) : [];
   return (
@@ -25,6 +29,7 @@ export default async function Page({ params }: Props) {
       acts={acts}
       shot={shot}
       assets={assets}
+      tellMe={<TellMe show={access.show.code} shot={shot.code} answer={told} send={setToldAction} />}
       actions={{
         put: putShotsAction,
         remove: removeFromShotAction,
