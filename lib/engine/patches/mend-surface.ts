@@ -14,6 +14,8 @@ const MOST_QUARTERINGS = 10;
 const LEAST_GAIN = 0.3;
 /** Quarterings that need no gain: a sharp bend shows none before patches of its own size. */
 const PATIENCE = 5;
+/** Times by which a quarter's relative difference must fall below that of the whole for the power of 3/2 to hold: where the normal vanishes it does not fall, however small the quarter. */
+const ANALYTIC_FALL = 16;
 
 /** For an analytic integrand the error of n nodes falls as ρ^−2n, so that of the finer rule is that of the coarser to the power 3/2 at least. */
 export function areaError(fine: number, coarse: number): number {
@@ -39,20 +41,20 @@ const solid = new Float64Array(10);
 export function mendSurface(
   kind: PatchKind, net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array, coarseArea: number, tolerance = AREA_TOLERANCE * surface[0],
 ): number {
-  const error = areaError(surface[0], coarseArea);
+  const area = surface[0];
+  const error = areaError(area, coarseArea);
   if (!(error > tolerance)) return error;
-  const before = Math.abs(surface[0] - coarseArea);
   surface.fill(0);
-  return quarter(kind, menderOf(kind), net, 0, [ox, oy, oz], before, tolerance, 1, surface);
+  return quarter(kind, menderOf(kind), net, 0, [ox, oy, oz], { change: Math.abs(area - coarseArea), area }, tolerance, 1, surface);
 }
 
-/** Puts the ten surface moments of a patch by the rules of AREA_NODES into `surface`, mended if need be; returns the estimated error of the area. */
-export function measureSurface(kind: PatchKind, net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array): number {
+/** Puts the ten surface moments of a patch by the rules of AREA_NODES into `surface`, mended to `tolerance` (an area) if need be; returns the estimated error of the area. */
+export function measureSurface(kind: PatchKind, net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array, tolerance?: number): number {
   const { block } = menderOf(kind);
   block.put(0, net, ox, oy, oz);
   block.run(1, ...AREA_NODES[kind]);
   block.read(0, solid, surface);
-  return mendSurface(kind, net, ox, oy, oz, surface, block.coarseArea(0));
+  return mendSurface(kind, net, ox, oy, oz, surface, block.coarseArea(0), tolerance);
 }
 
 function menderOf(kind: PatchKind): Mender {
@@ -64,9 +66,15 @@ function menderOf(kind: PatchKind): Mender {
   return mender;
 }
 
+/** A patch's area and by how much two rules differ on it. */
+interface Compared {
+  change: number;
+  area: number;
+}
+
 /** Adds the moments of the quarters of the patch with the net at `source[from]`, quartered again where they err too much; returns their estimated error. */
 function quarter(
-  kind: PatchKind, mender: Mender, source: Float64Array, from: number, origin: readonly [number, number, number], before: number, tolerance: number, depth: number,
+  kind: PatchKind, mender: Mender, source: Float64Array, from: number, origin: readonly [number, number, number], before: Compared, tolerance: number, depth: number,
   surface: Float64Array,
 ): number {
   const { block } = mender;
@@ -78,18 +86,21 @@ function quarter(
   block.run(4, fine, coarse);
   const moments = new Float64Array(40);
   const changes = [0, 0, 0, 0];
+  const areas = [0, 0, 0, 0];
   const errors = [0, 0, 0, 0];
   for (let i = 0; i < 4; i++) {
     const own = moments.subarray(10 * i, 10 * i + 10);
     block.read(i, solid, own);
+    areas[i] = own[0];
     changes[i] = Math.abs(own[0] - block.coarseArea(i));
-    errors[i] = areaError(own[0], block.coarseArea(i));
+    const analytic = ANALYTIC_FALL * changes[i] * before.area <= before.change * own[0];
+    errors[i] = analytic ? areaError(own[0], block.coarseArea(i)) : changes[i];
   }
-  const goOn = depth < PATIENCE || (depth < MOST_QUARTERINGS && changes[0] + changes[1] + changes[2] + changes[3] < (1 - LEAST_GAIN) * before);
+  const goOn = depth < PATIENCE || (depth < MOST_QUARTERINGS && changes[0] + changes[1] + changes[2] + changes[3] < (1 - LEAST_GAIN) * before.change);
   let error = 0;
   for (let i = 0; i < 4; i++) {
     if (goOn && errors[i] > tolerance) {
-      error += quarter(kind, mender, nets, i * values, origin, changes[i], tolerance, depth + 1, surface);
+      error += quarter(kind, mender, nets, i * values, origin, { change: changes[i], area: areas[i] }, tolerance, depth + 1, surface);
       continue;
     }
     // What is given up unresolved does not converge geometrically: there the whole difference counts.

@@ -60,7 +60,7 @@ export function stripSide(mesh: LevelMesh, kinds: Uint8Array, face: number): num
 export type TakePiece = (net: Float64Array, from: number, share: number) => void;
 
 const points = new Float64Array(3 * 4 * COLUMNS);
-const around: SemiSharpAround = { counts: new Int32Array([2]), sums: new Float32Array(1) };
+const around: SemiSharpAround = { counts: new Int32Array([2]), sums: new Float64Array(1) };
 
 /**
  * Refines a strip across its creases alone and hands out the bicubic pieces. `net` is the face's, rows along the crease, column 1 on it and column 2 on the

@@ -3,13 +3,14 @@ import { inputStride, OUTPUT_STRIDE } from '../kernel/patch-kinds';
 import { FAN_ROOM, scalarFans, SUMMED_RESULTS, type FanRoutines } from '../kernel/scalar-fans';
 import type { LimitSums } from '../moments/limit-sums';
 import { MOMENTS } from '../moments/sums';
-import { AREA_TOLERANCE, areaError, mendSurface } from '../patches/mend-surface';
+import { AREA_TOLERANCE, areaError, measureSurface } from '../patches/mend-surface';
 import type { FanKit } from './fan-kit';
 import { packPoints } from './fan-points';
 import { RIM_POWERS } from './fan-rim';
 import type { FanState } from './fan-state';
 import { fanTable, type FanTable } from './fan-tables';
 import { fanBlock } from './integrate-fan';
+import { mendFanSurface, UNSETTLED } from './mend-fan-surface';
 import { addRimChain, moveMoments } from './rim-chain';
 import { applyRows } from './sparse-rows';
 
@@ -17,11 +18,15 @@ import { applyRows } from './sparse-rows';
 const SOLID_TOLERANCE = 1e-15;
 const SURFACE_TOLERANCE = 1e-11;
 
-/** Nodes that the first level may do without where patches are smooth. */
+/** Nodes that the first level may do without where patches are smooth, and the share of its patches that may want mending then. */
 const FIRST_SAVING = 2;
+const MOST_MENDED = 1 / 8;
 
 /** Times the difference of two closings: the earlier one errs about as much as they differ, so that the difference alone may fall short by a little. */
 const CLOSING_FACTOR = 2;
+
+/** Differences a fan: ten of the solid, two of the area. */
+const CHECKS = MOMENTS + 2;
 
 const solid = new Float64Array(MOMENTS);
 const surface = new Float64Array(MOMENTS);
@@ -65,7 +70,7 @@ export class FanBatch {
   private readonly origins: Float64Array;
   private readonly rimPowers: Float64Array;
   private readonly net: Float64Array;
-  /** Per fan: closed sums, and how they differ from those closed one level earlier. */
+  /** Per fan: closed sums; how those of the solid and the area differ from others closed one level earlier, and the area from one closed from the second level on. */
   private readonly closed: Float64Array;
   private readonly check: Float64Array;
   private count = 0;
@@ -79,6 +84,9 @@ export class FanBatch {
   /** The patch that erred most. */
   private worst = 0;
   private worstError = 0;
+  /** Estimated error of the level's area, and how many of its patches were mended. */
+  private levelError = 0;
+  private mended = 0;
 
   /** `scratch` is a fan of the kind, to be read into before `add`. */
   constructor(private readonly kit: FanKit, readonly scratch: FanState, private readonly sums: LimitSums) {
@@ -106,7 +114,7 @@ export class FanBatch {
     this.rimPowers = new Float64Array(3 * RIM_POWERS * this.table.rim.curves);
     this.net = new Float64Array(this.block.values);
     this.closed = new Float64Array(SUMMED_RESULTS * this.most);
-    this.check = new Float64Array((MOMENTS + 1) * this.most);
+    this.check = new Float64Array(CHECKS * this.most);
   }
 
   /** Takes the fan in `scratch`, of a body whose moments are about (ox, oy, oz). */
@@ -142,8 +150,9 @@ export class FanBatch {
       routines.refine(this.count, this.stride, matrix.rows, places.starts, places.columns, places.factors, this.state, this.finer);
       [this.state, this.finer] = [this.finer, this.state];
       if (k === 0 && !this.rough && this.tryFirst(sums)) nodes = kit.rule.nodes - FIRST_SAVING;
-      else this.sumLevel(nodes, Math.abs(at(table.surfaceWeights, k)), sums);
+      else this.sumLevel(nodes, sums);
       if (k === 0) this.setScales(sums);
+      this.sums.surfaceError[this.body] += Math.abs(at(table.surfaceWeights, k)) * this.levelError;
       this.addLevel(k, sums);
       if (k + 1 < levels) while (nodes > kit.fewestNodes && this.compare(k, nodes, nodes - 1)) nodes--;
     }
@@ -157,12 +166,12 @@ export class FanBatch {
     this.solidScale = (this.areaScale * this.reach) / 3;
   }
 
-  /** Sums the first level by fewer nodes; false, and no more tried with this kind, where the patch whose coarse area differs most says that they are too few. */
+  /** Sums the first level by fewer nodes; false, and no more tried with this kind, where many patches want mending then or the one that erred most wants more nodes. */
   private tryFirst(sums: Float64Array): boolean {
     const { nodes } = this.kit.rule;
-    this.sumLevel(nodes - FIRST_SAVING, 0, sums);
+    this.sumLevel(nodes - FIRST_SAVING, sums);
     this.setScales(sums);
-    this.rough = !this.compare(0, nodes, nodes - FIRST_SAVING);
+    this.rough = this.mended > MOST_MENDED * this.count * this.patches || !this.compare(0, nodes, nodes - FIRST_SAVING);
     this.worstError = 0;
     if (this.rough) this.areaScale = 0;
     return !this.rough;
@@ -195,41 +204,42 @@ export class FanBatch {
     }
   }
 
-  /** Sums the results of all patches of this level by fan. */
-  private sumLevel(nodes: number, surfaceWeight: number, sums: Float64Array): void {
+  /** Sums the results of all patches of this level by fan; areas by the first two numbers of nodes are checked. */
+  private sumLevel(nodes: number, sums: Float64Array): void {
     const { block, kit, routines, places, patches } = this;
-    const checked = nodes === kit.rule.nodes;
-    const coarse = checked ? kit.rule.coarseNodes : surfaceWeight === 0 ? kit.rule.coarseNodes - 1 : 0;
+    const { nodes: most, coarseNodes } = kit.rule;
+    const coarse = nodes === most ? coarseNodes : nodes === most - FIRST_SAVING ? coarseNodes - 1 : 0;
     const total = this.count * patches;
     sums.fill(0);
+    this.levelError = 0;
+    this.mended = 0;
     for (let first = 0; first < total; first += block.size) {
       const size = Math.min(block.size, total - first);
       routines.gather(first, size, patches, block.values / 3, places.nets, this.state, this.stride);
       block.run(size, nodes, coarse);
       routines.sum(first, size, patches, places.sums);
-      if (checked) for (let i = 0; i < size; i++) this.checkArea(first + i, i, surfaceWeight, sums);
-      else if (coarse > 0) for (let i = 0; i < size; i++) this.noteWorst(first + i, Math.abs(block.output[block.resultAt(i) + 2 * MOMENTS] - block.coarseArea(i)));
+      if (coarse > 0) for (let i = 0; i < size; i++) this.checkArea(first + i, i, sums);
     }
   }
 
   /** Estimates the error of a patch's area and mends it in its fan's sums where that is too large. */
-  private checkArea(patch: number, place: number, weight: number, sums: Float64Array): void {
+  private checkArea(patch: number, place: number, sums: Float64Array): void {
     const { block } = this;
     const area = block.output[block.resultAt(place) + 2 * MOMENTS];
-    const coarseArea = block.coarseArea(place);
-    let error = areaError(area, coarseArea);
+    let error = areaError(area, block.coarseArea(place));
+    this.noteWorst(patch, error);
     // Small patches of later levels need no more than those of the first.
     const tolerance = AREA_TOLERANCE * Math.max(area, this.areaScale / (this.count * this.patches));
     if (error > tolerance) {
       const to = SUMMED_RESULTS * Math.floor(patch / this.patches) + MOMENTS;
+      this.mended++;
       block.net(place, this.net);
       block.read(place, solid, surface);
       for (let m = 0; m < MOMENTS; m++) sums[to + m] -= surface[m];
-      error = mendSurface(this.kit.rule.kind, this.net, 0, 0, 0, surface, coarseArea, tolerance);
+      error = measureSurface(this.kit.rule.kind, this.net, 0, 0, 0, surface, tolerance);
       for (let m = 0; m < MOMENTS; m++) sums[to + m] += surface[m];
     }
-    this.sums.surfaceError[this.body] += weight * error;
-    this.noteWorst(patch, error);
+    this.levelError += error;
   }
 
   private noteWorst(patch: number, error: number): void {
@@ -244,15 +254,17 @@ export class FanBatch {
     const surfaceWeight = at(table.surfaceWeights, k);
     const checkWeight = at(table.check, k);
     const checkSurface = at(table.surfaceCheck, k);
+    const lateSurface = at(table.surfaceLate, k);
     for (let fan = 0; fan < this.count; fan++) {
       const to = SUMMED_RESULTS * fan;
       for (let m = 0; m < MOMENTS; m++) {
         closed[to + m] += weight * level[to + m];
         closed[to + MOMENTS + m] += surfaceWeight * level[to + MOMENTS + m];
-        check[(MOMENTS + 1) * fan + m] += (weight - checkWeight) * level[to + m];
+        check[CHECKS * fan + m] += (weight - checkWeight) * level[to + m];
       }
       closed[to + 2 * MOMENTS] += Math.abs(weight) * level[to + 2 * MOMENTS];
-      check[(MOMENTS + 1) * fan + MOMENTS] += (surfaceWeight - checkSurface) * level[to + MOMENTS];
+      check[CHECKS * fan + MOMENTS] += (surfaceWeight - checkSurface) * level[to + MOMENTS];
+      check[CHECKS * fan + MOMENTS + 1] += (surfaceWeight - lateSurface) * level[to + MOMENTS];
     }
   }
 
@@ -304,15 +316,28 @@ export class FanBatch {
     for (let fan = 0; fan < this.count; fan++) {
       const ox = this.origins[3 * fan], oy = this.origins[3 * fan + 1], oz = this.origins[3 * fan + 2];
       const from = SUMMED_RESULTS * fan;
+      const checks = CHECKS * fan;
+      const change = Math.max(Math.abs(check[checks + MOMENTS]), Math.abs(check[checks + MOMENTS + 1]));
+      sums.surfaceError[body] += change > UNSETTLED * closed[from + MOMENTS] ? this.mendArea(fan, from + MOMENTS) : CLOSING_FACTOR * change;
       moveMoments(closed, from, ox, oy, oz);
       moveMoments(closed, from + MOMENTS, ox, oy, oz);
       sums.solid.add(body, closed, from);
       sums.surface.add(body, closed, from + MOMENTS);
       sums.solid.magnitudes[body] += closed[from + 2 * MOMENTS];
-      moveMoments(check, (MOMENTS + 1) * fan, ox, oy, oz);
-      for (let m = 0; m < MOMENTS; m++) sums.closingError[MOMENTS * body + m] += CLOSING_FACTOR * Math.abs(check[(MOMENTS + 1) * fan + m]);
-      sums.surfaceError[body] += CLOSING_FACTOR * Math.abs(check[(MOMENTS + 1) * fan + MOMENTS]);
+      moveMoments(check, checks, ox, oy, oz);
+      for (let m = 0; m < MOMENTS; m++) sums.closingError[MOMENTS * body + m] += CLOSING_FACTOR * Math.abs(check[checks + m]);
     }
+  }
+
+  /** Puts the surface moments of a fan whose closing has not settled at `to` in the closed sums anew; returns the estimated error of its area. */
+  private mendArea(fan: number, to: number): number {
+    const { sectors } = this.scratch;
+    const moments = new Float64Array(MOMENTS * sectors);
+    const errors = new Float64Array(sectors);
+    mendFanSurface(this.kit, this.table, sectors, this.waiting, fan * this.width, moments, errors);
+    this.closed.fill(0, to, to + MOMENTS);
+    for (let i = 0; i < moments.length; i++) this.closed[to + (i % MOMENTS)] += moments[i];
+    return errors.reduce((sum, error) => sum + error, 0);
   }
 }
 

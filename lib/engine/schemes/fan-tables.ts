@@ -21,9 +21,13 @@ export interface FanTable {
   /** For solid moments about any other point: |λ1 λ2|. */
   wideWeights: Float64Array;
   wideCheck: Float64Array;
-  /** The same for the surface moments, whose terms are no finite sum of powers. */
+  /**
+   * The same for the surface moments, whose terms are no finite sum of powers. `surfaceLate` closes from the second level on, by one weight less: where the terms
+   * are like powers only later, because the normal nearly vanishes somewhere, the three closings do not agree.
+   */
   surfaceWeights: Float64Array;
   surfaceCheck: Float64Array;
+  surfaceLate: Float64Array;
   /** For curves through the centre, whose terms shrink more slowly: levels are closed in pairs, or the weights would grow to 1e7 and their rounding with them. */
   curveWeights: Float64Array;
   operator: FanOperator;
@@ -63,7 +67,7 @@ function makeTable(kit: FanKit, fan: FanState): FanTable {
   const wideLevels = tailLevels(area, WIDE_DIGITS);
   const curve = Math.max(lambda, 0.5) ** 2;
   const pairs = tailWeights(curve, tailLevels(curve, WIDE_DIGITS));
-  const surface = isPlain(fan) ? smoothSurface(area, Math.min(area, lambda * (found[2] / found[1]))) : geometricSurface(area);
+  const surface: SurfaceClosing = isPlain(fan) ? smoothSurface(area, Math.min(area, lambda * (found[2] / found[1]))) : geometricSurface(area);
   return {
     weights: tailWeights(volume, levels),
     check: tailWeights(volume, levels - 1),
@@ -76,19 +80,23 @@ function makeTable(kit: FanKit, fan: FanState): FanTable {
   };
 }
 
+type SurfaceClosing = Pick<FanTable, 'surfaceWeights' | 'surfaceCheck' | 'surfaceLate'>;
+
 /** Around a smooth point the area's terms are as good as powers: the tangent plane's, `area`, and others that fall by `next`. */
-function smoothSurface(area: number, next: number): Pick<FanTable, 'surfaceWeights' | 'surfaceCheck'> {
+function smoothSurface(area: number, next: number): SurfaceClosing {
   const levels = 1 + tailLevels(next, SURFACE_DIGITS);
-  return { surfaceWeights: tailWeights(next, levels, area), surfaceCheck: tailWeights(next, levels - 1, area) };
+  const surfaceCheck = tailWeights(next, levels - 1, area);
+  return { surfaceWeights: tailWeights(next, levels, area), surfaceCheck, surfaceLate: Float64Array.of(1, ...surfaceCheck) };
 }
 
 /**
  * Along creases and at corners two eigenvalues lie close together and the root mixes them without end: there the levels are summed until the rest,
  * a geometric one by then, no longer counts.
  */
-function geometricSurface(area: number): Pick<FanTable, 'surfaceWeights' | 'surfaceCheck'> {
+function geometricSurface(area: number): SurfaceClosing {
   const levels = Math.ceil(-SURFACE_DIGITS / Math.log10(area));
-  return { surfaceWeights: geometricWeights(area, levels), surfaceCheck: geometricWeights(area, levels - 1) };
+  const surfaceWeights = geometricWeights(area, levels);
+  return { surfaceWeights, surfaceCheck: geometricWeights(area, levels - 1), surfaceLate: surfaceWeights };
 }
 
 function geometricWeights(ratio: number, levels: number): Float64Array {

@@ -7,8 +7,11 @@ import { mendSurface } from '../patches/mend-surface';
 import type { Fans } from './classify-vertices';
 import type { FanKit } from './fan-kit';
 import { makeFanState, translateFan, type FanState } from './fan-state';
+import { packPoints } from './fan-points';
 import { fanTable, type FanTable } from './fan-tables';
 import type { LevelMesh } from './level-mesh';
+import { mendFanSurface, UNSETTLED } from './mend-fan-surface';
+import { moveMoments } from './rim-chain';
 
 /** What a coarser rule may change, relative to the fan's own moments and area. */
 const SOLID_TOLERANCE = 1e-16;
@@ -27,6 +30,8 @@ interface FanSums {
   /** The same, closed one level earlier. */
   checkSolid: Float64Array;
   checkArea: Float64Array;
+  /** The area, closed from the second level on. */
+  lateArea: Float64Array;
   magnitude: Float64Array;
 }
 
@@ -44,12 +49,15 @@ export function integrateFan(kit: FanKit, mesh: LevelMesh, fans: Fans, index: nu
   kit.read(mesh, corners, state);
   const own: FanSums = {
     solid: new Float64Array(MOMENTS * n), surface: new Float64Array(MOMENTS * n), checkSolid: new Float64Array(MOMENTS * n),
-    checkArea: new Float64Array(n), magnitude: new Float64Array(n),
+    checkArea: new Float64Array(n), lateArea: new Float64Array(n), magnitude: new Float64Array(n),
   };
   const bordered = corners.some((corner) => [0, 1, 2, 3].some((side) => side < kit.sides && mesh.borderOf[kit.sideAt(mesh, corner, side)] >= 0));
   // About the limit point all rings shrink to 0 and so does their rounding, which the closing would else multiply.
   const limit = kit.limit(state);
   translateFan(state, limit);
+  const { points } = table.operator;
+  const packed = new Float64Array(3 * points.count);
+  packPoints(points, state, new Float64Array(3), packed, 0);
   const originOf = (j: number): [number, number, number] => {
     const at = 3 * kit.body(mesh, corners[j]);
     return [origins[at] - limit[0], origins[at + 1] - limit[1], origins[at + 2] - limit[2]];
@@ -109,7 +117,12 @@ export function integrateFan(kit: FanKit, mesh: LevelMesh, fans: Fans, index: nu
     }
   }
   if (bordered) addRestOfCurves(kit, mesh, corners, state, finer, levels, curveWeights, limit, sums.curves);
-  finishFan(kit, mesh, corners, own, sums);
+  const changes = own.checkArea.map((area, j) => Math.max(Math.abs(own.surface[MOMENTS * j] - area), Math.abs(own.surface[MOMENTS * j] - own.lateArea[j])));
+  if (sumOf(changes) > UNSETTLED * sumOf(own.checkArea)) {
+    mendFanSurface(kit, table, n, packed, 0, own.surface, changes);
+    for (let j = 0; j < n; j++) moveMoments(own.surface, MOMENTS * j, ...originOf(j));
+  }
+  finishFan(kit, mesh, corners, own, changes, sums);
 }
 
 const blocks = new Map<PatchKind, PatchBlock>();
@@ -159,6 +172,10 @@ function probe(
   return true;
 }
 
+function sumOf(values: Float64Array): number {
+  return values.reduce((sum, value) => sum + value, 0);
+}
+
 function at(weights: Float64Array, k: number): number {
   return k < weights.length ? weights[k] : 0;
 }
@@ -173,18 +190,19 @@ function addPatch(own: FanSums, sector: number, table: FanTable, k: number, magn
     own.surface[to + i] += surfaceWeight * surface[i];
     own.checkSolid[to + i] += checkWeight * solid[i];
   }
+  own.lateArea[sector] += at(table.surfaceLate, k) * surface[0];
   own.checkArea[sector] += at(table.surfaceCheck, k) * surface[0];
   own.magnitude[sector] += Math.abs(weight) * magnitude;
 }
 
-function finishFan(kit: FanKit, mesh: LevelMesh, corners: number[], own: FanSums, sums: LimitSums): void {
+function finishFan(kit: FanKit, mesh: LevelMesh, corners: number[], own: FanSums, areaErrors: Float64Array, sums: LimitSums): void {
   for (let j = 0; j < corners.length; j++) {
     const body = kit.body(mesh, corners[j]);
     sums.solid.add(body, own.solid, MOMENTS * j);
     sums.surface.add(body, own.surface, MOMENTS * j);
     sums.solid.magnitudes[body] += own.magnitude[j];
     for (let i = 0; i < MOMENTS; i++) sums.closingError[MOMENTS * body + i] += Math.abs(own.solid[MOMENTS * j + i] - own.checkSolid[MOMENTS * j + i]);
-    sums.surfaceError[body] += Math.abs(own.surface[MOMENTS * j] - own.checkArea[j]);
+    sums.surfaceError[body] += areaErrors[j];
   }
 }
 
