@@ -45,7 +45,7 @@ function Against({ row }: { row: QueueRow }) {
       {row.beyond_tolerance === null ? null : <ToleranceMark beyond={row.beyond_tolerance} />}
       <span className="truncate" title={row.last.note ?? undefined}>
         {row.value_id === null ? `against ${row.last.version} by` : 'by'} {row.last.approved_by},{' '}
-        <Moment at={row.last.approved_at} />
+        <Moment day at={row.last.approved_at} />
         {row.last.note === null ? null : <>: “{row.last.note}”</>}
       </span>
     </span>

@@ -25,7 +25,7 @@ export function QueueHeading({ frame, targets, chosen, outdated, busy, acts }: Q
       title="Approvals"
       actions={
         <>
-          <Button look="quiet" disabled={targets.length === 0} onClick={acts.compare}>
+          <Button look="quiet" className="max-sm:px-2" disabled={targets.length === 0} onClick={acts.compare}>
             Compare
           </Button>
           {frame.may_ask && !frame.may_approve ? (
@@ -37,15 +37,20 @@ export function QueueHeading({ frame, targets, chosen, outdated, busy, acts }: Q
           ) : null}
           {frame.may_approve ? (
             <>
-              {outdated > 0 ? <Button onClick={acts.carryOver}>Carry over</Button> : null}
+              {outdated > 0 ? <Button className="max-sm:px-2.5" onClick={acts.carryOver}>
+                  Carry over
+                </Button> : null}
               {approved ? (
                 <Button disabled={busy || !targets.some((row) => approvalOf(row) !== null)} onClick={acts.takeBack}>
                   Take back{chosen > 1 ? ` ${chosen.toLocaleString('en')}` : ''}
                 </Button>
               ) : (
                 <>
-                  <Button disabled={busy || able === 0} onClick={acts.note}>
-                    With a note
+                  <Button className="max-sm:px-2.5" disabled={busy || able === 0} onClick={acts.note}>
+                    <span className="max-sm:sr-only">With a note</span>
+                    <span aria-hidden className="sm:hidden">
+                      Note
+                    </span>
                   </Button>
                   <Button look="filled" disabled={busy || able === 0} onClick={acts.approve}>
                     Approve{several}

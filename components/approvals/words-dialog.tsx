@@ -59,7 +59,6 @@ function WordsForm({ wish, onClose }: { wish: WordsWish; onClose: () => void }) 
           value={text}
           rows={3}
           maxLength={wish.maxLength}
-          autoFocus
           onChange={(event) => {
             setText(event.target.value);
             setMissing(false);

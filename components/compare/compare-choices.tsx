@@ -28,8 +28,8 @@ export function CompareChoices({ of }: { of: ComparisonAnswer }) {
     ...of.parts.map((part) => ({ value: part, label: part })),
   ];
   return (
-    <div className="grid gap-x-4 gap-y-3 border-b border-rule bg-bench px-4 py-3 sm:grid-cols-3 md:px-6">
-      <Field label="Part">
+    <div className="grid grid-cols-2 gap-x-4 gap-y-3 border-b border-rule bg-bench px-4 py-3 sm:grid-cols-3 md:px-6">
+      <Field label="Part" className="max-sm:col-span-2">
         <Select
           value={of.part ?? WHOLE}
           options={

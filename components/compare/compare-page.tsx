@@ -51,7 +51,7 @@ export function ComparePage({ frame, of }: { frame: ShowFrame; of: ComparisonAns
         </div>
       </header>
       <CompareChoices of={of} />
-      <div className="grid lg:min-h-0 lg:flex-1 lg:grid-cols-[minmax(0,1fr)_minmax(0,44rem)]">
+      <div className="grid grid-cols-[minmax(0,1fr)] lg:min-h-0 lg:flex-1 lg:grid-cols-[minmax(0,1fr)_minmax(0,44rem)]">
         <div className="flex h-[26rem] min-w-0 flex-col lg:h-auto">
           <CompareViewer of={of} frame={frame} />
         </div>

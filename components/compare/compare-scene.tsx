@@ -182,8 +182,8 @@ function ringTexture(colour: string, ground: string): CanvasTexture {
   const context = canvas.getContext('2d');
   if (context !== null) {
     for (const [style, width] of [
-      [ground, 12],
-      [colour, 6],
+      [ground, 9],
+      [colour, 4.5],
     ] as const) {
       context.beginPath();
       context.arc(32, 32, 24, 0, 2 * Math.PI);

@@ -1,7 +1,7 @@
 'use client';
 
 import { useMemo } from 'react';
-import { Color, DoubleSide, ShaderMaterial, type BufferGeometry } from 'three';
+import { Color, DoubleSide, FrontSide, ShaderMaterial, type BufferGeometry } from 'three';
 
 const VERTEX = `
   varying vec3 outwards;
@@ -28,7 +28,7 @@ const FRAGMENT = `
 /** A surface as a ghost: clear where it is looked at straight, drawn where it turns away. What lies inside the solid shows through, fainter. */
 export function Ghost({ geometry, colour }: { geometry: BufferGeometry; colour: string }) {
   const outside = useMemo(() => ghostMaterial(colour, 0.9, true), [colour]);
-  const inside = useMemo(() => ghostMaterial(colour, 0.28, false), [colour]);
+  const inside = useMemo(() => ghostMaterial(colour, 0.18, false), [colour]);
   return (
     <>
       <mesh geometry={geometry} material={outside} renderOrder={3} />
@@ -45,6 +45,7 @@ function ghostMaterial(colour: string, strength: number, depthTest: boolean): Sh
     transparent: true,
     depthWrite: false,
     depthTest,
-    side: DoubleSide,
+    // Through the solid the near side alone, or its own far side would cloud it.
+    side: depthTest ? DoubleSide : FrontSide,
   });
 }

@@ -6,11 +6,13 @@ const FORMAT = new Intl.DateTimeFormat('en-GB', {
   minute: '2-digit',
 });
 
-/** A point in time on the reader's own clock; the server's differs, so the first writing may be replaced. */
-export function Moment({ at }: { at: string }) {
+const DAY = new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'short', year: 'numeric' });
+
+/** A point in time on the reader's own clock, or its day alone; the server's differs, so the first writing may be replaced. */
+export function Moment({ at, day = false }: { at: string; day?: boolean }) {
   return (
     <time dateTime={at} suppressHydrationWarning>
-      {FORMAT.format(new Date(at))}
+      {(day ? DAY : FORMAT).format(new Date(at))}
     </time>
   );
 }

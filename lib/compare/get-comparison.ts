@@ -59,7 +59,7 @@ export async function getComparison(context: Context, input: GetComparisonInput)
     part: subject.part,
     before,
     after,
-    verdict: differences ? verdictWords(differences, show.linearUnit) : `no value to compare ${before.numbers ? 'after' : 'before'}`,
+    verdict: differences ? verdictWords(differences, show.linearUnit) : missingWords(before, after),
     beyond_tolerance: differences && !isWithinTolerance(differences, show),
     differences: differences && toDifferencesAnswer(differences),
     size_m: box && Math.hypot(box[3] - box[0], box[4] - box[1], box[5] - box[2]),
@@ -69,6 +69,12 @@ export async function getComparison(context: Context, input: GetComparisonInput)
     has_approval: approved.length > 0,
     lock: subject.lock && { id: subject.lock.id, shot: subject.lock.shot, copy: subject.lock.copy || null },
   };
+}
+
+/** Why nothing is compared: which side has no value. */
+function missingWords(before: ComparedSide, after: ComparedSide): string {
+  if (before.numbers) return 'no value after';
+  return after.numbers ? 'no value before' : 'no value to compare';
 }
 
 async function findSubject(db: Executor, show: Show, input: GetComparisonInput): Promise<Subject> {

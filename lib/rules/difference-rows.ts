@@ -41,8 +41,14 @@ const ROUNDING = 1e-12;
 const INERTIA = ['ixx', 'iyy', 'izz', 'ixy', 'ixz', 'iyz'] as const;
 const SUBSCRIPTS = { ixx: 'Ixx', iyy: 'Iyy', izz: 'Izz', ixy: 'Ixy', ixz: 'Ixz', iyz: 'Iyz' } as const;
 
-/** Before, after and the difference of everything that is compared, lengths in the show's unit. */
+/** Before, after and the difference of everything that is compared, lengths in the show's unit; what neither side has is left out. */
 export function differenceGroups(of: ComparisonAnswer, unit: LinearUnit): DifferenceGroup[] {
+  const said = ({ before, after, difference, percent }: DifferenceLine): boolean => [before, after, difference, percent].some((value) => value !== null);
+  const groups = allGroups(of, unit).map((group) => ({ ...group, lines: group.lines.filter((line) => said(line) || (of.differences !== null && line.key === 'rotation')) }));
+  return groups.filter((group) => group.lines.length > 0);
+}
+
+function allGroups(of: ComparisonAnswer, unit: LinearUnit): DifferenceGroup[] {
   const [a, b] = [of.before.numbers, of.after.numbers];
   const length = METRES_PER[unit];
   const line = (key: string, label: string, lineUnit: string | null, [first, second]: readonly (number | null)[], more: LineOptions = {}): DifferenceLine => {
