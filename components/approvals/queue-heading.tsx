@@ -37,9 +37,11 @@ export function QueueHeading({ frame, targets, chosen, outdated, busy, acts }: Q
           ) : null}
           {frame.may_approve ? (
             <>
-              {outdated > 0 ? <Button className="max-sm:px-2.5" onClick={acts.carryOver}>
+              {outdated > 0 ? (
+                <Button className="max-sm:px-2.5" onClick={acts.carryOver}>
                   Carry over
-                </Button> : null}
+                </Button>
+              ) : null}
               {approved ? (
                 <Button disabled={busy || !targets.some((row) => approvalOf(row) !== null)} onClick={acts.takeBack}>
                   Take back{chosen > 1 ? ` ${chosen.toLocaleString('en')}` : ''}
