@@ -55,8 +55,8 @@ function addSquare(powers: Float64Array, tolerance: number, depth: number, out: 
   const variation = normalVariation(powers);
   const nodes = chooseNodes(variation, tolerance);
   if (nodes === 0 && depth < MOST_QUARTERINGS) {
-    if (!powers.some((value, i) => i > 2 && value !== 0)) return;
-    for (let i = 0; i < 4; i++) addSquare(quarterOf(powers, i & 1 ? 0.25 : -0.25, i & 2 ? 0.25 : -0.25), tolerance, depth + 1, out, peak, errors);
+    if (isPoint(powers)) return;
+    for (let i = 0; i < 4; i++) addSquare(quarterOf(powers, i & 1 ? 0.25 : -0.25, i & 2 ? 0.25 : -0.25, QUARTERS[depth]), tolerance, depth + 1, out, peak, errors);
     return;
   }
   const rule = gaussRule(nodes === 0 ? UNTRUSTED_NODES : nodes);
@@ -74,6 +74,12 @@ function addSquare(powers: Float64Array, tolerance: number, depth: number, out: 
   }
   if (nodes === 0) errors[0] += area;
   else addRuleError(errors, nodes, variation, area, curvature);
+}
+
+/** Whether all of a patch lies in one point. */
+export function isPoint(powers: Float64Array): boolean {
+  for (let i = 3; i < powers.length; i++) if (powers[i] !== 0) return false;
+  return true;
 }
 
 /** Counts what a node of a rule that is not trusted adds to ∫ 2H and ∫ K, all of it. */
@@ -118,9 +124,12 @@ export function normalTo(j: Float64Array, out: Float64Array, at: number): void {
   out[at + 2] = j[3] * j[7] - j[4] * j[6];
 }
 
-/** The patch over the quarter with the middle (u, v), in powers about that. */
-function quarterOf(powers: Float64Array, u: number, v: number): Float64Array {
-  const p = powers.slice();
+/** Room for a quarter at each depth. */
+const QUARTERS = Array.from({ length: MOST_QUARTERINGS }, () => new Float64Array(48));
+
+/** The patch over the quarter with the middle (u, v), in powers about that, in `p`. */
+function quarterOf(powers: Float64Array, u: number, v: number, p: Float64Array): Float64Array {
+  p.set(powers);
   for (let k = 0; k < 12; k++) shrink(p, k, 12, u);
   for (let i = 0; i < 4; i++) for (let axis = 0; axis < 3; axis++) shrink(p, 12 * i + axis, 3, v);
   return p;

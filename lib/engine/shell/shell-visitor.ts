@@ -9,7 +9,7 @@ import { emptyShells, type ShellBody } from './shell-sums';
 import { SHELL_TERMS, TERM_SIGNS } from './shell-terms';
 
 /** What a rule may err by on a regular patch, relatively. */
-const TOLERANCE = 5e-9;
+const TOLERANCE = 1e-9;
 
 /** Takes the shell integrals of each patch and fan that an integration of a limit surface comes by. */
 export class ShellVisitor {

@@ -1,5 +1,5 @@
 import { triangleRule } from '../patches/box-spline';
-import { addRuleError, addWhole, normalTo, type ShellErrors } from './bicubic-shell';
+import { addRuleError, addWhole, isPoint, normalTo, type ShellErrors } from './bicubic-shell';
 import { chooseNodes, UNTRUSTED_NODES } from './shell-nodes';
 import { addShellNode, JET, type CurvaturePeak } from './shell-terms';
 
@@ -111,8 +111,8 @@ function addTriangle(powers: Float64Array, tolerance: number, depth: number, out
   const variation = normalVariation(powers);
   const nodes = chooseNodes(variation, tolerance);
   if (nodes === 0 && depth < MOST_QUARTERINGS) {
-    if (!powers.some((value, i) => i > 2 && value !== 0)) return;
-    for (const [s, t, size] of QUARTERS) addTriangle(partOf(powers, s, t, size), tolerance, depth + 1, out, peak, errors);
+    if (isPoint(powers)) return;
+    for (const [s, t, size] of QUARTERS) addTriangle(partOf(powers, s, t, size, PARTS[depth]), tolerance, depth + 1, out, peak, errors);
     return;
   }
   const area = Math.hypot(normals[9], normals[10], normals[11]) / 2;
@@ -145,14 +145,18 @@ function normalVariation(powers: Float64Array): number {
   return length > 0 ? Math.sqrt(square) / length : Infinity;
 }
 
-/** The triangle with corner 0 at (s, t) and sides `size` times as long, in powers of its own. */
-function partOf(powers: Float64Array, s0: number, t0: number, size: number): Float64Array {
-  const part = new Float64Array(45);
+/** Room for a part at each depth. */
+const PARTS = Array.from({ length: MOST_QUARTERINGS }, () => new Float64Array(45));
+
+/** The triangle with corner 0 at (s, t) and sides `size` times as long, in powers of its own, in `part`. */
+function partOf(powers: Float64Array, s0: number, t0: number, size: number, part: Float64Array): Float64Array {
+  part.fill(0);
   for (let monomial = 0; monomial < 15; monomial++) {
-    const [i, j] = EXPONENTS[monomial];
+    const i = EXPONENTS[monomial][0], j = EXPONENTS[monomial][1];
     for (let a = 0; a <= i; a++) {
+      const ofS = binomial(i, a) * power(s0, i - a) * power(size, a);
       for (let b = 0; b <= j; b++) {
-        const factor = binomial(i, a) * binomial(j, b) * s0 ** (i - a) * t0 ** (j - b) * size ** (a + b);
+        const factor = ofS * binomial(j, b) * power(t0, j - b) * power(size, b);
         const degree = a + b;
         const to = 3 * ((degree * (degree + 1)) / 2 + b);
         for (let axis = 0; axis < 3; axis++) part[to + axis] += factor * powers[3 * monomial + axis];
