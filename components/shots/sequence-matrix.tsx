@@ -60,7 +60,7 @@ export function SequenceMatrix({ show, sequence }: { show: string; sequence: Seq
 
 function Crossing({ cell }: { cell: SequenceCell }) {
   return (
-    <span className="inline-flex items-center gap-2">
+    <span className="inline-flex items-center gap-2 align-middle">
       <ShotMark of={cell} />
       {cell.copies > 1 ? <span className="text-13 text-ink-3">×{cell.copies}</span> : null}
       {cell.overrides > 0 ? <span className="border-l-2 border-brass pl-1.5 text-13 text-ink-2">override</span> : null}

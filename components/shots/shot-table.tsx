@@ -56,7 +56,7 @@ function ShotRow({ show, shot }: { show: string; shot: ShotEntry }) {
         <Link href={shotHref(show, shot.code)} className="link">
           {shot.code}
         </Link>
-        {shot.title === null ? null : <span className="ml-2 text-13 text-ink-3">{shot.title}</span>}
+        {shot.title === null ? null : <span className="ml-2 text-13 text-ink-3 max-md:hidden">{shot.title}</span>}
       </TableCell>
       <TableCell>
         <ShotMark of={shot} />

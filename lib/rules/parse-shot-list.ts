@@ -136,7 +136,7 @@ function delimiterOf(text: string): string {
 /** Where the columns stand, if the first line heads them; null where it is a shot already. */
 function headsOf({ line, cells }: Line, errors: ShotListError[]): Map<Column, number> | null {
   const found = cells.map((cell) => HEADS[cell.trim().toLowerCase()]);
-  if (!found.includes('sequence') && !found.includes('shot')) return null;
+  if (found.filter((column) => column !== undefined).length < 2) return null;
   const places = new Map<Column, number>();
   cells.forEach((cell, index) => {
     const column = found[index];
