@@ -13,7 +13,8 @@ import { makePartPage, makePartRow } from '../support/make-part-row';
 vi.setConfig({ testTimeout: 60_000 });
 vi.mock('next/navigation', () => ({ useRouter: () => ({ push: vi.fn() }) }));
 
-const actions = { approve: vi.fn(), withdraw: vi.fn(), ask: vi.fn() };
+const ask = vi.fn(() => Promise.resolve({ ok: true as const, data: {} }));
+const actions = { approve: vi.fn(), withdraw: vi.fn(), ask };
 
 const frame = {
   code: 'tarn',
@@ -200,6 +201,20 @@ describe('PartsTable', () => {
     await user.keyboard('640{Enter}');
     await waitFor(() => expect(taken).toHaveLength(1), { timeout: 20_000 });
     expect(taken[0].items.map((item) => item.target_mass_kg)).toEqual([384, 128, 128]);
+  });
+
+  it('asks for the approval of what is chosen and has a value that nobody approved, against that value', async () => {
+    const user = userEvent.setup({ delay: null });
+    ask.mockClear();
+    rows = rows.map((one) => ({ ...one, value_sha256: one.state === 'unset' ? null : (one.part ?? '').padEnd(64, '0'), value_id: one.part === 'horn_R' ? 'approved' : null }));
+    show();
+    await user.click(await row('ox/head'));
+    await user.keyboard('{Control>}a{/Control}a');
+    await user.type(await screen.findByLabelText('Note', undefined, { timeout: 20_000 }), 'for the lake');
+    await user.click(within(screen.getByRole('dialog')).getByText('Ask'));
+    await waitFor(() => expect(ask).toHaveBeenCalledTimes(1), { timeout: 20_000 });
+    const items = ['head', 'horn_L'].map((part) => ({ asset: 'ox', part, value_sha256: part.padEnd(64, '0') }));
+    expect(ask).toHaveBeenCalledWith({ show: 'tarn', items, note: 'for the lake' });
   });
 
   it('offers nothing to set to who may not', async () => {
