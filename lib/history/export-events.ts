@@ -15,7 +15,7 @@ const COLUMNS = ['event', 'at_utc', 'person', 'email', 'act', 'origin', 'subject
 /**
  * A show's history as CSV (RFC 4180), the newest act first: one record a field that changed, or one for an act without any. Ids of
  * approved values stand as they are in `before` and `after`, with mass (kg) and version in words beside them. Sent page by page as
- * it is read; acts that come meanwhile are left out, and since nothing of the history changes, the file is of one moment.
+ * it is read: nothing of a history ever changes, so the pages fit together, and acts that come meanwhile are left out.
  */
 export async function exportEvents(context: Context, input: ExportEventsInput): Promise<Response> {
   const { actor, db } = requireActor(context);
