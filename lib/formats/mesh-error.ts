@@ -20,6 +20,7 @@ export interface MeshErrorFields {
 
 const EXCERPT_BEFORE = 48;
 const EXCERPT_AFTER = 32;
+const LONG_LINE = 10_000;
 
 /**
  * A mesh file that cannot be read. `message` carries the place ("line 812, column 9: expected …, found …"),
@@ -51,12 +52,21 @@ export class MeshError extends Error {
     this.found = fields.found ?? null;
     this.excerpt = place ? caretExcerpt(place) : null;
   }
+
+  /** The same error, of a file that lies within another under this name; line, column and byte are those of the inner one. */
+  within(name: string): MeshError {
+    const { code, expected, found, line, column, offset, excerpt } = this;
+    const outer = new MeshError({ code, expected, found, detail: `${name}: ${this.detail}` });
+    return Object.assign(outer, { message: `${name}: ${this.message}`, line, column, offset, excerpt });
+  }
 }
 
 /** The line, cut to a window around the column, and a caret below it. Tabs become one blank so that the caret stays in step. */
 function caretExcerpt(place: TextPlace): string {
-  const characters = Array.from(place.text.replaceAll('\t', ' '));
-  const at = Math.min(place.column - 1, characters.length);
+  // A line of megabytes is not taken apart: what is far before the column is never shown.
+  const far = place.text.length > LONG_LINE ? Math.max(0, Math.min(place.column, place.text.length) - LONG_LINE) : 0;
+  const characters = Array.from(place.text.slice(far, far + 2 * LONG_LINE).replaceAll('\t', ' '));
+  const at = Math.min(place.column - 1 - far, characters.length);
   const from = Math.max(0, at - EXCERPT_BEFORE);
   const to = Math.min(characters.length, at + EXCERPT_AFTER);
   const head = from > 0 ? '… ' : '';

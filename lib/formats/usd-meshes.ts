@@ -1,0 +1,138 @@
+import type { Cage, FormatWarning } from '../engine/cage';
+import { fileNote, oneLabel } from './bare-cage';
+import { checkCoordinates } from './check-coordinates';
+import { shortNames } from './distinct-names';
+import { IDENTITY, isIdentity, mirrors, multiply, reverseFaces, transformPoints, type Matrix } from './matrix';
+import { mergeCages } from './merge-cages';
+import { MeshError } from './mesh-error';
+import { groupLabels, jointLabels, jointsOf, materialLabels, nameOfPath, readSubsets } from './usd-labels';
+import { usdPolygons } from './usd-polygons';
+import { numbersOf, textOf, type UsdLayer, type UsdPrim } from './usd-prim';
+import { primTransform } from './usd-transform';
+
+/** What a prim hands down to those below it. */
+interface Inherited {
+  world: Matrix;
+  path: string;
+  material: string | null;
+  joints: string[];
+  purpose: string | null;
+}
+
+interface Found {
+  path: string;
+  mesh: UsdPrim;
+  inherited: Inherited;
+}
+
+const NOT_POLYGONS = new Set(['Sphere', 'Cube', 'Cylinder', 'Cone', 'Capsule', 'Plane', 'NurbsPatch', 'NurbsCurves', 'BasisCurves', 'HermiteCurves', 'Points', 'TetMesh']);
+const NOT_RENDERED = new Set(['proxy', 'guide']);
+/** Share of the box's diagonal by which points may lie outside the authored extent before it is said. */
+const EXTENT_SLACK = 0.01;
+
+/** Walks a layer for its meshes, and notes once what it passes over. */
+class UsdScene {
+  readonly found: Found[] = [];
+  readonly notes = new Map<string, FormatWarning>();
+  private byPath: Map<string, UsdPrim> | null = null;
+
+  constructor(private readonly layer: UsdLayer) {}
+
+  walk(): void {
+    const top: Inherited = { world: IDENTITY, path: '', material: null, joints: [], purpose: null };
+    if (this.layer.subLayers.length > 0) this.note('not_composed', 'Left out other layers that this one builds on: only what the file itself holds is read.');
+    for (const prim of this.layer.root) this.visit(prim, top);
+  }
+
+  note(code: string, message: string): void {
+    if (!this.notes.has(code)) this.notes.set(code, fileNote(code, message));
+  }
+
+  private visit(prim: UsdPrim, above: Inherited): void {
+    const path = `${above.path}/${prim.name}`;
+    if (prim.specifier !== 'def' || !prim.active) return;
+    if (prim.arcs.length > 0) this.note('not_composed', `Left out what ${path} brings in by ${prim.arcs.join(', ')}: only what the file itself holds is read.`);
+    if (textOf(prim, 'visibility') === 'invisible') return this.note('hidden', `Left out ${path}, which is invisible.`);
+    const purpose = textOf(prim, 'purpose') ?? above.purpose;
+    if (purpose !== null && NOT_RENDERED.has(purpose)) return this.note('hidden', `Left out ${path}, whose purpose is ${purpose}.`);
+    if (prim.typeName === 'PointInstancer') return this.note('instances_ignored', `Left out ${path}: instances are not read.`);
+    if (NOT_POLYGONS.has(prim.typeName)) this.note('not_polygons', `Left out ${path}, a ${prim.typeName}: only meshes are read.`);
+    const { local, resets, animated } = primTransform(prim, path);
+    if (animated || prim.attributes.get('points')?.animated) this.note('animated', `${path} moves over time: it is measured at its default, or else at the first time.`);
+    const joints = jointsOf(prim, (target) => this.find(target));
+    const inherited: Inherited = {
+      world: isIdentity(local) ? (resets ? IDENTITY : above.world) : resets ? local : multiply(local, above.world),
+      path,
+      material: prim.relationships.get('material:binding')?.[0] ?? above.material,
+      joints: joints.length > 0 ? joints : above.joints,
+      purpose,
+    };
+    if (prim.typeName === 'Mesh') this.found.push({ path, mesh: prim, inherited });
+    for (const child of prim.children) this.visit(child, inherited);
+  }
+
+  private find(path: string): UsdPrim | null {
+    this.byPath ??= indexPrims(this.layer.root);
+    return this.byPath.get(path) ?? null;
+  }
+}
+
+function indexPrims(root: UsdPrim[]): Map<string, UsdPrim> {
+  const found = new Map<string, UsdPrim>();
+  const add = (prims: UsdPrim[], above: string) => {
+    for (const prim of prims) {
+      found.set(`${above}/${prim.name}`, prim);
+      add(prim.children, `${above}/${prim.name}`);
+    }
+  };
+  add(root, '');
+  return found;
+}
+
+/**
+ * One cage of all the meshes that a USD layer defines and shows, at their places in the scene. Meshes name objects; face subsets name groups; bound materials and
+ * skin joints their own labels. A left-handed mesh, or a mirrored one, is turned the right way out, which is no fault. Errors: MeshError with the prim's path.
+ */
+export function readUsdMeshes(layer: UsdLayer): Cage {
+  const scene = new UsdScene(layer);
+  scene.walk();
+  const names = shortNames(scene.found.map((one) => one.path.slice(1)));
+  const cages = scene.found.map((one, i) => readMesh(scene, one, names[i])).filter((cage) => cage !== null);
+  if (cages.length === 0) throw new MeshError({ code: 'no_faces', expected: 'a mesh', detail: `expected at least one mesh with faces in the layer, found none${scene.notes.has('not_composed') ? ': what it brings in from other layers is not read' : ''}` });
+  if (new Set(cages.map((cage) => cage.scheme)).size > 1) scene.note('schemes_differ', 'The meshes of the file ask for different subdivision schemes; one is used for all.');
+  const merged = mergeCages(cages);
+  const metres = layer.metersPerUnit;
+  if (metres !== null && !(metres > 0 && metres < Infinity)) throw new MeshError({ code: 'bad_unit', expected: 'a positive number for metersPerUnit', found: String(metres), detail: `expected a positive number for metersPerUnit, found ${metres}` });
+  return { ...merged, metresPerUnit: metres, upAxis: layer.upAxis, warnings: [...scene.notes.values(), ...merged.warnings] };
+}
+
+function readMesh(scene: UsdScene, { path, mesh, inherited }: Found, name: string): Cage | null {
+  if ((numbersOf(mesh, 'faceVertexCounts')?.length ?? 0) === 0) {
+    scene.note('empty_mesh', `Left out ${path}, a mesh without faces.`);
+    return null;
+  }
+  const cage = usdPolygons(mesh, path);
+  checkExtent(scene, mesh, cage.positions, path);
+  transformPoints(cage.positions, inherited.world);
+  checkCoordinates(cage.positions, `mesh ${path.slice(0, 200)}: `, null);
+  if ((textOf(mesh, 'orientation') === 'leftHanded') !== mirrors(inherited.world)) reverseFaces(cage.faceStarts, cage.faceVertices);
+  const faces = cage.faceStarts.length - 1;
+  const subsets = readSubsets(mesh, faces, path);
+  return {
+    ...cage,
+    objects: oneLabel(name, faces),
+    groups: groupLabels(subsets, faces, name),
+    materials: materialLabels(subsets, faces, inherited.material === null ? null : nameOfPath(inherited.material)),
+    joints: jointLabels(mesh, cage, inherited.joints, path),
+  };
+}
+
+/** Points far outside the box that the file itself states mean that one of the two was not read, or not written, right. */
+function checkExtent(scene: UsdScene, mesh: UsdPrim, positions: Float64Array, path: string): void {
+  const extent = numbersOf(mesh, 'extent');
+  if (!extent || extent.length !== 6 || !Array.from(extent).every(Number.isFinite)) return;
+  const diagonal = Math.hypot(extent[3] - extent[0], extent[4] - extent[1], extent[5] - extent[2]);
+  let beyond = 0;
+  for (let i = 0; i < positions.length; i++) beyond = Math.max(beyond, extent[i % 3] - positions[i], positions[i] - extent[3 + (i % 3)]);
+  if (beyond > EXTENT_SLACK * diagonal) scene.note('extent_disagrees', `Points of mesh ${path} lie up to ${beyond.toPrecision(4)} outside the extent that the file states.`);
+}
