@@ -12,6 +12,8 @@ export class BorderCurves {
   readonly edges: number[] = [];
   readonly weights: number[] = [];
   readonly shares: number[] = [];
+  /** By how much a closing one level earlier weighs each piece less. */
+  readonly doubts: number[] = [];
   /** CURVE_POWERS numbers per piece: [power · 3 + axis]. */
   readonly powers: number[] = [];
   /** Limit points at the ends of edges, by 2 · edge + end. */
@@ -69,6 +71,7 @@ export class BorderCurves {
     this.edges.push(edge);
     this.weights.push(weight);
     this.shares.push(share);
+    this.doubts.push(0);
     const all = powers.concat(new Array<number>(CURVE_POWERS - powers.length).fill(0));
     for (let axis = 0; axis < 3; axis++) all[axis] += shift[axis];
     this.powers.push(...all);
@@ -76,11 +79,17 @@ export class BorderCurves {
     if (from + share === 1) this.ends.set(2 * edge + 1, pointAt(all, 0.5));
   }
 
+  /** Notes by how much a closing one level earlier weighs the pieces from `first` on less. */
+  doubtFrom(first: number, doubt: number): void {
+    this.doubts.fill(doubt, first);
+  }
+
   /** Adds a piece to the curve of another edge too, if need be the other way round; it covers nothing of that edge's range. */
   addCopy(piece: number, edge: number, reversed: boolean): void {
     this.edges.push(edge);
     this.weights.push(this.weights[piece]);
     this.shares.push(0);
+    this.doubts.push(this.doubts[piece]);
     for (let i = CURVE_POWERS * piece; i < CURVE_POWERS * (piece + 1); i++) {
       const odd = Math.floor((i % CURVE_POWERS) / 3) % 2 === 1;
       this.powers.push(reversed && odd ? -this.powers[i] : this.powers[i]);
@@ -92,6 +101,7 @@ export class BorderCurves {
     this.edges.push(edge);
     this.weights.push(1);
     this.shares.push(1);
+    this.doubts.push(0);
     this.powers.push((px + qx) / 2, (py + qy) / 2, (pz + qz) / 2, qx - px, qy - py, qz - pz, 0, 0, 0, 0, 0, 0, 0, 0, 0);
     this.ends.set(2 * edge, [px, py, pz]);
     this.ends.set(2 * edge + 1, [qx, qy, qz]);

@@ -1,7 +1,8 @@
 import type { Borders } from '../mesh/border-loops';
 import { CURVE_POWERS } from './border-curves';
 import { addPieceChain, noMoments, type CurveTable } from './curve-table';
-import type { MomentSums } from './sums';
+import type { LimitSums } from './limit-sums';
+import { MOMENTS } from './sums';
 
 /** How much of each body its caps are: their area and the volume between them and the body's origin. */
 export interface CapAmounts {
@@ -23,11 +24,11 @@ interface Segment {
 const SAME_LENGTH = 1e-9;
 
 /**
- * Closes all bodies by cones over their border loops and subtracts the chains [O, s, C] from `sums`. The apex s of a loop is the mean over its
+ * Closes all bodies by cones over their border loops and subtracts the chains [O, s, C] from the solid's sums, with what the closings of their curves may err by. The apex s of a loop is the mean over its
  * edges of ∫₀¹ C dt, which refinement does not change. Where borders branch, the shortest loop that bounds one body is coned from its own mean and
  * replaced in its neighbours' loops by spokes from its junctions to the apex, until none is left; so each cap bounds two bodies and parts stay additive.
  */
-export function addCaps(borders: Borders, curves: CurveTable, origins: Float64Array, sums: MomentSums, bodies: number): CapAmounts {
+export function addCaps(borders: Borders, curves: CurveTable, origins: Float64Array, sums: Pick<LimitSums, 'solid' | 'closingError'>, bodies: number): CapAmounts {
   const amounts: CapAmounts = { area: new Float64Array(bodies), volume: new Float64Array(bodies) };
   const segments: Segment[] = borders.segments.map((s) => ({ edge: s.edge, line: null, left: s.left, right: s.right }));
   const loops = borders.loops.map((loop) => ({ body: loop.body, steps: loop.steps }));
@@ -57,26 +58,27 @@ export function addCaps(borders: Borders, curves: CurveTable, origins: Float64Ar
       const backwards = (step & 1) === 1;
       const other = backwards ? segment.left : segment.right;
       const body = loops[loop].body;
-      if (body >= 0) addArea(body, chain(segment, origins.subarray(3 * body, 3 * body + 3), apex, backwards ? 1 : -1, own));
+      if (body >= 0) amounts.area[body] += chain(segment, body, apex, backwards ? 1 : -1, own);
       const otherBody = loops[other].body;
       if (otherBody < 0) continue;
       const side = perSide.get(otherBody) ?? noMoments();
       perSide.set(otherBody, side);
-      addArea(otherBody, chain(segment, origins.subarray(3 * otherBody, 3 * otherBody + 3), apex, backwards ? -1 : 1, side));
+      amounts.area[otherBody] += chain(segment, otherBody, apex, backwards ? -1 : 1, side);
     }
     if (loops[loop].body >= 0) addSide(loops[loop].body, own);
     for (const [body, side] of perSide) addSide(body, side);
   };
-  const addArea = (body: number, area: number): void => {
-    amounts.area[body] += area;
-  };
   const addSide = (body: number, moments: Float64Array): void => {
-    sums.add(body, moments, 0);
-    sums.magnitudes[body] += Math.abs(moments[0]);
+    sums.solid.add(body, moments, 0);
+    sums.solid.magnitudes[body] += Math.abs(moments[0]);
     amounts.volume[body] += Math.abs(moments[0]);
   };
-  const chain = (segment: Segment, origin: Float64Array, apex: number[], sign: number, out: Float64Array): number =>
-    segment.line !== null ? addPieceChain(segment.line, 0, origin, apex, sign, out) : curves.addChain(segment.edge, origin, apex, sign, out);
+  /** Adds a segment's chain, as a body sees it, to `out`; returns the area of its cone. */
+  const chain = (segment: Segment, body: number, apex: number[], sign: number, out: Float64Array): number => {
+    const origin = origins.subarray(3 * body, 3 * body + 3);
+    if (segment.line !== null) return addPieceChain(segment.line, 0, origin, apex, sign, out);
+    return curves.addChain(segment.edge, origin, apex, sign, out, sums.closingError.subarray(MOMENTS * body, MOMENTS * (body + 1)));
+  };
 
   /** Takes the loop out of its neighbours: runs of its segments along one neighbour become two spokes over the apex. */
   const replaceBySpokes = (loop: number, apex: number[]): void => {

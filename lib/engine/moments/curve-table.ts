@@ -14,9 +14,9 @@ export interface CurveTable {
   end(edge: number, which: 0 | 1): [number, number, number];
   /**
    * Adds `sign` times the moments of the chain [O, s, C] about O to `out`, C along the edge's half-edge; all points in one frame.
-   * Returns the area of the cone from s to C.
+   * Adds to `doubts` what closing the curve one level earlier would change each of them by. Returns the area of the cone from s to C.
    */
-  addChain(edge: number, origin: ArrayLike<number>, apex: ArrayLike<number>, sign: number, out: Float64Array): number;
+  addChain(edge: number, origin: ArrayLike<number>, apex: ArrayLike<number>, sign: number, out: Float64Array, doubts: Float64Array): number;
 }
 
 /** Sorts pieces by their edge. */
@@ -45,12 +45,15 @@ export function curveTable(curves: BorderCurves): CurveTable {
       return sum;
     },
     end: (edge, which) => curves.ends.get(2 * edge + which) ?? [0, 0, 0],
-    addChain(edge, origin, apex, sign, out) {
+    addChain(edge, origin, apex, sign, out, doubts) {
       let area = 0;
+      const changes = noMoments();
       for (const piece of pieces(edge)) {
         const weight = curves.weights[piece];
         area += weight * addPieceChain(powers, CURVE_POWERS * piece, origin, apex, sign * weight, out);
+        if (curves.doubts[piece] !== 0) addPieceChain(powers, CURVE_POWERS * piece, origin, apex, curves.doubts[piece], changes);
       }
+      for (let m = 0; m < MOMENTS; m++) doubts[m] += Math.abs(changes[m]);
       return area;
     },
   };

@@ -49,5 +49,5 @@ export function integrateLimit(mesh: Topology, frames: Frames, bodies: Bodies, b
 /** Closes the bodies by caps over their borders. */
 export function capBodies(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array, integrated: Integrated): CapAmounts {
   const borders = findBorders(mesh, bodies, blocked);
-  return addCaps(borders, curveTable(integrated.curves), frames.origins, integrated.solid, bodies.bodies);
+  return addCaps(borders, curveTable(integrated.curves), frames.origins, integrated, bodies.bodies);
 }

@@ -30,6 +30,7 @@ export interface FanTable {
   surfaceLate: Float64Array;
   /** For curves through the centre, whose terms shrink more slowly: levels are closed in pairs, or the weights would grow to 1e7 and their rounding with them. */
   curveWeights: Float64Array;
+  curveCheck: Float64Array;
   operator: FanOperator;
   rim: FanRim;
 }
@@ -66,7 +67,7 @@ function makeTable(kit: FanKit, fan: FanState): FanTable {
   const levels = tailLevels(volume, TAIL_DIGITS);
   const wideLevels = tailLevels(area, WIDE_DIGITS);
   const curve = Math.max(lambda, 0.5) ** 2;
-  const pairs = tailWeights(curve, tailLevels(curve, WIDE_DIGITS));
+  const pairs = tailLevels(curve, WIDE_DIGITS);
   const surface: SurfaceClosing = isPlain(fan) ? smoothSurface(area, Math.min(area, lambda * (found[2] / found[1]))) : geometricSurface(area);
   return {
     weights: tailWeights(volume, levels),
@@ -74,7 +75,8 @@ function makeTable(kit: FanKit, fan: FanState): FanTable {
     wideWeights: tailWeights(area, wideLevels),
     wideCheck: tailWeights(area, wideLevels - 1),
     ...surface,
-    curveWeights: Float64Array.from({ length: 2 * pairs.length }, (_, k) => pairs[k >> 1]),
+    curveWeights: inPairs(tailWeights(curve, pairs)),
+    curveCheck: inPairs(tailWeights(curve, pairs - 1)),
     operator,
     rim: makeFanRim(kit, fan, operator.points),
   };
@@ -103,6 +105,10 @@ function geometricWeights(ratio: number, levels: number): Float64Array {
   const weights = new Float64Array(levels).fill(1);
   weights[levels - 1] = 1 / (1 - ratio);
   return weights;
+}
+
+function inPairs(weights: Float64Array): Float64Array {
+  return Float64Array.from({ length: 2 * weights.length }, (_, k) => weights[k >> 1]);
 }
 
 function isPlain(fan: FanState): boolean {

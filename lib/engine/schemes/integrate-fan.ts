@@ -42,7 +42,7 @@ export function integrateFan(kit: FanKit, mesh: LevelMesh, fans: Fans, index: nu
   let state = makeFanState(fans.starts[index + 1] - fans.starts[index], fans.closed[index], fans.sharpFirst[index], fans.centre[index]);
   let finer = makeFanState(state.sectors, state.closed, state.sharpFirst, state.centreRule);
   const table = fanTable(kit, state);
-  const { wideWeights: weights, curveWeights } = table;
+  const { wideWeights: weights } = table;
   const levels = Math.max(weights.length, table.surfaceWeights.length);
   const corners = fans.corners.slice(fans.starts[index], fans.starts[index + 1]);
   const n = state.sectors;
@@ -83,7 +83,7 @@ export function integrateFan(kit: FanKit, mesh: LevelMesh, fans: Fans, index: nu
       for (let child = 0; child < 3; child++) {
         if (bordered) {
           kit.fillChild(state, j, child, net);
-          addFanCurves(kit, mesh, corners[j], child, k, at(curveWeights, k), limit, sums.curves);
+          addFanCurves(kit, mesh, corners[j], child, k, table, limit, sums.curves);
         }
         const magnitude = block.read(place + child, solid, surface);
         if (checked) {
@@ -116,7 +116,7 @@ export function integrateFan(kit: FanKit, mesh: LevelMesh, fans: Fans, index: nu
       sums.surfaceError[body] += 3 * n * Math.abs(coarseSurface[0] - surface[0]);
     }
   }
-  if (bordered) addRestOfCurves(kit, mesh, corners, state, finer, levels, curveWeights, limit, sums.curves);
+  if (bordered) addRestOfCurves(kit, mesh, corners, state, finer, levels, table, limit, sums.curves);
   const changes = own.checkArea.map((area, j) => Math.max(Math.abs(own.surface[MOMENTS * j] - area), Math.abs(own.surface[MOMENTS * j] - own.lateArea[j])));
   if (sumOf(changes) > UNSETTLED * sumOf(own.checkArea)) {
     mendFanSurface(kit, table, n, packed, 0, own.surface, changes);
@@ -208,17 +208,17 @@ function finishFan(kit: FanKit, mesh: LevelMesh, corners: number[], own: FanSums
 
 /** Border curves shrink more slowly than patches, so their sequence goes on; at its end stand the limit points of the edges. */
 function addRestOfCurves(
-  kit: FanKit, mesh: LevelMesh, corners: number[], from: FanState, spare: FanState, done: number, weights: Float64Array, limit: Float64Array, curves: BorderCurves,
+  kit: FanKit, mesh: LevelMesh, corners: number[], from: FanState, spare: FanState, done: number, table: FanTable, limit: Float64Array, curves: BorderCurves,
 ): void {
   let state = from;
   let finer = spare;
-  for (let k = done; k < weights.length; k++) {
+  for (let k = done; k < table.curveWeights.length; k++) {
     kit.refine(state, finer);
     [state, finer] = [finer, state];
     for (let j = 0; j < corners.length; j++) {
       for (let child = 0; child < 3; child += 2) {
         kit.fillChild(state, j, child, net);
-        addFanCurves(kit, mesh, corners[j], child, k, weights[k], limit, curves);
+        addFanCurves(kit, mesh, corners[j], child, k, table, limit, curves);
       }
     }
   }
@@ -232,15 +232,18 @@ function addRestOfCurves(
 
 /** Adds the border curves that the child net in `net` holds at level k of a fan. Sides 0 leave the centre, sides `arriving` run towards it. */
 function addFanCurves(
-  kit: FanKit, mesh: LevelMesh, corner: number, child: number, k: number, weight: number, limit: Float64Array, curves: BorderCurves,
+  kit: FanKit, mesh: LevelMesh, corner: number, child: number, k: number, table: FanTable, limit: Float64Array, curves: BorderCurves,
 ): void {
   const length = 2 ** -mesh.level;
+  const weight = at(table.curveWeights, k);
   if (child !== 1 && weight !== 0) {
     const side = child === 0 ? 0 : kit.arriving;
     const h = kit.sideAt(mesh, corner, side);
     const share = length * 2 ** (-1 - k);
     const from = mesh.borderFrom[h] + (side === 0 ? share : length - 2 * share);
+    const first = curves.edges.length;
     if (mesh.borderOf[h] >= 0) kit.addSide(curves, net, side, mesh.borderOf[h], weight, from, share, limit);
+    curves.doubtFrom(first, weight - at(table.curveCheck, k));
   }
   if (k > 0) return;
   for (const [outerChild, side, faceSide, half] of kit.outerSides) {
