@@ -1,4 +1,4 @@
-import { Box3, Matrix4, Sphere, type BufferGeometry } from 'three';
+import { Box3, Sphere, type BufferGeometry, type Matrix4 } from 'three';
 
 /** A surface and where it stands; where it lies itself without a place. */
 export interface Placed {
