@@ -28,7 +28,7 @@ test.each(PATCH_KINDS)('walls: the vector kernel of %s patches and the one in Ja
   fc.assert(fc.property(fc.array(pair, { minLength: 1, maxLength: 3 }), fc.array(fc.integer({ min: 2, max: most }), { minLength: 1, maxLength: 3 }), (pairs, counts) => {
     const ours = results(vector ?? scalarShellKernel(kind), kind, pairs, counts);
     const theirs = results(scalarShellKernel(kind), kind, pairs, counts);
-    const used = kind === 'triangle' ? [0, 1, 2, 3] : [0, 1, 2, 3, 4];
+    const used = kind === 'triangle' ? [0, 1, 2, 3] : [0, 1, 2, 3, 4, 5];
     pairs.forEach((_, k) => used.forEach((i) => [0, 1].forEach((lane) => {
       const at = k * BENDS_STRIDE + 2 * i + lane;
       expect(Object.is(ours.bends[at], theirs.bends[at])).toBe(true);

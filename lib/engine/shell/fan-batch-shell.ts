@@ -19,7 +19,7 @@ const MOST_LEVELS = 18;
 const MOST_FANS = 48;
 
 /** What a rule may err by at the first level, relatively; terms fall from level to level, and it may err by more as fast, but for the weights' sake. */
-const FIRST_TOLERANCE = 2e-9;
+const FIRST_TOLERANCE = 5e-10;
 const GROWTH_SHARE = 0.9;
 
 /** Levels whose curvature counts for the smallest radius where it may grow without end, over a vanishing area. */

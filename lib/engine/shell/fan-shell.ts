@@ -12,7 +12,7 @@ import { addShifted, SHELL_TERMS, TERM_SIGNS, TERM_STARTS, type CurvaturePeak } 
 const TAIL_DIGITS = 10;
 
 /** What a rule may err by at the first level, relatively; terms fall from level to level, and it may err by more as fast, but for the weights' sake. */
-const FIRST_TOLERANCE = 2e-9;
+const FIRST_TOLERANCE = 5e-10;
 const GROWTH_SHARE = 0.9;
 
 /** Fans with a crease or corner have no closed formula for how their terms fall; this holds all but slow rests. */

@@ -2,7 +2,7 @@ import { inputStride, NET_VALUES } from '../kernel/patch-kinds';
 import type { ShellErrors } from './bicubic-shell';
 import { BENDS_STRIDE, SHELL_PAIRS, TOTALS_STRIDE, type ShellKernel } from './shell-kernel';
 import type { ShellKit } from './shell-kits';
-import { chooseNodes, ruleError } from './shell-nodes';
+import { bendVariation, chooseNodes, gaussShare, meanShare, ruleError } from './shell-nodes';
 import { SHELL_TERMS, TERM_SIGNS, type CurvaturePeak } from './shell-terms';
 import { shellKernel } from './shell-vector';
 
@@ -74,23 +74,21 @@ export class ShellBlock {
   private choose(patch: number, tolerance: number): void {
     const { bends } = this.kernel;
     const at = (patch >> 1) * BENDS_STRIDE + (patch & 1);
-    let square = 0;
-    for (let i = 2; i < BENDS_STRIDE; i += 2) if (!(bends[at + i] <= square)) square = bends[at + i];
-    const middle = bends[at];
-    const variation = middle > 0 ? Math.sqrt(square / middle) : Infinity;
+    const variation = bendVariation(bends, at, this.kernel.kind === 'triangle');
     this.variations[patch] = variation;
-    this.areas[patch] = Math.sqrt(middle) * this.areaShare;
+    this.areas[patch] = Math.sqrt(bends[at]) * this.areaShare;
     this.nodes[patch] = chooseNodes(variation, tolerance);
   }
 
   private addError(patch: number): void {
     const { errors, kernel } = this;
     const at = 3 * patch;
-    const error = this.areas[patch] * ruleError(kernel.counts[patch >> 1], this.variations[patch]);
+    const nodes = kernel.counts[patch >> 1];
+    const error = this.areas[patch] * ruleError(nodes, this.variations[patch]);
     const curvature = kernel.output[this.resultAt(patch) + CURVED_AT] / 2;
     errors[at] = error;
-    errors[at + 1] = error * curvature;
-    errors[at + 2] = error * curvature * curvature;
+    errors[at + 1] = error * curvature * meanShare(nodes);
+    errors[at + 2] = error * curvature * curvature * gaussShare(nodes);
   }
 
   private quarter(patch: number, tolerance: number): void {

@@ -19,7 +19,19 @@ const SAFETY = 8;
 
 /** Relative error of n nodes a direction where the normal vector varies by `variation` of its length over half the patch: the series' first power that the rule misses. */
 export function ruleError(nodes: number, variation: number): number {
-  return SAFETY * RULE_ERRORS[nodes] * variation ** (2 * nodes);
+  const square = variation * variation;
+  let error = SAFETY * RULE_ERRORS[nodes];
+  for (let i = 0; i < nodes; i++) error *= square;
+  return error;
+}
+
+/** How much more ∫ 2H and ∫ K err than areas do: their integrands have the second and third power of |X_u × X_v| below, whose series' coefficients grow so. */
+export function meanShare(nodes: number): number {
+  return 2 * nodes + 1;
+}
+
+export function gaussShare(nodes: number): number {
+  return (nodes + 1) * (2 * nodes + 1);
 }
 
 /** Fewest nodes a direction whose error stays below the tolerance; 0 where the patch bends too much for any. */
@@ -29,4 +41,16 @@ export function chooseNodes(variation: number, tolerance: number): number {
   let power = SAFETY * square ** FEWEST_SHELL_NODES;
   for (let nodes = FEWEST_SHELL_NODES; nodes <= MOST_SHELL_NODES; nodes++, power *= square) if (RULE_ERRORS[nodes] * power <= tolerance) return nodes;
   return 0;
+}
+
+/**
+ * Most that X_u × X_v varies over half the patch along either direction, relative to its length, from what the kernels leave at `bends[at]`, two doubles apart:
+ * a triangle's squares of differences at the corners; a square's ratios along its sides and the square of what its corners' mean leaves the middle by.
+ */
+export function bendVariation(bends: Float64Array, at: number, triangle: boolean): number {
+  const middle = bends[at];
+  if (!(middle > 0)) return Infinity;
+  let most = 0;
+  for (let i = 1; i <= (triangle ? 3 : 4); i++) if (!(bends[at + 2 * i] <= most)) most = bends[at + 2 * i];
+  return triangle ? Math.sqrt(most / middle) : Math.sqrt(most) + Math.sqrt(bends[at + 10] / middle);
 }

@@ -284,7 +284,7 @@ function addMiddle(totals: Float64Array): void {
   totals[34] = totals[34] + (yCm * znm);
 }
 
-/** Puts the squares of a bicubic patch's X_u × X_v in its middle and of its differences from that at the corners into `bends`. */
+/** Puts squares of a bicubic patch's X_u × X_v and of how much it varies into `bends`. */
 export function bicubicBends(p: Float64Array, bends: Float64Array): void {
   const u = 0;
   const u2 = u * u;
@@ -369,14 +369,20 @@ export function bicubicBends(p: Float64Array, bends: Float64Array): void {
     const nxr = (yur * zvr) - (zur * yvr);
     const nyr = (zur * xvr) - (xur * zvr);
     const nzr = (xur * yvr) - (yur * xvr);
-    const xfl = nxl - nxc;
-    const yfl = nyl - nyc;
-    const zfl = nzl - nzc;
-    bends[1] = ((xfl * xfl) + (yfl * yfl)) + (zfl * zfl);
-    const xfr = nxr - nxc;
-    const yfr = nyr - nyc;
-    const zfr = nzr - nzc;
-    bends[2] = ((xfr * xfr) + (yfr * yfr)) + (zfr * zfr);
+    const xfs0 = nxl - nxr;
+    const xgs0 = nxl + nxr;
+    const yfs0 = nyl - nyr;
+    const ygs0 = nyl + nyr;
+    const zfs0 = nzl - nzr;
+    const zgs0 = nzl + nzr;
+    const rs0 = ((xgs0 * xgs0) + (ygs0 * ygs0)) + (zgs0 * zgs0);
+    bends[1] = (((xfs0 * xfs0) + (yfs0 * yfs0)) + (zfs0 * zfs0)) / rs0;
+    bends[6] = nxl;
+    bends[7] = nyl;
+    bends[8] = nzl;
+    bends[9] = nxr;
+    bends[10] = nyr;
+    bends[11] = nzr;
   }
   {
     const u = 1 * (1 / 2);
@@ -438,14 +444,34 @@ export function bicubicBends(p: Float64Array, bends: Float64Array): void {
     const nxr = (yur * zvr) - (zur * yvr);
     const nyr = (zur * xvr) - (xur * zvr);
     const nzr = (xur * yvr) - (yur * xvr);
-    const xfl = nxl - nxc;
-    const yfl = nyl - nyc;
-    const zfl = nzl - nzc;
-    bends[3] = ((xfl * xfl) + (yfl * yfl)) + (zfl * zfl);
-    const xfr = nxr - nxc;
-    const yfr = nyr - nyc;
-    const zfr = nzr - nzc;
-    bends[4] = ((xfr * xfr) + (yfr * yfr)) + (zfr * zfr);
+    const xfs1 = nxl - nxr;
+    const xgs1 = nxl + nxr;
+    const yfs1 = nyl - nyr;
+    const ygs1 = nyl + nyr;
+    const zfs1 = nzl - nzr;
+    const zgs1 = nzl + nzr;
+    const rs1 = ((xgs1 * xgs1) + (ygs1 * ygs1)) + (zgs1 * zgs1);
+    bends[2] = (((xfs1 * xfs1) + (yfs1 * yfs1)) + (zfs1 * zfs1)) / rs1;
+    const xfl = nxl - bends[6];
+    const xgl = nxl + bends[6];
+    const yfl = nyl - bends[7];
+    const ygl = nyl + bends[7];
+    const zfl = nzl - bends[8];
+    const zgl = nzl + bends[8];
+    const rl = ((xgl * xgl) + (ygl * ygl)) + (zgl * zgl);
+    bends[3] = (((xfl * xfl) + (yfl * yfl)) + (zfl * zfl)) / rl;
+    const xfr = nxr - bends[9];
+    const xgr = nxr + bends[9];
+    const yfr = nyr - bends[10];
+    const ygr = nyr + bends[10];
+    const zfr = nzr - bends[11];
+    const zgr = nzr + bends[11];
+    const rr = ((xgr * xgr) + (ygr * ygr)) + (zgr * zgr);
+    bends[4] = (((xfr * xfr) + (yfr * yfr)) + (zfr * zfr)) / rr;
+    const xh = ((((nxl + nxr) + bends[6]) + bends[9]) * (1 / 4)) - nxc;
+    const yh = ((((nyl + nyr) + bends[7]) + bends[10]) * (1 / 4)) - nyc;
+    const zh = ((((nzl + nzr) + bends[8]) + bends[11]) * (1 / 4)) - nzc;
+    bends[5] = ((xh * xh) + (yh * yh)) + (zh * zh);
   }
 }
 
@@ -567,7 +593,7 @@ export function bicubicTerms(p: Float64Array, _along: GaussRule, rule: GaussRule
   }
 }
 
-/** Puts the squares of a biquadratic patch's X_u × X_v in its middle and of its differences from that at the corners into `bends`. */
+/** Puts squares of a biquadratic patch's X_u × X_v and of how much it varies into `bends`. */
 export function biquadraticBends(p: Float64Array, bends: Float64Array): void {
   const u = 0;
   const u2 = u * u;
@@ -643,14 +669,20 @@ export function biquadraticBends(p: Float64Array, bends: Float64Array): void {
     const nxr = (yur * zvr) - (zur * yvr);
     const nyr = (zur * xvr) - (xur * zvr);
     const nzr = (xur * yvr) - (yur * xvr);
-    const xfl = nxl - nxc;
-    const yfl = nyl - nyc;
-    const zfl = nzl - nzc;
-    bends[1] = ((xfl * xfl) + (yfl * yfl)) + (zfl * zfl);
-    const xfr = nxr - nxc;
-    const yfr = nyr - nyc;
-    const zfr = nzr - nzc;
-    bends[2] = ((xfr * xfr) + (yfr * yfr)) + (zfr * zfr);
+    const xfs0 = nxl - nxr;
+    const xgs0 = nxl + nxr;
+    const yfs0 = nyl - nyr;
+    const ygs0 = nyl + nyr;
+    const zfs0 = nzl - nzr;
+    const zgs0 = nzl + nzr;
+    const rs0 = ((xgs0 * xgs0) + (ygs0 * ygs0)) + (zgs0 * zgs0);
+    bends[1] = (((xfs0 * xfs0) + (yfs0 * yfs0)) + (zfs0 * zfs0)) / rs0;
+    bends[6] = nxl;
+    bends[7] = nyl;
+    bends[8] = nzl;
+    bends[9] = nxr;
+    bends[10] = nyr;
+    bends[11] = nzr;
   }
   {
     const u = 1 * (1 / 2);
@@ -704,14 +736,34 @@ export function biquadraticBends(p: Float64Array, bends: Float64Array): void {
     const nxr = (yur * zvr) - (zur * yvr);
     const nyr = (zur * xvr) - (xur * zvr);
     const nzr = (xur * yvr) - (yur * xvr);
-    const xfl = nxl - nxc;
-    const yfl = nyl - nyc;
-    const zfl = nzl - nzc;
-    bends[3] = ((xfl * xfl) + (yfl * yfl)) + (zfl * zfl);
-    const xfr = nxr - nxc;
-    const yfr = nyr - nyc;
-    const zfr = nzr - nzc;
-    bends[4] = ((xfr * xfr) + (yfr * yfr)) + (zfr * zfr);
+    const xfs1 = nxl - nxr;
+    const xgs1 = nxl + nxr;
+    const yfs1 = nyl - nyr;
+    const ygs1 = nyl + nyr;
+    const zfs1 = nzl - nzr;
+    const zgs1 = nzl + nzr;
+    const rs1 = ((xgs1 * xgs1) + (ygs1 * ygs1)) + (zgs1 * zgs1);
+    bends[2] = (((xfs1 * xfs1) + (yfs1 * yfs1)) + (zfs1 * zfs1)) / rs1;
+    const xfl = nxl - bends[6];
+    const xgl = nxl + bends[6];
+    const yfl = nyl - bends[7];
+    const ygl = nyl + bends[7];
+    const zfl = nzl - bends[8];
+    const zgl = nzl + bends[8];
+    const rl = ((xgl * xgl) + (ygl * ygl)) + (zgl * zgl);
+    bends[3] = (((xfl * xfl) + (yfl * yfl)) + (zfl * zfl)) / rl;
+    const xfr = nxr - bends[9];
+    const xgr = nxr + bends[9];
+    const yfr = nyr - bends[10];
+    const ygr = nyr + bends[10];
+    const zfr = nzr - bends[11];
+    const zgr = nzr + bends[11];
+    const rr = ((xgr * xgr) + (ygr * ygr)) + (zgr * zgr);
+    bends[4] = (((xfr * xfr) + (yfr * yfr)) + (zfr * zfr)) / rr;
+    const xh = ((((nxl + nxr) + bends[6]) + bends[9]) * (1 / 4)) - nxc;
+    const yh = ((((nyl + nyr) + bends[7]) + bends[10]) * (1 / 4)) - nyc;
+    const zh = ((((nzl + nzr) + bends[8]) + bends[11]) * (1 / 4)) - nzc;
+    bends[5] = ((xh * xh) + (yh * yh)) + (zh * zh);
   }
 }
 
@@ -820,7 +872,7 @@ export function biquadraticTerms(p: Float64Array, _along: GaussRule, rule: Gauss
   }
 }
 
-/** Puts the squares of a triangle patch's X_u × X_v in its middle and of its differences from that at the corners into `bends`. */
+/** Puts squares of a triangle patch's X_u × X_v and of how much it varies into `bends`. */
 export function triangleBends(p: Float64Array, bends: Float64Array): void {
   const u = 0 - (1 * (1 / 6));
   const u2 = u * u;

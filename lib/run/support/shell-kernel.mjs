@@ -98,21 +98,37 @@ const LOOKS = {
   triangle: [['0 - 1 / 6', null], ['0 - 1 / 2', '1 / 2'], ['1 / 2', null]],
 };
 
-/** Squares of X_u × X_v in the middle, and of its differences from that at the corners, to `bends`. */
+/**
+ * To `bends`: the square of X_u × X_v in the middle; squares of how much it turns and stretches. A triangle has its differences at the corners from the middle.
+ * A square has those along each side, halved, relative to the side's mean, which is what a rule in that direction meets; and the corners' mean less the middle.
+ */
 function bendBlocks(dialect, shape) {
-  let corner = 0;
-  const difference = (t) => [
-    ...AXES.map((axis) => `let ${axis}f${t} = n${axis}${t} - n${axis}c`),
-    `bends[${++corner}] := ${AXES.map((axis) => `${axis}f${t} * ${axis}f${t}`).join(' + ')}`,
+  let at = 0;
+  const sumOfSquares = (write) => AXES.map((axis) => `${write(axis)} * ${write(axis)}`).join(' + ');
+  const difference = (t) => [...AXES.map((axis) => `let ${axis}f${t} = n${axis}${t} - n${axis}c`), `bends[${++at}] := ${sumOfSquares((axis) => `${axis}f${t}`)}`];
+  const along = (name, p, q) => [
+    ...AXES.flatMap((axis) => [`let ${axis}f${name} = ${p(axis)} - ${q(axis)}`, `let ${axis}g${name} = ${p(axis)} + ${q(axis)}`]),
+    `let r${name} = ${sumOfSquares((axis) => `${axis}g${name}`)}`,
+    `bends[${++at}] := (${sumOfSquares((axis) => `${axis}f${name}`)}) / r${name}`,
   ];
   const [first, ...others] = LOOKS[shape.name === 'triangle' ? 'triangle' : 'square'];
   const lineAt = (u) => [`let u = ${u}`, ...headless(shape.line(false))];
   const atMiddle = headless(middle(false));
   const whole = [...lineAt(first[0]), ...atMiddle, ...normal('m'), ...AXES.map((axis) => `let n${axis}c = n${axis}m`), `bends[0] := ${AXES.map((axis) => `n${axis}c * n${axis}c`).join(' + ')}`];
-  const block = ([u, v]) => v === null
-    ? [...lineAt(u), ...atMiddle, ...normal('m'), ...difference('m')]
-    : [...lineAt(u), `let v = ${v}`, ...headless(shape.pair(false)), ...side('l', '+', false), ...side('r', '-', false), ...normal('l'), ...normal('r'), ...difference('l'), ...difference('r')];
-  return `${lines(dialect, [...pruned([...whole, ...AXES.map((axis) => `bends[5] := n${axis}c`)]).slice(0, -3)], 1)}\n${others.map((look) => `  {\n${lines(dialect, pruned(block(look)), 2)}\n  }`).join('\n')}`;
+  const pairAt = (u, v) => [...lineAt(u), `let v = ${v}`, ...headless(shape.pair(false)), ...side('l', '+', false), ...side('r', '-', false), ...normal('l'), ...normal('r')];
+  /** The first side's two corners wait where nothing else stands. */
+  const kept = (tag, axis) => `bends[${6 + 3 * (tag === 'l' ? 0 : 1) + AXES.indexOf(axis)}]`;
+  const square = ([u, v], i) => {
+    const list = [...pairAt(u, v), ...along(`s${i}`, (axis) => `n${axis}l`, (axis) => `n${axis}r`)];
+    if (i === 0) return [...list, ...['l', 'r'].flatMap((t) => AXES.map((axis) => `${kept(t, axis)} := n${axis}${t}`))];
+    return [
+      ...list, ...['l', 'r'].flatMap((t) => along(t, (axis) => `n${axis}${t}`, (axis) => kept(t, axis))),
+      ...AXES.map((axis) => `let ${axis}h = (n${axis}l + n${axis}r + ${kept('l', axis)} + ${kept('r', axis)}) / 4 - n${axis}c`), `bends[${++at}] := ${sumOfSquares((axis) => `${axis}h`)}`,
+    ];
+  };
+  const triangle = ([u, v]) => v === null ? [...lineAt(u), ...atMiddle, ...normal('m'), ...difference('m')] : [...pairAt(u, v), ...difference('l'), ...difference('r')];
+  const block = shape.name === 'triangle' ? triangle : square;
+  return `${lines(dialect, [...pruned([...whole, ...AXES.map((axis) => `bends[5] := n${axis}c`)]).slice(0, -3)], 1)}\n${others.map((look, i) => `  {\n${lines(dialect, pruned(block(look, i)), 2)}\n  }`).join('\n')}`;
 }
 
 const linesOf = (shape) => [...shape.line(true), ...SECOND_LINES[shape.name]];
@@ -139,7 +155,7 @@ ${powersOf(shape)}
     ${shape.name}Bends(scratch, bends);
     input += ${16 * (shape.values + 3)};
     scratch += 768;
-    bends += 80;
+    bends += 192;
   }
 }
 
@@ -217,7 +233,7 @@ ${lines(scalar, toTotals(shellSums('m')), 1)}
 ${SHAPES.map((shape) => {
     const two = shape.alongNodes !== 'nodes';
     return `
-/** Puts the squares of a ${shape.name} patch's X_u × X_v in its middle and of its differences from that at the corners into \`bends\`. */
+/** Puts squares of a ${shape.name} patch's X_u × X_v and of how much it varies into \`bends\`. */
 export function ${shape.name}Bends(p: Float64Array, bends: Float64Array): void {
 ${bendBlocks(scalar, shape)}
 }
