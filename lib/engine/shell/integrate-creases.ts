@@ -14,6 +14,9 @@ const STRETCH_NODES: readonly (readonly [share: number, nodes: number, coarse: n
 /** Pieces of an edge from which on a bend across it counts: towards an extraordinary point it may grow without end, over a vanishing length. */
 const BEND_SHARE = 1 / 32;
 
+/** Walls as thick as this share of an edge are those that the estimate is made for. */
+const WALL_SHARE = 1 / 64;
+
 /** Stands for tan(θ/2) where two faces are folded onto each other. */
 const MOST_TANGENT = 1e6;
 
@@ -118,7 +121,12 @@ function addSide(side: SidePoint, ds: number, origins: Float64Array, body: numbe
   if (!side.settled) side.bend = 0;
   const length = ds * side.speed;
   const tangent = addMitre(side, length, shell);
-  if (!side.settled) shell.errors[2] += Math.abs(tangent * bend * (tangent / length) ** 2);
+  if (!side.settled) {
+    const cubic = Math.abs(tangent * bend * (tangent / length) ** 2);
+    // Where the bend grows without end its t³ bounds nothing: for walls of some thickness the whole mitre there, of t², does.
+    if (cubic * WALL_SHARE * side.speed > Math.abs(tangent)) shell.errors[1] += Math.abs(tangent);
+    else shell.errors[2] += cubic;
+  }
   return tangent;
 }
 

@@ -10,10 +10,13 @@ import { bicubicBends, bicubicTerms, biquadraticBends, biquadraticTerms, SHELL_T
 /** Pairs of patches that a kernel holds: few, so that what one pass leaves is still near for the next. */
 export const SHELL_PAIRS = 64;
 
-/** Doubles per pair and two lanes: squares of X_u × X_v in the middle and of how much it varies, as `bendVariation` reads them, and room to work in; the totals. */
+/** Doubles per pair and two lanes: squares of X_u × X_v in the middle and of how much it varies, as `bendVariation` reads them, and room to work in. */
 export const BENDS_STRIDE = 24;
+
 /** Doubles of a pair's powers. */
 export const POWERS_STRIDE = 96;
+
+/** Doubles of a pair's totals. */
 export const TOTALS_STRIDE = 2 * SHELL_TOTALS;
 
 /** A kernel of walls' terms over patches in pairs: first the bends, by which the caller sets `counts`, then the terms. */

@@ -25,11 +25,12 @@ export function ruleError(nodes: number, variation: number): number {
   return error;
 }
 
-/** How much more ∫ 2H and ∫ K err than areas do: their integrands have the second and third power of |X_u × X_v| below, whose series' coefficients grow so. */
+/** How much more ∫ 2H errs than areas do by so many nodes: the integrand has the second power of |X_u × X_v| below, whose series' coefficients grow so. */
 export function meanShare(nodes: number): number {
   return 2 * nodes + 1;
 }
 
+/** The same for ∫ K, with the third power. */
 export function gaussShare(nodes: number): number {
   return (nodes + 1) * (2 * nodes + 1);
 }
