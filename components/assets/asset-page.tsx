@@ -45,8 +45,8 @@ export function AssetPage({ frame, detail, actions, tellMe }: { frame: ShowFrame
         </div>
         <StateMark state={total.state} />
       </header>
-      <div className="grid min-h-0 flex-1 lg:grid-cols-[minmax(0,1fr)_22rem]">
-        <div className="flex min-h-0 min-w-0 flex-col lg:overflow-y-auto">
+      <div className="grid lg:min-h-0 lg:flex-1 lg:grid-cols-[minmax(0,1fr)_22rem]">
+        <div className="flex min-w-0 flex-col lg:min-h-0 lg:overflow-y-auto">
           <div className="flex h-[26rem] shrink-0 flex-col border-b border-rule lg:h-[min(36rem,58dvh)]">
             <PartViewer
               withRest
@@ -58,7 +58,7 @@ export function AssetPage({ frame, detail, actions, tellMe }: { frame: ShowFrame
               failure={mesh.isError ? mesh.error.message : null}
             />
           </div>
-          <section aria-label="Parts" className="shrink-0">
+          <section aria-label="Parts" className="shrink-0 overflow-x-auto">
             <AssetParts frame={frame} rows={parts} chosen={chosen} onChoose={setChosen} />
           </section>
           <section className="shrink-0 px-4 pt-6 pb-8 md:px-6">
@@ -97,7 +97,7 @@ export function AssetPage({ frame, detail, actions, tellMe }: { frame: ShowFrame
             />
           </Section>
           <WeightFacts of={total} unit={unit} />
-          <Section title="Telling">{tellMe}</Section>
+          <Section title="Mail">{tellMe}</Section>
         </aside>
       </div>
     </>

@@ -123,7 +123,7 @@ export function ShotPage({ frame, acts, shot, assets, actions, tellMe }: ShotPag
           <ShotSince since={shot.since} />
           <ShotPulls pulls={shot.pulls} />
           <ShotAssets show={frame.code} shot={shot} assets={assets} mayEdit={acts.may_edit} put={actions.put} remove={actions.remove} />
-          <Section title="Telling">{tellMe}</Section>
+          <Section title="Mail">{tellMe}</Section>
         </aside>
       </div>
       <UnlockDialog slots={act.asking?.kind === 'unlock' ? act.asking.slots : null} key={act.dialogKey('unlock')} shot={shot.code} busy={act.busy} refusal={act.refusal} onUnlock={act.unlock} onClose={act.stopAsking} />

@@ -35,7 +35,7 @@ export async function tellOfApprovals(tx: Transaction, acting: ActorContext, sho
     lines: [`${acting.actor.name} approved ${what} of ${show.title}.`, ...(note ? [`Note: ${note}`] : [])],
     list,
     ...partsLink(show.code, found),
-    why: 'You are told because you asked for it.',
+    why: found.some((one) => one.shot !== null) ? 'You are told because you asked for it or drafted it.' : 'You are told because you asked for it.',
   }));
 }
 
