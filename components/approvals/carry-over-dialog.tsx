@@ -85,7 +85,7 @@ export function CarryOverDialog({ show, onCarry, onClose }: CarryOverDialogProps
               {count === 0 ? 'Close' : 'Leave it'}
             </Button>
             {count === 0 ? null : (
-              <Button look="filled" disabled={busy} onClick={() => void carry(data.items)}>
+              <Button look="filled" autoFocus disabled={busy} onClick={() => void carry(data.items)}>
                 {count === 1 ? 'Carry one over' : `Carry ${count.toLocaleString('en')} over`}
               </Button>
             )}
