@@ -107,7 +107,7 @@ export const COLUMN_SPECS: readonly ColumnSpec[] = [
     id: 'name',
     label: 'Asset and part',
     name: 'Asset and part',
-    width: 184,
+    width: 160,
     grows: true,
     part: (node) => <PartName node={node} />,
     asset: (node) => <AssetName node={node} />,
@@ -138,7 +138,7 @@ export const COLUMN_SPECS: readonly ColumnSpec[] = [
     id: 'source',
     label: 'Mass from',
     name: 'Mass from',
-    width: 124,
+    width: 110,
     grows: true,
     part: ({ row }) => <SourceCell row={row} />,
     asset: ({ total }) => (
@@ -184,8 +184,7 @@ export const COLUMN_SPECS: readonly ColumnSpec[] = [
     id: 'locks',
     label: 'Locks',
     name: 'Shots that have it locked, and those out of date',
-    width: 72,
-    givesWay: 2,
+    width: 76,
     part: ({ row }, frame) => (
       <LocksCell show={frame.code} asset={row.asset} lockedIn={row.locked_in} outdatedIn={row.outdated_in} />
     ),

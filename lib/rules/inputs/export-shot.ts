@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import type { z } from 'zod';
 import { codeField } from '../fields';
 import { exportRowsInput } from './export-rows';
 
