@@ -58,7 +58,7 @@ export function AssetPage({ frame, detail, actions, tellMe }: { frame: ShowFrame
               failure={mesh.isError ? mesh.error.message : null}
             />
           </div>
-          <section aria-label="Parts" className="shrink-0 overflow-x-auto">
+          <section aria-label="Parts" className="shrink-0">
             <AssetParts frame={frame} rows={parts} chosen={chosen} onChoose={setChosen} />
           </section>
           <section className="shrink-0 px-4 pt-6 pb-8 md:px-6">

@@ -4,7 +4,8 @@ import { cn } from './cn';
 /** A plain table of a page; the parts table has its own virtual rows in the same dress. */
 export function Table({ className, ...props }: ComponentProps<'table'>) {
   return (
-    <div className="overflow-x-auto" tabIndex={0}>
+    // Words for the ear alone stand free of the flow: without a box of their own to stand in they would widen the page.
+    <div className="relative overflow-x-auto" tabIndex={0}>
       <table className={cn('w-full border-collapse text-14', className)} {...props} />
     </div>
   );
