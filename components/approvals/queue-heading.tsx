@@ -19,6 +19,7 @@ interface QueueHeadingProps {
 export function QueueHeading({ frame, targets, chosen, outdated, busy, acts }: QueueHeadingProps) {
   const able = targets.filter((row) => whyNotApprovable(row) === null).length;
   const approved = targets.length > 0 && targets.every((row) => row.value_id !== null);
+  const asks = targets.some((row) => row.request?.own);
   const several = chosen > 1 ? ` ${able.toLocaleString('en')}` : '';
   return (
     <PageHeading
@@ -29,8 +30,12 @@ export function QueueHeading({ frame, targets, chosen, outdated, busy, acts }: Q
             Compare
           </Button>
           {frame.may_ask && !frame.may_approve ? (
-            <Button look="filled" disabled={busy || approved || targets.length === 0} onClick={acts.ask}>
-              {targets.some((row) => row.request?.own)
+            <Button
+              look={asks ? 'outline' : 'filled'}
+              disabled={busy || approved || targets.length === 0}
+              onClick={acts.ask}
+            >
+              {asks
                 ? 'Take question back'
                 : `Ask for approval${chosen > 1 ? ` of ${chosen.toLocaleString('en')}` : ''}`}
             </Button>

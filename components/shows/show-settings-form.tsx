@@ -51,9 +51,9 @@ interface ShowSettingsFormProps {
 }
 
 const TOLERANCES = [
-  { name: 'tolerance_mass_percent', label: 'Mass', unit: '% of it' },
-  { name: 'tolerance_com_percent', label: 'Centre of mass', unit: '% of size' },
-  { name: 'tolerance_moments_percent', label: 'Inertia', unit: '% of it' },
+  { name: 'tolerance_mass_percent', label: 'The mass may move', unit: '%' },
+  { name: 'tolerance_com_percent', label: 'The centre of mass', unit: '% of size' },
+  { name: 'tolerance_moments_percent', label: 'The inertia', unit: '%' },
 ] as const;
 
 /** A typed percentage; with a comma for a point too. What is none is left for the schema to refuse. */
