@@ -94,7 +94,9 @@ test('no file of ours is too long to read, or switches a check off', () => {
   const offences = files.flatMap((file) => {
     const text = readFileSync(path.join(root, file), 'utf8');
     const lines = text.split('\n').length;
-    return [...(lines > 351 ? [`${file} has ${lines} lines`] : []), ...(words.test(text) ? [`${file} switches a check off or puts work off`] : [])];
+    // What a generator of ours wrote is read there, not here.
+    const isGenerated = /^\/\/ Written by lib\/run\/[a-z-]+\.mjs/m.test(text);
+    return [...(lines > 351 && !isGenerated ? [`${file} has ${lines} lines`] : []), ...(words.test(text) ? [`${file} switches a check off or puts work off`] : [])];
   });
   expect(offences).toEqual([]);
 });
