@@ -11,7 +11,9 @@ import { asOwner } from '../support/database';
 const MEMBERS: StatusOfCaller = { admin: 200, lead: 200, td: 200, artist: 200, guest: 404, outsider: 404, nobody: 401 };
 const TABLES = ['people_told', 'audit_events'];
 
-for (const [place, input] of [['a show', {}], ['a shot', { shot: 'fer_0010' }], ['an asset', { asset: 'crate' }]] as const) {
+const PLACES: Record<string, Record<string, string>> = { 'a show': {}, 'a shot': { shot: 'fer_0010' }, 'an asset': { asset: 'crate' } };
+
+for (const [place, input] of Object.entries(PLACES)) {
   eachCaller(`ask to be told of ${place}`, POST, MEMBERS, TABLES, async (caller) => {
     const cast = await createCrateShow();
     return { params: { show: cast.show.code }, body: { ...input, told: true }, token: cast.tokenOf(caller) };
