@@ -34,6 +34,11 @@ export type GltfDocument = z.infer<typeof gltfSchema>;
 /** Extensions without which the corners cannot be read. Others that a file requires change how it looks, not its shape. */
 const COMPRESSIONS = new Set(['KHR_draco_mesh_compression', 'EXT_meshopt_compression', 'KHR_meshopt_compression']);
 
+/** The schema's remark as other errors say it: "expected …, found …". */
+function inWords(message: string): string {
+  return message.replace(/^Invalid \w+: /, '').replace('received undefined', 'found nothing').replace('received', 'found').slice(0, 200);
+}
+
 /** Reads the JSON of a glTF file and keeps what concerns geometry. Errors: bad_json, bad_gltf (with the path of the property), compressed. */
 export function parseGltf(text: string): GltfDocument {
   let json: unknown;
@@ -45,7 +50,7 @@ export function parseGltf(text: string): GltfDocument {
   const parsed = gltfSchema.safeParse(json);
   if (!parsed.success) {
     const { path, message } = parsed.error.issues[0];
-    throw new MeshError({ code: 'bad_gltf', detail: `glTF ${path.length > 0 ? path.map(String).join('.') : 'document'}: ${message}` });
+    throw new MeshError({ code: 'bad_gltf', detail: `glTF ${path.length > 0 ? path.map(String).join('.') : 'document'}: ${inWords(message)}` });
   }
   const compressed = parsed.data.extensionsRequired?.find((extension) => COMPRESSIONS.has(extension));
   if (compressed) throw new MeshError({ code: 'compressed', expected: 'corners without compression', found: compressed, detail: `expected corners without compression, found ${compressed}: export the file without it` });

@@ -40,7 +40,8 @@ export class MeshError extends Error {
   constructor(fields: MeshErrorFields) {
     const place = fields.place ?? null;
     const offset = fields.offset ?? null;
-    const detail = offset === null ? fields.detail : `${fields.detail} (byte ${offset})`;
+    const clause = printable(fields.detail);
+    const detail = offset === null ? clause : `${clause} (byte ${offset})`;
     super(place ? `line ${place.line}, column ${place.column}: ${detail}` : detail);
     this.name = 'MeshError';
     this.code = fields.code;
@@ -61,11 +62,16 @@ export class MeshError extends Error {
   }
 }
 
+/** Words of a file get into messages: what would break a line of a log or a terminal is shown as the sign for what cannot be read. */
+function printable(text: string): string {
+  return text.replace(/[\u0000-\u001f\u007f-\u009f]/g, '\ufffd');
+}
+
 /** The line, cut to a window around the column, and a caret below it. Tabs become one blank so that the caret stays in step. */
 function caretExcerpt(place: TextPlace): string {
   // A line of megabytes is not taken apart: what is far before the column is never shown.
   const far = place.text.length > LONG_LINE ? Math.max(0, Math.min(place.column, place.text.length) - LONG_LINE) : 0;
-  const characters = Array.from(place.text.slice(far, far + 2 * LONG_LINE).replaceAll('\t', ' '));
+  const characters = Array.from(place.text.slice(far, far + 2 * LONG_LINE).replaceAll('\t', ' '), printable);
   const at = Math.min(place.column - 1 - far, characters.length);
   const from = Math.max(0, at - EXCERPT_BEFORE);
   const to = Math.min(characters.length, at + EXCERPT_AFTER);

@@ -24,11 +24,9 @@ export interface Archive {
   read(name: string): Promise<Uint8Array>;
 }
 
-/** A clause about an entry, whose name may be long or odd. */
+/** A clause about an entry, whose name may be long. */
 function bad(code: string, name: string, detail: string): MeshError {
-  // Names come from outside: control characters would break a line of a log or a terminal.
-  const shown = name.replace(/[\u0000-\u001f\u007f-\u009f]/g, '�');
-  return new MeshError({ code, found: shown.slice(0, 200), detail: `archive entry "${shown.length > 120 ? `${shown.slice(0, 120)}…` : shown}": ${detail}` });
+  return new MeshError({ code, found: name.slice(0, 200), detail: `archive entry "${name.length > 120 ? `${name.slice(0, 120)}…` : name}": ${detail}` });
 }
 
 /** Lists an archive's files after checking every entry. Errors: bad_archive, unsafe_name, link, encrypted, too_many_entries, too_large, bomb, duplicate. */
@@ -55,7 +53,7 @@ export async function openArchive(bytes: Uint8Array): Promise<Archive> {
 
 function broken(error: Error): MeshError {
   const unsafe = /relative path|absolute path|invalid characters in fileName/i.test(error.message);
-  const message = error.message.replace(/[\u0000-\u001f\u007f-\u009f]/g, '�').slice(0, 200);
+  const message = error.message.slice(0, 200);
   return new MeshError({ code: unsafe ? 'unsafe_name' : 'bad_archive', detail: unsafe ? `expected names within the archive: ${message}` : `the archive cannot be read: ${message}` });
 }
 
@@ -73,10 +71,11 @@ function listEntries(zip: ZipFile): Promise<Entry[]> {
 }
 
 function checkEntry(entry: Entry, unpacked: number): void {
-  const { fileName, compressedSize, uncompressedSize, externalFileAttributes, generalPurposeBitFlag } = entry;
+  const { fileName, fileNameRaw, compressedSize, uncompressedSize, externalFileAttributes, generalPurposeBitFlag } = entry;
   const { nameLength, totalBytes, ratio } = ARCHIVE_LIMITS;
   if (fileName.length > nameLength) throw bad('name_too_long', fileName, `expected a name of at most ${nameLength} characters, found ${fileName.length}`);
-  if (/[\u0000-\u001f\u007f]/.test(fileName)) throw bad('unsafe_name', fileName, 'expected a name without control characters');
+  // Old names show control bytes as pictures, so the bytes themselves are looked at.
+  if (fileNameRaw.some((byte) => byte < 0x20 || byte === 0x7f)) throw bad('unsafe_name', fileName, 'expected a name without control characters');
   if (((externalFileAttributes >>> 16) & KIND_OF_FILE) === LINK) throw bad('link', fileName, 'expected a file, found a link');
   if ((generalPurposeBitFlag & ENCRYPTED) !== 0) throw bad('encrypted', fileName, 'expected a file without a password');
   if (unpacked > totalBytes) throw bad('too_large', fileName, `expected at most ${totalBytes} bytes in all files of the archive, found more`);

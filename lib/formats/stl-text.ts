@@ -17,6 +17,8 @@ class StlTextReader {
   /** Vertices of the loop so far; -1 outside a loop. */
   private corners = -1;
   private loopLine = 0;
+  /** Between solid and endsolid: a file that ends there was cut off. */
+  private isOpen = false;
 
   read(bytes: Uint8Array): StlTriangles {
     const text = new TextLines((line, start, end, number, joints) => {
@@ -25,7 +27,7 @@ class StlTextReader {
     }, MOST_LINE_BYTES);
     text.push(bytes);
     text.end();
-    if (this.corners >= 0) throw this.cursor.fail('truncated', 'endloop before the end of the file', this.cursor.end);
+    if (this.corners >= 0 || this.isOpen) throw this.cursor.fail('truncated', `${this.corners >= 0 ? 'endloop' : 'endsolid'} before the end of the file`, this.cursor.end);
     return { positions: this.positions.take(), solids: this.solids.take(), lines: this.lines.take() };
   }
 
@@ -41,11 +43,13 @@ class StlTextReader {
       else if (WITHOUT_EFFECT.has(word)) {
         // What follows these words is a name or a normal, but for "outer loop".
         if (word !== 'outer' && word !== 'endfacet') cursor.at = cursor.end;
+        if (word === 'endsolid') this.isOpen = false;
       } else throw cursor.fail('bad_keyword', 'solid, facet, outer loop, vertex, endloop, endfacet or endsolid', at);
     }
   }
 
   private openSolid(at: number): void {
+    this.isOpen = true;
     const name = this.cursor.rest();
     const { names, nameLength } = MESH_LIMITS;
     if (name.length > nameLength) throw this.cursor.fail('name_too_long', `a name of at most ${nameLength} characters`, at);

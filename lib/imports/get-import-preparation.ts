@@ -4,10 +4,10 @@ import { assets } from '@/db/schema/assets';
 import { requireActor } from '@/lib/auth/require-actor';
 import { config } from '@/lib/config';
 import type { Context } from '@/lib/context';
+import { MESH_EXTENSIONS } from '@/lib/formats/mesh-extensions';
 import type { ImportPreparation } from '@/lib/rules/import-answer';
 import type { ImportPreparationInput } from '@/lib/rules/inputs/import-preparation';
 import { getShowAccess } from '@/lib/shows/get-show-access';
-import { CAGE_EXTENSIONS } from './cage-formats';
 
 /** What the import page has to know before anything goes up: how names are read, what the show has, and every limit. */
 export async function getImportPreparation(context: Context, input: ImportPreparationInput): Promise<ImportPreparation> {
@@ -29,7 +29,7 @@ export async function getImportPreparation(context: Context, input: ImportPrepar
     linear_unit: show.linearUnit,
     up_axis: show.upAxis,
     frozen: show.frozenAt !== null,
-    extensions: CAGE_EXTENSIONS,
+    extensions: [...MESH_EXTENSIONS],
     max_file_bytes: maxFileBytes,
     max_files: maxImportFiles,
     assets: known.map((one) => ({ ...one, versions: one.versions ?? [] })),

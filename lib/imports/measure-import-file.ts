@@ -12,6 +12,7 @@ import { endFile, lockHeldFile } from './end-file';
 import { findGeometryRecord, summariseRecord, writeGeometryRecord } from './geometry-record';
 import type { ImportRow } from './get-import-row';
 import { markMeasuring, startFile } from './lease';
+import { showSpace } from './show-space';
 import { unitRemarks } from './unit-remarks';
 import { writeVersion } from './write-version';
 
@@ -43,7 +44,7 @@ export async function measureImportFile(work: FileWork, fileId: string, plan: Pl
   const known = await findGeometryRecord(db, key);
   let cage: MeasuredCage | null = null;
   if (known === null) {
-    const outcome = await work.engine.measure({ name: file.name, ...key }, () => void markMeasuring(db, fileId, holder).catch(() => undefined));
+    const outcome = await work.engine.measure({ name: file.name, ...key, space: await showSpace(db, importRow.showId) }, () => void markMeasuring(db, fileId, holder).catch(() => undefined));
     if (!outcome.ok) return failFile(work, fileId, errorOf(file.name, outcome));
     cage = outcome.cage;
   }

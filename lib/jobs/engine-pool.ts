@@ -2,14 +2,13 @@ import { availableParallelism } from 'node:os';
 import { MessageChannel } from 'node:worker_threads';
 import { Piscina } from 'piscina';
 import { config } from '@/lib/config';
-import type { MeasureOptions } from '@/lib/engine/measured';
 import type { MeasureOutcome, MeasureTask } from './engine-thread';
 import { threadFile } from './thread-file';
 
 /** What measures files beside the event loop, so that heartbeats go on during a long solve. */
 export interface EnginePool {
   threads: number;
-  measure(file: { name: string; sha256: string; options: MeasureOptions }, onMeasuring?: () => void): Promise<MeasureOutcome>;
+  measure(file: Pick<MeasureTask, 'name' | 'sha256' | 'options' | 'space'>, onMeasuring?: () => void): Promise<MeasureOutcome>;
   close(): Promise<void>;
 }
 

@@ -2,7 +2,8 @@ import type { MessagePort } from 'node:worker_threads';
 import { measureCage } from '@/lib/engine/measure';
 import type { MeasuredCage, MeasureOptions } from '@/lib/engine/measured';
 import { MeshError } from '@/lib/formats/mesh-error';
-import { readCage } from '@/lib/imports/cage-formats';
+import { readMesh } from '@/lib/formats/read-mesh';
+import { refuseOtherSpace, type ShowSpace } from '@/lib/imports/refuse-other-space';
 import { readBlob } from '@/lib/storage/read-blob';
 import { LARGE_CAGE_FACES, withPatchHelpers } from './with-patch-helpers';
 
@@ -10,6 +11,8 @@ export interface MeasureTask {
   name: string;
   sha256: string;
   options: MeasureOptions;
+  /** The show's unit and up axis, which a file that states its own has to agree with. */
+  space: ShowSpace;
   /** Threads that nothing else was using when the task was given. */
   idleThreads: number;
   /** Told `measuring` once the file is read. */
@@ -24,7 +27,8 @@ export type MeasureOutcome =
 /** Reads and measures one file. Throws only where storage fails, which may pass. */
 export default async function measureFile(task: MeasureTask): Promise<MeasureOutcome> {
   try {
-    const cage = await readCage(task.name, await readBlob(task.sha256));
+    const cage = await readMesh(task.name, await readBlob(task.sha256));
+    refuseOtherSpace(cage, task.space);
     task.port?.postMessage('measuring');
     const isLarge = cage.faceStarts.length > LARGE_CAGE_FACES;
     const measured = withPatchHelpers(isLarge ? task.idleThreads : 0, () => measureCage(cage, { ...task.options, shells: true }));

@@ -3,7 +3,7 @@ import { writeFile } from 'node:fs/promises';
 import { displayMesh } from '@/lib/engine/display';
 import type { MeasureOptions } from '@/lib/engine/measured';
 import { assetGlb } from '@/lib/exports/asset-glb';
-import { readCage } from '@/lib/imports/cage-formats';
+import { readMesh } from '@/lib/formats/read-mesh';
 import { readBlob } from '@/lib/storage/read-blob';
 
 export interface MeshTask {
@@ -21,7 +21,7 @@ export interface MeshTask {
 
 /** Makes the display mesh of a stored cage as a GLB file; answers hash and size of its bytes. */
 export default async function makeMesh(task: MeshTask): Promise<{ sha256: string; byteSize: number }> {
-  const cage = await readCage(task.name, await readBlob(task.sha256));
+  const cage = await readMesh(task.name, await readBlob(task.sha256));
   const mesh = displayMesh(cage, task.options, task.level);
   const bytes = await assetGlb(cage, mesh, task.options.partsBy, task.metresPerUnit);
   await writeFile(task.path, bytes);

@@ -1,18 +1,20 @@
 import { parseArgs } from 'node:util';
-import { BOUNDARIES, CREASING_RULES, PARTITIONS, SCHEMES, TRIANGLE_RULES, type Boundary } from '../engine/cage';
+import { BOUNDARIES, CREASING_RULES, PARTITIONS, SCHEMES, TRIANGLE_RULES, type Boundary, type Scheme, type TriangleRule } from '../engine/cage';
 import type { MeasureOptions } from '../engine/measured';
+import { MESH_EXTENSIONS } from '../formats/mesh-extensions';
 import { LINEAR_UNITS, METRES_PER } from '../rules/units';
 
 export const USAGE = `Usage: npm run --silent measure -- [options] FILE…
 
-Prints volume, centre of mass and inertia of the limit surface of each OBJ file, one line a part.
+Prints volume, centre of mass and inertia of the limit surface of each mesh file, one line a part.
+Files: ${MESH_EXTENSIONS.map((extension) => `.${extension}`).join(' ')}. An OBJ takes skin weights from NAME.weights.csv beside it.
 
-  --scheme ${SCHEMES.join('|')}   (${SCHEMES[0]})
+  --scheme ${SCHEMES.join('|')}   (what the file asks for, else ${SCHEMES[0]})
   --boundary ${BOUNDARIES.join('|')}   what the file asks for, else ${BOUNDARIES[0]}
-  --triangles ${TRIANGLE_RULES.join('|')}   (${TRIANGLE_RULES[0]})
+  --triangles ${TRIANGLE_RULES.join('|')}   (what the file asks for, else ${TRIANGLE_RULES[0]})
   --creasing ${CREASING_RULES.join('|')}   (${CREASING_RULES[0]})
   --parts-by whole|group|object|material|piece|joint   (whole)
-  --unit ${LINEAR_UNITS.join('|')}   what one unit of the file is; an OBJ file does not say (m)
+  --unit ${LINEAR_UNITS.join('|')}   what one unit of the file is (what the file says, else m)
   --density KG_PER_M3   of every part (1000)
   --format json|csv   (json)
 
@@ -24,9 +26,10 @@ const FORMATS = ['json', 'csv'] as const;
 
 export interface MeasureArguments {
   files: string[];
-  /** The boundary rule is null where the command line leaves it to the file. */
-  options: Omit<MeasureOptions, 'boundary'> & { boundary: Boundary | null };
-  metresPerUnit: number;
+  /** Scheme, boundary and triangle rule are null where the command line leaves them to the file. */
+  options: Omit<MeasureOptions, 'scheme' | 'boundary' | 'triangles'> & { scheme: Scheme | null; boundary: Boundary | null; triangles: TriangleRule | null };
+  /** Null where the command line leaves it to the file. */
+  metresPerUnit: number | null;
   densityKgPerM3: number;
   format: (typeof FORMATS)[number];
 }
@@ -51,13 +54,13 @@ export function parseMeasureArguments(argv: string[]): MeasureArguments | null {
   return {
     files: positionals,
     options: {
-      scheme: choice('scheme', values.scheme, SCHEMES, 'catmull-clark'),
+      scheme: values.scheme === undefined ? null : choice('scheme', values.scheme, SCHEMES, 'catmull-clark'),
       boundary: values.boundary === undefined ? null : choice('boundary', values.boundary, BOUNDARIES, 'edge-and-corner'),
-      triangles: choice('triangles', values.triangles, TRIANGLE_RULES, 'catmark'),
+      triangles: values.triangles === undefined ? null : choice('triangles', values.triangles, TRIANGLE_RULES, 'catmark'),
       creasing: choice('creasing', values.creasing, CREASING_RULES, 'uniform'),
       partsBy: choice('parts-by', values['parts-by'], PARTITIONS, 'whole'),
     },
-    metresPerUnit: METRES_PER[choice('unit', values.unit, LINEAR_UNITS, 'm')],
+    metresPerUnit: values.unit === undefined ? null : METRES_PER[choice('unit', values.unit, LINEAR_UNITS, 'm')],
     densityKgPerM3: density,
     format: choice('format', values.format, FORMATS, 'json'),
   };

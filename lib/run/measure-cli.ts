@@ -1,9 +1,12 @@
-import { createReadStream } from 'node:fs';
 import { once } from 'node:events';
+import { createReadStream } from 'node:fs';
+import { readFile } from 'node:fs/promises';
+import path from 'node:path';
 import type { MeasuredCage } from '../engine/measured';
 import { measureCage } from '../engine/measure';
 import { MeshError } from '../formats/mesh-error';
-import { readObjStream } from '../formats/obj';
+import type { Beside } from '../formats/beside';
+import { readMesh } from '../formats/read-mesh';
 import { parseMeasureArguments, UsageError, USAGE, type MeasureArguments } from './measure-arguments';
 import { csvHeader, csvLine, measureRecord } from './measure-record';
 
@@ -43,12 +46,14 @@ export async function measureFiles(argv: string[], resolve: (file: string) => st
 }
 
 /** Prints a file's parts; false where the file or one of its parts has no numbers, which is then said on stderr. */
-async function measureFile(file: string, path: string, given: MeasureArguments): Promise<boolean> {
+async function measureFile(file: string, where: string, given: MeasureArguments): Promise<boolean> {
   let measured: MeasuredCage;
+  let metresPerUnit = 1;
   try {
-    const cage = await readObjStream(createReadStream(path, { highWaterMark: CHUNK_BYTES }));
+    const cage = await readMesh(file, createReadStream(where, { highWaterMark: CHUNK_BYTES }), besideOf(where));
+    metresPerUnit = given.metresPerUnit ?? cage.metresPerUnit ?? 1;
     for (const warning of cage.warnings) complain(file, warning.line, warning.column, `warning: ${warning.message}`);
-    measured = measureCage(cage, { ...given.options, boundary: given.options.boundary ?? cage.boundary ?? 'edge-and-corner' });
+    measured = measureCage(cage, { ...given.options, scheme: given.options.scheme ?? cage.scheme ?? 'catmull-clark', triangles: given.options.triangles ?? cage.triangles ?? 'catmark', boundary: given.options.boundary ?? cage.boundary ?? 'edge-and-corner' });
   } catch (error) {
     if (error instanceof MeshError) {
       complain(file, error.line, error.column, error.detail);
@@ -59,7 +64,7 @@ async function measureFile(file: string, path: string, given: MeasureArguments):
   }
   let complete = true;
   for (const part of measured.parts) {
-    const record = measureRecord({ file, part, findings: measured.findings, metresPerUnit: given.metresPerUnit, densityKgPerM3: given.densityKgPerM3 });
+    const record = measureRecord({ file, part, findings: measured.findings, metresPerUnit, densityKgPerM3: given.densityKgPerM3 });
     await print(given.format === 'csv' ? csvLine(record) : `${JSON.stringify(record)}\n`);
     if (record.volume !== null) continue;
     complete = false;
@@ -67,6 +72,21 @@ async function measureFile(file: string, path: string, given: MeasureArguments):
     for (const finding of blocking) complain(file, finding.places[0]?.line ?? null, null, `part ${part.name}: ${finding.message}`);
   }
   return complete;
+}
+
+/** Finds what lies in a file's own folder or below it: a glTF's buffers, an OBJ's weights. */
+function besideOf(file: string): Beside {
+  const folder = path.dirname(file);
+  return async (wanted) => {
+    const found = path.resolve(folder, wanted);
+    if (path.relative(folder, found).startsWith('..')) return null;
+    try {
+      return await readFile(found);
+    } catch (error) {
+      if (isSystemError(error)) return null;
+      throw error;
+    }
+  };
 }
 
 /** One line on stderr, `file:line:column: message`, as editors and build tools understand it; 1:1 stands for the whole file. */
