@@ -37,7 +37,7 @@ async function approveOx(lead: Page, state: 'asked' | 'outdated'): Promise<strin
   await expect(queue.getByRole('row').nth(2)).toBeVisible();
   await queue.focus();
   await lead.keyboard.press('End');
-  const last = queue.getByRole('row').filter({ hasText: 'torso' });
+  const last = queue.locator('[data-key="tarnOx/torso"]');
   await expect(last).toBeVisible();
   const text = await last.innerText();
   await lead.keyboard.press('Shift+A');
