@@ -117,7 +117,7 @@ describe('a new version', () => {
     await setTold(cast.contextOf('lead'), { show: cast.show.code, told: true });
     // Of a size that no other test has measured.
     let away = true;
-    const engine: typeof ownThread = { measure: (file, onMeasuring) => (away && file.name.startsWith('rope') ? Promise.resolve({ ok: false, code: 'unreadable', message: 'cannot be read', line: null, column: null }) : ownThread.measure(file, onMeasuring)) };
+    const engine: typeof ownThread = { measure: (file, onMeasuring) => (away && file.name.startsWith('rope') ? Promise.resolve({ ok: false, code: 'unreadable', message: 'cannot be read', line: null, column: null, excerpt: null }) : ownThread.measure(file, onMeasuring)) };
     const { openWith } = await import('../support/imports');
     const { submitImport } = await import('@/lib/imports/submit-import');
     const id = await openWith(cast.contextOf('td'), cast.show.code, { 'ox_v002.obj': HEAVIER, 'rope_v002.obj': boxesObj({ rope: [1, 1, 7] }) }, { scheme: 'polyhedral' });
