@@ -27,7 +27,9 @@ export function oneLabel(name: string, faces: number): FaceLabels {
 
 /** Row starts of faces that all have the same number of corners; length `faces` + 1. */
 export function evenStarts(faces: number, corners: number): Uint32Array {
-  return Uint32Array.from({ length: faces + 1 }, (_, face) => face * corners);
+  const starts = new Uint32Array(faces + 1);
+  for (let face = 1; face <= faces; face++) starts[face] = face * corners;
+  return starts;
 }
 
 /** A warning about the file as a whole. */

@@ -138,8 +138,8 @@ class CrateReader {
       if (!(pathOf[i] >= 0 && pathOf[i] < this.paths.names.length) || setOf[i] < 0) throw reader.fail('bad_index', `one of ${this.paths.names.length} paths`, pathOf[i], reader.at);
       if (kindOf[i] === PSEUDO_ROOT) this.readStage(layer, this.fieldsOf(setOf[i]));
       else if (kindOf[i] === PRIM) prims.set(pathOf[i], this.readPrim(pathOf[i], this.fieldsOf(setOf[i])));
+      if (prims.size > MOST_USD_PRIMS) throw reader.fail('too_large', `at most ${MOST_USD_PRIMS} prims`, 'more', reader.at);
     }
-    if (prims.size > MOST_USD_PRIMS) throw reader.fail('too_large', `at most ${MOST_USD_PRIMS} prims`, prims.size, reader.at);
     for (const [path, prim] of prims) {
       const above = this.paths.parent[path];
       if (above >= 0 && this.paths.names[above] === '') layer.root.push(prim);

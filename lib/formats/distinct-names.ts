@@ -1,10 +1,14 @@
 /** The names with " 2", " 3" … behind those that came before, so that no two things fall into one part; empty ones become `fallback` and their number. */
 export function distinctNames(names: readonly string[], fallback: string): string[] {
   const taken = new Set<string>();
+  const last = new Map<string, number>();
   return names.map((name, i) => {
     const base = name.trim() === '' ? `${fallback} ${i + 1}` : name.trim();
     let distinct = base;
-    for (let n = 2; taken.has(distinct); n++) distinct = `${base} ${n}`;
+    let n = last.get(base) ?? 1;
+    // Goes on from the last number given, so that thousands of equal names are no work.
+    while (taken.has(distinct)) distinct = `${base} ${++n}`;
+    last.set(base, n);
     taken.add(distinct);
     return distinct;
   });

@@ -2,6 +2,7 @@ import type { Beside } from './beside';
 import { checkGltf } from './check-gltf';
 import { parseGltf, type GltfDocument } from './gltf-document';
 import { MeshError } from './mesh-error';
+import { MOST_TEXT_BYTES } from './mesh-limits';
 import { decodeText, detectTextStart } from './text-encoding';
 
 const MAGIC = 0x46546c67;
@@ -23,6 +24,7 @@ export function isGlb(bytes: Uint8Array): boolean {
 /** The document of a GLB or glTF file with the bytes of its buffers, checked. Errors: MeshError, with the byte in a GLB's frame, else with the JSON's path. */
 export async function openGltf(bytes: Uint8Array, beside: Beside): Promise<{ document: GltfDocument; buffers: Uint8Array[] }> {
   const { json, binary } = isGlb(bytes) ? splitGlb(bytes) : { json: bytes.subarray(detectTextStart(bytes).skip), binary: null };
+  if (json.length > MOST_TEXT_BYTES) throw new MeshError({ code: 'too_large', expected: `at most ${MOST_TEXT_BYTES} bytes of JSON`, detail: `expected at most ${MOST_TEXT_BYTES} bytes of JSON, found ${json.length}: save it as .glb` });
   const document = parseGltf(decodeText(json));
   const buffers: Uint8Array[] = [];
   for (const [i, buffer] of (document.buffers ?? []).entries()) buffers.push(await bufferBytes(buffer.uri, i, binary, beside));

@@ -6,6 +6,9 @@ const index = z.int().min(0);
 const name = z.string().max(MESH_LIMITS.nameLength).optional();
 const numbers = (length: number) => z.array(z.number()).length(length).optional();
 
+/** Each may be a file beside the document, which is then held. */
+const MOST_BUFFERS = 64;
+
 /** What of a glTF file says something about geometry; everything else (images, animations, extensions) is dropped unread. */
 const gltfSchema = z.object({
   asset: z.object({ version: z.string().regex(/^2\.\d+$/) }),
@@ -25,7 +28,7 @@ const gltfSchema = z.object({
     sparse: z.object({ count: z.int().min(1), indices: z.object({ bufferView: index, byteOffset: index.optional(), componentType: z.union([z.literal(5121), z.literal(5123), z.literal(5125)]) }), values: z.object({ bufferView: index, byteOffset: index.optional() }) }).optional(),
   })).optional(),
   bufferViews: z.array(z.object({ buffer: index, byteOffset: index.optional(), byteLength: z.int().min(1), byteStride: z.int().min(4).max(252).optional() })).optional(),
-  buffers: z.array(z.object({ uri: z.string().optional(), byteLength: z.int().min(1) })).optional(),
+  buffers: z.array(z.object({ uri: z.string().optional(), byteLength: z.int().min(1) })).max(MOST_BUFFERS).optional(),
   extensionsRequired: z.array(z.string()).optional(),
 });
 

@@ -1,5 +1,5 @@
 import { Logger, Verbosity, WebIO, type Accessor } from '@gltf-transform/core';
-import type { Cage, FormatWarning } from '../engine/cage';
+import type { Cage } from '../engine/cage';
 import { bareCage, evenStarts, fileNote, oneLabel, trianglesOnlyNote } from './bare-cage';
 import type { Beside } from './beside';
 import { checkCoordinates } from './check-coordinates';
@@ -39,12 +39,12 @@ export async function readGltf(bytes: Uint8Array, beside: Beside): Promise<Cage>
   const cages = withMesh.flatMap((node, i) => readNode(scene, node, names[i]));
   if (cages.length === 0) throw new MeshError({ code: 'no_faces', expected: 'a triangle', detail: 'expected at least one triangle in the scene, found none' });
   const merged = mergeCages(cages);
-  return { ...merged, metresPerUnit: 1, upAxis: 'y', warnings: [trianglesOnlyNote('glTF'), ...sumNotes(merged.warnings)] };
+  return { ...merged, metresPerUnit: 1, upAxis: 'y', warnings: [trianglesOnlyNote('glTF'), ...merged.warnings] };
 }
 
-/** One warning a kind: a scene of a thousand meshes says a thing once. */
-function sumNotes(warnings: FormatWarning[]): FormatWarning[] {
-  return warnings.filter((warning, i) => warnings.findIndex((other) => other.code === warning.code) === i);
+/** The decoder lays arrays of floats over the bytes, which therefore have to begin at a multiple of four. */
+function aligned(buffer: Uint8Array): Uint8Array<ArrayBuffer> {
+  return buffer.byteOffset % 4 === 0 && buffer.buffer instanceof ArrayBuffer ? new Uint8Array(buffer.buffer, buffer.byteOffset, buffer.byteLength) : new Uint8Array(buffer);
 }
 
 async function decodeAccessors(document: GltfDocument, buffers: Uint8Array[]): Promise<Accessor[]> {
@@ -55,7 +55,7 @@ async function decodeAccessors(document: GltfDocument, buffers: Uint8Array[]): P
     bufferViews: document.bufferViews ?? [],
     accessors: document.accessors ?? [],
   };
-  const resources = Object.fromEntries(buffers.map((buffer, i) => [`buffer${i}`, new Uint8Array(buffer)]));
+  const resources = Object.fromEntries(buffers.map((buffer, i) => [`buffer${i}`, aligned(buffer)]));
   try {
     const decoded = await io.readJSON({ json, resources });
     return decoded.getRoot().listAccessors();

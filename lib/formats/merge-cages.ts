@@ -1,6 +1,7 @@
-import type { Cage, FaceLabels } from '../engine/cage';
+import type { Cage, FaceLabels, FormatWarning } from '../engine/cage';
 import { MeshError } from './mesh-error';
 import { MESH_LIMITS } from './mesh-limits';
+import { WARNINGS_KEPT } from './warning-list';
 
 type LabelKind = 'groups' | 'objects' | 'materials' | 'joints';
 
@@ -40,8 +41,13 @@ export function mergeCages(cages: Cage[]): Cage {
     faceLines: null,
     metresPerUnit: first.metresPerUnit,
     upAxis: first.upAxis,
-    warnings: cages.flatMap((cage) => cage.warnings),
+    warnings: keepWarnings(cages.flatMap((cage) => cage.warnings)),
   };
+}
+
+/** Each sentence once, and not more than a reader takes in. */
+function keepWarnings(warnings: FormatWarning[]): FormatWarning[] {
+  return [...new Map(warnings.map((warning) => [`${warning.code} ${warning.message}`, warning])).values()].slice(0, WARNINGS_KEPT);
 }
 
 function bound(kind: 'vertices' | 'faces' | 'corners', found: number): void {

@@ -35,6 +35,7 @@ export async function readMeshArchive(bytes: Uint8Array, name: string): Promise<
 
 async function readEntry(archive: Archive, mesh: string): Promise<Cage> {
   const folder = mesh.slice(0, mesh.lastIndexOf('/') + 1);
+  const held = new Map<string, Promise<Uint8Array>>();
   const beside: Beside = async (path) => {
     const parts: string[] = [];
     for (const part of `${folder}${path}`.split('/')) {
@@ -42,7 +43,9 @@ async function readEntry(archive: Archive, mesh: string): Promise<Cage> {
       else if (part !== '.' && part !== '') parts.push(part);
     }
     const entry = parts.join('/');
-    return archive.names.includes(entry) ? archive.read(entry) : null;
+    if (!archive.names.includes(entry)) return null;
+    if (!held.has(entry)) held.set(entry, archive.read(entry));
+    return held.get(entry)!;
   };
   try {
     return await readMeshBytes(mesh, await archive.read(mesh), beside);

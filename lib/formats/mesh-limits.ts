@@ -19,6 +19,8 @@ export const MESH_LIMITS: MeshLimits = {
 
 /** Formats that cannot be read as a stream are held whole; this is the most that one of them may have. */
 export const MOST_FILE_BYTES = 1 << 30;
+/** A text that has to be one string in memory, beside the numbers read from it. */
+export const MOST_TEXT_BYTES = 256 * 1024 * 1024;
 export const MOST_LINE_BYTES = 4 * 1024 * 1024;
 /** Beyond this the second moments of a solid leave the range of a double. */
 export const MAX_COORDINATE = 1e50;

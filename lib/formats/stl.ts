@@ -38,8 +38,7 @@ export function readStl(bytes: Uint8Array): Cage {
   const triangles = !isBinaryStl(bytes) && beginsLikeText(bytes) ? readStlText(bytes) : readBinary(bytes);
   const count = triangles.positions.length / 9;
   if (count === 0) throw new MeshError({ code: 'no_faces', expected: 'a triangle', detail: 'expected at least one triangle, found none' });
-  const corners = Uint32Array.from({ length: 3 * count }, (_, i) => i);
-  const welded = weldTriangles(triangles.positions, corners);
+  const welded = weldTriangles(triangles.positions, evenStarts(3 * count - 1, 1));
   const faces = welded.faceOf.length;
   if (faces === 0) throw new MeshError({ code: 'no_faces', expected: 'a triangle', detail: `expected at least one triangle with three different corners, found none among ${count}` });
   const solids = triangles.solids && { names: triangles.solids.names, labels: welded.faceOf.map((face) => triangles.solids!.labels[face]) };

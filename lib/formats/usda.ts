@@ -1,11 +1,9 @@
 import type { Cage } from '../engine/cage';
 import { MeshError } from './mesh-error';
+import { MOST_TEXT_BYTES } from './mesh-limits';
 import { decodeText, detectTextStart } from './text-encoding';
 import { readUsdMeshes } from './usd-meshes';
 import { parseUsda } from './usda-layer';
-
-/** A text is held at once with the numbers read from it; larger layers come as crates. */
-const MOST_TEXT_BYTES = 256 * 1024 * 1024;
 
 /** Reads the meshes of a `.usda` layer, see `readUsdMeshes`. Errors: MeshError with line and column, or the prim's path. */
 export function readUsda(bytes: Uint8Array): Cage {

@@ -1,7 +1,7 @@
 import type { FormatWarning } from '../engine/cage';
 import type { TextPlace } from './mesh-error';
 
-const WARNINGS_KEPT = 50;
+export const WARNINGS_KEPT = 50;
 
 /** Warnings of one file: the first of each kind, at most fifty. */
 export class WarningList {

@@ -17,7 +17,9 @@ export function weldTriangles(positions: Float64Array, corners: Uint32Array): We
   const faceVertices = growingUint32();
   const faceOf = growingInt32();
   for (let face = 0; 3 * face < corners.length; face++) {
-    const [a, b, c] = [0, 1, 2].map((k) => welded.into[corners[3 * face + k]]);
+    const a = welded.into[corners[3 * face]];
+    const b = welded.into[corners[3 * face + 1]];
+    const c = welded.into[corners[3 * face + 2]];
     if (a === b || b === c || c === a) continue;
     faceVertices.push(a);
     faceVertices.push(b);

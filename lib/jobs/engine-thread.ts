@@ -3,6 +3,7 @@ import { measureCage } from '@/lib/engine/measure';
 import type { MeasuredCage, MeasureOptions } from '@/lib/engine/measured';
 import { MeshError } from '@/lib/formats/mesh-error';
 import { readMesh } from '@/lib/formats/read-mesh';
+import { askedOtherwise } from '@/lib/imports/asked-otherwise';
 import { refuseOtherSpace, type ShowSpace } from '@/lib/imports/refuse-other-space';
 import { readBlob } from '@/lib/storage/read-blob';
 import { LARGE_CAGE_FACES, withPatchHelpers } from './with-patch-helpers';
@@ -32,7 +33,7 @@ export default async function measureFile(task: MeasureTask): Promise<MeasureOut
     task.port?.postMessage('measuring');
     const isLarge = cage.faceStarts.length > LARGE_CAGE_FACES;
     const measured = withPatchHelpers(isLarge ? task.idleThreads : 0, () => measureCage(cage, { ...task.options, shells: true }));
-    const notes = cage.warnings.map((warning) => ({
+    const notes = [...askedOtherwise(cage, task.options), ...cage.warnings].map((warning) => ({
       code: warning.code,
       severity: 'note' as const,
       message: warning.message,

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { askedOtherwise } from '@/lib/imports/asked-otherwise';
 import { refuseOtherSpace } from '@/lib/imports/refuse-other-space';
 import { METRES_PER } from '@/lib/rules/units';
 import { failureOf } from '../support/read-cages';
@@ -16,5 +17,18 @@ describe('a file that states its unit or up axis', () => {
   it('is refused where it does not, with both said', () => {
     expect(failureOf(() => refuseOtherSpace({ metresPerUnit: 1, upAxis: 'y' }, show))).toMatchObject({ code: 'units_disagree', found: '1', expected: '0.01 metres per unit' });
     expect(failureOf(() => refuseOtherSpace({ metresPerUnit: 0.01, upAxis: 'z' }, show))).toMatchObject({ code: 'axis_disagrees', found: 'Z', expected: 'Y' });
+  });
+});
+
+describe('a file that asks for another subdivision', () => {
+  const options = { scheme: 'catmull-clark', boundary: 'edge-and-corner', triangles: 'catmark', creasing: 'uniform', partsBy: 'whole' } as const;
+
+  it('is told so, and nothing else is said', () => {
+    expect(askedOtherwise({ scheme: 'catmull-clark', boundary: 'edge-and-corner', triangles: 'catmark' }, options)).toEqual([]);
+    expect(askedOtherwise({ boundary: null }, options)).toEqual([]);
+    expect(askedOtherwise({ scheme: 'loop', boundary: 'edge-only' }, options).map((warning) => warning.code)).toEqual(['scheme_differs']);
+    const [boundary, triangles] = askedOtherwise({ scheme: 'catmull-clark', boundary: 'edge-only', triangles: 'smooth' }, options);
+    expect(boundary.message).toBe('The file asks for the boundary edge-only; it was measured under edge-and-corner.');
+    expect(triangles.code).toBe('triangles_differ');
   });
 });
