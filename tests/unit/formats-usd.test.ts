@@ -227,7 +227,7 @@ describe('USD crate', () => {
 
   it('finds in a crate what three’s parser finds', () => {
     const bytes = writeCrate(STAGE);
-    const specs = new USDCParser().parseData(bytes.slice().buffer).specsByPath as Record<string, { fields: Record<string, unknown> }>;
+    const specs = new USDCParser().parseData(bytes.slice().buffer).specsByPath;
     const value = (path: string) => Array.from(specs[path].fields.default as ArrayLike<number>);
     expect(value('/geo/crate.points')).toEqual(POINTS.flat());
     expect(value('/geo/crate.faceVertexIndices')).toEqual(QUADS.flat());
