@@ -1,3 +1,3 @@
 import { freePort } from './support/free-port.mjs';
 
-console.log(await freePort());
+process.stdout.write(`${await freePort()}\n`);
