@@ -132,7 +132,7 @@ class CrateReader {
     const count = this.entries('specs');
     if (count > this.paths.names.length) throw reader.fail('bad_count', `at most one spec for each of ${this.paths.names.length} paths`, count, reader.at - 8);
     const [pathOf, setOf, kindOf] = ['paths of specs', 'field sets of specs', 'kinds of specs'].map((what) => reader.integers(count, what));
-    const layer: UsdLayer = { root: [], metersPerUnit: null, upAxis: null, subLayers: [] };
+    const layer: UsdLayer = { root: [], metersPerUnit: null, upAxis: null, defaultPrim: null, subLayers: [] };
     const prims = new Map<number, UsdPrim>();
     for (let i = 0; i < count; i++) {
       if (!(pathOf[i] >= 0 && pathOf[i] < this.paths.names.length) || setOf[i] < 0) throw reader.fail('bad_index', `one of ${this.paths.names.length} paths`, pathOf[i], reader.at);
@@ -163,6 +163,7 @@ class CrateReader {
       relationships: new Map(),
       active: this.value(fields, 'active') !== false,
       arcs: ARCS.filter((arc) => fields.has(arc)),
+      references: [],
       children: [],
     };
   }
@@ -182,6 +183,8 @@ class CrateReader {
     const axis = this.value(fields, 'upAxis');
     if (typeof metres === 'number') layer.metersPerUnit = metres;
     if (axis === 'Y' || axis === 'Z') layer.upAxis = axis === 'Y' ? 'y' : 'z';
+    const defaultPrim = this.value(fields, 'defaultPrim');
+    if (typeof defaultPrim === 'string') layer.defaultPrim = defaultPrim;
     if (fields.has('subLayers')) layer.subLayers = ['subLayers'];
   }
 

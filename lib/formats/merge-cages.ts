@@ -12,10 +12,8 @@ type LabelKind = 'groups' | 'objects' | 'materials' | 'joints';
  */
 export function mergeCages(cages: Cage[]): Cage {
   if (cages.length === 1) return cages[0];
-  const total = (size: (cage: Cage) => number) => cages.reduce((sum, cage) => sum + size(cage), 0);
-  bound('vertices', total((cage) => cage.positions.length / 3));
-  bound('faces', total((cage) => cage.faceStarts.length - 1));
-  bound('corners', total((cage) => cage.faceVertices.length));
+  const totals = new CageTotals();
+  for (const cage of cages) totals.add(cage);
   const first = cages[0];
   const shared = <T>(values: (T | null | undefined)[]): T | null => {
     const named = new Set(values.filter((value): value is T => value !== null && value !== undefined));
@@ -43,6 +41,19 @@ export function mergeCages(cages: Cage[]): Cage {
     upAxis: first.upAxis,
     warnings: keepWarnings(cages.flatMap((cage) => cage.warnings)),
   };
+}
+
+/** Sums up cages that are to be one, and refuses the one that makes them too many. Errors: too_many_vertices, too_many_faces, too_many_corners. */
+export class CageTotals {
+  private vertices = 0;
+  private faces = 0;
+  private corners = 0;
+
+  add(cage: Cage): void {
+    bound('vertices', (this.vertices += vertexShift(cage)));
+    bound('faces', (this.faces += faceShift(cage)));
+    bound('corners', (this.corners += cage.faceVertices.length));
+  }
 }
 
 /** Each sentence once, and not more than a reader takes in. */

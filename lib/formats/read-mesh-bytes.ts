@@ -13,7 +13,7 @@ const READERS: Record<Exclude<MeshKind, 'archive'>, (bytes: Uint8Array, beside: 
   stl: async (bytes) => (await import('./stl')).readStl(bytes),
   glb: async (bytes, beside) => (await import('./gltf')).readGltf(bytes, beside),
   gltf: async (bytes, beside) => (await import('./gltf')).readGltf(bytes, beside),
-  usda: async (bytes) => (await import('./usda')).readUsda(bytes),
+  usda: async (bytes, beside) => (await import('./usda')).readUsda(bytes, beside),
   usdc: async (bytes) => (await import('./usdc')).readUsdc(bytes),
 };
 

@@ -1,6 +1,7 @@
 import type { Cage } from '../engine/cage';
 import { NOTHING_BESIDE, type Beside } from './beside';
 import { detectMeshKind, MAGIC_BYTES } from './detect-mesh-kind';
+import { joinBytes } from './join-bytes';
 import { MeshError } from './mesh-error';
 import { MOST_FILE_BYTES } from './mesh-limits';
 import { readObjStream } from './obj';
@@ -23,7 +24,7 @@ export async function readMesh(name: string, chunks: AsyncIterable<Uint8Array>, 
   }
   const whole = resume(head, iterator);
   try {
-    const kind = detectMeshKind(name, concat(head));
+    const kind = detectMeshKind(name, joinBytes(head));
     if (kind === 'obj') return await withJointsBeside(await readObjStream(whole), name, beside);
     const bytes = await collect(whole);
     if (kind === 'archive') return await (await import('./mesh-archive')).readMeshArchive(bytes, name);
@@ -49,18 +50,7 @@ async function collect(chunks: AsyncIterable<Uint8Array>): Promise<Uint8Array> {
     if (length > MOST_FILE_BYTES) throw new MeshError({ code: 'too_large', expected: `at most ${MOST_FILE_BYTES} bytes`, detail: `expected at most ${MOST_FILE_BYTES} bytes, found more; only OBJ files may be larger`, offset: MOST_FILE_BYTES });
     pieces.push(chunk);
   }
-  return concat(pieces);
-}
-
-function concat(pieces: Uint8Array[]): Uint8Array {
-  if (pieces.length === 1) return pieces[0];
-  const joined = new Uint8Array(pieces.reduce((sum, piece) => sum + piece.length, 0));
-  let at = 0;
-  for (const piece of pieces) {
-    joined.set(piece, at);
-    at += piece.length;
-  }
-  return joined;
+  return joinBytes(pieces);
 }
 
 /** A size that the machine has no room for is the file's fault as well. */

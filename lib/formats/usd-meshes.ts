@@ -3,11 +3,11 @@ import { fileNote, oneLabel } from './bare-cage';
 import { checkCoordinates } from './check-coordinates';
 import { shortNames } from './distinct-names';
 import { IDENTITY, isIdentity, mirrors, multiply, reverseFaces, transformPoints, type Matrix } from './matrix';
-import { mergeCages } from './merge-cages';
+import { CageTotals, mergeCages } from './merge-cages';
 import { MeshError } from './mesh-error';
 import { groupLabels, jointLabels, jointsOf, materialLabels, nameOfPath, readSubsets } from './usd-labels';
 import { usdPolygons } from './usd-polygons';
-import { numbersOf, textOf, type UsdLayer, type UsdPrim } from './usd-prim';
+import { MOST_USD_PRIMS, numbersOf, textOf, type UsdLayer, type UsdPrim } from './usd-prim';
 import { primTransform } from './usd-transform';
 
 /** What a prim hands down to those below it. */
@@ -34,6 +34,7 @@ const EXTENT_SLACK = 0.01;
 class UsdScene {
   readonly found: Found[] = [];
   readonly notes = new Map<string, FormatWarning>();
+  private visited = 0;
   private byPath: Map<string, UsdPrim> | null = null;
 
   constructor(private readonly layer: UsdLayer) {}
@@ -49,6 +50,7 @@ class UsdScene {
   }
 
   private visit(prim: UsdPrim, above: Inherited): void {
+    if (++this.visited > MOST_USD_PRIMS) throw new MeshError({ code: 'too_large', expected: `at most ${MOST_USD_PRIMS} prims`, detail: `expected at most ${MOST_USD_PRIMS} prims in the scene, found more` });
     const path = `${above.path}/${prim.name}`;
     if (prim.specifier !== 'def' || !prim.active) return;
     if (prim.arcs.length > 0) this.note('not_composed', `Left out what ${path} brings in by ${prim.arcs.join(', ')}: only what the file itself holds is read.`);
@@ -81,6 +83,8 @@ function indexPrims(root: UsdPrim[]): Map<string, UsdPrim> {
   const found = new Map<string, UsdPrim>();
   const add = (prims: UsdPrim[], above: string) => {
     for (const prim of prims) {
+      // What is referred to a thousand times over is not indexed to the end; names beyond are simply not found.
+      if (found.size > MOST_USD_PRIMS) return;
       found.set(`${above}/${prim.name}`, prim);
       add(prim.children, `${above}/${prim.name}`);
     }
@@ -97,7 +101,15 @@ export function readUsdMeshes(layer: UsdLayer): Cage {
   const scene = new UsdScene(layer);
   scene.walk();
   const names = shortNames(scene.found.map((one) => one.path.slice(1)));
-  const cages = scene.found.map((one, i) => readMesh(scene, one, names[i])).filter((cage) => cage !== null);
+  const cages: Cage[] = [];
+  const held = new CageTotals();
+  for (const [i, one] of scene.found.entries()) {
+    const cage = readMesh(scene, one, names[i]);
+    if (!cage) continue;
+    // References may place one mesh many thousand times, so the sum is held as it grows.
+    held.add(cage);
+    cages.push(cage);
+  }
   if (cages.length === 0) throw new MeshError({ code: 'no_faces', expected: 'a mesh', detail: `expected at least one mesh with faces in the layer, found none${scene.notes.has('not_composed') ? ': what it brings in from other layers is not read' : ''}` });
   if (new Set(cages.map((cage) => cage.scheme)).size > 1) scene.note('schemes_differ', 'The meshes of the file ask for different subdivision schemes; one is used for all.');
   const merged = mergeCages(cages);

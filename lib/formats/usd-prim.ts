@@ -13,6 +13,8 @@ export interface UsdPrim {
   active: boolean;
   /** What this layer leaves to others or to a choice: references, payloads, variants, instances. */
   arcs: string[];
+  /** Of those, prims of this layer (an empty asset) or of another, by path; an empty path is the layer's default prim. Text layers only. */
+  references: { asset: string; path: string }[];
   children: UsdPrim[];
 }
 
@@ -32,6 +34,7 @@ export interface UsdLayer {
   root: UsdPrim[];
   metersPerUnit: number | null;
   upAxis: 'y' | 'z' | null;
+  defaultPrim: string | null;
   /** Layers that this one builds on, which are not read. */
   subLayers: string[];
 }

@@ -1,5 +1,5 @@
 import { MeshError } from './mesh-error';
-import { MOST_USD_DEPTH, MOST_USD_PRIMS, type UsdLayer, type UsdPrim } from './usd-prim';
+import { MOST_USD_DEPTH, MOST_USD_PRIMS, type UsdLayer, type UsdPrim, type UsdValue } from './usd-prim';
 import { UsdTokens } from './usd-tokens';
 import { readUsdMetadata, readUsdValue, skipBrackets } from './usda-values';
 
@@ -28,10 +28,12 @@ class UsdaReader {
     const metres = metadata.get('metersPerUnit');
     const axis = metadata.get('upAxis');
     const subLayers = metadata.get('subLayers');
+    const defaultPrim = metadata.get('defaultPrim');
     return {
       root,
       metersPerUnit: typeof metres === 'number' ? metres : null,
       upAxis: axis === 'Y' ? 'y' : axis === 'Z' ? 'z' : null,
+      defaultPrim: typeof defaultPrim === 'string' ? defaultPrim : null,
       subLayers: Array.isArray(subLayers) && String(subLayers[0]).includes('@') ? [String(subLayers[0])] : [],
     };
   }
@@ -44,11 +46,12 @@ class UsdaReader {
     const specifier = tokens.takeText('word', 'def, over or class') as UsdPrim['specifier'];
     const typeName = tokens.kind === 'word' ? tokens.takeText('word', 'a type') : '';
     const name = tokens.takeText('string', 'the name of the prim in quotation marks');
-    const prim: UsdPrim = { name, typeName, specifier, attributes: new Map(), relationships: new Map(), active: true, arcs: [], children: [] };
+    const prim: UsdPrim = { name, typeName, specifier, attributes: new Map(), relationships: new Map(), active: true, arcs: [], references: [], children: [] };
     if (tokens.isMark('(')) {
       const metadata = readUsdMetadata(tokens);
       prim.active = metadata.get('active') !== false && metadata.get('active') !== 0;
       prim.arcs.push(...ARCS.filter((arc) => metadata.has(arc)));
+      for (const arc of ['references', 'payload']) prim.references.push(...referencesIn(metadata.get(arc)));
     }
     tokens.take('{');
     while (!tokens.isMark('}')) this.readStatement(prim, depth);
@@ -147,6 +150,12 @@ class UsdaReader {
     tokens.next();
     return first;
   }
+}
+
+/** Layers and prims in the text of a reference or of a list of them. */
+function referencesIn(value: UsdValue | null | undefined): UsdPrim['references'] {
+  const source = Array.isArray(value) ? String(value[0]) : '';
+  return Array.from(source.matchAll(/@([^@]*)@(?:<([^>]*)>)?|<([^>]*)>/g), ([, asset = '', path = '', own = '']) => ({ asset, path: path || own }));
 }
 
 /** Reads the text form of a USD layer, without what it refers to. Source: the .usda files of the standard's own documentation (from memory). Errors: MeshError with line and column. */

@@ -4,6 +4,8 @@ import type { UsdTokens } from './usd-tokens';
 
 const OPENS = new Map([['(', ')'], ['[', ']'], ['{', '}']]);
 const CLOSES = new Set(OPENS.values());
+/** Characters kept of metadata that is no plain value: enough for a list of references. */
+const RAW_KEPT = 10_000;
 /** Numbers in one array: the corners of the largest mesh and more. */
 const MOST_NUMBERS = 256_000_000;
 
@@ -75,7 +77,7 @@ export function skipBrackets(tokens: UsdTokens): void {
   } while (open.length > 0);
 }
 
-/** What was authored in a `( … )` of metadata, by key; what is no plain value is null. Errors: bad_syntax. */
+/** What was authored in a `( … )` of metadata, by key; what is no plain value is its text, as a list of one. Errors: bad_syntax. */
 export function readUsdMetadata(tokens: UsdTokens): Map<string, UsdValue | null> {
   const found = new Map<string, UsdValue | null>();
   tokens.take('(');
@@ -100,15 +102,14 @@ export function readUsdMetadata(tokens: UsdTokens): Map<string, UsdValue | null>
 }
 
 function readMetadataValue(tokens: UsdTokens): UsdValue | null {
-  if (tokens.kind === 'mark' && OPENS.has(tokens.text)) {
-    const first = tokens.start;
-    skipBrackets(tokens);
-    return [tokens.source.slice(first, Math.min(tokens.start, first + 200))];
-  }
-  const isAsset = tokens.kind === 'asset';
-  const value = readUsdValue(tokens);
-  // A reference may name a prim and an offset behind the layer.
-  if (isAsset && tokens.kind === 'path') tokens.next();
-  if (isAsset && tokens.isMark('(')) skipBrackets(tokens);
-  return value;
+  const first = tokens.start;
+  if (tokens.kind === 'mark' && OPENS.has(tokens.text)) skipBrackets(tokens);
+  else if (tokens.kind === 'asset' || tokens.kind === 'path') {
+    // A reference may name a prim and an offset behind the layer.
+    const isAsset = tokens.kind === 'asset';
+    tokens.next();
+    if (isAsset && tokens.kind === 'path') tokens.next();
+    if (tokens.isMark('(')) skipBrackets(tokens);
+  } else return readUsdValue(tokens);
+  return [tokens.source.slice(first, Math.min(tokens.start, first + RAW_KEPT))];
 }

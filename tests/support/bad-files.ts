@@ -1,4 +1,5 @@
 import { zipSync, type ZippableFile } from 'three/examples/jsm/libs/fflate.module.js';
+import { joinBytes } from '@/lib/formats/join-bytes';
 import { packBlock, packIntegers, writeCrate } from './write-crate';
 
 /** A file that must end in a sentence, never in a crash, a hang or a number. */
@@ -111,14 +112,8 @@ function crateWith(section: string, content: Uint8Array): Uint8Array {
 const u64 = (value: number) => new Uint8Array(Uint32Array.of(value % 2 ** 32, Math.floor(value / 2 ** 32)).buffer);
 const sized = (block: Uint8Array) => join(u64(block.length), block);
 
-export function join(...pieces: Uint8Array[]): Uint8Array {
-  const out = new Uint8Array(pieces.reduce((sum, piece) => sum + piece.length, 0));
-  let at = 0;
-  for (const piece of pieces) {
-    out.set(piece, at);
-    at += piece.length;
-  }
-  return out;
+function join(...pieces: Uint8Array[]): Uint8Array {
+  return joinBytes(pieces);
 }
 
 function zip(files: Record<string, ZippableFile>): Uint8Array {
@@ -262,6 +257,9 @@ function* usdFaults(): Generator<BadFile> {
   yield replaced('a.usda', 'a string without end', 'def Xform "geo"', 'def Xform "geo');
   yield replaced('a.usda', 'a unit below zero', '0.01', '-1');
   yield replaced('a.usda', 'control characters', 'def Xform', 'd\u0007ef Xform');
+  yield { fault: 'references that multiply', name: 'a.usda', bytes: text(`#usda 1.0\n${Array.from({ length: 9 }, (_, level) => `def "l${level}" {\n${Array.from({ length: 12 }, (_, i) => `def "c${i}" ( references = </l${level + 1}> ) { }\n`).join('')}}\n`).join('')}def "l9" { def Mesh "m" { point3f[] points = [(0, 0, 0), (1, 0, 0), (0, 1, 0)]\n int[] faceVertexCounts = [3]\n int[] faceVertexIndices = [0, 1, 2] } }\n`) };
+  yield { fault: 'references in a circle', name: 'a.usda', bytes: text('#usda 1.0\ndef "a" ( references = </b> ) { }\ndef "b" ( references = </a> ) { }\n') };
+  yield { fault: 'a reference out of the archive', name: 'a.usda', bytes: text('#usda 1.0\ndef "a" ( references = @../../etc/passwd.usda@</b> ) { }\n') };
   yield { fault: 'only another layer', name: 'a.usda', bytes: text('#usda 1.0\n(\n subLayers = [ @/etc/passwd@ ]\n)\n') };
   const at = (offset: number, value: number, fault: string): BadFile => {
     const bytes = crate();

@@ -3,8 +3,10 @@ import { USDZExporter } from 'three/examples/jsm/exporters/USDZExporter.js';
 import { USDCParser } from 'three/examples/jsm/loaders/usd/USDCParser.js';
 import { describe, expect, it } from 'vitest';
 import { readMeshArchive } from '@/lib/formats/mesh-archive';
-import { openArchive } from '@/lib/formats/open-archive';
+import { NOTHING_BESIDE } from '@/lib/formats/beside';
 import { readUsda } from '@/lib/formats/usda';
+import { parseUsda } from '@/lib/formats/usda-layer';
+import { readUsdMeshes } from '@/lib/formats/usd-meshes';
 import { readUsdc } from '@/lib/formats/usdc';
 import { facesOf, failureOf, laterFailureOf, measureAs, measureAsIs, namesOf } from '../support/read-cages';
 import { writeCrate, type CratePrim } from '../support/write-crate';
@@ -38,7 +40,7 @@ def Xform "geo" # of the asset
 {
 ${content}}
 `;
-const read = (source: string) => readUsda(text(source));
+const read = (source: string) => readUsdMeshes(parseUsda(source));
 
 describe('USD text', () => {
   it('reads quads, unit and up axis; where a mesh is silent, the standard’s own values hold', () => {
@@ -248,18 +250,35 @@ describe('USD crate', () => {
     expect(Array.from(grid(shuffled).faceVertices)).toEqual(shuffled);
   });
 
-  it('reads the layer that another library writes, and says that a .usdz of references brings nothing of its own', async () => {
+  it('reads what another library puts into a .usdz: a layer that refers to others in the archive', async () => {
     const scene = new Scene();
-    const box = new Mesh(new BoxGeometry(1, 2, 3), new MeshStandardMaterial({ name: 'oak' }));
-    box.position.set(5, 0, 0);
-    scene.add(box);
-    const bytes = await new USDZExporter().parseAsync(scene);
-    const archive = await openArchive(bytes);
-    const geometry = archive.names.find((name) => name.startsWith('geometries/'))!;
-    const cage = readUsda(await archive.read(geometry));
-    expect(measureAsIs(cage, true).volume).toBeCloseTo(6, 6);
-    expect(cage.scheme).toBe('polyhedral');
-    expect(await laterFailureOf(() => readMeshArchive(bytes, 'crate.usdz'))).toMatchObject({ code: 'no_faces', detail: expect.stringContaining('from other layers') });
+    for (const [name, x] of [['left', -5], ['right', 5]] as const) {
+      const box = new Mesh(new BoxGeometry(1, 2, 3), new MeshStandardMaterial({ name: 'oak' }));
+      box.name = name;
+      box.position.set(x, 0, 0);
+      scene.add(box);
+    }
+    scene.updateMatrixWorld(true);
+    const cage = await readMeshArchive(await new USDZExporter().parseAsync(scene), 'crate.usdz');
+    expect(measureAsIs(cage, true).volume).toBeCloseTo(12, 6);
+    const xs = Array.from(cage.positions).filter((_, i) => i % 3 === 0);
+    expect([Math.min(...xs), Math.max(...xs)]).toEqual([-5.5, 5.5]);
+    expect([cage.metresPerUnit, cage.upAxis, cage.scheme, cage.warnings]).toEqual([1, 'y', 'polyhedral', []]);
+  });
+
+  it('follows references within a layer and beside it, keeps what is said over them, and refuses circles', async () => {
+    const twice = layer(`class Xform "_kit" {\n${mesh()}}\ndef Xform "a" ( references = </geo/_kit> ) { }\ndef Xform "b" (\n prepend references = </geo/_kit> ) {\n over "crate" { uniform token orientation = "leftHanded" }\n }`);
+    const cage = await readUsda(text(twice), NOTHING_BESIDE);
+    expect([...new Set(namesOf(cage.objects))]).toEqual(['geo/a/crate', 'geo/b/crate']);
+    // The second is turned inside out by what is said over it.
+    expect(measureAsIs(cage).volume).toBeCloseTo(0, 12);
+    const beside = (files: Record<string, Uint8Array>) => (path: string) => Promise.resolve(files[path] ?? null);
+    const outer = text('#usda 1.0\ndef "x" ( payload = @./kit/box.usdc@ ) { }\n');
+    expect(measureAsIs(await readUsda(outer, beside({ 'kit/box.usdc': writeCrate(STAGE) }))).volume).toBeCloseTo(72, 10);
+    expect(await laterFailureOf(() => readUsda(outer, NOTHING_BESIDE))).toMatchObject({ code: 'no_faces', detail: expect.stringContaining('from other layers') });
+    const circle = { 'a.usda': text('#usda 1.0\ndef "x" ( references = @b.usda@</x> ) { }'), 'b.usda': text('#usda 1.0\ndef "x" ( references = @a.usda@</x> ) { }') };
+    expect((await laterFailureOf(() => readUsda(circle['a.usda'], beside(circle)))).code).toBe('reference_circle');
+    expect((await laterFailureOf(() => readUsda(text('#usda 1.0\ndef "x" ( references = </x> ) { }'), NOTHING_BESIDE))).code).toBe('reference_circle');
   });
 
   it('refuses every crate cut short, with the byte', () => {
