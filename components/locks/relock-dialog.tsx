@@ -1,11 +1,8 @@
 'use client';
 
-import { useState, type SubmitEvent } from 'react';
-import { ActRefusal } from '@/components/forms/act-refusal';
+import { ReasonForm } from '@/components/forms/reason-form';
 import { Button } from '@/components/ui/button';
 import { Dialog } from '@/components/ui/dialog';
-import { Field } from '@/components/ui/field';
-import { Input } from '@/components/ui/input';
 import type { Refusal } from '@/hooks/use-act';
 import type { OutdatedLock } from '@/lib/rules/outdated-lock';
 import { counted } from '@/lib/rules/shot-words';
@@ -24,18 +21,18 @@ interface RelockDialogProps {
 
 /** Shows every difference, then moves the locks to the values that are approved now. */
 export function RelockDialog({ locks, unit, busy, refusal, onRelock, onClose }: RelockDialogProps) {
-  const [reason, setReason] = useState('');
-  const [missing, setMissing] = useState(false);
   if (locks === null || locks.length === 0) return null;
   const ready = locks.filter((lock) => lock.current?.value_id);
   const waiting = locks.filter((lock) => !lock.current?.value_id);
   const shots = new Set(ready.map((lock) => lock.shot)).size;
 
-  function submit(event: SubmitEvent<HTMLFormElement>) {
-    event.preventDefault();
-    if (reason.trim() === '') return setMissing(true);
-    onRelock(ready.flatMap(({ lock, current }) => (current?.value_id ? [{ lock, value_id: current.value_id }] : [])), reason.trim());
-  }
+  const left =
+    waiting.length === 0 ? null : (
+      <p className="text-13 text-ink-2">
+        {counted(waiting.length, 'part')} {waiting.length === 1 ? 'stays' : 'stay'} as locked, without an approved new value: {waiting.slice(0, 6).map((lock) => `${lock.asset} ${lock.part ?? lock.body ?? ''} in ${lock.shot}`).join(', ')}
+        {waiting.length > 6 ? ` and ${waiting.length - 6} more` : ''}.
+      </p>
+    );
 
   return (
     <Dialog
@@ -45,39 +42,27 @@ export function RelockDialog({ locks, unit, busy, refusal, onRelock, onClose }: 
       description={ready.length === 0 ? 'None of the new values is approved.' : 'From the locked value to the one that is approved now.'}
       className="sm:w-[min(68rem,calc(100vw-4rem))]"
     >
-      <form onSubmit={submit} noValidate className="flex flex-col gap-4">
-        {ready.length === 0 ? null : <DifferenceTable locks={ready} unit={unit} />}
-        {waiting.length === 0 ? null : (
-          <p className="text-13 text-ink-2">
-            {counted(waiting.length, 'part')} {waiting.length === 1 ? 'stays' : 'stay'} as locked, without an approved new value: {waiting.slice(0, 6).map((lock) => `${lock.asset} ${lock.part ?? lock.body ?? ''} in ${lock.shot}`).join(', ')}
-            {waiting.length > 6 ? ` and ${waiting.length - 6} more` : ''}.
-          </p>
-        )}
-        {ready.length === 0 ? null : (
-          <Field label="Reason" error={missing ? 'Say why.' : null}>
-            <Input
-              value={reason}
-              maxLength={500}
-              autoComplete="off"
-              onChange={(event) => {
-                setReason(event.target.value);
-                setMissing(false);
-              }}
-            />
-          </Field>
-        )}
-        <ActRefusal refusal={refusal} />
-        <div className="flex justify-end gap-2">
-          <Button look="quiet" onClick={onClose}>
+      {ready.length === 0 ? (
+        <div className="flex flex-col gap-4">
+          {left}
+          <Button look="quiet" className="self-end" onClick={onClose}>
             Keep as locked
           </Button>
-          {ready.length === 0 ? null : (
-            <Button type="submit" look="filled" disabled={busy}>
-              {busy ? 'Re-locking' : `Re-lock ${counted(ready.length, 'part')}`}
-            </Button>
-          )}
         </div>
-      </form>
+      ) : (
+        <ReasonForm
+          act={`Re-lock ${counted(ready.length, 'part')}`}
+          acting="Re-locking"
+          keep="Keep as locked"
+          busy={busy}
+          refusal={refusal}
+          onSend={(reason) => onRelock(ready.flatMap(({ lock, current }) => (current?.value_id ? [{ lock, value_id: current.value_id }] : [])), reason)}
+          onClose={onClose}
+        >
+          <DifferenceTable locks={ready} unit={unit} />
+          {left}
+        </ReasonForm>
+      )}
     </Dialog>
   );
 }

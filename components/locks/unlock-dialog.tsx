@@ -1,11 +1,7 @@
 'use client';
 
-import { useState, type SubmitEvent } from 'react';
-import { ActRefusal } from '@/components/forms/act-refusal';
-import { Button } from '@/components/ui/button';
+import { ReasonForm } from '@/components/forms/reason-form';
 import { Dialog } from '@/components/ui/dialog';
-import { Field } from '@/components/ui/field';
-import { TextArea } from '@/components/ui/text-area';
 import type { Refusal } from '@/hooks/use-act';
 import type { ShotSlot } from '@/lib/rules/shot-detail';
 import { assetInShot, counted } from '@/lib/rules/shot-words';
@@ -22,20 +18,21 @@ interface UnlockDialogProps {
 
 /** Asks why, and says who took the rows that would be given up. */
 export function UnlockDialog({ slots, shot, busy, refusal, onUnlock, onClose }: UnlockDialogProps) {
-  const [reason, setReason] = useState('');
-  const [missing, setMissing] = useState(false);
   if (slots === null || slots.length === 0) return null;
   const takers = [...new Set(slots.flatMap((slot) => slot.lock?.taken_by ?? []))].sort();
 
-  function submit(event: SubmitEvent<HTMLFormElement>) {
-    event.preventDefault();
-    if (reason.trim() === '') return setMissing(true);
-    onUnlock(reason.trim());
-  }
-
   return (
     <Dialog open onOpenChange={(open) => !open && onClose()} title={`Unlock ${slots.length === 1 ? `${slots[0].asset} ${slots[0].part}` : counted(slots.length, 'part')}`} description={`in ${shot}`}>
-      <form onSubmit={submit} noValidate className="flex flex-col gap-4">
+      <ReasonForm
+        hint={takers.length === 0 ? undefined : 'Those who took the rows read it.'}
+        act="Unlock"
+        acting="Unlocking"
+        keep="Keep locked"
+        busy={busy}
+        refusal={refusal}
+        onSend={onUnlock}
+        onClose={onClose}
+      >
         {slots.length === 1 ? null : (
           <ul aria-label="Parts" tabIndex={0} className="max-h-40 overflow-y-auto border-y border-rule py-1 text-13 text-ink-2">
             {slots.map((slot) => (
@@ -48,26 +45,7 @@ export function UnlockDialog({ slots, shot, busy, refusal, onUnlock, onClose }: 
         <p className="text-14">
           {takers.length === 0 ? 'Nobody has taken these rows yet.' : `Taken by ${takers.join(', ')}.`}
         </p>
-        <Field label="Reason" error={missing ? 'Say why.' : null} hint={takers.length === 0 ? undefined : 'Those who took the rows read it.'}>
-          <TextArea
-            value={reason}
-            maxLength={500}
-            onChange={(event) => {
-              setReason(event.target.value);
-              setMissing(false);
-            }}
-          />
-        </Field>
-        <ActRefusal refusal={refusal} />
-        <div className="flex justify-end gap-2">
-          <Button look="quiet" onClick={onClose}>
-            Keep locked
-          </Button>
-          <Button type="submit" look="filled" disabled={busy}>
-            {busy ? 'Unlocking' : 'Unlock'}
-          </Button>
-        </div>
-      </form>
+      </ReasonForm>
     </Dialog>
   );
 }

@@ -2,10 +2,9 @@
 
 import { useState } from 'react';
 import { ActRefusal } from '@/components/forms/act-refusal';
+import { ReasonField } from '@/components/forms/reason-field';
 import { ValueForm } from '@/components/parts/value-form';
 import { Dialog } from '@/components/ui/dialog';
-import { Field } from '@/components/ui/field';
-import { Input } from '@/components/ui/input';
 import type { Refusal } from '@/hooks/use-act';
 import { useMaterials } from '@/hooks/use-materials';
 import { useNamedPart } from '@/hooks/use-part';
@@ -62,17 +61,15 @@ function OverrideForm({ slot, frame, busy, refusal, onDraft, onClose }: Override
             onDraft({ ...itemFor(row, change), shot: slot.shot, reason: reason.trim() });
           }}
         >
-          <Field label="Reason" error={missing ? 'Say why.' : null} hint="It stands on the shot’s page and in its export.">
-            <Input
-              value={reason}
-              maxLength={500}
-              autoComplete="off"
-              onChange={(event) => {
-                setReason(event.target.value);
-                setMissing(false);
-              }}
-            />
-          </Field>
+          <ReasonField
+            value={reason}
+            missing={missing}
+            hint="It stands on the shot’s page and in its export."
+            onChange={(value) => {
+              setReason(value);
+              setMissing(false);
+            }}
+          />
           <ActRefusal refusal={refusal} />
         </ValueForm>
       )}
