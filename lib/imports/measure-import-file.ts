@@ -9,7 +9,8 @@ import type { ImportFileError } from '@/lib/rules/import-answer';
 import type { PlannedFile } from '@/lib/rules/import-plan';
 import { refreshAssetValues } from '@/lib/values/refresh-asset-values';
 import { endFile, lockHeldFile } from './end-file';
-import { findGeometryRecord, summariseRecord, writeGeometryRecord } from './geometry-record';
+import { findReusableRecord } from './find-reusable-record';
+import { summariseRecord, writeGeometryRecord } from './geometry-record';
 import type { ImportRow } from './get-import-row';
 import { markMeasuring, startFile } from './lease';
 import { showSpace } from './show-space';
@@ -41,7 +42,7 @@ export async function measureImportFile(work: FileWork, fileId: string, plan: Pl
   if (plan.asset === null) return failFile(work, fileId, { code: 'name_not_matched', message: 'The name does not match the show’s pattern. Give an asset, or change the pattern.', line: null, column: null });
   const { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces } = importRow;
   const key = { sha256: file.sha256, options: { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces } satisfies MeasureOptions };
-  const known = await findGeometryRecord(db, key);
+  const known = await findReusableRecord(db, key, { name: file.name, showId: importRow.showId });
   let cage: MeasuredCage | null = null;
   if (known === null) {
     const outcome = await work.engine.measure({ name: file.name, ...key, space: await showSpace(db, importRow.showId) }, () => void markMeasuring(db, fileId, holder).catch(() => undefined));

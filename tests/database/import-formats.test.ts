@@ -38,3 +38,12 @@ test('every text format comes in as an asset; a unit or axis other than the show
   // The layer asks for Loop; the import measures as is.
   expect(notes).toEqual([{ asset: 'cap', code: 'triangles_only' }, { asset: 'fin', code: 'scheme_differs' }]);
 });
+
+test('another show’s measurement of a file does not let it in where its unit is wrong', async () => {
+  const [centimetres, metres] = [await createCast(), await createCast({ linearUnit: 'm' })];
+  const bring = async (cast: typeof metres) => (await importFiles(cast.contextOf('td'), cast.show.code, { 'fin_v001.usda': textOf('a.usda') }, { scheme: 'polyhedral' })).files[0];
+  expect((await bring(centimetres)).state).toBe('done');
+  expect(await bring(metres)).toMatchObject({ state: 'failed', error: { code: 'units_disagree' } });
+  // Its own measurement is used again.
+  expect(await bring(centimetres)).toMatchObject({ state: 'done', remarks: ['unchanged'] });
+});

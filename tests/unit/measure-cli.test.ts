@@ -68,6 +68,21 @@ describe('measure on the command line', { timeout: 120_000 }, () => {
     expect(stderr).toContain('missing.obj:1:1: there is no such file\n');
   });
 
+  it('takes scheme and unit from a file that states them, and joints from weights beside an OBJ', async () => {
+    const points = '[(0, 0, 0), (1, 0, 0), (0, 1, 0), (0, 0, 1)]';
+    writeFileSync(path.join(folder, 'tet.usda'), `#usda 1.0\n( metersPerUnit = 0.01 )\ndef Mesh "tet" { point3f[] points = ${points}\n int[] faceVertexCounts = [3, 3, 3, 3]\n int[] faceVertexIndices = [0, 2, 1, 0, 1, 3, 0, 3, 2, 1, 2, 3]\n uniform token subdivisionScheme = "none" }\n`);
+    writeFileSync(path.join(folder, 'leg.obj'), sharpBox([0, 0, 0], [1, 1, 1]));
+    writeFileSync(path.join(folder, 'leg.weights.csv'), ['vertex,joint,weight', ...[1, 2, 3, 4].map((v) => `${v},hip,1`), ...[5, 6, 7, 8].map((v) => `${v},knee,2`)].join('\n'));
+    const { code, stdout, stderr } = await run('--parts-by', 'joint', 'tet.usda', 'leg.obj');
+    expect([code, stderr]).toEqual([0, '']);
+    const records = stdout.trimEnd().split('\n').map((line) => JSON.parse(line));
+    // A sixth of a cubic centimetre of water, as it is.
+    expect(records[0].volume).toBeCloseTo(1 / 6, 14);
+    expect(records[0].mass_kg).toBeCloseTo(1e-3 / 6, 16);
+    expect(records.slice(1).map((record) => record.part)).toEqual(['hip', 'knee']);
+    expect(records[1].volume + records[2].volume).toBeCloseTo(1, 12);
+  });
+
   it.each([[[]], [['--scheme', 'smooth', 'box.obj']], [['--density', '-1', 'box.obj']], [['--wrong', 'box.obj']]])('ends with 2 and the usage for %j', async (args) => {
     const { code, stdout, stderr } = await run(...args);
     expect([code, stdout]).toEqual([2, '']);
