@@ -2,7 +2,7 @@
 
 import Link from 'next/link';
 import { useState } from 'react';
-import { compareHref, shotHref } from '@/components/shots/shot-hrefs';
+import { compareLockHref, shotHref } from '@/components/shots/shot-hrefs';
 import { StateMark } from '@/components/states/state-mark';
 import { Button } from '@/components/ui/button';
 import { Checkbox } from '@/components/ui/checkbox';
@@ -102,7 +102,7 @@ export function OutdatedLocks({ show, unit, locks, mayLock, primary, relock }: O
                 {lock.beyond_tolerance ? null : <span className="ml-2 text-13 text-ink-3">within tolerance</span>}
               </TableCell>
               <TableCell>
-                <Link href={compareHref(show, lock.lock)} className="link text-13">
+                <Link href={compareLockHref(show, lock.lock)} className="link text-13">
                   Compare<span className="sr-only"> {lock.shot} {lock.asset} {lock.part ?? lock.body}</span>
                 </Link>
               </TableCell>

@@ -1,5 +1,5 @@
 import Link from 'next/link';
-import { compareHref, shotHref } from '@/components/shots/shot-hrefs';
+import { compareLockHref, shotHref } from '@/components/shots/shot-hrefs';
 import { StateMark } from '@/components/states/state-mark';
 import { ENGINEERING_WIDTHS, Figure } from '@/components/ui/figure';
 import { Table, TableCell, TableHead, TableRow } from '@/components/ui/table';
@@ -42,7 +42,7 @@ export function PartShots({ show, slots }: { show: string; slots: readonly ShotS
               ) : (
                 <>
                   {slot.outdated.verdict}{' '}
-                  <Link href={compareHref(show, slot.outdated.lock)} className="link ml-2 text-13">
+                  <Link href={compareLockHref(show, slot.outdated.lock)} className="link ml-2 text-13">
                     Compare<span className="sr-only"> with {slot.shot}</span>
                   </Link>
                 </>

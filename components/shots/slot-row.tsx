@@ -9,7 +9,7 @@ import { Menu, MenuItem, MenuRule } from '@/components/ui/menu';
 import { TableCell, TableRow } from '@/components/ui/table';
 import { When } from '@/components/users/when';
 import type { ShotActs, ShotSlot } from '@/lib/rules/shot-detail';
-import { compareHref, partPageHref } from './shot-hrefs';
+import { compareLockHref, partPageHref } from './shot-hrefs';
 import { slotState, waitsFor } from '@/lib/rules/shot-slots';
 
 export interface SlotRowActs {
@@ -81,7 +81,7 @@ function Against({ show, slot }: { show: string; slot: ShotSlot }) {
     return (
       <span className="inline-flex items-baseline gap-3">
         <span className={outdated.beyond_tolerance ? 'font-medium' : 'text-ink-2'}>{outdated.verdict}</span>
-        <Link href={compareHref(show, outdated.lock)} className="link text-13">
+        <Link href={compareLockHref(show, outdated.lock)} className="link text-13">
           Compare<span className="sr-only"> {slot.asset} {slot.part}</span>
         </Link>
         {outdated.current === null || outdated.current.value_id !== null ? null : <span className="text-13 text-ink-3">new value not approved yet</span>}
@@ -146,7 +146,7 @@ function SlotMenu({ show, slot, acts, onLock, onUnlock, onRelock, onOverride, on
       {acts.may_draft && override !== null ? <MenuItem onSelect={() => onDrop(slot)}>Drop the override…</MenuItem> : null}
       {outdated === null ? null : (
         <MenuItem asChild>
-          <Link href={compareHref(show, outdated.lock)}>Compare</Link>
+          <Link href={compareLockHref(show, outdated.lock)}>Compare</Link>
         </MenuItem>
       )}
     </Menu>
