@@ -33,46 +33,51 @@ interface Change extends Record<string, unknown> {
   field: string;
   before: string | null;
   after: string | null;
+  /** Of a lock-values: the lock that the act made. */
+  lock: string | null;
 }
 
 /** The rules one act at a time, fed with the history in its order: what holds after each event. */
 class SerialModel {
   readonly standing = new Set<string>();
   readonly withdrawn = new Set<string>();
-  /** Approval of each live lock, by `shot part`. */
-  readonly locked = new Map<string, string>();
+  /** Each live lock with its approval, by `shot part`. */
+  readonly locked = new Map<string, { lock: string; approval: string }>();
   readonly broken: string[] = [];
 
   /** Applies a change of the history; what the rules do not allow there is noted. */
-  apply({ id, act, part, field, before, after }: Change): void {
+  apply({ id, act, part, field, before, after, lock }: Change): void {
     const refuse = (why: string): void => void this.broken.push(`event ${id}: ${act} of ${part}: ${why}`);
     if (act === 'approve-values') this.standing.add(after!);
     if (act === 'withdraw-approvals') {
       if (!this.standing.delete(before!)) refuse('was not approved');
-      if ([...this.locked.values()].includes(before!)) refuse('a live lock uses it');
+      if (this.isLocked(before!)) refuse('a live lock uses it');
       this.withdrawn.add(before!);
     }
     const place = `${field.replace('lock ', '')} ${part}`;
     if (act === 'lock-values') {
       if (!this.standing.has(after!)) refuse('is not approved');
       if (this.locked.has(place)) refuse('is locked already');
-      this.locked.set(place, after!);
+      this.locked.set(place, { lock: lock!, approval: after! });
     }
     if (act === 'unlock-values') {
-      if (this.locked.get(place) !== before) refuse('was not locked to this');
+      if (this.locked.get(place)?.approval !== before) refuse('was not locked to this');
       this.locked.delete(place);
     }
   }
 
   /** Whether the rules would refuse the act for this reason as things stand. */
-  refuses({ act, part, shot, against, code }: RaceAct, lockPlaces: ReadonlyMap<string, string>): boolean {
-    if (act === 'withdraw') return code === 'locked' ? [...this.locked.values()].includes(against) : code === 'already_withdrawn' && this.withdrawn.has(against);
+  refuses({ act, part, shot, against, code }: RaceAct): boolean {
+    if (act === 'withdraw') return code === 'locked' ? this.isLocked(against) : code === 'already_withdrawn' && this.withdrawn.has(against);
     if (act === 'lock') {
       const held = this.locked.get(`${shot} ${part}`);
-      return code === 'already_locked' ? held !== undefined && held !== against : code === 'not_approved' && this.withdrawn.has(against);
+      return code === 'already_locked' ? held !== undefined && held.approval !== against : code === 'not_approved' && this.withdrawn.has(against);
     }
-    // A lock that has ended stands no more under its place, or another does.
-    return act === 'unlock' && code === 'already_unlocked' && this.locked.get(`${shot} ${part}`) !== lockPlaces.get(against) ;
+    return act === 'unlock' && code === 'already_unlocked' && this.locked.get(`${shot} ${part}`)?.lock !== against;
+  }
+
+  private isLocked(approval: string): boolean {
+    return [...this.locked.values()].some((one) => one.approval === approval);
   }
 }
 
@@ -86,7 +91,9 @@ test('three processes with 51 clients approve, take back, lock and unlock the sa
   for (const act of ['set', 'approve', 'withdraw', 'lock', 'unlock'] as const) expect(acts.filter((one) => one.act === act && one.status < 300).length, act).toBeGreaterThan(0);
 
   const changes = await asOwner<Change>(
-    `select e.id::int, e.act, p.name as part, i.field, i.before, i.after from audit_events e join audit_items i on i.event_id = e.id join parts p on p.id = i.part_id
+    `select e.id::int, e.act, p.name as part, i.field, i.before, i.after,
+       (select l.id from locks l join shots s on s.id = l.shot_id where l.part_id = i.part_id and i.field = 'lock ' || s.code and l.locked_at = e.at and e.act = 'lock-values') as lock
+     from audit_events e join audit_items i on i.event_id = e.id join parts p on p.id = i.part_id
      where e.show_id = $1 and e.act in ('approve-values', 'withdraw-approvals', 'lock-values', 'unlock-values') order by e.id, i.id`,
     [cast.show.id],
   );
@@ -96,12 +103,11 @@ test('three processes with 51 clients approve, take back, lock and unlock the sa
      from locks l join shots s on s.id = l.shot_id join parts p on p.id = l.part_id where l.show_id = $1`,
     [cast.show.id],
   );
-  const approvalOfLock = new Map(lockRows.map((row) => [row.id, row.approval_id]));
   // A refusal is right if the rules refuse it for that reason in some state that stood between sending and answer.
   const waiting = acts.filter((one) => one.status >= 300 && !['changed_meanwhile', 'conflict'].includes(one.code ?? ''));
   const unexplained = new Set(waiting);
   const explain = (from: number, below: number): void => {
-    for (const one of unexplained) if (one.from < below && one.to >= from && model.refuses(one, approvalOfLock)) unexplained.delete(one);
+    for (const one of unexplained) if (one.from < below && one.to >= from && model.refuses(one)) unexplained.delete(one);
   };
   let last = 0;
   for (const change of changes) {
@@ -114,7 +120,7 @@ test('three processes with 51 clients approve, take back, lock and unlock the sa
   expect([...unexplained]).toEqual([]);
 
   // What the tables hold at the end is what the rules hold.
-  expect(Object.fromEntries(lockRows.filter((row) => row.live).map((row) => [row.place, row.approval_id]))).toEqual(Object.fromEntries(model.locked));
+  expect(Object.fromEntries(lockRows.filter((row) => row.live).map((row) => [row.place, row.approval_id]))).toEqual(Object.fromEntries([...model.locked].map(([place, { approval }]) => [place, approval])));
   const standing = await asOwner<{ id: string }>('select id from approvals a where show_id = $1 and not exists (select 1 from withdrawals w where w.approval_id = a.id)', [cast.show.id]);
   expect(new Set(standing.map((row) => row.id))).toEqual(model.standing);
   const rows = await asOwner<{ state: string; wanted: string }>(

@@ -66,17 +66,17 @@ async function oneAct(random: (below: number) => number): Promise<RaceAct | null
   const shot = plan.shots[random(plan.shots.length)];
   const from = await newestEvent();
   const [row] = await look<{ revision: number; value_sha256: string; part_id: string }>(`select revision, value_sha256, part_id from part_current where part = '${part}'`);
-  const approvals = await look<{ id: string }>(`select id from approvals where part_id = '${row.part_id}' order by ordinal desc limit 3`);
+  const approvals = await look<{ id: string }>(`select id from approvals where part_id = '${row.part_id}' order by ordinal desc limit 6`);
   const locks = await look<{ id: string; code: string }>(`select l.id, s.code from locks l join shots s on s.id = l.shot_id where l.part_id = '${row.part_id}' order by l.locked_at desc limit 3`);
   const params = { show: plan.show };
   const item = { asset: 'crate', part };
   const done = async (act: RaceAct['act'], against: string, inShot: string | null, answer: { status: number; code: string | null }): Promise<RaceAct> => ({ act, part, shot: inShot, against, ...answer, from, to: await newestEvent() });
-  const choice = random(10);
+  const choice = random(12);
   if (choice < 2) return done('set', row.value_sha256, null, await send(set, plan.setter, 'PATCH', params, { items: [{ ...item, revision: row.revision, density_kg_m3: 1 + random(3) }] }));
   if (choice < 5) return done('approve', row.value_sha256, null, await send(approve, plan.lead, 'POST', params, { items: [{ ...item, value_sha256: row.value_sha256 }] }));
   const approval = approvals.length > 0 ? approvals[random(approvals.length)].id : null;
-  if (choice < 6) return approval === null ? null : done('withdraw', approval, null, await send(withdraw, plan.lead, 'POST', params, { items: [{ value_id: approval }], reason: 'race' }));
-  if (choice < 8) return approval === null ? null : done('lock', approval, shot, await send(lock, plan.lead, 'POST', { ...params, shot }, { items: [{ ...item, value_id: approval }] }));
+  if (choice < 8) return approval === null ? null : done('withdraw', approval, null, await send(withdraw, plan.lead, 'POST', params, { items: [{ value_id: approval }], reason: 'race' }));
+  if (choice < 10) return approval === null ? null : done('lock', approval, shot, await send(lock, plan.lead, 'POST', { ...params, shot }, { items: [{ ...item, value_id: approval }] }));
   const held = locks.length > 0 ? locks[random(locks.length)] : null;
   return held === null ? null : done('unlock', held.id, held.code, await send(unlock, plan.lead, 'POST', { ...params, shot: held.code }, { items: [{ lock: held.id }], reason: 'race' }));
 }
