@@ -26,7 +26,7 @@ export function CanonicalForm({ example }: { example: { canonical: string; value
         <tbody>
           {VALUE_FORM_ENTRIES.map((entry, index) => (
             <TableRow key={entry.what}>
-              <TableCell className="text-right align-top font-mono text-13 text-ink-3">{index}</TableCell>
+              <TableCell className="py-1.5 text-right align-top font-mono text-13 text-ink-3">{index}</TableCell>
               <TableCell className="py-1.5 whitespace-normal">{entry.what}</TableCell>
               <TableCell className="py-1.5 align-top font-mono text-13 whitespace-normal text-ink-2">{entry.from}</TableCell>
             </TableRow>

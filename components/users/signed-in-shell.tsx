@@ -17,6 +17,7 @@ export function SignedInShell({ user, show, items, children }: SignedInShellProp
   const accountLinks = [
     { href: '/shows', label: 'Shows' },
     { href: '/account', label: 'Account' },
+    { href: '/docs/conventions', label: 'Conventions' },
     ...(user.isAdmin ? [{ href: '/admin', label: 'Studio' }] : []),
   ];
   return (
