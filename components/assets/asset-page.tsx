@@ -18,8 +18,17 @@ import { METRES_PER } from '@/lib/rules/units';
 import { AssetParts } from './asset-parts';
 import { AssetVersions } from './asset-versions';
 
+interface AssetPageProps {
+  frame: ShowFrame;
+  detail: AssetDetail;
+  actions: ApprovalActions;
+  /** Locks it in its shots; null for whoever does not lock. */
+  locking: ReactNode;
+  tellMe: ReactNode;
+}
+
 /** An asset: its surface, its parts and what they weigh together. */
-export function AssetPage({ frame, detail, actions, tellMe }: { frame: ShowFrame; detail: AssetDetail; actions: ApprovalActions; tellMe: ReactNode }) {
+export function AssetPage({ frame, detail, actions, locking, tellMe }: AssetPageProps) {
   const { total, parts, findings, versions, scale } = detail;
   const [chosen, setChosen] = useState(parts[0]?.part ?? '');
   const mesh = useAssetMesh(frame.code, total.asset, total.version);
@@ -78,6 +87,7 @@ export function AssetPage({ frame, detail, actions, tellMe }: { frame: ShowFrame
           <Section title="Approval">
             <AssetApproval frame={frame} asset={total.asset} rows={detail.approvals} actions={actions} />
           </Section>
+          {locking === null ? null : <Section title="Shots">{locking}</Section>}
           <Section title="Balance along the longest axis">
             <RowBeam of={total} unit={unit} />
           </Section>

@@ -3,6 +3,7 @@ import { render, screen, within } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import type { ReactNode } from 'react';
 import { describe, expect, it, vi } from 'vitest';
+import { LockAsset } from '@/components/locks/lock-asset';
 import { LockReport } from '@/components/locks/lock-report';
 import { OutdatedLocks } from '@/components/locks/outdated-locks';
 import { UnlockDialog } from '@/components/locks/unlock-dialog';
@@ -188,5 +189,23 @@ describe('words on shots', () => {
     ]);
     show(<LockReport show="tarn" answer={{ locked: 0, missing: [one('a', 'torso', 'measured')] }} onClose={vi.fn()} />);
     expect(screen.getByRole('status')).toHaveTextContent(/^Nothing new was locked\. 1 missing: ?tarnOx torso: not approved yet$/);
+  });
+});
+
+describe('locking an asset wherever it is', () => {
+  it('locks what is approved in all its shots and says what is missing', async () => {
+    const missing = [{ shot: 'fer_0010', asset: 'crate', part: 'lid', copy: '', state: 'measured' as const, override: false }];
+    const lockShots = vi.fn().mockResolvedValue({ ok: true, data: { locked: 3, missing } });
+    render(
+      <QueryClientProvider client={new QueryClient()}>
+        <TooltipProvider>
+          <LockAsset show="tarn" asset="crate" lockShots={lockShots} />
+        </TooltipProvider>
+      </QueryClientProvider>,
+    );
+    await userEvent.click(screen.getByRole('button', { name: 'Lock what is approved in all its shots' }));
+    expect(lockShots).toHaveBeenCalledWith({ show: 'tarn', shots: [], asset: 'crate' });
+    expect(await screen.findByText(/3 parts locked\./)).toBeTruthy();
+    expect(screen.getByText(/1 missing/)).toBeTruthy();
   });
 });

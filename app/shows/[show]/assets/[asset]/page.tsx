@@ -1,10 +1,13 @@
 import type { Metadata } from 'next';
 import { approvalActions } from '@/app/shows/[show]/approvals/approval-actions';
 import { setToldAction } from '@/app/shows/[show]/actions';
+import { lockShotsAction } from '@/app/shows/[show]/shots/actions';
 import { AssetPage } from '@/components/assets/asset-page';
+import { LockAsset } from '@/components/locks/lock-asset';
 import { TellMe } from '@/components/notices/tell-me';
 import { getTold } from '@/lib/notices/get-told';
 import { getPageAsset } from '@/lib/parts/get-page-part';
+import { shotActs } from '@/lib/shots/shot-acts';
 import { getPageShow } from '@/lib/shows/get-page-show';
 import { showFrame } from '@/lib/shows/show-frame';
 
@@ -21,5 +24,6 @@ export default async function OneAssetPage({ params }: Props) {
   const detail = await getPageAsset(context, code, asset);
   const told = await getTold(context, { show: code, asset: detail.total.asset });
   const tellMe = <TellMe show={code} asset={detail.total.asset} answer={told} send={setToldAction} />;
-  return <AssetPage frame={showFrame(access)} detail={detail} actions={approvalActions} tellMe={tellMe} />;
+  const locking = shotActs(access).may_lock ? <LockAsset show={code} asset={detail.total.asset} lockShots={lockShotsAction} /> : null;
+  return <AssetPage frame={showFrame(access)} detail={detail} actions={approvalActions} locking={locking} tellMe={tellMe} />;
 }
