@@ -12,6 +12,7 @@ import { lockShowValues } from '@/lib/values/lock-show-values';
 import { checkLockables } from './check-lockables';
 import { findLockable, type Lockable } from './find-lockable';
 import { insertLocks } from './insert-locks';
+import { lockChange } from './lock-change';
 
 export interface LockAnswer {
   items: { lock: string; shot: string; asset: string; part: string; copy: string; value_id: string }[];
@@ -46,7 +47,7 @@ export async function applyLocks(tx: Transaction, acting: ActorContext, show: Sh
     await tx.update(shows).set({ revision: revision + 1 }).where(eq(shows.id, show.id));
     const codes = [...new Set(fresh.map((one) => one.shot))];
     const subject = codes.length === 1 ? codes[0] : `${codes.length} shots`;
-    const items = fresh.map((one) => ({ partId: one.part_id, shotId: one.shot_id, field: `lock ${one.shot}${one.copy ? ` ${one.copy}` : ''}`, before: null, after: one.approval_id }));
+    const items = fresh.map((one) => lockChange(one, null, one.approval_id));
     await recordEvent(tx, acting, { showId: show.id, act: 'lock-values', subject, items });
   }
   const idOf = new Map(fresh.map((one, i) => [one, ids[i]]));

@@ -9,6 +9,7 @@ import { lockShowValues } from '@/lib/values/lock-show-values';
 import { checkLockables } from './check-lockables';
 import { checkLocks, endLocks, findLocks } from './end-locks';
 import { findLockable, type Lockable } from './find-lockable';
+import { lockChange } from './lock-change';
 import { applyLocks, type LockAnswer } from './lock-values';
 
 /**
@@ -32,7 +33,7 @@ export async function relockValues(context: Context, input: RelockValuesInput): 
     const moving = (found as Lockable[]).flatMap((one, i) => (one.approval_id === replaced[i].approval_id ? [] : [i]));
     if (moving.length > 0) {
       await endLocks(tx, moving.map((i) => ids[i]), acting.actor.userId, input.reason);
-      const items = moving.map((i) => ({ partId: replaced[i].part_id, shotId: replaced[i].shot_id, field: `lock ${replaced[i].shot}${replaced[i].copy ? ` ${replaced[i].copy}` : ''}`, before: replaced[i].approval_id, after: null }));
+      const items = moving.map((i) => lockChange(replaced[i], replaced[i].approval_id, null));
       const eventId = await recordEvent(tx, acting, { showId: show.id, act: 'unlock-values', subject: moving.length === 1 ? replaced[moving[0]].shot : `${moving.length} locks`, reason: input.reason, items });
       await tellOfUnlock(tx, acting, show, { eventId, reason: input.reason, ended: moving.map((i) => ({ lock: replaced[i], becomes: found[i]!.approval_id })) });
     }

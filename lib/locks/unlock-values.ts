@@ -10,6 +10,7 @@ import { findShot } from '@/lib/shots/find-shot';
 import { getShowAccess } from '@/lib/shows/get-show-access';
 import { lockShowValues } from '@/lib/values/lock-show-values';
 import { checkLocks, endLocks, findLocks } from './end-locks';
+import { lockChange } from './lock-change';
 
 /** Ends locks of a shot, all items or none, with the reason. Errors per item: not_found, already_unlocked. */
 export async function unlockValues(context: Context, input: UnlockValuesInput): Promise<{ items: { lock: string; asset: string; part: string }[] }> {
@@ -28,7 +29,7 @@ export async function unlockValues(context: Context, input: UnlockValuesInput): 
     await endLocks(tx, ids, acting.actor.userId, input.reason);
     await tx.update(shows).set({ revision: revision + 1 }).where(eq(shows.id, show.id));
     const ended = ids.map((id) => found.get(id)!);
-    const items = ended.map((lock) => ({ partId: lock.part_id, shotId: lock.shot_id, field: `lock ${lock.shot}${lock.copy ? ` ${lock.copy}` : ''}`, before: lock.approval_id, after: null }));
+    const items = ended.map((lock) => lockChange(lock, lock.approval_id, null));
     const eventId = await recordEvent(tx, acting, { showId: show.id, act: 'unlock-values', subject: shot.code, reason: input.reason, items });
     await tellOfUnlock(tx, acting, show, { eventId, reason: input.reason, ended: ended.map((lock) => ({ lock, becomes: null })) });
     return { items: ended.map((lock) => ({ lock: lock.id, asset: lock.asset, part: lock.part })) };
