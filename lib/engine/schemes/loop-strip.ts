@@ -103,7 +103,7 @@ function readSides(): void {
   const other = new Float64Array(36);
   for (let a = -1; a <= 2; a++) copy(net, entry(a, 0), other, entry(1 - a, 0));
   for (let a = 0; a <= 2; a++) copy(net, entry(a, -1), other, entry(1 - a, 1));
-  // The row that comes after has no say in the rows along the crease: any will do.
+  // The row that comes after has no say in the rows along the crease, so whichever stands there will do.
   for (let a = -1; a <= 0; a++) combine(other, entry(a, 2), 2, entry(a, 1), -1, entry(a, 0), 0, 0);
   for (const side of [net, other]) for (let a = 0; a <= 2; a++) combine(side, entry(a, -1), 1, entry(a - 1, 0), 1, entry(a, 0), -1, entry(a - 1, 1));
   triangleToPowers(net, near);
