@@ -37,18 +37,25 @@ export const importFiles = pgTable(
     errorMessage: text('error_message'),
     errorLine: integer('error_line'),
     errorColumn: integer('error_column'),
+    /** The line with a caret under the column, cut to a window; null where the whole file is meant. */
+    errorExcerpt: text('error_excerpt'),
     attempts: integer('attempts').notNull().default(0),
     /** A worker holds the file until then; past it another may take it. */
     leaseUntil: timestamp('lease_until', { withTimezone: true }),
     leaseBy: uuid('lease_by'),
     uploadedAt: timestamp('uploaded_at', { withTimezone: true }).notNull().defaultNow(),
     endedAt: timestamp('ended_at', { withTimezone: true }),
+    /** Number of the transaction that changed last what readers see of the file; a trigger keeps it, leases do not move it. */
+    changed: bigint('changed', { mode: 'number' })
+      .notNull()
+      .default(sql`pg_current_xact_id()::text::bigint`),
   },
   (t) => [
     uniqueIndex('import_files_import_name_key').on(t.importId, t.name),
     index('import_files_open_idx')
       .on(t.importId, t.state)
       .where(sql`state in ('queued', 'reading', 'measuring')`),
+    index('import_files_changed_idx').on(t.importId, t.changed),
     check('import_files_state', oneOf(t.state, IMPORT_FILE_STATES)),
     check('import_files_end', sql`(${t.state} in ('done', 'failed')) = (${t.endedAt} is not null)`),
     check('import_files_error', sql`(${t.state} = 'failed') = (${t.errorCode} is not null)`),

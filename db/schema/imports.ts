@@ -27,6 +27,8 @@ export const imports = pgTable(
     createdAt: timestamp('created_at', { withTimezone: true }).notNull().defaultNow(),
     submittedAt: timestamp('submitted_at', { withTimezone: true }),
     endedAt: timestamp('ended_at', { withTimezone: true }),
+    /** When the person who opened it was last seen watching it, to some seconds. */
+    watchedAt: timestamp('watched_at', { withTimezone: true }),
   },
   (t) => [
     index('imports_show_idx').on(t.showId, t.createdAt),
