@@ -31,6 +31,11 @@ export const importFiles = pgTable(
     versionId: uuid('version_id').references((): AnyPgColumn => assetVersions.id, { onDelete: 'restrict' }),
     parts: integer('parts'),
     problems: integer('problems'),
+    /** The archive of this import that the file came out of, and the path that it had there; null for a file that was dropped itself. */
+    archiveId: uuid('archive_id').references((): AnyPgColumn => importFiles.id, { onDelete: 'restrict' }),
+    archiveEntry: text('archive_entry'),
+    /** Of an archive that became files of its own: how many. */
+    unpackedInto: integer('unpacked_into'),
     /** Warnings of the version rules: another take, a gap, unchanged. */
     remark: text('remark'),
     errorCode: text('error_code'),
@@ -58,6 +63,7 @@ export const importFiles = pgTable(
     index('import_files_changed_idx').on(t.importId, t.changed),
     check('import_files_state', oneOf(t.state, IMPORT_FILE_STATES)),
     check('import_files_end', sql`(${t.state} in ('done', 'failed')) = (${t.endedAt} is not null)`),
+    check('import_files_archive', sql`(${t.archiveId} is null) = (${t.archiveEntry} is null) and (${t.unpackedInto} is null or (${t.unpackedInto} >= 1 and ${t.state} = 'done'))`),
     check('import_files_error', sql`(${t.state} = 'failed') = (${t.errorCode} is not null)`),
   ],
 );

@@ -1,6 +1,7 @@
 import { boolean, check, index, pgTable, text, timestamp, uuid } from 'drizzle-orm/pg-core';
 import { BOUNDARY_WORDS, CREASING_WORDS, PARTITION_WORDS, SCHEME_WORDS, TRIANGLE_WORDS } from '../../lib/rules/measure-words';
 import { IMPORT_STATES } from '../../lib/rules/states';
+import { OTHER_SPACE_WORDS } from '../../lib/rules/units';
 import { oneOf } from './checks';
 import { shows } from './shows';
 import { users } from './users';
@@ -21,6 +22,7 @@ export const imports = pgTable(
     partsBy: text('parts_by', { enum: PARTITION_WORDS }).notNull(),
     weld: boolean('weld').notNull().default(false),
     turnFaces: boolean('turn_faces').notNull().default(false),
+    otherSpace: text('other_space', { enum: OTHER_SPACE_WORDS }).notNull().default('convert'),
     createdBy: uuid('created_by')
       .notNull()
       .references(() => users.id, { onDelete: 'restrict' }),
@@ -36,5 +38,6 @@ export const imports = pgTable(
     check('imports_scheme', oneOf(t.scheme, SCHEME_WORDS)),
     check('imports_boundary', oneOf(t.boundary, BOUNDARY_WORDS)),
     check('imports_parts_by', oneOf(t.partsBy, PARTITION_WORDS)),
+    check('imports_other_space', oneOf(t.otherSpace, OTHER_SPACE_WORDS)),
   ],
 );

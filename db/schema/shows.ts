@@ -1,7 +1,7 @@
 import { sql } from 'drizzle-orm';
 import { bigint, boolean, check, doublePrecision, pgTable, text, timestamp, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
 import { BOUNDARY_WORDS, PARTITION_WORDS, SCHEME_WORDS } from '../../lib/rules/measure-words';
-import { LINEAR_UNITS, UP_AXES } from '../../lib/rules/units';
+import { LINEAR_UNITS, OTHER_SPACE_WORDS, UP_AXES } from '../../lib/rules/units';
 import { finiteNotNegative, oneOf } from './checks';
 
 /** A show. Units, up axis and default scheme are frozen at its first import; the code never changes. */
@@ -13,6 +13,8 @@ export const shows = pgTable(
     title: text('title').notNull(),
     linearUnit: text('linear_unit', { enum: LINEAR_UNITS }).notNull(),
     upAxis: text('up_axis', { enum: UP_AXES }).notNull(),
+    /** What becomes of a file that states another unit or up axis; acts on later imports only. */
+    otherSpace: text('other_space', { enum: OTHER_SPACE_WORDS }).notNull().default('convert'),
     scheme: text('scheme', { enum: SCHEME_WORDS }).notNull(),
     boundary: text('boundary', { enum: BOUNDARY_WORDS }).notNull().default('edge-and-corner'),
     partsBy: text('parts_by', { enum: PARTITION_WORDS }).notNull().default('group'),
@@ -38,6 +40,7 @@ export const shows = pgTable(
     check('shows_tolerances', sql`${finiteNotNegative(t.toleranceMassPercent)} and ${finiteNotNegative(t.toleranceComPercent)} and ${finiteNotNegative(t.toleranceMomentsPercent)}`),
     check('shows_linear_unit', oneOf(t.linearUnit, LINEAR_UNITS)),
     check('shows_up_axis', oneOf(t.upAxis, UP_AXES)),
+    check('shows_other_space', oneOf(t.otherSpace, OTHER_SPACE_WORDS)),
     check('shows_scheme', oneOf(t.scheme, SCHEME_WORDS)),
     check('shows_boundary', oneOf(t.boundary, BOUNDARY_WORDS)),
     check('shows_parts_by', oneOf(t.partsBy, PARTITION_WORDS)),

@@ -13,3 +13,11 @@ export const METRES_PER: Record<LinearUnit, number> = {
 
 export const UP_AXES = ['y', 'z'] as const;
 export type UpAxis = (typeof UP_AXES)[number];
+
+/** What becomes of a file that states another unit or up axis than the show's. */
+export const OTHER_SPACE_WORDS = ['convert', 'refuse'] as const;
+export type OtherSpace = (typeof OTHER_SPACE_WORDS)[number];
+
+/** How a file's axes are turned into the show's: not at all, or by a quarter turn about x. */
+export const TURN_WORDS = ['none', 'y-to-z', 'z-to-y'] as const;
+export type Turn = (typeof TURN_WORDS)[number];
