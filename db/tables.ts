@@ -7,6 +7,7 @@ import { assets } from './schema/assets';
 import { auditEvents } from './schema/audit-events';
 import { auditItems } from './schema/audit-items';
 import { blobs } from './schema/blobs';
+import { fileFaults } from './schema/file-faults';
 import { findings } from './schema/findings';
 import { geometryComponents } from './schema/geometry-components';
 import { geometryParts } from './schema/geometry-parts';
@@ -24,6 +25,7 @@ import { oneTimeLinks } from './schema/one-time-links';
 import { partCurrent } from './schema/part-current';
 import { parts } from './schema/parts';
 import { peopleTold } from './schema/people-told';
+import { queueTurns } from './schema/queue-turns';
 import { receiptRows } from './schema/receipt-rows';
 import { receipts } from './schema/receipts';
 import { settings } from './schema/settings';
@@ -35,6 +37,7 @@ import { signInAttempts } from './schema/sign-in-attempts';
 import { users } from './schema/users';
 import { valueSetters } from './schema/value-setters';
 import { withdrawals } from './schema/withdrawals';
+import { workers } from './schema/workers';
 
 /** Every table and relation under one name, as Drizzle's client wants it. */
 export const schema = {
@@ -46,6 +49,7 @@ export const schema = {
   auditEvents,
   auditItems,
   blobs,
+  fileFaults,
   findings,
   geometryComponents,
   geometryParts,
@@ -63,6 +67,7 @@ export const schema = {
   partCurrent,
   parts,
   peopleTold,
+  queueTurns,
   receiptRows,
   receipts,
   settings,
@@ -74,5 +79,6 @@ export const schema = {
   users,
   valueSetters,
   withdrawals,
+  workers,
   ...relations,
 };

@@ -1,5 +1,5 @@
 import { sql } from 'drizzle-orm';
-import { bigint, check, index, integer, pgTable, text, timestamp, uniqueIndex, uuid, type AnyPgColumn } from 'drizzle-orm/pg-core';
+import { bigint, boolean, check, index, integer, pgTable, text, timestamp, uniqueIndex, uuid, type AnyPgColumn } from 'drizzle-orm/pg-core';
 import { IMPORT_FILE_STATES } from '../../lib/rules/states';
 import { assetVersions } from './asset-versions';
 import { assets } from './assets';
@@ -45,6 +45,21 @@ export const importFiles = pgTable(
     /** The line with a caret under the column, cut to a window; null where the whole file is meant. */
     errorExcerpt: text('error_excerpt'),
     attempts: integer('attempts').notNull().default(0),
+    /** Where the plan of its import puts it, written when it is queued: it waits until then. The ordinal is its place in the import. */
+    plannedAsset: text('planned_asset'),
+    plannedVersion: integer('planned_version'),
+    plannedCategory: text('planned_category'),
+    plannedQualified: boolean('planned_qualified').notNull().default(false),
+    ordinal: integer('ordinal'),
+    queuedAt: timestamp('queued_at', { withTimezone: true }),
+    /** Faces, where they were counted before measuring. */
+    faces: integer('faces'),
+    /** After a passing fault: when it may be tried again, and whether with nothing beside it, since it may have taken its neighbours down. */
+    tryAfter: timestamp('try_after', { withTimezone: true }),
+    isAlone: boolean('is_alone').notNull().default(false),
+    /** The worker that has it in hand, and since when. */
+    worker: text('worker'),
+    startedAt: timestamp('started_at', { withTimezone: true }),
     /** A worker holds the file until then; past it another may take it. */
     leaseUntil: timestamp('lease_until', { withTimezone: true }),
     leaseBy: uuid('lease_by'),
@@ -60,6 +75,9 @@ export const importFiles = pgTable(
     index('import_files_open_idx')
       .on(t.importId, t.state)
       .where(sql`state in ('queued', 'reading', 'measuring')`),
+    index('import_files_waiting_idx')
+      .on(t.importId, t.ordinal)
+      .where(sql`state in ('queued', 'reading', 'measuring') and queued_at is not null`),
     index('import_files_changed_idx').on(t.importId, t.changed),
     check('import_files_state', oneOf(t.state, IMPORT_FILE_STATES)),
     check('import_files_end', sql`(${t.state} in ('done', 'failed')) = (${t.endedAt} is not null)`),

@@ -29,6 +29,8 @@ export const imports = pgTable(
     createdAt: timestamp('created_at', { withTimezone: true }).notNull().defaultNow(),
     submittedAt: timestamp('submitted_at', { withTimezone: true }),
     endedAt: timestamp('ended_at', { withTimezone: true }),
+    /** Set while its waiting files are left alone. */
+    pausedAt: timestamp('paused_at', { withTimezone: true }),
     /** When the person who opened it was last seen watching it, to some seconds. */
     watchedAt: timestamp('watched_at', { withTimezone: true }),
   },
