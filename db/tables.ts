@@ -34,6 +34,9 @@ import { shotOverrides } from './schema/shot-overrides';
 import { shots } from './schema/shots';
 import { shows } from './schema/shows';
 import { signInAttempts } from './schema/sign-in-attempts';
+import { storageUsage } from './schema/storage-usage';
+import { uploadParts } from './schema/upload-parts';
+import { uploads } from './schema/uploads';
 import { users } from './schema/users';
 import { valueSetters } from './schema/value-setters';
 import { withdrawals } from './schema/withdrawals';
@@ -76,6 +79,9 @@ export const schema = {
   shots,
   shows,
   signInAttempts,
+  storageUsage,
+  uploadParts,
+  uploads,
   users,
   valueSetters,
   withdrawals,

@@ -78,6 +78,7 @@ export const importFiles = pgTable(
     index('import_files_waiting_idx')
       .on(t.importId, t.ordinal)
       .where(sql`state in ('queued', 'reading', 'measuring') and queued_at is not null`),
+    index('import_files_sha256_idx').on(t.sha256),
     index('import_files_changed_idx').on(t.importId, t.changed),
     check('import_files_state', oneOf(t.state, IMPORT_FILE_STATES)),
     check('import_files_end', sql`(${t.state} in ('done', 'failed')) = (${t.endedAt} is not null)`),
