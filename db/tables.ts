@@ -23,6 +23,7 @@ import { members } from './schema/members';
 import { notices } from './schema/notices';
 import { oneTimeLinks } from './schema/one-time-links';
 import { partCurrent } from './schema/part-current';
+import { partRenames } from './schema/part-renames';
 import { parts } from './schema/parts';
 import { peopleTold } from './schema/people-told';
 import { queueTurns } from './schema/queue-turns';
@@ -68,6 +69,7 @@ export const schema = {
   notices,
   oneTimeLinks,
   partCurrent,
+  partRenames,
   parts,
   peopleTold,
   queueTurns,

@@ -15,6 +15,7 @@ export const appendOnlyTables: Readonly<Record<string, readonly string[]>> = {
   approvals: [],
   withdrawals: [],
   value_setters: [],
+  part_renames: [],
   locks: ['unlocked_at', 'unlocked_by', 'unlock_reason'],
   lock_claims: ['released_at'],
   shot_overrides: ['dropped_at', 'dropped_by'],

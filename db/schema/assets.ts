@@ -16,6 +16,9 @@ export const assets = pgTable(
     category: text('category', { enum: CATEGORIES }).notNull().default('other'),
     /** Id of the asset in the studio's own systems. */
     outsideId: text('outside_id'),
+    /** The name and the folders that its first file was read to, before a folder joined the code; null where its sender said the asset. */
+    readName: text('read_name'),
+    readPlace: text('read_place'),
     /** Uniform scale of the geometry (child, giant): mass by s³ and inertia by s⁵ at equal density. */
     scale: doublePrecision('scale').notNull().default(1),
     archivedAt: timestamp('archived_at', { withTimezone: true }),

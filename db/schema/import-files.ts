@@ -1,5 +1,6 @@
 import { sql } from 'drizzle-orm';
-import { bigint, boolean, check, index, integer, pgTable, text, timestamp, uniqueIndex, uuid, type AnyPgColumn } from 'drizzle-orm/pg-core';
+import { bigint, boolean, check, index, integer, jsonb, pgTable, text, timestamp, uniqueIndex, uuid, type AnyPgColumn } from 'drizzle-orm/pg-core';
+import type { StoredPlan } from '../../lib/rules/import-plan';
 import { IMPORT_FILE_STATES } from '../../lib/rules/states';
 import { assetVersions } from './asset-versions';
 import { assets } from './assets';
@@ -27,6 +28,8 @@ export const importFiles = pgTable(
     versionOverride: integer('version_override'),
     outsideIdOverride: text('outside_id_override'),
     categoryOverride: text('category_override'),
+    /** Where the names put the file, decided for all files together when the import was submitted; null before. */
+    plan: jsonb('plan').$type<StoredPlan>(),
     assetId: uuid('asset_id').references(() => assets.id, { onDelete: 'restrict' }),
     versionId: uuid('version_id').references((): AnyPgColumn => assetVersions.id, { onDelete: 'restrict' }),
     parts: integer('parts'),

@@ -22,6 +22,8 @@ export const imports = pgTable(
     partsBy: text('parts_by', { enum: PARTITION_WORDS }).notNull(),
     weld: boolean('weld').notNull().default(false),
     turnFaces: boolean('turn_faces').notNull().default(false),
+    /** Name pattern of this import alone; empty for the built-in rule, null for the show's. */
+    namePattern: text('name_pattern'),
     otherSpace: text('other_space', { enum: OTHER_SPACE_WORDS }).notNull().default('convert'),
     createdBy: uuid('created_by')
       .notNull()

@@ -5,7 +5,7 @@ import { shots } from './shots';
 import { users } from './users';
 
 /** What an input of a value came with. */
-export const SETTER_ACTS = ['setting', 'version', 'scale', 'material', 'rule'] as const;
+export const SETTER_ACTS = ['setting', 'version', 'scale', 'material', 'rule', 'rename'] as const;
 
 /**
  * Who changed a hashed input of a part's value, one row an act and part. Whoever stands here after the last approval cannot

@@ -21,6 +21,9 @@ export interface PlannedFile {
   duplicate: boolean;
 }
 
+/** What of a plan is kept with an import's file, so that a later change of the pattern or of the show moves nothing. */
+export type StoredPlan = Omit<PlannedFile, 'name'>;
+
 /** Versions of an asset that the show has: `highest` null for an asset without one. */
 export interface KnownAsset {
   asset: string;
