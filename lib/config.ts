@@ -19,8 +19,36 @@ const schema = z.object({
   LOG_LEVEL: z.enum(['trace', 'debug', 'info', 'warn', 'error', 'silent']).default('info'),
   WEIGHHOUSE_MAX_FILE_BYTES: z.coerce.number().int().positive().default(2 * 1024 ** 3),
   WEIGHHOUSE_MAX_IMPORT_FILES: z.coerce.number().int().positive().default(20_000),
+  WEIGHHOUSE_MAX_IMPORT_BYTES: z.coerce.number().int().positive().default(200 * 1024 ** 3),
+  /** Content of one show, and of all shows together; the same content counts once in each. */
+  WEIGHHOUSE_MAX_SHOW_BYTES: z.coerce.number().int().positive().default(1024 ** 4),
+  WEIGHHOUSE_MAX_STUDIO_BYTES: z.coerce.number().int().positive().default(4 * 1024 ** 4),
+  /** How long the parts of an unfinished upload are kept after the last one came. */
+  WEIGHHOUSE_UPLOAD_HOURS: z.coerce.number().positive().max(24 * 365).default(72),
+  /** How long stored bytes stay that nothing refers to. Not shorter than two hours: what is being registered must not be swept. */
+  WEIGHHOUSE_ORPHAN_HOURS: z.coerce.number().min(2).default(48),
+  /** A bucket puts files into S3 in place of the data folder. */
+  WEIGHHOUSE_S3_BUCKET: z.string().min(1).optional(),
+  WEIGHHOUSE_S3_ENDPOINT: z.string().url().optional(),
+  WEIGHHOUSE_S3_REGION: z.string().min(1).default('us-east-1'),
+  /** Without keys the environment's own are used: a role of the machine, a shared file. */
+  WEIGHHOUSE_S3_ACCESS_KEY: z.string().min(1).optional(),
+  WEIGHHOUSE_S3_SECRET_KEY: z.string().min(1).optional(),
+  WEIGHHOUSE_S3_PATH_STYLE: z.enum(['0', '1']).default('0'),
   WEIGHHOUSE_ENGINE_THREADS: z.coerce.number().int().positive().optional(),
 });
+
+function s3Of(env: z.infer<typeof schema>, bucket: string) {
+  const { WEIGHHOUSE_S3_ACCESS_KEY: accessKeyId, WEIGHHOUSE_S3_SECRET_KEY: secretAccessKey } = env;
+  if ((accessKeyId === undefined) !== (secretAccessKey === undefined)) throw new Error('WEIGHHOUSE_S3_ACCESS_KEY and WEIGHHOUSE_S3_SECRET_KEY: give both or neither.');
+  return {
+    bucket,
+    endpoint: env.WEIGHHOUSE_S3_ENDPOINT ?? null,
+    region: env.WEIGHHOUSE_S3_REGION,
+    keys: accessKeyId !== undefined && secretAccessKey !== undefined ? { accessKeyId, secretAccessKey } : null,
+    pathStyle: env.WEIGHHOUSE_S3_PATH_STYLE === '1',
+  };
+}
 
 function read() {
   // An empty value means unset: so a line of .env can be taken back for one process.
@@ -46,6 +74,12 @@ function read() {
     logLevel: env.LOG_LEVEL,
     maxFileBytes: env.WEIGHHOUSE_MAX_FILE_BYTES,
     maxImportFiles: env.WEIGHHOUSE_MAX_IMPORT_FILES,
+    maxImportBytes: env.WEIGHHOUSE_MAX_IMPORT_BYTES,
+    maxShowBytes: env.WEIGHHOUSE_MAX_SHOW_BYTES,
+    maxStudioBytes: env.WEIGHHOUSE_MAX_STUDIO_BYTES,
+    uploadHours: env.WEIGHHOUSE_UPLOAD_HOURS,
+    orphanHours: env.WEIGHHOUSE_ORPHAN_HOURS,
+    s3: env.WEIGHHOUSE_S3_BUCKET === undefined ? null : s3Of(env, env.WEIGHHOUSE_S3_BUCKET),
     engineThreads: env.WEIGHHOUSE_ENGINE_THREADS ?? null,
   };
 }

@@ -13,6 +13,7 @@ export const STATUS_OF = {
   wrong_media_type: 415,
   too_many_requests: 429,
   not_available: 503,
+  storage_full: 507,
 } as const;
 
 export type ErrorCode = keyof typeof STATUS_OF;
