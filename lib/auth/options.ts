@@ -2,6 +2,8 @@ import type { NextAuthOptions } from 'next-auth';
 import CredentialsProvider from 'next-auth/providers/credentials';
 import { database } from '@/db/client';
 import { config } from '@/lib/config';
+import { notifySignOut } from '@/lib/imports/notify-import';
+import { log } from '@/lib/log';
 import { sessionCookie } from './session-cookie';
 import { verifyCredentials } from './verify-credentials';
 
@@ -47,6 +49,11 @@ export function authOptions(): NextAuthOptions {
         },
       }),
     ],
+    events: {
+      async signOut({ token }) {
+        if (token?.userId) await notifySignOut(database(), token.userId).catch((error: unknown) => log.warn({ err: error }, 'a sign-out could not be told'));
+      },
+    },
     callbacks: {
       jwt({ token, user }) {
         if (user) {

@@ -4,6 +4,7 @@ import { importFiles } from '@/db/schema/import-files';
 import { users } from '@/db/schema/users';
 import type { ImportAnswer, ImportCounts } from '@/lib/rules/import-answer';
 import type { ImportRow } from './get-import-row';
+import { importSecondsLeft } from './import-pace';
 
 /** An import as the API answers it, without its files. */
 export async function describeImport(db: Executor, row: ImportRow): Promise<ImportAnswer> {
@@ -14,13 +15,15 @@ export async function describeImport(db: Executor, row: ImportRow): Promise<Impo
     counts.total += files;
   }
   const [creator] = await db.select({ name: users.name }).from(users).where(eq(users.id, row.createdBy));
-  return answerOf(row, counts, creator?.name ?? '');
+  const left = row.state === 'queued' || row.state === 'running' ? await importSecondsLeft(db, row.id) : null;
+  return { ...answerOf(row, counts, creator?.name ?? ''), seconds_left: left };
 }
 
 export function answerOf(row: ImportRow, counts: ImportCounts, createdBy: string): ImportAnswer {
   return {
     id: row.id,
     state: row.state,
+    paused: row.pausedAt !== null,
     scheme: row.scheme,
     boundary: row.boundary,
     parts_by: row.partsBy,

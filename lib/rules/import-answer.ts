@@ -13,6 +13,10 @@ export const REMARKS = {
   unit_too_large: 'The whole asset measures more than 200 m. The file’s unit does not look like the show’s.',
   unit_unlike_before: 'This version is larger or smaller than the one before by the ratio of two units. Export it in the show’s unit.',
   unit_unlike_show: 'The whole asset is more than 50 times larger or smaller than the show’s assets usually are. Check the unit of the file.',
+  converted_unit: 'The file states another unit than the show’s: its lengths were converted.',
+  turned_axis: 'The file states another up axis than the show’s: it was turned by a quarter about X.',
+  unpacked: 'The archive became files of its own.',
+  read_beside: 'Read with the mesh beside it.',
 } as const;
 export type Remark = keyof typeof REMARKS;
 
@@ -20,7 +24,7 @@ export type Remark = keyof typeof REMARKS;
 export const doubtsUnit = (remark: Remark): boolean => remark.startsWith('unit_');
 
 /** Remarks that deserve a look; the others are for the record. */
-export const LOUD_REMARKS: readonly Remark[] = ['unit_too_small', 'unit_too_large', 'unit_unlike_before', 'unit_unlike_show', 'next_take', 'gap', 'qualified'];
+export const LOUD_REMARKS: readonly Remark[] = ['unit_too_small', 'unit_too_large', 'unit_unlike_before', 'unit_unlike_show', 'converted_unit', 'turned_axis', 'next_take', 'gap', 'qualified'];
 
 /** Largest dimension of an asset, metres, outside which its unit is doubted. */
 export const SMALLEST_ASSET_M = 0.005;
@@ -31,6 +35,16 @@ export interface ImportFileError {
   message: string;
   line: number | null;
   column: number | null;
+  /** The line with a caret under the column; null where the whole file is meant. */
+  excerpt?: string | null;
+}
+
+/** A fault that may pass: storage or database out of reach, a worker that fell silent. */
+export interface FileTrouble {
+  /** How often the file was begun. */
+  attempt: number;
+  message: string;
+  again_at: string;
 }
 
 /** One file of an import. `size_m` is the box of the whole asset in its own axes, metres: x, y, z. */
@@ -46,6 +60,8 @@ export interface ImportFileAnswer {
   sha256: string;
   bytes: number;
   error: ImportFileError | null;
+  /** The last fault of a file that will be tried again, and when; null where there was none, and once it has ended. */
+  trouble?: FileTrouble | null;
 }
 
 /** Files by state; `total` of them. */
@@ -54,6 +70,8 @@ export type ImportCounts = Record<ImportFileState, number> & { total: number };
 export interface ImportAnswer {
   id: string;
   state: ImportState;
+  /** Whether its waiting files are left alone until it is resumed. */
+  paused: boolean;
   scheme: SchemeWord;
   boundary: BoundaryWord;
   parts_by: PartitionWord;
@@ -65,10 +83,14 @@ export interface ImportAnswer {
   submitted_at: string | null;
   ended_at: string | null;
   counts: ImportCounts;
+  /** Until its end at the pace of the last two minutes; null while that cannot be told. */
+  seconds_left?: number | null;
 }
 
 /** Answer of GET …/imports/{id}; an event of …/events has the files that changed alone. */
 export interface ImportDetail extends ImportAnswer {
+  /** How far this answer knows: sent as Last-Event-ID, …/events tells what came after it. */
+  mark: string;
   files: ImportFileAnswer[];
 }
 
