@@ -21,8 +21,8 @@ import {
   type PartitionWord,
   type SchemeWord,
 } from '@/lib/rules/measure-words';
-import { BOUNDARY_NAMES, PARTITION_NAMES, UNIT_NAMES, UP_AXIS_NAMES } from '@/lib/rules/show-words';
-import { LINEAR_UNITS, UP_AXES, type LinearUnit, type UpAxis } from '@/lib/rules/units';
+import { BOUNDARY_NAMES, OTHER_SPACE_NAMES, PARTITION_NAMES, UNIT_NAMES, UP_AXIS_NAMES } from '@/lib/rules/show-words';
+import { LINEAR_UNITS, OTHER_SPACE_WORDS, UP_AXES, type LinearUnit, type OtherSpace, type UpAxis } from '@/lib/rules/units';
 import { wordsToOptions } from '@/lib/rules/words-to-options';
 import { NamePatternField } from './name-pattern-field';
 import { schemeOptions } from './scheme-options';
@@ -35,6 +35,7 @@ export interface ShowSettings {
   scheme: SchemeWord;
   boundary: BoundaryWord;
   parts_by: PartitionWord;
+  other_space: OtherSpace;
   name_pattern: string | null;
   self_approval: boolean;
   tolerance_mass_percent: number;
@@ -66,10 +67,10 @@ function readPercent(typed: string | number): number {
 export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps) {
   const router = useRouter();
   const [more, setMore] = useState(false);
-  const { code, title, linear_unit, up_axis, scheme: storedScheme, boundary, parts_by, self_approval, frozen, archived } = show;
+  const { code, title, linear_unit, up_axis, scheme: storedScheme, boundary, parts_by, other_space, self_approval, frozen, archived } = show;
   const { tolerance_mass_percent, tolerance_com_percent, tolerance_moments_percent } = show;
   const name_pattern = show.name_pattern ?? '';
-  const stored = { show: code, title, linear_unit, up_axis, scheme: storedScheme, boundary, parts_by, name_pattern, self_approval, tolerance_mass_percent, tolerance_com_percent, tolerance_moments_percent };
+  const stored = { show: code, title, linear_unit, up_axis, scheme: storedScheme, boundary, parts_by, other_space, name_pattern, self_approval, tolerance_mass_percent, tolerance_com_percent, tolerance_moments_percent };
   const { form, onSubmit, refusal, busy, errorOf } = useActionForm({
     schema: editShowInput,
     defaultValues: stored,
@@ -144,6 +145,14 @@ export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps)
           options={wordsToOptions(PARTITION_WORDS, PARTITION_NAMES)}
           disabled={locked}
           error={errorOf('parts_by')}
+        />
+        <SelectField
+          control={control}
+          name="other_space"
+          label="Files in another unit or up axis"
+          options={wordsToOptions(OTHER_SPACE_WORDS, OTHER_SPACE_NAMES)}
+          disabled={locked}
+          error={errorOf('other_space')}
         />
         <div className="sm:col-span-2">
           <Controller

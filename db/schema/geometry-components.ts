@@ -4,7 +4,7 @@ import { finite, finiteNotNegative } from './checks';
 import { geometryParts } from './geometry-parts';
 
 /**
- * A connected component of a part, in the file's own unit and axes, at unit density. Second moments are integrals of products
+ * A connected component of a part, in the record's unit and axes, at unit density. Second moments are integrals of products
  * about the component's own centroid (matrix entries of ∫ x xᵀ). Volume is signed: a cavity counts negative.
  */
 export const geometryComponents = pgTable(

@@ -3,7 +3,7 @@ import { sql } from 'drizzle-orm';
 import { finite, finiteNotNegative } from './checks';
 import { geometryRecords } from './geometry-records';
 
-/** A part as one geometry record found it. Lengths in the file's own unit. */
+/** A part as one geometry record found it. Lengths in the file's own unit times the record's unit scale. */
 export const geometryParts = pgTable(
   'geometry_parts',
   {

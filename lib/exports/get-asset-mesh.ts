@@ -30,11 +30,12 @@ export async function getAssetMesh(context: Context, input: AssetMeshInput, requ
   const { asset, version, record } = await getCurrentAsset(db, show.id, input.asset, input.version);
   const [file] = version.importFileId ? await db.select({ name: importFiles.name }).from(importFiles).where(eq(importFiles.id, version.importFileId)) : [];
   if (!file) throw new StudioError('not_found', `The cage of ${asset.code} ${version.label} is not in storage.`);
-  const { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces, contentSha256: sha256 } = record;
+  const { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces, contentSha256: sha256, unitScale, turn } = record;
   const task = {
     name: file.name,
     sha256,
     options: { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces },
+    placing: { unitScale, turn },
     level: displayLevel(record.faces),
     metresPerUnit: METRES_PER[show.linearUnit] * asset.scale,
   };

@@ -6,17 +6,26 @@ import { geometryParts } from '@/db/schema/geometry-parts';
 import { geometryRecords } from '@/db/schema/geometry-records';
 import { ENGINE_VERSION } from '@/lib/engine/measure';
 import type { MeasuredCage, MeasureOptions } from '@/lib/engine/measured';
+import { AS_IT_IS, type Placing, type StatedSpace } from './file-space';
 
 /** Rows of one insert: PostgreSQL takes at most 65,535 parameters in a statement. */
 const CHUNK = 1_000;
 
-export interface RecordKey {
+/** What a file is and how it is measured. */
+export interface FileKey {
   sha256: string;
   options: MeasureOptions;
+  /** Hash of the files that were read beside it; left out for a file that was read alone. */
+  besideSha256?: string;
+}
+
+/** Key of a record: the file's, and what was done to it on reading, which is nothing unless said. The record's lengths and axes are those that came of it. */
+export interface RecordKey extends FileKey {
+  placing?: Placing;
 }
 
 /** Id of the measurement of these bytes under these options by this engine, if it was made before. */
-export async function findGeometryRecord(db: Executor, { sha256, options }: RecordKey): Promise<string | null> {
+export async function findGeometryRecord(db: Executor, { sha256, options, besideSha256 = '', placing = AS_IT_IS }: RecordKey): Promise<string | null> {
   const r = geometryRecords;
   const [found] = await db
     .select({ id: r.id })
@@ -31,17 +40,21 @@ export async function findGeometryRecord(db: Executor, { sha256, options }: Reco
         eq(r.partsBy, options.partsBy),
         eq(r.weld, options.weld === true),
         eq(r.turnFaces, options.turnFaces === true),
+        eq(r.besideSha256, besideSha256),
+        eq(r.unitScale, placing.unitScale),
+        eq(r.turn, placing.turn),
         eq(r.engineVersion, ENGINE_VERSION),
       ),
     );
   return found?.id ?? null;
 }
 
-/** Stores a measurement; answers the id of the equal one where another transaction was first. */
-export async function writeGeometryRecord(tx: Transaction, key: RecordKey, cage: MeasuredCage): Promise<string> {
+/** Stores a measurement, with what the file states of its space; answers the id of the equal one where another transaction was first. */
+export async function writeGeometryRecord(tx: Transaction, key: RecordKey, cage: MeasuredCage, stated?: StatedSpace): Promise<string> {
+  const { besideSha256 = '', placing = AS_IT_IS } = key;
   const [record] = await tx
     .insert(geometryRecords)
-    .values({ contentSha256: key.sha256, ...key.options, engineVersion: ENGINE_VERSION, faces: cage.faces, vertices: cage.vertices })
+    .values({ contentSha256: key.sha256, ...key.options, besideSha256, ...placing, statedMetresPerUnit: stated?.metresPerUnit ?? null, statedUpAxis: stated?.upAxis ?? null, engineVersion: ENGINE_VERSION, faces: cage.faces, vertices: cage.vertices })
     .onConflictDoNothing()
     .returning({ id: geometryRecords.id });
   if (!record) {

@@ -10,7 +10,8 @@ import type { PlannedFile } from '@/lib/rules/import-plan';
 import { refreshAssetValues } from '@/lib/values/refresh-asset-values';
 import { endFile, lockHeldFile } from './end-file';
 import { findReusableRecord } from './find-reusable-record';
-import { summariseRecord, writeGeometryRecord } from './geometry-record';
+import type { Placing, StatedSpace } from './file-space';
+import { summariseRecord, writeGeometryRecord, type FileKey } from './geometry-record';
 import type { ImportRow } from './get-import-row';
 import { markMeasuring, startFile } from './lease';
 import { showSpace } from './show-space';
@@ -42,15 +43,16 @@ export async function measureImportFile(work: FileWork, fileId: string, plan: Pl
   if (plan.asset === null) return failFile(work, fileId, { code: 'name_not_matched', message: 'The name does not match the show’s pattern. Give an asset, or change the pattern.', line: null, column: null });
   const { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces } = importRow;
   const key = { sha256: file.sha256, options: { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces } satisfies MeasureOptions };
-  const known = await findReusableRecord(db, key, { name: file.name, showId: importRow.showId });
-  let cage: MeasuredCage | null = null;
+  const space = await showSpace(db, importRow.showId, importRow.otherSpace);
+  const known = await findReusableRecord(db, key, { name: file.name, showId: importRow.showId, space });
+  let measured: Measured | null = null;
   if (known === null) {
-    const outcome = await work.engine.measure({ name: file.name, ...key, space: await showSpace(db, importRow.showId) }, () => void markMeasuring(db, fileId, holder).catch(() => undefined));
+    const outcome = await work.engine.measure({ name: file.name, ...key, space }, () => void markMeasuring(db, fileId, holder).catch(() => undefined));
     if (!outcome.ok) return failFile(work, fileId, errorOf(file.name, outcome));
-    cage = outcome.cage;
+    measured = outcome;
   }
   try {
-    await db.transaction((tx) => endMeasured(tx, work, fileId, { ...plan, asset: plan.asset! }, key, known, cage));
+    await db.transaction((tx) => endMeasured(tx, work, fileId, { ...plan, asset: plan.asset! }, key, known, measured));
   } catch (error) {
     const reference = refusedNumbers(error);
     if (reference === null) throw error;
@@ -59,19 +61,26 @@ export async function measureImportFile(work: FileWork, fileId: string, plan: Pl
   }
 }
 
+/** What measuring gave, and how the file was brought into the show's space. */
+interface Measured {
+  cage: MeasuredCage;
+  placing: Placing;
+  stated: StatedSpace;
+}
+
 async function endMeasured(
   tx: Transaction,
   work: FileWork,
   fileId: string,
   plan: PlannedFile & { asset: string },
-  key: { sha256: string; options: MeasureOptions },
+  key: FileKey,
   known: string | null,
-  cage: MeasuredCage | null,
+  measured: Measured | null,
 ): Promise<void> {
   const held = await lockHeldFile(tx, fileId, work.holder);
   if (!held) return;
   const { showId, createdBy } = work.importRow;
-  const recordId = known ?? (await writeGeometryRecord(tx, key, cage!));
+  const recordId = known ?? (await writeGeometryRecord(tx, { ...key, placing: measured!.placing }, measured!.cage, measured!.stated));
   const version = await writeVersion(tx, { showId, plan, outsideId: held.outsideIdOverride, recordId, ...key, importFileId: fileId, createdBy });
   const summary = await summariseRecord(tx, recordId);
   const remarks = [...version.remarks, ...(await unitRemarks(tx, { showId, assetId: version.assetId, recordId }))];

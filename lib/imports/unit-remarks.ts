@@ -2,6 +2,7 @@ import { and, desc, eq, ne, sql } from 'drizzle-orm';
 import type { Transaction } from '@/db/client';
 import { assetVersions } from '@/db/schema/asset-versions';
 import { geometryParts } from '@/db/schema/geometry-parts';
+import { geometryRecords } from '@/db/schema/geometry-records';
 import { shows } from '@/db/schema/shows';
 import type { MeasuredPart } from '@/lib/engine/measured';
 import { diagnoseSize, extentOf } from '@/lib/engine/size-habit';
@@ -16,11 +17,17 @@ const FEWEST_ASSETS = 5;
 
 type PartBox = Pick<MeasuredPart, 'name' | 'bounds'>;
 
+/** What was done to the file of a version just written, so that it stands in the show's unit and axes, and whether its size speaks for another unit all the same. */
+export async function unitRemarks(tx: Transaction, version: { showId: string; assetId: string; recordId: string }): Promise<Remark[]> {
+  const [placed] = await tx.select({ unitScale: geometryRecords.unitScale, turn: geometryRecords.turn }).from(geometryRecords).where(eq(geometryRecords.id, version.recordId));
+  return [...(placed.unitScale === 1 ? [] : (['converted_unit'] as const)), ...(placed.turn === 'none' ? [] : (['turned_axis'] as const)), ...(await sizeRemarks(tx, version))];
+}
+
 /**
  * Whether the file of a version just written looks as if it were in another unit: too small or large for anything that a show films, unlike the version before by the
  * ratio of two units, or far from what the show's other assets measure (the median of their largest dimensions). One remark at most.
  */
-export async function unitRemarks(tx: Transaction, { showId, assetId, recordId }: { showId: string; assetId: string; recordId: string }): Promise<Remark[]> {
+async function sizeRemarks(tx: Transaction, { showId, assetId, recordId }: { showId: string; assetId: string; recordId: string }): Promise<Remark[]> {
   const parts = await boxesOf(tx, recordId);
   const extent = extentOf(parts);
   if (!extent || !(Math.max(...extent) > 0)) return [];
@@ -39,7 +46,7 @@ async function boxesOf(tx: Transaction, recordId: string): Promise<PartBox[]> {
   return parts.map(({ name, minX, minY, minZ, maxX, maxY, maxZ }) => ({ name, bounds: [minX, minY, minZ, maxX, maxY, maxZ] }));
 }
 
-/** Largest dimension of the asset's latest version of another measurement, file units; null where there is none. */
+/** Largest dimension of the asset's latest version of another measurement, show units; null where there is none. */
 async function sizeBefore(tx: Transaction, assetId: string, recordId: string): Promise<number | null> {
   const [before] = await tx
     .select({ recordId: assetVersions.recordId })
@@ -51,7 +58,7 @@ async function sizeBefore(tx: Transaction, assetId: string, recordId: string): P
   return extent && Math.max(...extent);
 }
 
-/** Median of the largest dimensions of the show's other assets, file units; null where they are too few to make a habit. */
+/** Median of the largest dimensions of the show's other assets, show units; null where they are too few to make a habit. */
 async function usualSize(tx: Transaction, showId: string, assetId: string): Promise<number | null> {
   const { rows } = await tx.execute<{ usual: number | null; assets: string }>(sql`
     select percentile_cont(0.5) within group (order by size) as usual, count(*) as assets

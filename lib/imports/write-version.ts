@@ -15,6 +15,7 @@ export interface NewVersion {
   recordId: string;
   sha256: string;
   options: MeasureOptions;
+  besideSha256?: string;
   importFileId: string;
   createdBy: string;
 }
@@ -60,19 +61,31 @@ export async function writeVersion(tx: Transaction, input: NewVersion): Promise<
 }
 
 async function lockAsset(tx: Transaction, { showId, plan, outsideId }: NewVersion): Promise<{ id: string }> {
-  await tx.insert(assets).values({ showId, code: plan.asset, category: plan.category, outsideId }).onConflictDoNothing();
+  await tx.insert(assets).values({ showId, code: plan.asset, category: plan.category, outsideId, readName: plan.readName }).onConflictDoNothing();
   const [asset] = await tx
-    .select({ id: assets.id, outsideId: assets.outsideId })
+    .select({ id: assets.id, outsideId: assets.outsideId, readPlace: assets.readPlace })
     .from(assets)
     .where(and(eq(assets.showId, showId), eq(assets.code, plan.asset)))
     .for('no key update');
+  const readPlace = withPlace(asset.readPlace, plan.place);
+  if (readPlace !== asset.readPlace) await tx.update(assets).set({ readPlace }).where(eq(assets.id, asset.id));
   if (outsideId !== null && asset.outsideId !== outsideId) await tx.update(assets).set({ outsideId }).where(eq(assets.id, asset.id));
   return asset;
 }
 
-function isEqual(record: typeof geometryRecords.$inferSelect, { sha256, options }: NewVersion): boolean {
+/** An asset whose files come from ever new folders keeps the newest of them. */
+const MOST_PLACES = 20;
+
+/** The folders that an asset's files came from, a line each, with those of one more file. */
+function withPlace(places: string | null, place: string): string | null {
+  const known = places?.split('\n') ?? [];
+  return place === '' || known.includes(place) ? places : [...known, place].slice(-MOST_PLACES).join('\n');
+}
+
+function isEqual(record: typeof geometryRecords.$inferSelect, { sha256, options, besideSha256 = '' }: NewVersion): boolean {
   return (
     record.contentSha256 === sha256 &&
+    record.besideSha256 === besideSha256 &&
     record.scheme === options.scheme &&
     record.boundary === options.boundary &&
     record.triangles === options.triangles &&

@@ -8,7 +8,7 @@ import { threadFile } from './thread-file';
 /** What measures files beside the event loop, so that heartbeats go on during a long solve. */
 export interface EnginePool {
   threads: number;
-  measure(file: Pick<MeasureTask, 'name' | 'sha256' | 'options' | 'space'>, onMeasuring?: () => void): Promise<MeasureOutcome>;
+  measure(file: Pick<MeasureTask, 'name' | 'sha256' | 'options' | 'space' | 'beside'>, onMeasuring?: () => void): Promise<MeasureOutcome>;
   close(): Promise<void>;
 }
 

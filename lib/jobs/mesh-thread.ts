@@ -4,6 +4,8 @@ import { displayMesh } from '@/lib/engine/display';
 import type { MeasureOptions } from '@/lib/engine/measured';
 import { assetGlb } from '@/lib/exports/asset-glb';
 import { readMesh } from '@/lib/formats/read-mesh';
+import type { Placing } from '@/lib/imports/file-space';
+import { placeCage } from '@/lib/imports/place-cage';
 import { readBlob } from '@/lib/storage/read-blob';
 
 export interface MeshTask {
@@ -11,9 +13,11 @@ export interface MeshTask {
   name: string;
   sha256: string;
   options: MeasureOptions;
+  /** What was done to the cage before it was measured. */
+  placing: Placing;
   /** Refinements of the limit surface. */
   level: number;
-  /** Metres per file unit at the asset's scale. */
+  /** Metres per unit of the placed cage at the asset's scale. */
   metresPerUnit: number;
   /** Where the GLB goes. */
   path: string;
@@ -22,6 +26,7 @@ export interface MeshTask {
 /** Makes the display mesh of a stored cage as a GLB file; answers hash and size of its bytes. */
 export default async function makeMesh(task: MeshTask): Promise<{ sha256: string; byteSize: number }> {
   const cage = await readMesh(task.name, await readBlob(task.sha256));
+  placeCage(cage, task.placing);
   const mesh = displayMesh(cage, task.options, task.level);
   const bytes = await assetGlb(cage, mesh, task.options.partsBy, task.metresPerUnit);
   await writeFile(task.path, bytes);

@@ -42,6 +42,7 @@ const FIELD_WORDS: Record<string, string> = {
   up_axis: 'up axis',
   parts_by: 'parts by',
   boundary: 'boundary rule',
+  other_space: 'files in another unit or axis',
   name_pattern: 'name pattern',
   self_approval: 'own values may be approved',
   tolerance_mass_percent: 'tolerance of the mass, %',

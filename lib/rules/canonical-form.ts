@@ -10,7 +10,7 @@ export const VALUE_FORM_NUMBERS = [
 /** The entries of a canonical text in their order. `from` names the cell of the row, or the field of the call value-inputs. */
 export const VALUE_FORM_ENTRIES: readonly { what: string; from: string }[] = [
   { what: `"${VALUE_FORM}", the name of this form`, from: '' },
-  { what: 'the geometry record: [SHA-256 of the file, scheme, boundary, triangles, creasing, parts by, engine version]; where the import mended the cage, "weld", "turn_faces" or "weld turn_faces" comes after it', from: 'geometry' },
+  { what: 'the geometry record: [SHA-256 of the file, scheme, boundary, triangles, creasing, parts by, engine version]; where more was done to the cage, it comes after it as words joined by blanks: "weld", "turn_faces", "scaled_by_" and the factor from the file’s unit to the show’s, "y-to-z" or "z-to-y" for turned axes, "beside_" and the hash of the files read beside it', from: 'geometry' },
   { what: '[asset, part]', from: 'asset, part' },
   { what: 'metres per unit of the file', from: 'metres_per_unit' },
   { what: 'scale of the asset', from: 'scale' },

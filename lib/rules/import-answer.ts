@@ -1,5 +1,6 @@
 import type { BoundaryWord, PartitionWord, SchemeWord } from './measure-words';
-import type { Category, ImportFileState, ImportState } from './states';
+import type { KnownAsset } from './known-asset';
+import type { ImportFileState, ImportState } from './states';
 
 /** What happened to a file beside its end. Codes as the API has them, with their sentences. */
 export const REMARKS = {
@@ -62,6 +63,45 @@ export interface ImportFileAnswer {
   error: ImportFileError | null;
   /** The last fault of a file that will be tried again, and when; null where there was none, and once it has ended. */
   trouble?: FileTrouble | null;
+  /** Of an archive that became files of its own: how many. */
+  unpacked_into?: number | null;
+}
+
+/** A finding of a file as its import shows it: the part by name, the first line of the file that it names. */
+export interface FileFinding {
+  code: string;
+  severity: 'problem' | 'warning';
+  message: string;
+  part: string | null;
+  count: number;
+  line: number | null;
+}
+
+/** A file on a page of an import's files: with the first problems and warnings of its measurement, and how many there are. */
+export interface ImportFileRow extends ImportFileAnswer {
+  warnings: number;
+  findings: FileFinding[];
+}
+
+/** Findings that a page shows of one file; the report has all. */
+export const FINDINGS_SHOWN = 8;
+
+export const FILE_FILTERS = ['all', 'failed', 'problems', 'warnings', 'going', 'unchanged'] as const;
+export type FileFilter = (typeof FILE_FILTERS)[number];
+
+/** What needs somebody first; or by a column, `-` turns it round. */
+export const FILE_SORTS = ['needs', 'name', '-name', 'asset', '-asset', 'parts', '-parts', 'problems', '-problems', 'bytes', '-bytes'] as const;
+export type FileSort = (typeof FILE_SORTS)[number];
+
+/** How many files each filter lets through. */
+export type FileFilterCounts = Record<FileFilter, number>;
+
+/** Answer of GET …/imports/{id}/files. `found` are the files that filter and search let through. */
+export interface ImportFilePage {
+  items: ImportFileRow[];
+  counts: FileFilterCounts;
+  found: number;
+  next_cursor: string | null;
 }
 
 /** Files by state; `total` of them. */
@@ -120,5 +160,5 @@ export interface ImportPreparation {
   extensions: string[];
   max_file_bytes: number;
   max_files: number;
-  assets: { asset: string; category: Category; versions: number[] }[];
+  assets: KnownAsset[];
 }

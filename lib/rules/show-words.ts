@@ -1,11 +1,14 @@
 import type { BoundaryWord, PartitionWord, SchemeWord } from './measure-words';
 import type { Role } from './roles';
-import type { LinearUnit, UpAxis } from './units';
+import type { LinearUnit, OtherSpace, UpAxis } from './units';
 
 /** The words of a show's choices, for forms. */
 export const UNIT_NAMES: Record<LinearUnit, string> = { mm: 'millimetre', cm: 'centimetre', dm: 'decimetre', m: 'metre', in: 'inch', ft: 'foot' };
 
 export const UP_AXIS_NAMES: Record<UpAxis, string> = { y: 'Y up', z: 'Z up' };
+
+/** What becomes of a file that states another unit or up axis than the show's. */
+export const OTHER_SPACE_NAMES: Record<OtherSpace, string> = { convert: 'Converted, and shown', refuse: 'Refused' };
 
 export const SCHEME_NAMES: Record<SchemeWord, string> = {
   'catmull-clark': 'Catmull-Clark',

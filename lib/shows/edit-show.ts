@@ -17,6 +17,7 @@ const COLUMN = {
   scheme: 'scheme',
   boundary: 'boundary',
   parts_by: 'partsBy',
+  other_space: 'otherSpace',
   name_pattern: 'namePattern',
   self_approval: 'selfApproval',
   tolerance_mass_percent: 'toleranceMassPercent',

@@ -10,6 +10,7 @@ export function showAnswer(show: Show) {
     scheme: show.scheme,
     boundary: show.boundary,
     parts_by: show.partsBy,
+    other_space: show.otherSpace,
     name_pattern: show.namePattern,
     self_approval: show.selfApproval,
     tolerance_mass_percent: show.toleranceMassPercent,

@@ -99,7 +99,8 @@ export async function loadValueInputs(db: Executor, assetIds: string[], partIds:
       s.id as setting_id, c.revision, a.code as asset, a.outside_id, a.category, a.scale, v.label as version,
       w.linear_unit, w.up_axis, p.name as part, g.faces, g.max_valence, g.min_x, g.min_y, g.min_z, g.max_x, g.max_y, g.max_z,
       r.content_sha256, r.scheme, r.boundary, r.triangles, r.creasing, r.parts_by, r.engine_version,
-      concat_ws(' ', case when r.weld then 'weld' end, case when r.turn_faces then 'turn_faces' end) as mended,
+      concat_ws(' ', case when r.weld then 'weld' end, case when r.turn_faces then 'turn_faces' end,
+        case when r.unit_scale <> 1 then 'scaled_by_' || r.unit_scale end, case when r.turn <> 'none' then r.turn end, case when r.beside_sha256 <> '' then 'beside_' || r.beside_sha256 end) as mended,
       s.construction, s.target_mass_kg, s.density_kg_m3, s.areal_density_kg_m2, s.wall_m, s.variant, s.left_out, s.set_from, s.set_at,
       u.name as set_by_name, m.id as material_id, m.name as material_name, m.revision as material_revision,
       m.density_kg_m3 as material_density, m.areal_density_kg_m2 as material_areal_density, coalesce(y.approvals, '[]') as approvals

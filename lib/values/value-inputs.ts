@@ -48,12 +48,12 @@ export interface RecordKey {
   triangles: string;
   creasing: string;
   partsBy: string;
-  /** `weld`, `turn_faces` or both, where the import asked for it; else empty. */
+  /** What was done to the cage beyond reading its file: `weld`, `turn_faces`, `scaled_by_…`, `y-to-z` or `z-to-y`, `beside_…`, joined by blanks; else empty. */
   mended?: string;
   engineVersion: string;
 }
 
-/** Everything that a part's value follows from. Geometry in file units and file axes. */
+/** Everything that a part's value follows from. Geometry in the show's unit and axes. */
 export interface ValueInputs {
   record: RecordKey;
   /** Code of the asset. */

@@ -15,7 +15,8 @@ import { parseInput } from '@/lib/rules/parse-input';
 export const ownThread: JobTools['engine'] = { measure: (file) => measureFile({ ...file, idleThreads: 0, port: null }) };
 
 export interface SentFile {
-  text: string;
+  /** The file's text, or its bytes. */
+  text: string | Uint8Array<ArrayBuffer>;
   asset?: string;
   version?: string;
   outside_id?: string;
@@ -23,10 +24,10 @@ export interface SentFile {
 }
 
 /** Opens an import and puts the files into it. Answers its id. */
-export async function openWith(context: ActorContext, show: string, files: Record<string, string | SentFile>, options: Partial<OpenImportInput> = {}): Promise<string> {
+export async function openWith(context: ActorContext, show: string, files: Record<string, SentFile['text'] | SentFile>, options: Partial<OpenImportInput> = {}): Promise<string> {
   const { id } = await openImport(context, parseInput(openImportInput, { show, ...options }));
   for (const [name, sent] of Object.entries(files)) {
-    const { text, ...said } = typeof sent === 'string' ? { text: sent } : sent;
+    const { text, ...said } = typeof sent === 'string' || sent instanceof Uint8Array ? { text: sent } : sent;
     const request = new Request('http://127.0.0.1:3000/', { method: 'PUT', body: text });
     await putImportFile(context, parseInput(putImportFileInput, { show, import: id, name, ...said }), request);
   }
@@ -34,7 +35,7 @@ export async function openWith(context: ActorContext, show: string, files: Recor
 }
 
 /** The whole way: open, upload, submit, measure here. */
-export async function importFiles(context: ActorContext, show: string, files: Record<string, string | SentFile>, options: Partial<OpenImportInput> = {}): Promise<ImportDetail> {
+export async function importFiles(context: ActorContext, show: string, files: Record<string, SentFile['text'] | SentFile>, options: Partial<OpenImportInput> = {}): Promise<ImportDetail> {
   const id = await openWith(context, show, files, options);
   await submitImport(context, { show, import: id });
   await drainQueue(context.db, ownThread);

@@ -2,7 +2,7 @@ import { z } from 'zod';
 import { showRef } from '../fields';
 import { BOUNDARY_WORDS, PARTITION_WORDS, SCHEME_WORDS } from '../measure-words';
 import { checkNamePattern } from '../name-pattern';
-import { LINEAR_UNITS, UP_AXES } from '../units';
+import { LINEAR_UNITS, OTHER_SPACE_WORDS, UP_AXES } from '../units';
 
 const tolerance = z.number('Give a percentage, such as 0.5.').min(0, 'A tolerance is 0 or more.').max(100, 'A tolerance is at most 100 %.');
 
@@ -16,6 +16,8 @@ export const editShowInput = z
     scheme: z.enum(SCHEME_WORDS).optional(),
     boundary: z.enum(BOUNDARY_WORDS).optional(),
     parts_by: z.enum(PARTITION_WORDS).optional(),
+    /** What becomes of files of later imports that state another unit or up axis. */
+    other_space: z.enum(OTHER_SPACE_WORDS).optional(),
     name_pattern: z.string().trim().max(500).nullish(),
     self_approval: z.boolean().optional(),
     /** Percent of the mass, of the part's size for its centre of mass, and of the inertia. */
