@@ -7,8 +7,8 @@ import { importFiles } from '../support/imports';
 const textOf = (name: string) => new TextDecoder().decode(GOOD.find((one) => one.name === name)!.bytes);
 
 /** Volumes and units by the closed form: the tetrahedron of the unit axes has 1/6. */
-test('every text format comes in as an asset; a unit or axis other than the show’s is refused, and nothing else is touched', async () => {
-  const cast = await createCast();
+test('every text format comes in as an asset; a show that refuses a unit or axis other than its own does, and nothing else is touched', async () => {
+  const cast = await createCast({ otherSpace: 'refuse' });
   const [show] = await asOwner<{ linear_unit: string; up_axis: string }>('select linear_unit, up_axis from shows where id = $1', [cast.show.id]);
   const metres = { mm: 0.001, cm: 0.01, dm: 0.1, m: 1, in: 0.0254, ft: 0.3048 }[show.linear_unit]!;
   const usda = textOf('a.usda').replace('0.01', String(metres)).replace('upAxis = "Y"', `upAxis = "${show.up_axis.toUpperCase()}"`);
@@ -39,8 +39,8 @@ test('every text format comes in as an asset; a unit or axis other than the show
   expect(notes).toEqual([{ asset: 'cap', code: 'triangles_only' }, { asset: 'fin', code: 'scheme_differs' }]);
 });
 
-test('another show’s measurement of a file does not let it in where its unit is wrong', async () => {
-  const [centimetres, metres] = [await createCast(), await createCast({ linearUnit: 'm' })];
+test('another show’s measurement of a file does not let it in where its unit is refused', async () => {
+  const [centimetres, metres] = [await createCast(), await createCast({ linearUnit: 'm', otherSpace: 'refuse' })];
   const bring = async (cast: typeof metres) => (await importFiles(cast.contextOf('td'), cast.show.code, { 'fin_v001.usda': textOf('a.usda') }, { scheme: 'polyhedral' })).files[0];
   expect((await bring(centimetres)).state).toBe('done');
   expect(await bring(metres)).toMatchObject({ state: 'failed', error: { code: 'units_disagree' } });
