@@ -1,4 +1,5 @@
 import { MeshError, type TextPlace } from './mesh-error';
+import { readDecimal } from './read-decimal';
 import { decodeText } from './text-encoding';
 import type { LineJoint } from './text-lines';
 
@@ -7,12 +8,8 @@ const TAB = 0x09;
 const HASH = 0x23;
 const PLUS = 0x2b;
 const MINUS = 0x2d;
-const DOT = 0x2e;
 const ZERO = 0x30;
 const NINE = 0x39;
-/** Below this an integer mantissa with a power of ten of at most 22 is one correctly rounded operation [Clinger 1990]. */
-const EXACT_MANTISSA = 2 ** 53;
-const POWERS = Float64Array.from({ length: 23 }, (_, i) => Number(`1e${i}`));
 const DECIMAL = /^[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?$/;
 const NOT_FINITE = /^[+-]?(nan|inf|infinity|1\.#(inf|qnan|snan|ind)\w*)(\(\w*\))?$/i;
 
@@ -25,6 +22,7 @@ export class LineCursor {
   line = 0;
   private start = 0;
   private joints: LineJoint[] | null = null;
+  private readonly read = new Float64Array(1);
 
   open(bytes: Uint8Array, start: number, end: number, line: number, joints: LineJoint[] | null): void {
     this.bytes = bytes;
@@ -73,36 +71,20 @@ export class LineCursor {
 
   /** A finite decimal number, correctly rounded. Moves behind it. Errors: not_finite, number_too_large, bad_number. */
   number(expected: string): number {
-    const { bytes } = this;
+    const { bytes, at } = this;
     const end = this.wordEnd();
-    let at = this.at;
-    const negative = bytes[at] === MINUS;
-    if (negative || bytes[at] === PLUS) at++;
-    let mantissa = 0;
-    let digits = 0;
-    for (; at < end && bytes[at] >= ZERO && bytes[at] <= NINE; at++, digits++) mantissa = mantissa * 10 + (bytes[at] - ZERO);
-    let scale = 0;
-    if (bytes[at] === DOT && at < end) {
-      for (at++; at < end && bytes[at] >= ZERO && bytes[at] <= NINE; at++, digits++, scale++) mantissa = mantissa * 10 + (bytes[at] - ZERO);
-    }
-    if (at === end && digits > 0 && mantissa < EXACT_MANTISSA && scale < POWERS.length) {
-      this.at = end;
-      const value = scale === 0 ? mantissa : mantissa / POWERS[scale];
-      return negative ? -value : value;
-    }
-    return this.slowNumber(expected, end);
+    // What ends the bytes is read from a copy with a blank behind it.
+    const behind = end < bytes.length ? readDecimal(bytes, at, this.read, 0) : at + readDecimal(withBlank(bytes.subarray(at)), 0, this.read, 0);
+    if (behind !== end) throw this.notDecimal(expected, end);
+    this.at = end;
+    return this.read[0];
   }
 
-  private slowNumber(expected: string, end: number): number {
+  private notDecimal(expected: string, end: number): MeshError {
     const text = decodeText(this.bytes.subarray(this.at, end));
-    if (DECIMAL.test(text)) {
-      const value = Number(text);
-      if (!Number.isFinite(value)) throw this.fail('number_too_large', `${expected} below 1.8e308`);
-      this.at = end;
-      return value;
-    }
-    if (NOT_FINITE.test(text)) throw this.fail('not_finite', `a finite number for ${bare(expected)}`);
-    throw this.fail('bad_number', text.includes(',') ? `${expected} with a decimal point` : expected);
+    if (DECIMAL.test(text)) return this.fail('number_too_large', `${expected} below 1.8e308`);
+    if (NOT_FINITE.test(text)) return this.fail('not_finite', `a finite number for ${bare(expected)}`);
+    return this.fail('bad_number', text.includes(',') ? `${expected} with a decimal point` : expected);
   }
 
   /** An optionally signed integer that ends at a blank or at the byte `stop`; null where there is none. Moves behind the digits. */
@@ -151,4 +133,11 @@ export class LineCursor {
 
 function bare(expected: string): string {
   return expected.replace(/^a number for /, '');
+}
+
+function withBlank(bytes: Uint8Array): Uint8Array {
+  const wider = new Uint8Array(bytes.length + 1);
+  wider.set(bytes);
+  wider[bytes.length] = SPACE;
+  return wider;
 }

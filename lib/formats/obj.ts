@@ -1,9 +1,10 @@
 import type { Cage } from '../engine/cage';
 import { FaceLabeller } from './face-labeller';
-import { growingFloat64, growingUint32 } from './growing-array';
 import { LineCursor } from './line-cursor';
 import { MeshError } from './mesh-error';
 import { MAX_COORDINATE, MESH_LIMITS, MIN_CORNERS, MOST_LINE_BYTES, type MeshLimits } from './mesh-limits';
+import { ObjPlainLines } from './obj-plain-lines';
+import { ObjPolygons } from './obj-polygons';
 import { ObjTags } from './obj-tags';
 import { TextLines, type LineJoint } from './text-lines';
 import { outOfRange, VertexReferences } from './vertex-references';
@@ -44,21 +45,17 @@ const WITHOUT_EFFECT = new Set(
 class ObjReader {
   private readonly cursor = new LineCursor();
   private readonly warnings = new WarningList();
-  private readonly positions = growingFloat64();
-  private readonly faceStarts = growingUint32();
-  private readonly faceVertices = growingUint32();
-  private readonly faceLines = growingUint32();
+  private readonly polygons = new ObjPolygons();
   private readonly references = new VertexReferences(1);
   private readonly tags = new ObjTags(this.warnings);
   private readonly groups = new FaceLabeller();
   private readonly objects = new FaceLabeller();
   private readonly materials = new FaceLabeller();
   private readonly lines: TextLines;
-  private vertices = 0;
 
   constructor(private readonly limits: ObjLimits) {
-    this.lines = new TextLines((bytes, start, end, line, joints) => this.readLine(bytes, start, end, line, joints), limits.lineBytes);
-    this.faceStarts.push(0);
+    const plain = new ObjPlainLines(this.polygons, limits);
+    this.lines = new TextLines((bytes, start, end, line, joints) => this.readLine(bytes, start, end, line, joints), limits.lineBytes, plain);
   }
 
   push(chunk: Uint8Array): void {
@@ -68,26 +65,27 @@ class ObjReader {
   finish(): Cage {
     this.lines.end();
     if (this.lines.bytesSeen === 0) throw new MeshError({ code: 'empty_file', detail: 'the file is empty' });
-    if (this.faceLines.length === 0) {
-      const has = this.vertices > 0 ? `it has ${this.vertices} vertices` : 'it has no vertices either';
+    const { vertices, faces, positions, faceStarts, faceVertices, faceLines } = this.polygons;
+    if (faces === 0) {
+      const has = vertices > 0 ? `it has ${vertices} vertices` : 'it has no vertices either';
       throw new MeshError({ code: 'no_faces', detail: `expected at least one face (a line "f 1 2 3 …"); ${has}`, expected: 'a face' });
     }
-    this.references.settle(this.vertices);
-    this.tags.references.settle(this.vertices);
+    this.references.settle(vertices);
+    this.tags.references.settle(vertices);
     return {
-      positions: this.positions.take(),
-      faceStarts: this.faceStarts.take(),
-      faceVertices: this.faceVertices.take(),
-      groups: this.groups.take(),
-      objects: this.objects.take(),
-      materials: this.materials.take(),
+      positions: positions.take(),
+      faceStarts: faceStarts.take(),
+      faceVertices: faceVertices.take(),
+      groups: this.groups.take(faces),
+      objects: this.objects.take(faces),
+      materials: this.materials.take(faces),
       joints: null,
       creaseVertices: this.tags.creaseVertices.take(),
       creaseSharpness: this.tags.creaseSharpness.take(),
       cornerVertices: this.tags.cornerVertices.take(),
       cornerSharpness: this.tags.cornerSharpness.take(),
       boundary: this.tags.boundary,
-      faceLines: this.faceLines.take(),
+      faceLines: faceLines.take(),
       metresPerUnit: null,
       upAxis: null,
       warnings: this.warnings.items,
@@ -112,7 +110,7 @@ class ObjReader {
 
   private readOther(word: string, at: number): void {
     const cursor = this.cursor;
-    if (word === 't') this.tags.read(cursor, this.vertices);
+    if (word === 't') this.tags.read(cursor, this.polygons.vertices);
     else if (word === 'g') this.setName(this.groups, cursor.rest().replace(/\s+/g, ' ') || 'default');
     else if (word === 'o') this.setName(this.objects, cursor.rest() || null);
     else if (word === 'usemtl') this.setName(this.materials, cursor.rest() || null);
@@ -129,22 +127,23 @@ class ObjReader {
     const { names, nameLength } = this.limits;
     if (name !== null && name.length > nameLength) throw this.cursor.fail('name_too_long', `a name of at most ${nameLength} characters`);
     if (labeller.count > names) throw this.cursor.fail('too_many_names', `at most ${names} names`);
-    labeller.set(name);
+    labeller.set(name, this.polygons.faces);
   }
 
   /** `v x y z`, optionally followed by a weight, a colour, or both; these act on nothing that is measured. */
   private readVertex(): void {
-    const cursor = this.cursor;
-    if (this.vertices >= this.limits.vertices) throw cursor.fail('too_many_vertices', `at most ${this.limits.vertices} vertices`);
+    const { cursor, limits } = this;
+    const { positions, vertices } = this.polygons;
+    if (vertices >= limits.vertices) throw cursor.fail('too_many_vertices', `at most ${limits.vertices} vertices`);
     for (let axis = 0; axis < 3; axis++) {
       const expected = COORDINATE[axis];
       if (!cursor.nextWord()) throw cursor.fail('missing_coordinate', expected);
       const at = cursor.at;
       const value = cursor.number(expected);
       if (value > MAX_COORDINATE || value < -MAX_COORDINATE) throw cursor.fail('number_too_large', `${expected} between −1e50 and 1e50`, at);
-      this.positions.push(value);
+      positions.push(value);
     }
-    this.vertices++;
+    this.polygons.vertices++;
     if (cursor.nextWord()) this.readVertexExtras();
   }
 
@@ -165,25 +164,23 @@ class ObjReader {
 
   /** `f` with references v, v/vt, v//vn or v/vt/vn; those to texture coordinates and normals are read over. */
   private readFace(keyword: number): void {
-    const cursor = this.cursor;
-    const first = this.faceVertices.length;
-    while (cursor.nextWord()) this.faceVertices.push(this.readReference());
-    const corners = this.faceVertices.length - first;
+    const { cursor, limits } = this;
+    const { faceVertices, faces } = this.polygons;
+    const first = faceVertices.length;
+    while (cursor.nextWord()) faceVertices.push(this.readReference());
+    const corners = faceVertices.length - first;
     if (corners < MIN_CORNERS) {
       const expected = `a face of at least ${MIN_CORNERS} vertices`;
       throw new MeshError({ code: 'face_too_small', expected, found: String(corners), detail: `expected ${expected}, found ${corners}`, place: cursor.place(keyword) });
     }
-    if (this.faceLines.length >= this.limits.faces) throw cursor.fail('too_many_faces', `at most ${this.limits.faces} faces`, keyword);
-    if (this.faceVertices.length > this.limits.corners) throw cursor.fail('too_many_corners', `at most ${this.limits.corners} face corners`, keyword);
-    this.faceStarts.push(this.faceVertices.length);
-    this.faceLines.push(cursor.line);
-    this.groups.labelFace();
-    this.objects.labelFace();
-    this.materials.labelFace();
+    if (faces >= limits.faces) throw cursor.fail('too_many_faces', `at most ${limits.faces} faces`, keyword);
+    if (faceVertices.length > limits.corners) throw cursor.fail('too_many_corners', `at most ${limits.corners} face corners`, keyword);
+    this.polygons.endFace(cursor.line);
   }
 
   private readReference(): number {
     const cursor = this.cursor;
+    const { vertices } = this.polygons;
     const at = cursor.at;
     const number = cursor.integer(SLASH);
     if (number === null) throw cursor.fail('bad_vertex_reference', 'a vertex number such as 5, 5/2, 5//3 or -1', at);
@@ -193,9 +190,9 @@ class ObjReader {
       if (next > SPACE && next !== SLASH && cursor.integer(SLASH) === null) throw cursor.fail('bad_vertex_reference', 'a whole number behind the slash');
     }
     if (cursor.at < cursor.end && cursor.bytes[cursor.at] > SPACE) throw cursor.fail('bad_vertex_reference', 'a blank behind the reference', cursor.at);
-    const index = number < 0 ? this.vertices + number : number - 1;
-    if (index < 0 || number > 0xffffffff) throw outOfRange(number, this.vertices, 1, cursor.place(at));
-    if (index >= this.vertices) this.references.await(index, cursor, at);
+    const index = number < 0 ? vertices + number : number - 1;
+    if (index < 0 || number > 0xffffffff) throw outOfRange(number, vertices, 1, cursor.place(at));
+    if (index >= vertices) this.references.await(index, cursor, at);
     return index;
   }
 }

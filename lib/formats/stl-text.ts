@@ -28,7 +28,7 @@ class StlTextReader {
     text.push(bytes);
     text.end();
     if (this.corners >= 0 || this.isOpen) throw this.cursor.fail('truncated', `${this.corners >= 0 ? 'endloop' : 'endsolid'} before the end of the file`, this.cursor.end);
-    return { positions: this.positions.take(), solids: this.solids.take(), lines: this.lines.take() };
+    return { positions: this.positions.take(), solids: this.solids.take(this.lines.length), lines: this.lines.take() };
   }
 
   private readLine(): void {
@@ -54,7 +54,7 @@ class StlTextReader {
     const { names, nameLength } = MESH_LIMITS;
     if (name.length > nameLength) throw this.cursor.fail('name_too_long', `a name of at most ${nameLength} characters`, at);
     if (this.solids.count > names) throw this.cursor.fail('too_many_names', `at most ${names} names`, at);
-    this.solids.set(name === '' ? null : name);
+    this.solids.set(name === '' ? null : name, this.lines.length);
   }
 
   private openLoop(at: number): void {
@@ -68,7 +68,6 @@ class StlTextReader {
     if (this.lines.length >= MESH_LIMITS.faces) throw this.cursor.fail('too_many_faces', `at most ${MESH_LIMITS.faces} triangles`, at);
     this.corners = -1;
     this.lines.push(this.loopLine);
-    this.solids.labelFace();
   }
 
   private readVertex(keyword: number): void {

@@ -10,11 +10,22 @@ const HASH = 0x23;
 /** Vertical tab, form feed, the DOS end-of-file mark and escape occur in old text files; any other control byte means binary. */
 const HARMLESS_CONTROLS = new Set([0x0b, 0x0c, 0x1a, 0x1b]);
 const SNIFF_BYTES = 4;
+/** Of UTF-16 so much is transcoded at once. */
+const WIDE_BYTES = 2 ** 20;
 
 /** Start of a physical line inside a joined one: byte offset from the joined line's start, and the physical line's number. */
 export interface LineJoint {
   offset: number;
   line: number;
+}
+
+/**
+ * Reads plain lines at once, past what every line otherwise costs: as many as it knows from bytes[start] on, each up to its end; answers where it stopped,
+ * at a line that it left alone, and says in `lines` how many it read. bytes[end - 1] is a line feed, so that reading may go on up to one without a look at `end`.
+ */
+export interface PlainLineReader {
+  lines: number;
+  read(bytes: Uint8Array, start: number, end: number, line: number): number;
 }
 
 /** Receives each logical line as bytes[start, end) with the number of its first physical line; `joints` is null where nothing was joined. */
@@ -42,6 +53,7 @@ export class TextLines {
   constructor(
     private readonly sink: LineSink,
     private readonly maxLineBytes: number,
+    private readonly plain: PlainLineReader | null = null,
   ) {}
 
   push(chunk: Uint8Array): void {
@@ -68,30 +80,47 @@ export class TextLines {
   }
 
   private feed(chunk: Uint8Array, last: boolean): void {
-    const bytes = this.wide ? this.utf8.encode(this.wide.decode(chunk, { stream: !last })) : chunk;
+    // One view of all chunks, whatever class they are of, keeps what is compiled for them simple.
+    if (this.wide === null) this.take(new Uint8Array(chunk.buffer, chunk.byteOffset, chunk.byteLength), last);
+    else {
+      for (let at = 0; at < chunk.length; at += WIDE_BYTES) this.take(this.utf8.encode(this.wide.decode(chunk.subarray(at, at + WIDE_BYTES), { stream: true })), false);
+      if (last) this.take(this.utf8.encode(this.wide.decode()), true);
+    }
+  }
+
+  private take(bytes: Uint8Array, last: boolean): void {
     this.bytesSeen += bytes.length;
-    this.split(this.carry.length === 0 ? bytes : concat(this.carry, bytes), this.carry.length, last);
+    let rest = bytes;
+    // The line that was begun is finished by itself, so that the chunk need not be copied behind it.
+    const end = this.carry.length === 0 ? 0 : bytes.indexOf(LF) + 1;
+    if (end > 0) {
+      this.split(concat(this.carry, bytes.subarray(0, end)), this.carry.length, false);
+      rest = bytes.subarray(end);
+    }
+    this.split(this.carry.length === 0 ? rest : concat(this.carry, rest), this.carry.length, last);
   }
 
   /** Emits the lines of `bytes`, whose first `scanned` ones hold no line end, and keeps what is unfinished. */
   private split(bytes: Uint8Array, scanned: number, last: boolean): void {
-    let start = 0;
     const length = bytes.length;
-    for (let i = scanned; i < length; i++) {
-      const byte = bytes[i];
-      if (byte >= SPACE || byte === TAB) continue;
-      if (byte === LF && this.skipLf && i === start) {
+    const plainEnd = this.plain === null ? 0 : bytes.lastIndexOf(LF) + 1;
+    let start = 0;
+    let from = scanned;
+    for (;;) {
+      if (this.skipLf && start < length) {
         this.skipLf = false;
-        start = i + 1;
-        continue;
+        if (bytes[start] === LF) start++;
       }
-      if (byte !== LF && byte !== CR) {
-        if (!HARMLESS_CONTROLS.has(byte)) throw this.notText(bytes, start, i);
-        continue;
+      if (this.plain !== null && start < plainEnd && this.joined.length === 0) {
+        start = this.plain.read(bytes, start, plainEnd, this.line);
+        this.line += this.plain.lines;
       }
-      this.skipLf = byte === CR;
-      this.endLine(bytes, start, i, false);
-      start = i + 1;
+      const end = this.findEnd(bytes, start, Math.max(start, from));
+      if (end < 0) break;
+      this.skipLf = bytes[end] === CR;
+      this.endLine(bytes, start, end, false);
+      start = end + 1;
+      from = start;
     }
     if (last) {
       if (start < length || this.joined.length > 0) this.endLine(bytes, start, length, true);
@@ -100,6 +129,17 @@ export class TextLines {
     }
     if (length - start > this.maxLineBytes) throw this.tooLong(bytes, start);
     this.carry = start < length ? bytes.slice(start) : new Uint8Array(0);
+  }
+
+  /** Offset of the line end from `from` on, -1 where there is none; `start` is the line's start. */
+  private findEnd(bytes: Uint8Array, start: number, from: number): number {
+    for (let at = from; at < bytes.length; at++) {
+      const byte = bytes[at];
+      if (byte >= SPACE || byte === TAB) continue;
+      if (byte === LF || byte === CR) return at;
+      if (!HARMLESS_CONTROLS.has(byte)) throw this.notText(bytes, start, at);
+    }
+    return -1;
   }
 
   private endLine(bytes: Uint8Array, start: number, end: number, last: boolean): void {

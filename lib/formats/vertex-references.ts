@@ -32,11 +32,10 @@ export class VertexReferences {
   /** Throws for the first reference beyond the file's vertices. */
   settle(vertices: number): void {
     if (this.highest < vertices) return;
-    for (let i = 0; i < this.numbers.length; i++) {
-      const index = this.numbers.at(i);
-      if (index < vertices) continue;
-      throw outOfRange(index + this.base, vertices, this.base, { line: this.lines.at(i), column: this.columns.at(i), text: this.texts[i] ?? '' });
-    }
+    const numbers = this.numbers.take();
+    const first = numbers.findIndex((index) => index >= vertices);
+    const place = { line: this.lines.take()[first], column: this.columns.take()[first], text: this.texts[first] ?? '' };
+    throw outOfRange(numbers[first] + this.base, vertices, this.base, place);
   }
 }
 
