@@ -2,7 +2,7 @@
 
 import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import type { ImportPreparation } from '@/lib/rules/import-answer';
-import { previewImport, type PreviewRow } from '@/lib/rules/import-plan';
+import { previewImport, type PreviewRow } from '@/lib/rules/import-preview';
 import type { BoundaryWord, PartitionWord, SchemeWord } from '@/lib/rules/measure-words';
 import type { Category } from '@/lib/rules/states';
 import { requestJson, RequestError } from './request-json';

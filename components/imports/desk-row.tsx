@@ -8,7 +8,8 @@ import { Input } from '@/components/ui/input';
 import { Select } from '@/components/ui/select';
 import type { DeskFile, DeskRow as Row } from '@/hooks/use-import-desk';
 import { byteWords } from '@/lib/rules/byte-words';
-import { MAX_ASSET_CODE, type Outcome } from '@/lib/rules/import-plan';
+import type { Outcome } from '@/lib/rules/import-preview';
+import { MAX_ASSET_CODE } from '@/lib/rules/place-names';
 import { CATEGORIES, CATEGORY_WORDS } from '@/lib/rules/states';
 import { FilePath } from './file-path';
 import { UploadBar } from './upload-bar';
@@ -21,6 +22,7 @@ const OUTCOME_WORDS: Record<Outcome, string> = {
   new_asset: 'new asset',
   new_version: 'new version',
   next_take: 'unchanged, or next take',
+  unchanged: 'unchanged',
   unmatched: 'no asset',
 };
 

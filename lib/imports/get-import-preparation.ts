@@ -1,6 +1,3 @@
-import { eq, sql } from 'drizzle-orm';
-import { assetVersions } from '@/db/schema/asset-versions';
-import { assets } from '@/db/schema/assets';
 import { requireActor } from '@/lib/auth/require-actor';
 import { config } from '@/lib/config';
 import type { Context } from '@/lib/context';
@@ -8,17 +5,12 @@ import { MESH_EXTENSIONS } from '@/lib/formats/mesh-extensions';
 import type { ImportPreparation } from '@/lib/rules/import-answer';
 import type { ImportPreparationInput } from '@/lib/rules/inputs/import-preparation';
 import { getShowAccess } from '@/lib/shows/get-show-access';
+import { knownAssets } from './known-assets';
 
 /** What the import page has to know before anything goes up: how names are read, what the show has, and every limit. */
 export async function getImportPreparation(context: Context, input: ImportPreparationInput): Promise<ImportPreparation> {
   const { actor } = requireActor(context);
   const { show } = await getShowAccess(context.db, actor, input.show, 'importCages');
-  const known = await context.db
-    .select({ asset: assets.code, category: assets.category, versions: sql<number[] | null>`array_agg(${assetVersions.number}) filter (where ${assetVersions.id} is not null)` })
-    .from(assets)
-    .leftJoin(assetVersions, eq(assetVersions.assetId, assets.id))
-    .where(eq(assets.showId, show.id))
-    .groupBy(assets.id);
   const { maxFileBytes, maxImportFiles } = config();
   return {
     show: show.code,
@@ -32,6 +24,6 @@ export async function getImportPreparation(context: Context, input: ImportPrepar
     extensions: [...MESH_EXTENSIONS],
     max_file_bytes: maxFileBytes,
     max_files: maxImportFiles,
-    assets: known.map((one) => ({ ...one, versions: one.versions ?? [] })),
+    assets: await knownAssets(context.db, show.id),
   };
 }

@@ -63,8 +63,27 @@ export function readNameBuiltIn(path: string): ReadName | null {
   let version = own.version;
   for (const folder of [...folders].reverse()) version ??= takeVersion(folder).version;
   // A file that is only `v012.obj` is named by its folder.
-  const asset = own.rest !== '' ? own.rest : ([...folders].reverse().map((folder) => takeVersion(folder).rest).find((rest) => rest !== '') ?? '');
+  const asset = own.rest !== '' ? own.rest : (tellingFolders(folders).at(-1) ?? '');
   return asset === '' ? null : { asset, category, version };
+}
+
+/** Folders that tell assets apart: those that only name a version do not. */
+function tellingFolders(folders: readonly string[]): string[] {
+  return folders.map((folder) => takeVersion(folder).rest).filter((folder) => folder !== '');
+}
+
+/**
+ * The folders that may tell the asset of a name from another one of the same name. The built-in rule takes all but those that only name
+ * a version or the asset itself (`ox/v012.obj`). A show's own pattern says where the asset stands, so only what it reads as category counts.
+ */
+export function placeOf(path: string, pattern: string | null): string[] {
+  const { folders, file } = splitPath(path);
+  if (pattern === null) {
+    const telling = tellingFolders(folders);
+    return takeVersion(stemOf(file)).rest === '' ? telling.slice(0, -1) : telling;
+  }
+  const category = matchPattern(path, pattern)?.('category');
+  return category === undefined ? [] : [category];
 }
 
 interface CompiledPattern {
@@ -113,9 +132,8 @@ function compile(pattern: string): CompiledPattern {
 
 const compiled = new Map<string, CompiledPattern>();
 
-/** Reads a name by the show's pattern, or by the built-in rule when it has none. Null when the name does not match. */
-export function readName(path: string, pattern: string | null): ReadName | null {
-  if (pattern === null) return readNameBuiltIn(path);
+/** What the pattern's placeholders stand for in a path, or null when it does not match. */
+function matchPattern(path: string, pattern: string): ((name: string) => string | undefined) | null {
   let known = compiled.get(pattern);
   if (!known) {
     if (compiled.size > 100) compiled.clear();
@@ -123,12 +141,25 @@ export function readName(path: string, pattern: string | null): ReadName | null 
   }
   const { folders, file } = splitPath(path);
   const match = known.regex.exec([...folders, stemOf(file)].join('/'));
-  if (!match) return null;
-  const field = (name: string) => (known.names.includes(name) ? match[1 + known.names.indexOf(name)] : undefined);
+  const { names } = known;
+  return match && ((name) => (names.includes(name) ? match[1 + names.indexOf(name)] : undefined));
+}
+
+/** Whether a folder of the path, or the pattern, names a category. */
+export function namesCategory(path: string, pattern: string | null): boolean {
+  const read = pattern === null ? undefined : matchPattern(path, pattern)?.('category');
+  return (read !== undefined && categoryOfFolder(read) !== null) || splitPath(path).folders.some((folder) => categoryOfFolder(folder) !== null);
+}
+
+/** Reads a name by the show's pattern, or by the built-in rule when it has none. Null when the name does not match. */
+export function readName(path: string, pattern: string | null): ReadName | null {
+  if (pattern === null) return readNameBuiltIn(path);
+  const field = matchPattern(path, pattern);
+  if (!field) return null;
   const version = field('version');
   const category = field('category');
   const asset = field('asset')?.trim() ?? '';
   if (asset === '') return null;
-  const fallback = folders.map(categoryOfFolder).findLast((found) => found !== null) ?? 'other';
+  const fallback = splitPath(path).folders.map(categoryOfFolder).findLast((found) => found !== null) ?? 'other';
   return { asset, category: category === undefined ? fallback : (categoryOfFolder(category) ?? 'other'), version: version === undefined ? null : Number(version) };
 }

@@ -1,6 +1,8 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { compareInProcessingOrder, planImport, previewImport, versionLabel, type KnownAsset } from '@/lib/rules/import-plan';
+import { compareInProcessingOrder, planImport, versionLabel } from '@/lib/rules/import-plan';
+import { previewImport } from '@/lib/rules/import-preview';
+import type { KnownAsset } from '@/lib/rules/known-asset';
 import { categoryOfFolder, checkNamePattern, readName, readNameBuiltIn, splitPath, takeVersion } from '@/lib/rules/name-pattern';
 
 describe('the built-in rule', () => {
@@ -183,7 +185,7 @@ describe('the preview', () => {
       ['new_asset', 'v001'],
       ['new_version', 'v002'],
     ]);
-    expect(rows[0].warnings.join(' ')).toMatch(/Two files of this batch/);
+    expect(rows[0].warnings.join(' ')).toMatch(/Two files of this drop/);
   });
 
   test('a name outside the pattern has no asset', () => {

@@ -1,7 +1,8 @@
 import { z } from 'zod';
 import { showRef } from '../fields';
-import { MAX_ASSET_CODE, MAX_VERSION } from '../import-plan';
+import { MAX_VERSION } from '../import-plan';
 import { splitPath } from '../name-pattern';
+import { MAX_ASSET_CODE } from '../place-names';
 import { CATEGORIES } from '../states';
 
 const MAX_NAME = 1024;
