@@ -40,7 +40,7 @@ class GrowingArray<T extends Numbers> {
     this.used = 0;
   }
 
-  /** All numbers in an array of just the right length; what was pushed is let go of. */
+  /** All numbers in an array of just the right length; to be asked once, when nothing more is to come, since the pieces are let go of. `length` stays. */
   take(): T {
     const whole = this.allocate(this.length);
     let at = 0;
@@ -50,7 +50,7 @@ class GrowingArray<T extends Numbers> {
     }
     whole.set(this.piece.subarray(0, this.used), at);
     this.full.length = 0;
-    this.before = 0;
+    this.before += this.used;
     this.used = 0;
     this.piece = this.allocate(0);
     return whole;

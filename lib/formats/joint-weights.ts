@@ -85,16 +85,17 @@ class WeightRows {
 
   /** The rows sorted by vertex. */
   take(): SkinWeights {
-    const rows = this.vertices.length;
+    const [vertices, joints, weights] = [this.vertices.take(), this.joints.take(), this.weights.take()];
+    const rows = vertices.length;
     const starts = new Uint32Array(this.vertexCount + 1);
-    for (let i = 0; i < rows; i++) starts[this.vertices.at(i) + 1]++;
+    for (let i = 0; i < rows; i++) starts[vertices[i] + 1]++;
     for (let v = 0; v < this.vertexCount; v++) starts[v + 1] += starts[v];
     const next = starts.slice();
     const skin = { starts, joints: new Uint32Array(rows), weights: new Float64Array(rows), names: [...this.numberOf.keys()] };
     for (let i = 0; i < rows; i++) {
-      const at = next[this.vertices.at(i)]++;
-      skin.joints[at] = this.joints.at(i);
-      skin.weights[at] = this.weights.at(i);
+      const at = next[vertices[i]]++;
+      skin.joints[at] = joints[i];
+      skin.weights[at] = weights[i];
     }
     return skin;
   }
