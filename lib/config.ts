@@ -16,6 +16,8 @@ const schema = z.object({
   MAIL_FROM: z.string().min(3).default('Weighhouse <weighhouse@localhost>'),
   /** Hour of the day, in UTC, when daily digests go out. */
   WEIGHHOUSE_DIGEST_HOUR: z.coerce.number().int().min(0).max(23).default(7),
+  /** Minutes from which an import counts as long, so that its end is written to whoever opened it. */
+  WEIGHHOUSE_LONG_IMPORT_MINUTES: z.coerce.number().min(0).default(5),
   LOG_LEVEL: z.enum(['trace', 'debug', 'info', 'warn', 'error', 'silent']).default('info'),
   WEIGHHOUSE_MAX_FILE_BYTES: z.coerce.number().int().positive().default(2 * 1024 ** 3),
   WEIGHHOUSE_MAX_IMPORT_FILES: z.coerce.number().int().positive().default(20_000),
@@ -36,6 +38,10 @@ const schema = z.object({
   WEIGHHOUSE_S3_SECRET_KEY: z.string().min(1).optional(),
   WEIGHHOUSE_S3_PATH_STYLE: z.enum(['0', '1']).default('0'),
   WEIGHHOUSE_ENGINE_THREADS: z.coerce.number().int().positive().optional(),
+  /** Bytes that a worker may measure in at once. */
+  WEIGHHOUSE_WORKER_MEMORY: z.coerce.number().int().min(256 * 1024 ** 2).optional(),
+  /** What a worker is called on the admin's page. */
+  WEIGHHOUSE_WORKER_NAME: z.string().min(1).max(80).optional(),
 });
 
 function s3Of(env: z.infer<typeof schema>, bucket: string) {
@@ -71,6 +77,7 @@ function read() {
     smtpUrl: env.SMTP_URL ?? null,
     mailFrom: env.MAIL_FROM,
     digestHour: env.WEIGHHOUSE_DIGEST_HOUR,
+    longImportMinutes: env.WEIGHHOUSE_LONG_IMPORT_MINUTES,
     logLevel: env.LOG_LEVEL,
     maxFileBytes: env.WEIGHHOUSE_MAX_FILE_BYTES,
     maxImportFiles: env.WEIGHHOUSE_MAX_IMPORT_FILES,
@@ -81,6 +88,8 @@ function read() {
     orphanHours: env.WEIGHHOUSE_ORPHAN_HOURS,
     s3: env.WEIGHHOUSE_S3_BUCKET === undefined ? null : s3Of(env, env.WEIGHHOUSE_S3_BUCKET),
     engineThreads: env.WEIGHHOUSE_ENGINE_THREADS ?? null,
+    workerMemory: env.WEIGHHOUSE_WORKER_MEMORY ?? null,
+    workerName: env.WEIGHHOUSE_WORKER_NAME ?? null,
   };
 }
 

@@ -15,7 +15,7 @@ export async function describeImport(db: Executor, row: ImportRow): Promise<Impo
     counts.total += files;
   }
   const [creator] = await db.select({ name: users.name }).from(users).where(eq(users.id, row.createdBy));
-  const left = row.state === 'queued' || row.state === 'running' ? await importSecondsLeft(db, row.id) : null;
+  const left = row.pausedAt === null && (row.state === 'queued' || row.state === 'running') ? await importSecondsLeft(db, row.id) : null;
   return { ...answerOf(row, counts, creator?.name ?? ''), seconds_left: left };
 }
 

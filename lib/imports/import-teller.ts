@@ -39,6 +39,6 @@ export class ImportTeller {
 }
 
 /** What is told of an import beside its files; not the time left, which moves by itself. */
-function stateMark({ state, counts, submitted_at, ended_at }: ImportDetail): string {
-  return JSON.stringify([state, counts, submitted_at, ended_at]);
+function stateMark({ state, paused, counts, submitted_at, ended_at }: ImportDetail): string {
+  return JSON.stringify([state, paused, counts, submitted_at, ended_at]);
 }

@@ -17,9 +17,9 @@ export interface Telling {
  * Tells people of something in a show, within the transaction of the change: as they chose, by a message at once, with the next
  * digest, or not at all. Nobody is told twice under one key, nobody of their own act, nobody who is disabled or out of the show.
  * Answers how many are told.
- * @param actorId whose act it was
+ * @param actorId whose act it was; null where it was nobody's, such as an end that came by itself
  */
-export async function tellPeople(tx: Transaction, { showId, actorId, key, tellings }: { showId: string; actorId: string; key: string; tellings: readonly Telling[] }): Promise<number> {
+export async function tellPeople(tx: Transaction, { showId, actorId, key, tellings }: { showId: string; actorId: string | null; key: string; tellings: readonly Telling[] }): Promise<number> {
   const texts = new Map<string, NoticeText>();
   for (const { userIds, text } of tellings) for (const id of userIds) if (id !== actorId && !texts.has(id)) texts.set(id, text);
   if (texts.size === 0) return 0;
