@@ -37,6 +37,11 @@ const schema = z.object({
   WEIGHHOUSE_S3_ACCESS_KEY: z.string().min(1).optional(),
   WEIGHHOUSE_S3_SECRET_KEY: z.string().min(1).optional(),
   WEIGHHOUSE_S3_PATH_STYLE: z.enum(['0', '1']).default('0'),
+  /** What a dropped ZIP may hold: entries, bytes unpacked in all, bytes unpacked from one packed byte, and archives within archives how deep. */
+  WEIGHHOUSE_ARCHIVE_MAX_ENTRIES: z.coerce.number().int().positive().default(20_000),
+  WEIGHHOUSE_ARCHIVE_MAX_BYTES: z.coerce.number().int().positive().default(64 * 1024 ** 3),
+  WEIGHHOUSE_ARCHIVE_MAX_RATIO: z.coerce.number().positive().default(200),
+  WEIGHHOUSE_ARCHIVE_NESTING: z.coerce.number().int().min(0).max(8).default(0),
   WEIGHHOUSE_ENGINE_THREADS: z.coerce.number().int().positive().optional(),
   /** Bytes that a worker may measure in at once. */
   WEIGHHOUSE_WORKER_MEMORY: z.coerce.number().int().min(256 * 1024 ** 2).optional(),
@@ -87,6 +92,12 @@ function read() {
     uploadHours: env.WEIGHHOUSE_UPLOAD_HOURS,
     orphanHours: env.WEIGHHOUSE_ORPHAN_HOURS,
     s3: env.WEIGHHOUSE_S3_BUCKET === undefined ? null : s3Of(env, env.WEIGHHOUSE_S3_BUCKET),
+    archive: {
+      entries: env.WEIGHHOUSE_ARCHIVE_MAX_ENTRIES,
+      totalBytes: env.WEIGHHOUSE_ARCHIVE_MAX_BYTES,
+      ratio: env.WEIGHHOUSE_ARCHIVE_MAX_RATIO,
+      nesting: env.WEIGHHOUSE_ARCHIVE_NESTING,
+    },
     engineThreads: env.WEIGHHOUSE_ENGINE_THREADS ?? null,
     workerMemory: env.WEIGHHOUSE_WORKER_MEMORY ?? null,
     workerName: env.WEIGHHOUSE_WORKER_NAME ?? null,

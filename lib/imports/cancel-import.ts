@@ -12,9 +12,8 @@ import { getShowAccess } from '@/lib/shows/get-show-access';
 import { describeImport } from './describe-import';
 import { sendTelling } from './end-file';
 import { getImportRow } from './get-import-row';
+import { UNFINISHED } from './lease';
 import { notifyImport } from './notify-import';
-
-const UNFINISHED = ['queued', 'reading', 'measuring'] as const;
 
 /** Ends an import that is not done: what was measured stays, what was not is failed as `cancelled`. Twice is as once. */
 export async function cancelImport(context: Context, input: ImportRefInput): Promise<ImportAnswer> {
@@ -33,13 +32,13 @@ export async function cancelImport(context: Context, input: ImportRefInput): Pro
       .for('no key update');
     const [cancelled] = await tx
       .update(imports)
-      .set({ state: 'cancelled', endedAt: sql`now()` })
+      .set({ state: 'cancelled', endedAt: sql`now()`, pausedAt: null })
       .where(and(eq(imports.id, row.id), inArray(imports.state, ['open', 'queued', 'running'])))
       .returning({ id: imports.id });
     if (!cancelled) return;
     await tx
       .update(importFiles)
-      .set({ state: 'failed', errorCode: 'cancelled', errorMessage: 'The import was cancelled before this file was measured.', endedAt: sql`now()`, leaseBy: null, leaseUntil: null })
+      .set({ state: 'failed', errorCode: 'cancelled', errorMessage: 'The import was cancelled before this file was measured.', endedAt: sql`now()`, leaseBy: null, leaseUntil: null, worker: null })
       .where(and(eq(importFiles.importId, row.id), inArray(importFiles.state, UNFINISHED)));
     await recordEvent(tx, known, { showId: show.id, act: 'cancel-import', subject: row.id, items: [{ field: 'files', before: null, after: String(waiting.length) }] });
     await sendTelling(tx, row.id);

@@ -27,7 +27,7 @@ export async function endFile(tx: Transaction, file: ImportFile, end: FileEnd): 
     end.state === 'done'
       ? { assetId: end.assetId, versionId: end.versionId, parts: end.parts, problems: end.problems, remark: end.remark }
       : { errorCode: end.error.code, errorMessage: end.error.message, errorLine: end.error.line, errorColumn: end.error.column };
-  await tx.update(importFiles).set({ state: end.state, ...fields, endedAt: sql`now()`, leaseBy: null, leaseUntil: null }).where(eq(importFiles.id, file.id));
+  await tx.update(importFiles).set({ state: end.state, ...fields, endedAt: sql`now()`, leaseBy: null, leaseUntil: null, worker: null }).where(eq(importFiles.id, file.id));
   await endImportWhenOver(tx, file.importId);
   await notifyImport(tx, file.importId);
 }
@@ -40,7 +40,7 @@ export async function endImportWhenOver(tx: Transaction, importId: string): Prom
   await tx.select({ id: imports.id }).from(imports).where(eq(imports.id, importId)).for('no key update');
   const ended = await tx
     .update(imports)
-    .set({ state: 'done', endedAt: sql`now()` })
+    .set({ state: 'done', endedAt: sql`now()`, pausedAt: null })
     .where(
       and(
         eq(imports.id, importId),

@@ -13,13 +13,10 @@ import { findReusableRecord } from './find-reusable-record';
 import type { Placing, StatedSpace } from './file-space';
 import { summariseRecord, writeGeometryRecord, type FileKey } from './geometry-record';
 import type { ImportRow } from './get-import-row';
-import { markMeasuring, startFile } from './lease';
+import { markMeasuring, startFile, type ImportFile } from './lease';
 import { showSpace } from './show-space';
 import { unitRemarks } from './unit-remarks';
 import { writeVersion } from './write-version';
-
-/** A file that was begun this often and never ended is given up. */
-const MOST_ATTEMPTS = 5;
 
 export interface FileWork {
   db: Database;
@@ -28,18 +25,25 @@ export interface FileWork {
   importRow: ImportRow;
   /** Who submitted the import: versions are in their name. */
   actor: Actor;
+  /** Aborted when the file is not the holder's any more: then measuring it is dropped. */
+  lost?: AbortSignal;
 }
 
 /**
  * Takes one held file to its end: read, measured (or found measured before), and put under its asset with values, history
  * and its own end in one transaction. A file that cannot be read ends as failed. Throws only what may pass: storage or
- * database out of reach.
+ * database out of reach. Answers false where it was not begun: it is not held, or its import is paused or over.
  */
-export async function measureImportFile(work: FileWork, fileId: string, plan: PlannedFile): Promise<void> {
+export async function measureImportFile(work: FileWork, fileId: string): Promise<boolean> {
+  const file = await startFile(work.db, fileId, work.holder);
+  if (file) await measureStarted(work, file);
+  return file !== null;
+}
+
+async function measureStarted(work: FileWork, file: ImportFile): Promise<void> {
   const { db, holder, importRow } = work;
-  const file = await startFile(db, fileId, holder);
-  if (!file) return;
-  if (file.attempts > MOST_ATTEMPTS) return failFile(work, fileId, giveUp(file.name));
+  const fileId = file.id;
+  const plan = { ...file.plan!, name: file.name };
   if (plan.asset === null) return failFile(work, fileId, { code: 'name_not_matched', message: 'The name does not match the show’s pattern. Give an asset, or change the pattern.', line: null, column: null });
   const { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces } = importRow;
   const key = { sha256: file.sha256, options: { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces } satisfies MeasureOptions };
@@ -47,7 +51,7 @@ export async function measureImportFile(work: FileWork, fileId: string, plan: Pl
   const known = await findReusableRecord(db, key, { name: file.name, showId: importRow.showId, space });
   let measured: Measured | null = null;
   if (known === null) {
-    const outcome = await work.engine.measure({ name: file.name, ...key, space }, () => void markMeasuring(db, fileId, holder).catch(() => undefined));
+    const outcome = await work.engine.measure({ name: file.name, ...key, space }, () => void markMeasuring(db, fileId, holder).catch(() => undefined), work.lost);
     if (!outcome.ok) return failFile(work, fileId, errorOf(file.name, outcome));
     measured = outcome;
   }
@@ -96,12 +100,6 @@ async function failFile(work: FileWork, fileId: string, error: ImportFileError):
     const held = await lockHeldFile(tx, fileId, work.holder);
     if (held) await endFile(tx, held, { state: 'failed', error });
   });
-}
-
-function giveUp(name: string): ImportFileError {
-  const reference = randomUUID();
-  log.error({ reference, file: name }, 'a file was begun again and again without an end');
-  return { code: 'gave_up', message: `This file was tried ${MOST_ATTEMPTS} times and never came to an end. Reference ${reference}.`, line: null, column: null };
 }
 
 function errorOf(name: string, outcome: { code: string; message: string; line: number | null; column: number | null }): ImportFileError {

@@ -19,12 +19,20 @@ const LEAST_FILE_BYTES: Record<MeshExtension, number> = { obj: 36, ply: 19, stl:
 /** Copies of a file's bytes that its reader holds: none of an OBJ, which is read as a stream. */
 const COPIES: Record<MeshExtension, number> = { obj: 0, ply: 2, stl: 2, gltf: 3, glb: 2, usd: 4, usda: 4, usdc: 4, usdz: 4, zip: 10 };
 
+const formatOf = (name: string): MeshExtension => {
+  const extension = extensionOf(name);
+  return isMeshExtension(extension) ? extension : 'zip';
+};
+
+/** Faces of a file where they are known, else the most that one of its size and format holds as programs write them. */
+export function mostFaces({ name, byteSize, faces = null }: MeasureSize): number {
+  return faces ?? byteSize / LEAST_FILE_BYTES[formatOf(name)];
+}
+
 /**
  * Bytes of memory that measuring a file takes at the peak, at most, in a thread of its own: what a queue sets aside before it begins. From the face count
  * where that is known, else from the most faces that a file of its size and format holds as programs write them.
  */
-export function expectedMeasureBytes({ name, byteSize, faces = null }: MeasureSize): number {
-  const extension = extensionOf(name);
-  const format = isMeshExtension(extension) ? extension : 'zip';
-  return THREAD_BYTES + COPIES[format] * byteSize + BYTES_PER_FACE * (faces ?? byteSize / LEAST_FILE_BYTES[format]);
+export function expectedMeasureBytes(size: MeasureSize): number {
+  return THREAD_BYTES + COPIES[formatOf(size.name)] * size.byteSize + BYTES_PER_FACE * mostFaces(size);
 }

@@ -1,8 +1,11 @@
 import type PgBoss from 'pg-boss';
 import { z } from 'zod';
 
-/** Files of one import that one job takes up, in this order. */
-export const importFilesJob = z.strictObject({ importId: z.uuid(), fileIds: z.array(z.uuid()).min(1).max(1000) });
+/**
+ * A turn: whoever takes it up measures the next chunk of files that wait, of whichever show is in turn. It names the import that asked for it; an import has
+ * no turns of its own, so that none can be lost, doubled, or stand behind another show's.
+ */
+export const importFilesJob = z.object({ importId: z.uuid() });
 export type ImportFilesJob = z.infer<typeof importFilesJob>;
 
 /** An import whose last file has ended: people are told of what it moved. Of one that was tried again, since when its files count. */

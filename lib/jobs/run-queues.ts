@@ -1,14 +1,14 @@
 import PgBoss from 'pg-boss';
 import { sql } from 'drizzle-orm';
-import type { z } from 'zod';
+import { ZodError } from 'zod';
 import type { Database } from '@/db/client';
 import { log } from '@/lib/log';
 import type { EnginePool } from './engine-pool';
-import { importFilesHandler } from './handlers/import-files';
-import { tellImportHandler } from './handlers/tell-import';
-import { importFilesJob, tellImportJob } from './registry';
+import { handlersOf } from './handlers';
+import { QUEUE_NAMES, type QueueName } from './registry';
 import { ensureQueues } from './send-jobs';
 import { sweepLostFiles } from './sweep-lost-files';
+import { takeSeat } from './worker-seat';
 
 const POLLING_S = 0.5;
 const SWEEP_MS = 2_000;
@@ -17,44 +17,43 @@ export interface RunningQueues {
   stop(): Promise<void>;
 }
 
-/**
- * Works the queues until stopped: one loop more than there are engine threads, so that a thread has its next file while the
- * last one's numbers are written. On stop the file in hand is ended and the rest goes back to the queue.
- */
+/** Loops that work a queue in one process: of those that measure one more than there are engine threads, so that a thread has its next file while the last one's numbers are written. */
+const loopsOf = (name: QueueName, threads: number): number => (name === 'import-files' ? threads + 1 : 1);
+
+/** Works the queues until stopped. On stop the file in hand is ended and the rest goes back to the queue. */
 export async function runQueues({ db, url, engine }: { db: Database; url: string; engine: EnginePool }): Promise<RunningQueues> {
   await ensureQueues(db);
+  const { seat, leave } = await takeSeat(db, engine.threads);
   const boss = new PgBoss({ connectionString: url, max: 3, migrate: false, schedule: false, application_name: 'weighhouse worker' });
   boss.on('error', (error) => log.warn({ err: error }, 'the queue met a fault'));
   await boss.start();
   const ending = new AbortController();
-  for (let loop = 0; loop <= engine.threads; loop++) {
-    const id: string = await boss.work<unknown>('import-files', { batchSize: 1, pollingIntervalSeconds: POLLING_S }, async ([job]) => {
-      await importFilesHandler({ db, engine, signal: ending.signal }, await payloadOf(db, importFilesJob, job));
-      // There may be more: ask at once instead of after the polling interval.
-      boss.notifyWorker(id);
-    });
+  const handlers = handlersOf({ db, engine, seat, signal: ending.signal });
+  for (const name of QUEUE_NAMES) {
+    for (let loop = 0; loop < loopsOf(name, engine.threads); loop++) {
+      const id: string = await boss.work<unknown>(name, { batchSize: 1, pollingIntervalSeconds: POLLING_S }, async ([job]) => {
+        await handlers[name](job.data).catch((error: unknown) => failing(db, job.id, error));
+        // There may be more: ask at once instead of after the polling interval.
+        boss.notifyWorker(id);
+      });
+    }
   }
-  await boss.work<unknown>('tell-import', { batchSize: 1, pollingIntervalSeconds: POLLING_S }, async ([job]) => tellImportHandler(db, await payloadOf(db, tellImportJob, job)));
   const sweeper = setInterval(() => void sweepLostFiles(db).catch((error: unknown) => log.warn({ err: error }, 'the sweep for lost files failed')), SWEEP_MS);
   return {
     async stop() {
       clearInterval(sweeper);
       ending.abort();
       await boss.stop({ graceful: true, wait: true, timeout: 60_000 });
+      await leave();
     },
   };
 }
 
-/** What the job says; one that cannot be read fails for good. */
-async function payloadOf<Payload>(db: Database, schema: z.ZodType<Payload>, job: { id: string; data: unknown }): Promise<Payload> {
-  const payload = schema.safeParse(job.data);
-  if (payload.success) return payload.data;
-  await makeFinal(db, job.id);
-  log.error({ jobId: job.id, issues: payload.error.issues }, 'a job has a payload that cannot be read');
-  throw new Error('The payload cannot be read.');
-}
-
-/** The job fails for good with its next failure. */
-async function makeFinal(db: Database, jobId: string): Promise<void> {
-  await db.execute(sql`update pgboss.job set retry_limit = retry_count where id = ${jobId}`);
+/** The job fails, and the queue tries it again; one whose payload cannot be read fails for good. */
+async function failing(db: Database, jobId: string, error: unknown): Promise<never> {
+  if (error instanceof ZodError) {
+    await db.execute(sql`update pgboss.job set retry_limit = retry_count where id = ${jobId}`);
+    log.error({ jobId, issues: error.issues }, 'a job has a payload that cannot be read');
+  }
+  throw error;
 }

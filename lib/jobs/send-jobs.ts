@@ -33,10 +33,11 @@ export async function ensureQueues(db: Database): Promise<void> {
 /**
  * Puts jobs into the queue within the change's own transaction, so that neither exists without the other.
  * Fails when the queue does not exist: the insert would otherwise lose the jobs without a word.
+ * @param afterS seconds that they wait at least
  */
-export async function sendJobs<Name extends QueueName>(tx: Executor, name: Name, payloads: readonly Payload<Name>[]): Promise<void> {
+export async function sendJobs<Name extends QueueName>(tx: Executor, name: Name, payloads: readonly Payload<Name>[], afterS = 0): Promise<void> {
   if (payloads.length === 0) return;
   let sent = 0;
-  await queueOf(tx).insert(payloads.map((data) => ({ name, data })), { db: inExecutor(tx, (rows) => (sent = rows)) });
+  await queueOf(tx).insert(payloads.map((data) => ({ name, data, startAfter: `${afterS}` })), { db: inExecutor(tx, (rows) => (sent = rows)) });
   if (sent !== payloads.length) throw new Error(`The queue ${name} took ${sent} of ${payloads.length} jobs.`);
 }

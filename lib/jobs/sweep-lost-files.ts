@@ -1,41 +1,50 @@
 import { inArray, sql } from 'drizzle-orm';
 import type { Database } from '@/db/client';
 import { importFiles } from '@/db/schema/import-files';
-import { imports } from '@/db/schema/imports';
 import { shows } from '@/db/schema/shows';
 import { planOfImport } from '@/lib/imports/import-plan-of';
+import { meetFault } from '@/lib/imports/meet-fault';
 import { queueFiles } from '@/lib/imports/queue-files';
 import { log } from '@/lib/log';
-
-/** A job has claimed its files by then; one that is active longer and left files unclaimed has died. */
-const CLAIM_GRACE_S = 30;
+import { wakeAnother } from './handlers/import-files';
+import { LOST_WORKER } from './passing-fault';
 
 /**
- * Queues again the files of submitted imports that nobody works on: those whose lease ran out with their worker, and those
- * that no job of the queue stands for. Answers how many.
+ * Sees to it that nothing that was submitted lies about: files whose worker fell silent go back, those that it had begun with that in their history; files
+ * that were submitted before they could wait for a turn get their place; and where files wait, a turn is queued for them. Answers how many files it moved.
  */
 export async function sweepLostFiles(db: Database): Promise<number> {
+  const moved = (await giveBackSilent(db)) + (await queueUnplaced(db));
+  await wakeAnother(db);
+  return moved;
+}
+
+async function giveBackSilent(db: Database): Promise<number> {
   return db.transaction(async (tx) => {
-    const { rows: lost } = await tx.execute<{ id: string; import_id: string }>(sql`
-      select f.id, f.import_id from import_files f join imports i on i.id = f.import_id
-      where i.state in ('queued', 'running') and f.state in ('queued', 'reading', 'measuring')
-        and (f.lease_until < now() or (f.lease_until is null and not exists (
-          select 1 from pgboss.job j where j.name = 'import-files' and j.data ->> 'importId' = f.import_id::text
-            and (j.state < 'active' or (j.state = 'active' and j.started_on > now() - make_interval(secs => ${CLAIM_GRACE_S}))))))
-      for no key update of f skip locked`);
-    if (lost.length === 0) return 0;
-    await tx
-      .update(importFiles)
-      .set({ state: 'queued', leaseBy: null, leaseUntil: null })
-      .where(inArray(importFiles.id, lost.map((file) => file.id)));
-    const importIds = [...new Set(lost.map((file) => file.import_id))];
-    const owners = await tx.select({ id: imports.id, pattern: shows.namePattern }).from(imports).innerJoin(shows, sql`${shows.id} = ${imports.showId}`).where(inArray(imports.id, importIds));
-    const ids = new Set(lost.map((file) => file.id));
-    for (const { id, pattern } of owners) {
-      const files = (await planOfImport(tx, id, pattern)).filter((file) => ids.has(file.id));
-      await queueFiles(tx, id, files);
-      log.warn({ importId: id, files: files.length }, 'files of a lost job are queued again');
+    const silent = await tx
+      .select()
+      .from(importFiles)
+      .where(sql`${importFiles.leaseUntil} < now() and ${importFiles.state} in ('queued', 'reading', 'measuring')`)
+      .orderBy(importFiles.id)
+      .for('no key update', { skipLocked: true });
+    const untouched = silent.filter((file) => file.state === 'queued').map((file) => file.id);
+    if (untouched.length > 0) await tx.update(importFiles).set({ leaseBy: null, leaseUntil: null, worker: null }).where(inArray(importFiles.id, untouched));
+    for (const file of silent.filter((one) => one.state !== 'queued')) {
+      log.warn({ fileId: file.id, importId: file.importId, worker: file.worker, attempt: file.attempts }, 'a worker fell silent with a file in hand');
+      await meetFault(tx, file, LOST_WORKER);
     }
-    return lost.length;
+    return silent.length;
   });
+}
+
+/** Archives wait for being unpacked, not for a turn. */
+async function queueUnplaced(db: Database): Promise<number> {
+  const { rows } = await db.execute<{ id: string; import_id: string; pattern: string | null }>(sql`
+    select f.id, f.import_id, s.name_pattern as pattern from import_files f join imports i on i.id = f.import_id join ${shows} s on s.id = i.show_id
+    where i.state in ('queued', 'running') and f.state in ('queued', 'reading', 'measuring') and f.queued_at is null and f.name !~* '\\.zip$'`);
+  for (const importId of new Set(rows.map((row) => row.import_id))) {
+    const mine = rows.filter((row) => row.import_id === importId);
+    await db.transaction(async (tx) => queueFiles(tx, importId, await planOfImport(tx, importId, mine[0].pattern), new Set(mine.map((row) => row.id))));
+  }
+  return rows.length;
 }

@@ -1,62 +1,95 @@
-import { randomUUID } from 'node:crypto';
-import { eq } from 'drizzle-orm';
+import { eq, inArray, sql } from 'drizzle-orm';
 import type { Database } from '@/db/client';
 import { imports } from '@/db/schema/imports';
-import { shows } from '@/db/schema/shows';
 import { users } from '@/db/schema/users';
-import { claimFiles, keepLeases, releaseFiles } from '@/lib/imports/lease';
+import { claimTurn, type ClaimedTurn, type Seat } from '@/lib/imports/claim-turn';
+import { lockHeldFile } from '@/lib/imports/end-file';
+import { keepLeases, releaseFiles } from '@/lib/imports/lease';
 import { measureImportFile, type FileWork } from '@/lib/imports/measure-import-file';
-import { planOfImport } from '@/lib/imports/import-plan-of';
+import { meetFault } from '@/lib/imports/meet-fault';
 import { log } from '@/lib/log';
 import type { EnginePool } from '../engine-pool';
+import { passingFaultOf } from '../passing-fault';
 import type { ImportFilesJob } from '../registry';
+import { sendJobs } from '../send-jobs';
 
 export interface JobTools {
   db: Database;
   engine: Pick<EnginePool, 'measure'>;
+  /** Whose name and memory the turn is taken under. */
+  seat: Seat;
   /** Aborted when the process shuts down: the file in hand is ended, the rest is given back. */
   signal?: AbortSignal;
 }
 
 /**
- * Takes up the files of one job that nobody else holds, in the job's order. Each ends once. Files that met a passing fault
- * are given back and the job fails, so that the queue tries it again later; the others are not touched by that.
+ * One turn: takes the next chunk of files that wait and brings each to its end. A file that meets a passing fault is put off with those of its asset that
+ * come after it; the others are not touched by that. Where there was nothing to take, the job is done.
  */
-export async function importFilesHandler({ db, engine, signal }: JobTools, job: ImportFilesJob): Promise<void> {
-  const [found] = await db
-    .select({ importRow: imports, pattern: shows.namePattern, user: users })
-    .from(imports)
-    .innerJoin(shows, eq(shows.id, imports.showId))
-    .innerJoin(users, eq(users.id, imports.createdBy))
-    .where(eq(imports.id, job.importId));
-  if (!found || !['queued', 'running'].includes(found.importRow.state)) return;
-  const holder = randomUUID();
-  const claimed = new Set((await claimFiles(db, job.importId, job.fileIds, holder)).map((file) => file.id));
-  if (claimed.size === 0) return;
-  const leases = keepLeases(db, holder);
-  const waiting = job.fileIds.filter((id) => claimed.has(id));
-  const { user } = found;
-  const actor = { userId: user.id, email: user.email, name: user.name, isAdmin: user.isAdmin, via: 'system' as const, tokenId: null };
-  const work: FileWork = { db, engine, holder, importRow: found.importRow, actor };
-  let fault: unknown = null;
+export async function importFilesHandler(tools: JobTools, job: ImportFilesJob): Promise<void> {
+  const { db, seat, signal } = tools;
+  if (signal?.aborted) return;
+  const turn = await claimTurn(db, seat);
+  if (turn === null) return;
+  await wakeAnother(db, job.importId);
   try {
-    const plans = new Map((await planOfImport(db, job.importId, found.pattern)).map((plan) => [plan.id, plan]));
-    for (let id = waiting.shift(); id !== undefined; id = waiting.shift()) {
-      if (signal?.aborted) {
-        waiting.unshift(id);
-        throw new Error('The worker is shutting down.');
-      }
-      try {
-        await measureImportFile(work, id, plans.get(id)!);
-      } catch (error) {
-        fault = error;
-        log.warn({ err: error, importId: job.importId, fileId: id }, 'a file met a fault and will be tried again');
+    await workThrough(tools, turn);
+  } finally {
+    seat.memory.hold(turn.holder, 0);
+  }
+  await wakeAnother(db, job.importId);
+}
+
+async function workThrough({ db, engine, seat, signal }: JobTools, { holder, files }: ClaimedTurn): Promise<void> {
+  const leases = keepLeases(db, holder);
+  const waiting = [...files];
+  try {
+    const submitters = await submittersOf(db, [...new Set(files.map((file) => file.importId))]);
+    for (let file = waiting.shift(); file !== undefined; file = waiting.shift()) {
+      const { id, importId, asset } = file;
+      const submitter = submitters.get(importId);
+      if (submitter === undefined || signal?.aborted) {
         await releaseFiles(db, [id], holder);
+        continue;
+      }
+      seat.memory.hold(holder, Math.max(file.memory, ...waiting.map((other) => other.memory)));
+      try {
+        const hasStarted = await measureImportFile({ db, engine, holder, lost: leases.watch(id), ...submitter }, id);
+        if (!hasStarted) await releaseFiles(db, [id], holder);
+      } catch (error) {
+        const fault = passingFaultOf(error);
+        log.warn({ err: error, importId, fileId: id, fault: fault.code }, 'a file met a fault that may pass');
+        const behind = waiting.filter((other) => asset !== null && other.asset === asset);
+        for (const other of behind) waiting.splice(waiting.indexOf(other), 1);
+        await releaseFiles(db, behind.map((other) => other.id), holder);
+        await db.transaction(async (tx) => {
+          const held = await lockHeldFile(tx, id, holder);
+          if (held) await meetFault(tx, held, fault);
+        });
       }
     }
   } finally {
     leases.stop();
-    await releaseFiles(db, waiting, holder);
+    // Where the database is away this fails too; the leases then run out by themselves.
+    await releaseFiles(db, waiting.map((file) => file.id), holder);
   }
-  if (fault !== null) throw fault;
+}
+
+/** Under whom the versions of each import are made. */
+async function submittersOf(db: Database, importIds: readonly string[]): Promise<Map<string, Pick<FileWork, 'importRow' | 'actor'>>> {
+  const found = await db.select({ importRow: imports, user: users }).from(imports).innerJoin(users, eq(users.id, imports.createdBy)).where(inArray(imports.id, [...importIds]));
+  return new Map(
+    found.map(({ importRow, user }) => [importRow.id, { importRow, actor: { userId: user.id, email: user.email, name: user.name, isAdmin: user.isAdmin, via: 'system' as const, tokenId: null } }]),
+  );
+}
+
+/** Queues one more turn where files wait and none is queued for them. */
+export async function wakeAnother(db: Database, importId?: string): Promise<void> {
+  const { rows } = await db.execute<{ import_id: string }>(sql`
+    select f.import_id from import_files f join imports i on i.id = f.import_id
+    where i.state in ('queued', 'running') and i.paused_at is null and f.state = 'queued' and f.queued_at is not null and f.lease_by is null
+      and (f.try_after is null or f.try_after <= now())
+      and not exists (select 1 from pgboss.job j where j.name = 'import-files' and j.state < 'active' and j.start_after <= now())
+    limit 1`);
+  if (rows.length > 0) await sendJobs(db, 'import-files', [{ importId: importId ?? rows[0].import_id }]);
 }

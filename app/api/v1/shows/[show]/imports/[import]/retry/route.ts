@@ -1,5 +1,5 @@
 import { route } from '@/lib/endpoint';
 import { retryImport } from '@/lib/imports/retry-import';
-import { importRefInput } from '@/lib/rules/inputs/import-ref';
+import { retryImportInput } from '@/lib/rules/inputs/retry-import';
 
-export const POST = route(importRefInput, retryImport, { status: 202 });
+export const POST = route(retryImportInput, retryImport, { status: 202 });
