@@ -1,9 +1,7 @@
 import { randomUUID } from 'node:crypto';
-import { mkdir, rm, writeFile } from 'node:fs/promises';
-import path from 'node:path';
 import { sql } from 'drizzle-orm';
 import { database } from '@/db/client';
-import { config } from '@/lib/config';
+import { disk, UNFINISHED } from '@/lib/storage/disk';
 
 /** `down` names what does not work; the queue's age is that of the oldest job that could run and waits, in seconds. */
 export type Readiness = {
@@ -32,11 +30,9 @@ async function oldestWaitingJob(): Promise<number | null> {
 }
 
 async function storageTakesBytes(): Promise<void> {
-  const { filesFolder } = config();
-  await mkdir(/* turbopackIgnore: true */ filesFolder, { recursive: true });
-  const probe = path.join(/* turbopackIgnore: true */ filesFolder, `.probe-${randomUUID()}`);
-  await writeFile(probe, '');
-  await rm(probe);
+  const probe = `${UNFINISHED}/probe-${randomUUID()}`;
+  await disk().put(probe, 'probe');
+  await disk().delete(probe);
 }
 
 /** Whether the program can do its work: database, storage and queue, each tried. */

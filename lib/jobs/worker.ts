@@ -2,7 +2,7 @@ import { closeDatabase, database } from '@/db/client';
 import { config } from '@/lib/config';
 import { log } from '@/lib/log';
 import { runMailSweep } from '@/lib/mail/run-mail-sweep';
-import { sweepUploads } from '@/lib/storage/sweep-uploads';
+import { runStorageSweep } from '@/lib/storage/run-storage-sweep';
 import { startEnginePool } from './engine-pool';
 import { runDigestSweep } from './run-digest-sweep';
 import { runQueues } from './run-queues';
@@ -15,14 +15,14 @@ async function main(): Promise<void> {
   const queues = await runQueues({ db: database(), url, engine });
   const mails = runMailSweep(database());
   const digests = runDigestSweep(database());
+  const storage = runStorageSweep(database());
   log.info({ threads: engine.threads }, 'worker is ready');
-  void sweepUploads().catch((error: unknown) => log.warn({ err: error }, 'old uploads could not be removed'));
   let isEnding = false;
   const end = async (signal: string) => {
     if (isEnding) return;
     isEnding = true;
     log.info({ signal }, 'worker ends');
-    await Promise.all([queues.stop(), mails.stop(), digests.stop()]);
+    await Promise.all([queues.stop(), mails.stop(), digests.stop(), storage.stop()]);
     await engine.close();
     await closeDatabase();
     process.exit(0);

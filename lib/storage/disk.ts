@@ -1,23 +1,41 @@
 import path from 'node:path';
 import { Disk } from 'flydrive';
 import { FSDriver } from 'flydrive/drivers/fs';
+import { S3Driver } from 'flydrive/drivers/s3';
 import { config } from '@/lib/config';
+import { s3Place } from './s3-client';
 
-let cached: { folder: string; disk: Disk } | null = null;
+/** Folders of the storage: whole files by content, parts of uploads that go on, and what is being written. */
+export const BLOBS = 'blobs';
+export const PARTS = 'parts';
+export const UNFINISHED = 'uploads';
 
-/** The studio's storage. Keys are `blobs/ab/<sha256>`; only storeBlob and the sweep of temporary files write here. */
+let cached: { from: unknown; disk: Disk } | null = null;
+
+/** The studio's storage: a folder, or a bucket where one is configured. Written to by receiveBytes and the sweeps alone. */
 export function disk(): Disk {
-  const folder = config().filesFolder;
-  if (cached?.folder !== folder) cached = { folder, disk: new Disk(new FSDriver({ location: folder, visibility: 'private' })) };
+  const s3 = s3Place();
+  const from = s3 ?? config().filesFolder;
+  if (cached?.from !== from) {
+    const driver = s3
+      ? new S3Driver({ client: s3.client, bucket: s3.bucket, visibility: 'private', supportsACL: false })
+      : new FSDriver({ location: config().filesFolder, visibility: 'private' });
+    cached = { from, disk: new Disk(driver) };
+  }
   return cached.disk;
 }
 
 /** Where the bytes with this SHA-256 (64 hex digits) lie. */
 export function blobKey(sha256: string): string {
-  return `blobs/${sha256.slice(0, 2)}/${sha256}`;
+  return `${BLOBS}/${sha256.slice(0, 2)}/${sha256}`;
 }
 
-/** Folder of uploads that are not finished; on the same volume as the blobs, so that a rename is atomic. */
-export function uploadsFolder(): string {
-  return path.join(config().filesFolder, 'uploads');
+/** Where one part of an upload lies; its hash is in the key, so that a part that comes again never overwrites another's bytes. */
+export function partKey(uploadId: string, number: number, sha256: string): string {
+  return `${PARTS}/${uploadId}/${number}-${sha256}`;
+}
+
+/** The path of a key where the storage is a folder. */
+export function pathInFolder(key: string): string {
+  return path.join(config().filesFolder, key);
 }

@@ -1,70 +1,53 @@
-import { createHash, randomUUID } from 'node:crypto';
-import { mkdir, open, rename, rm } from 'node:fs/promises';
-import path from 'node:path';
-import type { ReadableStream } from 'node:stream/web';
-import { config } from '@/lib/config';
-import { StudioError } from '@/lib/rules/studio-error';
-import { blobKey, disk, uploadsFolder } from './disk';
+import { sql } from 'drizzle-orm';
+import { database } from '@/db/client';
+import { blobs } from '@/db/schema/blobs';
+import { countAgainst } from './count-against';
+import { blobKey, disk } from './disk';
+import { receiveBytes, type ByteSource, type ReceiveOptions } from './receive-bytes';
+import { sizeInStorage } from './size-in-storage';
+import { asStudioError } from './storage-fault';
 
 export interface StoredBlob {
   sha256: string;
   byteSize: number;
 }
 
-export interface StoreOptions {
-  /** Refused as too_large beyond this many bytes. */
-  maxBytes: number;
-  /** What the sender says the bytes' SHA-256 is (lower-case hex); other bytes are refused as bad_input. */
-  expectedSha256?: string | null;
+export interface StoreOptions extends ReceiveOptions {
+  /** The bytes were counted for the studio when their upload was announced. */
+  isReserved?: boolean;
 }
 
 /**
- * Streams bytes into storage under their own hash. They go to a temporary file while they are hashed and counted, are
- * flushed to the volume, and only then get their name; a reader never sees half a file. Bytes that are there already are
- * not stored again. Whatever goes wrong, an abort by the sender included, the temporary file is removed.
+ * Streams bytes into storage under their own hash and writes them down as a blob; bytes that are there already are not stored again. The
+ * row comes before the name: from then on no sweep takes the bytes, for the grace time that they have to be referred to. Uses a connection
+ * of its own, so call it outside a transaction that has touched blobs. Errors: too_large, bad_input, bad_request, storage_full, not_available.
  */
-export async function storeBlob(source: ReadableStream<Uint8Array> | AsyncIterable<Uint8Array> | null, options: StoreOptions): Promise<StoredBlob> {
-  await mkdir(uploadsFolder(), { recursive: true });
-  const temporary = path.join(uploadsFolder(), randomUUID());
+export async function storeBlob(source: ByteSource, options: StoreOptions): Promise<StoredBlob> {
+  const received = await receiveBytes(source, options);
   try {
-    const stored = await writeHashed(temporary, source, options.maxBytes);
-    if (options.expectedSha256 && options.expectedSha256 !== stored.sha256) {
-      throw new StudioError('bad_input', `The bytes that arrived have the SHA-256 ${stored.sha256}, not the one that was announced. Send the file again.`, { field: 'x-content-sha256' });
-    }
-    const key = blobKey(stored.sha256);
-    if (await disk().exists(key)) return stored;
-    const target = path.join(config().filesFolder, key);
-    await mkdir(path.dirname(target), { recursive: true });
-    await rename(temporary, target);
-    return stored;
+    const { sha256, byteSize } = received;
+    await noteBlob({ sha256, byteSize }, options.isReserved ?? false);
+    const key = blobKey(sha256);
+    const size = await sizeInStorage(key);
+    // Another size than its bytes have is no file of ours but the rest of a fault, and is mended by the right one.
+    if (size !== null && size !== byteSize) await disk().delete(key);
+    if (size !== byteSize) await received.place(key);
+    return { sha256, byteSize };
+  } catch (error) {
+    throw asStudioError(error);
   } finally {
-    await rm(temporary, { force: true });
+    await received.discard().catch(() => undefined);
   }
 }
 
-async function writeHashed(temporary: string, source: AsyncIterable<Uint8Array> | null, maxBytes: number): Promise<StoredBlob> {
-  const hash = createHash('sha256');
-  let byteSize = 0;
-  const file = await open(temporary, 'wx');
-  try {
-    for await (const chunk of untilBroken(source)) {
-      byteSize += chunk.byteLength;
-      if (byteSize > maxBytes) throw new StudioError('too_large', `The file is larger than ${maxBytes} bytes, the most that one file may have here.`);
-      hash.update(chunk);
-      await file.writeFile(chunk);
-    }
-    await file.sync();
-  } finally {
-    await file.close();
-  }
-  return { sha256: hash.digest('hex'), byteSize };
-}
-
-/** The sender's bytes; a sender that goes away is their affair and no fault of ours. */
-async function* untilBroken(source: AsyncIterable<Uint8Array> | null): AsyncIterable<Uint8Array> {
-  try {
-    if (source) yield* source;
-  } catch {
-    throw new StudioError('bad_request', 'The upload broke off before its end. Send the file again.');
-  }
+/** A sweep that is removing the blob holds its row, so this waits for it and then writes a new one. */
+async function noteBlob(blob: StoredBlob, isReserved: boolean): Promise<void> {
+  await database().transaction(async (tx) => {
+    const known = await tx
+      .insert(blobs)
+      .values(blob)
+      .onConflictDoUpdate({ target: blobs.sha256, set: { seenAt: sql`case when ${blobs.seenAt} < now() - interval '1 hour' then now() else ${blobs.seenAt} end` } })
+      .returning({ isNew: sql<boolean>`xmax = 0` });
+    if (known[0].isNew && !isReserved) await countAgainst(tx, { kind: 'studio' }, blob.byteSize);
+  });
 }
