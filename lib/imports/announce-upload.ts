@@ -46,8 +46,8 @@ export async function announceUpload(context: Context, input: AnnounceUploadInpu
       .returning({ ...getTableColumns(u), began: sql<boolean>`created_at = now()` });
     if (upload.began) {
       await tx.execute(sql`delete from upload_parts where upload_id = ${upload.id}`);
-      await countAgainst(tx, { kind: 'show', showId: show.id }, bytes);
-      await countAgainst(tx, { kind: 'studio' }, bytes);
+      await countAgainst(tx, { kind: 'show', showId: show.id }, bytes, true);
+      await countAgainst(tx, { kind: 'studio' }, bytes, true);
     }
     return describeUpload(upload, await listUploadParts(tx, upload.id), 'open');
   });

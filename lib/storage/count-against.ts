@@ -62,10 +62,11 @@ async function truthOf(db: Executor, { truth }: Counted): Promise<number> {
 }
 
 /**
- * Counts bytes (or files) for a scope, within the transaction that writes what is counted and before it does; the scope's row stays locked
- * until that ends, so that two cannot pass a limit together. What is counted twice only brings the recount forward. Errors: too_large.
+ * Counts bytes (or files) for a scope, within the transaction that writes what is counted; the scope's row stays locked until that ends, so
+ * that two cannot pass a limit together. What is counted twice only brings the recount forward. `isWritten`: the transaction has written
+ * what is counted already, so that a recount finds it. Errors: too_large.
  */
-export async function countAgainst(tx: Transaction, scope: UsageScope, amount: number): Promise<void> {
+export async function countAgainst(tx: Transaction, scope: UsageScope, amount: number, isWritten = false): Promise<void> {
   const counted = countedOf(scope);
   const [held] = await tx
     .insert(storageUsage)
@@ -75,7 +76,7 @@ export async function countAgainst(tx: Transaction, scope: UsageScope, amount: n
   const isFresh = held.countedAt.getTime() === 0;
   let total = held.bytes + amount;
   if (isFresh || total > counted.limit) {
-    total = (await truthOf(tx, counted)) + amount;
+    total = (await truthOf(tx, counted)) + (isWritten ? 0 : amount);
     if (total > counted.limit) throw new StudioError('too_large', counted.refusal(counted.limit));
     await tx.update(storageUsage).set({ bytes: total, countedAt: sql`now()` }).where(eq(storageUsage.scope, counted.key));
   } else if (amount > 0) {

@@ -48,6 +48,6 @@ async function noteBlob(blob: StoredBlob, isReserved: boolean): Promise<void> {
       .values(blob)
       .onConflictDoUpdate({ target: blobs.sha256, set: { seenAt: sql`case when ${blobs.seenAt} < now() - interval '1 hour' then now() else ${blobs.seenAt} end` } })
       .returning({ isNew: sql<boolean>`xmax = 0` });
-    if (known[0].isNew && !isReserved) await countAgainst(tx, { kind: 'studio' }, blob.byteSize);
+    if (known[0].isNew && !isReserved) await countAgainst(tx, { kind: 'studio' }, blob.byteSize, true);
   });
 }
