@@ -37,11 +37,11 @@ async function giveBackSilent(db: Database): Promise<number> {
   });
 }
 
-/** Archives wait for being unpacked, not for a turn. */
+
 async function queueUnplaced(db: Database): Promise<number> {
   const { rows } = await db.execute<{ id: string; import_id: string; pattern: string | null }>(sql`
     select f.id, f.import_id, s.name_pattern as pattern from import_files f join imports i on i.id = f.import_id join ${shows} s on s.id = i.show_id
-    where i.state in ('queued', 'running') and f.state in ('queued', 'reading', 'measuring') and f.queued_at is null and f.name !~* '\\.zip$'`);
+    where i.state in ('queued', 'running') and f.state in ('queued', 'reading', 'measuring') and f.queued_at is null`);
   for (const importId of new Set(rows.map((row) => row.import_id))) {
     const mine = rows.filter((row) => row.import_id === importId);
     await db.transaction(async (tx) => queueFiles(tx, importId, await planOfImport(tx, importId, mine[0].pattern), new Set(mine.map((row) => row.id))));

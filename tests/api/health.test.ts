@@ -4,7 +4,12 @@ import { expect, test } from 'vitest';
 import { GET as getHealth } from '@/app/api/health/route';
 import { GET as getReady } from '@/app/api/health/ready/route';
 import { config } from '@/lib/config';
+import { pauseImport } from '@/lib/imports/pause-import';
+import { submitImport } from '@/lib/imports/submit-import';
+import { cubeObj } from '../support/cages';
+import { createCast } from '../support/cast';
 import { asOwner } from '../support/database';
+import { openWith } from '../support/imports';
 
 test('liveness answers without a token', async () => {
   const answer = getHealth();
@@ -27,6 +32,22 @@ test('the oldest waiting job gives the age', async () => {
   const { oldest_waiting_job_s: age } = await (await getReady()).json();
   expect(age).toBeGreaterThanOrEqual(90);
   expect(age).toBeLessThan(120);
+});
+
+test('files that wait count though no job stands for them; paused ones and those put off do not', async () => {
+  await asOwner(`delete from pgboss.job`);
+  const cast = await createCast();
+  const id = await openWith(cast.contextOf('td'), cast.show.code, { 'a.obj': cubeObj(), 'b.obj': cubeObj({ size: 3 }) });
+  await submitImport(cast.contextOf('td'), { show: cast.show.code, import: id });
+  await asOwner(`delete from pgboss.job`);
+  await asOwner(`update import_files set queued_at = now() - interval '300 seconds' where import_id = $1`, [id]);
+  const age = async () => (await (await getReady()).json()).oldest_waiting_job_s as number | null;
+  expect(await age()).toBeGreaterThanOrEqual(300);
+  await asOwner(`update import_files set try_after = now() + interval '1 hour' where import_id = $1`, [id]);
+  expect(await age()).toBeNull();
+  await asOwner(`update import_files set try_after = null where import_id = $1`, [id]);
+  await pauseImport(cast.contextOf('td'), { show: cast.show.code, import: id });
+  expect(await age()).toBeNull();
 });
 
 test('a folder that takes no bytes is 503, without its path', async () => {

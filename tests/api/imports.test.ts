@@ -7,15 +7,21 @@ import { GET } from '@/app/api/v1/shows/[show]/imports/[import]/route';
 import { POST as CANCEL } from '@/app/api/v1/shows/[show]/imports/[import]/cancel/route';
 import { GET as EVENTS } from '@/app/api/v1/shows/[show]/imports/[import]/events/route';
 import { PUT } from '@/app/api/v1/shows/[show]/imports/[import]/files/[...name]/route';
+import { POST as PAUSE } from '@/app/api/v1/shows/[show]/imports/[import]/pause/route';
+import { POST as RESUME } from '@/app/api/v1/shows/[show]/imports/[import]/resume/route';
 import { POST as RETRY } from '@/app/api/v1/shows/[show]/imports/[import]/retry/route';
 import { POST as SUBMIT } from '@/app/api/v1/shows/[show]/imports/[import]/submit/route';
 import { config } from '@/lib/config';
+import { database } from '@/db/client';
+import { pauseImport } from '@/lib/imports/pause-import';
+import { submitImport } from '@/lib/imports/submit-import';
+import { drainQueue } from '@/lib/jobs/drain-queue';
 import type { ImportDetail } from '@/lib/rules/import-answer';
 import { call, eachCaller, expectProblem, rowsOf, type StatusOfCaller } from '../support/api';
 import { brokenObj, cubeObj } from '../support/cages';
 import { createCast, type Cast } from '../support/cast';
 import { asOwner } from '../support/database';
-import { importFiles, openWith } from '../support/imports';
+import { importFiles, openWith, ownThread } from '../support/imports';
 
 const TABLES = ['imports', 'import_files', 'blobs', 'shows', 'audit_events', 'audit_items'];
 const writers = (status: number): StatusOfCaller => ({ admin: status, lead: status, td: status, artist: 403, guest: 404, outsider: 404, nobody: 401 });
@@ -72,7 +78,25 @@ describe('who may do what', () => {
     return { method: 'POST', params: { show: cast.show.code, import: await openOne(cast) }, token: cast.tokenOf(caller) };
   });
 
-  test.each([['GET', GET], ['SUBMIT', SUBMIT], ['RETRY', RETRY], ['CANCEL', CANCEL]] as const)('%s of an import of another show is not found', async (_verb, handler) => {
+  const submittedOne = async (cast: Cast) => {
+    const id = await openOne(cast, { 'ox.obj': cubeObj() });
+    await submitImport(cast.contextOf('td'), { show: cast.show.code, import: id });
+    return id;
+  };
+
+  eachCaller('pausing', PAUSE, writers(200), TABLES, async (caller) => {
+    const cast = await createCast();
+    return { method: 'POST', params: { show: cast.show.code, import: await submittedOne(cast) }, token: cast.tokenOf(caller) };
+  });
+
+  eachCaller('resuming', RESUME, writers(200), TABLES, async (caller) => {
+    const cast = await createCast();
+    const id = await submittedOne(cast);
+    await pauseImport(cast.contextOf('td'), { show: cast.show.code, import: id });
+    return { method: 'POST', params: { show: cast.show.code, import: id }, token: cast.tokenOf(caller) };
+  });
+
+  test.each([['GET', GET], ['SUBMIT', SUBMIT], ['RETRY', RETRY], ['CANCEL', CANCEL], ['PAUSE', PAUSE], ['RESUME', RESUME]] as const)('%s of an import of another show is not found', async (_verb, handler) => {
     const [mine, other] = [await createCast(), await createCast()];
     const id = await openOne(other, { 'ox.obj': cubeObj() });
     const before = await rowsOf(...TABLES);
@@ -183,6 +207,34 @@ describe('submit, retry, cancel', () => {
     const before = await good();
     expect((await post(RETRY, cast, id)).json).toMatchObject({ state: 'queued', counts: { queued: 1, done: 1, failed: 0 } });
     expect(await good()).toEqual(before);
+  });
+
+  test('retry of a named file leaves the other failures', async () => {
+    const cast = await createCast();
+    const { id } = await bring(cast, { 'bad.obj': brokenObj, 'worse.obj': brokenObj, 'good.obj': cubeObj() });
+    const answer = await call(RETRY, { params: { show: cast.show.code, import: id }, body: { files: ['bad.obj', 'good.obj'] }, token: cast.people.td.token });
+    expect(answer.json).toMatchObject({ state: 'queued', counts: { queued: 1, done: 1, failed: 1 } });
+    expect(await asOwner(`select name from import_files where import_id = $1 and state = 'queued'`, [id])).toEqual([{ name: 'bad.obj' }]);
+  });
+
+  test('a paused import keeps its state and waits, and goes on when it is resumed', async () => {
+    const cast = await createCast();
+    const id = await openOne(cast, { 'ox.obj': cubeObj() });
+    expectProblem(await post(PAUSE, cast, id), 409, 'conflict');
+    await post(SUBMIT, cast, id);
+    expect((await post(PAUSE, cast, id)).json).toMatchObject({ state: 'queued', paused: true });
+    expect((await post(PAUSE, cast, id)).json).toMatchObject({ paused: true });
+    await drainQueue(database(), ownThread);
+    const waiting = await call(GET, { params: { show: cast.show.code, import: id }, token: cast.people.td.token });
+    expect(waiting.json).toMatchObject({ state: 'queued', paused: true, counts: { queued: 1 } });
+    expect((await post(RESUME, cast, id)).json).toMatchObject({ state: 'queued', paused: false });
+    expect((await post(RESUME, cast, id)).status).toBe(200);
+    await drainQueue(database(), ownThread);
+    expectProblem(await post(PAUSE, cast, id), 409, 'conflict');
+    const acts = await asOwner(`select act from audit_events where show_id = $1 and act in ('pause-import', 'resume-import') order by id`, [cast.show.id]);
+    expect(acts.map((act) => act.act)).toEqual(['pause-import', 'resume-import']);
+    const done = await call(GET, { params: { show: cast.show.code, import: id }, token: cast.people.td.token });
+    expect(done.json).toMatchObject({ state: 'done', paused: false, counts: { done: 1 } });
   });
 
   test('cancel fails what was not measured and refuses a done import', async () => {
