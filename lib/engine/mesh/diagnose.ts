@@ -4,7 +4,7 @@ import { counted, placeOf, type FindingList } from './findings';
 import { halfEdgeEnds } from './match-edges';
 import type { Bodies } from './partition';
 import { findTurnedFaces } from './turned-faces';
-import { nextHalfEdge, previousHalfEdge, type EdgeDefects, type Topology } from './topology';
+import type { EdgeDefects, Topology } from './topology';
 
 /** Area of a face relative to the square of its perimeter below which it counts as none. */
 const NO_AREA = 1e-14;
@@ -58,40 +58,68 @@ export function positionOf(cage: Cage, vertex: number): [number, number, number]
 type PlaceAt = (face: number, fields: Partial<Place>) => Place;
 
 function diagnoseFaces(cage: Cage, mesh: Topology, bad: Uint8Array, findings: FindingList, at: PlaceAt, partName: (face: number) => string): void {
-  const p = cage.positions;
+  const { starts, vertexOf, faces } = mesh;
   const seenAt = new Int32Array(mesh.vertices).fill(-1);
   const crowded: number[] = [];
-  for (let face = 0; face < mesh.faces; face++) {
-    const start = mesh.starts[face];
-    const end = mesh.starts[face + 1];
-    let repeated = end - start < 3;
-    let nx = 0, ny = 0, nz = 0, perimeter = 0;
-    const o = 3 * mesh.vertexOf[start];
-    for (let h = start; h < end; h++) {
-      const v = mesh.vertexOf[h];
-      if (seenAt[v] === face) repeated = true;
-      seenAt[v] = face;
-      const a = 3 * v;
-      const b = 3 * mesh.vertexOf[h + 1 === end ? start : h + 1];
-      const ax = p[a] - p[o], ay = p[a + 1] - p[o + 1], az = p[a + 2] - p[o + 2];
-      const bx = p[b] - p[o], by = p[b + 1] - p[o + 1], bz = p[b + 2] - p[o + 2];
-      nx += ay * bz - az * by;
-      ny += az * bx - ax * bz;
-      nz += ax * by - ay * bx;
-      perimeter += Math.sqrt((bx - ax) ** 2 + (by - ay) ** 2 + (bz - az) ** 2);
-    }
-    if (repeated) {
+  for (let face = 0; face < faces; face++) {
+    if (repeatsVertex(vertexOf, starts[face], starts[face + 1], face, seenAt)) {
       bad[face] = 1;
       findings.add('degenerate_face', 'problem', partName(face), at(face, {}),
         (n) => `${counted(n, 'face has', 'faces have')} fewer than three different vertices or one vertex twice; delete or rebuild ${n === 1 ? 'it' : 'them'}.`);
-    } else if (!(Math.sqrt(nx * nx + ny * ny + nz * nz) > NO_AREA * perimeter * perimeter)) {
+    } else if (!hasArea(cage.positions, vertexOf, starts[face], starts[face + 1])) {
       findings.add('degenerate_face', 'warning', partName(face), at(face, {}),
         (n) => `${counted(n, 'face has', 'faces have')} no area; merge the vertices that lie on each other.`);
     }
     if (bad[face] === 1) crowded.push(face);
   }
-  for (let i = 0; i < mesh.faces && crowded.length > 0; i++) if (bad[i] === 0 && touchesBad(mesh, bad, i)) crowded.push(i);
+  for (let i = 0; i < faces && crowded.length > 0; i++) if (bad[i] === 0 && touchesBad(mesh, bad, i)) crowded.push(i);
   reportDuplicates(mesh, crowded, bad, findings, at, partName);
+}
+
+/** Whether a face has fewer than three corners or one vertex twice; `seenAt` holds per vertex the larger face that it was last met in. */
+function repeatsVertex(vertexOf: Int32Array, start: number, end: number, face: number, seenAt: Int32Array): boolean {
+  const a = vertexOf[start], b = vertexOf[start + 1], c = vertexOf[start + 2];
+  if (end - start <= 4) {
+    if (end - start < 3 || a === b || b === c || c === a) return true;
+    const d = vertexOf[end - 1];
+    return end - start === 4 && (d === a || d === b || d === c);
+  }
+  for (let h = start; h < end; h++) {
+    if (seenAt[vertexOf[h]] === face) return true;
+    seenAt[vertexOf[h]] = face;
+  }
+  return false;
+}
+
+/** Whether a face's area is more than nothing beside the square of its perimeter. */
+function hasArea(p: Float64Array, vertexOf: Int32Array, start: number, end: number): boolean {
+  const o = 3 * vertexOf[start];
+  const ox = p[o], oy = p[o + 1], oz = p[o + 2];
+  let nx = 0, ny = 0, nz = 0, squares = 0;
+  let ax = 0, ay = 0, az = 0;
+  for (let h = start + 1; h < end; h++) {
+    const b = 3 * vertexOf[h];
+    const bx = p[b] - ox, by = p[b + 1] - oy, bz = p[b + 2] - oz;
+    nx += ay * bz - az * by;
+    ny += az * bx - ax * bz;
+    nz += ax * by - ay * bx;
+    squares += (bx - ax) * (bx - ax) + (by - ay) * (by - ay) + (bz - az) * (bz - az);
+    ax = bx;
+    ay = by;
+    az = bz;
+  }
+  squares += ax * ax + ay * ay + az * az;
+  // The square of a sum of n lengths is at most n times the sum of their squares, which settles all but slivers without a root.
+  const least = NO_AREA * (end - start) * squares;
+  const area = nx * nx + ny * ny + nz * nz;
+  if (area > least * least) return true;
+  let perimeter = 0;
+  for (let h = start; h < end; h++) {
+    const a = 3 * vertexOf[h];
+    const b = 3 * vertexOf[h + 1 === end ? start : h + 1];
+    perimeter += Math.sqrt((p[b] - p[a]) ** 2 + (p[b + 1] - p[a + 1]) ** 2 + (p[b + 2] - p[a + 2]) ** 2);
+  }
+  return Math.sqrt(area) > NO_AREA * perimeter * perimeter;
 }
 
 /** Whether a face has an edge without twin that might belong to a crowded edge; only such faces can be duplicates. */
@@ -117,12 +145,13 @@ function reportDuplicates(mesh: Topology, faces: number[], bad: Uint8Array, find
 }
 
 function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, joined: Int32Array, findings: FindingList, at: PlaceAt, partName: (face: number) => string): void {
+  const { vertexOf } = mesh;
   const corners = new Int32Array(mesh.vertices);
   const visited = new Uint8Array(mesh.vertices);
-  for (const v of mesh.vertexOf) corners[v]++;
+  for (let h = 0; h < vertexOf.length; h++) corners[vertexOf[h]]++;
   const gone = new Set(joined);
-  for (let h = 0; h < mesh.vertexOf.length; h++) {
-    const v = mesh.vertexOf[h];
+  for (let h = 0; h < vertexOf.length; h++) {
+    const v = vertexOf[h];
     if (visited[v] === 1) continue;
     visited[v] = 1;
     if (countFan(mesh, h, corners[v]) === corners[v]) continue;
@@ -139,19 +168,21 @@ function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, joined: I
   }
 }
 
-/** Faces met by turning about the start of `h`, both ways from it. */
-function countFan(mesh: Topology, h: number, limit: number): number {
-  let count = 1;
-  let at = mesh.twin[previousHalfEdge(mesh, h)];
-  while (at >= 0 && at !== h && count < limit) {
+/** Faces met by turning about the start of `first`, both ways from it. */
+function countFan({ starts, faceOf, twin }: Topology, first: number, limit: number): number {
+  let count = 0;
+  let h = first;
+  do {
     count++;
-    at = mesh.twin[previousHalfEdge(mesh, at)];
-  }
-  if (at === h || count >= limit) return count;
-  let back = mesh.twin[h];
-  while (back >= 0 && count < limit) {
+    const face = faceOf[h];
+    h = twin[h === starts[face] ? starts[face + 1] - 1 : h - 1];
+  } while (h >= 0 && h !== first && count < limit);
+  if (h === first || count >= limit) return count;
+  h = twin[first];
+  while (h >= 0 && count < limit) {
     count++;
-    back = mesh.twin[nextHalfEdge(mesh, back)];
+    const face = faceOf[h];
+    h = twin[h + 1 === starts[face + 1] ? starts[face] : h + 1];
   }
   return count;
 }

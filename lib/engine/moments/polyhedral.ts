@@ -3,50 +3,93 @@ import { MOMENTS, type MomentSums } from './sums';
 
 const moments = new Float64Array(MOMENTS);
 
+/** Faces whose moments are added plainly before they join the compensated sums. */
+const BLOCK = 8;
+
 /**
  * Adds the moments of the cones from each body's origin to the cage's own faces, polygons as fans from their vertex mean. `positions` and `origins`
- * (x, y, z per body) share one frame. A tetrahedron (0, a, b, c), signed by det(a, b, c), has V; V/4 · Σv; V/20 · (Σ v vᵀ + (Σv)(Σv)ᵀ) [Mirtich 1996].
+ * (x, y, z per body) share one frame. A tetrahedron (0, a, b, c), signed by det(a, b, c), has V; V/4 · Σv; V/20 · (Σ v vᵀ + (Σv)(Σv)ᵀ) [Mirtich 1996];
+ * the products a aᵀ of a corner serve the two tetrahedra beside it.
  */
 export function addPolyhedralMoments(mesh: Topology, positions: Float64Array, bodyOf: Int32Array, origins: Float64Array, solid: MomentSums): void {
-  const { starts, vertexOf } = mesh;
+  const { starts, vertexOf, faces } = mesh;
   const p = positions;
-  const apex = new Float64Array(3);
-  for (let face = 0; face < mesh.faces; face++) {
+  let body = -1;
+  let ox = 0, oy = 0, oz = 0;
+  let v = 0, vx = 0, vy = 0, vz = 0, vxx = 0, vyy = 0, vzz = 0, vxy = 0, vxz = 0, vyz = 0, magnitude = 0;
+  let inBlock = 0;
+  for (let face = 0; face <= faces; face++) {
+    if (inBlock === BLOCK || face === faces || bodyOf[face] !== body) {
+      if (inBlock > 0) {
+        solid.magnitudes[body] += magnitude / 6;
+        put(v / 6, vx / 24, vy / 24, vz / 24, vxx / 120, vyy / 120, vzz / 120, vxy / 120, vxz / 120, vyz / 120);
+        solid.add(body, moments, 0);
+        v = vx = vy = vz = vxx = vyy = vzz = vxy = vxz = vyz = magnitude = inBlock = 0;
+      }
+      if (face === faces) break;
+      body = bodyOf[face];
+      ox = origins[3 * body];
+      oy = origins[3 * body + 1];
+      oz = origins[3 * body + 2];
+    }
+    inBlock++;
     const start = starts[face];
     const end = starts[face + 1];
     const n = end - start;
-    const body = bodyOf[face];
-    const ox = origins[3 * body], oy = origins[3 * body + 1], oz = origins[3 * body + 2];
-    fanApex(mesh, p, face, ox, oy, oz, apex);
-    const mx = apex[0], my = apex[1], mz = apex[2];
-    let v = 0, vx = 0, vy = 0, vz = 0, vxx = 0, vyy = 0, vzz = 0, vxy = 0, vxz = 0, vyz = 0, magnitude = 0;
+    if (n < 3) continue;
+    let mx = 0, my = 0, mz = 0;
+    for (let h = start; h < (n === 3 ? start + 1 : end); h++) {
+      const at = 3 * vertexOf[h];
+      mx += p[at] - ox;
+      my += p[at + 1] - oy;
+      mz += p[at + 2] - oz;
+    }
+    if (n !== 3) {
+      mx /= n;
+      my /= n;
+      mz /= n;
+    }
     // Triangles are their own fan, from the first corner.
-    let last = 3 * vertexOf[n === 3 ? start + 1 : end - 1];
-    let ax = p[last] - ox, ay = p[last + 1] - oy, az = p[last + 2] - oz;
+    let at = 3 * vertexOf[n === 3 ? start + 1 : end - 1];
+    let ax = p[at] - ox, ay = p[at + 1] - oy, az = p[at + 2] - oz;
+    let axx = ax * ax, ayy = ay * ay, azz = az * az, axy = ax * ay, axz = ax * az, ayz = ay * az;
+    let whole = 0;
     for (let h = n === 3 ? start + 2 : start; h < end; h++) {
-      last = 3 * vertexOf[h];
-      const bx = p[last] - ox, by = p[last + 1] - oy, bz = p[last + 2] - oz;
+      at = 3 * vertexOf[h];
+      const bx = p[at] - ox, by = p[at + 1] - oy, bz = p[at + 2] - oz;
       const px = mx * (ay * bz - az * by), py = my * (az * bx - ax * bz), pz = mz * (ax * by - ay * bx);
       const d = px + py + pz;
       magnitude += Math.abs(px) + Math.abs(py) + Math.abs(pz);
       const sx = mx + ax + bx, sy = my + ay + by, sz = mz + az + bz;
-      v += d;
-      vx += d * sx;
-      vy += d * sy;
-      vz += d * sz;
-      vxx += d * (mx * mx + ax * ax + bx * bx + sx * sx);
-      vyy += d * (my * my + ay * ay + by * by + sy * sy);
-      vzz += d * (mz * mz + az * az + bz * bz + sz * sz);
-      vxy += d * (mx * my + ax * ay + bx * by + sx * sy);
-      vxz += d * (mx * mz + ax * az + bx * bz + sx * sz);
-      vyz += d * (my * mz + ay * az + by * bz + sy * sz);
+      const bxx = bx * bx, byy = by * by, bzz = bz * bz, bxy = bx * by, bxz = bx * bz, byz = by * bz;
+      const dx = d * sx, dy = d * sy, dz = d * sz;
+      whole += d;
+      vx += dx;
+      vy += dy;
+      vz += dz;
+      vxx += d * (axx + bxx) + dx * sx;
+      vyy += d * (ayy + byy) + dy * sy;
+      vzz += d * (azz + bzz) + dz * sz;
+      vxy += d * (axy + bxy) + dx * sy;
+      vxz += d * (axz + bxz) + dx * sz;
+      vyz += d * (ayz + byz) + dy * sz;
       ax = bx;
       ay = by;
       az = bz;
+      axx = bxx;
+      ayy = byy;
+      azz = bzz;
+      axy = bxy;
+      axz = bxz;
+      ayz = byz;
     }
-    solid.magnitudes[body] += magnitude / 6;
-    put(v / 6, vx / 24, vy / 24, vz / 24, vxx / 120, vyy / 120, vzz / 120, vxy / 120, vxz / 120, vyz / 120);
-    solid.add(body, moments, 0);
+    v += whole;
+    vxx += whole * mx * mx;
+    vyy += whole * my * my;
+    vzz += whole * mz * mz;
+    vxy += whole * mx * my;
+    vxz += whole * mx * mz;
+    vyz += whole * my * mz;
   }
 }
 
