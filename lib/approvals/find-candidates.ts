@@ -35,8 +35,8 @@ export async function findCandidates(db: Executor, showId: string, items: readon
       from given
       join shots s on s.show_id = ${showId} and lower(s.code) = lower(given.shot)
       join assets a on a.show_id = ${showId} and a.code = given.asset collate "C"
-      join parts p on p.asset_id = a.id and p.name = given.part collate "C"
-      join shot_overrides o on o.shot_id = s.id and o.part_id = p.id and o.dropped_at is null and o."row" = given.kind
+      join shot_overrides o on o.shot_id = s.id and o.dropped_at is null and o."row" = given.kind
+      join parts p on p.id = o.part_id and p.asset_id = a.id and given.part collate "C" in (p.name, o.part)
     )
     select n.ordinal, n.part_id as "partId", n.asset_id as "assetId", n.shot_id as "shotId", n.asset, n.part, n.state, n.value_sha256 as "valueSha256",
       exact.id as "valueId", last.id as "lastApprovalId",

@@ -55,12 +55,12 @@ async function storedValues(db: Executor, from: SQL): Promise<PartValue[]> {
 
 /** The newest standing approval of each part, or of one, by name. */
 export function approvedValues(db: Executor, assetId: string, part: string | null): Promise<PartValue[]> {
-  const only = part === null ? sql`` : sql`and a.part = ${part}`;
+  const only = part === null ? sql`` : sql`and p.name = ${part}`;
   return storedValues(db, sql`
-    select distinct on (a.part) a.part, a.version, a.scale, ${numbersOf('a')} as numbers, a.volume_m3, a.area_m2, u.name as by, a.approved_at as at
-    from approvals a join users u on u.id = a.approved_by
+    select distinct on (p.name) p.name as part, a.version, a.scale, ${numbersOf('a')} as numbers, a.volume_m3, a.area_m2, u.name as by, a.approved_at as at
+    from approvals a join parts p on p.id = a.part_id join users u on u.id = a.approved_by
     where a.asset_id = ${assetId} and a.shot_id is null ${only} and not exists (select 1 from withdrawals w where w.approval_id = a.id)
-    order by a.part, a.ordinal desc`);
+    order by p.name, a.ordinal desc`);
 }
 
 /** The approval that a lock is to. */

@@ -85,10 +85,12 @@ async function findSubject(db: Executor, show: Show, input: GetComparisonInput):
     .from(assetVersions)
     .where(eq(assetVersions.assetId, asset.id))
     .orderBy(desc(assetVersions.number), desc(assetVersions.take));
-  const part = lock?.part ?? input.part ?? null;
+  let part = lock?.part ?? input.part ?? null;
   if (part !== null && !lock) {
-    const { rows } = await db.execute(sql`select 1 from parts where asset_id = ${asset.id} and name = ${part}`);
-    if (rows.length === 0) throw new StudioError('not_found', `${asset.code} has no part ${part}.`);
+    const { rows } = await db.execute<{ name: string }>(sql`
+      select p.name from parts n join parts p on p.id = coalesce(n.merged_into, n.id) where n.asset_id = ${asset.id} and n.name = ${part}`);
+    if (rows.length > 0) part = rows[0].name;
+    else throw new StudioError('not_found', `${asset.code} has no part ${part}.`);
   }
   const shot = lock ? { id: lock.shot_id, code: lock.shot } : input.shot === undefined ? null : await findShot(db, show.id, input.shot);
   return { assetId: asset.id, asset: asset.code, part, scale: asset.scale, versions, lock, shot };
@@ -96,7 +98,7 @@ async function findSubject(db: Executor, show: Show, input: GetComparisonInput):
 
 async function getLock(db: Executor, showId: string, id: string): Promise<FoundLock> {
   const { rows } = await db.execute<FoundLock>(sql`
-    select l.id, s.id as shot_id, s.code as shot, l.copy, a.asset, a.part from locks l join shots s on s.id = l.shot_id join approvals a on a.id = l.approval_id
+    select l.id, s.id as shot_id, s.code as shot, l.copy, a.asset, p.name as part from locks l join shots s on s.id = l.shot_id join approvals a on a.id = l.approval_id join parts p on p.id = l.part_id
     where l.id = ${id} and l.show_id = ${showId}`);
   if (rows.length === 0) throw new StudioError('not_found', `There is no lock ${id} in this show.`);
   return rows[0];

@@ -24,7 +24,7 @@ export function eventCondition(showId: string, filter: EventFilter): SQL {
 export function itemCondition(showId: string, { part, asset, shot }: Pick<EventFilter, 'part' | 'asset' | 'shot'>): SQL | null {
   const conditions: SQL[] = [];
   if (shot) conditions.push(sql`i.shot_id in (select s.id from shots s where s.show_id = ${showId} and lower(s.code) = lower(${shot}))`);
-  if (asset) conditions.push(sql`i.part_id in (select p.id from parts p join assets a on a.id = p.asset_id where a.show_id = ${showId} and a.code = ${asset} ${part ? sql`and p.name = ${part}` : sql``})`);
+  if (asset) conditions.push(sql`i.part_id in (select p.id from parts p join assets a on a.id = p.asset_id where a.show_id = ${showId} and a.code = ${asset} ${part ? sql`and (p.name = ${part} or p.merged_into = (select m.id from parts m where m.asset_id = a.id and m.name = ${part}))` : sql``})`);
   else if (part) {
     const like = `%${part.replace(/[\\%_]/g, '\\$&')}%`;
     conditions.push(sql`i.part_id in (select p.id from parts p join assets a on a.id = p.asset_id where a.show_id = ${showId} and (p.name ilike ${like} or a.code || '/' || p.name ilike ${like}))`);

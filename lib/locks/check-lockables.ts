@@ -20,7 +20,7 @@ export function checkLockables(items: readonly Named[], found: readonly (Lockabl
     if (!one) return add('not_found', `There is no approved value ${item.value_id} in this show.`);
     const key = `${one.shot_id} ${one.copy} ${one.part_id}`;
     const name = `${one.asset}/${one.part}${one.copy ? ` (copy ${one.copy})` : ''}`;
-    if (item.asset !== undefined && (item.asset !== one.asset || named !== one.part || (item.body === undefined) !== (one.row !== 'body'))) add('bad_input', `${item.value_id} is a value of ${one.asset}/${one.part}, not of ${item.asset}/${named}.`);
+    if (item.asset !== undefined && (item.asset !== one.asset || (named !== one.part && named !== one.part_now) || (item.body === undefined) !== (one.row !== 'body'))) add('bad_input', `${item.value_id} is a value of ${one.asset}/${one.part}, not of ${item.asset}/${named}.`);
     else if (seen.has(key)) add('bad_input', `${name} is named twice for ${one.shot}.`);
     else if (one.withdrawn) add('not_approved', `The approval of ${name} was taken back.`);
     else if (one.only_shot_id !== null && one.only_shot_id !== one.shot_id) add('bad_input', `${name} is an override of another shot.`);

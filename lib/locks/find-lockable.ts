@@ -20,6 +20,8 @@ export interface Lockable extends Record<string, unknown> {
   asset_id: string;
   asset: string;
   part: string;
+  /** The part's name today, after a rename. */
+  part_now: string;
   row: string;
   value_sha256: string;
   /** Of an override's approval: the shot it belongs to. */
@@ -38,7 +40,7 @@ export interface Lockable extends Record<string, unknown> {
 export async function findLockable(db: Executor, showId: string, wishes: readonly LockWish[]): Promise<(Lockable | null)[]> {
   const given = wishes.map((wish, ordinal) => ({ ordinal, shot_id: wish.shotId, copy: wish.copy, approval_id: wish.approvalId }));
   const { rows } = await db.execute<Lockable & { ordinal: number }>(sql`
-    select given.ordinal, given.copy, s.id as shot_id, s.code as shot, s.sequence, a.id as approval_id, a.part_id, a.asset_id, a.shot_id as only_shot_id, ${valueColumnList('a')},
+    select given.ordinal, given.copy, s.id as shot_id, s.code as shot, s.sequence, a.id as approval_id, a.part_id, a.asset_id, q.name as part_now, a.shot_id as only_shot_id, ${valueColumnList('a')},
       exists (select 1 from withdrawals w where w.approval_id = a.id) as withdrawn,
       exists (select 1 from shot_assets i where i.shot_id = s.id and i.asset_id = a.asset_id and i.copy = given.copy) as in_shot,
       l.id as lock_id, l.approval_id as locked_approval_id,
@@ -46,6 +48,7 @@ export async function findLockable(db: Executor, showId: string, wishes: readonl
     from json_to_recordset(${JSON.stringify(given)}::json) as given(ordinal integer, shot_id uuid, copy text, approval_id uuid)
     join shots s on s.id = given.shot_id and s.show_id = ${showId}
     join approvals a on a.id = given.approval_id and a.show_id = ${showId}
+    join parts q on q.id = a.part_id
     left join lock_claims c on c.shot_id = s.id and c.copy = given.copy and c.part_id = a.part_id and c.released_at is null
     left join locks l on l.id = c.lock_id`);
   const found: (Lockable | null)[] = wishes.map(() => null);

@@ -45,7 +45,7 @@ interface Found extends Record<string, unknown> {
  */
 export async function findOutdated(db: Executor, show: Show, where: SQL): Promise<OutdatedLock[]> {
   const { rows } = await db.execute<Found>(sql`
-    select l.id as lock, s.code as shot, s.sequence, l.copy, a.asset, a.part, a."row", a.part_id, a.version as locked_version, a.id as locked_value_id, a.value_sha256 as locked_sha256,
+    select l.id as lock, s.code as shot, s.sequence, l.copy, a.asset, q.name as part, a."row", a.part_id, a.version as locked_version, a.id as locked_value_id, a.value_sha256 as locked_sha256,
       ${numbersOf('a')} as before, coalesce(o.id, c.part_id) is not null as present, coalesce(o.version, c.version) as version,
       case when o.id is null then c.state when n.id is not null then 'approved' else o.state end as state,
       case when o.id is null then c.value_sha256 else o.value_sha256 end as value_sha256, case when o.id is null then c.value_id else n.id end as value_id,
@@ -53,9 +53,10 @@ export async function findOutdated(db: Executor, show: Show, where: SQL): Promis
     from locks l
     join shots s on s.id = l.shot_id
     join approvals a on a.id = l.approval_id
+    join parts q on q.id = l.part_id
     ${NOW_OF_LOCK} ${APPROVAL_OF_OVERRIDE}
     where l.show_id = ${show.id} and l.unlocked_at is null and ${where} and ${LOCK_IS_OUTDATED}
-    order by s.sequence collate "C", s.code collate "C", a.asset collate "C", a.part collate "C", l.copy`);
+    order by s.sequence collate "C", s.code collate "C", a.asset collate "C", q.name collate "C", l.copy`);
   return rows.map((row) => toOutdated(show, row));
 }
 

@@ -69,7 +69,8 @@ async function findTouched(tx: Transaction, importId: string, since: string | nu
     where c.id in (select id from fresh) and (
       exists (select 1 from value_setters s join fresh on fresh.asset_id = p.asset_id and fresh.ended_at = s.at where s.part_id = p.id and s.act = 'version')
       or (not exists (select 1 from part_current r where r.part_id = p.id)
-        and exists (select 1 from before b join geometry_parts g on g.record_id = b.record_id where b.asset_id = p.asset_id and g.name = p.name)))`);
+        and exists (select 1 from before b join geometry_parts g on g.record_id = b.record_id join parts n on n.asset_id = b.asset_id and n.name = g.name
+          where b.asset_id = p.asset_id and coalesce(n.merged_into, n.id) = p.id)))`);
   return rows;
 }
 

@@ -18,7 +18,7 @@ export async function dropOverride(context: Context, input: DropOverrideInput): 
     const { revision } = await lockShowValues(tx, show.id);
     const shot = await findShot(tx, show.id, input.shot);
     const { rows } = await tx.execute<{ id: string }>(sql`
-      select p.id from parts p join assets a on a.id = p.asset_id
+      select coalesce(p.merged_into, p.id) as id from parts p join assets a on a.id = p.asset_id
       where a.show_id = ${show.id} and a.code = ${input.asset} and p.name = ${input.part}`);
     const ended = rows.length === 0 ? [] : await dropStanding(tx, [{ partId: rows[0].id, shotId: shot.id }], acting.actor.userId);
     if (ended.length === 0) throw new StudioError('not_found', `${input.asset}/${input.part} has no override in ${shot.code}.`);

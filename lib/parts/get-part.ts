@@ -27,7 +27,9 @@ export async function getPart(context: Context, input: PartRefInput): Promise<Pa
   const { asset, record } = await getCurrentAsset(db, show.id, input.asset);
   const {
     rows: [stored],
-  } = await db.execute<StoredRow>(sql`select ${ROW_COLUMNS} from part_current where asset_id = ${asset.id} and part = ${input.part}`);
+  } = await db.execute<StoredRow>(sql`
+    select ${ROW_COLUMNS} from part_current where asset_id = ${asset.id} and part_id = (
+      select coalesce(merged_into, id) from parts where asset_id = ${asset.id} and name = ${input.part})`);
   if (!stored) throw new StudioError('not_found', `${asset.code} has no part ${input.part} in its current version.`);
   const ofRecord = (await findStoredFindings(db, record.id)).filter((one) => one.part === null || one.part === stored.part);
   const found = findingsOfRow(stored, ofRecord);
@@ -41,7 +43,7 @@ export async function getPart(context: Context, input: PartRefInput): Promise<Pa
   return {
     row: toPartRow(show.code, stored, found, (await lockCounts(db, [stored.part_id])).get(stored.part_id)),
     findings,
-    versions: await partVersions(db, asset.id, stored.part, METRES_PER[show.linearUnit] * asset.scale),
+    versions: await partVersions(db, asset.id, stored.part_id, METRES_PER[show.linearUnit] * asset.scale),
     settings: await partSettings(db, stored.part_id),
     shots: await findSlots(db, show, { partId: stored.part_id }),
     approval: (await readQueueRows(db, show, actor, [{ partId: stored.part_id, shotId: null }]))[0] ?? null,
@@ -62,12 +64,14 @@ interface VersionRow extends Record<string, unknown> {
 }
 
 /** Newest first. `length` is metres per file unit at the asset's scale. */
-async function partVersions(db: Executor, assetId: string, part: string, length: number): Promise<PartVersion[]> {
+async function partVersions(db: Executor, assetId: string, partId: string, length: number): Promise<PartVersion[]> {
   const { rows } = await db.execute<VersionRow>(sql`
     select v.label, v.created_at, u.name, g.faces, s.volume, s.cage_volume, s.area
     from asset_versions v
     join users u on u.id = v.created_by
-    left join geometry_parts g on g.record_id = v.record_id and g.name = ${part}
+    left join lateral (
+      select g.id, g.faces from geometry_parts g join parts n on n.asset_id = v.asset_id and n.name = g.name
+      where g.record_id = v.record_id and coalesce(n.merged_into, n.id) = ${partId} order by n.merged_into nulls first limit 1) g on true
     left join lateral (select sum(volume) as volume, sum(cage_volume) as cage_volume, sum(area) as area from geometry_components where geometry_part_id = g.id) s on true
     where v.asset_id = ${assetId} order by v.number desc, v.take desc`);
   const times = (value: number | null, factor: number): number | null => (value === null ? null : value * factor);

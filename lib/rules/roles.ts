@@ -12,6 +12,7 @@ export const PERMISSIONS = {
   editMembers: ['admin', 'lead'],
   importCages: ['admin', 'lead', 'td'],
   setValues: ['admin', 'lead', 'td'],
+  renameParts: ['admin', 'lead', 'td'],
   askApproval: ['admin', 'lead', 'td'],
   approveValues: ['admin', 'lead'],
   editShots: ['admin', 'lead', 'td'],

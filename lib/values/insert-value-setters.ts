@@ -6,7 +6,7 @@ import { SYSTEM_USER_ID } from '@/lib/auth/system-context';
 export async function insertValueSetters(
   tx: Transaction,
   partIds: readonly string[],
-  by: { userId: string; act: 'setting' | 'version' | 'scale' | 'material' | 'rule'; shotId?: string },
+  by: { userId: string; act: 'setting' | 'version' | 'scale' | 'material' | 'rule' | 'rename'; shotId?: string },
 ): Promise<void> {
   if (partIds.length === 0 || by.userId === SYSTEM_USER_ID) return;
   await tx.execute(sql`

@@ -4,6 +4,7 @@ import type { ShellLimits } from '@/lib/engine/measured';
 import type { Category, Construction, Origin } from '@/lib/rules/states';
 import { METRES_PER, type LinearUnit, type UpAxis } from '@/lib/rules/units';
 import type { StandingApproval } from './approval-of';
+import { PART_OF_GEOMETRY } from './part-of-geometry';
 import type { RecordFinding, ValueInputs } from './value-inputs';
 
 /** A part of an asset's current version with everything its row is made of. */
@@ -47,6 +48,8 @@ interface HeadRow {
   linear_unit: LinearUnit;
   up_axis: UpAxis;
   part: string;
+  /** Name of the part in the version's file. */
+  file_part: string;
   faces: number;
   max_valence: number;
   min_x: number;
@@ -97,7 +100,7 @@ export async function loadValueInputs(db: Executor, assetIds: string[], partIds:
     )
     select p.id as part_id, a.show_id, a.id as asset_id, v.id as version_id, v.record_id, g.id as geometry_part_id,
       s.id as setting_id, c.revision, a.code as asset, a.outside_id, a.category, a.scale, v.label as version,
-      w.linear_unit, w.up_axis, p.name as part, g.faces, g.max_valence, g.min_x, g.min_y, g.min_z, g.max_x, g.max_y, g.max_z,
+      w.linear_unit, w.up_axis, p.name as part, g.name as file_part, g.faces, g.max_valence, g.min_x, g.min_y, g.min_z, g.max_x, g.max_y, g.max_z,
       r.content_sha256, r.scheme, r.boundary, r.triangles, r.creasing, r.parts_by, r.engine_version,
       concat_ws(' ', case when r.weld then 'weld' end, case when r.turn_faces then 'turn_faces' end,
         case when r.unit_scale <> 1 then 'scaled_by_' || r.unit_scale end, case when r.turn <> 'none' then r.turn end, case when r.beside_sha256 <> '' then 'beside_' || r.beside_sha256 end) as mended,
@@ -109,7 +112,7 @@ export async function loadValueInputs(db: Executor, assetIds: string[], partIds:
     join shows w on w.id = a.show_id
     join geometry_records r on r.id = v.record_id
     join geometry_parts g on g.record_id = v.record_id
-    join parts p on p.asset_id = a.id and p.name = g.name
+    ${PART_OF_GEOMETRY}
     left join lateral (select * from settings where settings.part_id = p.id and settings.shot_id is null order by settings.id desc limit 1) s on true
     left join materials m on m.id = s.material_id
     left join users u on u.id = s.set_by
@@ -193,7 +196,7 @@ async function loadFindings(db: Executor, heads: HeadRow[]): Promise<FindingsByR
 
 function findingsOf(found: FindingsByRecord, head: HeadRow): RecordFinding[] {
   const record = found.get(head.record_id);
-  return [...(record?.get(head.part) ?? []), ...(record?.get('') ?? [])];
+  return [...(record?.get(head.file_part) ?? []), ...(record?.get('') ?? [])];
 }
 
 function toLoadedPart(head: HeadRow, components: LoadedPart['components'], findings: RecordFinding[]): LoadedPart {

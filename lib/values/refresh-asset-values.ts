@@ -6,6 +6,7 @@ import { StudioError } from '@/lib/rules/studio-error';
 import { insertValueSetters } from './insert-value-setters';
 import { loadValueInputs } from './load-value-inputs';
 import { lockShowValues } from './lock-show-values';
+import { takeUpOldNames } from './take-up-old-names';
 import { writePartRows } from './write-part-rows';
 
 /**
@@ -24,6 +25,7 @@ export async function refreshAssetValues(tx: Transaction, input: { assetId: stri
     select ${assetId}::uuid, g.name from geometry_parts g
     where g.record_id = (select record_id from asset_versions where asset_id = ${assetId} order by number desc, take desc limit 1)
     order by g.ordinal on conflict do nothing`);
+  await takeUpOldNames(tx, assetId);
   const parts = await loadValueInputs(tx, [assetId], null);
   const written = await writePartRows(tx, parts, revision + 1);
   await insertValueSetters(tx, [...written], { userId: importedBy, act: 'version' });
