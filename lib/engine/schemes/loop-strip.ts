@@ -1,4 +1,6 @@
 import type { CreasingRule } from '../cage';
+import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
+import { rowRule } from '../moments/row-rule';
 import { TRIANGLE_NET, triangleToPowers } from '../patches/box-spline';
 import { TRIANGLE_COUNTS } from './classify-vertices';
 import { childSharpness, isConstantCrease, isSettled } from './crease-strip';
@@ -51,11 +53,28 @@ export function triangleStripSide(mesh: LevelMesh, kinds: Uint8Array, face: numb
   return -1;
 }
 
-/**
- * Takes the net of a piece of a triangle: of the one with the corners (s, t), (s + size, t), (s, t + size) in the triangle's own parameters, or, where `size`
- * is 0, of one within it that none of its sides touches.
- */
-export type TakeTriangle = (net: Float64Array, s: number, t: number, size: number) => void;
+/** The pieces of a triangle's last row that lie on the crease in one way, those at i a step further along it than those at i − 1. It lasts while its taker runs. */
+export interface TriangleRow {
+  count: number;
+  /** Pieces at each i. */
+  pieces: number;
+  /** Puts the nets of the pieces at i, 0 ≤ i ≤ count − 1, into `out`, 36 numbers each. They are cubics of i, so it need not be whole. */
+  fill(i: number, out: Float64Array): void;
+}
+
+/** Takes what a triangle along a crease is made of. */
+export interface StripTaker {
+  piece(net: Float64Array): void;
+  row(row: TriangleRow): void;
+  /**
+   * A side of a piece where it lies on a side of the triangle, of which it covers [from, from + share]; both have the same number, 0 along the crease and
+   * the others counter-clockwise. It counts `weight` times, for others in its row; the row's ends come with the weight 0 as well.
+   */
+  side(net: Float64Array, side: number, from: number, share: number, weight: number): void;
+}
+
+/** Longer rows give no sides but those at so many nodes of a rule, exact for the cubics' moments from 6 on; the rest is for lengths and areas. */
+const SIDE_NODES = 16;
 
 const net = new Float64Array(36);
 const near = new Float64Array(45);
@@ -64,13 +83,20 @@ const lattice = new Float64Array(3 * WIDTH * WIDTH);
 const fine = new Float64Array(3 * WIDTH * WIDTH);
 /** Control points of a row −1 … 2 as polynomials of s, [15 (row + 1) + 3 power + axis]. */
 const rows = new Float64Array(60);
+/** Nets of the pieces at one i. */
+const pieceNets = new Float64Array(4 * 36);
 
 /**
  * Hands out the box-spline pieces of the triangle along a semi-sharp crease. While the sharpness is at least 1, either side refines as if the crease were
  * sharp for good, so that up to the last row it is one quartic: one piece. The row is that of ⌊sharpness⌋ steps, 2^(⌊sharpness⌋ + 1) − 1 triangles,
  * refined once more where a fraction of sharpness is left.
+ *
+ * The control points of the row's nets lie along lattice rows b of either side's quartic. Its edge on the crease is a cubic, so s⁴ has no share in it, and
+ * t s⁴ is none of its monomials: they are cubics of s, whose leading coefficients depend on b alone, and stay so through the last step. Added up along a
+ * row of the lattice, the box spline does not change along it, and reproduces what is linear. So of the piece X(i; s, t) = g(t) i³ + …, ∂X/∂s = 3 g i² + …
+ * and ∂X/∂t = g′ i³ + …: the determinant det(X, X_s, X_t) is of degree 7 in i, with second moments 13.
  */
-export function splitTriangleStrip(mesh: LevelMesh, h: number, creasing: CreasingRule, take: TakeTriangle): void {
+export function splitTriangleStrip(mesh: LevelMesh, h: number, creasing: CreasingRule, taker: StripTaker): void {
   let sharpness = mesh.edgeSharpness[h];
   let steps = 1;
   for (; sharpness >= 1; sharpness = childSharpness(sharpness, creasing)) steps *= 2;
@@ -80,22 +106,48 @@ export function splitTriangleStrip(mesh: LevelMesh, h: number, creasing: Creasin
   if (steps > 1) {
     for (let b = -1; b <= 2; b++) fillRow(near, size + (1 - size) * b, 1 - size, b);
     TRIANGLE_NET.forEach(([a, b], i) => control(b, (1 - size) * a, net, 3 * i));
-    take(net, 0, size, 1 - size);
+    taker.piece(net);
+    taker.side(net, 1, size, 1 - size, 1);
+    taker.side(net, 2, 0, 1 - size, 1);
   }
   fillRow(beyond, size, size, -1);
   for (let b = 0; b <= 2; b++) fillRow(near, b * size, size, b);
-  for (let i = 0; i < steps; i++) {
+  const [points, [upright, turned]] = sharpness > 0 ? [fine, QUARTERS] : [lattice, WHOLE];
+  const fill = (pieces: readonly Piece[], i: number, out: Float64Array): void => {
     // The quartic beyond has its triangle turned by half a turn: (s, t) is (1 − s, −t) there.
     for (const [a, b] of LATTICE) control(b, b < 0 ? 1 - (i + a) * size : (i + a) * size, lattice, at(a, b));
     if (sharpness > 0) for (const to of FINE_POINTS) finePoint(to, sharpness);
-    const [points, pieces, own] = sharpness > 0 ? [fine, QUARTERS, size / 2] : [lattice, WHOLE, size];
-    for (let half = 0; half < (i === 0 ? 1 : 2); half++) {
-      for (const { a, b, turned, places } of pieces[half]) {
-        for (let point = 0; point < 12; point++) copy(points, places[point], net, 3 * point);
-        take(net, i * size + a * own, b * own, turned ? 0 : own);
-      }
-    }
+    pieces.forEach(({ places }, piece) => {
+      for (let point = 0; point < 12; point++) copy(points, places[point], out, 36 * piece + 3 * point);
+    });
+  };
+  const first: TriangleRow = { count: steps, pieces: upright.length, fill: (i, out) => fill(upright, i, out) };
+  taker.row(first);
+  if (steps > 1) taker.row({ count: steps - 1, pieces: turned.length, fill: (i, out) => fill(turned, i + 1, out) });
+  if ([h, nextHalfEdge(mesh, h), previousHalfEdge(mesh, h)].some((side) => mesh.borderOf[side] >= 0)) takeSides(first, upright, sharpness > 0 ? size / 2 : size, taker);
+}
+
+/** Hands out the sides of the row's upright pieces, of size `own`, that lie on the triangle's. */
+function takeSides(row: TriangleRow, pieces: readonly Piece[], own: number, taker: StripTaker): void {
+  const last = row.count - 1;
+  const takeAt = (i: number, weight: number): void => {
+    row.fill(i, pieceNets);
+    pieces.forEach(({ a, b, turned }, piece) => {
+      if (turned) return;
+      const values = pieceNets.subarray(36 * piece, 36 * (piece + 1));
+      if (b === 0) taker.side(values, 0, i / row.count + a * own, own, weight);
+      if (i === last && i / row.count + (a + b + 1) * own === 1) taker.side(values, 1, b * own, own, 1);
+      if (i === 0 && a === 0) taker.side(values, 2, 1 - (b + 1) * own, own, 1);
+    });
+  };
+  if (row.count <= SIDE_NODES) {
+    for (let i = 0; i <= last; i++) takeAt(i, 1);
+    return;
   }
+  takeAt(0, 0);
+  takeAt(last, 0);
+  const { nodes, weights } = rowRule(SIDE_NODES, row.count);
+  nodes.forEach((node, j) => takeAt(node, weights[j]));
 }
 
 /** Turns the net of a triangle on the crease into the quartics on both sides as if it were sharp for good; on either, phantom points a + b − c stand beyond. */

@@ -8,6 +8,7 @@ import type { LevelMesh } from './level-mesh';
 import { addTriangleSide, LOOP_KIT } from './loop-kit';
 import { fillTriangleNet } from './loop-net';
 import { refineTriangles } from './loop-refine';
+import { RowPatches } from './loop-row';
 import { splitTriangleStrip, triangleStripSide } from './loop-strip';
 import type { RefinementRules } from './refinement-rules';
 
@@ -25,6 +26,7 @@ const net = new Float64Array(36);
 export function integrateLoop(cage: LevelMesh, rules: RefinementRules, origins: Float64Array, sums: LimitSums): boolean {
   let mesh = cage;
   const patches = new RegularPatches(TRIANGLE_RULE, origins, sums);
+  const rows = new RowPatches(origins, sums);
   const batches = new FanBatches(LOOP_KIT, origins, sums);
   for (let level = 0; level <= MOST_LEVELS; level++) {
     const { kinds, fans } = classifyVertices(mesh, TRIANGLE_COUNTS);
@@ -39,7 +41,7 @@ export function integrateLoop(cage: LevelMesh, rules: RefinementRules, origins: 
       const side = triangleStripSide(mesh, kinds, face);
       if (side < 0) left++;
       else {
-        addStrip(mesh, side, rules, patches, sums.curves);
+        addStrip(mesh, side, rules, patches, rows, sums.curves);
         mesh.live[face] = 0;
       }
     }
@@ -65,22 +67,21 @@ function addRegularTriangle(mesh: LevelMesh, face: number, patches: RegularPatch
 }
 
 /** `first` is the strip's side along the crease. */
-function addStrip(mesh: LevelMesh, first: number, rules: RefinementRules, patches: RegularPatches, curves: BorderCurves): void {
+function addStrip(mesh: LevelMesh, first: number, rules: RefinementRules, patches: RegularPatches, rows: RowPatches, curves: BorderCurves): void {
   const face = mesh.faceOf[first];
-  const [crease, leaving, arriving] = [0, 1, 2].map((i) => mesh.starts[face] + ((first - mesh.starts[face] + i) % 3));
-  splitTriangleStrip(mesh, first, rules.creasing, (piece, s, t, size) => {
-    patches.add(mesh.bodyOf[face], piece);
-    if (size === 0) return;
-    if (t === 0) addBorder(mesh, crease, piece, 0, s, size, curves);
-    if (s + t + size === 1) addBorder(mesh, leaving, piece, 1, t, size, curves);
-    if (s === 0) addBorder(mesh, arriving, piece, 2, 1 - t - size, size, curves);
+  const body = mesh.bodyOf[face];
+  const edges = [0, 1, 2].map((i) => mesh.starts[face] + ((first - mesh.starts[face] + i) % 3));
+  splitTriangleStrip(mesh, first, rules.creasing, {
+    piece: (piece) => patches.add(body, piece),
+    row: (row) => rows.add(body, row, patches),
+    side: (piece, side, from, share, weight) => addBorder(mesh, edges[side], piece, side, from, share, curves, weight),
   });
 }
 
-/** Adds side `side` of a net where it is a piece of a border: of half-edge `h` the share `share`, `from` its start. */
-function addBorder(mesh: LevelMesh, h: number, values: Float64Array, side: number, from: number, share: number, curves: BorderCurves): void {
+/** Adds side `side` of a net where it is a piece of a border: of half-edge `h` the share `share`, `from` its start. It counts `weight` times. */
+function addBorder(mesh: LevelMesh, h: number, values: Float64Array, side: number, from: number, share: number, curves: BorderCurves, weight = 1): void {
   const edge = mesh.borderOf[h];
   if (edge < 0) return;
   const length = 2 ** -mesh.level;
-  addTriangleSide(curves, values, side, edge, 1, mesh.borderFrom[h] + from * length, share * length, NO_SHIFT);
+  addTriangleSide(curves, values, side, edge, weight, mesh.borderFrom[h] + from * length, share * length, NO_SHIFT);
 }

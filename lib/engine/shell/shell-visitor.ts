@@ -9,7 +9,7 @@ import { emptyShells, type ShellBody } from './shell-sums';
 import { SHELL_TERMS, TERM_SIGNS } from './shell-terms';
 
 /** What a rule may err by on a regular patch, relatively. */
-const TOLERANCE = 1e-9;
+export const SHELL_TOLERANCE = 1e-9;
 
 /** Takes the shell integrals of each patch and fan that an integration of a limit surface comes by. */
 export class ShellVisitor {
@@ -42,16 +42,31 @@ export class ShellVisitor {
   private flushPatches(): void {
     const { block, bodies, shells, count } = this;
     if (count === 0) return;
-    block.compute(count, TOLERANCE);
-    const { output } = block.kernel;
-    for (let patch = 0; patch < count; patch++) {
-      const shell = shells[bodies[patch]];
-      const at = block.resultAt(patch);
-      for (let i = 0; i < SHELL_TERMS; i++) shell.terms[i] += TERM_SIGNS[i] * output[at + 2 * i];
-      for (let i = 0; i < 3; i++) shell.errors[i] += block.errors[3 * patch + i];
-      block.raise(patch, TOLERANCE, shell.peak);
-    }
+    block.compute(count, SHELL_TOLERANCE);
+    for (let patch = 0; patch < count; patch++) this.addPatch(patch, 1, shells[bodies[patch]]);
     this.count = 0;
+  }
+
+  /** Adds the terms of patch `patch` of the block, `weight` times, to `shell`. */
+  private addPatch(patch: number, weight: number, shell: ShellBody): void {
+    const { block } = this;
+    const { output } = block.kernel;
+    const at = block.resultAt(patch);
+    for (let i = 0; i < SHELL_TERMS; i++) shell.terms[i] += weight * TERM_SIGNS[i] * output[at + 2 * i];
+    for (let i = 0; i < 3; i++) shell.errors[i] += weight * block.errors[3 * patch + i];
+    block.raise(patch, SHELL_TOLERANCE, shell.peak);
+  }
+
+  /** Adds the terms of so many patches of a body as there are weights, 2 SHELL_PAIRS at most, by those to `shell`; their nets follow each other. */
+  weigh(body: number, nets: Float64Array, weights: Float64Array, shell: ShellBody): void {
+    const { origins, block } = this;
+    this.flushPatches();
+    for (let patch = 0; patch < weights.length; patch++) {
+      const net = nets.subarray(block.values * patch, block.values * (patch + 1));
+      block.put(patch, net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2]);
+    }
+    block.compute(weights.length, SHELL_TOLERANCE);
+    for (let patch = 0; patch < weights.length; patch++) this.addPatch(patch, weights[patch], shell);
   }
 
   /** An isolated fan of one body with its limit point. */
