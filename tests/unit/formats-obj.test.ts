@@ -120,6 +120,49 @@ describe('polygons', () => {
   });
 });
 
+describe('plain lines', () => {
+  // Ended by a carriage return alone, no line is plain: each then goes the way of all faults and rarities, word by word.
+  const outcome = (text: string): unknown => {
+    try {
+      return read(text);
+    } catch (error) {
+      if (!(error instanceof MeshError)) throw error;
+      const { code, line, column, detail, excerpt } = error;
+      return { code, line, column, detail, excerpt };
+    }
+  };
+  const number = fc.oneof(fc.double({ noNaN: true, min: -1e3, max: 1e3 }).map(String), fc.integer({ min: -99, max: 99 }).map(String), fc.constantFrom('1e-7', '.5', '-0', '+1', '1e60', 'nan', '1,5', '0x1', '3.'));
+  const reference = fc.oneof({ weight: 12, arbitrary: fc.constantFrom('1', '2', '3', '-1', '-2', '1/2', '2//3', '3/1/1', '1/', '2//', '3/-1/-2') }, { weight: 1, arbitrary: fc.constantFrom('0', '99', '-9', '1/x', '1/-', '1/1/1/1', '1;', '', '+2', '-0', '01') });
+  const gap = fc.constantFrom(' ', '  ', '\t', ' \t ');
+  const words = (first: string, word: fc.Arbitrary<string>, least: number, most: number) =>
+    fc.tuple(gap, fc.array(fc.tuple(word, gap), { minLength: least, maxLength: most }), fc.constantFrom('', '', ' ', '\t', ' # x', '#', '\\')).map(([blank, rest, end]) => `${first}${blank}${rest.flat().join('')}${end}`);
+  const line = fc.oneof(
+    { weight: 6, arbitrary: words('v', number, 3, 3) },
+    { weight: 1, arbitrary: words('v', number, 0, 8) },
+    { weight: 6, arbitrary: words('f', reference, 3, 5) },
+    { weight: 1, arbitrary: words('f', reference, 0, 2) },
+    { weight: 2, arbitrary: fc.constantFrom('vt', 'vn', 'vp', 'vx').chain((word) => words(word, number, 0, 3)) },
+    { weight: 1, arbitrary: fc.constantFrom('', ' ', '# c', 'g a', 'g', 'o b c', 'usemtl m', 's 1', 'v', 'f', 'vn', 'vt\u0001', 'vn \u001a', 'vn 1 \\ ', 'p 1', 't corner 1/1/0 0 2') },
+  );
+
+  it('are read as any line is, to the last bit and fault', () => {
+    fc.assert(
+      fc.property(fc.array(line, { maxLength: 30 }), fc.boolean(), (lines, wide) => {
+        const text = (end: string): string => `${SQUARE.replaceAll('\n', end)}f 1 2 3${end}${lines.map((one) => one + end).join('')}`;
+        expect(outcome(text(wide ? '\r\n' : '\n'))).toEqual(outcome(text('\r')));
+      }),
+      { numRuns: 3_000 },
+    );
+  });
+
+  it('with as many corners as one likes are faces', () => {
+    for (const corners of [63, 64, 65, 200]) {
+      const ring = Array.from({ length: corners }, (_, i) => `v ${i} 0 0\n`).join('');
+      expect(faces(read(`${ring}f ${Array.from({ length: corners }, (_, i) => i + 1).join(' ')}\n`))).toEqual([Array.from({ length: corners }, (_, i) => i)]);
+    }
+  });
+});
+
 describe('numbers', () => {
   it('are the doubles that JavaScript reads', () => {
     fc.assert(

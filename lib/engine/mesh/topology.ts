@@ -50,12 +50,17 @@ export function normalSharpness(sharpness: number): number {
   return sharpness >= INFINITE_SHARPNESS ? Infinity : sharpness;
 }
 
-/** Builds the half-edge tables of a cage. Faces may be anything the file held; defects are returned, not thrown. */
+/** The same numbers, all below 2^31, without a copy: the tables are only ever read. */
+function asSigned(numbers: Uint32Array): Int32Array {
+  return new Int32Array(numbers.buffer, numbers.byteOffset, numbers.length);
+}
+
+/** Builds the half-edge tables of a cage, in part upon its own arrays. Faces may be anything the file held; defects are returned, not thrown. */
 export function buildTopology(cage: Cage): { mesh: Topology; defects: EdgeDefects } {
   const faces = cage.faceStarts.length - 1;
   const vertices = cage.positions.length / 3;
-  const starts = new Int32Array(cage.faceStarts);
-  const vertexOf = new Int32Array(cage.faceVertices);
+  const starts = asSigned(cage.faceStarts);
+  const vertexOf = asSigned(cage.faceVertices);
   const faceOf = new Int32Array(vertexOf.length);
   for (let face = 0; face < faces; face++) for (let h = starts[face]; h < starts[face + 1]; h++) faceOf[h] = face;
   const mesh: Topology = {
