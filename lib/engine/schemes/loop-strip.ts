@@ -1,6 +1,6 @@
 import type { CreasingRule } from '../cage';
 import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
-import { rowRule } from '../moments/row-rule';
+import { rowRule, rowRuleDefect } from '../moments/row-rule';
 import { TRIANGLE_NET, triangleToPowers } from '../patches/box-spline';
 import { TRIANGLE_COUNTS } from './classify-vertices';
 import { childSharpness, isConstantCrease, isSettled } from './crease-strip';
@@ -68,9 +68,10 @@ export interface StripTaker {
   row(row: TriangleRow): void;
   /**
    * A side of a piece where it lies on a side of the triangle, of which it covers [from, from + share]; both have the same number, 0 along the crease and
-   * the others counter-clockwise. It counts `weight` times, for others in its row; the row's ends come with the weight 0 as well.
+   * the others counter-clockwise. It counts `weight` times, for others in its row, and may be off by `doubt` of that; the row's ends come with the weight 0
+   as well.
    */
-  side(net: Float64Array, side: number, from: number, share: number, weight: number): void;
+  side(net: Float64Array, side: number, from: number, share: number, weight: number, doubt: number): void;
 }
 
 /** Longer rows give no sides but those at so many nodes of a rule, exact for the cubics' moments from 6 on; the rest is for lengths and areas. */
@@ -107,8 +108,8 @@ export function splitTriangleStrip(mesh: LevelMesh, h: number, creasing: Creasin
     for (let b = -1; b <= 2; b++) fillRow(near, size + (1 - size) * b, 1 - size, b);
     TRIANGLE_NET.forEach(([a, b], i) => control(b, (1 - size) * a, net, 3 * i));
     taker.piece(net);
-    taker.side(net, 1, size, 1 - size, 1);
-    taker.side(net, 2, 0, 1 - size, 1);
+    taker.side(net, 1, size, 1 - size, 1, 0);
+    taker.side(net, 2, 0, 1 - size, 1, 0);
   }
   fillRow(beyond, size, size, -1);
   for (let b = 0; b <= 2; b++) fillRow(near, b * size, size, b);
@@ -130,14 +131,14 @@ export function splitTriangleStrip(mesh: LevelMesh, h: number, creasing: Creasin
 /** Hands out the sides of the row's upright pieces, of size `own`, that lie on the triangle's. */
 function takeSides(row: TriangleRow, pieces: readonly Piece[], own: number, taker: StripTaker): void {
   const last = row.count - 1;
-  const takeAt = (i: number, weight: number): void => {
+  const takeAt = (i: number, weight: number, doubt = 0): void => {
     row.fill(i, pieceNets);
     pieces.forEach(({ a, b, turned }, piece) => {
       if (turned) return;
       const values = pieceNets.subarray(36 * piece, 36 * (piece + 1));
-      if (b === 0) taker.side(values, 0, i / row.count + a * own, own, weight);
-      if (i === last && i / row.count + (a + b + 1) * own === 1) taker.side(values, 1, b * own, own, 1);
-      if (i === 0 && a === 0) taker.side(values, 2, 1 - (b + 1) * own, own, 1);
+      if (b === 0) taker.side(values, 0, i / row.count + a * own, own, weight, doubt);
+      if (i === last && i / row.count + (a + b + 1) * own === 1) taker.side(values, 1, b * own, own, 1, 0);
+      if (i === 0 && a === 0) taker.side(values, 2, 1 - (b + 1) * own, own, 1, 0);
     });
   };
   if (row.count <= SIDE_NODES) {
@@ -146,8 +147,9 @@ function takeSides(row: TriangleRow, pieces: readonly Piece[], own: number, take
   }
   takeAt(0, 0);
   takeAt(last, 0);
-  const { nodes, weights } = rowRule(SIDE_NODES, row.count);
-  nodes.forEach((node, j) => takeAt(node, weights[j]));
+  const rule = rowRule(SIDE_NODES, row.count);
+  const defect = rowRuleDefect(rule);
+  rule.nodes.forEach((node, j) => takeAt(node, rule.weights[j], defect));
 }
 
 /** Turns the net of a triangle on the crease into the quartics on both sides as if it were sharp for good; on either, phantom points a + b − c stand beyond. */

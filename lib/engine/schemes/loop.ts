@@ -74,14 +74,18 @@ function addStrip(mesh: LevelMesh, first: number, rules: RefinementRules, patche
   splitTriangleStrip(mesh, first, rules.creasing, {
     piece: (piece) => patches.add(body, piece),
     row: (row) => rows.add(body, row, patches),
-    side: (piece, side, from, share, weight) => addBorder(mesh, edges[side], piece, side, from, share, curves, weight),
+    side: (piece, side, from, share, weight, doubt) => addBorder(mesh, edges[side], piece, side, from, share, curves, weight, doubt),
   });
 }
 
-/** Adds side `side` of a net where it is a piece of a border: of half-edge `h` the share `share`, `from` its start. It counts `weight` times. */
-function addBorder(mesh: LevelMesh, h: number, values: Float64Array, side: number, from: number, share: number, curves: BorderCurves, weight = 1): void {
+/** Adds side `side` of a net where it is a piece of a border: of half-edge `h` the share `share`, `from` its start. It counts `weight` times, give or take `doubt` of that. */
+function addBorder(
+  mesh: LevelMesh, h: number, values: Float64Array, side: number, from: number, share: number, curves: BorderCurves, weight = 1, doubt = 0,
+): void {
   const edge = mesh.borderOf[h];
   if (edge < 0) return;
   const length = 2 ** -mesh.level;
+  const first = curves.edges.length;
   addTriangleSide(curves, values, side, edge, weight, mesh.borderFrom[h] + from * length, share * length, NO_SHIFT);
+  if (doubt > 0) curves.doubtFrom(first, weight * doubt);
 }
