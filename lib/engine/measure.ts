@@ -16,7 +16,7 @@ import { capBodies, integrateCage, integrateLimit } from './moments/integrate-li
 import { measuredShells } from './shell/measured-shells';
 
 /** Part of every geometry record's key: a change of any number that `measureCage` returns raises it. */
-export const ENGINE_VERSION = '2';
+export const ENGINE_VERSION = '3';
 
 /**
  * Measures a cage: per part and connected body volume, centroid and second moments of the limit solid, area and its moments, and the cage's own.

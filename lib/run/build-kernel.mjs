@@ -5,6 +5,7 @@ import { readFile, writeFile } from 'node:fs/promises';
 import { fileURLToPath } from 'node:url';
 import asc from 'assemblyscript/asc';
 import { FAN_ROUTINES } from './support/fan-routines.mjs';
+import { boundsOf, nodesOf } from './support/kernel-bounds.mjs';
 import { scalar, statements, vector } from './support/kernel-dialects.mjs';
 import { shellScalarSource, shellVectorSource } from './support/shell-kernel.mjs';
 import { area, AXES, DIVISORS, middle, moments, SHAPES, side, SUMS } from './support/kernel-shapes.mjs';
@@ -62,6 +63,10 @@ ${HEADER}
 
 const node = new Float64Array(${WEIGHT_AT + 1});
 
+function larger(left: number, right: number): number {
+  return left < right ? right : left;
+}
+
 /** Visits the nodes of a ${shape.name} patch with the power coefficients \`p\` and lets \`sums\` add them to \`totals\`. */
 export function ${shape.name}Nodes(p: Float64Array, ${two ? 'along: GaussRule, rule' : '_along: GaussRule, rule'}: GaussRule, sums: NodeSums, totals: Float64Array): void {
   const { nodes, weights } = rule;
@@ -78,6 +83,11 @@ ${lines(scalar, toNode(middle(true)), 3)}
       sums.addMiddle(node, totals);
     }
   }
+}
+
+/** Bounds of what rules with fewer nodes than the exact one leave out, as lib/run/support/kernel-bounds.mjs says, to \`bounds\`: the limit, a norm, then one a rule. */
+export function ${shape.name}Bounds(p: Float64Array, tolerance: number, reach: number, bounds: Float64Array): void {
+${lines(scalar, boundsOf(shape.name), 1)}
 }
 `;
 }
@@ -132,7 +142,7 @@ function powersOf(shape) {
 
 function powersSource(shape) {
   const write = (list, depth) => lines(vector, list, depth);
-  if (shape.name !== 'triangle') return `function ${shape.name}Powers(p: i32, at: i32, stride: i32): void {\n${write(shape.toPowers, 1)}\n}`;
+  if (shape.name !== 'triangle') return `@inline function ${shape.name}Powers(p: i32, at: i32, stride: i32): void {\n${write(shape.toPowers, 1)}\n}`;
   return `function trianglePowers(net: i32, p: i32, table: i32): void {
   for (let m: i32 = 0; m < 15; m++) {
 ${triangleSums.map(([name]) => `    ${vector.start(name)}`).join('\n')}
@@ -144,15 +154,25 @@ ${write(triangleSums.map(([name, axis]) => `p[3 * m + ${axis}] := ${name}`), 2)}
 }`;
 }
 
-/** Layout as lib/engine/kernel/vector-kernel.ts has it: per pair the net's values and 3 of the origin, two lanes each; 22 results. */
+/** Doubles of a rule's place in the kernel's memory, bytes of a pair's results, and where its powers' bounds stand after them; as lib/engine/kernel/vector-kernel.ts has it. */
+const RULE_BYTES = 160;
+const RESULT_BYTES = 400;
+const BOUNDS_AT = 768;
+
+/** Layout as lib/engine/kernel/vector-kernel.ts has it: per pair the net's values and 3 of the origin, two lanes each; 25 results. */
 function vectorSource(shape) {
   const put = (letter, first, divisors) => SUMS.map((name, i) => `  v128.store(out + ${16 * (first + i)}, ${divisors ? `f64x2.div(${letter}${name}, f64x2.splat(${DIVISORS[i]}))` : `${letter}${name}`});`).join('\n');
-  const rules = 'count: i32, alongNodes: i32, alongWeights: i32, nodes: i32, weights: i32';
+  const extra = shape.alongCount === 'count' ? 0 : 1;
+  const rules = `rules: i32, count: i32`;
+  const places = `  const nodes: i32 = rules + ${RULE_BYTES} * count;
+  const weights: i32 = nodes + (count << 3);
+${extra === 0 ? '' : `  const alongNodes: i32 = nodes + ${RULE_BYTES};\n  const alongWeights: i32 = alongNodes + ((count + 1) << 3);\n`}`;
+  const { fewest, exact } = nodesOf(shape.name);
   return `
 ${powersSource(shape)}
 
 function ${shape.name}Moments(p: i32, ${rules}, out: i32): void {
-${start(vector, ['magnitude', ...sums('m'), ...sums('s')])}
+${places}${start(vector, ['magnitude', ...sums('m'), ...sums('s')])}
 ${nodeLoops(shape, moments, true)}
 ${put('m', 0, true)}
 ${put('s', 10, false)}
@@ -160,25 +180,81 @@ ${put('s', 10, false)}
 }
 
 function ${shape.name}Area(p: i32, ${rules}, out: i32): void {
-  let s: v128 = f64x2.splat(0);
+${places}  let s: v128 = f64x2.splat(0);
 ${nodeLoops(shape, area, false)}
   v128.store(out, s);
 }
 
+function ${shape.name}Bounds(p: i32, tolerance: v128, reach: v128, bounds: i32): void {
+${lines(vector, boundsOf(shape.name), 1)}
+}
+
 export function run${capital(shape.name)}(
-  pairs: i32, input: i32, output: i32, count: i32, along: i32, nodes: i32, coarseCount: i32, coarseAlong: i32, coarseNodes: i32, table: i32, scratch: i32,
+  pairs: i32, input: i32, output: i32, fewest: i32, most: i32, coarse: i32, forArea: i32, cutoff: f64, near: f64, tolerance: f64, reach: f64, rules: i32, table: i32, scratch: i32,
 ): void {
+  const bounds = scratch + ${BOUNDS_AT};
   for (let k: i32 = 0; k < pairs; k++) {
 ${powersOf(shape)}
     for (let i: i32 = 0; i < ${16 * AXES.length}; i += 16) v128.store(scratch + i, f64x2.sub(v128.load(scratch + i), v128.load(input + ${16 * shape.values} + i)));
-    ${shape.name}Moments(scratch, count, along, along + ((${shape.alongCount}) << 3), nodes, nodes + (count << 3), output);
-    if (coarseCount > 0) ${shape.name}Area(scratch, coarseCount, coarseAlong, coarseAlong + ((${shape.alongCount.replace('count', 'coarseCount')}) << 3), coarseNodes, coarseNodes + (coarseCount << 3), output + 336);
+    let nodes = fewest;
+    let second: v128 = f64x2.splat(0);
+    let first: v128 = f64x2.splat(0);
+    if (tolerance > 0) {
+      ${shape.name}Bounds(scratch, f64x2.splat(tolerance), f64x2.splat(reach), bounds);
+      const limit = v128.load(bounds);
+      while (nodes < ${exact} && !i64x2.all_true(f64x2.le(v128.load(bounds + ((nodes - ${fewest - 2}) << 4)), limit))) nodes++;
+      if (nodes < ${exact}) {
+        const left = v128.load(bounds + ((nodes - ${fewest - 2}) << 4));
+        second = f64x2.div(left, f64x2.splat(5));
+        first = f64x2.div(left, f64x2.mul(f64x2.splat(4), v128.load(bounds + 16)));
+      }
+    }
+    ${shape.name}Moments(scratch, rules, nodes, output);
+    if (fewest === most) {
+      if (coarse > 0) ${shape.name}Area(scratch, rules, coarse, output + 336);
+    } else {
+      ${shape.name}Area(scratch, rules, coarseOf(nodes, ${extra}), output + 336);
+      while (!agree(output, cutoff)) {
+        const close = agree(output, near);
+        if (nodes < forArea) nodes = close ? after(nodes, ${extra}, most) : forArea;
+        else if (nodes < most && close) nodes = after(nodes, ${extra}, most);
+        else break;
+        ${shape.name}Moments(scratch, rules, nodes, output);
+        ${shape.name}Area(scratch, rules, coarseOf(nodes, ${extra}), output + 336);
+      }
+    }
+    v128.store(output + 352, second);
+    v128.store(output + 368, first);
+    v128.store(output + 384, f64x2.splat(<f64>nodes));
     input += ${16 * (shape.values + 3)};
-    output += 352;
+    output += ${RESULT_BYTES};
   }
 }
 `;
 }
+
+/** Nodes whose area that by \`nodes\` is compared with, and whether the two agree; as lib/engine/kernel/patch-kinds.ts and scalar-kernel.ts have it. */
+const CHECKS = `
+function coarseOf(nodes: i32, extra: i32): i32 {
+  return (5 * (nodes + extra)) / 8 - extra;
+}
+
+function after(nodes: i32, extra: i32, most: i32): i32 {
+  const coarse = coarseOf(nodes, extra);
+  while (nodes < most && coarseOf(nodes, extra) === coarse) nodes++;
+  return nodes;
+}
+
+@inline
+function larger(left: v128, right: v128): v128 {
+  return f64x2.pmax(left, right);
+}
+
+function agree(output: i32, cutoff: f64): bool {
+  const fine = v128.load(output + 160);
+  return i64x2.all_true(f64x2.le(f64x2.abs(f64x2.sub(fine, v128.load(output + 336))), f64x2.mul(f64x2.splat(cutoff), fine)));
+}
+`;
 
 async function compile(source) {
   let bytes = null;
@@ -204,7 +280,7 @@ ${pieces.map((text) => `  '${text}',`).join('\n')}
 const files = Object.fromEntries([
   ...SHAPES.map((shape) => [`${shape.name}-scalar.ts`, scalarSource(shape)]),
   ['node-sums.ts', nodeSumsSource()],
-  ['kernel-bytes.ts', bytesSource(await compile(SHAPES.map(vectorSource).join('') + FAN_ROUTINES))],
+  ['kernel-bytes.ts', bytesSource(await compile(CHECKS + SHAPES.map(vectorSource).join('') + FAN_ROUTINES))],
   ['../shell/shell-scalar.ts', shellScalarSource(HEADER)],
   ['../shell/shell-bytes.ts', bytesSource(await compile(shellVectorSource(powersSource, powersOf)), 'the vector kernels of walls', 'SHELL_BYTES')],
 ]);

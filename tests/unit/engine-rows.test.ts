@@ -2,7 +2,6 @@ import fc from 'fast-check';
 import { afterEach, describe, expect, it } from 'vitest';
 import type { Cage } from '@/lib/engine/cage';
 import { RegularPatches } from '@/lib/engine/kernel/regular-patches';
-import { TRIANGLE_RULE } from '@/lib/engine/kernel/regular-rules';
 import { measureCage } from '@/lib/engine/measure';
 import type { MeasureOptions } from '@/lib/engine/measured';
 import { buildTopology } from '@/lib/engine/mesh/topology';
@@ -56,7 +55,7 @@ function sumRows(cage: Cage, add: (row: TriangleRow, rows: RowPatches, patches: 
   const shells = new ShellVisitor(LOOP_SHELL, ORIGIN, 1);
   sums.shells = shells;
   const rows = new RowPatches(ORIGIN, sums);
-  const patches = new RegularPatches(TRIANGLE_RULE, ORIGIN, sums);
+  const patches = new RegularPatches('triangle', ORIGIN, sums);
   const { mesh, sides } = stripsOf(cage);
   let long = 0;
   const row = (one: TriangleRow): void => {
@@ -163,7 +162,7 @@ describe('a row of triangles along a semi-sharp crease', () => {
           const sums = emptySums(1);
           for (let k = 0; k < places.length; k++) {
             const each = emptySums(1);
-            const patches = new RegularPatches(TRIANGLE_RULE, ORIGIN, each);
+            const patches = new RegularPatches('triangle', ORIGIN, each);
             one.fill(places[k], nets);
             for (let piece = 0; piece < one.pieces; piece++) patches.add(0, nets.subarray(36 * piece, 36 * (piece + 1)));
             patches.flush();

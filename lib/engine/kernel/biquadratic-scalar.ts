@@ -5,6 +5,10 @@ import type { NodeSums } from './node-sums';
 
 const node = new Float64Array(19);
 
+function larger(left: number, right: number): number {
+  return left < right ? right : left;
+}
+
 /** Visits the nodes of a biquadratic patch with the power coefficients `p` and lets `sums` add them to `totals`. */
 export function biquadraticNodes(p: Float64Array, _along: GaussRule, rule: GaussRule, sums: NodeSums, totals: Float64Array): void {
   const { nodes, weights } = rule;
@@ -72,4 +76,50 @@ export function biquadraticNodes(p: Float64Array, _along: GaussRule, rule: Gauss
       sums.addMiddle(node, totals);
     }
   }
+}
+
+/** Bounds of what rules with fewer nodes than the exact one leave out, as lib/run/support/kernel-bounds.mjs says, to `bounds`: the limit, a norm, then one a rule. */
+export function biquadraticBounds(p: Float64Array, tolerance: number, reach: number, bounds: Float64Array): void {
+  const e00 = Math.sqrt((((p[0] * p[0]) + (p[1] * p[1])) + (p[2] * p[2])));
+  const e01 = Math.sqrt((((p[3] * p[3]) + (p[4] * p[4])) + (p[5] * p[5]))) * (1 / 2);
+  const e02 = Math.sqrt((((p[6] * p[6]) + (p[7] * p[7])) + (p[8] * p[8]))) * (1 / 4);
+  const e10 = Math.sqrt((((p[9] * p[9]) + (p[10] * p[10])) + (p[11] * p[11]))) * (1 / 2);
+  const e11 = Math.sqrt((((p[12] * p[12]) + (p[13] * p[13])) + (p[14] * p[14]))) * (1 / 4);
+  const e12 = Math.sqrt((((p[15] * p[15]) + (p[16] * p[16])) + (p[17] * p[17]))) * (1 / 8);
+  const e20 = Math.sqrt((((p[18] * p[18]) + (p[19] * p[19])) + (p[20] * p[20]))) * (1 / 4);
+  const e21 = Math.sqrt((((p[21] * p[21]) + (p[22] * p[22])) + (p[23] * p[23]))) * (1 / 8);
+  const e22 = Math.sqrt((((p[24] * p[24]) + (p[25] * p[25])) + (p[26] * p[26]))) * (1 / 16);
+  const own0u = (e00 + e01) + e02;
+  const own0v = (e00 + e10) + e20;
+  const own0 = larger(own0u, own0v);
+  const own1u = (e10 + e11) + e12;
+  const own1v = (e01 + e11) + e21;
+  const own1 = larger(own1u, own1v);
+  const own2u = (e20 + e21) + e22;
+  const own2v = (e02 + e12) + e22;
+  const own2 = larger(own2u, own2v);
+  const side1u = (e11 + e12) + e12;
+  const side1v = (e11 + e21) + e21;
+  const side1 = larger(side1u, side1v);
+  const side2u = (e21 + e22) + e22;
+  const side2v = (e12 + e22) + e22;
+  const side2 = larger(side2u, side2v);
+  const along0 = own1;
+  const along1 = own2 + own2;
+  const normal2 = (along0 * side2) + (along1 * side1);
+  const normal3 = along1 * side2;
+  const square3 = (own1 * own2) + (own2 * own1);
+  const square4 = own2 * own2;
+  const cube5 = (square3 * own2) + (square4 * own1);
+  const cube6 = square4 * own2;
+  const left8 = (cube5 * normal3) + (cube6 * normal2);
+  const nx = (p[10] * p[5]) - (p[11] * p[4]);
+  const ny = (p[11] * p[3]) - (p[9] * p[5]);
+  const nz = (p[9] * p[4]) - (p[10] * p[3]);
+  const magnitude = ((Math.abs((p[0] * nx)) + Math.abs((p[1] * ny))) + Math.abs((p[2] * nz))) + (reach * Math.sqrt((((nx * nx) + (ny * ny)) + (nz * nz))));
+  const size = (own0 + own1) + own2;
+  const far = larger(reach, size);
+  bounds[0] = ((tolerance * magnitude) * far) * far;
+  bounds[1] = own0;
+  bounds[2] = 0.0464863 * left8;
 }

@@ -4,6 +4,9 @@ import { newVectorKernel, vectorKernel } from './vector-kernel';
 
 const MAGNITUDE_AT = 40;
 const COARSE_AREA_AT = 42;
+const SECOND_ERROR_AT = 44;
+const FIRST_ERROR_AT = 46;
+const NODES_AT = 48;
 
 /** Patches of one kind that are computed together. What one block holds, the next one made over the same kernel overwrites. */
 export class PatchBlock {
@@ -51,6 +54,22 @@ export class PatchBlock {
     this.kernel.run((patches + 1) >> 1, nodes, coarseNodes);
   }
 
+  /**
+   * Computes the first `patches` with as few nodes as do (see `PatchKernel`). Two that stand together get the same, so that an odd last one is its own neighbour:
+   * numbers depend on the order of the patches alone.
+   */
+  choose(patches: number, fewest: number, tolerance: number, reach: number): void {
+    if ((patches & 1) === 1) this.repeat(patches - 1);
+    this.kernel.choose((patches + 1) >> 1, fewest, tolerance, reach);
+  }
+
+  /** Puts an even patch beside itself. */
+  private repeat(patch: number): void {
+    const { input } = this;
+    const at = this.at(patch);
+    for (let i = at; i < at + this.stride; i += 2) input[i + 1] = input[i];
+  }
+
   /** Where a patch's first result stands in `output`. */
   resultAt(patch: number): number {
     return (patch >> 1) * OUTPUT_STRIDE + (patch & 1);
@@ -75,6 +94,20 @@ export class PatchBlock {
   /** A patch's area by the coarse rule. */
   coarseArea(patch: number): number {
     return this.output[this.resultAt(patch) + COARSE_AREA_AT];
+  }
+
+  /** What each of a patch's second and first moments may lack for nodes that were spared; volumes lack nothing. */
+  secondError(patch: number): number {
+    return this.output[this.resultAt(patch) + SECOND_ERROR_AT];
+  }
+
+  firstError(patch: number): number {
+    return this.output[this.resultAt(patch) + FIRST_ERROR_AT];
+  }
+
+  /** Nodes a direction that a patch was computed with. */
+  nodes(patch: number): number {
+    return this.output[this.resultAt(patch) + NODES_AT];
   }
 
   /** Reads a patch's net back. */

@@ -18,8 +18,8 @@ export function inputStride(kind: PatchKind): number {
   return 2 * (NET_VALUES[kind] + 3);
 }
 
-/** Doubles per pair and two lanes: ten solid and ten surface moments, magnitude, coarse area. */
-export const OUTPUT_STRIDE = 44;
+/** Doubles per pair and two lanes: ten solid and ten surface moments, magnitude, coarse area, what a second and a first moment may err by, nodes taken. */
+export const OUTPUT_STRIDE = 50;
 
 /** A kernel of patches in pairs with its memory. */
 export interface PatchKernel {
@@ -32,6 +32,12 @@ export interface PatchKernel {
   output: Float64Array;
   /** Computes the first `pairs` pairs with `count` Gauss nodes a direction, the coarse area with `coarseCount` (0: not at all). Counts up to MOST_NODES. */
   run(pairs: number, count: number, coarseCount: number): void;
+  /**
+   * Computes the first `pairs` pairs, each with as few nodes from `fewest` on as do for both its patches: what is left out of second moments stays below
+   * `tolerance`, relative to the patch's magnitude about its origin or to that of its area `reach` away from it (0: that is seen to elsewhere), and the area
+   * is as good as AREA_TOLERANCE, or has been tried with all that its range has.
+   */
+  choose(pairs: number, fewest: number, tolerance: number, reach: number): void;
 }
 
 /** A kernel of one thread, in whose memory fans are computed too. */

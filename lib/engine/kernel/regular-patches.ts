@@ -1,20 +1,11 @@
 import type { LimitSums } from '../moments/limit-sums';
-import { AREA_TOLERANCE, areaError } from '../patches/mend-surface';
+import { MOMENTS } from '../moments/sums';
+import { mendSurface } from '../patches/mend-surface';
+import { AREA_TOLERANCE, areaError, CHOICE_TOLERANCE, NODE_RANGES } from './node-choice';
 import { currentKernel, PatchBlock } from './patch-block';
 import { NET_VALUES, type PatchKind } from './patch-kinds';
 
-/** How regular patches of a scheme are computed. */
-export interface RegularRule {
-  kind: PatchKind;
-  /** Gauss nodes a direction that are exact for the ten solid moments. */
-  nodes: number;
-  /** Nodes whose area the finer one's is compared with. */
-  coarseNodes: number;
-  /** Mends the surface moments of a patch whose area the two rules do not agree on; returns the estimated error of the area. */
-  mend(net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array, coarseArea: number): number;
-}
-
-const surface = new Float64Array(10);
+const surface = new Float64Array(MOMENTS);
 
 /** Gathers regular patches, computes them block by block and adds their moments to the sums in the order in which they came. */
 export class RegularPatches {
@@ -26,10 +17,10 @@ export class RegularPatches {
   readonly input: Float64Array;
 
   /** `origins` has x, y, z per body: the points that moments are about. */
-  constructor(private readonly rule: RegularRule, private readonly origins: Float64Array, private readonly sums: LimitSums) {
-    this.block = new PatchBlock(currentKernel(rule.kind));
+  constructor(private readonly kind: PatchKind, private readonly origins: Float64Array, private readonly sums: LimitSums) {
+    this.block = new PatchBlock(currentKernel(kind));
     this.bodies = new Int32Array(this.block.size);
-    this.net = new Float64Array(NET_VALUES[rule.kind]);
+    this.net = new Float64Array(NET_VALUES[kind]);
     this.input = this.block.input;
   }
 
@@ -51,21 +42,27 @@ export class RegularPatches {
 
   /** Computes and adds what is waiting. */
   flush(): void {
-    const { block, bodies, origins, sums, rule } = this;
-    const { nodes, coarseNodes } = rule;
-    block.run(this.count, nodes, coarseNodes);
+    const { block, bodies, origins, sums, kind } = this;
     const { output } = block;
+    const { closingError } = sums;
+    block.choose(this.count, NODE_RANGES[kind].fewest, CHOICE_TOLERANCE, 0);
     for (let patch = 0; patch < this.count; patch++) {
       const body = bodies[patch];
       const at = block.resultAt(patch);
+      const area = output[at + 20];
       const coarseArea = block.coarseArea(patch);
-      let error = areaError(output[at + 20], coarseArea);
+      let error = areaError(area, coarseArea);
       sums.solid.magnitudes[body] += block.magnitude(patch);
       sums.solid.add(body, output, at, 2);
-      if (error > AREA_TOLERANCE * output[at + 20]) {
+      const second = block.secondError(patch);
+      if (second > 0) {
+        const first = block.firstError(patch);
+        for (let m = 1; m < MOMENTS; m++) closingError[MOMENTS * body + m] += m < 4 ? first : second;
+      }
+      if (error > AREA_TOLERANCE * area) {
         block.net(patch, this.net);
-        for (let i = 0; i < 10; i++) surface[i] = output[at + 20 + 2 * i];
-        error = rule.mend(this.net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2], surface, coarseArea);
+        for (let i = 0; i < MOMENTS; i++) surface[i] = output[at + 20 + 2 * i];
+        error = mendSurface(kind, this.net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2], surface, coarseArea);
         sums.surface.add(body, surface, 0);
       } else sums.surface.add(body, output, at + 20, 2);
       sums.surfaceError[body] += error;

@@ -1,24 +1,29 @@
 import { netToPowers } from '../patches/bicubic-powers';
 import { gaussRule } from '../patches/gauss-rule';
-import { bicubicNodes } from './bicubic-scalar';
+import { bicubicBounds, bicubicNodes } from './bicubic-scalar';
 import { biquadraticNetToPowers } from './biquadratic-powers';
-import { biquadraticNodes } from './biquadratic-scalar';
+import { biquadraticBounds, biquadraticNodes } from './biquadratic-scalar';
+import { AREA_CUTOFF, AREA_NEAR, coarseOf, NODE_RANGES, nodesAfter } from './node-choice';
 import { AREA_SUMS, MOMENT_SUMS, TOTALS } from './node-sums';
 import { ALONG_EXTRA, inputStride, MOST_PAIRS, NET_VALUES, OUTPUT_STRIDE, type FanKernel, type PatchKind } from './patch-kinds';
 import { FAN_ROOM, scalarFans } from './scalar-fans';
 import { triangleNetToPowers } from './triangle-powers';
-import { triangleNodes } from './triangle-scalar';
+import { triangleBounds, triangleNodes } from './triangle-scalar';
 
 const TO_POWERS = { bicubic: netToPowers, biquadratic: biquadraticNetToPowers, triangle: triangleNetToPowers };
 const NODES = { bicubic: bicubicNodes, biquadratic: biquadraticNodes, triangle: triangleNodes };
+const BOUNDS = { bicubic: bicubicBounds, biquadratic: biquadraticBounds, triangle: triangleBounds };
 
 /** What ten solid moments are sums of: ∮ f(X) det(X, X_u, X_v) is 3 + deg f times the moment. */
 const DIVISORS = [3, 4, 4, 4, 5, 5, 5, 5, 5, 5];
 
 const totals = new Float64Array(TOTALS);
-const powers = new Float64Array(48);
 
-/** As `patchMoments`, of the patch with the power coefficients `p` about the point that they are relative to. */
+/**
+ * Ten solid and ten surface moments of the patch with the power coefficients `p` about the point that they are relative to, by `nodes` Gauss nodes a direction
+ * (one more along a triangle's first side); X_u × X_v points outwards. Solid moments are those of the cone from the point to the patch. Returns
+ * ∮ (|x n_x| + |y n_y| + |z n_z|)/3, which the volume's rounding error is relative to.
+ */
 function powerMoments(kind: PatchKind, p: Float64Array, nodes: number, solid: Float64Array, surface: Float64Array): number {
   totals.fill(0);
   NODES[kind](p, gaussRule(nodes + ALONG_EXTRA[kind]), gaussRule(nodes), MOMENT_SUMS, totals);
@@ -36,20 +41,9 @@ function powerArea(kind: PatchKind, p: Float64Array, nodes: number): number {
   return totals[11];
 }
 
-/**
- * Ten solid and ten surface moments of one patch about (ox, oy, oz), by `nodes` Gauss nodes a direction (one more along a triangle's first side).
- * `net` holds NET_VALUES values, X_u × X_v points outwards. Solid moments are those of the cone from the point to the patch; exact from 7 nodes on for
- * bicubics, 5 for biquadratics, 9 for triangles. Returns ∮ (|x n_x| + |y n_y| + |z n_z|)/3, which the volume's rounding error is relative to.
- */
-export function patchMoments(kind: PatchKind, net: Float64Array, ox: number, oy: number, oz: number, nodes: number, solid: Float64Array, surface: Float64Array): number {
-  TO_POWERS[kind](net, powers);
-  powers[0] -= ox;
-  powers[1] -= oy;
-  powers[2] -= oz;
-  return powerMoments(kind, powers, nodes, solid, surface);
-}
-
 const net = new Float64Array(48);
+const pair = [new Float64Array(48), new Float64Array(48)];
+const pairBounds = [new Float64Array(6), new Float64Array(6)];
 const solid = new Float64Array(10);
 const surface = new Float64Array(10);
 
@@ -59,17 +53,47 @@ export function scalarKernel(kind: PatchKind): FanKernel {
   const stride = inputStride(kind);
   const input = new Float64Array(MOST_PAIRS * stride);
   const output = new Float64Array(MOST_PAIRS * OUTPUT_STRIDE);
-  const runOne = (patch: number, count: number, coarseCount: number): void => {
-    const from = (patch >> 1) * stride + (patch & 1);
-    const to = (patch >> 1) * OUTPUT_STRIDE + (patch & 1);
-    for (let i = 0; i < values; i++) net[i] = input[from + 2 * i];
-    const origin = from + 2 * values;
-    output[to + 40] = patchMoments(kind, net, input[origin], input[origin + 2], input[origin + 4], count, solid, surface);
-    for (let i = 0; i < 10; i++) {
-      output[to + 2 * i] = solid[i];
-      output[to + 2 * (10 + i)] = surface[i];
+  const { fewest: least, exact, forArea, most } = NODE_RANGES[kind];
+  const putPowers = (at: number): void => {
+    for (let lane = 0; lane < 2; lane++) {
+      const from = at * stride + lane;
+      for (let i = 0; i < values; i++) net[i] = input[from + 2 * i];
+      TO_POWERS[kind](net, pair[lane]);
+      for (let axis = 0; axis < 3; axis++) pair[lane][axis] -= input[from + 2 * (values + axis)];
     }
-    if (coarseCount > 0) output[to + 42] = powerArea(kind, powers, coarseCount);
+  };
+  const runPair = (at: number, count: number, coarseCount: number): void => {
+    for (let lane = 0; lane < 2; lane++) {
+      const to = at * OUTPUT_STRIDE + lane;
+      output[to + 40] = powerMoments(kind, pair[lane], count, solid, surface);
+      for (let i = 0; i < 10; i++) {
+        output[to + 2 * i] = solid[i];
+        output[to + 2 * (10 + i)] = surface[i];
+      }
+      if (coarseCount > 0) output[to + 42] = powerArea(kind, pair[lane], coarseCount);
+      output[to + 48] = count;
+    }
+  };
+  const agree = (at: number, cutoff: number): boolean => {
+    const from = at * OUTPUT_STRIDE;
+    for (let lane = from; lane < from + 2; lane++) if (!(Math.abs(output[lane + 20] - output[lane + 42]) <= cutoff * output[lane + 20])) return false;
+    return true;
+  };
+  const putErrors = (at: number, second: readonly number[], first: readonly number[]): void => {
+    for (let lane = 0; lane < 2; lane++) {
+      output[at * OUTPUT_STRIDE + 44 + lane] = second[lane];
+      output[at * OUTPUT_STRIDE + 46 + lane] = first[lane];
+    }
+  };
+  const NONE = [0, 0];
+  /** Nodes that do for the solid moments of a pair, and what they may err by then. */
+  const enough = (at: number, fewest: number, tolerance: number, reach: number): number => {
+    for (let lane = 0; lane < 2; lane++) BOUNDS[kind](pair[lane], tolerance, reach, pairBounds[lane]);
+    const left = (nodes: number): number[] => pairBounds.map((bounds) => bounds[2 + nodes - least]);
+    let nodes = fewest;
+    while (nodes < exact && !left(nodes).every((bound, lane) => bound <= pairBounds[lane][0])) nodes++;
+    if (nodes < exact) putErrors(at, left(nodes).map((bound) => bound / 5), left(nodes).map((bound, lane) => bound / (4 * pairBounds[lane][1])));
+    return nodes;
   };
   return {
     kind,
@@ -77,7 +101,26 @@ export function scalarKernel(kind: PatchKind): FanKernel {
     input,
     output,
     run(pairs, count, coarseCount) {
-      for (let patch = 0; patch < 2 * pairs; patch++) runOne(patch, count, coarseCount);
+      for (let at = 0; at < pairs; at++) {
+        putPowers(at);
+        runPair(at, count, coarseCount);
+        putErrors(at, NONE, NONE);
+      }
+    },
+    choose(pairs, fewest, tolerance, reach) {
+      for (let at = 0; at < pairs; at++) {
+        putPowers(at);
+        putErrors(at, NONE, NONE);
+        let nodes = tolerance > 0 ? enough(at, fewest, tolerance, reach) : fewest;
+        runPair(at, nodes, coarseOf(kind, nodes));
+        while (!agree(at, AREA_CUTOFF)) {
+          const close = agree(at, AREA_NEAR);
+          if (nodes < forArea) nodes = close ? nodesAfter(kind, nodes) : forArea;
+          else if (nodes < most && close) nodes = nodesAfter(kind, nodes);
+          else break;
+          runPair(at, nodes, coarseOf(kind, nodes));
+        }
+      }
     },
     fans: scalarFans(new Float64Array(FAN_ROOM), input, stride, output, OUTPUT_STRIDE),
   };

@@ -1,5 +1,6 @@
 import { gaussRule } from '../patches/gauss-rule';
 import { KERNEL_BYTES } from './kernel-bytes';
+import { AREA_CUTOFF, AREA_NEAR, coarseOf, NODE_RANGES } from './node-choice';
 import { ALONG_EXTRA, inputStride, MOST_NODES, MOST_PAIRS, OUTPUT_STRIDE, type FanKernel, type PatchKind } from './patch-kinds';
 import { FAN_ROOM, SUMMED_RESULTS } from './scalar-fans';
 import { TRIANGLE_POWERS } from './triangle-powers';
@@ -13,8 +14,8 @@ const SCRATCH = 128;
 
 /** What the WebAssembly module exports per kind. Byte addresses. */
 type Run = (
-  pairs: number, input: number, output: number, count: number, along: number, nodes: number,
-  coarseCount: number, coarseAlong: number, coarseNodes: number, table: number, scratch: number,
+  pairs: number, input: number, output: number, fewest: number, most: number, coarse: number, forArea: number,
+  cutoff: number, near: number, tolerance: number, reach: number, rules: number, table: number, scratch: number,
 ) => void;
 
 type Routine = (...integers: number[]) => void;
@@ -66,23 +67,27 @@ function wrap(kind: PatchKind, doubles: Float64Array, run: Run, refineFans: Rout
   const fanAt = (place: number): number => 8 * (fansAt + place);
   doubles.set(TRIANGLE_POWERS, TABLE_AT);
   // Put anew each time, so that the kernel never works with a copy of its own: a rule gone wrong must show in the numbers and the estimate alike.
-  const putRule = (count: number): number => {
-    const { nodes, weights } = gaussRule(count);
-    doubles.set(nodes, RULE_STRIDE * count);
-    doubles.set(weights, RULE_STRIDE * count + count);
-    return 8 * RULE_STRIDE * count;
+  const putRule = (count: number): void => {
+    for (let size = count; size <= count + extra; size++) {
+      const { nodes, weights } = gaussRule(size);
+      doubles.set(nodes, RULE_STRIDE * size);
+      doubles.set(weights, RULE_STRIDE * size + size);
+    }
   };
+  const { forArea, most } = NODE_RANGES[kind];
   return {
     kind,
     pairs: MOST_PAIRS,
     input: doubles.subarray(INPUT_AT, outputAt),
     output: doubles.subarray(outputAt, scratchAt),
     run(pairs, count, coarseCount) {
-      const nodes = putRule(count);
-      const along = extra === 0 ? nodes : putRule(count + extra);
-      const coarseNodes = coarseCount === 0 ? nodes : putRule(coarseCount);
-      const coarseAlong = extra === 0 || coarseCount === 0 ? coarseNodes : putRule(coarseCount + extra);
-      run(pairs, 8 * INPUT_AT, 8 * outputAt, count, along, nodes, coarseCount, coarseAlong, coarseNodes, 8 * TABLE_AT, 8 * scratchAt);
+      putRule(count);
+      if (coarseCount > 0) putRule(coarseCount);
+      run(pairs, 8 * INPUT_AT, 8 * outputAt, count, count, coarseCount, count, 0, 0, 0, 0, 0, 8 * TABLE_AT, 8 * scratchAt);
+    },
+    choose(pairs, fewest, tolerance, reach) {
+      for (let count = coarseOf(kind, fewest); count <= most; count++) putRule(count);
+      run(pairs, 8 * INPUT_AT, 8 * outputAt, fewest, most, 0, forArea, AREA_CUTOFF, AREA_NEAR, tolerance, reach, 0, 8 * TABLE_AT, 8 * scratchAt);
     },
     fans: {
       memory: doubles.subarray(fansAt, fansAt + FAN_ROOM),

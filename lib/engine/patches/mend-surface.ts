@@ -1,13 +1,8 @@
+import { AREA_TOLERANCE, areaError, coarseOf, NODE_RANGES } from '../kernel/node-choice';
 import { PatchBlock, separateKernel } from '../kernel/patch-block';
 import type { PatchKind } from '../kernel/patch-kinds';
 import { applyRows } from '../schemes/sparse-rows';
 import { splitMatrix } from './split-net';
-
-/** Gauss nodes a direction by which a patch's surface is measured, and of the rule whose area the finer one's is compared with. */
-export const AREA_NODES: Readonly<Record<PatchKind, readonly [fine: number, coarse: number]>> = { bicubic: [7, 4], biquadratic: [7, 4], triangle: [9, 5] };
-
-/** Part of a patch's area that its error may be; beyond it the patch is quartered. */
-export const AREA_TOLERANCE = 1e-11;
 
 const MOST_QUARTERINGS = 10;
 /** Share of a patch's difference that its quarters must take off it for more quartering to be worth while; a spoilt rule gains nothing. */
@@ -16,13 +11,6 @@ const LEAST_GAIN = 0.3;
 const PATIENCE = 5;
 /** Times by which a quarter's relative difference must fall below that of the whole for the power of 3/2 to hold: where the normal vanishes it does not fall, however small the quarter. */
 const ANALYTIC_FALL = 16;
-
-/** For an analytic integrand the error of n nodes falls as ρ^−2n, so that of the finer rule is that of the coarser to the power 3/2 at least. */
-export function areaError(fine: number, coarse: number): number {
-  if (!(fine > 0)) return 0;
-  const change = Math.min(1, Math.abs(fine - coarse) / fine);
-  return fine * change * Math.sqrt(change);
-}
 
 interface Mender {
   block: PatchBlock;
@@ -34,7 +22,7 @@ const menders = new Map<PatchKind, Mender>();
 const solid = new Float64Array(10);
 
 /**
- * Mends the ten surface moments about (ox, oy, oz) of a patch with the net `net` [3 point + axis], whose area by the two rules of AREA_NODES is `surface[0]` and
+ * Mends the ten surface moments about (ox, oy, oz) of a patch with the net `net` [3 point + axis], whose area by the finest rule for areas and the one it is compared with is `surface[0]` and
  * `coarseArea`: the integrand holds a root, so the error is estimated by comparing the rules, and the patch quartered until it is within `tolerance` (an area).
  * Returns the estimated error of the area.
  */
@@ -48,13 +36,18 @@ export function mendSurface(
   return quarter(kind, menderOf(kind), net, 0, [ox, oy, oz], { change: Math.abs(area - coarseArea), area }, tolerance, 1, surface);
 }
 
-/** Puts the ten surface moments of a patch by the rules of AREA_NODES into `surface`, mended to `tolerance` (an area) if need be; returns the estimated error of the area. */
+/** Puts the ten surface moments of a patch by the finest rule for areas into `surface`, mended to `tolerance` (an area) if need be; returns the estimated error of the area. */
 export function measureSurface(kind: PatchKind, net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array, tolerance?: number): number {
   const { block } = menderOf(kind);
   block.put(0, net, ox, oy, oz);
-  block.run(1, ...AREA_NODES[kind]);
+  runForArea(block, kind, 1);
   block.read(0, solid, surface);
   return mendSurface(kind, net, ox, oy, oz, surface, block.coarseArea(0), tolerance);
+}
+
+function runForArea(block: PatchBlock, kind: PatchKind, patches: number): void {
+  const { forArea } = NODE_RANGES[kind];
+  block.run(patches, forArea, coarseOf(kind, forArea));
 }
 
 function menderOf(kind: PatchKind): Mender {
@@ -82,8 +75,7 @@ function quarter(
   const nets = (mender.nets[depth] ??= new Float64Array(4 * values));
   applyRows(splitMatrix(kind), source, from, nets, 0);
   for (let i = 0; i < 4; i++) block.put(i, nets, origin[0], origin[1], origin[2], i * values);
-  const [fine, coarse] = AREA_NODES[kind];
-  block.run(4, fine, coarse);
+  runForArea(block, kind, 4);
   const moments = new Float64Array(40);
   const changes = [0, 0, 0, 0];
   const areas = [0, 0, 0, 0];

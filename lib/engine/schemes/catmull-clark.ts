@@ -1,5 +1,4 @@
 import { RegularPatches } from '../kernel/regular-patches';
-import { BICUBIC_RULE } from '../kernel/regular-rules';
 import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
 import { classifyVertices, INNER, isIsolated, isRegularFace, QUAD_COUNTS } from './classify-vertices';
@@ -25,7 +24,7 @@ const net = new Float64Array(48);
  */
 export function integrateCatmullClark(cage: LevelMesh, rules: RefinementRules, origins: Float64Array, sums: LimitSums): boolean {
   let mesh = cage;
-  const patches = new RegularPatches(BICUBIC_RULE, origins, sums);
+  const patches = new RegularPatches('bicubic', origins, sums);
   const batches = new FanBatches(CATMULL_CLARK_KIT, origins, sums);
   for (let level = 0; level <= MOST_LEVELS; level++) {
     const { kinds, fans } = classifyVertices(mesh, QUAD_COUNTS);

@@ -1,6 +1,5 @@
 import type { Boundary } from '../cage';
 import { RegularPatches } from '../kernel/regular-patches';
-import { BIQUADRATIC_RULE } from '../kernel/regular-rules';
 import type { LimitSums } from '../moments/limit-sums';
 import { SMOOTH_CENTRE, type Fans } from './classify-vertices';
 import { joinSpokes } from './doo-sabin-borders';
@@ -24,7 +23,7 @@ const MOST_LEVELS = 6;
  */
 export function integrateDooSabin(cage: LevelMesh, boundary: Boundary, origins: Float64Array, sums: LimitSums): boolean {
   const base = dooSabinCage(cage, boundary);
-  const patches = new RegularPatches(BIQUADRATIC_RULE, origins, sums);
+  const patches = new RegularPatches('biquadratic', origins, sums);
   const batches = new FanBatches(DOO_SABIN_KIT, origins, sums);
   let mesh = base;
   for (let level = 0; level <= MOST_LEVELS; level++) {

@@ -1,10 +1,12 @@
-import { ownKernel, type PatchBlock } from '../kernel/patch-block';
-import { inputStride, OUTPUT_STRIDE } from '../kernel/patch-kinds';
-import { FAN_ROOM, scalarFans, SUMMED_RESULTS, type FanRoutines } from '../kernel/scalar-fans';
+import { AREA_TOLERANCE, areaError, CHOICE_TOLERANCE, NODE_RANGES } from '../kernel/node-choice';
+import type { PatchBlock } from '../kernel/patch-block';
+import type { PatchKind } from '../kernel/patch-kinds';
+import { SUMMED_RESULTS } from '../kernel/scalar-fans';
 import type { LimitSums } from '../moments/limit-sums';
 import { MOMENTS } from '../moments/sums';
-import { AREA_TOLERANCE, areaError, measureSurface } from '../patches/mend-surface';
+import { mendSurface } from '../patches/mend-surface';
 import type { FanKit } from './fan-kit';
+import { FanMemory } from './fan-memory';
 import { packPoints } from './fan-points';
 import { RIM_POWERS } from './fan-rim';
 import type { FanState } from './fan-state';
@@ -15,12 +17,11 @@ import { addRimChain, moveMoments } from './rim-chain';
 import { applyRows } from './sparse-rows';
 
 /** What a coarser rule may change, relative to the moments of the cones from the origin and to the area. */
-const SOLID_TOLERANCE = 1e-15;
+const SOLID_TOLERANCE = 4e-15;
 const SURFACE_TOLERANCE = 1e-11;
 
-/** Nodes that the first level may do without where patches are smooth, and the share of its patches that may want mending then. */
-const FIRST_SAVING = 2;
-const MOST_MENDED = 1 / 8;
+/** Nodes by which patches are tried first, those of rougher surfaces with more; a level whose patches all do with fewer is computed with the same for all. */
+const FIRST: Readonly<Record<PatchKind, number>> = { bicubic: 5, biquadratic: 5, triangle: 7 };
 
 /** Times the difference of two closings: the earlier one errs about as much as they differ, so that the difference alone may fall short by a little. */
 const CLOSING_FACTOR = 2;
@@ -34,19 +35,6 @@ const coarseSolid = new Float64Array(MOMENTS);
 const coarseSurface = new Float64Array(MOMENTS);
 const differences = new Float64Array(2 * MOMENTS);
 
-/** Places of a batch's tables and sums in the memory of the routines, in doubles. */
-interface Places {
-  starts: number;
-  columns: number;
-  factors: number;
-  nets: number;
-  sums: number;
-  size: number;
-}
-
-/** The batch whose tables the routines hold. */
-const holders = new WeakMap<FanRoutines, FanBatch>();
-
 /**
  * Fans of one kind and one body whose moments are computed together: cones from each fan's limit point, a level sequence of 3n regular patches closed by
  * weights instead of eigenvectors, and chains along the rim that move the cones' apex to the body's origin.
@@ -54,18 +42,13 @@ const holders = new WeakMap<FanRoutines, FanBatch>();
 export class FanBatch {
   private readonly table: FanTable;
   private readonly block: PatchBlock;
-  private readonly routines: FanRoutines;
-  private readonly places: Places;
+  private readonly memory: FanMemory;
   private readonly patches: number;
   /** Fans that are computed at once. */
   private readonly most: number;
   /** Doubles of a fan's points, and those of the fans that wait. */
   private readonly width: number;
   private readonly waiting: Float64Array;
-  /** Doubles from fan to fan in the routines' memory, and where the level's points and the next one's stand there. */
-  private readonly stride: number;
-  private state: number;
-  private finer: number;
   /** The origin as seen from each fan's limit point. */
   private readonly origins: Float64Array;
   private readonly rimPowers: Float64Array;
@@ -79,14 +62,17 @@ export class FanBatch {
   /** Volume and area that errors are relative to. */
   private solidScale = 0;
   private areaScale = 0;
-  /** Whether the first level wants all nodes. */
+  /** Whether the solid moments of the kind want more nodes on the first level than patches are tried with, and those of the level at hand. */
   private rough = false;
-  /** The patch that erred most. */
+  private bounded = false;
+  /** The patch that took most nodes and erred most with them. */
   private worst = 0;
+  private worstNodes = 0;
   private worstError = 0;
-  /** Estimated error of the level's area, and how many of its patches were mended. */
+  /** Estimated error of the level's area, and of its first and second solid moments for nodes spared. */
   private levelError = 0;
-  private mended = 0;
+  private levelFirst = 0;
+  private levelSecond = 0;
 
   /** `scratch` is a fan of the kind, to be read into before `add`. */
   constructor(private readonly kit: FanKit, readonly scratch: FanState, private readonly sums: LimitSums) {
@@ -95,20 +81,8 @@ export class FanBatch {
     this.block = fanBlock(kind);
     this.patches = 3 * scratch.sectors;
     this.most = Math.max(1, Math.floor(this.block.size / this.patches));
-    const { points, matrix, nets } = this.table.operator;
-    this.width = 3 * points.count;
-    this.stride = 3 * matrix.rows;
-    const starts = 0;
-    const columns = starts + Math.ceil((matrix.rows + 1) / 2);
-    const factors = columns + Math.ceil(matrix.columns.length / 2);
-    const netsAt = factors + matrix.factors.length;
-    const sumsAt = netsAt + Math.ceil(nets.length / 2);
-    this.state = sumsAt + SUMMED_RESULTS * this.most;
-    this.finer = this.state + this.most * this.stride;
-    this.places = { starts, columns, factors, nets: netsAt, sums: sumsAt, size: this.finer + this.most * this.stride };
-    const own = ownKernel(kind);
-    // A fan too large for the kernel's memory has one of its own.
-    this.routines = this.places.size <= FAN_ROOM ? own.fans : scalarFans(new Float64Array(this.places.size), own.input, inputStride(kind), own.output, OUTPUT_STRIDE);
+    this.width = 3 * this.table.operator.points.count;
+    this.memory = new FanMemory(kind, this.table.operator, this.block, this.patches, this.most);
     this.waiting = new Float64Array(this.most * this.width);
     this.origins = new Float64Array(3 * this.most);
     this.rimPowers = new Float64Array(3 * RIM_POWERS * this.table.rim.curves);
@@ -134,61 +108,34 @@ export class FanBatch {
   /** Computes and adds what is waiting. */
   flush(): void {
     if (this.count === 0) return;
-    const { kit, table, routines, places } = this;
-    const { matrix } = table.operator;
-    const sums = routines.memory.subarray(places.sums, places.sums + SUMMED_RESULTS * this.count);
+    const { kit, table, memory } = this;
     this.closed.fill(0);
     this.check.fill(0);
-    this.worst = 0;
-    this.worstError = 0;
     this.areaScale = 0;
-    this.load();
+    memory.load(this.waiting, this.width, this.count);
     this.addRims();
     const levels = Math.max(table.weights.length, table.surfaceWeights.length);
-    let nodes = kit.rule.nodes;
+    const first = FIRST[kit.rule.kind];
+    // 0: each patch has as many as it wants.
+    let nodes = 0;
     for (let k = 0; k < levels; k++) {
-      routines.refine(this.count, this.stride, matrix.rows, places.starts, places.columns, places.factors, this.state, this.finer);
-      [this.state, this.finer] = [this.finer, this.state];
-      if (k === 0 && !this.rough && this.tryFirst(sums)) nodes = kit.rule.nodes - FIRST_SAVING;
-      else this.sumLevel(nodes, sums);
-      if (k === 0) this.setScales(sums);
-      this.sums.surfaceError[this.body] += Math.abs(at(table.surfaceWeights, k)) * this.levelError;
-      this.addLevel(k, sums);
-      if (k + 1 < levels) while (nodes > kit.fewestNodes && this.compare(k, nodes, nodes - 1)) nodes--;
+      memory.refine();
+      if (nodes > 0) memory.sumLevel((size) => this.block.run(size, nodes, 0));
+      else this.chooseLevel(k);
+      this.addLevel(k);
+      if (k + 1 === levels) break;
+      if (this.bounded) this.bounded = !this.compare(k, kit.rule.nodes, first, false);
+      if (nodes === 0 && this.compare(k, first, first - 1)) nodes = first - 1;
+      while (nodes > kit.fewestNodes && this.compare(k, nodes, nodes - 1)) nodes--;
     }
     this.finish();
     this.count = 0;
   }
 
-  private setScales(sums: Float64Array): void {
+  private setScales(): void {
     this.areaScale = 0;
-    for (let fan = 0; fan < this.count; fan++) this.areaScale += sums[SUMMED_RESULTS * fan + MOMENTS];
+    for (let fan = 0; fan < this.count; fan++) this.areaScale += this.memory.sums[SUMMED_RESULTS * fan + MOMENTS];
     this.solidScale = (this.areaScale * this.reach) / 3;
-  }
-
-  /** Sums the first level by fewer nodes; false, and no more tried with this kind, where many patches want mending then or the one that erred most wants more nodes. */
-  private tryFirst(sums: Float64Array): boolean {
-    const { nodes } = this.kit.rule;
-    this.sumLevel(nodes - FIRST_SAVING, sums);
-    this.setScales(sums);
-    this.rough = this.mended > MOST_MENDED * this.count * this.patches || !this.compare(0, nodes, nodes - FIRST_SAVING);
-    this.worstError = 0;
-    if (this.rough) this.areaScale = 0;
-    return !this.rough;
-  }
-
-  /** Puts tables and the waiting fans into the routines' memory. */
-  private load(): void {
-    const { routines, places, width, stride, waiting } = this;
-    const { matrix, nets } = this.table.operator;
-    if (holders.get(routines) !== this) {
-      routines.integers.set(matrix.starts, 2 * places.starts);
-      routines.integers.set(matrix.columns.map((point) => 3 * point), 2 * places.columns);
-      routines.memory.set(matrix.factors, places.factors);
-      routines.integers.set(nets.map((row) => 3 * row), 2 * places.nets);
-      holders.set(routines, this);
-    }
-    for (let fan = 0; fan < this.count; fan++) routines.memory.set(waiting.subarray(fan * width, (fan + 1) * width), this.state + fan * stride);
   }
 
   private addRims(): void {
@@ -204,52 +151,70 @@ export class FanBatch {
     }
   }
 
-  /** Sums the results of all patches of this level by fan; areas by the first two numbers of nodes are checked. */
-  private sumLevel(nodes: number, sums: Float64Array): void {
-    const { block, kit, routines, places, patches } = this;
-    const { nodes: most, coarseNodes } = kit.rule;
-    const coarse = nodes === most ? coarseNodes : nodes === most - FIRST_SAVING ? coarseNodes - 1 : 0;
-    const total = this.count * patches;
-    sums.fill(0);
-    this.levelError = 0;
-    this.mended = 0;
-    for (let first = 0; first < total; first += block.size) {
-      const size = Math.min(block.size, total - first);
-      routines.gather(first, size, patches, block.values / 3, places.nets, this.state, this.stride);
-      block.run(size, nodes, coarse);
-      routines.sum(first, size, patches, places.sums);
-      if (coarse > 0) for (let i = 0; i < size; i++) this.checkArea(first + i, i, sums);
+  /** Sums the results of all patches of this level by fan, each with as many nodes as it wants, and notes what they may err by. */
+  private chooseLevel(k: number): void {
+    const { sums: { surfaceError, closingError }, body, table, reach } = this;
+    const { kind } = this.kit.rule;
+    const { fewest, exact } = NODE_RANGES[kind];
+    const first = FIRST[kind];
+    if (k === 0) this.bounded = this.rough;
+    if (!this.bounded) {
+      this.sumChosen(first, 0);
+      if (k === 0) {
+        this.setScales();
+        this.rough = this.bounded = first < exact && !this.compare(k, exact, first, false);
+      }
     }
+    // Where the solid moments want more than the area, their bounds say how many.
+    if (this.bounded) {
+      // Relative to the patches of the first level: those of later ones are smaller.
+      this.sumChosen(fewest, CHOICE_TOLERANCE * 4 ** k);
+      if (k === 0) this.setScales();
+    }
+    surfaceError[body] += Math.abs(at(table.surfaceWeights, k)) * this.levelError;
+    const weight = Math.abs(at(table.weights, k));
+    const firstError = weight * this.levelFirst;
+    const secondError = weight * this.levelSecond + 2 * reach * firstError;
+    for (let m = 1; m < MOMENTS; m++) closingError[MOMENTS * body + m] += m < 4 ? firstError : secondError;
   }
 
-  /** Estimates the error of a patch's area and mends it in its fan's sums where that is too large. */
-  private checkArea(patch: number, place: number, sums: Float64Array): void {
-    const { block } = this;
+  private sumChosen(fewest: number, tolerance: number): void {
+    this.worstNodes = this.worstError = 0;
+    this.levelError = this.levelFirst = this.levelSecond = 0;
+    this.memory.sumLevel((size) => this.block.choose(size, fewest, tolerance, this.reach), (patch, place) => this.checkPatch(patch, place));
+  }
+
+  /** Notes what a patch errs by, and mends its area in its fan's sums where that is too much. */
+  private checkPatch(patch: number, place: number): void {
+    const { block, memory: { sums } } = this;
     const area = block.output[block.resultAt(place) + 2 * MOMENTS];
-    let error = areaError(area, block.coarseArea(place));
-    this.noteWorst(patch, error);
+    const coarseArea = block.coarseArea(place);
+    let error = areaError(area, coarseArea);
+    this.noteWorst(patch, block.nodes(place), error);
+    this.levelFirst += block.firstError(place);
+    this.levelSecond += block.secondError(place);
     // Small patches of later levels need no more than those of the first.
     const tolerance = AREA_TOLERANCE * Math.max(area, this.areaScale / (this.count * this.patches));
     if (error > tolerance) {
       const to = SUMMED_RESULTS * Math.floor(patch / this.patches) + MOMENTS;
-      this.mended++;
       block.net(place, this.net);
       block.read(place, solid, surface);
       for (let m = 0; m < MOMENTS; m++) sums[to + m] -= surface[m];
-      error = measureSurface(this.kit.rule.kind, this.net, 0, 0, 0, surface, tolerance);
+      error = mendSurface(this.kit.rule.kind, this.net, 0, 0, 0, surface, coarseArea, tolerance);
       for (let m = 0; m < MOMENTS; m++) sums[to + m] += surface[m];
     }
     this.levelError += error;
   }
 
-  private noteWorst(patch: number, error: number): void {
-    if (!(error > this.worstError)) return;
+  private noteWorst(patch: number, nodes: number, error: number): void {
+    if (nodes < this.worstNodes || (nodes === this.worstNodes && !(error > this.worstError))) return;
+    this.worstNodes = nodes;
     this.worstError = error;
     this.worst = patch;
   }
 
-  private addLevel(k: number, level: Float64Array): void {
-    const { table, closed, check } = this;
+  private addLevel(k: number): void {
+    const { table, closed, check, memory: { sums: level } } = this;
     const weight = at(table.weights, k);
     const surfaceWeight = at(table.surfaceWeights, k);
     const checkWeight = at(table.check, k);
@@ -268,15 +233,16 @@ export class FanBatch {
     }
   }
 
-  /** Whether `fewer` nodes do as well as `nodes`: the patch that erred most and one in turn speak for all. If so, what they may err by is noted. */
-  private compare(k: number, nodes: number, fewer: number): boolean {
+  /** Whether `fewer` nodes do as well as `nodes`, for the area too or the solid alone: the patch that erred most and one in turn speak for all. If so, what they may err by is noted. */
+  private compare(k: number, nodes: number, fewer: number, area = true): boolean {
     const { block, reach, sums, body, solidScale, areaScale } = this;
     const total = this.count * this.patches;
     const probes = [this.worst, (7 * k + 3) % total];
     differences.fill(0);
     for (const patch of probes) {
       // Each by itself, both lanes alike.
-      for (let lane = 0; lane < 2; lane++) this.putPatch(patch, lane);
+      this.memory.net(patch, this.net);
+      for (let lane = 0; lane < 2; lane++) block.put(lane, this.net, 0, 0, 0);
       block.run(2, nodes, 0);
       block.read(0, solid, surface);
       block.run(2, fewer, 0);
@@ -286,7 +252,7 @@ export class FanBatch {
         differences[MOMENTS + m] = Math.max(differences[MOMENTS + m], total * Math.abs(surface[m] - coarseSurface[m]));
       }
     }
-    if (!(differences[MOMENTS] <= SURFACE_TOLERANCE * areaScale)) return false;
+    if (area && !(differences[MOMENTS] <= SURFACE_TOLERANCE * areaScale)) return false;
     // About the origin, `reach` away at most.
     const bounds = [differences[0]];
     for (let m = 1; m < 4; m++) bounds.push(differences[m] + reach * differences[0]);
@@ -294,21 +260,8 @@ export class FanBatch {
     for (let m = 4; m < MOMENTS; m++) bounds.push(differences[m] + 2 * reach * first + reach * reach * differences[0]);
     for (let m = 0; m < MOMENTS; m++) if (!(bounds[m] <= SOLID_TOLERANCE * solidScale * (m === 0 ? 1 : m < 4 ? reach : reach * reach))) return false;
     for (let m = 0; m < MOMENTS; m++) sums.closingError[MOMENTS * body + m] += bounds[m];
-    sums.surfaceError[body] += differences[MOMENTS];
+    if (area) sums.surfaceError[body] += differences[MOMENTS];
     return true;
-  }
-
-  private putPatch(patch: number, place: number): void {
-    const { block, net, stride, patches, routines } = this;
-    const { nets } = this.table.operator;
-    const points = block.values / 3;
-    const fan = Math.floor(patch / patches);
-    const list = (patch - fan * patches) * points;
-    for (let i = 0; i < points; i++) {
-      const from = this.state + fan * stride + 3 * nets[list + i];
-      for (let axis = 0; axis < 3; axis++) net[3 * i + axis] = routines.memory[from + axis];
-    }
-    block.put(place, net, 0, 0, 0);
   }
 
   private finish(): void {

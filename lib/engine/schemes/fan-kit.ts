@@ -1,6 +1,6 @@
+import { coarseOf, NODE_RANGES } from '../kernel/node-choice';
 import type { PatchKind } from '../kernel/patch-kinds';
 import type { BorderCurves } from '../moments/border-curves';
-import { AREA_NODES } from '../patches/mend-surface';
 import type { FanState } from './fan-state';
 import type { LevelMesh } from './level-mesh';
 
@@ -13,8 +13,9 @@ export interface FanRule {
 
 /** The rule for fans of a kind of patches: as many nodes as the area needs, the solid moments are exact then. */
 export function fanRule(kind: PatchKind): FanRule {
-  const [nodes, coarseNodes] = AREA_NODES[kind];
-  return { kind, nodes, coarseNodes };
+  const { exact, forArea } = NODE_RANGES[kind];
+  const nodes = Math.max(exact, forArea);
+  return { kind, nodes, coarseNodes: coarseOf(kind, nodes) };
 }
 
 /** What the level sequence of a fan needs to know of a scheme. Each sector has three regular children: 0 beside its first spoke, 1, and 2 beside its second. */

@@ -1,9 +1,10 @@
+import { AREA_TOLERANCE, coarseOf, NODE_RANGES } from '../kernel/node-choice';
 import { PatchBlock, separateKernel } from '../kernel/patch-block';
 import type { RegularPatches } from '../kernel/regular-patches';
 import type { LimitSums } from '../moments/limit-sums';
 import { ROW_NODES, rowRule, rowRuleDefect, SHORT_ROW } from '../moments/row-rule';
 import { MOMENTS } from '../moments/sums';
-import { AREA_NODES, AREA_TOLERANCE, mendSurface } from '../patches/mend-surface';
+import { mendSurface } from '../patches/mend-surface';
 import { addRowShell } from './loop-row-shell';
 import type { TriangleRow } from './loop-strip';
 
@@ -82,7 +83,8 @@ function sumPieces(row: TriangleRow, at: Float64Array, weights: Float64Array, [o
     row.fill(at[k], nets);
     for (let piece = 0; piece < pieces; piece++) patches.put(pieces * k + piece, nets, ox, oy, oz, NET * piece);
   }
-  patches.run(pieces * at.length, ...AREA_NODES.triangle);
+  const { exact } = NODE_RANGES.triangle;
+  patches.run(pieces * at.length, exact, coarseOf('triangle', exact));
   for (let patch = 0; patch < pieces * at.length; patch++) {
     const weight = weights[Math.floor(patch / pieces)];
     sums.magnitude += weight * patches.read(patch, solid, surface);

@@ -1,5 +1,4 @@
 import { RegularPatches } from '../kernel/regular-patches';
-import { TRIANGLE_RULE } from '../kernel/regular-rules';
 import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
 import { classifyVertices, isIsolated, isRegularFace, TRIANGLE_COUNTS } from './classify-vertices';
@@ -25,7 +24,7 @@ const net = new Float64Array(36);
  */
 export function integrateLoop(cage: LevelMesh, rules: RefinementRules, origins: Float64Array, sums: LimitSums): boolean {
   let mesh = cage;
-  const patches = new RegularPatches(TRIANGLE_RULE, origins, sums);
+  const patches = new RegularPatches('triangle', origins, sums);
   const rows = new RowPatches(origins, sums);
   const batches = new FanBatches(LOOP_KIT, origins, sums);
   for (let level = 0; level <= MOST_LEVELS; level++) {

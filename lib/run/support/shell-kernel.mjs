@@ -1,20 +1,7 @@
 // What lib/run/build-kernel.mjs writes for walls: curvature terms of patches, in the dialects of the moments' kernels.
 import { FAN_ROUTINES } from './fan-routines.mjs';
-import { scalar, statements, vector } from './kernel-dialects.mjs';
+import { pruned, scalar, statements, vector } from './kernel-dialects.mjs';
 import { AXES, middle, normal, SHAPES, side } from './kernel-shapes.mjs';
-
-/** Without the declarations that nothing after them reads. */
-function pruned(list) {
-  const kept = [];
-  const read = new Set();
-  for (const text of list.toReversed()) {
-    const name = text.match(/^let (\w+) = /)?.[1];
-    if (name !== undefined && !read.has(name)) continue;
-    kept.unshift(text);
-    for (const word of text.replace(/^let \w+ = /, '').match(/[A-Za-z_]\w*/g) ?? []) read.add(word);
-  }
-  return kept;
-}
 
 const lines = (dialect, list, depth) => statements(dialect, list).map((text) => `${'  '.repeat(depth)}${text}`).join('\n');
 const perAxis = (write) => AXES.flatMap((axis, k) => write(axis, k));
