@@ -26,7 +26,7 @@ export function diagnoseStructure(cage: Cage, mesh: Topology, defects: EdgeDefec
       (n) => `${counted(n, 'edge has', 'edges have')} more than two faces; separate the surfaces there so that every edge has at most two.`);
   }
   if (defects.turned.length > 0) {
-    const turned = findTurnedFaces(mesh, cage);
+    const turned = findTurnedFaces(mesh);
     for (const h of defects.turned) bad[mesh.faceOf[h]] = 1;
     for (const face of turned.faces) {
       bad[face] = 1;

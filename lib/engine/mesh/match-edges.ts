@@ -57,11 +57,24 @@ function sortBucket({ halfEdges, higher }: EdgeBuckets, from: number, to: number
 export function matchEdges(mesh: Topology, creaseVertices: Uint32Array, creaseSharpness: Float32Array): EdgeDefects {
   const defects: EdgeDefects = { nonManifold: [], turned: [], strayCreases: [] };
   const buckets = bucketEdges(mesh);
+  pairHalfEdges(mesh, buckets, false, mesh.twin, defects);
+  tagCreases(mesh, buckets, creaseVertices, creaseSharpness, defects);
+  return defects;
+}
+
+/** The other half-edge of each edge with exactly two faces, whichever way they run along it; -1 elsewhere. */
+export function pairEdges(mesh: Topology): Int32Array {
+  const pair = new Int32Array(mesh.vertexOf.length).fill(-1);
+  pairHalfEdges(mesh, bucketEdges(mesh), true, pair, { nonManifold: [], turned: [], strayCreases: [] });
+  return pair;
+}
+
+/** Enters the two half-edges of each edge that has no more into `pair`; such as run the same way are defects unless `eitherWay`. */
+function pairHalfEdges({ vertexOf, vertices }: Topology, buckets: EdgeBuckets, eitherWay: boolean, pair: Int32Array, defects: EdgeDefects): void {
   const { halfEdges, higher, starts } = buckets;
-  const { twin, vertexOf } = mesh;
   // 1 at half-edges that were met from the first one of their edge.
   const met = new Uint8Array(vertexOf.length);
-  for (let v = 0; v < mesh.vertices; v++) {
+  for (let v = 0; v < vertices; v++) {
     const from = starts[v];
     const to = starts[v + 1];
     if (to - from >= SORTED_FROM) sortBucket(buckets, from, to);
@@ -80,15 +93,13 @@ export function matchEdges(mesh: Topology, creaseVertices: Uint32Array, creaseSh
       }
       if (count === 1) continue;
       if (count > 2) defects.nonManifold.push(first);
-      else if (vertexOf[first] === vertexOf[second]) defects.turned.push(first);
+      else if (!eitherWay && vertexOf[first] === vertexOf[second]) defects.turned.push(first);
       else {
-        twin[first] = second;
-        twin[second] = first;
+        pair[first] = second;
+        pair[second] = first;
       }
     }
   }
-  tagCreases(mesh, buckets, creaseVertices, creaseSharpness, defects);
-  return defects;
 }
 
 function endOfRun(higher: Int32Array, from: number, to: number): number {

@@ -18,7 +18,7 @@ const AS_CAGE: MeasureOptions = { scheme: 'polyhedral', boundary: 'edge-only', t
 export function facesToTurn(cage: Cage): Int32Array {
   const { mesh, defects } = buildTopology(cage);
   const turned = new Uint8Array(mesh.faces);
-  if (defects.turned.length > 0) for (const face of findTurnedFaces(mesh, cage).faces) turned[face] = 1;
+  if (defects.turned.length > 0) for (const face of findTurnedFaces(mesh).faces) turned[face] = 1;
   const oneWay = turned.includes(1) ? reversed(cage, turned) : cage;
   for (const face of inwardFaces(oneWay, oneWay === cage ? mesh : buildTopology(oneWay).mesh)) turned[face] ^= 1;
   return Int32Array.from(turned.keys()).filter((face) => turned[face] === 1);

@@ -1,18 +1,19 @@
 import type { Cage, FaceLabels } from '../cage';
 
-/** The cage with the given faces (its own numbers, ascending) and their corners; labels and lines go along. */
+/** The cage with the given faces (its own numbers, ascending) and their corners, no more than it had; labels and lines go along. */
 export function rebuildFaces(cage: Cage, faces: readonly number[], cornersOf: (face: number) => readonly number[]): Cage {
   const faceStarts = new Uint32Array(faces.length + 1);
-  const corners: number[] = [];
+  const corners = new Uint32Array(cage.faceVertices.length);
+  let count = 0;
   faces.forEach((face, i) => {
-    for (const vertex of cornersOf(face)) corners.push(vertex);
-    faceStarts[i + 1] = corners.length;
+    for (const vertex of cornersOf(face)) corners[count++] = vertex;
+    faceStarts[i + 1] = count;
   });
   const pick = (labels: FaceLabels | null): FaceLabels | null => labels && { names: labels.names, labels: Int32Array.from(faces, (face) => labels.labels[face]) };
   return {
     ...cage,
     faceStarts,
-    faceVertices: Uint32Array.from(corners),
+    faceVertices: corners.slice(0, count),
     groups: pick(cage.groups),
     objects: pick(cage.objects),
     materials: pick(cage.materials),
