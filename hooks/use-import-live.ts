@@ -1,70 +1,85 @@
 'use client';
 
-import { useEffect, useState } from 'react';
-import type { ImportDetail } from '@/lib/rules/import-answer';
-import { requestJson } from './request-json';
+import { useEffect, useEffectEvent, useState } from 'react';
+import type { ImportDetail, ImportFileAnswer, ImportSummary } from '@/lib/rules/import-answer';
+import { importLink } from './import-link';
+import { requestJson, RequestError } from './request-json';
 
 const POLL_MS = 3_000;
-/** Breaks in a row after which the stream is taken to be held up on the way, and the page asks instead. */
-const MOST_BREAKS = 3;
+/** The stream may break off and come back for so long before the page asks by itself. */
+const PATIENCE_MS = 6_000;
 
-const isOver = (detail: ImportDetail): boolean => detail.state === 'done' || detail.state === 'cancelled';
+/** Why what is shown may be old: no answer, no session any more, or no right to read it any more. */
+export type LiveTrouble = 'late' | 'signed_out' | 'gone' | null;
 
-/** What came, over what was known: an event has only the files that changed. */
-export function mergeImport(known: ImportDetail, came: ImportDetail): ImportDetail {
-  const files = new Map(known.files.map((file) => [file.name, file]));
-  for (const file of came.files) files.set(file.name, file);
-  return { ...came, files: [...files.values()].sort((a, b) => (a.name < b.name ? -1 : 1)) };
-}
+const isOver = ({ state }: Pick<ImportSummary, 'state'>): boolean => state === 'done' || state === 'cancelled';
 
-/** An import as it goes on: by server-sent events, or by asking every few seconds where those do not arrive. */
-export function useImportLive(
-  show: string,
-  initial: ImportDetail,
-): { detail: ImportDetail; restart: () => void; isLate: boolean } {
-  const [detail, setDetail] = useState(initial);
+/**
+ * An import as it goes on: by the one event stream that all tabs of the browser share, or by asking every few seconds where that does
+ * not arrive. Both go on from the mark of what is known.
+ * @param onFiles told the files that changed
+ */
+export function useImportLive(show: string, initial: ImportSummary, onFiles: (files: readonly ImportFileAnswer[]) => void): { summary: ImportSummary; trouble: LiveTrouble; restart: () => void } {
+  const [summary, setSummary] = useState(initial);
+  const [trouble, setTrouble] = useState<LiveTrouble>(null);
   const [run, setRun] = useState(0);
-  const [isLate, setIsLate] = useState(false);
-  const path = `/api/v1/shows/${encodeURIComponent(show)}/imports/${initial.id}`;
+  const { id, mark: firstMark } = initial;
   const idle = run === 0 && isOver(initial);
+  const onNews = useEffectEvent((news: ImportDetail) => {
+    setTrouble(null);
+    setSummary(news);
+    if (news.files.length > 0) onFiles(news.files);
+  });
 
   useEffect(() => {
     if (idle) return;
-    let breaks = 0;
-    let timer: ReturnType<typeof setTimeout> | null = null;
+    let mark = firstMark;
     let isGone = false;
-    const source = new EventSource(`${path}/events`);
+    let isPolling = false;
+    let timer: ReturnType<typeof setTimeout> | null = null;
+    const hear = (news: ImportDetail) => {
+      mark = news.mark;
+      onNews(news);
+    };
     const poll = async () => {
+      timer = null;
+      isPolling = true;
       try {
-        const came = await requestJson<ImportDetail>(path);
+        const news = await requestJson<ImportDetail>(`/api/v1/shows/${encodeURIComponent(show)}/imports/${id}?since=${mark}`);
         if (isGone) return;
-        setDetail(came);
-        setIsLate(false);
-        if (isOver(came)) return;
-      } catch {
-        if (!isGone) setIsLate(true);
+        hear(news);
+        if (isOver(news)) return;
+      } catch (error) {
+        if (isGone) return;
+        const status = error instanceof RequestError ? error.status : 0;
+        setTrouble(status === 401 ? 'signed_out' : status === 404 ? 'gone' : 'late');
+        if (status === 404) return;
       }
-      if (!isGone) timer = setTimeout(() => void poll(), POLL_MS);
+      if (!isGone && isPolling) timer = setTimeout(() => void poll(), POLL_MS);
     };
-    source.addEventListener('import', (event) => {
-      breaks = 0;
-      setIsLate(false);
-      const came = JSON.parse(String(event.data)) as ImportDetail;
-      setDetail((known) => mergeImport(known, came));
-      if (isOver(came)) source.close();
+    const stop = importLink().watch({ show, id, mark }, (news) => {
+      if (news.kind === 'import') return hear(news.news);
+      if (news.kind === 'gone') return setTrouble('gone');
+      if (timer !== null) clearTimeout(timer);
+      timer = null;
+      isPolling = false;
+      if (!news.isOpen) timer = setTimeout(() => void poll(), PATIENCE_MS);
     });
-    source.onerror = () => {
-      breaks++;
-      if (breaks < MOST_BREAKS && source.readyState !== EventSource.CLOSED) return;
-      source.close();
-      void poll();
-    };
     return () => {
       isGone = true;
-      source.close();
+      stop();
       if (timer !== null) clearTimeout(timer);
     };
-  }, [path, run, idle]);
+  }, [show, id, firstMark, run, idle]);
 
-  return { detail, restart: () => setRun((now) => now + 1), isLate };
+  // Somebody may have tried the failed files again from elsewhere.
+  const isEnded = isOver(summary);
+  useEffect(() => {
+    if (!isEnded) return;
+    const look = () => document.visibilityState === 'visible' && setRun((now) => now + 1);
+    document.addEventListener('visibilitychange', look);
+    return () => document.removeEventListener('visibilitychange', look);
+  }, [isEnded]);
+
+  return { summary, trouble, restart: () => setRun((now) => now + 1) };
 }

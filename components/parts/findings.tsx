@@ -12,6 +12,7 @@ export function Findings({ findings }: { findings: readonly RowFinding[] }) {
       {sorted.map((finding) => (
         <li
           key={`${finding.code} ${finding.message}`}
+          id={`finding-${finding.code}`}
           className={finding.severity === 'problem' ? 'flex gap-2 text-wrong' : 'flex gap-2 text-ink-2'}
         >
           <span className="mt-1 shrink-0">

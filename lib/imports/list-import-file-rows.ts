@@ -13,6 +13,8 @@ import { FILE_COLUMNS, FILE_TABLES, toFileAnswer, type FileRow } from './list-im
 
 interface PagedRow extends FileRow {
   sort_key: string;
+  planned_asset: string | null;
+  planned_version: number | null;
   warnings: number;
   findings: FileFinding[];
 }
@@ -33,12 +35,12 @@ export async function listImportFileRows(context: Context, input: ListImportFile
   return db.transaction(
     async (tx) => {
       const { rows } = await tx.execute<PagedRow>(sql`
-        select ${FILE_COLUMNS}, ${order.key} as sort_key, ${WARNINGS} as warnings, ${FINDINGS} as findings
+        select ${FILE_COLUMNS}, ${order.key} as sort_key, f.planned_asset, f.planned_version, ${WARNINGS} as warnings, ${FINDINGS} as findings
         from ${FILE_TABLES} where ${chosen} and ${at === null ? sql`true` : order.after(at)} order by ${order.orderBy} limit ${input.limit + 1}`);
       const page = rows.slice(0, input.limit);
       const [{ found }] = (await tx.execute<{ found: number }>(sql`select count(*)::int as found from ${FILE_TABLES} where ${chosen}`)).rows;
       return {
-        items: page.map((row) => ({ ...toFileAnswer(row), warnings: row.warnings, findings: row.findings })),
+        items: page.map((row) => ({ ...toFileAnswer(row), planned: row.planned_asset === null ? null : { asset: row.planned_asset, version: row.planned_version }, warnings: row.warnings, findings: row.findings })),
         counts: await countByFilter(tx, id),
         found,
         next_cursor: rows.length > input.limit ? encodeCursor(input.sort, page[page.length - 1]) : null,

@@ -8,14 +8,17 @@ import type { ListImportsInput } from '@/lib/rules/inputs/list-imports';
 import { StudioError } from '@/lib/rules/studio-error';
 import { getShowAccess } from '@/lib/shows/get-show-access';
 import { answerOf } from './describe-import';
+import { readMark } from './read-import-changes';
 
 const NONE: ImportCounts = { queued: 0, reading: 0, measuring: 0, done: 0, failed: 0, total: 0 };
 
-/** A show's imports, newest first, without their files. The cursor is a time of the database with its microseconds. */
+/** A show's imports, newest first, without their files, and the mark from which their news can be followed. The cursor is a time of the database with its microseconds. */
 export async function listImports(context: Context, input: ListImportsInput): Promise<ImportPage> {
   const { actor } = requireActor(context);
   const { show } = await getShowAccess(context.db, actor, input.show, 'readShow');
   if (input.cursor && !/^\d{4}-\d\d-\d\d[T ][\d:.]+(Z|[+-]\d\d(:?\d\d)?)$/.test(input.cursor)) throw new StudioError('bad_input', 'This cursor is not one of ours.', { field: 'cursor' });
+  // Before the list is read: what changes meanwhile is told again rather than missed.
+  const mark = await readMark(context.db);
   const found = await context.db
     .select({
       row: imports,
@@ -34,5 +37,5 @@ export async function listImports(context: Context, input: ListImportsInput): Pr
     const total = Object.values(counts ?? {}).reduce((sum, files) => sum + files, 0);
     return answerOf(row, { ...NONE, ...counts, total }, createdBy);
   });
-  return { items, next_cursor: found.length > input.limit ? page[page.length - 1].at.replace(' ', 'T') : null };
+  return { items, mark: mark.toString(), next_cursor: found.length > input.limit ? page[page.length - 1].at.replace(' ', 'T') : null };
 }

@@ -79,6 +79,8 @@ export interface FileFinding {
 
 /** A file on a page of an import's files: with the first problems and warnings of its measurement, and how many there are. */
 export interface ImportFileRow extends ImportFileAnswer {
+  /** Where its name puts it, until it has its asset: code, and number if it has one. */
+  planned: { asset: string; version: number | null } | null;
   warnings: number;
   findings: FileFinding[];
 }
@@ -127,15 +129,20 @@ export interface ImportAnswer {
   seconds_left?: number | null;
 }
 
-/** Answer of GET …/imports/{id}; an event of …/events has the files that changed alone. */
-export interface ImportDetail extends ImportAnswer {
-  /** How far this answer knows: sent as Last-Event-ID, …/events tells what came after it. */
+/** An import without its files, and how far this answer knows: sent as Last-Event-ID, …/events tells what came after it. */
+export interface ImportSummary extends ImportAnswer {
   mark: string;
+}
+
+/** Answer of GET …/imports/{id}; with `since`, and in an event of …/events, it has the files that changed since then alone. */
+export interface ImportDetail extends ImportSummary {
   files: ImportFileAnswer[];
 }
 
 export interface ImportPage {
   items: ImportAnswer[];
+  /** Sent as Last-Event-ID, an import's …/events tells what came after this answer. */
+  mark: string;
   next_cursor: string | null;
 }
 
@@ -160,5 +167,8 @@ export interface ImportPreparation {
   extensions: string[];
   max_file_bytes: number;
   max_files: number;
+  max_import_bytes: number;
+  /** What show and studio have room for. */
+  left_bytes: number;
   assets: KnownAsset[];
 }

@@ -31,7 +31,7 @@ export default async function ImportsPage({ params, searchParams }: Props) {
           The first import fixes the show’s unit, up axis and scheme.
         </EmptyState>
       ) : (
-        <ImportsList show={code} items={page.items} />
+        <ImportsList key={cursor?.toString()} show={code} items={page.items} mark={page.mark} />
       )}
       {page.next_cursor === null ? null : (
         <div className="px-4 py-4 md:px-6">

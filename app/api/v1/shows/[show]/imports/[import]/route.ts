@@ -1,5 +1,5 @@
 import { route } from '@/lib/endpoint';
 import { getImport } from '@/lib/imports/get-import';
-import { importRefInput } from '@/lib/rules/inputs/import-ref';
+import { getImportInput } from '@/lib/rules/inputs/get-import';
 
-export const GET = route(importRefInput, getImport);
+export const GET = route(getImportInput, getImport);
