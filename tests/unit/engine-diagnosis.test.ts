@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { Cage } from '@/lib/engine/cage';
 import { measureCage } from '@/lib/engine/measure';
 import type { Finding, MeasureOptions } from '@/lib/engine/measured';
+import { gridBox } from '../support/grid-box';
 import { cageOf, CATMULL_CLARK, facesOf, referenceCage } from '../support/engine-cages';
 
 const CUBE = [[0, 0, 0], [1, 0, 0], [0, 1, 0], [1, 1, 0], [0, 0, 1], [1, 0, 1], [0, 1, 1], [1, 1, 1]];
@@ -29,6 +30,14 @@ describe('diagnosis', () => {
     expect(found).toMatchObject({ severity: 'problem', count: 1 });
     expect(found.places.map((p) => p.face)).toEqual([5]);
     expect(measureCage(cage, CATMULL_CLARK).parts[0].components).toEqual([]);
+  });
+
+  it('does not take the vertices of a turned face for places where surfaces touch, whatever its place in the file', () => {
+    const box = gridBox([3, 3, 3], (i, j, k) => [i, j, k]);
+    for (let turned = 0; turned < box.faces.length; turned++) {
+      const cage = cageOf(box.positions, box.faces.map((face, i) => (i === turned ? [...face].reverse() : face)));
+      expect(findings(cage).map((found) => [found.code, found.count, found.places[0].face])).toEqual([['flipped_face', 1, turned]]);
+    }
   });
 
   it('names an edge with three faces', () => {

@@ -40,7 +40,7 @@ export function diagnoseStructure(cage: Cage, mesh: Topology, defects: EdgeDefec
     }
   }
   diagnoseFaces(cage, mesh, bad, findings, at, partName);
-  diagnoseVertices(cage, mesh, bad, joined, findings, at, partName);
+  diagnoseVertices(cage, mesh, bad, bodies.partOf, joined, findings, at, partName);
   for (const tag of defects.strayCreases) {
     const edge: [number, number] = [cage.creaseVertices[2 * tag], cage.creaseVertices[2 * tag + 1]];
     findings.add('crease_without_edge', 'warning', null, placeOf({ edge, position: positionOf(cage, edge[0]) }),
@@ -144,11 +144,12 @@ function reportDuplicates(mesh: Topology, faces: number[], bad: Uint8Array, find
   }
 }
 
-function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, joined: Int32Array, findings: FindingList, at: PlaceAt, partName: (face: number) => string): void {
+function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, partOf: Int32Array, joined: Int32Array, findings: FindingList, at: PlaceAt, partName: (face: number) => string): void {
   const { vertexOf } = mesh;
   const corners = new Int32Array(mesh.vertices);
   const visited = new Uint8Array(mesh.vertices);
   for (let h = 0; h < vertexOf.length; h++) corners[vertexOf[h]]++;
+  const told = partsToldOf(mesh, bad, partOf);
   const gone = new Set(joined);
   for (let h = 0; h < vertexOf.length; h++) {
     const v = vertexOf[h];
@@ -156,7 +157,7 @@ function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, joined: I
     visited[v] = 1;
     if (countFan(mesh, h, corners[v]) === corners[v]) continue;
     const face = mesh.faceOf[h];
-    if (bad[face] === 1) continue;
+    if (bad[face] === 1 || told?.[v] === partOf[face]) continue;
     bad[face] = 1;
     findings.add('non_manifold_vertex', 'problem', partName(face), at(face, { vertex: v }),
       (n) => `${counted(n, 'vertex joins', 'vertices join')} surfaces that touch in that point only; split ${n === 1 ? 'it' : 'them'} so that each surface has its own.`);
@@ -166,6 +167,14 @@ function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, joined: I
     findings.add('isolated_vertex', 'note', null, placeOf({ vertex: v, position: positionOf(cage, v) }),
       (n) => `${counted(n, 'vertex belongs', 'vertices belong')} to no face and ${n === 1 ? 'was' : 'were'} ignored; delete ${n === 1 ? 'it' : 'them'} if that was not meant.`);
   }
+}
+
+/** Per vertex the part of a face there that already stands in a problem, which breaks the turn about it and says enough; -1 where there is none, null without any. */
+function partsToldOf({ starts, vertexOf, vertices }: Topology, bad: Uint8Array, partOf: Int32Array): Int32Array | null {
+  if (!bad.includes(1)) return null;
+  const told = new Int32Array(vertices).fill(-1);
+  for (let face = 0; face < bad.length; face++) if (bad[face] === 1) for (let h = starts[face]; h < starts[face + 1]; h++) told[vertexOf[h]] = partOf[face];
+  return told;
 }
 
 /** Faces met by turning about the start of `first`, both ways from it. */
