@@ -1,60 +1,105 @@
-import { RequestError } from './request-json';
+import { partLength, type UploadAnswer } from '@/lib/rules/upload-parts';
+import type { FileHashes } from './hash-parts';
+import { patiently } from './patiently';
+import type { RequestLanes } from './request-lanes';
+import { requestJson, RequestError } from './request-json';
+import { sendBytes } from './send-bytes';
 
-interface Upload {
+/** A file's own address within its import, `…/files/<path>?asset=…`; the calls about its parts lie beside it. */
+export interface UploadAddress {
   url: string;
+  /** The import's address. */
+  base: string;
+  /** Name and what is said of the file, as a JSON call wants it. */
+  said: Record<string, string>;
+}
+
+export interface FileUpload {
+  address: UploadAddress;
   file: File;
+  hashes: FileHashes;
+  /** Bytes of a part that the hashes were made with. */
+  partBytes: number;
+  lanes: RequestLanes;
   onProgress: (sentBytes: number) => void;
+  onWaiting: (isWaiting: boolean) => void;
   signal: AbortSignal;
 }
 
-/** Beyond this the browser would hold too much at once to hash it before sending. */
-const HASH_BELOW_BYTES = 64 * 1024 * 1024;
+const AGAIN_MS = 1000;
 
-/** The file's SHA-256 in hex, where the browser can say it: on plain HTTP away from this machine it cannot. */
-async function hashOf(file: File): Promise<string | null> {
-  if (!globalThis.isSecureContext || file.size > HASH_BELOW_BYTES) return null;
-  const digest = await crypto.subtle.digest('SHA-256', await file.arrayBuffer());
-  return [...new Uint8Array(digest)].map((byte) => byte.toString(16).padStart(2, '0')).join('');
+/** What a file's address says. */
+export function uploadAddress(url: string): UploadAddress {
+  const at = url.indexOf('/files/');
+  const [path, query = ''] = url.slice(at + '/files/'.length).split('?');
+  const name = path.split('/').map(decodeURIComponent).join('/');
+  return { url, base: url.slice(0, at), said: { ...Object.fromEntries(new URLSearchParams(query)), name } };
 }
 
-function send({ url, file, onProgress, signal }: Upload, hash: string | null): Promise<void> {
-  return new Promise((resolve, reject) => {
-    const request = new XMLHttpRequest();
-    const abort = () => request.abort();
-    request.open('PUT', url);
-    request.setRequestHeader('content-type', 'application/octet-stream');
-    if (hash) request.setRequestHeader('x-content-sha256', hash);
-    request.upload.onprogress = (event) => onProgress(event.loaded);
-    request.onload = () => (request.status >= 200 && request.status < 300 ? resolve() : reject(refusal(request)));
-    request.onerror = () => reject(new RequestError(0, 'not_reached', 'The server was not reached.'));
-    request.onabort = () => reject(new DOMException('stopped', 'AbortError'));
-    request.onloadend = () => signal.removeEventListener('abort', abort);
-    signal.addEventListener('abort', abort);
-    request.send(file);
-  });
+/**
+ * Sends one file: a small one at once, a larger one in parts, those first that are not there yet. Goes on by itself after a lost connection.
+ * Errors: RequestError; AbortError when the signal ends it.
+ */
+export async function uploadFile(upload: FileUpload): Promise<void> {
+  if (upload.file.size > upload.partBytes) return sendInParts(upload);
+  const { address, file, hashes, lanes, signal, onProgress, onWaiting } = upload;
+  const act = () => sendBytes({ url: address.url, body: file, sha256: hashes.sha256, onProgress, signal });
+  await lanes.run(() => patiently(act, { signal, onWaiting }));
 }
 
-function refusal(request: XMLHttpRequest): RequestError {
-  try {
-    const problem = JSON.parse(request.responseText) as { code?: string; detail?: string };
-    return new RequestError(request.status, problem.code ?? 'internal', problem.detail ?? 'The server refused this.');
-  } catch {
-    return new RequestError(request.status, 'internal', 'The server refused this.');
+async function sendInParts(upload: FileUpload): Promise<void> {
+  for (let turn = 1; ; turn++) {
+    try {
+      return await sendPartsOnce(upload);
+    } catch (error) {
+      // It ran out or was ended elsewhere: announced again, it goes on from what is there.
+      if (!(error instanceof RequestError && error.status === 404) || turn === 3) throw error;
+    }
   }
 }
 
-/** Sends one file, trying again after passing faults. Errors: RequestError; AbortError when the signal ends it. */
-export async function uploadFile(upload: Upload): Promise<void> {
-  const hash = await hashOf(upload.file).catch(() => {
-    throw new RequestError(0, 'unreadable', 'The browser cannot read this file any more. Was it moved or changed?');
-  });
-  for (let turn = 1; ; turn++) {
-    try {
-      return await send(upload, hash);
-    } catch (error) {
-      const passes = error instanceof RequestError && (error.status === 0 || error.status >= 500);
-      if (!passes || turn === 3 || upload.signal.aborted) throw error;
-      await new Promise((resolve) => setTimeout(resolve, turn * 1000));
-    }
+async function sendPartsOnce(upload: FileUpload): Promise<void> {
+  const { address, file, hashes, partBytes, lanes, signal } = upload;
+  const ask = <Answer>(path: string, body: unknown): Promise<Answer> => patiently(() => requestJson<Answer>(address.base + path, { method: 'POST', body, signal }), upload);
+  const begun = await ask<UploadAnswer>('/uploads', { ...address.said, bytes: file.size, sha256: hashes.sha256, part_bytes: partBytes });
+  if (begun.state === 'stored') return;
+  if (begun.part_bytes !== partBytes) throw new RequestError(0, 'other_parts', 'This file was begun with parts of another size. Wait until it has expired, or send it by the API.');
+  const sent = new Map<number, number>(begun.parts.map((number) => [number, partLength(begun, number)]));
+  const tell = () => upload.onProgress([...sent.values()].reduce((sum, bytes) => sum + bytes, 0));
+  tell();
+  const missing = Array.from({ length: begun.part_count }, (_, index) => index + 1).filter((number) => !sent.has(number));
+  const failed = new AbortController();
+  const stop = () => failed.abort();
+  signal.addEventListener('abort', stop);
+  try {
+    const put = (number: number) => async () => {
+      const start = (number - 1) * partBytes;
+      const body = file.slice(start, start + partLength(begun, number));
+      const note = (bytes: number) => {
+        sent.set(number, bytes);
+        tell();
+      };
+      if (failed.signal.aborted) throw new DOMException('stopped', 'AbortError');
+      const url = `${address.base}/uploads/${begun.upload}/parts/${number}`;
+      await patiently(() => sendBytes({ url, body, sha256: hashes.parts[number - 1], onProgress: note, signal: failed.signal }), { signal: failed.signal, onWaiting: upload.onWaiting });
+      note(body.size);
+    };
+    let first: unknown = null;
+    await Promise.all(
+      missing.map((number) =>
+        lanes.run(put(number)).catch((error: unknown) => {
+          first ??= error;
+          failed.abort();
+        }),
+      ),
+    );
+    if (first !== null) throw first;
+  } finally {
+    signal.removeEventListener('abort', stop);
+  }
+  for (;;) {
+    const ended = await ask<UploadAnswer>(`/uploads/${begun.upload}/complete`, address.said);
+    if (ended.state === 'stored') return;
+    await new Promise((resolve) => setTimeout(resolve, AGAIN_MS));
   }
 }
