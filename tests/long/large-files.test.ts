@@ -5,6 +5,7 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { promisify } from 'node:util';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { expectedMeasureBytes } from '@/lib/jobs/measure-budget';
 import type { LargeMeasured } from '../support/measure-large';
 import { writeTorusObj } from '../support/write-torus-obj';
 
@@ -48,6 +49,7 @@ describe('large files', () => {
     expect(large.readBytes - large.startBytes).toBeLessThan(2.2 * cage + 100 * MB);
     expect(large.readBytes - large.startBytes).toBeLessThan(cage + bytes);
     expect((large.peakBytes - large.startBytes) / large.faces).toBeLessThan(1_000);
+    expect(large.peakBytes).toBeLessThan(expectedMeasureBytes({ name: path, byteSize: bytes, faces: large.faces }));
   }, MOST_MS);
 
   it('an asset of two million faces, some irregular, takes less than a kilobyte a face from file to values', async () => {
@@ -60,5 +62,7 @@ describe('large files', () => {
     // A cut quad moves the surface beside it by parts of θ², and one in a hundred is cut.
     expect(Math.abs(large.volume / torusVolume(n) - 1)).toBeLessThan(2e-7);
     expect((large.peakBytes - large.startBytes) / faces).toBeLessThan(1_000);
+    expect(large.peakBytes).toBeLessThan(expectedMeasureBytes({ name: path, byteSize: statSync(path).size, faces }));
+    expect(large.peakBytes).toBeLessThan(expectedMeasureBytes({ name: path, byteSize: statSync(path).size }));
   }, MOST_MS);
 });
