@@ -23,13 +23,20 @@ const LEAST_FILE_BYTES: Record<MeshExtension, number> = { obj: 34, ply: 19, stl:
 /** Bytes that a reader holds at once for each of the file's: the file, its text and what is unpacked. An OBJ is read as a stream. */
 const HELD_PER_BYTE: Record<MeshExtension, number> = { obj: 0, ply: 2, stl: 2, gltf: 4, glb: 2, usd: 4, usda: 4, usdc: 4, usdz: 4, zip: 12 };
 
+function formatOf(name: string): MeshExtension {
+  const extension = extensionOf(name);
+  return isMeshExtension(extension) ? extension : 'zip';
+}
+
+/** The most faces that a file of its size and format holds as programs write them, where the count is not known; a zip stands for what cannot be told. */
+export function mostFaces({ name, byteSize, faces = null }: MeasureSize): number {
+  return faces ?? Math.ceil(Math.min(MESH_LIMITS.faces, byteSize / LEAST_FILE_BYTES[formatOf(name)]));
+}
+
 /**
  * Bytes of memory that measuring a file takes at the peak, at most, in a thread of its own: what a queue sets aside before it begins. From the face count
- * where that is known, else from the most faces that a file of its size and format holds as programs write them.
+ * where that is known, else from `mostFaces`.
  */
-export function expectedMeasureBytes({ name, byteSize, faces = null }: MeasureSize): number {
-  const extension = extensionOf(name);
-  const format = isMeshExtension(extension) ? extension : 'zip';
-  const most = faces ?? Math.min(MESH_LIMITS.faces, byteSize / LEAST_FILE_BYTES[format]);
-  return Math.ceil(THREAD_BYTES + HELD_PER_BYTE[format] * byteSize + BYTES_PER_FACE * most);
+export function expectedMeasureBytes(size: MeasureSize): number {
+  return Math.ceil(THREAD_BYTES + HELD_PER_BYTE[formatOf(size.name)] * size.byteSize + BYTES_PER_FACE * mostFaces(size));
 }
