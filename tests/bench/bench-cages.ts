@@ -8,12 +8,12 @@ function cage(positions: Float64Array, faceStarts: Uint32Array, faceVertices: Ui
   };
 }
 
-/** How a torus of n × n quads is cut: not at all, one quad in a hundred or each of them in two, or each in two along diagonals that take turns. */
-export const CUTS = ['none', 'some', 'all', 'alternating'] as const;
+/** How a torus of n × n quads is cut: not at all, one quad in a thousand, in a hundred or each of them in two, or each in two along diagonals that take turns. */
+export const CUTS = ['none', 'few', 'some', 'all', 'alternating'] as const;
 export type Cut = (typeof CUTS)[number];
 
-/** Quads between those that `some` cuts, each way. */
-const SOME = 10;
+/** Every how manyth quad is cut, each way. */
+const SPACING: Readonly<Record<Cut, number>> = { none: Infinity, few: 32, some: 10, all: 1, alternating: 1 };
 
 /**
  * A torus of n × n quads (n even), every vertex regular to Catmull-Clark and Doo-Sabin until quads are cut in two. With `all` every vertex is regular to
@@ -21,6 +21,7 @@ const SOME = 10;
  */
 export function torus(n: number, cut: Cut): Cage {
   const positions = new Float64Array(3 * n * n);
+  const spacing = SPACING[cut];
   const starts = [0];
   const corners: number[] = [];
   const add = (...face: number[]): void => {
@@ -33,7 +34,7 @@ export function torus(n: number, cut: Cut): Cage {
       positions.set([(3 + Math.cos(b)) * Math.cos(a), (3 + Math.cos(b)) * Math.sin(a), Math.sin(b)], 3 * (i * n + j));
       const at = (x: number, y: number): number => (x % n) * n + (y % n);
       const [p, q, r, s] = [at(i, j), at(i + 1, j), at(i + 1, j + 1), at(i, j + 1)];
-      if (cut === 'none' || (cut === 'some' && (i % SOME > 0 || j % SOME > 0))) add(p, q, r, s);
+      if (cut === 'none' || i % spacing > 0 || j % spacing > 0) add(p, q, r, s);
       else if (cut === 'alternating' && (i + j) % 2 === 1) {
         add(p, q, s);
         add(q, r, s);

@@ -27,6 +27,7 @@ export interface RowAnswer {
   cpuMs: number;
   rounds: number;
   volume: number;
+  area: number | null;
   ownEstimate: number | null;
   /** Bytes a face that the process took at its peak beyond what it had before the cage was made. */
   bytesPerFace: number;
@@ -77,12 +78,13 @@ export async function runRow({ scheme, cage: spec, way }: RowTask): Promise<RowA
   await close?.();
   const peak = 1024 * process.resourceUsage().maxRSS;
   return {
-    faces, wallMs, cpuMs, rounds, volume: result.volume, ownEstimate: result.estimate, bytesPerFace: (peak - bytesBefore) / faces, peakMb: peak / 2 ** 20, hash: result.hash,
+    faces, wallMs, cpuMs, rounds, volume: result.volume, area: result.area, ownEstimate: result.estimate, bytesPerFace: (peak - bytesBefore) / faces, peakMb: peak / 2 ** 20, hash: result.hash,
   };
 }
 
 interface Outcome {
   volume: number;
+  area: number | null;
   estimate: number | null;
   hash: string;
 }
@@ -92,7 +94,7 @@ function workOn(cage: Cage, options: MeasureOptions, way: RowTask['way']): () =>
   if (typeof way === 'object') {
     return () => {
       const volume = plainVolume(cage, options, way.refinements);
-      return { volume, estimate: null, hash: hashOf([volume]) };
+      return { volume, area: null, estimate: null, hash: hashOf([volume]) };
     };
   }
   if (way !== 'file') return () => summary(measureCage(cage, options));
@@ -116,7 +118,8 @@ function summary(measured: MeasuredCage): Outcome {
   const components = measured.parts.flatMap((part) => part.components);
   const volume = components.reduce((sum, c) => sum + c.solid.volume, 0);
   const hash = hashOf(components.flatMap((c) => [c.solid.volume, ...c.solid.centroid, ...c.solid.centralSecond]));
-  return { volume, estimate: Math.max(...components.map((c) => c.errorEstimate)), hash };
+  const area = components.reduce((sum, c) => sum + c.surface.area, 0);
+  return { volume, area, estimate: Math.max(...components.map((c) => c.errorEstimate)), hash };
 }
 
 /** One helper beside this thread; answers how to send it home. */

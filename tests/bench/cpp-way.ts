@@ -15,6 +15,8 @@ export interface CppResult {
   isolation: number;
   cpuMs: number;
   volume: number;
+  /** 0 where it was not asked for. */
+  area: number;
   peakMb: number;
 }
 
@@ -22,7 +24,7 @@ export interface CppResult {
  * Patch quadrature in C++ (tests/bench/cpp), compiled on the spot. Null where the library or a compiler is not installed.
  * `close` removes what was made.
  */
-export function cppWay(): { measure(cage: Cage, volume: number): CppResult; close(): void } | null {
+export function cppWay(): { measure(cage: Cage, volume: number, withAreas: boolean): CppResult; close(): void } | null {
   if (!existsSync(HEADER)) return null;
   const folder = mkdtempSync(join(tmpdir(), 'patch-quadrature-'));
   const program = join(folder, 'patch-quadrature');
@@ -36,7 +38,7 @@ export function cppWay(): { measure(cage: Cage, volume: number): CppResult; clos
   if (compiled.status !== 0) throw new Error(`the comparison program does not compile: ${compiled.stderr}`);
   return {
     close,
-    measure(cage, volume) {
+    measure(cage, volume, withAreas) {
       const path = join(folder, 'cage.bin');
       const faces = cage.faceStarts.length - 1;
       const sizes = Int32Array.from({ length: faces }, (_, face) => cage.faceStarts[face + 1] - cage.faceStarts[face]);
@@ -44,10 +46,10 @@ export function cppWay(): { measure(cage: Cage, volume: number): CppResult; clos
       writeFileSync(path, Buffer.concat([
         bytes(Int32Array.of(cage.positions.length / 3, faces, cage.faceVertices.length)), bytes(cage.positions), bytes(sizes), bytes(Int32Array.from(cage.faceVertices)),
       ]));
-      const { status, stdout, stderr } = spawnSync(program, [path, String(volume), String(CPP_TOLERANCE)], { encoding: 'utf8' });
+      const { status, stdout, stderr } = spawnSync(program, [path, String(volume), String(CPP_TOLERANCE), withAreas ? 'areas' : 'solids'], { encoding: 'utf8' });
       if (status !== 0) throw new Error(`the comparison program failed: ${stderr}`);
-      const [isolation, cpuMs, found, peakKb] = stdout.trim().split(' ').map(Number);
-      return { isolation, cpuMs, volume: found, peakMb: peakKb / 1024 };
+      const [isolation, cpuMs, found, peakKb, area] = stdout.trim().split(' ').map(Number);
+      return { isolation, cpuMs, volume: found, area, peakMb: peakKb / 1024 };
     },
   };
 }

@@ -23,8 +23,9 @@ interface Row {
   rounds: number;
   /** By processor time; with two threads by the wall clock. */
   facesPerSecond: number;
-  /** |V − V exact| / |V| against the engine's own value. */
+  /** |V − V exact| / |V| against the engine's own value, and the same of the area where there is one. */
   volumeError: number;
+  areaError: number | null;
   ownEstimate: number | null;
   bytesPerFace: number;
   peakMb: number;
@@ -55,6 +56,7 @@ if (process.argv.includes('horns')) {
 const quick = process.argv.includes('--quick');
 const WAYS = { cage: 'cage to values', team: 'cage to values, two threads', file: 'file to values' };
 const CPP_WAY = 'C++ patches to 1e-9';
+const CPP_AREA_WAY = 'C++ patches to 1e-9, with areas';
 
 /** Quads each way and the plain way's refinements. */
 const SIZES: [label: string, quads: number, plain: number][] = quick ? [['1 k', 32, 4], ['100 k', 320, 1]] : [['1 k', 32, 4], ['10 k', 100, 2], ['100 k', 320, 1], ['1 M', 1000, 0]];
@@ -67,6 +69,7 @@ function seriesOf(scheme: Scheme): Series[] {
     const ways: Series['ways'] = label === '1 k' || label === '10 k' ? ['cage', 'file'] : ['cage', 'team', 'file'];
     series.push({ scheme, name: `regular ${label}`, cage: scheme === 'loop' ? { quads: triangles, cut: 'all' } : { quads, cut: 'none' }, plain, ways });
     if (label === '1 M') continue;
+    if (scheme === 'catmull-clark' && label === '100 k') series.push({ scheme, name: `one quad in 1000 cut, ${label}`, cage: { quads, cut: 'few' }, plain, ways: ['cage', 'file'] });
     if (scheme === 'catmull-clark') series.push({ scheme, name: `one quad in 100 cut, ${label}`, cage: { quads, cut: 'some' }, plain, ways: ['cage', 'file'] });
     if (!quick || label === '1 k') series.push({ scheme, name: `irregular ${label}`, cage: { quads: triangles, cut: scheme === 'loop' ? 'alternating' : 'all' }, plain, ways: ['cage'] });
   }
@@ -95,31 +98,35 @@ try {
   };
   for (const series of [spot, ...schemes.flatMap(seriesOf)]) {
     const { scheme, name, cage, plain, ways } = series;
-    const put = (way: string, answer: RowAnswer, exact: number): void => {
-      const { volume, ...rest } = answer;
-      const row: Row = { scheme, cage: name, way, ...rest, facesPerSecond: (1000 * answer.faces) / (way === WAYS.team ? answer.wallMs : answer.cpuMs), volumeError: Math.abs(volume / exact - 1) };
+    const put = (way: string, answer: RowAnswer): void => {
+      const { volume, area, ...rest } = answer;
+      const row: Row = { scheme, cage: name, way, ...rest, facesPerSecond: (1000 * answer.faces) / (way === WAYS.team ? answer.wallMs : answer.cpuMs), volumeError: Math.abs(volume / exact - 1), areaError: area === null ? null : Math.abs(area / exactArea - 1) };
       rows.push(row);
       console.log(lineOf(row));
     };
     let exact = NaN;
+    let exactArea = NaN;
     for (const way of ways) {
       const answer = ask({ scheme, cage, way });
-      if (Number.isNaN(exact)) exact = answer.volume;
-      put(WAYS[way], answer, exact);
+      if (Number.isNaN(exact)) [exact, exactArea] = [answer.volume, answer.area ?? NaN];
+      put(WAYS[way], answer);
     }
-    if (plain > 0) put(`refine ${plain}×, tetrahedra`, ask({ scheme, cage, way: { refinements: plain } }), exact);
+    if (plain > 0) put(`refine ${plain}×, tetrahedra`, ask({ scheme, cage, way: { refinements: plain } }));
     if (scheme !== 'catmull-clark' || name.endsWith('1 M')) continue;
-    const none = { scheme, cage: name, faces: rows[rows.length - 1].faces, cpuMs: NaN, wallMs: NaN, rounds: 0, facesPerSecond: NaN, volumeError: NaN, ownEstimate: null, bytesPerFace: NaN, peakMb: NaN, hash: '' };
-    if (cpp === null) rows.push({ ...none, way: `${CPP_WAY}: not installed` });
-    else {
-      // It computes solid moments alone: no area, no borders, no diagnosis, no moments of the cage.
-      const { isolation, cpuMs, volume, peakMb } = cpp.measure(makeCage(cage), exact);
-      rows.push({
-        ...none, way: `${CPP_WAY}, isolation ${isolation}`, cpuMs, wallMs: cpuMs, facesPerSecond: (1000 * none.faces) / cpuMs,
-        volumeError: Math.abs(volume / exact - 1), bytesPerFace: (peakMb * 2 ** 20) / none.faces, peakMb,
-      });
+    const none = { scheme, cage: name, faces: rows[rows.length - 1].faces, cpuMs: NaN, wallMs: NaN, rounds: 0, facesPerSecond: NaN, volumeError: NaN, areaError: null, ownEstimate: null, bytesPerFace: NaN, peakMb: NaN, hash: '' };
+    // It computes solid moments alone, or ten of the surface beside them: no borders, no diagnosis, no moments of the cage, no estimate.
+    for (const withAreas of [false, true]) {
+      const way = withAreas ? CPP_AREA_WAY : CPP_WAY;
+      if (cpp === null) rows.push({ ...none, way: `${way}: not installed` });
+      else {
+        const { isolation, cpuMs, volume, area, peakMb } = cpp.measure(makeCage(cage), exact, withAreas);
+        rows.push({
+          ...none, way: `${way}, isolation ${isolation}`, cpuMs, wallMs: cpuMs, facesPerSecond: (1000 * none.faces) / cpuMs, volumeError: Math.abs(volume / exact - 1),
+          areaError: withAreas ? Math.abs(area / exactArea - 1) : null, bytesPerFace: (peakMb * 2 ** 20) / none.faces, peakMb,
+        });
+      }
+      console.log(lineOf(rows[rows.length - 1]));
     }
-    console.log(lineOf(rows[rows.length - 1]));
   }
 } finally {
   cpp?.close();
@@ -132,7 +139,7 @@ function lineOf(row: Row): string {
 
 console.table(rows.map((row) => ({
   scheme: row.scheme, cage: row.cage, way: row.way, faces: row.faces, 'cpu ms': Number(row.cpuMs.toPrecision(4)), 'wall ms': Number(row.wallMs.toPrecision(4)), 'faces/s': Math.round(row.facesPerSecond),
-  'volume error': row.volumeError.toExponential(1), 'own estimate': row.ownEstimate?.toExponential(1) ?? '', 'peak MB': Math.round(row.peakMb),
+  'volume error': row.volumeError.toExponential(1), 'area error': row.areaError?.toExponential(1) ?? '', 'own estimate': row.ownEstimate?.toExponential(1) ?? '', 'peak MB': Math.round(row.peakMb),
   'peak B/face': Math.round(row.bytesPerFace), hash: row.hash,
 })));
 console.log(`node ${process.version}, ${cpus()[0].model}, ${cpus().length} cores, load ${loadavg()[0].toFixed(1)}`);

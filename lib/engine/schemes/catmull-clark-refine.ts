@@ -1,5 +1,6 @@
 import { nextHalfEdge } from '../mesh/topology';
 import { edgePoint, facePoints, vertexPoint, VertexStars } from './catmull-clark-masks';
+import { cutOut } from './cut-out';
 import type { LevelMesh } from './level-mesh';
 import type { RefinementRules } from './refinement-rules';
 import { childEdgeSharpness, countSemiSharp, decayed } from './sharpness-decay';
@@ -9,8 +10,8 @@ import { wantedVertices } from './wanted-vertices';
  * Refines the live faces and what shares a vertex with them. Of the neighbours only the child quads at the live faces' vertices are kept,
  * so every vertex of a live child has its whole ring. Children of corner c of a face are (vertex, edge, face, edge before), counter-clockwise.
  */
-export function refineAround(mesh: LevelMesh, rules: RefinementRules): LevelMesh {
-  const wanted = wantedVertices(mesh, rules);
+export function refineAround(whole: LevelMesh, rules: RefinementRules): LevelMesh {
+  const { mesh, wanted } = cutOut(whole, wantedVertices(whole, rules));
   // The corners at wanted vertices: each becomes a child quad.
   const childOf = new Int32Array(mesh.vertexOf.length).fill(-1);
   const corners = new Int32Array(mesh.vertexOf.length);

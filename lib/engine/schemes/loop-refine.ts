@@ -1,5 +1,6 @@
 import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
 import { VertexStars } from './catmull-clark-masks';
+import { cutOut } from './cut-out';
 import type { LevelMesh } from './level-mesh';
 import { loopWeight } from './loop-fan';
 import type { RefinementRules } from './refinement-rules';
@@ -11,8 +12,8 @@ import { wantedVertices } from './wanted-vertices';
  * Refines the live triangles and what shares a vertex with them by Loop's rule. A parent with corners v0, v1, v2 and edge points m0, m1, m2 has the corner
  * children (v_i, m_i, m_{i−1}) and the middle one (m0, m1, m2); of neighbours only the children at the live triangles' vertices and edges are kept.
  */
-export function refineTriangles(mesh: LevelMesh, rules: RefinementRules): LevelMesh {
-  const wanted = wantedVertices(mesh, rules);
+export function refineTriangles(whole: LevelMesh, rules: RefinementRules): LevelMesh {
+  const { mesh, wanted } = cutOut(whole, wantedVertices(whole, rules));
   const cornerChild = new Int32Array(mesh.vertexOf.length).fill(-1);
   const middleChild = new Int32Array(mesh.faces).fill(-1);
   const corners = new Int32Array(mesh.vertexOf.length);

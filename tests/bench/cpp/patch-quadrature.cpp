@@ -1,7 +1,7 @@
 // The other way to measure a Catmull-Clark limit surface: a feature-adaptive patch table with B-spline end caps, 5 x 5 Gauss nodes a patch,
-// ten moments about the origin. Isolation grows until the volume is within the tolerance of the value given.
-// Usage: patch-quadrature <cage.bin> <volume> <tolerance>. The cage: vertices, faces, corners (int32 each), positions (float64), face sizes and corners (int32).
-// Prints one line: isolation, processor milliseconds (topology, refinement, patches and quadrature of that isolation), volume, peak memory in kB.
+// ten moments of the solid about the origin, ten of the surface too if asked. Isolation grows until the volume is within the tolerance of the value given.
+// Usage: patch-quadrature <cage.bin> <volume> <tolerance> solids|areas. The cage: vertices, faces, corners (int32 each), positions (float64), face sizes and corners (int32).
+// Prints one line: isolation, processor milliseconds (topology, refinement, patches and quadrature of that isolation), volume, peak memory in kB, area.
 #include <cmath>
 #include <cstdint>
 #include <cstdio>
@@ -109,12 +109,12 @@ struct alignas(64) Weights {
 
 Weights const WEIGHTS;
 
-// Sums per node, added up over the patches: the ten of them are made of these at the end.
+// Sums per node, added up over the patches: ten of the solid and ten of the surface are made of these at the end.
 struct alignas(64) Sums {
-  double at[10][ALL];
+  double at[20][ALL];
 };
 
-void addPatch(Basis const &basis, double const net[3][16], Sums &sums) {
+template <bool AREAS> void addPatch(Basis const &basis, double const net[3][16], Sums &sums) {
   Nodes nodes;
   for (int axis = 0; axis < 3; axis++) {
     double x[ALL] = {0}, s[ALL] = {0}, t[ALL] = {0};
@@ -148,18 +148,35 @@ void addPatch(Basis const &basis, double const net[3][16], Sums &sums) {
     sums.at[8][n] += dx * x[2][n];
     sums.at[9][n] += dy * x[2][n];
   }
-}
-
-// The ten moments; all of them are made, so that no compiler leaves out what is not printed.
-void finish(Sums const &sums, double moments[10]) {
-  for (int i = 0; i < 10; i++) {
-    moments[i] = 0;
-    for (int n = 0; n < ALL; n++) moments[i] += sums.at[i][n];
-    moments[i] /= i == 0 ? 3 : i < 4 ? 4 : 5;
+  if constexpr (AREAS) {
+    for (int n = 0; n < ALL; n++) {
+      double const nx = s[1][n] * t[2][n] - s[2][n] * t[1][n], ny = s[2][n] * t[0][n] - s[0][n] * t[2][n], nz = s[0][n] * t[1][n] - s[1][n] * t[0][n];
+      double const a = WEIGHTS.at[n] * std::sqrt(nx * nx + ny * ny + nz * nz);
+      double const ax = a * x[0][n], ay = a * x[1][n], az = a * x[2][n];
+      sums.at[10][n] += a;
+      sums.at[11][n] += ax;
+      sums.at[12][n] += ay;
+      sums.at[13][n] += az;
+      sums.at[14][n] += ax * x[0][n];
+      sums.at[15][n] += ay * x[1][n];
+      sums.at[16][n] += az * x[2][n];
+      sums.at[17][n] += ax * x[1][n];
+      sums.at[18][n] += ax * x[2][n];
+      sums.at[19][n] += ay * x[2][n];
+    }
   }
 }
 
-void measure(Cage const &cage, int isolation, double moments[10]) {
+// The moments; all of them are made, so that no compiler leaves out what is not printed.
+void finish(Sums const &sums, double moments[20]) {
+  for (int i = 0; i < 20; i++) {
+    moments[i] = 0;
+    for (int n = 0; n < ALL; n++) moments[i] += sums.at[i][n];
+    moments[i] /= i == 0 ? 3 : i < 4 ? 4 : i < 10 ? 5 : 1;
+  }
+}
+
+template <bool AREAS> void measure(Cage const &cage, int isolation, double moments[20]) {
   Far::TopologyDescriptor descriptor;
   descriptor.numVertices = static_cast<int>(cage.positions.size() / 3);
   descriptor.numFaces = static_cast<int>(cage.sizes.size());
@@ -206,7 +223,7 @@ void measure(Cage const &cage, int isolation, double moments[10]) {
       }
       double net[3][16];
       for (int k = 0; k < 16; k++) for (int i = 0; i < 3; i++) net[i][k] = points[vertices[k]].v[i];
-      addPatch(found->second, net, sums);
+      addPatch<AREAS>(found->second, net, sums);
     }
   }
   finish(sums, moments);
@@ -215,19 +232,21 @@ void measure(Cage const &cage, int isolation, double moments[10]) {
 }
 
 int main(int count, char **arguments) {
-  if (count != 4) {
-    std::fprintf(stderr, "usage: patch-quadrature <cage.bin> <volume> <tolerance>\n");
+  if (count != 5) {
+    std::fprintf(stderr, "usage: patch-quadrature <cage.bin> <volume> <tolerance> solids|areas\n");
     return 2;
   }
   Cage const cage = readCage(arguments[1]);
   double const wanted = std::atof(arguments[2]), tolerance = std::atof(arguments[3]);
+  bool const areas = std::string(arguments[4]) == "areas";
   for (int isolation = 1; isolation <= MOST_ISOLATION; isolation++) {
     // The best of some: the first one pays for fresh memory.
-    double best = INFINITY, moments[10];
+    double best = INFINITY, moments[20];
     double volume = 0;
     for (int round = 0; round < ROUNDS; round++) {
       std::clock_t const start = std::clock();
-      measure(cage, isolation, moments);
+      if (areas) measure<true>(cage, isolation, moments);
+      else measure<false>(cage, isolation, moments);
       best = std::fmin(best, 1000.0 * double(std::clock() - start) / CLOCKS_PER_SEC);
       volume = moments[0];
       if (std::fabs(volume / wanted - 1) > tolerance && isolation < MOST_ISOLATION) break;
@@ -235,7 +254,7 @@ int main(int count, char **arguments) {
     if (std::fabs(volume / wanted - 1) > tolerance && isolation < MOST_ISOLATION) continue;
     rusage usage;
     getrusage(RUSAGE_SELF, &usage);
-    std::printf("%d %.3f %.17g %ld\n", isolation, best, volume, usage.ru_maxrss);
+    std::printf("%d %.3f %.17g %ld %.17g\n", isolation, best, volume, usage.ru_maxrss, moments[10]);
     return 0;
   }
 }
