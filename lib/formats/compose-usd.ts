@@ -53,7 +53,7 @@ async function follow(prim: UsdPrim, asset: string, path: string, { layer, file,
 function besideOf(file: string, asset: string): string {
   const parts = file.split('/').slice(0, -1);
   for (const part of asset.split('/')) {
-    if (part === '..') parts.pop();
+    if (part === '..' && parts.length > 0 && parts.at(-1) !== '..') parts.pop();
     else if (part !== '.' && part !== '') parts.push(part);
   }
   return parts.join('/');

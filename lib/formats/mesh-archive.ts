@@ -1,10 +1,12 @@
 import type { Cage, FaceLabels } from '../engine/cage';
+import { archiveContent, isFileOfArchive } from './archive-assets';
 import { oneLabel } from './bare-cage';
 import type { Beside } from './beside';
 import { distinctNames } from './distinct-names';
-import { extensionOf, isMeshExtension } from './mesh-extensions';
+import { extensionOf } from './mesh-extensions';
 import { mergeCages } from './merge-cages';
 import { MeshError } from './mesh-error';
+import { pathFrom } from './names-beside';
 import { openArchive, type Archive } from './open-archive';
 import { readMeshBytes } from './read-mesh-bytes';
 
@@ -14,15 +16,15 @@ const MOST_MESHES = 1_000;
 
 /**
  * Reads the meshes of a ZIP as one cage: each file is an object, or keeps its objects under its own name where there are several files. Files beside a mesh are found
- * by it: a glTF's buffers, an OBJ's weights. Of a `.usdz` the first layer is read, which is the one that counts by its standard. Archives in archives are refused.
+ * by it, and are no meshes of their own then: a glTF's buffers, an OBJ's weights, a layer's layers. Of a `.usdz` the first layer is read, which is the one that counts by its standard. Archives in archives are refused.
  * Errors: MeshError that begins with the entry's name.
  */
 export async function readMeshArchive(bytes: Uint8Array, name: string): Promise<Cage> {
   const archive = await openArchive(bytes);
-  const files = archive.names.filter((entry) => !/(^|\/)(__MACOSX\/|\.)/.test(entry));
+  const files = archive.names.filter(isFileOfArchive);
   const nested = files.find((entry) => ARCHIVES.has(extensionOf(entry)));
   if (nested !== undefined) throw new MeshError({ code: 'nested_archive', found: nested, detail: `${nested.slice(0, 200)}: expected a mesh file, found an archive in the archive` });
-  const meshes = extensionOf(name) === 'usdz' ? files.filter((entry) => USD.has(extensionOf(entry))).slice(0, 1) : files.filter((entry) => isMeshExtension(extensionOf(entry))).sort();
+  const meshes = extensionOf(name) === 'usdz' ? files.filter((entry) => USD.has(extensionOf(entry))).slice(0, 1) : (await archiveContent(archive)).meshes;
   if (meshes.length === 0) throw new MeshError({ code: 'no_meshes', expected: 'a mesh file', detail: `expected at least one mesh file in the archive, found none among ${files.length} files` });
   if (meshes.length > MOST_MESHES) throw new MeshError({ code: 'too_many_entries', expected: `at most ${MOST_MESHES} mesh files`, found: String(meshes.length), detail: `expected at most ${MOST_MESHES} mesh files in the archive, found ${meshes.length}` });
   const cages: Cage[] = [];
@@ -34,16 +36,10 @@ export async function readMeshArchive(bytes: Uint8Array, name: string): Promise<
 }
 
 async function readEntry(archive: Archive, mesh: string): Promise<Cage> {
-  const folder = mesh.slice(0, mesh.lastIndexOf('/') + 1);
   const held = new Map<string, Promise<Uint8Array>>();
   const beside: Beside = async (path) => {
-    const parts: string[] = [];
-    for (const part of `${folder}${path}`.split('/')) {
-      if (part === '..') parts.pop();
-      else if (part !== '.' && part !== '') parts.push(part);
-    }
-    const entry = parts.join('/');
-    if (!archive.names.includes(entry)) return null;
+    const entry = pathFrom(mesh, path);
+    if (entry === null || !archive.names.includes(entry)) return null;
     if (!held.has(entry)) held.set(entry, archive.read(entry));
     return held.get(entry)!;
   };

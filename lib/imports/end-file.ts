@@ -3,11 +3,13 @@ import type { Transaction } from '@/db/client';
 import { importFiles } from '@/db/schema/import-files';
 import { imports } from '@/db/schema/imports';
 import { sendJobs } from '@/lib/jobs/send-jobs';
-import type { ImportFileError } from '@/lib/rules/import-answer';
+import type { ImportFileError, Remark } from '@/lib/rules/import-answer';
 import type { ImportFile } from './lease';
 import { notifyImport } from './notify-import';
 
 export type FileEnd =
+  // An archive that became files of its own, or a file that is read with another: neither makes a version.
+  | { state: 'done'; unpackedInto: number | null; remark: Remark }
   | { state: 'done'; assetId: string; versionId: string; parts: number; problems: number; remark: string | null }
   | { state: 'failed'; error: ImportFileError };
 
@@ -23,10 +25,8 @@ export async function lockHeldFile(tx: Transaction, fileId: string, holder: stri
 
 /** Ends a locked file, and with the last one its import, in the transaction of what the file brought. */
 export async function endFile(tx: Transaction, file: ImportFile, end: FileEnd): Promise<void> {
-  const fields =
-    end.state === 'done'
-      ? { assetId: end.assetId, versionId: end.versionId, parts: end.parts, problems: end.problems, remark: end.remark }
-      : { errorCode: end.error.code, errorMessage: end.error.message, errorLine: end.error.line, errorColumn: end.error.column };
+  const { state: _state, ...brought } = end;
+  const fields = 'error' in brought ? { errorCode: brought.error.code, errorMessage: brought.error.message, errorLine: brought.error.line, errorColumn: brought.error.column, errorExcerpt: brought.error.excerpt ?? null } : brought;
   await tx.update(importFiles).set({ state: end.state, ...fields, endedAt: sql`now()`, leaseBy: null, leaseUntil: null, worker: null }).where(eq(importFiles.id, file.id));
   await endImportWhenOver(tx, file.importId);
   await notifyImport(tx, file.importId);

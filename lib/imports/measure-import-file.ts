@@ -2,6 +2,7 @@ import { randomUUID } from 'node:crypto';
 import type { Database, Transaction } from '@/db/client';
 import type { Actor } from '@/lib/context';
 import type { MeasuredCage, MeasureOptions } from '@/lib/engine/measured';
+import { MeshError } from '@/lib/formats/mesh-error';
 import { recordEvent } from '@/lib/history/record-event';
 import type { EnginePool } from '@/lib/jobs/engine-pool';
 import { log } from '@/lib/log';
@@ -13,7 +14,10 @@ import { findReusableRecord } from './find-reusable-record';
 import type { Placing, StatedSpace } from './file-space';
 import { summariseRecord, writeGeometryRecord, type FileKey } from './geometry-record';
 import type { ImportRow } from './get-import-row';
+import { besideHash, type BesideBlob } from './beside-blobs';
+import { findBeside } from './find-beside';
 import { markMeasuring, startFile, type ImportFile } from './lease';
+import { openImportFile } from './open-import-file';
 import { showSpace } from './show-space';
 import { unitRemarks } from './unit-remarks';
 import { writeVersion } from './write-version';
@@ -40,18 +44,29 @@ export async function measureImportFile(work: FileWork, fileId: string): Promise
   return file !== null;
 }
 
-async function measureStarted(work: FileWork, file: ImportFile): Promise<void> {
+async function measureStarted(work: FileWork, started: ImportFile): Promise<void> {
   const { db, holder, importRow } = work;
+  let file: ImportFile;
+  let beside: BesideBlob[];
+  try {
+    const opened = await openImportFile(work, started);
+    if (opened === null) return;
+    file = opened;
+    beside = await findBeside(db, file);
+  } catch (error) {
+    if (!(error instanceof MeshError)) throw error;
+    return failFile(work, started.id, errorOf(started.name, { ...error, message: error.detail }));
+  }
   const fileId = file.id;
   const plan = { ...file.plan!, name: file.name };
   if (plan.asset === null) return failFile(work, fileId, { code: 'name_not_matched', message: 'The name does not match the show’s pattern. Give an asset, or change the pattern.', line: null, column: null });
   const { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces } = importRow;
-  const key = { sha256: file.sha256, options: { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces } satisfies MeasureOptions };
+  const key = { sha256: file.sha256, options: { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces } satisfies MeasureOptions, besideSha256: besideHash(file.name, beside) };
   const space = await showSpace(db, importRow.showId, importRow.otherSpace);
   const known = await findReusableRecord(db, key, { name: file.name, showId: importRow.showId, space });
   let measured: Measured | null = null;
   if (known === null) {
-    const outcome = await work.engine.measure({ name: file.name, ...key, space }, () => void markMeasuring(db, fileId, holder).catch(() => undefined), work.lost);
+    const outcome = await work.engine.measure({ name: file.name, sha256: key.sha256, options: key.options, space, beside }, () => void markMeasuring(db, fileId, holder).catch(() => undefined), work.lost);
     if (!outcome.ok) return failFile(work, fileId, errorOf(file.name, outcome));
     measured = outcome;
   }
@@ -102,9 +117,9 @@ async function failFile(work: FileWork, fileId: string, error: ImportFileError):
   });
 }
 
-function errorOf(name: string, outcome: { code: string; message: string; line: number | null; column: number | null }): ImportFileError {
-  const { code, line, column } = outcome;
-  if (code !== 'measuring_failed') return { code, message: sentence(outcome.message), line, column };
+function errorOf(name: string, outcome: Required<ImportFileError>): ImportFileError {
+  const { code, line, column, excerpt } = outcome;
+  if (code !== 'measuring_failed') return { code, message: sentence(outcome.message), line, column, excerpt };
   const reference = randomUUID();
   log.error({ reference, file: name, fault: outcome.message }, 'the engine failed on a file');
   return { code, message: `Measuring this file failed on our side. Reference ${reference}.`, line, column };

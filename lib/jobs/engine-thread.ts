@@ -8,7 +8,8 @@ import { askedOtherwise } from '@/lib/imports/asked-otherwise';
 import { besideOfBlobs, type BesideBlob } from '@/lib/imports/beside-blobs';
 import { placeOrRefuse, type Placing, type ShowSpace, type StatedSpace } from '@/lib/imports/file-space';
 import { placeCage, placingNotes } from '@/lib/imports/place-cage';
-import { readBlob } from '@/lib/storage/read-blob';
+import { openBlob } from '@/lib/storage/open-blob';
+import { isTransientStorageFault } from '@/lib/storage/storage-fault';
 import { LARGE_CAGE_FACES, withPatchHelpers } from './with-patch-helpers';
 
 export interface MeasureTask {
@@ -30,10 +31,13 @@ export type MeasureOutcome =
   | { ok: true; cage: MeasuredCage; stated: StatedSpace; placing: Placing }
   | { ok: false; code: string; message: string; line: number | null; column: number | null; excerpt: string | null };
 
-/** Reads and measures one file. Throws only where storage fails, which may pass. */
+/** Reads and measures one file, an OBJ as its bytes come from storage. Throws only where storage fails, which may pass. */
 export default async function measureFile(task: MeasureTask): Promise<MeasureOutcome> {
+  let storageFailed = false;
   try {
-    const cage = await readMesh(task.name, await readBlob(task.sha256), besideOfBlobs(task.beside));
+    const stored = await openBlob(task.sha256);
+    stored.once('error', () => (storageFailed = true));
+    const cage = await readMesh(task.name, stored, besideOfBlobs(task.name, task.beside));
     const stated = { metresPerUnit: cage.metresPerUnit, upAxis: cage.upAxis };
     const placing = placeOrRefuse(stated, task.space);
     placeCage(cage, placing);
@@ -51,7 +55,7 @@ export default async function measureFile(task: MeasureTask): Promise<MeasureOut
     return { ok: true, cage: { ...measured, findings: [...measured.findings, ...notes] }, stated, placing };
   } catch (error) {
     if (error instanceof MeshError) return { ok: false, code: error.code, message: error.detail, line: error.line, column: error.column, excerpt: error.excerpt };
-    if (error instanceof Error && 'syscall' in error) throw error;
+    if (storageFailed || (error instanceof Error && 'syscall' in error) || isTransientStorageFault(error)) throw error;
     return { ok: false, code: 'measuring_failed', message: error instanceof Error ? error.message : 'unknown fault', line: null, column: null, excerpt: null };
   } finally {
     task.port?.close();
