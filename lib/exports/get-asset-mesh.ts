@@ -5,6 +5,7 @@ import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
 import { fileStream } from '@/lib/http/file-stream';
 import { matchesEtag } from '@/lib/http/matches-etag';
+import { findBeside } from '@/lib/imports/find-beside';
 import { getCurrentAsset } from '@/lib/parts/get-current-asset';
 import type { AssetMeshInput } from '@/lib/rules/inputs/part-ref';
 import { StudioError } from '@/lib/rules/studio-error';
@@ -28,13 +29,14 @@ export async function getAssetMesh(context: Context, input: AssetMeshInput, requ
   const { db, actor } = requireActor(context);
   const { show } = await getShowAccess(db, actor, input.show, 'readShow');
   const { asset, version, record } = await getCurrentAsset(db, show.id, input.asset, input.version);
-  const [file] = version.importFileId ? await db.select({ name: importFiles.name }).from(importFiles).where(eq(importFiles.id, version.importFileId)) : [];
+  const [file] = version.importFileId ? await db.select({ importId: importFiles.importId, name: importFiles.name, byteSize: importFiles.byteSize }).from(importFiles).where(eq(importFiles.id, version.importFileId)) : [];
   if (!file) throw new StudioError('not_found', `The cage of ${asset.code} ${version.label} is not in storage.`);
   const { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces, contentSha256: sha256, unitScale, turn } = record;
   const task = {
     name: file.name,
     sha256,
     options: { scheme, boundary, triangles, creasing, partsBy, weld, turnFaces },
+    beside: record.besideSha256 === '' ? [] : await findBeside(db, { ...file, sha256 }),
     placing: { unitScale, turn },
     level: displayLevel(record.faces),
     metresPerUnit: METRES_PER[show.linearUnit] * asset.scale,

@@ -4,6 +4,7 @@ import { displayMesh } from '@/lib/engine/display';
 import type { MeasureOptions } from '@/lib/engine/measured';
 import { assetGlb } from '@/lib/exports/asset-glb';
 import { readMesh } from '@/lib/formats/read-mesh';
+import { besideOfBlobs, type BesideBlob } from '@/lib/imports/beside-blobs';
 import type { Placing } from '@/lib/imports/file-space';
 import { placeCage } from '@/lib/imports/place-cage';
 import { readBlob } from '@/lib/storage/read-blob';
@@ -13,6 +14,8 @@ export interface MeshTask {
   name: string;
   sha256: string;
   options: MeasureOptions;
+  /** Files that it is read with. */
+  beside: BesideBlob[];
   /** What was done to the cage before it was measured. */
   placing: Placing;
   /** Refinements of the limit surface. */
@@ -25,7 +28,7 @@ export interface MeshTask {
 
 /** Makes the display mesh of a stored cage as a GLB file; answers hash and size of its bytes. */
 export default async function makeMesh(task: MeshTask): Promise<{ sha256: string; byteSize: number }> {
-  const cage = await readMesh(task.name, await readBlob(task.sha256));
+  const cage = await readMesh(task.name, await readBlob(task.sha256), besideOfBlobs(task.name, task.beside));
   placeCage(cage, task.placing);
   const mesh = displayMesh(cage, task.options, task.level);
   const bytes = await assetGlb(cage, mesh, task.options.partsBy, task.metresPerUnit);
