@@ -1,25 +1,23 @@
 'use client';
 
-import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
+import { useCallback, useDeferredValue, useEffect, useMemo, useRef, useState } from 'react';
 import type { ImportPreparation } from '@/lib/rules/import-answer';
-import { previewImport, type PreviewRow } from '@/lib/rules/import-preview';
+import { previewImport, worthHashing, type PreviewRow } from '@/lib/rules/import-preview';
 import type { BoundaryWord, PartitionWord, SchemeWord } from '@/lib/rules/measure-words';
-import type { Category } from '@/lib/rules/states';
+import { checkNamePattern } from '@/lib/rules/name-pattern';
+import { joinDropped, NOTHING_SAID, readBeside, whyStaying, type DroppedFile, type Said } from './desk-files';
 import { requestJson, RequestError } from './request-json';
+import { useContentHashes } from './use-content-hashes';
 import { useImportUploads, type Upload } from './use-import-uploads';
 
-export interface DeskFile {
-  path: string;
-  file: File;
-  /** What the person said in place of the name; null leaves it to the name. */
-  asset: string | null;
-  version: number | null;
-  category: Category | null;
-}
-
-export interface DeskRow {
-  desk: DeskFile;
-  preview: PreviewRow;
+export interface DeskRow extends DroppedFile {
+  said: Said;
+  /** Null for a file that stays here or is read beside another. */
+  preview: PreviewRow | null;
+  /** Why it stays here. */
+  stays: string | null;
+  /** The mesh that reads it, where it is no asset of its own. */
+  beside: string | null;
   upload: Upload | null;
 }
 
@@ -32,59 +30,58 @@ export interface DeskOptions {
   turnFaces: boolean;
 }
 
-/** What was dropped and stays here, with the reason. */
-export interface LeftOut {
-  otherKinds: ReadonlyMap<string, number>;
-  tooLarge: readonly string[];
-  tooMany: number;
-}
-
 export type DeskPhase = 'choosing' | 'sending' | 'stopped' | 'submitting';
-
-const NONE: LeftOut = { otherKinds: new Map(), tooLarge: [], tooMany: 0 };
-
-/** The path of a dropped file inside what was dropped. */
-function pathOf(file: File): string {
-  const given = 'path' in file && typeof file.path === 'string' ? file.path : '';
-  return (given || file.webkitRelativePath || file.name).replace(/^(\.?\/)+/, '').normalize('NFC');
-}
-
-const extensionOf = (path: string): string => /\.([^./]+)$/.exec(path)?.[1].toLowerCase() ?? '';
-
-/** What was dropped, over what was there: files that can go up, and why the others cannot. */
-function sortOut(dropped: readonly File[], files: readonly DeskFile[], leftOut: LeftOut, limits: ImportPreparation): { files: DeskFile[]; leftOut: LeftOut } {
-  const otherKinds = new Map(leftOut.otherKinds);
-  const tooLarge = new Set(leftOut.tooLarge);
-  const kept = new Map(files.map((file) => [file.path, file]));
-  let { tooMany } = leftOut;
-  for (const file of dropped) {
-    const path = pathOf(file);
-    const kind = extensionOf(path);
-    if (!limits.extensions.includes(kind)) otherKinds.set(kind, (otherKinds.get(kind) ?? 0) + 1);
-    else if (file.size > limits.max_file_bytes) tooLarge.add(path);
-    else if (!kept.has(path) && kept.size >= limits.max_files) tooMany++;
-    else kept.set(path, { path, file, asset: null, version: null, category: null });
-  }
-  return { files: [...kept.values()].sort((a, b) => (a.path < b.path ? -1 : 1)), leftOut: { otherKinds, tooLarge: [...tooLarge], tooMany } };
-}
+export type DeskOrder = 'attention' | 'path';
 
 const sayOf = (error: unknown, otherwise: string): string => (error instanceof RequestError ? error.message : otherwise);
 
-/** Files on their way into a show: chosen, looked through, sent four at a time, submitted. */
+/** Files on their way into a show: chosen, looked through, sent side by side, submitted. */
 export function useImportDesk(preparation: ImportPreparation, onSubmitted: (importId: string) => void) {
-  const [{ files, leftOut }, setChosen] = useState<{ files: DeskFile[]; leftOut: LeftOut }>({ files: [], leftOut: NONE });
+  const [files, setFiles] = useState<readonly DroppedFile[]>([]);
+  const [said, setSaid] = useState<ReadonlyMap<string, Said>>(new Map());
   const [options, setOptions] = useState<DeskOptions>({ scheme: preparation.scheme, boundary: preparation.boundary, partsBy: preparation.parts_by, weld: false, turnFaces: false });
+  /** As it is typed; empty takes the built-in rule. */
+  const [typedPattern, setTypedPattern] = useState(preparation.name_pattern ?? '');
+  const [order, setOrder] = useState<DeskOrder>('attention');
   const [phase, setPhase] = useState<DeskPhase>('choosing');
   const [refusal, setRefusal] = useState<string | null>(null);
   const importId = useRef<string | null>(null);
   const imports = `/api/v1/shows/${encodeURIComponent(preparation.show)}/imports`;
   const { uploads, sendAll, halt } = useImportUploads();
 
+  const typed = useDeferredValue(typedPattern).trim();
+  const patternFault = typed === '' ? null : checkNamePattern(typed);
+  // While a pattern is half typed the rows stay as the last whole one has them.
+  const [pattern, setPattern] = useState(preparation.name_pattern);
+  if (patternFault === null && pattern !== (typed === '' ? null : typed)) setPattern(typed === '' ? null : typed);
+
+  const stays = useMemo(() => whyStaying(files, preparation), [files, preparation]);
+  const going = useMemo(() => files.filter((_, index) => stays[index] === null), [files, stays]);
+  const { assets } = preparation;
+  /** As the names alone have it: the order of the rows does not jump while somebody mends them. */
+  const named = useMemo(() => previewImport(going.map(({ path }) => ({ name: path })), pattern, assets), [going, pattern, assets]);
+  const wanted = useMemo(() => worthHashing(going.map(({ file }) => file), named, assets).map((index) => going[index].file), [going, named, assets]);
+  const hashes = useContentHashes(wanted);
   const previews = useMemo(() => {
-    const named = files.map((file) => ({ name: file.path, asset: file.asset, version: file.version, category: file.category }));
-    return previewImport(named, preparation.name_pattern, preparation.assets);
-  }, [files, preparation]);
-  const rows: DeskRow[] = files.map((desk, index) => ({ desk, preview: previews[index], upload: uploads.get(desk.path) ?? null }));
+    const dropped = going.map(({ path, file }) => ({ name: path, ...said.get(path), sha256: hashes.get(file) ?? null }));
+    return previewImport(dropped, pattern, assets, options.partsBy === 'joint' ? null : { ...options, triangles: 'catmark', creasing: 'uniform' });
+  }, [going, said, hashes, pattern, assets, options]);
+
+  const places = useMemo(() => {
+    const attentionOf = new Map(going.map(({ path }, index) => [path, named[index].attention]));
+    const weight = (index: number): number => (stays[index] === null ? (attentionOf.get(files[index].path) ?? 0) : -1);
+    const all = files.map((_, index) => index);
+    return order === 'path' ? all : all.sort((a, b) => weight(b) - weight(a) || a - b);
+  }, [files, going, named, stays, order]);
+
+  const rows = useMemo(() => {
+    const previewOf = new Map(going.map(({ path }, index) => [path, previews[index]]));
+    return places.map((index): DeskRow => {
+      const { path, file } = files[index];
+      const beside = stays[index] === null ? readBeside(path) : null;
+      return { path, file, said: said.get(path) ?? NOTHING_SAID, preview: beside === null ? (previewOf.get(path) ?? null) : null, stays: stays[index], beside, upload: uploads.get(path) ?? null };
+    });
+  }, [files, going, previews, places, said, stays, uploads]);
 
   const submit = useCallback(async () => {
     setPhase('submitting');
@@ -103,14 +100,15 @@ export function useImportDesk(preparation: ImportPreparation, onSubmitted: (impo
     setPhase('sending');
     try {
       const body = { scheme: options.scheme, boundary: options.boundary, parts_by: options.partsBy, weld: options.weld, turn_faces: options.turnFaces };
-      importId.current ??= (await requestJson<{ id: string }>(imports, { method: 'POST', body })).id;
+      const own = pattern === preparation.name_pattern ? {} : { name_pattern: pattern };
+      importId.current ??= (await requestJson<{ id: string }>(imports, { method: 'POST', body: { ...body, ...own } })).id;
     } catch (error) {
       setRefusal(sayOf(error, 'The import could not be opened.'));
       return setPhase('choosing');
     }
     const base = `${imports}/${importId.current}/files/`;
-    const wanted = rows.filter((row) => row.preview.asset !== null).map((row) => ({ path: row.desk.path, file: row.desk.file, url: base + fileAddress(row) }));
-    if (await sendAll(wanted)) await submit();
+    const wantedUploads = rows.filter(goesUp).map((row) => ({ path: row.path, file: row.file, url: base + fileAddress(row) }));
+    if (await sendAll(wantedUploads)) await submit();
     else setPhase('stopped');
   };
 
@@ -121,28 +119,50 @@ export function useImportDesk(preparation: ImportPreparation, onSubmitted: (impo
     return () => window.removeEventListener('beforeunload', warn);
   }, [phase]);
 
+  const change = useCallback((paths: readonly string[], to: Partial<Said>) => {
+    setSaid((now) => {
+      const next = new Map(now);
+      for (const path of paths) next.set(path, { ...(now.get(path) ?? NOTHING_SAID), ...to });
+      return next;
+    });
+  }, []);
+  const remove = useCallback((paths: readonly string[]) => {
+    const gone = new Set(paths);
+    setFiles((now) => now.filter((file) => !gone.has(file.path)));
+  }, []);
+
   return {
     rows,
-    leftOut,
     options,
     setOptions,
+    pattern: { typed: typedPattern, type: setTypedPattern, fault: patternFault, isOwn: pattern !== preparation.name_pattern },
+    order,
+    setOrder,
     phase,
     refusal,
     start,
     submit,
     halt,
-    add: (dropped: readonly File[]) => setChosen((now) => sortOut(dropped, now.files, now.leftOut, preparation)),
-    clear: () => setChosen({ files: [], leftOut: NONE }),
-    change: (path: string, to: Partial<DeskFile>) => setChosen((now) => ({ ...now, files: now.files.map((file) => (file.path === path ? { ...file, ...to } : file)) })),
-    remove: (path: string) => setChosen((now) => ({ ...now, files: now.files.filter((file) => file.path !== path) })),
+    change,
+    remove,
+    add: (dropped: readonly File[]) => setFiles((now) => joinDropped(now, dropped)),
+    clear: () => {
+      setFiles([]);
+      setSaid(new Map());
+    },
   };
 }
 
+/** Whether a file goes up as things stand: it has an asset, or is read beside one. */
+export function goesUp({ preview, beside }: DeskRow): boolean {
+  return beside !== null || (preview !== null && preview.asset !== null);
+}
+
 /** Path and query of a row's file; an asset that the batch decided (by its folder) is decided again by the server. */
-function fileAddress({ desk }: DeskRow): string {
+function fileAddress({ path, said }: DeskRow): string {
   const query = new URLSearchParams();
-  if (desk.asset !== null) query.set('asset', desk.asset);
-  if (desk.version !== null) query.set('version', String(desk.version));
-  if (desk.category !== null) query.set('category', desk.category);
-  return `${desk.path.split('/').map(encodeURIComponent).join('/')}${query.size > 0 ? `?${query}` : ''}`;
+  if (said.asset !== null) query.set('asset', said.asset);
+  if (said.version !== null) query.set('version', String(said.version));
+  if (said.category !== null) query.set('category', said.category);
+  return `${path.split('/').map(encodeURIComponent).join('/')}${query.size > 0 ? `?${query}` : ''}`;
 }

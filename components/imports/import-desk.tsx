@@ -1,28 +1,21 @@
 'use client';
 
+import { ArrowDownUp } from 'lucide-react';
 import { useRouter } from 'next/navigation';
-import { useCallback, useState } from 'react';
+import { useCallback, useMemo, useRef, useState } from 'react';
 import { Button } from '@/components/ui/button';
 import { Chip } from '@/components/ui/chip';
-import { useImportDesk, type DeskRow } from '@/hooks/use-import-desk';
+import { goesUp, useImportDesk } from '@/hooks/use-import-desk';
 import { byteWords } from '@/lib/rules/byte-words';
 import type { ImportPreparation } from '@/lib/rules/import-answer';
 import { readName } from '@/lib/rules/name-pattern';
 import { versionLabel } from '@/lib/rules/import-plan';
+import { DeskBulk } from './desk-bulk';
+import { DESK_FILTERS } from './desk-filters';
+import { DeskNames } from './desk-names';
 import { DeskSettings } from './desk-settings';
 import { DeskTable } from './desk-table';
 import { DropZone } from './drop-zone';
-import { LeftOutWords } from './left-out-words';
-
-const FILTERS: { key: string; label: string; holds: (row: DeskRow) => boolean }[] = [
-  { key: 'all', label: 'All', holds: () => true },
-  { key: 'look', label: 'Worth a look', holds: (row) => row.preview.warnings.length > 0 },
-  { key: 'new_asset', label: 'New assets', holds: (row) => row.preview.outcome === 'new_asset' },
-  { key: 'new_version', label: 'New versions', holds: (row) => row.preview.outcome === 'new_version' },
-  { key: 'next_take', label: 'Next takes', holds: (row) => row.preview.outcome === 'next_take' },
-  { key: 'unmatched', label: 'No asset', holds: (row) => row.preview.outcome === 'unmatched' },
-  { key: 'failed', label: 'Not sent', holds: (row) => row.upload?.state === 'failed' },
-];
 
 const filesOf = (count: number): string => (count === 1 ? '1 file' : `${count.toLocaleString('en')} files`);
 
@@ -32,44 +25,70 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
   const onSubmitted = useCallback((id: string) => router.push(`/shows/${preparation.show}/imports/${id}`), [preparation.show, router]);
   const desk = useImportDesk(preparation, onSubmitted);
   const [filter, setFilter] = useState('all');
+  const [chosen, setChosen] = useState<ReadonlySet<string>>(new Set());
+  const lastChosen = useRef<string | null>(null);
   const { rows, phase } = desk;
+  const chosenFilter = DESK_FILTERS.find((one) => one.key === filter) ?? DESK_FILTERS[0];
+  const shown = useMemo(() => rows.filter(chosenFilter.holds), [rows, chosenFilter]);
+  const choose = useCallback(
+    (path: string, isChosen: boolean, reach: boolean) => {
+      const at = shown.findIndex((row) => row.path === path);
+      const from = reach ? shown.findIndex((row) => row.path === lastChosen.current) : -1;
+      const paths = from === -1 ? [path] : shown.slice(Math.min(at, from), Math.max(at, from) + 1).map((row) => row.path);
+      lastChosen.current = path;
+      setChosen((now) => withPaths(now, paths, isChosen));
+    },
+    [shown],
+  );
   if (rows.length === 0) {
     return (
       <div className="flex flex-col gap-5 p-4 md:p-6">
         <DropZone limits={preparation} onFiles={desk.add} />
-        <LeftOutWords leftOut={desk.leftOut} />
         <NameRule preparation={preparation} />
       </div>
     );
   }
   const locked = phase === 'sending' || phase === 'submitting';
-  const chosen = FILTERS.find((one) => one.key === filter) ?? FILTERS[0];
-  const going = rows.filter((row) => row.preview.asset !== null);
-  const bytes = going.reduce((sum, row) => sum + row.desk.file.size, 0);
+  const going = rows.filter(goesUp);
+  const bytes = going.reduce((sum, row) => sum + row.file.size, 0);
+  const chosenRows = rows.filter((row) => chosen.has(row.path));
   const sentBytes = going.reduce((sum, row) => sum + (row.upload?.sentBytes ?? 0), 0);
   const failed = rows.filter((row) => row.upload?.state === 'failed').length;
   return (
     <div className="flex min-h-0 flex-1 flex-col">
       <div className="flex flex-col gap-4 px-4 pt-4 md:px-6">
         <DropZone limits={preparation} onFiles={desk.add} slim disabled={locked} />
-        <LeftOutWords leftOut={desk.leftOut} />
         <DeskSettings
           options={desk.options}
           standard={{ scheme: preparation.scheme, boundary: preparation.boundary, partsBy: preparation.parts_by, weld: false, turnFaces: false }}
           disabled={phase !== 'choosing'}
           onChange={desk.setOptions}
         />
+        <DeskNames pattern={desk.pattern} standard={preparation.name_pattern} rows={rows} disabled={phase !== 'choosing'} />
         <div className="flex gap-2 overflow-x-auto pb-3" role="group" aria-label="Show files">
-          {FILTERS.map((one) => ({ ...one, count: rows.filter(one.holds).length }))
-            .filter((one) => one.key === 'all' || one.count > 0)
+          {DESK_FILTERS.map((one) => ({ ...one, count: rows.filter(one.holds).length }))
+            .filter((one) => one.key === 'all' || one.key === chosenFilter.key || one.count > 0)
             .map((one) => (
-              <Chip key={one.key} pressed={one === chosen || one.key === chosen.key} count={one.count} onClick={() => setFilter(one.key)}>
+              <Chip key={one.key} pressed={one.key === chosenFilter.key} count={one.count} onClick={() => setFilter(one.key)}>
                 {one.label}
               </Chip>
             ))}
+          <Button size="small" look="quiet" className="ml-auto shrink-0" onClick={() => desk.setOrder(desk.order === 'path' ? 'attention' : 'path')}>
+            <ArrowDownUp aria-hidden />
+            {desk.order === 'path' ? 'By path' : 'Needs a look first'}
+          </Button>
         </div>
       </div>
-      <DeskTable rows={rows.filter(chosen.holds)} locked={locked} onChange={desk.change} onRemove={desk.remove} />
+      {chosenRows.length === 0 || locked ? null : <DeskBulk rows={chosenRows} onChange={desk.change} onRemove={desk.remove} onDone={() => setChosen(new Set())} />}
+      <DeskTable
+        rows={shown}
+        locked={locked}
+        chosen={chosen}
+        onChoose={choose}
+        onChooseAll={(isChosen) => setChosen((now) => withPaths(now, shown.map((row) => row.path), isChosen))}
+        onChange={desk.change}
+        onRemove={desk.remove}
+      />
       <footer className="sticky bottom-0 flex flex-wrap items-center gap-x-5 gap-y-2 border-t border-rule bg-bench px-4 py-3 md:px-6">
         <div className="min-w-0 flex-1 basis-64">
           {locked ? (
@@ -77,7 +96,7 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
           ) : (
             <p className="text-14 text-ink-2">
               {filesOf(going.length)}, {byteWords(bytes)}
-              {rows.length > going.length ? `. ${filesOf(rows.length - going.length)} without an asset stay here.` : ''}
+              {rows.length > going.length ? `. ${filesOf(rows.length - going.length)} stay here.` : ''}
             </p>
           )}
           {desk.refusal === null ? null : (
@@ -102,6 +121,12 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
       </footer>
     </div>
   );
+}
+
+function withPaths(now: ReadonlySet<string>, paths: readonly string[], isChosen: boolean): ReadonlySet<string> {
+  const next = new Set(now);
+  for (const path of paths) if (isChosen) next.add(path); else next.delete(path);
+  return next;
 }
 
 function SendingWords({ sent, total, share }: { sent: number; total: number; share: number }) {

@@ -24,6 +24,7 @@ export async function openImport(context: Context, input: OpenImportInput): Prom
         partsBy: input.parts_by ?? show.partsBy,
         weld: input.weld ?? false,
         turnFaces: input.turn_faces ?? false,
+        namePattern: input.name_pattern === undefined ? null : (input.name_pattern ?? ''),
         otherSpace: show.otherSpace,
         createdBy: known.actor.userId,
       })
