@@ -20,6 +20,9 @@ const BYTES_PER_FACE = 3_000;
 /** The fewest bytes that a face takes in a file of the format as programs write it, its share of the vertices included. */
 const LEAST_FILE_BYTES: Record<MeshExtension, number> = { obj: 34, ply: 19, stl: 50, gltf: 12, glb: 12, usd: 8, usda: 24, usdc: 8, usdz: 8, zip: 8 };
 
+/** An OBJ of so irregular a cage, its coordinates with all digits, takes 46 bytes of memory for each of its own; only one with few digits and no regular vertex takes more. */
+const BYTES_PER_OBJ_BYTE = 48;
+
 /** Bytes that a reader holds at once for each of the file's: the file, its text and what is unpacked. An OBJ is read as a stream. */
 const HELD_PER_BYTE: Record<MeshExtension, number> = { obj: 0, ply: 2, stl: 2, gltf: 4, glb: 2, usd: 4, usda: 4, usdc: 4, usdz: 4, zip: 12 };
 
@@ -35,8 +38,12 @@ export function mostFaces({ name, byteSize, faces = null }: MeasureSize): number
 
 /**
  * Bytes of memory that measuring a file takes at the peak, at most, in a thread of its own: what a queue sets aside before it begins. From the face count
- * where that is known, else from `mostFaces`.
+ * where that is known, else from the file's size.
  */
 export function expectedMeasureBytes(size: MeasureSize): number {
-  return Math.ceil(THREAD_BYTES + HELD_PER_BYTE[formatOf(size.name)] * size.byteSize + BYTES_PER_FACE * mostFaces(size));
+  const { byteSize, faces = null } = size;
+  const format = formatOf(size.name);
+  const measuring = BYTES_PER_FACE * mostFaces(size);
+  const bounded = format === 'obj' && faces === null ? Math.min(measuring, BYTES_PER_OBJ_BYTE * byteSize) : measuring;
+  return Math.ceil(THREAD_BYTES + HELD_PER_BYTE[format] * byteSize + bounded);
 }
