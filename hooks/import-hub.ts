@@ -33,7 +33,7 @@ const isOver = (news: ImportDetail): boolean => news.state === 'done' || news.st
  * that nothing is missed; one that breaks for good (the server is away, nobody is signed in) is tried again, ever less often.
  */
 export class ImportHub {
-  private readonly watchers = new Map<object, { watches: ReadonlyMap<string, Watch>; hear: (news: HubNews) => void }>();
+  private readonly watchers = new Map<object, { watches: Map<string, Watch>; hear: (news: HubNews) => void }>();
   private readonly marks = new Map<string, string>();
   private followed = '';
   private source: NewsSource | null = null;
@@ -44,8 +44,14 @@ export class ImportHub {
 
   /** Says all that this watcher looks at; an empty list lets it go. */
   watch(watcher: object, watches: readonly Watch[], hear: (news: HubNews) => void): void {
+    // What was told to it already may still be on its way.
+    const known = this.watchers.get(watcher)?.watches;
+    const newer = (one: Watch): Watch => {
+      const told = known?.get(keyOf(one));
+      return told !== undefined && lower(one.mark, told.mark) ? told : one;
+    };
     if (watches.length === 0) this.watchers.delete(watcher);
-    else this.watchers.set(watcher, { watches: new Map(watches.map((one) => [keyOf(one), one])), hear });
+    else this.watchers.set(watcher, { watches: new Map(watches.map((one) => [keyOf(one), newer(one)])), hear });
     this.settle(SETTLE_MS);
   }
 
@@ -84,6 +90,7 @@ export class ImportHub {
       const news = JSON.parse(data) as ImportDetail & { show: string };
       const key = keyOf(news);
       this.marks.set(key, news.mark);
+      for (const { watches } of this.watchers.values()) if (watches.has(key)) watches.set(key, { ...watches.get(key)!, mark: news.mark });
       this.tell(key, { kind: 'import', show: news.show, id: news.id, news });
       if (isOver(news)) this.drop(key);
     });

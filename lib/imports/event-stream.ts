@@ -1,5 +1,5 @@
 import { log } from '@/lib/log';
-import { onSignOut, QUIET_MS } from './import-notices';
+import { noticesReady, onSignOut, QUIET_MS } from './import-notices';
 import { registerStream } from './open-streams';
 
 const HEARTBEAT_MS = 15_000;
@@ -87,7 +87,7 @@ function streamOf(source: EventSourceOfOurs): ReadableStream<Uint8Array> {
       if (source.signal.aborted) return close();
       source.signal.addEventListener('abort', () => close());
       send(`retry: ${RETRY_MS}\n\n`);
-      void tell();
+      void noticesReady().then(() => !isClosed && tell());
     },
     cancel() {
       close();

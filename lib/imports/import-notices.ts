@@ -6,6 +6,7 @@ import { IMPORT_CHANNEL, SESSIONS_CHANNEL } from './notify-import';
 /** A reader hears of one import at most this often. */
 export const QUIET_MS = 1_000;
 const RECONNECT_MS = 2_000;
+const READY_MS = 5_000;
 
 type Reader = () => void;
 
@@ -17,6 +18,17 @@ class ImportNotices {
   private client: Client | null = null;
   private connecting = false;
   private wasLost = false;
+  private waiting: (() => void)[] = [];
+
+  /** Resolves once this process listens, or after a while without a database that answers. */
+  ready(): Promise<void> {
+    if (this.client) return Promise.resolve();
+    return new Promise((resolve) => {
+      this.waiting.push(resolve);
+      setTimeout(resolve, READY_MS).unref();
+      void this.connect();
+    });
+  }
 
   subscribe(key: string, reader: Reader): () => void {
     const set = this.readers.get(key) ?? new Set();
@@ -50,6 +62,7 @@ class ImportNotices {
       await client.connect();
       await client.query(`listen ${IMPORT_CHANNEL}; listen ${SESSIONS_CHANNEL}`);
       this.client = client;
+      for (const resolve of this.waiting.splice(0)) resolve();
       // What happened before this connection listened was not heard. Streams that just began need not end for that.
       for (const key of this.readers.keys()) if (this.wasLost || !key.startsWith(SESSION)) this.hear(key);
       this.wasLost = false;
@@ -118,4 +131,9 @@ export function onImportNotice(importId: string, reader: Reader): () => void {
 /** Calls the reader when this person signs out in some browser, and after a time in which that could not be heard. Answers how to stop. */
 export function onSignOut(userId: string, reader: Reader): () => void {
   return notices().subscribe(sessionKey(userId), reader);
+}
+
+/** Resolves once changes are heard: what is read after that misses none. */
+export function noticesReady(): Promise<void> {
+  return notices().ready();
 }

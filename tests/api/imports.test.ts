@@ -31,6 +31,8 @@ const sha256 = (text: string) => createHash('sha256').update(text).digest('hex')
 const bring = (cast: Cast, files: Record<string, string>) => importFiles(cast.contextOf('td'), cast.show.code, files, { scheme: 'polyhedral' });
 const openOne = (cast: Cast, files: Record<string, string> = {}) => openWith(cast.contextOf('td'), cast.show.code, files, { scheme: 'polyhedral' });
 
+const post = (handler: typeof SUBMIT, cast: Cast, id: string) => call(handler, { method: 'POST', params: { show: cast.show.code, import: id }, token: cast.people.td.token });
+
 function put(cast: Cast, id: string, name: string, text: string, extra: { query?: Record<string, string>; headers?: Record<string, string> } = {}) {
   return call(PUT, { method: 'PUT', params: { show: cast.show.code, import: id, name }, raw: text, token: cast.people.td.token, ...extra });
 }
@@ -182,7 +184,6 @@ describe('PUT a file', () => {
 });
 
 describe('submit, retry, cancel', () => {
-  const post = (handler: typeof SUBMIT, cast: Cast, id: string) => call(handler, { method: 'POST', params: { show: cast.show.code, import: id }, token: cast.people.td.token });
   const jobsOf = (id: string) => asOwner(`select id from pgboss.job where data ->> 'importId' = $1`, [id]);
 
   test('a second submit queues nothing again', async () => {
@@ -305,11 +306,20 @@ describe('events', () => {
     expect(events.at(-1)?.detail).toMatchObject({ state: 'cancelled', files: [{ name: 'a.obj', state: 'failed' }] });
   });
 
-  test('after a break have only what changed since', async () => {
+  test('after a break tell what changed since', async () => {
+    const cast = await createCast();
+    const { id } = await bring(cast, { 'a.obj': cubeObj(), 'b.obj': brokenObj });
+    const [{ id: last }] = eventsOf((await follow(cast, id)).text);
+    await post(RETRY, cast, id);
+    await post(CANCEL, cast, id);
+    const [{ detail }] = eventsOf((await follow(cast, id, { 'last-event-id': last })).text);
+    expect(detail.state).toBe('cancelled');
+    expect(detail.files).toContainEqual(expect.objectContaining({ name: 'b.obj', error: expect.objectContaining({ code: 'cancelled' }) as object }) as object);
+  });
+
+  test.each(['nonsense', '-1', '999999999999999999'])('with %s as Last-Event-ID tell the whole', async (last) => {
     const cast = await createCast();
     const { id } = await bring(cast, { 'a.obj': cubeObj() });
-    const [{ id: last }] = eventsOf((await follow(cast, id)).text);
-    const later = String(Number(last) + 60_000);
-    expect(eventsOf((await follow(cast, id, { 'last-event-id': later })).text)[0].detail.files).toEqual([]);
+    expect(eventsOf((await follow(cast, id, { 'last-event-id': last })).text)[0].detail.files.map((file) => file.name)).toEqual(['a.obj']);
   });
 });
