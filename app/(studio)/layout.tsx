@@ -6,6 +6,7 @@ const ADMIN_ITEMS = [
   { href: '/shows', label: 'Shows' },
   { href: '/admin/users', label: 'People' },
   { href: '/admin/mail', label: 'Mailbox' },
+  { href: '/admin/queue', label: 'Queue' },
   { href: '/admin', label: 'Studio' },
 ];
 

@@ -37,7 +37,7 @@ async function giveBackSilent(db: Database): Promise<number> {
   });
 }
 
-
+/** Of imports that were submitted before there were turns. */
 async function queueUnplaced(db: Database): Promise<number> {
   const { rows } = await db.execute<{ id: string; import_id: string; pattern: string | null }>(sql`
     select f.id, f.import_id, s.name_pattern as pattern from import_files f join imports i on i.id = f.import_id join ${shows} s on s.id = i.show_id
