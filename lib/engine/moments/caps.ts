@@ -1,3 +1,4 @@
+import TinyQueue from 'tinyqueue';
 import type { Borders } from '../mesh/border-loops';
 import { CURVE_POWERS } from './border-curves';
 import { addPieceChain, noMoments, type CurveTable } from './curve-table';
@@ -20,33 +21,45 @@ interface Segment {
   right: number;
 }
 
-/** Lengths closer than this, relatively, count as equal, so that rounding does not choose which loop is peeled first. */
-const SAME_LENGTH = 1e-9;
+/** Lengths and places are compared in steps of this, relatively, so that rounding does not choose which loop is peeled first. */
+const STEP = 1e-9;
+
+/** A loop in the order of peeling: its length in steps, its body's rank, its apex in steps. */
+interface Waiting {
+  loop: number;
+  order: number[];
+}
 
 /**
  * Closes all bodies by cones over their border loops and subtracts the chains [O, s, C] from the solid's sums, with what the closings of their curves may err by. The apex s of a loop is the mean over its
  * edges of ∫₀¹ C dt, which refinement does not change. Where borders branch, the shortest loop that bounds one body is coned from its own mean and
  * replaced in its neighbours' loops by spokes from its junctions to the apex, until none is left; so each cap bounds two bodies and parts stay additive.
+ * Of loops of one length the first by `rankOf` (a number for each body) is peeled first, then the one whose apex lies lowest along x, y, z: the numbering of faces never chooses.
  */
-export function addCaps(borders: Borders, curves: CurveTable, origins: Float64Array, sums: Pick<LimitSums, 'solid' | 'closingError'>, bodies: number): CapAmounts {
+export function addCaps(borders: Borders, curves: CurveTable, origins: Float64Array, sums: Pick<LimitSums, 'solid' | 'closingError'>, rankOf: Int32Array): CapAmounts {
+  const bodies = rankOf.length;
   const amounts: CapAmounts = { area: new Float64Array(bodies), volume: new Float64Array(bodies) };
   const segments: Segment[] = borders.segments.map((s) => ({ edge: s.edge, line: null, left: s.left, right: s.right }));
   const loops = borders.loops.map((loop) => ({ body: loop.body, steps: loop.steps }));
-  const lengths = new Map<number, number>();
   const lengthOf = (segment: Segment): number => (segment.line !== null ? Math.hypot(segment.line[3], segment.line[4], segment.line[5]) : curves.length(segment.edge));
+  /** What waits; an entry whose loop has changed since is no longer its loop's latest. */
+  const queue = new TinyQueue<Waiting>([], (one, other) => compare(one.order, other.order));
+  const latest = new Map<number, Waiting>();
   const measureLoop = (loop: number): void => {
-    let sum = 0;
-    for (const step of loops[loop].steps) sum += lengthOf(segments[step >> 1]);
-    lengths.set(loop, sum);
+    const { steps, body } = loops[loop];
+    const length = steps.reduce((sum, step) => sum + lengthOf(segments[step >> 1]), 0);
+    const places = apexOf(steps, segments, curves).map((place) => (length > 0 ? Math.round(place / (STEP * length)) : 0));
+    const waiting = { loop, order: [Math.round(Math.log(length) / STEP), body < 0 ? bodies : rankOf[body], ...places] };
+    latest.set(loop, waiting);
+    queue.push(waiting);
   };
-  for (let loop = 0; loop < loops.length; loop++) measureLoop(loop);
 
   const close = (loop: number): void => {
     const { steps } = loops[loop];
     const apex = apexOf(steps, segments, curves);
     coneLoop(loop, apex);
     replaceBySpokes(loop, apex);
-    lengths.delete(loop);
+    latest.delete(loop);
   };
 
   /** Subtracts the cap's chains on both sides of the loop. */
@@ -133,23 +146,18 @@ export function addCaps(borders: Borders, curves: CurveTable, origins: Float64Ar
       untangle(loop);
       return;
     }
-    if (steps.length === 0) lengths.delete(loop);
+    if (steps.length === 0) latest.delete(loop);
     else measureLoop(loop);
   };
 
-  while (lengths.size > 0) {
-    let shortest = -1;
-    let best = Infinity;
-    for (const [loop, length] of lengths) {
-      if (length < best * (1 - SAME_LENGTH)) {
-        best = length;
-        shortest = loop;
-      }
-    }
-    if (shortest < 0) break;
-    close(shortest);
-  }
+  for (let loop = 0; loop < loops.length; loop++) measureLoop(loop);
+  for (let next = queue.pop(); next !== undefined; next = queue.pop()) if (latest.get(next.loop) === next) close(next.loop);
   return amounts;
+}
+
+function compare(one: readonly number[], other: readonly number[]): number {
+  const at = one.findIndex((value, i) => value !== other[i]);
+  return at < 0 ? 0 : one[at] - other[at];
 }
 
 interface Run {

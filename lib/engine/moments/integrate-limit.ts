@@ -49,5 +49,13 @@ export function integrateLimit(mesh: Topology, frames: Frames, bodies: Bodies, b
 /** Closes the bodies by caps over their borders. */
 export function capBodies(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array, integrated: Integrated): CapAmounts {
   const borders = findBorders(mesh, bodies, blocked);
-  return addCaps(borders, curveTable(integrated.curves), frames.origins, integrated, bodies.bodies);
+  return addCaps(borders, curveTable(integrated.curves), frames.origins, integrated, ranksByName(bodies));
+}
+
+/** Of each body the place of its part's name among all names. */
+function ranksByName({ partNames, partOfBody }: Bodies): Int32Array {
+  const sorted = partNames.map((name, part) => ({ name, part })).sort((a, b) => (a.name < b.name ? -1 : 1));
+  const rankOfPart = new Int32Array(partNames.length);
+  for (let rank = 0; rank < sorted.length; rank++) rankOfPart[sorted[rank].part] = rank;
+  return partOfBody.map((part) => rankOfPart[part]);
 }
