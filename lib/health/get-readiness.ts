@@ -36,8 +36,8 @@ async function oldestWaitingJob(): Promise<number | null> {
 
 async function storageTakesBytes(): Promise<void> {
   const probe = `${UNFINISHED}/probe-${randomUUID()}`;
-  await disk().put(probe, 'probe');
-  await disk().delete(probe);
+  await (await disk()).put(probe, 'probe');
+  await (await disk()).delete(probe);
 }
 
 /** Whether the program can do its work: database, storage and queue, each tried. */

@@ -62,7 +62,7 @@ export async function assembleUpload(db: Database, upload: UploadRow, parts: rea
 async function* bytesOf(parts: readonly UploadPartRow[]): AsyncIterable<Uint8Array> {
   for (const part of parts) {
     try {
-      yield* await disk().getStream(partKey(part.uploadId, part.number, part.sha256));
+      yield* await (await disk()).getStream(partKey(part.uploadId, part.number, part.sha256));
     } catch (error) {
       const known = asStudioError(error);
       if (known instanceof StudioError) throw known;

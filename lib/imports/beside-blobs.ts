@@ -2,7 +2,7 @@ import { createHash } from 'node:crypto';
 import type { Beside } from '@/lib/formats/beside';
 import { joinBytes } from '@/lib/formats/join-bytes';
 import { folderOf, pathFrom } from '@/lib/formats/names-beside';
-import { readBlob } from '@/lib/storage/read-blob';
+import { openBlob } from '@/lib/storage/open-blob';
 
 /** A file that another one is read with: its path, as seen from where that one's is seen from, and the hash of its bytes. */
 export interface BesideBlob {
@@ -17,7 +17,7 @@ export function besideOfBlobs(name: string, blobs: readonly BesideBlob[] = []): 
     const found = blobs.find((blob) => blob.path === path);
     if (!found) return null;
     const pieces: Uint8Array[] = [];
-    for await (const piece of await readBlob(found.sha256)) pieces.push(piece);
+    for await (const piece of await openBlob(found.sha256)) pieces.push(piece);
     return joinBytes(pieces);
   };
 }

@@ -6,7 +6,7 @@ import { weightsName } from '@/lib/formats/joint-weights';
 import { extensionOf } from '@/lib/formats/mesh-extensions';
 import { MeshError } from '@/lib/formats/mesh-error';
 import { folderOf, mayDrawOnOthers, MOST_SCANNED_BYTES, namesBeside } from '@/lib/formats/names-beside';
-import { readBlob } from '@/lib/storage/read-blob';
+import { openBlob } from '@/lib/storage/open-blob';
 import type { BesideBlob } from './beside-blobs';
 
 interface Row {
@@ -53,6 +53,6 @@ function candidates(db: Database, { importId, name }: { importId: string; name: 
 async function readStored({ sha256, byteSize }: Row): Promise<Uint8Array> {
   if (byteSize > MOST_SCANNED_BYTES) return new Uint8Array(0);
   const pieces: Uint8Array[] = [];
-  for await (const piece of await readBlob(sha256)) pieces.push(piece);
+  for await (const piece of await openBlob(sha256)) pieces.push(piece);
   return joinBytes(pieces);
 }

@@ -46,7 +46,7 @@ export async function putUploadPart(context: Context, input: PutUploadPartInput,
     });
     if (stored === null) {
       // It was completed, cancelled or swept while the part was on its way.
-      await disk().delete(key);
+      await (await disk()).delete(key);
       throw noUpload();
     }
     return { part: input.part, sha256: received.sha256, bytes: received.byteSize, stored };

@@ -7,7 +7,7 @@ import { readMesh } from '@/lib/formats/read-mesh';
 import { besideOfBlobs, type BesideBlob } from '@/lib/imports/beside-blobs';
 import type { Placing } from '@/lib/imports/file-space';
 import { placeCage } from '@/lib/imports/place-cage';
-import { readBlob } from '@/lib/storage/read-blob';
+import { openBlob } from '@/lib/storage/open-blob';
 
 export interface MeshTask {
   /** Name of the cage's file, for its format, and the hash of its bytes. */
@@ -28,7 +28,7 @@ export interface MeshTask {
 
 /** Makes the display mesh of a stored cage as a GLB file; answers hash and size of its bytes. */
 export default async function makeMesh(task: MeshTask): Promise<{ sha256: string; byteSize: number }> {
-  const cage = await readMesh(task.name, await readBlob(task.sha256), besideOfBlobs(task.name, task.beside));
+  const cage = await readMesh(task.name, await openBlob(task.sha256), besideOfBlobs(task.name, task.beside));
   placeCage(cage, task.placing);
   const mesh = displayMesh(cage, task.options, task.level);
   const bytes = await assetGlb(cage, mesh, task.options.partsBy, task.metresPerUnit);

@@ -6,20 +6,25 @@ export type Order =
   | { verb: 'user disable'; input: { email: string } }
   | { verb: 'token add'; input: { user: string; name: string; days: number | null } }
   | { verb: 'token revoke'; input: { id: string } }
-  | { verb: 'member set'; input: { show: string; email: string; role: string } };
+  | { verb: 'member set'; input: { show: string; email: string; role: string } }
+  | { verb: 'storage check'; input: { deep: boolean; mend: boolean } };
 
 const USAGE = `Usage: npm run --silent admin -- COMMAND
   user add EMAIL --name NAME [--admin]         adds a person and prints their invitation link
   user disable EMAIL                           ends a person's sessions and tokens
   token add --user EMAIL --name NAME [--days N]  prints a new token, alone
   token revoke ID                              ends a token
-  member set SHOW EMAIL ROLE                   gives a person a role in a show`;
+  member set SHOW EMAIL ROLE                   gives a person a role in a show
+  storage check [--deep] [--mend]              compares database and storage; exit code 1 when something is wrong
+                                               (deep: reads every file; mend: removes what is damaged or not needed)`;
 
 const OPTIONS = {
   name: { type: 'string' },
   admin: { type: 'boolean' },
   user: { type: 'string' },
   days: { type: 'string' },
+  deep: { type: 'boolean' },
+  mend: { type: 'boolean' },
 } as const;
 
 /** What each command takes: how many words after its own two, and which options. */
@@ -29,6 +34,7 @@ const SHAPES: Record<Order['verb'], { words: number; needs: string[]; may: strin
   'token add': { words: 0, needs: ['user', 'name'], may: ['days'] },
   'token revoke': { words: 1, needs: [], may: [] },
   'member set': { words: 3, needs: [], may: [] },
+  'storage check': { words: 0, needs: [], may: ['deep', 'mend'] },
 };
 
 /** Reads the command line; what it does not understand is answered with the reason and the usage. */
@@ -64,5 +70,7 @@ export function parseOrder(argv: string[]): Order | { usage: string } {
       return { verb, input: { id: words[0] } };
     case 'member set':
       return { verb, input: { show: words[0], email: words[1], role: words[2] } };
+    case 'storage check':
+      return { verb, input: { deep: values.deep ?? false, mend: values.mend ?? false } };
   }
 }

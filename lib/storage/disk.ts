@@ -1,26 +1,22 @@
 import path from 'node:path';
 import { Disk } from 'flydrive';
 import { FSDriver } from 'flydrive/drivers/fs';
-import { S3Driver } from 'flydrive/drivers/s3';
 import { config } from '@/lib/config';
-import { s3Place } from './s3-client';
 
 /** Folders of the storage: whole files by content, parts of uploads that go on, and what is being written. */
 export const BLOBS = 'blobs';
 export const PARTS = 'parts';
 export const UNFINISHED = 'uploads';
 
-let cached: { from: unknown; disk: Disk } | null = null;
+let cached: { from: unknown; disk: Promise<Disk> } | null = null;
 
-/** The studio's storage: a folder, or a bucket where one is configured. Written to by receiveBytes and the sweeps alone. */
-export function disk(): Disk {
-  const s3 = s3Place();
-  const from = s3 ?? config().filesFolder;
+/** The studio's storage: a folder, or a bucket where one is configured, whose client is loaded then alone. Written to by receiveBytes and the sweeps. */
+export function disk(): Promise<Disk> {
+  const { s3, filesFolder } = config();
+  const from = s3 ?? filesFolder;
   if (cached?.from !== from) {
-    const driver = s3
-      ? new S3Driver({ client: s3.client, bucket: s3.bucket, visibility: 'private', supportsACL: false })
-      : new FSDriver({ location: config().filesFolder, visibility: 'private' });
-    cached = { from, disk: new Disk(driver) };
+    const made = s3 ? import('./s3-disk').then(({ s3Disk }) => s3Disk()) : Promise.resolve(new Disk(new FSDriver({ location: filesFolder, visibility: 'private' })));
+    cached = { from, disk: made };
   }
   return cached.disk;
 }

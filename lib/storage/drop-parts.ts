@@ -2,5 +2,5 @@ import { disk, PARTS } from './disk';
 
 /** Removes every stored part of an upload. */
 export async function dropParts(uploadId: string): Promise<void> {
-  await disk().deleteAll(`${PARTS}/${uploadId}`);
+  await (await disk()).deleteAll(`${PARTS}/${uploadId}`);
 }

@@ -33,11 +33,11 @@ export async function openBlob(sha256: string): Promise<Readable> {
 async function openPatiently(key: string): Promise<Readable> {
   for (const pause of PAUSES_MS) {
     try {
-      return await disk().getStream(key);
+      return await (await disk()).getStream(key);
     } catch (error) {
       if (!isTransientStorageFault(error)) throw error;
       await new Promise((resolve) => setTimeout(resolve, pause));
     }
   }
-  return disk().getStream(key);
+  return (await disk()).getStream(key);
 }

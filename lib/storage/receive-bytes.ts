@@ -1,10 +1,9 @@
 import { createHash } from 'node:crypto';
 import type { ReadableStream } from 'node:stream/web';
+import { config } from '@/lib/config';
 import { byteWords } from '@/lib/rules/byte-words';
 import { StudioError } from '@/lib/rules/studio-error';
 import { receiveIntoFolder } from './receive-into-folder';
-import { receiveIntoS3 } from './receive-into-s3';
-import { s3Place } from './s3-client';
 import { asStudioError } from './storage-fault';
 
 export type ByteSource = ReadableStream<Uint8Array> | AsyncIterable<Uint8Array> | null;
@@ -45,7 +44,7 @@ export interface Landing {
 export async function receiveBytes(source: ByteSource, options: ReceiveOptions): Promise<Received> {
   let landing: Landing | null = null;
   try {
-    landing = s3Place() ? receiveIntoS3() : await receiveIntoFolder();
+    landing = config().s3 ? (await import('./receive-into-s3')).receiveIntoS3() : await receiveIntoFolder();
     const { sha256, byteSize } = await take(source, landing, options);
     await landing.close(sha256);
     const landed = landing;

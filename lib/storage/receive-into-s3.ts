@@ -14,7 +14,6 @@ const COPY_PART_BYTES = 1024 ** 3;
 /** Small bytes wait in memory; more go to the bucket as a multipart upload under a temporary key and are copied within it. */
 export function receiveIntoS3(): Landing {
   const place = s3Place();
-  if (!place) throw new Error('No bucket is configured.');
   const waiting: Uint8Array[] = [];
   let byteSize = 0;
   let long: LongUpload | null = null;
@@ -29,9 +28,10 @@ export function receiveIntoS3(): Landing {
     },
     close: async () => long?.end(),
     place: async (key) => {
-      if (await disk().exists(key)) return;
+      const bucket = await disk();
+      if (await bucket.exists(key)) return;
       if (long) await copyWithin(place, long.key, key, byteSize);
-      else await disk().put(key, Buffer.concat(waiting, byteSize));
+      else await bucket.put(key, Buffer.concat(waiting, byteSize));
     },
     discard: async () => long?.discard(),
   };
@@ -65,12 +65,12 @@ function startLongUpload({ client, bucket }: S3Place): LongUpload {
       await done;
     },
     discard: async () => {
+      // A body that fails makes the upload end itself, its parts included, before it says so; its own abort would not wait for that.
       if (!isOver) {
-        await upload.abort();
-        body.destroy();
+        body.destroy(new Error('The upload broke off.'));
         await done.catch(() => undefined);
       }
-      await disk().delete(key);
+      await (await disk()).delete(key);
     },
   };
 }

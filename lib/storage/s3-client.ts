@@ -8,10 +8,10 @@ export interface S3Place {
 
 let cached: { from: Config['s3']; place: S3Place } | null = null;
 
-/** The bucket that the studio's files go to; null where they go into a folder. */
-export function s3Place(): S3Place | null {
+/** The bucket that the studio's files go to. Only where one is configured. */
+export function s3Place(): S3Place {
   const { s3 } = config();
-  if (s3 === null) return null;
+  if (s3 === null) throw new Error('No bucket is configured.');
   if (cached?.from !== s3) {
     const client = new S3Client({
       region: s3.region,

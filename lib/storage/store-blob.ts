@@ -30,7 +30,7 @@ export async function storeBlob(source: ByteSource, options: StoreOptions): Prom
     const key = blobKey(sha256);
     const size = await sizeInStorage(key);
     // Another size than its bytes have is no file of ours but the rest of a fault, and is mended by the right one.
-    if (size !== null && size !== byteSize) await disk().delete(key);
+    if (size !== null && size !== byteSize) await (await disk()).delete(key);
     if (size !== byteSize) await received.place(key);
     return { sha256, byteSize };
   } catch (error) {

@@ -1,6 +1,6 @@
-import { AbortMultipartUploadCommand, ListMultipartUploadsCommand, type ListMultipartUploadsCommandOutput } from '@aws-sdk/client-s3';
+import type { ListMultipartUploadsCommandOutput } from '@aws-sdk/client-s3';
+import { config } from '@/lib/config';
 import { BLOBS, PARTS, UNFINISHED } from './disk';
-import { s3Place } from './s3-client';
 
 const DAY_MS = 24 * 3_600_000;
 
@@ -9,9 +9,9 @@ const DAY_MS = 24 * 3_600_000;
  * and paid for. A storage that cannot list them is left to its own rules. Answers how many.
  */
 export async function sweepMultiparts(now = Date.now()): Promise<number> {
-  const place = s3Place();
-  if (!place) return 0;
-  const { client, bucket: Bucket } = place;
+  if (config().s3 === null) return 0;
+  const { AbortMultipartUploadCommand, ListMultipartUploadsCommand } = await import('@aws-sdk/client-s3');
+  const { client, bucket: Bucket } = (await import('./s3-client')).s3Place();
   let ended = 0;
   for (const folder of [BLOBS, PARTS, UNFINISHED]) {
     let markers: { KeyMarker?: string; UploadIdMarker?: string } = {};

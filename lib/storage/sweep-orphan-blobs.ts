@@ -26,7 +26,7 @@ export async function sweepOrphanBlobs(db: Database): Promise<number> {
       // A statement of its own: it sees what was registered while the row was waited for.
       const gone = await tx.delete(blobs).where(and(eq(blobs.sha256, sha256), sql`not ${isReferredTo}`)).returning({ sha256: blobs.sha256 });
       if (gone.length === 0) return false;
-      await disk().delete(blobKey(sha256));
+      await (await disk()).delete(blobKey(sha256));
       return true;
     });
     if (isGone) removed++;
@@ -46,7 +46,7 @@ export async function sweepUnknownFiles(db: Database): Promise<number> {
       // The row is ours while the file goes, so that who stores the same bytes waits.
       const mine = await tx.insert(blobs).values({ sha256, byteSize }).onConflictDoNothing().returning({ sha256: blobs.sha256 });
       if (mine.length === 0) return false;
-      await disk().delete(key);
+      await (await disk()).delete(key);
       await tx.delete(blobs).where(eq(blobs.sha256, sha256));
       return true;
     });

@@ -31,13 +31,13 @@ export async function sweepLeftovers(db: Database, now = Date.now()): Promise<nu
   for (const { id } of living) lost.delete(id);
   for (const keys of lost.values()) {
     for (const key of keys) {
-      await disk().delete(key);
+      await (await disk()).delete(key);
       removed++;
     }
   }
   for await (const { key, modified } of listStored(UNFINISHED)) {
     if (now - modified.getTime() < DAY_MS) continue;
-    await disk().delete(key);
+    await (await disk()).delete(key);
     removed++;
   }
   return removed;

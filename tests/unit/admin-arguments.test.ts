@@ -10,6 +10,7 @@ test('each command becomes one order', () => {
   });
   expect(parseOrder(['token', 'revoke', 'x'])).toEqual({ verb: 'token revoke', input: { id: 'x' } });
   expect(parseOrder(['member', 'set', 'tarn', 'a@b.example', 'lead'])).toEqual({ verb: 'member set', input: { show: 'tarn', email: 'a@b.example', role: 'lead' } });
+  expect(parseOrder(['storage', 'check', '--deep'])).toEqual({ verb: 'storage check', input: { deep: true, mend: false } });
 });
 
 test.each([
