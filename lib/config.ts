@@ -1,7 +1,8 @@
 import path from 'node:path';
 import { z } from 'zod';
 
-const schema = z.object({
+/** Every variable that is read, with its default; .env.example is held to it. */
+export const environmentSchema = z.object({
   NODE_ENV: z.enum(['development', 'production', 'test']).default('development'),
   /** Folder for files and secrets (and the database's cluster, when it is the checkout's own). */
   WEIGHHOUSE_DATA: z.string().min(1).default('var'),
@@ -49,7 +50,7 @@ const schema = z.object({
   WEIGHHOUSE_WORKER_NAME: z.string().min(1).max(80).optional(),
 });
 
-function s3Of(env: z.infer<typeof schema>, bucket: string) {
+function s3Of(env: z.infer<typeof environmentSchema>, bucket: string) {
   const { WEIGHHOUSE_S3_ACCESS_KEY: accessKeyId, WEIGHHOUSE_S3_SECRET_KEY: secretAccessKey } = env;
   if ((accessKeyId === undefined) !== (secretAccessKey === undefined)) throw new Error('WEIGHHOUSE_S3_ACCESS_KEY and WEIGHHOUSE_S3_SECRET_KEY: give both or neither.');
   return {
@@ -64,7 +65,7 @@ function s3Of(env: z.infer<typeof schema>, bucket: string) {
 function read() {
   // An empty value means unset: so a line of .env can be taken back for one process.
   const given = Object.entries(process.env).filter(([, value]) => value !== '');
-  const parsed = schema.safeParse(Object.fromEntries(given));
+  const parsed = environmentSchema.safeParse(Object.fromEntries(given));
   if (!parsed.success) {
     const first = parsed.error.issues[0];
     throw new Error(`Environment variable ${String(first.path[0])}: ${first.message}`);
