@@ -29,14 +29,18 @@ export async function composeUsd(layer: UsdLayer, parse: Open['parse'], beside: 
 async function followAll(prims: UsdPrim[], layer: UsdLayer, file: string, open: Open, chain: string[]): Promise<void> {
   for (const prim of prims) {
     if (++open.visited > MOST_USD_PRIMS) throw new MeshError({ code: 'too_large', expected: `at most ${MOST_USD_PRIMS} prims`, detail: `expected at most ${MOST_USD_PRIMS} prims with all that is referred to, found more` });
-    for (const { asset, path } of prim.references) await follow(prim, asset, path, { layer, file, open, chain });
+    let isLost = false;
+    for (const { asset, path } of prim.references) isLost = !(await follow(prim, asset, path, { layer, file, open, chain })) || isLost;
+    // Of several references one may be here and another not: what is not is said.
+    if (isLost && !prim.arcs.some((arc) => FOLLOWED.has(arc))) prim.arcs.push('references');
     // A prim that was referred to brings its own references along, already followed.
     prim.references = [];
     await followAll(prim.children, layer, file, open, chain);
   }
 }
 
-async function follow(prim: UsdPrim, asset: string, path: string, { layer, file, open, chain }: { layer: UsdLayer; file: string; open: Open; chain: string[] }): Promise<void> {
+/** Whether what is referred to was found. */
+async function follow(prim: UsdPrim, asset: string, path: string, { layer, file, open, chain }: { layer: UsdLayer; file: string; open: Open; chain: string[] }): Promise<boolean> {
   if (++open.followed > MOST_REFERENCES) throw new MeshError({ code: 'too_large', expected: `at most ${MOST_REFERENCES} references`, detail: `expected at most ${MOST_REFERENCES} references between prims, found more` });
   const there = asset === '' ? file : besideOf(file, asset);
   const key = `${there}<${path}>`;
@@ -44,9 +48,10 @@ async function follow(prim: UsdPrim, asset: string, path: string, { layer, file,
   if (chain.length >= MOST_DEPTH) throw new MeshError({ code: 'too_deep', expected: `references at most ${MOST_DEPTH} deep`, detail: `expected references at most ${MOST_DEPTH} deep, found more` });
   const target = asset === '' ? layer : await loadLayer(there, open);
   const found = target && findPrim(target, path);
-  if (!target || !found) return;
+  if (!target || !found) return false;
   await followAll([found], target, there, open, [...chain, key]);
   take(prim, found);
+  return true;
 }
 
 /** The path of a file that another file names, both seen from the first layer. */

@@ -1,11 +1,13 @@
-import type { Cage, FormatWarning } from '../engine/cage';
-import { fileNote, oneLabel } from './bare-cage';
+import type { Cage } from '../engine/cage';
+import { oneLabel } from './bare-cage';
 import { checkCoordinates } from './check-coordinates';
 import { shortNames } from './distinct-names';
 import { IDENTITY, isIdentity, mirrors, multiply, reverseFaces, transformPoints, type Matrix } from './matrix';
 import { CageTotals, mergeCages } from './merge-cages';
 import { MeshError } from './mesh-error';
 import { groupLabels, jointLabels, jointsOf, materialLabels, nameOfPath, readSubsets } from './usd-labels';
+import { LOSSY_CODES } from './lossy-codes';
+import { UsdNotes } from './usd-notes';
 import { usdPolygons } from './usd-polygons';
 import { MOST_USD_PRIMS, numbersOf, textOf, type UsdLayer, type UsdPrim } from './usd-prim';
 import { primTransform } from './usd-transform';
@@ -30,10 +32,13 @@ const NOT_RENDERED = new Set(['proxy', 'guide']);
 /** Share of the box's diagonal by which points may lie outside the authored extent before it is said. */
 const EXTENT_SLACK = 0.01;
 
-/** Walks a layer for its meshes, and notes once what it passes over. */
+/** Arcs in the words of the text form. */
+const ARC_WORDS: Record<string, string> = { payload: 'payload', inheritPaths: 'inherits' };
+
+/** Walks a layer for its meshes, and notes what it passes over. */
 class UsdScene {
   readonly found: Found[] = [];
-  readonly notes = new Map<string, FormatWarning>();
+  readonly notes = new UsdNotes();
   private visited = 0;
   private byPath: Map<string, UsdPrim> | null = null;
 
@@ -41,26 +46,22 @@ class UsdScene {
 
   walk(): void {
     const top: Inherited = { world: IDENTITY, path: '', material: null, joints: [], purpose: null };
-    if (this.layer.subLayers.length > 0) this.note('not_composed', 'Left out other layers that this one builds on: only what the file itself holds is read.');
+    for (const layer of this.layer.subLayers) this.notes.add('layers_ignored', layer, (layers) => `Left out the layers that this one builds on, ${layers}: only what the file itself holds is read. Export it flattened.`);
     for (const prim of this.layer.root) this.visit(prim, top);
-  }
-
-  note(code: string, message: string): void {
-    if (!this.notes.has(code)) this.notes.set(code, fileNote(code, message));
   }
 
   private visit(prim: UsdPrim, above: Inherited): void {
     if (++this.visited > MOST_USD_PRIMS) throw new MeshError({ code: 'too_large', expected: `at most ${MOST_USD_PRIMS} prims`, detail: `expected at most ${MOST_USD_PRIMS} prims in the scene, found more` });
     const path = `${above.path}/${prim.name}`;
     if (prim.specifier !== 'def' || !prim.active) return;
-    if (prim.arcs.length > 0) this.note('not_composed', `Left out what ${path} brings in by ${prim.arcs.join(', ')}: only what the file itself holds is read.`);
-    if (textOf(prim, 'visibility') === 'invisible') return this.note('hidden', `Left out ${path}, which is invisible.`);
+    for (const arc of prim.arcs) this.noteArc(arc, path);
+    if (textOf(prim, 'visibility') === 'invisible') return this.notes.add('hidden', path, (paths) => `Left out what is invisible: ${paths}.`, 'invisible');
     const purpose = textOf(prim, 'purpose') ?? above.purpose;
-    if (purpose !== null && NOT_RENDERED.has(purpose)) return this.note('hidden', `Left out ${path}, whose purpose is ${purpose}.`);
-    if (prim.typeName === 'PointInstancer') return this.note('instances_ignored', `Left out ${path}: instances are not read.`);
-    if (NOT_POLYGONS.has(prim.typeName)) this.note('not_polygons', `Left out ${path}, a ${prim.typeName}: only meshes are read.`);
+    if (purpose !== null && NOT_RENDERED.has(purpose)) return this.notes.add('hidden', path, (paths) => `Left out what has the purpose ${purpose}: ${paths}.`, purpose);
+    if (prim.typeName === 'PointInstancer') return this.notes.add('instances_ignored', path, (paths) => `Left out the instances of ${paths}: export them as meshes.`);
+    if (NOT_POLYGONS.has(prim.typeName)) this.notes.add('not_polygons', path, (paths) => `Left out what is no mesh but a ${prim.typeName}: ${paths}.`, prim.typeName);
     const { local, resets, animated } = primTransform(prim, path);
-    if (animated || prim.attributes.get('points')?.animated) this.note('animated', `${path} moves over time: it is measured at its default, or else at the first time.`);
+    if (animated || prim.attributes.get('points')?.animated) this.notes.add('animated', path, (paths) => `Measured at its default, or else at the first time, since it moves over time: ${paths}.`);
     const joints = jointsOf(prim, (target) => this.find(target));
     const inherited: Inherited = {
       world: isIdentity(local) ? (resets ? IDENTITY : above.world) : resets ? local : multiply(local, above.world),
@@ -71,6 +72,12 @@ class UsdScene {
     };
     if (prim.typeName === 'Mesh') this.found.push({ path, mesh: prim, inherited });
     for (const child of prim.children) this.visit(child, inherited);
+  }
+
+  /** Variants are a choice that the file leaves open; everything else is geometry that lies elsewhere. */
+  private noteArc(arc: string, path: string): void {
+    if (/^variant/.test(arc)) this.notes.add('variants_ignored', path, (paths) => `Left out the variants of ${paths}: export the one that is meant.`);
+    else this.notes.add('not_composed', path, (paths) => `Left out what ${paths} bring${paths.includes(' and ') ? '' : 's'} in by ${ARC_WORDS[arc] ?? arc}: it is not in the file, nor beside it.`, arc);
   }
 
   private find(path: string): UsdPrim | null {
@@ -110,17 +117,18 @@ export function readUsdMeshes(layer: UsdLayer): Cage {
     held.add(cage);
     cages.push(cage);
   }
-  if (cages.length === 0) throw new MeshError({ code: 'no_faces', expected: 'a mesh', detail: `expected at least one mesh with faces in the layer, found none${scene.notes.has('not_composed') ? ': what it brings in from other layers is not read' : ''}` });
-  if (new Set(cages.map((cage) => cage.scheme)).size > 1) scene.note('schemes_differ', 'The meshes of the file ask for different subdivision schemes; one is used for all.');
+  const lost = cages.length === 0 ? scene.notes.find(LOSSY_CODES) : null;
+  if (cages.length === 0) throw new MeshError({ code: 'no_faces', expected: 'a mesh', detail: `expected at least one mesh with faces in the layer, found none${lost ? `. ${lost.message.replace(/\.$/, '')}` : ''}` });
+  if (new Set(cages.map((cage) => cage.scheme)).size > 1) scene.notes.add('schemes_differ', '', () => 'The meshes of the file ask for different subdivision schemes; one is used for all.');
   const merged = mergeCages(cages);
   const metres = layer.metersPerUnit;
   if (metres !== null && !(metres > 0 && metres < Infinity)) throw new MeshError({ code: 'bad_unit', expected: 'a positive number for metersPerUnit', found: String(metres), detail: `expected a positive number for metersPerUnit, found ${metres}` });
-  return { ...merged, metresPerUnit: metres, upAxis: layer.upAxis, warnings: [...scene.notes.values(), ...merged.warnings] };
+  return { ...merged, metresPerUnit: metres, upAxis: layer.upAxis, warnings: [...scene.notes.list(), ...merged.warnings] };
 }
 
 function readMesh(scene: UsdScene, { path, mesh, inherited }: Found, name: string): Cage | null {
   if ((numbersOf(mesh, 'faceVertexCounts')?.length ?? 0) === 0) {
-    scene.note('empty_mesh', `Left out ${path}, a mesh without faces.`);
+    scene.notes.add('empty_mesh', path, (paths) => `Left out what has no faces: ${paths}.`);
     return null;
   }
   const cage = usdPolygons(mesh, path);
@@ -146,5 +154,5 @@ function checkExtent(scene: UsdScene, mesh: UsdPrim, positions: Float64Array, pa
   const diagonal = Math.hypot(extent[3] - extent[0], extent[4] - extent[1], extent[5] - extent[2]);
   let beyond = 0;
   for (let i = 0; i < positions.length; i++) beyond = Math.max(beyond, extent[i % 3] - positions[i], positions[i] - extent[3 + (i % 3)]);
-  if (beyond > EXTENT_SLACK * diagonal) scene.note('extent_disagrees', `Points of mesh ${path} lie up to ${beyond.toPrecision(4)} outside the extent that the file states.`);
+  if (beyond > EXTENT_SLACK * diagonal) scene.notes.add('extent_disagrees', path, () => `Points of mesh ${path.slice(0, 200)} lie up to ${beyond.toPrecision(4)} outside the extent that the file states.`);
 }

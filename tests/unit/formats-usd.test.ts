@@ -140,7 +140,19 @@ ${mesh()}  }
     def Mesh "none" { }
     `));
     expect(facesOf(cage)).toEqual(QUADS);
-    expect(cage.warnings.map((warning) => warning.code).sort()).toEqual(['empty_mesh', 'hidden', 'instances_ignored', 'not_composed', 'not_polygons']);
+    expect(cage.warnings.map((warning) => warning.code).sort()).toEqual(['empty_mesh', 'hidden', 'hidden', 'instances_ignored', 'not_composed', 'not_polygons', 'variants_ignored']);
+    const said = Object.fromEntries(cage.warnings.map((warning) => [warning.code, warning.message]));
+    expect(said.variants_ignored).toContain('/geo/choice');
+    expect(said.not_composed).toContain('/geo/referring');
+    expect(said.instances_ignored).toContain('/geo/many');
+    expect(said.not_polygons).toContain('/geo/ball');
+  });
+
+  it('names the first prims of a kind and counts the others, and names the layers that it builds on', () => {
+    const spheres = Array.from({ length: 6 }, (_, i) => `def Sphere "ball${i}" { }`).join('\n');
+    const cage = read(layer(`${mesh()}\n${spheres}`).replace('(\n', '(\n    subLayers = [@./base.usda@]\n'));
+    expect(cage.warnings.find((warning) => warning.code === 'not_polygons')?.message).toBe('Left out what is no mesh but a Sphere: /geo/ball0, /geo/ball1, /geo/ball2 and 3 others.');
+    expect(cage.warnings.find((warning) => warning.code === 'layers_ignored')?.message).toContain('./base.usda');
   });
 
   it('takes the default of what moves over time, else the first time, and says so', () => {
@@ -275,7 +287,9 @@ describe('USD crate', () => {
     const beside = (files: Record<string, Uint8Array>) => (path: string) => Promise.resolve(files[path] ?? null);
     const outer = text('#usda 1.0\ndef "x" ( payload = @./kit/box.usdc@ ) { }\n');
     expect(measureAsIs(await readUsda(outer, beside({ 'kit/box.usdc': writeCrate(STAGE) }))).volume).toBeCloseTo(72, 10);
-    expect(await laterFailureOf(() => readUsda(outer, NOTHING_BESIDE))).toMatchObject({ code: 'no_faces', detail: expect.stringContaining('from other layers') });
+    const both = await readUsda(text('#usda 1.0\ndef "x" ( references = [@./kit/box.usdc@, @./kit/lost.usdc@] ) { }\n'), beside({ 'kit/box.usdc': writeCrate(STAGE) }));
+    expect(both.warnings.find((warning) => warning.code === 'not_composed')?.message).toContain('/x');
+    expect(await laterFailureOf(() => readUsda(outer, NOTHING_BESIDE))).toMatchObject({ code: 'no_faces', detail: expect.stringContaining('/x brings in by payload') });
     const circle = { 'a.usda': text('#usda 1.0\ndef "x" ( references = @b.usda@</x> ) { }'), 'b.usda': text('#usda 1.0\ndef "x" ( references = @a.usda@</x> ) { }') };
     expect((await laterFailureOf(() => readUsda(circle['a.usda'], beside(circle)))).code).toBe('reference_circle');
     expect((await laterFailureOf(() => readUsda(text('#usda 1.0\ndef "x" ( references = </x> ) { }'), NOTHING_BESIDE))).code).toBe('reference_circle');
