@@ -57,10 +57,10 @@ class GrowingArray<T extends Numbers> {
   }
 }
 
-export type GrowingFloat64 = GrowingArray<Float64Array>;
-export type GrowingFloat32 = GrowingArray<Float32Array>;
-export type GrowingUint32 = GrowingArray<Uint32Array>;
-export type GrowingInt32 = GrowingArray<Int32Array>;
+type GrowingFloat64 = GrowingArray<Float64Array>;
+type GrowingFloat32 = GrowingArray<Float32Array>;
+type GrowingUint32 = GrowingArray<Uint32Array>;
+type GrowingInt32 = GrowingArray<Int32Array>;
 
 export function growingFloat64(): GrowingFloat64 {
   return new GrowingArray<Float64Array>((length) => new Float64Array(length));
