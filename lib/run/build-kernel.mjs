@@ -190,9 +190,10 @@ ${lines(vector, boundsOf(shape.name), 1)}
 }
 
 export function run${capital(shape.name)}(
-  pairs: i32, input: i32, output: i32, fewest: i32, most: i32, coarse: i32, forArea: i32, cutoff: f64, near: f64, tolerance: f64, reach: f64, rules: i32, table: i32, scratch: i32,
+  pairs: i32, input: i32, output: i32, fewest: i32, most: i32, coarse: i32, forArea: i32, cutoff: f64, near: f64, calm: f64, tolerance: f64, reach: f64, rules: i32, table: i32, scratch: i32,
 ): void {
   const bounds = scratch + ${BOUNDS_AT};
+  let start = fewest;
   for (let k: i32 = 0; k < pairs; k++) {
 ${powersOf(shape)}
     for (let i: i32 = 0; i < ${16 * AXES.length}; i += 16) v128.store(scratch + i, f64x2.sub(v128.load(scratch + i), v128.load(input + ${16 * shape.values} + i)));
@@ -209,6 +210,7 @@ ${powersOf(shape)}
         first = f64x2.div(left, f64x2.mul(f64x2.splat(4), v128.load(bounds + 16)));
       }
     }
+    nodes = max(nodes, start);
     ${shape.name}Moments(scratch, rules, nodes, output);
     if (fewest === most) {
       if (coarse > 0) ${shape.name}Area(scratch, rules, coarse, output + 336);
@@ -222,6 +224,7 @@ ${powersOf(shape)}
         ${shape.name}Moments(scratch, rules, nodes, output);
         ${shape.name}Area(scratch, rules, coarseOf(nodes, ${extra}), output + 336);
       }
+      start = nodes >= forArea && !agree(output, calm) ? forArea : fewest;
     }
     v128.store(output + 352, second);
     v128.store(output + 368, first);

@@ -29,6 +29,9 @@ export const AREA_CUTOFF = 0.999 * AREA_TOLERANCE ** (2 / 3);
 /** Relative difference up to which a rule whose area is compared with that of one node more promises to do; by far more than that, only all for areas may. */
 export const AREA_NEAR = AREA_TOLERANCE ** (8 / 15);
 
+/** Relative difference by the finer rules from which on the next patches are not tried with the coarser ones, which would have failed: neighbours are alike. */
+export const AREA_CALM = AREA_CUTOFF ** (4 / 3);
+
 /** Nodes of the rule whose area that of `nodes` is compared with. A rule is exact up to degree 2n − 1, on a triangle to 2n: what it leaves begins 8/5 as late as with those. */
 export function coarseOf(kind: PatchKind, nodes: number): number {
   const extra = ALONG_EXTRA[kind];

@@ -3,7 +3,7 @@ import { gaussRule } from '../patches/gauss-rule';
 import { bicubicBounds, bicubicNodes } from './bicubic-scalar';
 import { biquadraticNetToPowers } from './biquadratic-powers';
 import { biquadraticBounds, biquadraticNodes } from './biquadratic-scalar';
-import { AREA_CUTOFF, AREA_NEAR, coarseOf, NODE_RANGES, nodesAfter } from './node-choice';
+import { AREA_CALM, AREA_CUTOFF, AREA_NEAR, coarseOf, NODE_RANGES, nodesAfter } from './node-choice';
 import { AREA_SUMS, MOMENT_SUMS, TOTALS } from './node-sums';
 import { ALONG_EXTRA, inputStride, MOST_PAIRS, NET_VALUES, OUTPUT_STRIDE, type FanKernel, type PatchKind } from './patch-kinds';
 import { FAN_ROOM, scalarFans } from './scalar-fans';
@@ -108,10 +108,11 @@ export function scalarKernel(kind: PatchKind): FanKernel {
       }
     },
     choose(pairs, fewest, tolerance, reach) {
+      let start = fewest;
       for (let at = 0; at < pairs; at++) {
         putPowers(at);
         putErrors(at, NONE, NONE);
-        let nodes = tolerance > 0 ? enough(at, fewest, tolerance, reach) : fewest;
+        let nodes = Math.max(start, tolerance > 0 ? enough(at, fewest, tolerance, reach) : fewest);
         runPair(at, nodes, coarseOf(kind, nodes));
         while (!agree(at, AREA_CUTOFF)) {
           const close = agree(at, AREA_NEAR);
@@ -120,6 +121,7 @@ export function scalarKernel(kind: PatchKind): FanKernel {
           else break;
           runPair(at, nodes, coarseOf(kind, nodes));
         }
+        start = nodes >= forArea && !agree(at, AREA_CALM) ? forArea : fewest;
       }
     },
     fans: scalarFans(new Float64Array(FAN_ROOM), input, stride, output, OUTPUT_STRIDE),

@@ -1,6 +1,6 @@
 import { gaussRule } from '../patches/gauss-rule';
 import { KERNEL_BYTES } from './kernel-bytes';
-import { AREA_CUTOFF, AREA_NEAR, coarseOf, NODE_RANGES } from './node-choice';
+import { AREA_CALM, AREA_CUTOFF, AREA_NEAR, coarseOf, NODE_RANGES } from './node-choice';
 import { ALONG_EXTRA, inputStride, MOST_NODES, MOST_PAIRS, OUTPUT_STRIDE, type FanKernel, type PatchKind } from './patch-kinds';
 import { FAN_ROOM, SUMMED_RESULTS } from './scalar-fans';
 import { TRIANGLE_POWERS } from './triangle-powers';
@@ -15,7 +15,7 @@ const SCRATCH = 128;
 /** What the WebAssembly module exports per kind. Byte addresses. */
 type Run = (
   pairs: number, input: number, output: number, fewest: number, most: number, coarse: number, forArea: number,
-  cutoff: number, near: number, tolerance: number, reach: number, rules: number, table: number, scratch: number,
+  cutoff: number, near: number, calm: number, tolerance: number, reach: number, rules: number, table: number, scratch: number,
 ) => void;
 
 type Routine = (...integers: number[]) => void;
@@ -83,11 +83,11 @@ function wrap(kind: PatchKind, doubles: Float64Array, run: Run, refineFans: Rout
     run(pairs, count, coarseCount) {
       putRule(count);
       if (coarseCount > 0) putRule(coarseCount);
-      run(pairs, 8 * INPUT_AT, 8 * outputAt, count, count, coarseCount, count, 0, 0, 0, 0, 0, 8 * TABLE_AT, 8 * scratchAt);
+      run(pairs, 8 * INPUT_AT, 8 * outputAt, count, count, coarseCount, count, 0, 0, 0, 0, 0, 0, 8 * TABLE_AT, 8 * scratchAt);
     },
     choose(pairs, fewest, tolerance, reach) {
       for (let count = coarseOf(kind, fewest); count <= most; count++) putRule(count);
-      run(pairs, 8 * INPUT_AT, 8 * outputAt, fewest, most, 0, forArea, AREA_CUTOFF, AREA_NEAR, tolerance, reach, 0, 8 * TABLE_AT, 8 * scratchAt);
+      run(pairs, 8 * INPUT_AT, 8 * outputAt, fewest, most, 0, forArea, AREA_CUTOFF, AREA_NEAR, AREA_CALM, tolerance, reach, 0, 8 * TABLE_AT, 8 * scratchAt);
     },
     fans: {
       memory: doubles.subarray(fansAt, fansAt + FAN_ROOM),

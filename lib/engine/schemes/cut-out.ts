@@ -1,7 +1,7 @@
 import type { LevelMesh } from './level-mesh';
 
 /** Part of a mesh's half-edges up to which cutting out what a refinement reads is worth its own passes. */
-const WORTH = 1 / 4;
+const WORTH = 1 / 2;
 
 /**
  * The faces that touch a wanted vertex (1 in `wanted`), in the mesh's order: all that a local refinement reads, so that its cost follows what is left of the

@@ -69,6 +69,11 @@ export class FanBatch {
   private worst = 0;
   private worstNodes = 0;
   private worstError = 0;
+  /** How many patches took fewer nodes than are exact for their solid moments, the last of them, and which of them erred most. */
+  private spared = 0;
+  private lastSpared = 0;
+  private worstSpared = 0;
+  private sparedError = 0;
   /** Estimated error of the level's area, and of its first and second solid moments for nodes spared. */
   private levelError = 0;
   private levelFirst = 0;
@@ -116,6 +121,7 @@ export class FanBatch {
     this.addRims();
     const levels = Math.max(table.weights.length, table.surfaceWeights.length);
     const first = FIRST[kit.rule.kind];
+    const total = this.count * this.patches;
     // 0: each patch has as many as it wants.
     let nodes = 0;
     for (let k = 0; k < levels; k++) {
@@ -124,9 +130,11 @@ export class FanBatch {
       else this.chooseLevel(k);
       this.addLevel(k);
       if (k + 1 === levels) break;
-      if (this.bounded) this.bounded = !this.compare(k, kit.rule.nodes, first, false);
-      if (nodes === 0 && this.compare(k, first, first - 1)) nodes = first - 1;
-      while (nodes > kit.fewestNodes && this.compare(k, nodes, nodes - 1)) nodes--;
+      // The patch that erred most and one in turn speak for all.
+      const probes = [this.worst, (7 * k + 3) % total];
+      if (this.bounded) this.bounded = !this.compare(probes, total, kit.rule.nodes, first, false);
+      if (nodes === 0 && this.compare(probes, total, first, first - 1)) nodes = first - 1;
+      while (nodes > kit.fewestNodes && this.compare(probes, total, nodes, nodes - 1)) nodes--;
     }
     this.finish();
     this.count = 0;
@@ -162,7 +170,7 @@ export class FanBatch {
       this.sumChosen(first, 0);
       if (k === 0) {
         this.setScales();
-        this.rough = this.bounded = first < exact && !this.compare(k, exact, first, false);
+        this.rough = this.bounded = this.spared > 0 && !this.compare([this.worstSpared, this.lastSpared], this.spared, exact, first, false);
       }
     }
     // Where the solid moments want more than the area, their bounds say how many.
@@ -180,6 +188,7 @@ export class FanBatch {
 
   private sumChosen(fewest: number, tolerance: number): void {
     this.worstNodes = this.worstError = 0;
+    this.spared = this.sparedError = 0;
     this.levelError = this.levelFirst = this.levelSecond = 0;
     this.memory.sumLevel((size) => this.block.choose(size, fewest, tolerance, this.reach), (patch, place) => this.checkPatch(patch, place));
   }
@@ -190,9 +199,14 @@ export class FanBatch {
     const area = block.output[block.resultAt(place) + 2 * MOMENTS];
     const coarseArea = block.coarseArea(place);
     let error = areaError(area, coarseArea);
-    this.noteWorst(patch, block.nodes(place), error);
-    this.levelFirst += block.firstError(place);
-    this.levelSecond += block.secondError(place);
+    const nodes = block.nodes(place);
+    this.noteWorst(patch, nodes, error);
+    if (nodes < NODE_RANGES[this.kit.rule.kind].exact) this.noteSpared(patch, error);
+    const second = block.secondError(place);
+    if (second > 0) {
+      this.levelFirst += block.firstError(place);
+      this.levelSecond += second;
+    }
     // Small patches of later levels need no more than those of the first.
     const tolerance = AREA_TOLERANCE * Math.max(area, this.areaScale / (this.count * this.patches));
     if (error > tolerance) {
@@ -211,6 +225,14 @@ export class FanBatch {
     this.worstNodes = nodes;
     this.worstError = error;
     this.worst = patch;
+  }
+
+  private noteSpared(patch: number, error: number): void {
+    this.spared++;
+    this.lastSpared = patch;
+    if (this.spared > 1 && !(error > this.sparedError)) return;
+    this.sparedError = error;
+    this.worstSpared = patch;
   }
 
   private addLevel(k: number): void {
@@ -233,11 +255,9 @@ export class FanBatch {
     }
   }
 
-  /** Whether `fewer` nodes do as well as `nodes`, for the area too or the solid alone: the patch that erred most and one in turn speak for all. If so, what they may err by is noted. */
-  private compare(k: number, nodes: number, fewer: number, area = true): boolean {
+  /** Whether `fewer` nodes do as well as `nodes` for `total` patches that `probes` speak for, for the area too or the solid alone. If so, what they may err by is noted. */
+  private compare(probes: readonly number[], total: number, nodes: number, fewer: number, area = true): boolean {
     const { block, reach, sums, body, solidScale, areaScale } = this;
-    const total = this.count * this.patches;
-    const probes = [this.worst, (7 * k + 3) % total];
     differences.fill(0);
     for (const patch of probes) {
       // Each by itself, both lanes alike.
