@@ -97,12 +97,19 @@ describe('polygons', () => {
     expect(cage.warnings.map((w) => [w.code, w.line])).toEqual([['not_polygons', 5], ['not_polygons', 7], ['unknown_keyword', 8]]);
   });
 
-  it('gives the same cage however the bytes are cut into chunks', async () => {
-    const text = `\ufeffo ox\r\ng torso skin\r\n${SQUARE.replaceAll('\n', '\r\n')}f 1 \\\r\n 2 3\rusemtl häute\nf 1 3 4\nt crease 2/1/0 0 1 2.5\n`;
+  const CODES: [name: string, encode: (text: string) => Uint8Array][] = [
+    ['UTF-8 with a mark', (text) => bytes(`\ufeff${text}`)],
+    ['Latin-1', (text) => Uint8Array.from(text, (c) => c.charCodeAt(0))],
+    ['UTF-16, low byte first, with a mark', (text) => new Uint8Array(Uint16Array.from(`\ufeff${text}`, (c) => c.charCodeAt(0)).buffer)],
+    ['UTF-16, high byte first, without a mark', (text) => new Uint8Array(Uint16Array.from(text, (c) => (c.charCodeAt(0) << 8) | (c.charCodeAt(0) >> 8)).buffer)],
+  ];
+
+  it.each(CODES)('gives the same cage however the bytes are cut into chunks: %s', async (_, encode) => {
+    const text = `o ox\r\ng torso skin\r\n${SQUARE.replaceAll('\n', '\r\n')}f 1 \\\r\n 2 3\rusemtl häute\nf 1 3 4\nt crease 2/1/0 0 1 2.5\nvn 0 0 1\nf 2//1 3//1 4//1\nv 7 8 9.25`;
+    const source = encode(text);
     const whole = read(text);
     await fc.assert(
-      fc.asyncProperty(fc.array(fc.integer({ min: 1, max: 9 }), { minLength: 1 }), async (sizes) => {
-        const source = bytes(text);
+      fc.asyncProperty(fc.array(fc.integer({ min: 1, max: 30 }), { minLength: 1 }), async (sizes) => {
         const streamed = await readObjStream(
           (async function* () {
             let at = 0;
@@ -117,6 +124,15 @@ describe('polygons', () => {
       }),
       { numRuns: 60 },
     );
+  });
+
+  it('reads megabytes of UTF-16 in one piece', () => {
+    const encode = CODES[2][1];
+    const count = 60_000;
+    const cage = readObj(encode(`${'v 1.5 -2 3e2\n'.repeat(count)}f 1 2 ${count}\n`));
+    expect(cage.positions.length).toBe(3 * count);
+    expect(Array.from(cage.positions.subarray(-3))).toEqual([1.5, -2, 300]);
+    expect(faces(cage)).toEqual([[0, 1, count - 1]]);
   });
 });
 
