@@ -3,7 +3,7 @@ import { log } from '@/lib/log';
 
 /** A fault that is not the file's: what it is called, and in plain words. */
 export interface PassingFault {
-  code: 'storage' | 'disk_full' | 'database' | 'busy' | 'memory' | 'thread' | 'worker_lost' | 'unknown';
+  code: 'storage' | 'network' | 'disk_full' | 'database' | 'busy' | 'memory' | 'thread' | 'worker_lost' | 'unknown';
   message: string;
 }
 
@@ -15,7 +15,7 @@ export class MemoryFault extends Error {
   }
 }
 
-const WORDS: Record<Exclude<PassingFault['code'], 'unknown' | 'storage'>, string> = {
+const WORDS: Record<Exclude<PassingFault['code'], 'unknown' | 'storage' | 'network'>, string> = {
   disk_full: 'A disk is full.',
   database: 'The database was out of reach.',
   busy: 'The database was busy with another change of the same rows.',
@@ -39,7 +39,7 @@ function chainOf(error: unknown): Error[] {
 function codeOf(error: Error): string {
   const given = 'code' in error && typeof error.code === 'string' ? error.code : '';
   // What comes out of a thread has lost its code, but says it in its message.
-  return given || (/\b(E[A-Z]{3,})\b/.exec(error.message)?.[1] ?? '');
+  return given || (/^(?:\w+ )?(E[A-Z]{2,})\b/.exec(error.message)?.[1] ?? '');
 }
 
 const NETWORK = /^(ECONNREFUSED|ECONNRESET|EPIPE|ETIMEDOUT|ENOTFOUND|EHOSTUNREACH|ENETUNREACH|EAI_AGAIN)$/;
@@ -62,7 +62,8 @@ export function passingFaultOf(error: unknown): PassingFault {
     if (ofDatabase === 'disk_full' || ofDatabase === 'database' || ofDatabase === 'busy') return known(ofDatabase);
     if (/Connection terminated|Client has encountered a connection error|timeout exceeded when trying to connect/.test(one.message)) return known('database');
     if (one.name === 'AbortError' || /Worker (exited|terminated)|terminating worker thread/i.test(one.message)) return known('thread');
-    if ('syscall' in one || /^E[A-Z]{2,}$/.test(code)) return NETWORK.test(code) && /:5432\b|postgres/i.test(one.message) ? known('database') : { code: 'storage', message: `The file could not be read from storage (${code || 'no reason given'}).` };
+    if (NETWORK.test(code)) return { code: 'network', message: `Database or storage was out of reach (${code}).` };
+    if ('syscall' in one || /^E[A-Z]{2,}$/.test(code)) return { code: 'storage', message: `The file could not be read from storage (${code || 'no reason given'}).` };
   }
   const reference = randomUUID();
   log.error({ err: error, reference }, 'a file met a fault that nobody foresaw');

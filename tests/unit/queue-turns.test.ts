@@ -2,6 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { laneOf, pickFiles, TURN_BYTES, TURN_FACES, TURN_FILES, type Candidate } from '@/lib/imports/pick-files';
 import { MemoryLedger } from '@/lib/jobs/memory-ledger';
+import { MemoryFault, passingFaultOf } from '@/lib/jobs/passing-fault';
 import { inTurn, nowOf, type Turn } from '@/lib/rules/fair-turns';
 
 const MB = 1024 * 1024;
@@ -155,5 +156,25 @@ describe('the memory of a process', () => {
     expect(ledger.roomFor('small')).toBe(0);
     ledger.forget('huge');
     expect(ledger.roomFor('small')).toBe(100);
+  });
+});
+
+describe('faults that may pass', () => {
+  const withCode = (message: string, given: Record<string, unknown>, cause?: unknown) => Object.assign(new Error(message, { cause }), given);
+  test.each([
+    ['storage out of reach', withCode('EIO: i/o error, read', { code: 'EIO', syscall: 'read' }), 'storage'],
+    ['the same out of a thread, which loses an error’s fields', new Error("EIO: i/o error, open '/files/blobs/ab'"), 'storage'],
+    ['a server that does not answer', new Error('Failed query', { cause: withCode('connect ECONNREFUSED 127.0.0.1:5999', { code: 'ECONNREFUSED', syscall: 'connect' }) }), 'network'],
+    ['the same out of a thread', new Error('connect ECONNREFUSED 127.0.0.1:9000'), 'network'],
+    ['a full disk of the storage', withCode('ENOSPC: no space left on device, write', { code: 'ENOSPC', syscall: 'write' }), 'disk_full'],
+    ['a full disk of the database, inside the query’s own error', new Error('Failed query', { cause: withCode('could not extend file', { code: '53100' }) }), 'disk_full'],
+    ['a database that shuts down', new Error('Failed query', { cause: withCode('terminating connection due to administrator command', { code: '57P01' }) }), 'database'],
+    ['a connection that broke', new Error('Failed query', { cause: new Error('Connection terminated unexpectedly') }), 'database'],
+    ['a deadlock', new Error('Failed query', { cause: withCode('deadlock detected', { code: '40P01' }) }), 'busy'],
+    ['a thread that was ended', new DOMException('The operation was aborted', 'AbortError'), 'thread'],
+    ['no memory beside others', new MemoryFault(), 'memory'],
+    ['anything else', new TypeError('x is not a function'), 'unknown'],
+  ])('%s', (_what, error, code) => {
+    expect(passingFaultOf(error)).toMatchObject({ code, message: expect.stringMatching(/^[A-Z].*\.$/) as string });
   });
 });
