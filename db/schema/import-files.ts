@@ -48,11 +48,7 @@ export const importFiles = pgTable(
     /** The line with a caret under the column, cut to a window; null where the whole file is meant. */
     errorExcerpt: text('error_excerpt'),
     attempts: integer('attempts').notNull().default(0),
-    /** Where the plan of its import puts it, written when it is queued: it waits until then. The ordinal is its place in the import. */
-    plannedAsset: text('planned_asset'),
-    plannedVersion: integer('planned_version'),
-    plannedCategory: text('planned_category'),
-    plannedQualified: boolean('planned_qualified').notNull().default(false),
+    /** Its place in its import's order, and when it began to wait for a turn; null before that. */
     ordinal: integer('ordinal'),
     queuedAt: timestamp('queued_at', { withTimezone: true }),
     /** Faces, where they were counted before measuring. */

@@ -5,7 +5,8 @@ import type { PlannedRow } from './import-plan-of';
 import { wakeWorkers } from './wake-workers';
 
 /**
- * Lets planned files wait for their turn, within the transaction that submits or retries them. Their places in the import's order are written down.
+ * Lets planned files wait for their turn, within the transaction that submits or retries them. Their places in the import's order are written down, and their
+ * faces where the same content was measured before, under whatever options.
  * @param plan all files of the import, since the order is of all of them
  * @param only ids of those that begin to wait; without it all of them
  */
@@ -13,7 +14,8 @@ export async function queueFiles(tx: Transaction, importId: string, plan: readon
   const rows = plan.toSorted(compareInProcessingOrder).map(({ id }, ordinal) => ({ id, ordinal, begins: only === undefined || only.has(id) }));
   if (!rows.some((row) => row.begins)) return;
   await tx.execute(sql`
-    update import_files f set ordinal = given.ordinal, queued_at = case when given.begins then now() else f.queued_at end
+    update import_files f set ordinal = given.ordinal, queued_at = case when given.begins then now() else f.queued_at end,
+      faces = coalesce(f.faces, (select max(r.faces) from geometry_records r where r.content_sha256 = f.sha256))
     from json_to_recordset(${JSON.stringify(rows)}::json) as given(id uuid, ordinal integer, begins boolean)
     where f.id = given.id and f.import_id = ${importId} and (given.begins or f.ordinal is distinct from given.ordinal)`);
   await wakeWorkers(tx, importId);
