@@ -6,7 +6,7 @@ import { blobs } from '@/db/schema/blobs';
 import { uploadParts } from '@/db/schema/upload-parts';
 import { config } from '@/lib/config';
 import { blobKey, BLOBS, disk, partKey } from './disk';
-import { listStored } from './list-stored';
+import { listByFolder, type StoredFile } from './list-stored';
 import { openBlob } from './open-blob';
 import { isTransientStorageFault } from './storage-fault';
 import { sizeInStorage } from './size-in-storage';
@@ -55,14 +55,16 @@ interface CheckOptions {
 export async function checkStorage(db: Database, options: CheckOptions): Promise<StorageCheck> {
   const found: StorageCheck = { blobs: 0, bytes: 0, faults: [] };
   const graceBefore = Date.now() - config().orphanHours * 3_600_000;
+  const folders = listByFolder(BLOBS)[Symbol.asyncIterator]();
+  let folder = await folders.next();
   for (let prefix = 0; prefix < 256; prefix++) {
     const head = prefix.toString(16).padStart(2, '0');
+    const stored = new Map<string, StoredFile>();
+    for (; !folder.done && folder.value.name <= head; folder = await folders.next()) for (const [key, file] of folder.value.files) stored.set(key, file);
     const { rows } = await db.execute<BlobRow>(sql`
       select sha256, byte_size, seen_at,
         exists (select 1 from import_files f where f.sha256 = b.sha256) or exists (select 1 from geometry_records r where r.content_sha256 = b.sha256) as needed
       from blobs b where sha256 >= ${head} and sha256 < ${`${head}g`} order by sha256`);
-    const stored = new Map<string, { byteSize: number; modified: Date }>();
-    for await (const { key, ...about } of listStored(`${BLOBS}/${head}`)) stored.set(key, about);
     for (const row of rows) {
       found.blobs++;
       found.bytes += Number(row.byte_size);
@@ -71,12 +73,9 @@ export async function checkStorage(db: Database, options: CheckOptions): Promise
       if (fault) found.faults.push(await mendBlob(db, row, fault, options.mend));
       stored.delete(key);
     }
-    for (const [key, { byteSize, modified }] of stored) {
-      const isOurs = /^[0-9a-f]{64}$/.test(key.slice(key.lastIndexOf('/') + 1)) && key === blobKey(key.slice(key.lastIndexOf('/') + 1));
-      if (isOurs && modified.getTime() > graceBefore) continue;
-      found.faults.push({ kind: isOurs ? 'unknown' : 'strange', key, byteSize: null, storedBytes: byteSize, concerns: [], mended: isOurs && options.mend ? 'removed' : null });
-    }
+    found.faults.push(...unknownFiles(stored.values(), graceBefore, options.mend));
   }
+  for (; !folder.done; folder = await folders.next()) found.faults.push(...unknownFiles(folder.value.files.values(), graceBefore, options.mend));
   found.faults.push(...(await checkParts(db, options.mend)));
   if (options.mend) {
     let removed: number;
@@ -88,6 +87,16 @@ export async function checkStorage(db: Database, options: CheckOptions): Promise
 }
 
 type BlobRow = { sha256: string; byte_size: string; seen_at: string; needed: boolean };
+
+/** Files without a row: old ones of ours, and whatever has no name of ours. */
+function unknownFiles(files: Iterable<StoredFile>, graceBefore: number, mend: boolean): StorageFault[] {
+  return [...files].flatMap(({ key, byteSize, modified }) => {
+    const name = key.slice(key.lastIndexOf('/') + 1);
+    const isOurs = /^[0-9a-f]{64}$/.test(name) && key === blobKey(name);
+    if (isOurs && modified.getTime() > graceBefore) return [];
+    return [{ kind: isOurs ? ('unknown' as const) : ('strange' as const), key, byteSize: null, storedBytes: byteSize, concerns: [], mended: isOurs && mend ? ('removed' as const) : null }];
+  });
+}
 
 async function checkBlob(db: Database, row: BlobRow, stored: { byteSize: number } | null, graceBefore: number, deep: boolean): Promise<StorageFault | null> {
   const byteSize = Number(row.byte_size);

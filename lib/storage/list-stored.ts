@@ -16,3 +16,26 @@ export async function* listStored(folder: string): AsyncIterable<StoredFile> {
     if (about) yield { key: object.key, byteSize: about.contentLength, modified: about.lastModified };
   }
 }
+
+/** The same, gathered by the folders right below, in the order of their names; a folder's files are held in memory together, by key. */
+export async function* listByFolder(folder: string): AsyncIterable<{ name: string; files: Map<string, StoredFile> }> {
+  if (config().s3) return yield* gathered(listStored(folder), folder);
+  const names = [...(await (await disk()).listAll(`${folder}/`)).objects].map((one) => (one.isDirectory ? one.prefix : one.key).slice(folder.length + 1)).sort();
+  for (const name of names) {
+    const files = new Map<string, StoredFile>();
+    for await (const file of listStored(`${folder}/${name}`)) files.set(file.key, file);
+    yield { name, files };
+  }
+}
+
+/** A bucket lists its keys in order, so that a folder's come together. */
+async function* gathered(all: AsyncIterable<StoredFile>, folder: string): AsyncIterable<{ name: string; files: Map<string, StoredFile> }> {
+  let held: { name: string; files: Map<string, StoredFile> } | null = null;
+  for await (const file of all) {
+    const [name] = file.key.slice(folder.length + 1).split('/');
+    if (held && held.name !== name) yield held;
+    if (held?.name !== name) held = { name, files: new Map() };
+    held.files.set(file.key, file);
+  }
+  if (held) yield held;
+}

@@ -22,7 +22,7 @@ export interface TestS3 {
 const BUCKET = 'weighhouse';
 const KEYS = { accessKeyId: 'S3RVER', secretAccessKey: 'S3RVER' };
 
-/** A bucket on loopback. A server in front of it counts requests, makes faults, and lists multipart uploads, which the fake cannot. */
+/** A bucket on loopback. A server in front of it counts requests, makes faults, and lists and aborts multipart uploads, which the fake cannot. */
 export async function startS3(): Promise<TestS3> {
   const directory = await mkdtemp(path.join(os.tmpdir(), 'weighhouse-s3-'));
   const fake = new S3rver({ port: 0, address: '127.0.0.1', silent: true, directory, configureBuckets: [{ name: BUCKET, configs: [] }] });
@@ -49,8 +49,10 @@ export async function startS3(): Promise<TestS3> {
     const asked = `${incoming.method} ${incoming.url}`;
     s3.asked.push(asked);
     const fault = s3.fault(asked);
+    const uploadId = new URL(incoming.url ?? '/', 'http://s3.example').searchParams.get('uploadId');
     if (fault === 'drop') incoming.socket.destroy();
     else if (fault !== null) answer.writeHead(fault).end();
+    else if (incoming.method === 'DELETE' && uploadId) void rm(path.join(begun, path.basename(uploadId)), { recursive: true, force: true }).then(() => answer.writeHead(204).end());
     else if (incoming.method === 'GET' && /[?&]uploads(=|&|$)/.test(incoming.url ?? '')) void list(answer);
     else pass(incoming, answer);
   });
