@@ -107,10 +107,10 @@ export class ObjPlainLines implements PlainLineReader {
       if (corners === MOST_CORNERS) return NOT_PLAIN;
       const back = byte === MINUS;
       if (back) byte = bytes[++at];
-      let digit = byte - ZERO;
-      if (digit < 0 || digit > 9) return NOT_PLAIN;
+      let digit = byte ^ ZERO;
+      if (digit > 9) return NOT_PLAIN;
       let number = 0;
-      for (; digit >= 0 && digit <= 9 && number <= vertices; digit = bytes[++at] - ZERO) number = number * 10 + digit;
+      for (; digit <= 9 && number <= vertices; digit = bytes[++at] ^ ZERO) number = number * 10 + digit;
       if (number < 1 || number > vertices) return NOT_PLAIN;
       piece[used + corners++] = back ? vertices - number : number - 1;
       byte = bytes[at];

@@ -4,6 +4,7 @@ const SPACE = 0x20;
 const PLUS = 0x2b;
 const MINUS = 0x2d;
 const DOT = 0x2e;
+/** The codes of the ten digits differ from this one's by the digit's own bits, those of all else by a number above 9. */
 const ZERO = 0x30;
 /** `e` and `E`, when the bit that tells small letters is set. */
 const LETTER_E = 0x65;
@@ -37,8 +38,8 @@ export function readDecimal(bytes: Uint8Array, at: number, into: Float64Array, s
   let point = -1;
   let high = 0;
   for (; high < FULL_GROUP; byte = bytes[++at]) {
-    const digit = byte - ZERO;
-    if (digit >= 0 && digit <= 9) high = high * 10 + digit;
+    const digit = byte ^ ZERO;
+    if (digit <= 9) high = high * 10 + digit;
     else if (byte === DOT && point < 0) point = at;
     else break;
   }
@@ -48,16 +49,16 @@ export function readDecimal(bytes: Uint8Array, at: number, into: Float64Array, s
   let rest = 0;
   if (high >= FULL_GROUP) {
     for (; lowDigits < GROUP; byte = bytes[++at]) {
-      const digit = byte - ZERO;
-      if (digit >= 0 && digit <= 9) {
+      const digit = byte ^ ZERO;
+      if (digit <= 9) {
         low = low * 10 + digit;
         lowDigits++;
       } else if (byte === DOT && point < 0) point = at;
       else break;
     }
     for (; ; byte = bytes[++at]) {
-      const digit = byte - ZERO;
-      if (digit >= 0 && digit <= 9) {
+      const digit = byte ^ ZERO;
+      if (digit <= 9) {
         rest |= digit;
         dropped++;
       } else if (byte === DOT && point < 0) point = at;
