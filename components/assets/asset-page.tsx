@@ -25,10 +25,12 @@ interface AssetPageProps {
   /** Locks it in its shots; null for whoever does not lock. */
   locking: ReactNode;
   tellMe: ReactNode;
+  /** Parts that look renamed; nothing where none does. */
+  renames: ReactNode;
 }
 
 /** An asset: its surface, its parts and what they weigh together. */
-export function AssetPage({ frame, detail, actions, locking, tellMe }: AssetPageProps) {
+export function AssetPage({ frame, detail, actions, locking, tellMe, renames }: AssetPageProps) {
   const { total, parts, findings, versions, scale } = detail;
   const [chosen, setChosen] = useState(parts[0]?.part ?? '');
   const mesh = useAssetMesh(frame.code, total.asset, total.version);
@@ -54,6 +56,7 @@ export function AssetPage({ frame, detail, actions, locking, tellMe }: AssetPage
         </div>
         <StateMark state={total.state} />
       </header>
+      {renames}
       <div className="grid lg:min-h-0 lg:flex-1 lg:grid-cols-[minmax(0,1fr)_22rem]">
         <div className="flex min-w-0 flex-col lg:min-h-0 lg:overflow-y-auto">
           <div className="flex h-[26rem] shrink-0 flex-col border-b border-rule lg:h-[min(36rem,58dvh)]">

@@ -1,6 +1,7 @@
 'use client';
 
 import { useState } from 'react';
+import { PartRenames } from '@/components/renames/part-renames';
 import { PageHeading } from '@/components/shell/page-heading';
 import { Button } from '@/components/ui/button';
 import { useImportFiles, type FileQuery } from '@/hooks/use-import-files';
@@ -59,6 +60,7 @@ export function ImportReport({ show, upAxis, initial, first, address, mayImport 
         }
       />
       <ImportProgress summary={summary} />
+      <PartRenames show={show} scope={{ import: initial.id }} mayDecide={mayImport} waiting={summary.state !== 'done'} />
       <ReportToolbar filters={filters} onChange={(change) => void setFilters(change)} counts={files.counts} found={files.found} />
       <ImportStanding summary={summary} trouble={isOnline ? trouble : 'offline'} />
       {files.isError && isEmpty ? (
