@@ -11,8 +11,20 @@ const asked = new Map<number, Asked>();
 let worker: Worker | null = null;
 let next = 1;
 
-/** Hashes a file away from the page's own thread. Errors: an Error when the browser cannot read it. */
+/** What was hashed once, for the preview say, is not again while the page holds the file. */
+const known = new WeakMap<Blob, { partBytes: number; hashes: Promise<FileHashes> }>();
+
+/** Hashes a file away from the page's own thread, once. Errors: an Error when the browser cannot read it. */
 export function hashFile(file: Blob, partBytes: number, onProgress: (hashedBytes: number) => void): Promise<FileHashes> {
+  const held = known.get(file);
+  if (held?.partBytes === partBytes) return held.hashes;
+  const hashes = hashAway(file, partBytes, onProgress);
+  known.set(file, { partBytes, hashes });
+  hashes.catch(() => known.delete(file));
+  return hashes;
+}
+
+function hashAway(file: Blob, partBytes: number, onProgress: (hashedBytes: number) => void): Promise<FileHashes> {
   if (typeof Worker === 'undefined') return hashParts(file, partBytes, onProgress);
   worker ??= begin();
   const order: HashOrder = { id: next++, file, partBytes };

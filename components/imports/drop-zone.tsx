@@ -9,7 +9,7 @@ import { byteWords } from '@/lib/rules/byte-words';
 import type { ImportPreparation } from '@/lib/rules/import-answer';
 
 interface DropZoneProps {
-  limits: Pick<ImportPreparation, 'extensions' | 'max_file_bytes' | 'max_files'>;
+  limits: Pick<ImportPreparation, 'extensions' | 'max_file_bytes' | 'max_files' | 'max_import_bytes' | 'left_bytes'>;
   onFiles: (files: readonly File[]) => void;
   /** A strip above the table instead of a whole page. */
   slim?: boolean;
@@ -62,7 +62,7 @@ export function DropZone({ limits, onFiles, slim = false, disabled = false }: Dr
       <div className={slim ? 'min-w-0 flex-1 basis-60' : 'max-w-xl'}>
         <p className={slim ? 'text-14' : 'text-22 font-medium'}>{isProcessing ? 'Reading the folder…' : isDragActive ? 'Let go to look at them' : slim ? 'Drop more files or folders' : 'Drop cages, or a folder of them'}</p>
         <p className={cn('text-ink-2', slim ? 'text-13' : 'mt-2 text-14')}>
-          {kinds}, up to {byteWords(limits.max_file_bytes)} a file and {limits.max_files.toLocaleString('en')} files.
+          {kinds}, up to {byteWords(limits.max_file_bytes)} a file, {limits.max_files.toLocaleString('en')} files and {byteWords(limits.max_import_bytes)} an import. There is room for {byteWords(limits.left_bytes)}.
           {slim ? null : ' Nothing goes up before you have seen where each file goes.'}
         </p>
       </div>
