@@ -1,7 +1,7 @@
 import { nextHalfEdge } from '../mesh/topology';
 import { edgePoint, facePoints, vertexPoint, VertexStars } from './catmull-clark-masks';
 import { cutOut } from './cut-out';
-import type { LevelMesh } from './level-mesh';
+import { levelMesh, type LevelMesh } from './level-mesh';
 import type { RefinementRules } from './refinement-rules';
 import { childEdgeSharpness, countSemiSharp, decayed } from './sharpness-decay';
 import { wantedVertices } from './wanted-vertices';
@@ -68,10 +68,10 @@ export function refineAround(whole: LevelMesh, rules: RefinementRules): LevelMes
     borderFrom[at + 3] = mesh.borderFrom[p] + half;
   }
   const { positions, vertexSharpness } = points.finish();
-  return {
+  return levelMesh({
     faces: children, vertices: vertexSharpness.length, starts, vertexOf, faceOf, twin, edgeSharpness, vertexSharpness,
     positions, bodyOf, live, level: mesh.level + 1, borderOf, borderFrom,
-  };
+  });
 }
 
 /** Hands out the child points, each computed on first use. */

@@ -1,4 +1,4 @@
-import type { LevelMesh } from './level-mesh';
+import { levelMesh, type LevelMesh } from './level-mesh';
 
 /** Part of a mesh's half-edges up to which cutting out what a refinement reads is worth its own passes. */
 const WORTH = 1 / 2;
@@ -59,5 +59,5 @@ export function cutOut(mesh: LevelMesh, wanted: Uint8Array): { mesh: LevelMesh; 
     vertexSharpness[v] = mesh.vertexSharpness[old];
     ownWanted[v] = wanted[old];
   }
-  return { mesh: { ...part, faces: faces.length, vertices: oldOf.length, positions: points, vertexSharpness, level: mesh.level }, wanted: ownWanted };
+  return { mesh: levelMesh({ ...part, faces: faces.length, vertices: oldOf.length, positions: points, vertexSharpness, level: mesh.level }), wanted: ownWanted };
 }

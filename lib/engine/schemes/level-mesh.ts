@@ -21,6 +21,13 @@ export interface LevelMesh extends Topology {
   borderFrom: Float32Array;
 }
 
+/** The same, with its fields in one order: readers in hot loops then meet one kind of object at all levels. */
+export function levelMesh({
+  faces, vertices, starts, vertexOf, faceOf, twin, edgeSharpness, vertexSharpness, positions, bodyOf, live, level, borderOf, borderFrom,
+}: LevelMesh): LevelMesh {
+  return { faces, vertices, starts, vertexOf, faceOf, twin, edgeSharpness, vertexSharpness, positions, bodyOf, live, level, borderOf, borderFrom };
+}
+
 /** Whether the surface is creased for good along this half-edge's edge: a border, or infinitely sharp. */
 export function isSharpForGood(mesh: Topology, h: number): boolean {
   return mesh.twin[h] < 0 || mesh.edgeSharpness[h] === Infinity;
@@ -46,7 +53,7 @@ export function levelZero(
   // One side's curve stands for both, so that what one body gains the other loses to the last bit.
   for (const h of borders) if (borderEdgeOf(mesh, bodyOf, blocked, h) === h) borderOf[h] = h;
   const vertexSharpness = boundary === 'edge-and-corner' ? withCorners(mesh, borders) : mesh.vertexSharpness;
-  return { ...mesh, positions, bodyOf, live, level: 0, borderOf, borderFrom: new Float32Array(mesh.twin.length), vertexSharpness };
+  return levelMesh({ ...mesh, positions, bodyOf, live, level: 0, borderOf, borderFrom: new Float32Array(mesh.twin.length), vertexSharpness });
 }
 
 /** Vertex sharpness with the border vertices that have one face made corners. */

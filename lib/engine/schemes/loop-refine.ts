@@ -1,7 +1,7 @@
 import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
 import { VertexStars } from './catmull-clark-masks';
 import { cutOut } from './cut-out';
-import type { LevelMesh } from './level-mesh';
+import { levelMesh, type LevelMesh } from './level-mesh';
 import { loopWeight } from './loop-fan';
 import type { RefinementRules } from './refinement-rules';
 import { childEdgeSharpness, countSemiSharp, decayed, type SemiSharpAround } from './sharpness-decay';
@@ -75,7 +75,7 @@ export function refineTriangles(whole: LevelMesh, rules: RefinementRules): Level
       fine.live[middle] = mesh.live[face];
     }
   }
-  return { ...fine, ...points.finish() };
+  return levelMesh({ ...fine, ...points.finish() });
 }
 
 /** Hands out the child points, each computed on first use. */
