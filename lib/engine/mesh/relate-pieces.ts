@@ -3,7 +3,7 @@ import { elementHulls, limitTriangles, refineLimit, startLimit, type LimitLevel 
 import { boxesMeet, eachMeetingPair, growBox, type BoxTree } from './box-tree';
 import { cageVolumes } from './cage-volumes';
 import { crossPieces, sizeOf, TOUCHING_SHARE, treesOf } from './cross-pieces';
-import { emptyBoxes } from './face-hulls';
+import { emptyBoxes, growToPoint } from './face-hulls';
 import type { Bodies } from './partition';
 import type { Topology } from './topology';
 
@@ -56,15 +56,15 @@ export function relatePieces(mesh: Topology, filePositions: Float64Array, { piec
   const relations: PieceRelations = { pieceOf, firstFaces: new Int32Array(count), crossings: [], insides: [], complete: true };
   for (let face = mesh.faces - 1; face >= 0; face--) relations.firstFaces[pieceOf[face]] = face;
   if (count < 2) return relations;
+  const left = new Uint8Array(count);
+  for (let face = 0; face < mesh.faces; face++) if (skipped[face] === 1) left[pieceOf[face]] = 1;
+  // Each piece's limit lies in the box of its own vertices: where no two of these meet, nothing else need be made.
+  if (meetingPieces(vertexBoxes(mesh, filePositions, pieceOf, count), left, relations).length === 0) return relations;
   const positions = nearOrigin(filePositions);
   let level = startLimit(mesh, positions, options);
   let hulls = elementHulls(level, options);
   const boxes = emptyBoxes(count);
-  const left = new Uint8Array(count);
-  for (let face = 0; face < mesh.faces; face++) {
-    growBox(boxes, 6 * pieceOf[face], hulls, 6 * face);
-    if (skipped[face] === 1) left[pieceOf[face]] = 1;
-  }
+  for (let face = 0; face < mesh.faces; face++) growBox(boxes, 6 * pieceOf[face], hulls, 6 * face);
   const pairs = meetingPieces(boxes, left, relations);
   if (pairs.length === 0) return relations;
   const involved = new Uint8Array(count);
@@ -80,6 +80,16 @@ export function relatePieces(mesh: Topology, filePositions: Float64Array, { piec
   const pieces = { boxes, closed: piecesClosed(mesh, pieceOf, count), volumes: cageVolumes(mesh, positions, pieceOf, count) };
   crossPieces(pairs, pieces, limitTriangles(level, options), relations);
   return relations;
+}
+
+/** Boxes of the vertices of each piece. */
+function vertexBoxes({ starts, vertexOf, faces }: Topology, positions: Float64Array, pieceOf: Int32Array, count: number): Float64Array {
+  const boxes = emptyBoxes(count);
+  for (let face = 0; face < faces; face++) {
+    const at = 6 * pieceOf[face];
+    for (let h = starts[face]; h < starts[face + 1]; h++) growToPoint(boxes, at, positions, 3 * vertexOf[h]);
+  }
+  return boxes;
 }
 
 /** Positions about the first vertex: a common frame for all pieces in which a far origin costs no digits. */
@@ -107,11 +117,18 @@ function meetingPieces(boxes: Float64Array, left: Uint8Array, relations: PieceRe
 /** Leaves alive only the elements that the tests of the pairs may need; answers how many. */
 function keepWhatMayMeet(level: LimitLevel, hulls: Float64Array, pairs: readonly number[], involved: Uint8Array, boxes: Float64Array, relations: PieceRelations): number {
   const { live, bodyOf } = level;
-  const alive = Array.from(live.keys()).filter((element) => live[element] === 1);
-  const trees = treesOf((element) => relations.pieceOf[bodyOf[element]], alive, involved, hulls);
+  const { pieceOf, firstFaces } = relations;
+  const reach = reachOf(pairs, boxes);
+  const near: number[] = [];
   // Elements of each piece's first face, where the ray starts that tells whether the piece lies inside another.
   const starts: number[][] = Array.from(involved, () => []);
-  for (const element of alive) if (relations.firstFaces[relations.pieceOf[bodyOf[element]]] === bodyOf[element]) starts[relations.pieceOf[bodyOf[element]]].push(element);
+  for (let element = 0; element < live.length; element++) {
+    const piece = pieceOf[bodyOf[element]];
+    if (live[element] === 0 || involved[piece] === 0) continue;
+    if (firstFaces[piece] === bodyOf[element]) starts[piece].push(element);
+    if (boxesMeet(reach, 6 * piece, hulls, 6 * element)) near.push(element);
+  }
+  const trees = treesOf((element) => pieceOf[bodyOf[element]], near, involved, hulls);
   const kept = new Uint8Array(live.length);
   let budget = MOST_MET;
   for (let i = 0; i < pairs.length; i += 2) {
@@ -130,12 +147,32 @@ function keepWhatMayMeet(level: LimitLevel, hulls: Float64Array, pairs: readonly
   return kept.reduce((sum, one) => sum + one, 0);
 }
 
+/** Per piece the box of all that its partners in the pairs may ask of it: what meets their boxes, and what rays from there along +x pass through. */
+function reachOf(pairs: readonly number[], boxes: Float64Array): Float64Array {
+  const reach = emptyBoxes(boxes.length / 6);
+  for (let i = 0; i < pairs.length; i++) {
+    const piece = pairs[i];
+    const partner = pairs[i ^ 1];
+    const margin = rayMargin(boxes, partner);
+    for (let axis = 0; axis < 3; axis++) {
+      reach[6 * piece + axis] = Math.min(reach[6 * piece + axis], boxes[6 * partner + axis] - margin);
+      reach[6 * piece + 3 + axis] = axis === 0 ? Infinity : Math.max(reach[6 * piece + 3 + axis], boxes[6 * partner + 3 + axis] + margin);
+    }
+  }
+  return reach;
+}
+
+/** How far a ray's start may lie beside the surface: it is moved inwards, and lies deeper than touching. */
+function rayMargin(boxes: Float64Array, piece: number): number {
+  return 2 * TOUCHING_SHARE * sizeOf(boxes, piece);
+}
+
 /** Keeps the first element of the inner piece and what a ray along +x from there may pass through of the outer one. */
 function keepRay(starts: readonly number[], inner: number, outer: number, tree: BoxTree, hulls: Float64Array, boxes: Float64Array, kept: Uint8Array): void {
   if (starts.length === 0) return;
   const way = emptyBoxes(1);
   for (const element of starts) growBox(way, 0, hulls, 6 * element);
-  const margin = 2 * TOUCHING_SHARE * sizeOf(boxes, inner);
+  const margin = rayMargin(boxes, inner);
   for (let axis = 0; axis < 3; axis++) {
     way[axis] -= margin;
     way[3 + axis] += margin;
