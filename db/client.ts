@@ -12,6 +12,8 @@ export type Transaction = Parameters<Parameters<Database['transaction']>[0]>[0];
 export function connect(url: string, max = 10): { db: Database; pool: Pool; close: () => Promise<void> } {
   const pool = new Pool({ connectionString: url, max });
   pool.on('error', () => undefined);
+  // A connection that breaks between two statements of a transaction has nobody listening but us: the next statement says so, and the process must not end of it.
+  pool.on('connect', (client) => client.on('error', () => undefined));
   return { db: drizzle(pool, { schema }), pool, close: () => pool.end() };
 }
 
