@@ -43,13 +43,13 @@ export function FileRow({ file, show, upAxis, isOpen, onToggle, top, index, meas
         <div role="cell" className="text-right">
           <FindingCounts file={file} />
         </div>
-        <div role="cell">
+        <div role="cell" className="pl-4">
           <Size file={file} upAxis={upAxis} />
         </div>
         <div role="cell" className="min-w-0">{isOpen ? null : <ToKnow file={file} />}</div>
       </div>
       {isOpen ? (
-        <div id={detailId} role="cell" aria-colspan={9} className="pb-4 pl-10 md:max-w-4xl">
+        <div id={detailId} role="cell" aria-colspan={9} className="pb-4 pl-8 md:max-w-4xl">
           <FileDetail file={file} show={show} />
         </div>
       ) : null}

@@ -62,7 +62,7 @@ export function ImportReport({ show, upAxis, initial, first, address, mayImport 
       <ImportProgress summary={summary} />
       <PartRenames show={show} scope={{ import: initial.id }} mayDecide={mayImport} waiting={summary.state !== 'done'} />
       <ReportToolbar filters={filters} onChange={(change) => void setFilters(change)} counts={files.counts} found={files.found} />
-      <ImportStanding summary={summary} trouble={isOnline ? trouble : 'offline'} />
+      <ImportStanding show={show} summary={summary} trouble={isOnline ? trouble : 'offline'} />
       {files.isError && isEmpty ? (
         <div role="alert" className="flex flex-col items-start gap-3 px-4 py-10 text-14 md:px-6">
           <p>The files could not be read. {files.error.message}</p>

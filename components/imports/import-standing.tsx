@@ -1,3 +1,4 @@
+import Link from 'next/link';
 import type { LiveTrouble } from '@/hooks/use-import-live';
 import type { ImportSummary } from '@/lib/rules/import-answer';
 import { measureWords } from './measure-option-words';
@@ -10,12 +11,15 @@ const TROUBLES: Record<Exclude<LiveTrouble, null> | 'offline', string> = {
 };
 
 /** Who opened the import, how its files are measured, and whether what is shown is of now. */
-export function ImportStanding({ summary, trouble }: { summary: ImportSummary; trouble: LiveTrouble | 'offline' }) {
+export function ImportStanding({ show, summary, trouble }: { show: string; summary: ImportSummary; trouble: LiveTrouble | 'offline' }) {
   const isOver = summary.state === 'done' || summary.state === 'cancelled';
   const facts = [summary.created_by, ...measureWords(summary)];
   return (
     <p className="px-4 pt-2.5 pb-2 text-13 text-ink-3 md:px-6">
-      {facts.join(' · ')}
+      <Link href={`/shows/${encodeURIComponent(show)}/imports`} className="link">
+        All imports
+      </Link>
+      {` · ${facts.join(' · ')}`}
       {trouble !== null ? (
         <span role="alert" className="text-ink">
           {' '}

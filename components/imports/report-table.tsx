@@ -15,14 +15,14 @@ const HEAD_HEIGHT = 36;
 /** Rows before the end from which the next page is read. */
 const READ_AHEAD = 25;
 
-const HEADS: { word: string; sort?: 'name' | 'asset' | 'parts' | 'problems'; right?: boolean }[] = [
+const HEADS: { word: string; sort?: 'name' | 'asset' | 'parts' | 'problems'; right?: boolean; inset?: boolean }[] = [
   { word: 'File', sort: 'name' },
   { word: 'Outcome' },
   { word: 'Asset', sort: 'asset' },
   { word: 'Version' },
   { word: 'Parts', sort: 'parts', right: true },
   { word: 'Problems', sort: 'problems', right: true },
-  { word: 'Height, m' },
+  { word: 'Height, m', inset: true },
   { word: 'To know' },
 ];
 
@@ -82,8 +82,14 @@ export function ReportTable({ show, upAxis, rows, found, sort, onSort, opened, o
   );
 }
 
-function Head({ word, sort, right, now, onSort }: (typeof HEADS)[number] & { now: FileSort; onSort: (sort: FileSort) => void }) {
-  if (sort === undefined) return <span role="columnheader">{word}</span>;
+function Head({ word, sort, right, inset, now, onSort }: (typeof HEADS)[number] & { now: FileSort; onSort: (sort: FileSort) => void }) {
+  if (sort === undefined) {
+    return (
+      <span role="columnheader" className={inset ? 'pl-4' : undefined}>
+        {word}
+      </span>
+    );
+  }
   const isUp = now === sort;
   const isDown = now === `-${sort}`;
   // Counts are wanted from the largest; a third press goes back to what needs somebody first.
