@@ -48,6 +48,17 @@ export interface FileTrouble {
   again_at: string;
 }
 
+/** Answer of GET …/imports/{id}/faults: one try of one file that ended in a fault which may pass. `again_at` is null where it was given up. */
+export interface ImportFault {
+  name: string;
+  at: string;
+  attempt: number;
+  worker: string | null;
+  code: string;
+  message: string;
+  again_at: string | null;
+}
+
 /** One file of an import. `size_m` is the box of the whole asset in its own axes, metres: x, y, z. */
 export interface ImportFileAnswer {
   name: string;

@@ -6,6 +6,7 @@ import { GET as LIST, POST as OPEN } from '@/app/api/v1/shows/[show]/imports/rou
 import { GET } from '@/app/api/v1/shows/[show]/imports/[import]/route';
 import { POST as CANCEL } from '@/app/api/v1/shows/[show]/imports/[import]/cancel/route';
 import { GET as EVENTS } from '@/app/api/v1/shows/[show]/imports/[import]/events/route';
+import { GET as FAULTS } from '@/app/api/v1/shows/[show]/imports/[import]/faults/route';
 import { PUT } from '@/app/api/v1/shows/[show]/imports/[import]/files/[...name]/route';
 import { POST as PAUSE } from '@/app/api/v1/shows/[show]/imports/[import]/pause/route';
 import { POST as RESUME } from '@/app/api/v1/shows/[show]/imports/[import]/resume/route';
@@ -91,6 +92,11 @@ describe('who may do what', () => {
     return { method: 'POST', params: { show: cast.show.code, import: await submittedOne(cast) }, token: cast.tokenOf(caller) };
   });
 
+  eachCaller('reading what went wrong', FAULTS, READERS, TABLES, async (caller) => {
+    const cast = await createCast();
+    return { params: { show: cast.show.code, import: await submittedOne(cast) }, token: cast.tokenOf(caller) };
+  });
+
   eachCaller('resuming', RESUME, writers(200), TABLES, async (caller) => {
     const cast = await createCast();
     const id = await submittedOne(cast);
@@ -98,11 +104,11 @@ describe('who may do what', () => {
     return { method: 'POST', params: { show: cast.show.code, import: id }, token: cast.tokenOf(caller) };
   });
 
-  test.each([['GET', GET], ['SUBMIT', SUBMIT], ['RETRY', RETRY], ['CANCEL', CANCEL], ['PAUSE', PAUSE], ['RESUME', RESUME]] as const)('%s of an import of another show is not found', async (_verb, handler) => {
+  test.each([['GET', GET], ['SUBMIT', SUBMIT], ['RETRY', RETRY], ['CANCEL', CANCEL], ['PAUSE', PAUSE], ['RESUME', RESUME], ['FAULTS', FAULTS]] as const)('%s of an import of another show is not found', async (_verb, handler) => {
     const [mine, other] = [await createCast(), await createCast()];
     const id = await openOne(other, { 'ox.obj': cubeObj() });
     const before = await rowsOf(...TABLES);
-    const answer = await call(handler, { method: handler === GET ? 'GET' : 'POST', params: { show: mine.show.code, import: id }, token: mine.people.lead.token });
+    const answer = await call(handler, { method: handler === GET || handler === FAULTS ? 'GET' : 'POST', params: { show: mine.show.code, import: id }, token: mine.people.lead.token });
     expectProblem(answer, 404, 'not_found');
     expect(await rowsOf(...TABLES)).toBe(before);
   });

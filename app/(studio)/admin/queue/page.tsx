@@ -1,6 +1,7 @@
 import type { Metadata } from 'next';
 import { GivenUpFiles } from '@/components/admin/given-up-files';
 import { QueueFacts } from '@/components/admin/queue-facts';
+import { RefreshNowAndThen } from '@/components/admin/refresh-now-and-then';
 import { PageHeading } from '@/components/shell/page-heading';
 import { getAdminPageContext } from '@/lib/auth/get-page-context';
 import { getQueue } from '@/lib/jobs/get-queue';
@@ -13,6 +14,7 @@ export default async function QueuePage() {
   return (
     <>
       <PageHeading title="Queue" />
+      <RefreshNowAndThen />
       <div className="flex flex-col gap-10 px-4 py-6 md:px-6">
         <QueueFacts {...state} />
         <GivenUpFiles files={state.given_up} retry={retryFilesAction} />
