@@ -1,5 +1,5 @@
 import type { Boundary } from '../cage';
-import type { LevelMesh } from './level-mesh';
+import { levelMesh, type LevelMesh } from './level-mesh';
 
 /**
  * A mesh of Doo-Sabin refinement. At level 0 it is the cage: `live`, `bodyOf` and `borderOf` belong to faces and their half-edges. From level 1 on
@@ -22,12 +22,18 @@ export interface DooSabinMesh extends LevelMesh {
   spokes: number;
 }
 
+/** The same, with its fields in one order at all levels (see `levelMesh`). */
+export function dooSabinMesh(mesh: DooSabinMesh): DooSabinMesh {
+  const { keepsCorners, rimOf, rimFrom, rimShare, firstSpoke, spokes } = mesh;
+  return { ...levelMesh(mesh), keepsCorners, rimOf, rimFrom, rimShare, firstSpoke, spokes };
+}
+
 /** The cage as level 0 of Doo-Sabin refinement; corners tagged in the file do not count. */
 export function dooSabinCage(cage: LevelMesh, boundary: Boundary): DooSabinMesh {
-  return {
+  return dooSabinMesh({
     ...cage, keepsCorners: boundary === 'edge-and-corner', rimOf: new Int32Array(0), rimFrom: new Float32Array(0), rimShare: new Float32Array(0),
     firstSpoke: cage.vertexOf.length, spokes: cage.vertexOf.length,
-  };
+  });
 }
 
 /** Whether a spoke's curve, given by its number, runs outwards. */

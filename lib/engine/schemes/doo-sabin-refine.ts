@@ -1,7 +1,7 @@
 import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
 import { addBorderCurves } from './doo-sabin-borders';
 import { dooSabinWeight } from './doo-sabin-fan';
-import type { DooSabinMesh } from './doo-sabin-mesh';
+import { dooSabinMesh, type DooSabinMesh } from './doo-sabin-mesh';
 
 /** Where the parts of a mesh are found in the refined one. Half-edge numbers unless said; -1 where there is none. */
 export interface Offspring {
@@ -116,14 +116,14 @@ export function refineDooSabin(mesh: DooSabinMesh, pending: Uint8Array, keep: Ui
     lay.join(at.inEdge[h] + 3, at.inVertex[beyond]);
   }
   const laid = lay.finish();
-  const fine: DooSabinMesh = {
+  const fine = dooSabinMesh({
     ...laid, vertices, edgeSharpness: new Float32Array(laid.vertexOf.length), vertexSharpness: new Float32Array(vertices),
     positions: new Float64Array(3 * vertices), bodyOf: new Int32Array(vertices), live: new Uint8Array(vertices), level: mesh.level + 1,
     borderOf: new Int32Array(laid.vertexOf.length).fill(-1), borderFrom: new Float32Array(laid.vertexOf.length),
     keepsCorners: mesh.keepsCorners, rimOf: new Int32Array(rims === corners ? 0 : vertices).fill(-1),
     rimFrom: new Float32Array(rims === corners ? 0 : vertices), rimShare: new Float32Array(rims === corners ? 0 : vertices),
     firstSpoke: mesh.firstSpoke, spokes: mesh.spokes,
-  };
+  });
   placeCorners(mesh, touched, at.ids, pending, fine);
   placeBorder(mesh, at, keptCorners, rims, pending, fine);
   addBorderCurves(mesh, at, keptCorners, rims, fine);
