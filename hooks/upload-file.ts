@@ -1,4 +1,5 @@
 import { partLength, type UploadAnswer } from '@/lib/rules/upload-parts';
+import { hashFile } from './hash-file';
 import type { FileHashes } from './hash-parts';
 import { patiently } from './patiently';
 import type { RequestLanes } from './request-lanes';
@@ -63,7 +64,8 @@ async function sendPartsOnce(upload: FileUpload): Promise<void> {
   const ask = <Answer>(path: string, body: unknown): Promise<Answer> => patiently(() => requestJson<Answer>(address.base + path, { method: 'POST', body, signal }), upload);
   const begun = await ask<UploadAnswer>('/uploads', { ...address.said, bytes: file.size, sha256: hashes.sha256, part_bytes: partBytes });
   if (begun.state === 'stored') return;
-  if (begun.part_bytes !== partBytes) throw new RequestError(0, 'other_parts', 'This file was begun with parts of another size. Wait until it has expired, or send it by the API.');
+  // Begun elsewhere with parts of another size, by a script say, it goes on with those.
+  const partHashes = begun.part_bytes === partBytes ? hashes.parts : (await hashFile(file, begun.part_bytes, () => undefined)).parts;
   const sent = new Map<number, number>(begun.parts.map((number) => [number, partLength(begun, number)]));
   const tell = () => upload.onProgress([...sent.values()].reduce((sum, bytes) => sum + bytes, 0));
   tell();
@@ -73,7 +75,7 @@ async function sendPartsOnce(upload: FileUpload): Promise<void> {
   signal.addEventListener('abort', stop);
   try {
     const put = (number: number) => async () => {
-      const start = (number - 1) * partBytes;
+      const start = (number - 1) * begun.part_bytes;
       const body = file.slice(start, start + partLength(begun, number));
       const note = (bytes: number) => {
         sent.set(number, bytes);
@@ -81,7 +83,7 @@ async function sendPartsOnce(upload: FileUpload): Promise<void> {
       };
       if (failed.signal.aborted) throw new DOMException('stopped', 'AbortError');
       const url = `${address.base}/uploads/${begun.upload}/parts/${number}`;
-      await patiently(() => sendBytes({ url, body, sha256: hashes.parts[number - 1], onProgress: note, signal: failed.signal }), { signal: failed.signal, onWaiting: upload.onWaiting });
+      await patiently(() => sendBytes({ url, body, sha256: partHashes[number - 1], onProgress: note, signal: failed.signal }), { signal: failed.signal, onWaiting: upload.onWaiting });
       note(body.size);
     };
     let first: unknown = null;
