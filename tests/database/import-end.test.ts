@@ -1,4 +1,5 @@
 import { afterAll, beforeEach, describe, expect, test } from 'vitest';
+import type { ActorContext } from '@/lib/context';
 import { asOwner } from '../support/database';
 import { readMail } from '../support/mail-text';
 import { startSmtp } from '../support/smtp';
@@ -36,7 +37,7 @@ async function delivered() {
 const byHand = (cast: Cast) => ({ ...cast.contextOf('td'), origin: 'hand' as const });
 
 /** Opens, fills and submits an import as from the page; measured when it is told to be. */
-async function submitted(cast: Cast, files: Record<string, string>, context = byHand(cast)): Promise<string> {
+async function submitted(cast: Cast, files: Record<string, string>, context: ActorContext = byHand(cast)): Promise<string> {
   const show = cast.show.code;
   const { id } = await openImport(context, parseInput(openImportInput, { show, scheme: 'polyhedral' }));
   for (const [name, text] of Object.entries(files)) await putImportFile(context, parseInput(putImportFileInput, { show, import: id, name }), new Request('http://127.0.0.1:3000/', { method: 'PUT', body: text }));
