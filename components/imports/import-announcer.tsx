@@ -1,6 +1,6 @@
 'use client';
 
-import { useEffect, useState } from 'react';
+import { useEffect, useEffectEvent, useState } from 'react';
 import type { ImportSummary } from '@/lib/rules/import-answer';
 import { importStateWords } from './import-state-words';
 
@@ -26,14 +26,15 @@ export function ImportAnnouncer({ summary }: { summary: ImportSummary }) {
   );
 }
 
-/** A value as it was at the last of these intervals; at once where there is none to wait. */
+/** A value as it was at the last of these intervals, each begun by the first change after the one before; at once where there is none to wait. */
 function useSettled(value: number, ms: number): number {
   const [settled, setSettled] = useState(value);
+  const settle = useEffectEvent(() => setSettled(value));
+  const differs = settled !== value;
   useEffect(() => {
-    if (settled === value) return;
-    const timer = setTimeout(() => setSettled(value), ms);
+    if (!differs) return;
+    const timer = setTimeout(() => settle(), ms);
     return () => clearTimeout(timer);
-    // Each new value must not put off the one before it for ever: the timer runs from the first that differs.
-  }, [settled, value, ms]);
+  }, [differs, ms]);
   return ms === 0 ? value : settled;
 }
