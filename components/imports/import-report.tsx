@@ -1,6 +1,6 @@
 'use client';
 
-import { useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { PartRenames } from '@/components/renames/part-renames';
 import { PageHeading } from '@/components/shell/page-heading';
 import { Button } from '@/components/ui/button';
@@ -33,6 +33,15 @@ export function ImportReport({ show, upAxis, initial, first, address, mayImport 
   const files = useImportFiles(show, initial.id, filters, first);
   const { summary, trouble, restart } = useImportLive(show, initial, files.take);
   const isOnline = useOnline();
+  const { total, failed, queued, reading, measuring } = summary.counts;
+  const counts = { ...files.counts, all: total, failed, going: queued + reading + measuring };
+  const isOver = summary.state === 'done' || summary.state === 'cancelled';
+  const { refresh } = files;
+  const wasOver = useRef(isOver);
+  useEffect(() => {
+    if (isOver !== wasOver.current) void refresh();
+    wasOver.current = isOver;
+  }, [isOver, refresh]);
   const [opened, setOpened] = useState<ReadonlySet<string>>(new Set());
   const toggle = (name: string) =>
     setOpened((now) => {
@@ -51,17 +60,17 @@ export function ImportReport({ show, upAxis, initial, first, address, mayImport 
             summary={summary}
             address={address}
             mayImport={mayImport}
-            hasWrong={files.counts.failed + files.counts.problems + files.counts.warnings > 0}
+            hasWrong={counts.failed + counts.problems + counts.warnings > 0}
             onActed={() => {
               restart();
-              void files.refresh();
+              void refresh();
             }}
           />
         }
       />
       <ImportProgress summary={summary} />
       <PartRenames show={show} scope={{ import: initial.id }} mayDecide={mayImport} waiting={summary.state !== 'done'} />
-      <ReportToolbar filters={filters} onChange={(change) => void setFilters(change)} counts={files.counts} found={files.found} />
+      <ReportToolbar filters={filters} onChange={(change) => void setFilters(change)} counts={counts} found={files.found} />
       <ImportStanding show={show} summary={summary} trouble={isOnline ? trouble : 'offline'} />
       {files.isError && isEmpty ? (
         <div role="alert" className="flex flex-col items-start gap-3 px-4 py-10 text-14 md:px-6">

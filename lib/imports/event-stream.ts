@@ -6,7 +6,7 @@ const HEARTBEAT_MS = 15_000;
 /** A browser that lost the stream waits so long before it asks again. */
 const RETRY_MS = 2_000;
 
-export interface EventSourceOfOurs {
+interface EventSourceOfOurs {
   /** Whose stream it is: it ends when they sign out somewhere, and browsers that are still signed in open it again. */
   userId: string;
   /** Waits for news, calling `onNews` when some may be there. Answers how to stop. */

@@ -34,7 +34,7 @@ const SORT_KEYS: Record<string, { key: SQL; isText: boolean }> = {
   bytes: { key: sql`f.byte_size`, isText: false },
 };
 
-export interface FileOrder {
+interface FileOrder {
   /** Selected as `sort_key`, which a cursor holds. */
   key: SQL;
   orderBy: SQL;

@@ -9,6 +9,7 @@ import { countAgainst } from '@/lib/storage/count-against';
 import type { StoredBlob } from '@/lib/storage/store-blob';
 import type { ImportRow } from './get-import-row';
 import { notOpen } from './get-open-import';
+import { notifyImport } from './notify-import';
 import { refuseLargeFile } from './refuse-beyond';
 
 export type SaidOfFile = Omit<PutImportFileInput, 'show' | 'import'>;
@@ -31,7 +32,9 @@ export async function registerFile(tx: Transaction, row: ImportRow, said: SaidOf
     await countAgainst(tx, { kind: 'import', importId: row.id }, blob.byteSize);
     await countAgainst(tx, { kind: 'files', importId: row.id }, before ? 0 : 1);
   }
-  return writeFile(tx, row.id, said, blob);
+  const isWritten = await writeFile(tx, row.id, said, blob);
+  if (isWritten) await notifyImport(tx, row.id);
+  return isWritten;
 }
 
 async function isInShow(tx: Transaction, showId: string, sha256: string): Promise<boolean> {

@@ -7,7 +7,7 @@ import { getShowAccess } from '@/lib/shows/get-show-access';
 import { getImportRow } from './get-import-row';
 import { reportPages } from './report-pages';
 
-export type ReportFormat = 'csv' | 'json';
+type ReportFormat = 'csv' | 'json';
 
 interface ReportWriter {
   mediaType: string;

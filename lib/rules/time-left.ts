@@ -1,5 +1,5 @@
 /** What an import brought to an end lately, and what is left of it. Work is counted in bytes, each file with a share of its own. */
-export interface ImportPace {
+interface ImportPace {
   /** Seconds in which `work` was done, up to now. */
   seconds: number;
   files: number;
