@@ -203,9 +203,35 @@ function* faults(): Generator<BadFile> {
     new DataView(bytes.buffer).setUint32(80, count, true);
     yield { fault: `${count} triangles declared`, name: 'b.stl', bytes };
   }
+  yield* binaryFaults();
   yield* gltfFaults();
   yield* usdFaults();
   yield* zipFaults();
+}
+
+/** Numbers that are none and corners that are not there, in the forms that hold them as bytes. */
+function* binaryFaults(): Generator<BadFile> {
+  const changed = (name: string, fault: string, change: (view: DataView) => void): BadFile => {
+    const bytes = good(name).slice();
+    change(new DataView(bytes.buffer));
+    return { fault, name, bytes };
+  };
+  for (const name of ['b.ply', 'c.ply']) {
+    const little = name === 'b.ply';
+    const body = good(name).length - 100;
+    for (const [fault, value] of [['NaN', NaN], ['infinity', Infinity]] as const) yield changed(name, `${fault} as bytes`, (view) => view.setFloat32(body + 16, value, little));
+    for (const [fault, value] of [['one corner too far', 4], ['a negative corner', -1], ['a corner at two billion', 2_000_000_000]] as const) yield changed(name, fault, (view) => view.setInt32(body + 49, value, little));
+  }
+  for (const [fault, value] of [['NaN', NaN], ['infinity', -Infinity]] as const) yield changed('b.stl', `${fault} as bytes`, (view) => view.setFloat32(84 + 12, value, true));
+  for (const [fault, at, write] of [
+    ['NaN as bytes', 4, (view: DataView, offset: number) => view.setFloat32(offset, NaN, true)],
+    ['a corner too far as bytes', 48, (view: DataView, offset: number) => view.setUint16(offset, 4, true)],
+  ] as const) {
+    const buffer = gltfBuffer();
+    write(new DataView(buffer.buffer), at);
+    yield { fault, name: 'a.glb', bytes: glb(gltf(false), buffer) };
+  }
+  yield replaced('a.obj', 'two encodings in one line', 'v 1 0 0', 'v 1\u0000 \u00000\u0000 \u00000\u0000');
 }
 
 function* gltfFaults(): Generator<BadFile> {
@@ -233,6 +259,7 @@ function* gltfFaults(): Generator<BadFile> {
   yield changed('nothing at all', (json) => Object.keys(json).forEach((key) => delete (json as Record<string, unknown>)[key]));
   yield changed('version 1', (json) => (json.asset.version = '1.0'));
   yield changed('a scale of 1e308', (json) => Object.assign(json.nodes[0], { scale: [1e308, 1e308, 1e308] }));
+  yield changed('a name of 64 kB', (json) => (json.nodes[0].name = 'x'.repeat(65_536)));
   yield changed('meshopt', (json) => Object.assign(json, { extensionsRequired: ['EXT_meshopt_compression'] }));
   yield changed('sparse beyond the vertices', (json) => Object.assign(json.accessors[0], { sparse: { count: 1e9, indices: { bufferView: 1, componentType: 5123 }, values: { bufferView: 0 } } }));
   yield { fault: 'JSON that nests without end', name: 'a.gltf', bytes: text(`{"a":${'['.repeat(200_000)}`) };
@@ -305,6 +332,8 @@ function* zipFaults(): Generator<BadFile> {
   yield inZip('weights of vertices that are not there', { 'a.obj': obj, 'a.weights.csv': text('vertex,joint,weight\n5,hip,1\n') });
   yield inZip('weights without a header', { 'a.obj': obj, 'a.weights.csv': text('1,hip,1\n') });
   yield inZip('weights that are none', { 'a.obj': obj, 'a.weights.csv': text('vertex,joint,weight\n1,hip,heavy\n') });
+  yield inZip('weights of a joint with a name of 64 kB', { 'a.obj': obj, 'a.weights.csv': text(`vertex,joint,weight\n1,${'x'.repeat(65_536)},1\n`) });
+  yield inZip('a billion vertices', { 'a.ply': text(plyText().replace('element vertex 4', 'element vertex 1000000000')) });
   yield inZip('negative weights', { 'a.obj': obj, 'a.weights.csv': text('vertex,joint,weight\n1,hip,-1\n') });
   yield inZip('twelve thousand entries', Object.fromEntries(Array.from({ length: 12_000 }, (_, i) => [`${i}.txt`, new Uint8Array(0)])));
   yield { fault: 'a checksum that is wrong', name: 'a.zip', bytes: zipWith({ 'a.obj': [obj, { level: 0 }] }, (view, at) => view.setUint32(at + 16, 12345, true)) };
