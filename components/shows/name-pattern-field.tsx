@@ -1,11 +1,12 @@
 'use client';
 
-import { useState } from 'react';
+import { useDeferredValue, useMemo, useState } from 'react';
 import { Field } from '@/components/ui/field';
 import { Input } from '@/components/ui/input';
 import { Table, TableCell, TableHead, TableRow } from '@/components/ui/table';
 import { TextArea } from '@/components/ui/text-area';
-import { checkNamePattern, readName } from '@/lib/rules/name-pattern';
+import { versionLabel } from '@/lib/rules/import-plan';
+import { checkNamePattern, readName, type ReadName } from '@/lib/rules/name-pattern';
 import { CATEGORY_WORDS } from '@/lib/rules/states';
 
 const SAMPLES = [
@@ -20,10 +21,14 @@ interface NamePatternFieldProps {
   onChange: (value: string) => void;
   error: string | null;
   disabled: boolean;
+  /** As it is stored; null for the built-in rule. */
+  stored: string | null;
+  /** Paths that the show imported, the newest first. */
+  names: readonly string[];
 }
 
 /** The show's name pattern, tried on names as they are typed. */
-export function NamePatternField({ value, onChange, error, disabled }: NamePatternFieldProps) {
+export function NamePatternField({ value, onChange, error, disabled, stored, names: imported }: NamePatternFieldProps) {
   const [samples, setSamples] = useState(SAMPLES.join('\n'));
   const pattern = value.trim();
   const wrong = pattern === '' ? null : checkNamePattern(pattern);
@@ -49,6 +54,7 @@ export function NamePatternField({ value, onChange, error, disabled }: NamePatte
           placeholder="{category}/{asset}_v{version}"
         />
       </Field>
+      {wrong !== null || imported.length === 0 ? null : <OnImported names={imported} stored={stored} pattern={pattern === '' ? null : pattern} />}
       <Field label="Names to try it on">
         <TextArea
           rows={4}
@@ -79,6 +85,38 @@ export function NamePatternField({ value, onChange, error, disabled }: NamePatte
       )}
     </div>
   );
+}
+
+const MOST_CHANGED = 8;
+
+/** What the pattern makes of the names that the show has, and those that it would read otherwise than before. */
+function OnImported({ names, stored, pattern: typed }: { names: readonly string[]; stored: string | null; pattern: string | null }) {
+  const pattern = useDeferredValue(typed);
+  const { unmatched, changed } = useMemo(() => {
+    const read = names.map((name) => ({ name, before: readName(name, stored), now: readName(name, pattern) }));
+    const same = (one: ReadName | null, other: ReadName | null): boolean => one?.asset === other?.asset && one?.version === other?.version;
+    return { unmatched: read.filter((one) => one.now === null).length, changed: read.filter((one) => !same(one.before, one.now)) };
+  }, [names, stored, pattern]);
+  const of = names.length.toLocaleString('en');
+  return (
+    <div className="flex flex-col gap-1 text-13" aria-live="polite">
+      <p className={unmatched > 0 ? 'text-ink' : 'text-ink-2'}>
+        {unmatched === 0 ? `All ${of} imported names match` : `${(names.length - unmatched).toLocaleString('en')} of ${of} imported names match`}
+        {changed.length === 0 ? '.' : `; ${changed.length.toLocaleString('en')} would be read otherwise in later imports.`}
+      </p>
+      <ul className="font-mono text-12 text-ink-2">
+        {changed.slice(0, MOST_CHANGED).map(({ name, before, now }) => (
+          <li key={name} className="truncate" title={name}>
+            {name}: {readWords(before)} → {readWords(now)}
+          </li>
+        ))}
+      </ul>
+    </div>
+  );
+}
+
+function readWords(read: ReadName | null): string {
+  return read === null ? 'no match' : `${read.asset}${read.version === null ? '' : ` ${versionLabel(read.version, 1)}`}`;
 }
 
 function SampleRow({ name, pattern }: { name: string; pattern: string | null }) {

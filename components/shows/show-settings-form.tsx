@@ -48,6 +48,8 @@ export interface ShowSettings {
 interface ShowSettingsFormProps {
   show: ShowSettings;
   mayEdit: boolean;
+  /** Paths that the show imported, to try a name pattern on. */
+  importedNames: readonly string[];
   send: (input: z.input<typeof editShowInput>) => Promise<ActionResult<unknown>>;
 }
 
@@ -64,7 +66,7 @@ function readPercent(typed: string | number): number {
 }
 
 /** Settings of a show. Only what was changed is sent, so that two leads do not undo each other. */
-export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps) {
+export function ShowSettingsForm({ show, mayEdit, importedNames, send }: ShowSettingsFormProps) {
   const router = useRouter();
   const [more, setMore] = useState(false);
   const { code, title, linear_unit, up_axis, scheme: storedScheme, boundary, parts_by, other_space, self_approval, frozen, archived } = show;
@@ -164,6 +166,8 @@ export function ShowSettingsForm({ show, mayEdit, send }: ShowSettingsFormProps)
                 onChange={field.onChange}
                 error={errorOf('name_pattern')}
                 disabled={locked}
+                stored={show.name_pattern}
+                names={importedNames}
               />
             )}
           />

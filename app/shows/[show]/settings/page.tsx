@@ -4,6 +4,7 @@ import { AddMemberForm } from '@/components/shows/add-member-form';
 import { ArchiveShow } from '@/components/shows/archive-show';
 import { MemberTable } from '@/components/shows/member-table';
 import { ShowSettingsForm } from '@/components/shows/show-settings-form';
+import { listImportedNames } from '@/lib/imports/list-imported-names';
 import { may } from '@/lib/rules/roles';
 import { getPageShow } from '@/lib/shows/get-page-show';
 import { listMembers } from '@/lib/shows/list-members';
@@ -16,6 +17,7 @@ export default async function SettingsPage({ params }: { params: Promise<{ show:
   const { context, access } = await getPageShow((await params).show, 'readShow');
   const show = showAnswer(access.show);
   const members = await listMembers(context, { show: show.code });
+  const importedNames = await listImportedNames(context, { show: show.code });
   const mayEdit = may(access.role, 'editShow');
   const mayEditMembers = may(access.role, 'editMembers') && !show.archived;
   return (
@@ -24,7 +26,7 @@ export default async function SettingsPage({ params }: { params: Promise<{ show:
       <div className="grid gap-x-14 gap-y-10 px-4 py-6 md:px-6 xl:grid-cols-[minmax(0,40rem)_minmax(0,1fr)]">
         <div className="flex min-w-0 flex-col gap-8">
           {mayEdit ? null : <p className="text-14 text-ink-2">A lead changes these.</p>}
-          <ShowSettingsForm show={show} mayEdit={mayEdit} send={editShowAction} />
+          <ShowSettingsForm show={show} mayEdit={mayEdit} importedNames={importedNames} send={editShowAction} />
           {mayEdit ? <ArchiveShow show={show} send={editShowAction} /> : null}
         </div>
         <section aria-labelledby="people-heading" className="flex min-w-0 flex-col gap-5">
