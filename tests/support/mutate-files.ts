@@ -3,7 +3,7 @@ import type { Cage } from '@/lib/engine/cage';
 import { MeshError } from '@/lib/formats/mesh-error';
 import { readMesh } from '@/lib/formats/read-mesh';
 
-const NUMBERS = ['nan', '-inf', '1e308', '-1', '4294967296', '1e9', '""', '{', ')', '\n', '\0'];
+const NUMBERS = ['nan', '-inf', '1e308', '-1', '4294967296', '1e9', '""', '{', ')', '\n', '\0', 'x'.repeat(65_536), '=cmd|x', '\u0007', '../'];
 
 /** A file with a few bytes changed, taken out, doubled or replaced by what hurts. */
 export function mutations(bytes: Uint8Array): fc.Arbitrary<Uint8Array> {
