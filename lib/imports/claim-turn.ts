@@ -11,8 +11,8 @@ import { pickFiles, workOf, type Candidate } from './pick-files';
 /** One claim at a time in the studio, some milliseconds each: whose turn it is, and which file of an asset comes first, are questions about all of them. */
 const CLAIM_LOCK = 7_305_120;
 
-/** Files of a show that are looked through at first; more only where all of these are held up. */
-const WINDOW = 2_000;
+/** Files of an import that are looked through at first; more only where all of these are held up. */
+const WINDOW = 400;
 
 /** Who asks for work. */
 export interface Seat {
@@ -123,15 +123,15 @@ async function candidatesOf(tx: Transaction, show: string, seat: Seat): Promise<
   for (let window = WINDOW; ; window *= 10) {
     const { rows } = await tx.execute<FileRow>(sql`
       with active as (select id, submitted_at from imports where show_id = ${show} and state in ('queued', 'running') and paused_at is null)
-      select f.id, f.import_id, f.name, f.plan ->> 'asset' as asset, f.byte_size, f.faces, f.is_alone,
+      select f.id, i.id as import_id, f.name, f.plan ->> 'asset' as asset, f.byte_size, f.faces, f.is_alone,
         (f.state <> 'queued' or f.lease_by is not null or f.try_after > now()) is true as is_out
-      from import_files f join active i on i.id = f.import_id
-      where f.state in ('queued', 'reading', 'measuring') and f.queued_at is not null
-        and ((select count(*) from active) = 1 or not exists (
+      from active i cross join lateral (
+        select * from import_files w where w.import_id = i.id and w.state in ('queued', 'reading', 'measuring') and w.queued_at is not null order by w.ordinal limit ${window}) f
+      where (select count(*) from active) = 1 or not exists (
           select 1 from import_files e join active j on j.id = e.import_id
           where e.plan ->> 'asset' = f.plan ->> 'asset' and e.state in ('queued', 'reading', 'measuring') and e.queued_at is not null
-            and (j.submitted_at, j.id) < (i.submitted_at, i.id)))
-      order by f.ordinal, i.submitted_at, i.id limit ${window}`);
+            and (j.submitted_at, j.id) < (i.submitted_at, i.id))
+      order by f.ordinal, i.submitted_at, i.id`);
     const candidates = rows.map((row) => candidateOf(row, seat));
     // Where everything in sight is in somebody's hand, what is behind it may be free.
     if (rows.length < window || candidates.some((file) => !file.isOut)) return candidates;
