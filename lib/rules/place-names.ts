@@ -72,20 +72,20 @@ function isContested(places: readonly Place[]): boolean {
 }
 
 /** A code for each place, with as many folders before the name as make all of them new; none for a place without folders where the name is free. */
-function qualify(name: string, places: readonly Place[], taken: ReadonlySet<string>): string[] {
+function qualify(name: string, places: readonly Place[], isTaken: (code: string) => boolean): string[] {
   const withoutName = places.map((place) => place.folders.filter((folder) => folder.toLowerCase() !== name.toLowerCase()));
   for (const folders of [withoutName, places.map((place) => place.folders)]) {
     const deepest = Math.max(1, ...folders.map((one) => one.length));
     for (let steps = 1; steps <= deepest; steps++) {
       const codes = folders.map((one) => [...one.slice(-steps), name].join('_').slice(-MAX_ASSET_CODE));
-      if (new Set(codes).size === codes.length && !codes.some((code) => taken.has(code))) return codes;
+      if (new Set(codes).size === codes.length && !codes.some(isTaken)) return codes;
     }
   }
-  const used = new Set(taken);
+  const used = new Set<string>();
   return places.map(({ folders }) => {
     const plain = [...folders, name].join('_').slice(-MAX_ASSET_CODE);
     let code = plain;
-    for (let next = 2; used.has(code); next++) code = `${plain.slice(-(MAX_ASSET_CODE - 5))}_${next}`;
+    for (let next = 2; used.has(code) || isTaken(code); next++) code = `${plain.slice(-(MAX_ASSET_CODE - 5))}_${next}`;
     used.add(code);
     return code;
   });
@@ -111,7 +111,7 @@ function keepers(fitting: readonly { place: Place; score: number }[]): Place[] {
 }
 
 /** One name of a drop: each of its places to an asset that is there, or to a new one. */
-function placeOneName(name: string, files: readonly NameToPlace[], known: readonly KnownAsset[], taken: ReadonlySet<string>): Map<string, PlacedName> {
+function placeOneName(name: string, files: readonly NameToPlace[], known: readonly KnownAsset[], isTaken: (code: string) => boolean): Map<string, PlacedName> {
   const places = placesOf(files);
   const wishes = new Map<KnownAsset, { place: Place; score: number }[]>();
   for (const place of places) {
@@ -129,7 +129,7 @@ function placeOneName(name: string, files: readonly NameToPlace[], known: readon
   }
   const free = places.filter((place) => !placed.has(place.key));
   const isOneNew = known.length === 0 && !isContested(free);
-  const codes = isOneNew ? free.map(() => name) : qualify(name, free, taken);
+  const codes = isOneNew ? free.map(() => name) : qualify(name, free, isTaken);
   free.forEach((place, index) => placed.set(place.key, { asset: codes[index], qualified: codes[index] !== name, movedFrom: null, elsewhere: false }));
   return placed;
 }
@@ -159,9 +159,8 @@ export function placeNames(files: readonly NameToPlace[], known: readonly KnownA
   const places = new Map<string, Map<string, PlacedName>>();
   for (const name of [...byName.keys()].sort()) {
     const candidates = knownOf.get(name) ?? [];
-    const others = new Set(taken);
-    if (candidates.every((asset) => asset.asset !== name)) others.delete(name);
-    const placed = placeOneName(name, byName.get(name)!, candidates, others);
+    const isNameFree = candidates.every((asset) => asset.asset !== name);
+    const placed = placeOneName(name, byName.get(name)!, candidates, (code) => (code !== name || !isNameFree) && taken.has(code));
     for (const { asset } of placed.values()) taken.add(asset);
     places.set(name, placed);
   }
