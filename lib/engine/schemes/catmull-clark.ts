@@ -1,14 +1,16 @@
 import { RegularPatches } from '../kernel/regular-patches';
 import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
-import { classifyVertices, INNER, isIsolated, isRegularFace, QUAD_COUNTS } from './classify-vertices';
+import { classifyVertices, INNER, isRegularFace, QUAD_COUNTS } from './classify-vertices';
 import { CATMULL_CLARK_KIT } from './catmull-clark-kit';
 import { fillInnerNet, fillNet } from './catmull-clark-net';
 import { refineAround } from './catmull-clark-refine';
 import { refineStrip, stripSide } from './crease-strip';
 import { FanBatches } from './fan-batches';
-import { isSharpForGood, type LevelMesh } from './level-mesh';
+import { isSharpForGood, levelMesh, type LevelMesh } from './level-mesh';
+import { finishLevels, nearOwn, OWN } from './refinement-blocks';
 import type { RefinementRules } from './refinement-rules';
+import { settleFans } from './settle-fans';
 
 /** Refinements after which a cage that still is not resolved is given up; sharpness below 10 needs at most 12. */
 const MOST_LEVELS = 16;
@@ -23,36 +25,31 @@ const net = new Float64Array(48);
  * Returns false where the cage could not be resolved.
  */
 export function integrateCatmullClark(cage: LevelMesh, rules: RefinementRules, origins: Float64Array, sums: LimitSums): boolean {
-  let mesh = cage;
   const patches = new RegularPatches('bicubic', origins, sums);
   const batches = new FanBatches(CATMULL_CLARK_KIT, origins, sums);
-  for (let level = 0; level <= MOST_LEVELS; level++) {
+  const finish = (mesh: LevelMesh): { left: number; live: Uint8Array } => {
+    const { live } = mesh;
     const { kinds, fans } = classifyVertices(mesh, QUAD_COUNTS);
     let left = 0;
     for (let face = 0; face < mesh.faces; face++) {
-      if (mesh.live[face] === 0) continue;
+      if (live[face] === 0) continue;
       const regular = isRegularFace(mesh, QUAD_COUNTS, kinds, face, -1);
       const side = regular ? mesh.starts[face] : stripSide(mesh, kinds, face);
       if (side < 0) {
-        left++;
+        if (live[face] === OWN) left++;
         continue;
       }
-      if (regular) addRegularFace(mesh, kinds, face, patches, sums.curves);
-      else addStrip(mesh, side, rules, patches, sums.curves);
-      mesh.live[face] = 0;
+      if (live[face] === OWN) {
+        if (regular) addRegularFace(mesh, kinds, face, patches, sums.curves);
+        else addStrip(mesh, side, rules, patches, sums.curves);
+      }
+      live[face] = 0;
     }
     patches.flush();
-    for (let fan = 0; fan < fans.centre.length && left > 0; fan++) {
-      if (!isIsolated(mesh, QUAD_COUNTS, kinds, fans, fan)) continue;
-      batches.add(mesh, fans, fan);
-      for (let i = fans.starts[fan]; i < fans.starts[fan + 1]; i++) mesh.live[mesh.faceOf[fans.corners[i]]] = 0;
-      left -= fans.starts[fan + 1] - fans.starts[fan];
-    }
-    batches.flush();
-    if (left === 0) return true;
-    mesh = refineAround(mesh, rules);
-  }
-  return false;
+    return { left: settleFans(mesh, QUAD_COUNTS, kinds, fans, left, batches), live };
+  };
+  const refine = (mesh: LevelMesh, live: Uint8Array): LevelMesh => refineAround(levelMesh({ ...mesh, live: nearOwn(mesh, live) }), rules);
+  return finishLevels(cage, { elements: 'faces', mostLevels: MOST_LEVELS, finish, refine });
 }
 
 function addRegularFace(mesh: LevelMesh, kinds: Uint8Array, face: number, patches: RegularPatches, curves: BorderCurves): void {

@@ -3,11 +3,18 @@ import { levelMesh, type LevelMesh } from './level-mesh';
 /** Part of a mesh's half-edges up to which cutting out what a refinement reads is worth its own passes. */
 const WORTH = 1 / 2;
 
+/** A mesh, what is wanted of it (1 by vertex), and where it was cut from one, that one's vertices and half-edges by its own. */
+export interface CutOut {
+  mesh: LevelMesh;
+  wanted: Uint8Array;
+  from: { vertices: readonly number[]; sides: Int32Array } | null;
+}
+
 /**
  * The faces that touch a wanted vertex (1 in `wanted`), in the mesh's order: all that a local refinement reads, so that its cost follows what is left of the
  * mesh and not the whole of it. The whole where that is most of it. Edges that no wanted vertex ends have nothing across.
  */
-export function cutOut(mesh: LevelMesh, wanted: Uint8Array): { mesh: LevelMesh; wanted: Uint8Array } {
+export function cutOut(mesh: LevelMesh, wanted: Uint8Array): CutOut {
   const { starts, vertexOf, positions } = mesh;
   const faces: number[] = [];
   let sides = 0;
@@ -18,7 +25,7 @@ export function cutOut(mesh: LevelMesh, wanted: Uint8Array): { mesh: LevelMesh; 
       sides += starts[face + 1] - starts[face];
       break;
     }
-    if (sides > WORTH * vertexOf.length) return { mesh, wanted };
+    if (sides > WORTH * vertexOf.length) return { mesh, wanted, from: null };
   }
   const part = {
     starts: new Int32Array(faces.length + 1), vertexOf: new Int32Array(sides), faceOf: new Int32Array(sides), twin: new Int32Array(sides).fill(-1),
@@ -26,6 +33,7 @@ export function cutOut(mesh: LevelMesh, wanted: Uint8Array): { mesh: LevelMesh; 
     borderFrom: new Float32Array(sides),
   };
   const sideOf = new Int32Array(vertexOf.length);
+  const sidesFrom = new Int32Array(sides);
   const newOf = new Int32Array(mesh.vertices);
   const oldOf: number[] = [];
   let to = 0;
@@ -41,6 +49,7 @@ export function cutOut(mesh: LevelMesh, wanted: Uint8Array): { mesh: LevelMesh; 
       part.edgeSharpness[to] = mesh.edgeSharpness[h];
       part.borderOf[to] = mesh.borderOf[h];
       part.borderFrom[to] = mesh.borderFrom[h];
+      sidesFrom[to] = h;
       sideOf[h] = to + 1;
       const twin = mesh.twin[h];
       // The later of two sides knows both.
@@ -59,5 +68,8 @@ export function cutOut(mesh: LevelMesh, wanted: Uint8Array): { mesh: LevelMesh; 
     vertexSharpness[v] = mesh.vertexSharpness[old];
     ownWanted[v] = wanted[old];
   }
-  return { mesh: levelMesh({ ...part, faces: faces.length, vertices: oldOf.length, positions: points, vertexSharpness, level: mesh.level }), wanted: ownWanted };
+  return {
+    mesh: levelMesh({ ...part, faces: faces.length, vertices: oldOf.length, positions: points, vertexSharpness, level: mesh.level }), wanted: ownWanted,
+    from: { vertices: oldOf, sides: sidesFrom },
+  };
 }

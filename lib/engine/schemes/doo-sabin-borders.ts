@@ -1,7 +1,7 @@
 import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
 import type { BorderCurves } from '../moments/border-curves';
 import { collectRing } from './classify-vertices';
-import { runsOutwards, type DooSabinMesh } from './doo-sabin-mesh';
+import { cageEdge, runsOutwards, type DooSabinMesh } from './doo-sabin-mesh';
 import type { Offspring } from './doo-sabin-refine';
 
 /** Hands the border curves of `mesh` over to the sides of the refined mesh's patches: each piece falls into two. */
@@ -66,13 +66,14 @@ function addRims(mesh: DooSabinMesh, { active, rimIds }: Offspring, keptCorners:
   }
   for (const h of active) {
     if (rimIds[h] < 0) continue;
-    set(rimIds[h], h, 0, 0.5);
-    set(rimIds[h] + 1, h, 0.5, 0.5);
+    set(rimIds[h], cageEdge(mesh, h), 0, 0.5);
+    set(rimIds[h] + 1, cageEdge(mesh, h), 0.5, 0.5);
   }
   keptCorners.forEach((h, i) => {
-    set(firstCorner + i, h, 0, 0.25);
-    set(rimIds[h], h, 0.25, 0.25);
-    set(rimIds[previousHalfEdge(mesh, h)] + 1, previousHalfEdge(mesh, h), 0.5, 0.25);
+    const before = previousHalfEdge(mesh, h);
+    set(firstCorner + i, cageEdge(mesh, h), 0, 0.25);
+    set(rimIds[h], cageEdge(mesh, h), 0.25, 0.25);
+    set(rimIds[before] + 1, cageEdge(mesh, before), 0.5, 0.25);
   });
 }
 
@@ -95,7 +96,7 @@ function addSpokes(mesh: DooSabinMesh, at: Offspring, fine: DooSabinMesh): void 
     const side = fine.starts[fine.faceOf[at.closing[ring[0]]]] + ring.length;
     const inwards = mesh.live[mesh.faceOf[last]] === 1;
     if (!inwards && mesh.live[mesh.faceOf[ring[0]]] === 0) continue;
-    fine.borderOf[side] = mesh.firstSpoke + ring[0] + (inwards ? 0 : mesh.spokes);
+    fine.borderOf[side] = mesh.firstSpoke + cageEdge(mesh, ring[0]) + (inwards ? 0 : mesh.spokes);
     fine.borderFrom[side] = inwards ? 0.5 : 0;
   }
 }

@@ -20,20 +20,27 @@ export interface DooSabinMesh extends LevelMesh {
    */
   firstSpoke: number;
   spokes: number;
+  /** At level 0 the cage's half-edge that each half-edge is; null: itself. */
+  edgeOf: Int32Array | null;
 }
 
 /** The same, with its fields in one order at all levels (see `levelMesh`). */
 export function dooSabinMesh(mesh: DooSabinMesh): DooSabinMesh {
-  const { keepsCorners, rimOf, rimFrom, rimShare, firstSpoke, spokes } = mesh;
-  return { ...levelMesh(mesh), keepsCorners, rimOf, rimFrom, rimShare, firstSpoke, spokes };
+  const { keepsCorners, rimOf, rimFrom, rimShare, firstSpoke, spokes, edgeOf } = mesh;
+  return { ...levelMesh(mesh), keepsCorners, rimOf, rimFrom, rimShare, firstSpoke, spokes, edgeOf };
 }
 
 /** The cage as level 0 of Doo-Sabin refinement; corners tagged in the file do not count. */
 export function dooSabinCage(cage: LevelMesh, boundary: Boundary): DooSabinMesh {
   return dooSabinMesh({
     ...cage, keepsCorners: boundary === 'edge-and-corner', rimOf: new Int32Array(0), rimFrom: new Float32Array(0), rimShare: new Float32Array(0),
-    firstSpoke: cage.vertexOf.length, spokes: cage.vertexOf.length,
+    firstSpoke: cage.vertexOf.length, spokes: cage.vertexOf.length, edgeOf: null,
   });
+}
+
+/** The cage's half-edge that a half-edge of level 0 is. */
+export function cageEdge(mesh: DooSabinMesh, h: number): number {
+  return mesh.edgeOf === null ? h : mesh.edgeOf[h];
 }
 
 /** Whether a spoke's curve, given by its number, runs outwards. */

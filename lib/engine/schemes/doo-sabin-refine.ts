@@ -1,5 +1,6 @@
 import { nextHalfEdge, previousHalfEdge } from '../mesh/topology';
 import { addBorderCurves } from './doo-sabin-borders';
+import { cutOutDooSabin } from './doo-sabin-cut';
 import { dooSabinWeight } from './doo-sabin-fan';
 import { dooSabinMesh, type DooSabinMesh } from './doo-sabin-mesh';
 
@@ -22,12 +23,13 @@ export interface Offspring {
 }
 
 /**
- * Refines around the vertices `keep` [Doo & Sabin 1978]: a new vertex for each corner of the faces there, a face for each such face, for each of their edges
+ * Refines around the vertices `kept` [Doo & Sabin 1978]: a new vertex for each corner of the faces there, a face for each such face, for each of their edges
  * and for each kept vertex. The border follows the rule that its edges are doubled, as quads with two pairs of equal vertices [Doo 1978]: so an edge of the
  * border gets two new vertices at ¾ and ¼, a border vertex among k faces a (k + 2)-gon, and the limit's border is the quadratic B-spline of the border
- * polygon. A corner that is kept is doubled both ways and gets a quad with itself. New vertices at `pending` ones of live bodies are live.
+ * polygon. A corner that is kept is doubled both ways and gets a quad with itself. New vertices at `waiting` ones of live bodies are live, as those say.
  */
-export function refineDooSabin(mesh: DooSabinMesh, pending: Uint8Array, keep: Uint8Array): DooSabinMesh {
+export function refineDooSabin(whole: DooSabinMesh, waiting: Uint8Array, kept: Uint8Array): DooSabinMesh {
+  const { mesh, pending, keep } = cutOutDooSabin(whole, waiting, kept);
   const { vertexOf, faceOf, twin, starts } = mesh;
   const halfEdges = vertexOf.length;
   const none = (): Int32Array => new Int32Array(halfEdges).fill(-1);
@@ -39,7 +41,7 @@ export function refineDooSabin(mesh: DooSabinMesh, pending: Uint8Array, keep: Ui
   const at: Offspring = { active: active.subarray(0, count), ids: none(), rimIds: none(), inFace: none(), inVertex: none(), closing: none(), inEdge: none() };
   let vertices = 0;
   let faces = 0;
-  let kept = 0;
+  let keptCount = 0;
   let sides = 0;
   for (let face = 0; face < mesh.faces; face++) {
     if (touched[face] === 0) continue;
@@ -48,7 +50,7 @@ export function refineDooSabin(mesh: DooSabinMesh, pending: Uint8Array, keep: Ui
     for (let h = starts[face]; h < starts[face + 1]; h++) {
       at.ids[h] = vertices++;
       const from = keep[vertexOf[h]];
-      kept += from;
+      keptCount += from;
       if (from === 0 && keep[vertexOf[nextHalfEdge(mesh, h)]] === 0) continue;
       if (twin[h] >= 0 && twin[h] < h) continue;
       faces++;
@@ -64,7 +66,7 @@ export function refineDooSabin(mesh: DooSabinMesh, pending: Uint8Array, keep: Ui
   }
   const rims = vertices;
 
-  const lay = new Layout(faces + kept, sides + kept);
+  const lay = new Layout(faces + keptCount, sides + keptCount);
   for (let face = 0; face < mesh.faces; face++) {
     if (touched[face] === 0) continue;
     for (let h = starts[face]; h < starts[face + 1]; h++) at.inFace[h] = lay.put(at.ids[h]);
@@ -122,7 +124,7 @@ export function refineDooSabin(mesh: DooSabinMesh, pending: Uint8Array, keep: Ui
     borderOf: new Int32Array(laid.vertexOf.length).fill(-1), borderFrom: new Float32Array(laid.vertexOf.length),
     keepsCorners: mesh.keepsCorners, rimOf: new Int32Array(rims === corners ? 0 : vertices).fill(-1),
     rimFrom: new Float32Array(rims === corners ? 0 : vertices), rimShare: new Float32Array(rims === corners ? 0 : vertices),
-    firstSpoke: mesh.firstSpoke, spokes: mesh.spokes,
+    firstSpoke: mesh.firstSpoke, spokes: mesh.spokes, edgeOf: null,
   });
   placeCorners(mesh, touched, at.ids, pending, fine);
   placeBorder(mesh, at, keptCorners, rims, pending, fine);
@@ -202,7 +204,7 @@ function placeCorners(mesh: DooSabinMesh, touched: Uint8Array, ids: Int32Array, 
       const vertex = vertexOf[start + i];
       const id = ids[start + i];
       fine.bodyOf[id] = mesh.bodyOf[ofFaces ? face : vertex];
-      fine.live[id] = pending[vertex] === 1 && (!ofFaces || mesh.live[face] === 1) ? 1 : 0;
+      fine.live[id] = ofFaces && mesh.live[face] !== 1 ? 0 : pending[vertex];
       let x = 0, y = 0, z = 0;
       for (let k = 0; k < n; k++) {
         const from = 3 * vertexOf[start + (i + k < n ? i + k : i + k - n)];
@@ -221,7 +223,7 @@ function placeCorners(mesh: DooSabinMesh, touched: Uint8Array, ids: Int32Array, 
 function placeBorder(mesh: DooSabinMesh, { active, rimIds }: Offspring, keptCorners: number[], firstCorner: number, pending: Uint8Array, fine: DooSabinMesh): void {
   const own = (id: number, vertex: number, face: number): void => {
     fine.bodyOf[id] = mesh.bodyOf[mesh.level === 0 ? face : vertex];
-    fine.live[id] = pending[vertex] === 1 && (mesh.level > 0 || mesh.live[face] === 1) ? 1 : 0;
+    fine.live[id] = mesh.level === 0 && mesh.live[face] !== 1 ? 0 : pending[vertex];
   };
   for (const h of active) {
     const id = rimIds[h];

@@ -9,6 +9,7 @@ import { dooSabinCage, type DooSabinMesh } from './doo-sabin-mesh';
 import { addPatch, readRings, type DooSabinRings } from './doo-sabin-patches';
 import { refineDooSabin } from './doo-sabin-refine';
 import type { LevelMesh } from './level-mesh';
+import { EARLIER, finishLevels, OWN } from './refinement-blocks';
 
 /** After the first step n-gons lie apart by one quad, after the second by three, which is enough; the border is regular from the second step on. */
 const MOST_LEVELS = 6;
@@ -25,29 +26,45 @@ export function integrateDooSabin(cage: LevelMesh, boundary: Boundary, origins: 
   const base = dooSabinCage(cage, boundary);
   const patches = new RegularPatches('biquadratic', origins, sums);
   const batches = new FanBatches(DOO_SABIN_KIT, origins, sums);
-  let mesh = base;
-  for (let level = 0; level <= MOST_LEVELS; level++) {
+  const finish = (mesh: DooSabinMesh): { left: number; live: Uint8Array } => {
     const rings = readRings(mesh);
-    const bodies = level === 0 ? bodiesOfVertices(mesh) : mesh.bodyOf;
-    const pending = level === 0 ? bodies.map((body) => (body === NO_BODY ? 0 : 1)) : mesh.live;
-    const waiting = Uint8Array.from(pending);
+    const bodies = mesh.level === 0 ? bodiesOfVertices(mesh) : mesh.bodyOf;
+    const waiting = mesh.level === 0 ? Uint8Array.from(bodies, (body) => (body === NO_BODY ? 0 : OWN)) : mesh.live;
     let left = 0;
     for (let vertex = 0; vertex < mesh.vertices; vertex++) {
-      if (waiting[vertex] === 0) continue;
+      if (waiting[vertex] !== OWN) continue;
       if (bodies[vertex] >= 0 && addPatch(mesh, rings, vertex, bodies[vertex], patches, sums.curves)) waiting[vertex] = 0;
       else left++;
     }
     patches.flush();
-    const keep = Uint8Array.from(waiting);
-    for (let face = 0; face < mesh.faces && left > 0; face++) left -= addOddFace(mesh, rings, bodies, face, waiting, keep, batches);
+    for (let face = 0; face < mesh.faces && left > 0; face++) left -= addOddFace(mesh, rings, bodies, face, waiting, batches);
     batches.flush();
-    if (left === 0) {
-      joinSpokes(base, sums.curves);
-      return true;
-    }
-    mesh = refineDooSabin(mesh, waiting, keep);
+    return { left, live: waiting };
+  };
+  const refine = (mesh: DooSabinMesh, waiting: Uint8Array): DooSabinMesh => {
+    const keep = keptAround(mesh, waiting);
+    return refineDooSabin(mesh, waiting.map((state, vertex) => state * keep[vertex]), keep);
+  };
+  if (!finishLevels(base, { elements: 'vertices', mostLevels: MOST_LEVELS, finish, refine })) return false;
+  joinSpokes(base, sums.curves);
+  return true;
+}
+
+/**
+ * 1 for what a refinement of the own waiting vertices keeps: those, and all corners of the n-gons that have one, whose patches are one sequence; those of a
+ * body that is not measured too.
+ */
+function keptAround(mesh: DooSabinMesh, waiting: Uint8Array): Uint8Array {
+  const { starts, vertexOf } = mesh;
+  const keep = waiting.map((state) => (state === OWN ? 1 : 0));
+  for (let face = 0; face < mesh.faces; face++) {
+    const [start, end] = [starts[face], starts[face + 1]];
+    if (end - start === 4) continue;
+    let hasOwn = false;
+    for (let h = start; h < end; h++) if (waiting[vertexOf[h]] === OWN) hasOwn = true;
+    if (hasOwn) for (let h = start; h < end; h++) keep[vertexOf[h]] = 1;
   }
-  return false;
+  return keep;
 }
 
 /** Body of a vertex without live faces, and of one whose faces are not all live and of one body. */
@@ -71,31 +88,24 @@ function bodiesOfVertices(mesh: DooSabinMesh): Int32Array {
   return bodies;
 }
 
-/**
- * Integrates an n-gon whose corners have quads only besides; returns how many waiting vertices that settles. Where it cannot be done yet, all corners are
- * kept: those of a body that is not measured too, since the others need them.
- */
-function addOddFace(
-  mesh: DooSabinMesh, rings: DooSabinRings, bodies: Int32Array, face: number, waiting: Uint8Array, keep: Uint8Array, batches: FanBatches,
-): number {
+/** Integrates an n-gon whose corners have quads only besides, where it is this block's; returns how many own waiting vertices that settles. */
+function addOddFace(mesh: DooSabinMesh, rings: DooSabinRings, bodies: Int32Array, face: number, waiting: Uint8Array, batches: FanBatches): number {
   const start = mesh.starts[face];
   const n = mesh.starts[face + 1] - start;
   if (n === 4) return 0;
   let settled = 0;
-  let apart = true;
+  let isEarliers = false;
   for (let h = start; h < start + n; h++) {
     const vertex = mesh.vertexOf[h];
-    settled += waiting[vertex];
-    if (rings.odd[vertex] !== 1 || rings.border[vertex] === 1 || rings.faces[vertex] !== 4 || bodies[vertex] < 0) apart = false;
+    if (waiting[vertex] === OWN) settled++;
+    else if (waiting[vertex] === EARLIER) isEarliers = true;
+    if (rings.odd[vertex] !== 1 || rings.border[vertex] === 1 || rings.faces[vertex] !== 4 || bodies[vertex] < 0) return 0;
   }
   if (settled === 0) return 0;
-  if (apart) {
+  if (!isEarliers) {
     const fans: Fans = { starts: [0, n], corners: Array.from({ length: n }, (_, i) => start + i), closed: [true], sharpFirst: [false], centre: [SMOOTH_CENTRE] };
     batches.add(mesh, fans, 0);
   }
-  for (let h = start; h < start + n; h++) {
-    if (apart) waiting[mesh.vertexOf[h]] = 0;
-    keep[mesh.vertexOf[h]] = apart ? 0 : 1;
-  }
-  return apart ? settled : 0;
+  for (let h = start; h < start + n; h++) waiting[mesh.vertexOf[h]] = 0;
+  return settled;
 }

@@ -11,7 +11,7 @@ export interface LevelMesh extends Topology {
   /** x, y, z per vertex, about the file frame's local origin of the piece. */
   positions: Float64Array;
   bodyOf: Int32Array;
-  /** 1 while the face still has to be measured. */
+  /** 1 while the face still has to be measured; 2 or 3 while that is up to another block (see `finishLevels`). */
   live: Uint8Array;
   /** Refinements since the cage. */
   level: number;

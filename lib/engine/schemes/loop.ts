@@ -1,15 +1,17 @@
 import { RegularPatches } from '../kernel/regular-patches';
 import type { BorderCurves } from '../moments/border-curves';
 import type { LimitSums } from '../moments/limit-sums';
-import { classifyVertices, isIsolated, isRegularFace, TRIANGLE_COUNTS } from './classify-vertices';
+import { classifyVertices, isRegularFace, TRIANGLE_COUNTS } from './classify-vertices';
 import { FanBatches } from './fan-batches';
-import type { LevelMesh } from './level-mesh';
+import { levelMesh, type LevelMesh } from './level-mesh';
 import { addTriangleSide, LOOP_KIT } from './loop-kit';
 import { fillTriangleNet } from './loop-net';
 import { refineTriangles } from './loop-refine';
 import { RowPatches } from './loop-row';
 import { splitTriangleStrip, triangleStripSide } from './loop-strip';
+import { finishLevels, nearOwn, OWN } from './refinement-blocks';
 import type { RefinementRules } from './refinement-rules';
+import { settleFans } from './settle-fans';
 
 /** Refinements after which a cage that still is not resolved is given up; sharpness below 10 needs at most 12. */
 const MOST_LEVELS = 16;
@@ -23,39 +25,32 @@ const net = new Float64Array(36);
  * Returns false where the cage could not be resolved.
  */
 export function integrateLoop(cage: LevelMesh, rules: RefinementRules, origins: Float64Array, sums: LimitSums): boolean {
-  let mesh = cage;
   const patches = new RegularPatches('triangle', origins, sums);
   const rows = new RowPatches(origins, sums);
   const batches = new FanBatches(LOOP_KIT, origins, sums);
-  for (let level = 0; level <= MOST_LEVELS; level++) {
+  const finish = (mesh: LevelMesh): { left: number; live: Uint8Array } => {
+    const { live } = mesh;
     const { kinds, fans } = classifyVertices(mesh, TRIANGLE_COUNTS);
     let left = 0;
     for (let face = 0; face < mesh.faces; face++) {
-      if (mesh.live[face] === 0) continue;
-      if (isRegularFace(mesh, TRIANGLE_COUNTS, kinds, face, -1)) {
-        addRegularTriangle(mesh, face, patches, sums.curves);
-        mesh.live[face] = 0;
+      if (live[face] === 0) continue;
+      const regular = isRegularFace(mesh, TRIANGLE_COUNTS, kinds, face, -1);
+      const side = regular ? mesh.starts[face] : triangleStripSide(mesh, kinds, face);
+      if (side < 0) {
+        if (live[face] === OWN) left++;
         continue;
       }
-      const side = triangleStripSide(mesh, kinds, face);
-      if (side < 0) left++;
-      else {
-        addStrip(mesh, side, rules, patches, rows, sums.curves);
-        mesh.live[face] = 0;
+      if (live[face] === OWN) {
+        if (regular) addRegularTriangle(mesh, face, patches, sums.curves);
+        else addStrip(mesh, side, rules, patches, rows, sums.curves);
       }
+      live[face] = 0;
     }
     patches.flush();
-    for (let fan = 0; fan < fans.centre.length && left > 0; fan++) {
-      if (!isIsolated(mesh, TRIANGLE_COUNTS, kinds, fans, fan)) continue;
-      batches.add(mesh, fans, fan);
-      for (let i = fans.starts[fan]; i < fans.starts[fan + 1]; i++) mesh.live[mesh.faceOf[fans.corners[i]]] = 0;
-      left -= fans.starts[fan + 1] - fans.starts[fan];
-    }
-    batches.flush();
-    if (left === 0) return true;
-    mesh = refineTriangles(mesh, rules);
-  }
-  return false;
+    return { left: settleFans(mesh, TRIANGLE_COUNTS, kinds, fans, left, batches), live };
+  };
+  const refine = (mesh: LevelMesh, live: Uint8Array): LevelMesh => refineTriangles(levelMesh({ ...mesh, live: nearOwn(mesh, live) }), rules);
+  return finishLevels(cage, { elements: 'faces', mostLevels: MOST_LEVELS, finish, refine });
 }
 
 function addRegularTriangle(mesh: LevelMesh, face: number, patches: RegularPatches, curves: BorderCurves): void {

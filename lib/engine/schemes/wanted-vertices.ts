@@ -7,7 +7,7 @@ import type { RefinementRules } from './refinement-rules';
  */
 export function wantedVertices(mesh: LevelMesh, rules: RefinementRules): Uint8Array {
   const wanted = new Uint8Array(mesh.vertices);
-  for (let face = 0; face < mesh.faces; face++) if (mesh.live[face] === 1) markFace(mesh, face, wanted);
+  for (let face = 0; face < mesh.faces; face++) if (mesh.live[face] > 0) markFace(mesh, face, wanted);
   if (rules.creasing === 'uniform') return wanted;
   const wider = wanted.slice();
   for (let h = 0; h < mesh.vertexOf.length; h++) if (wanted[mesh.vertexOf[h]] === 1) markFace(mesh, mesh.faceOf[h], wider);
