@@ -5,12 +5,22 @@ import { readFile, writeFile } from 'node:fs/promises';
 import { fileURLToPath } from 'node:url';
 import asc from 'assemblyscript/asc';
 import { FAN_ROUTINES } from './support/fan-routines.mjs';
+import { variationOf } from './support/kernel-bends.mjs';
 import { boundsOf, nodesOf } from './support/kernel-bounds.mjs';
 import { scalar, statements, vector } from './support/kernel-dialects.mjs';
 import { shellScalarSource, shellVectorSource } from './support/shell-kernel.mjs';
 import { area, AXES, DIVISORS, middle, moments, SHAPES, side, SUMS } from './support/kernel-shapes.mjs';
 
 const lines = (dialect, list, depth) => statements(dialect, list).map((text) => `${'  '.repeat(depth)}${text}`).join('\n');
+
+/** How much a patch's normal vector varies, block by block, to `bends`. */
+function variationLines(dialect, shape) {
+  const { middle: first, corners, last } = variationOf(shape);
+  return `${lines(dialect, first, 1)}
+  ${dialect.start('most')}
+${corners.map((list) => `  {\n${lines(dialect, list, 2)}\n  }`).join('\n')}
+${lines(dialect, last, 1)}`;
+}
 
 /** The vector kernel's loops over all nodes. */
 function nodeLoops(shape, node, point) {
@@ -89,6 +99,11 @@ ${lines(scalar, toNode(middle(true)), 3)}
 export function ${shape.name}Bounds(p: Float64Array, tolerance: number, reach: number, bounds: Float64Array): void {
 ${lines(scalar, boundsOf(shape.name), 1)}
 }
+
+/** Puts the square of the most that X_u × X_v differs at a corner from the middle, relative to its length there, into \`bends\`. */
+export function ${shape.name}Variation(p: Float64Array, bends: Float64Array): void {
+${variationLines(scalar, shape)}
+}
 `;
 }
 
@@ -156,10 +171,10 @@ ${write(triangleSums.map(([name, axis]) => `p[3 * m + ${axis}] := ${name}`), 2)}
 
 /** Doubles of a rule's place in the kernel's memory, bytes of a pair's results, and where its powers' bounds stand after them; as lib/engine/kernel/vector-kernel.ts has it. */
 const RULE_BYTES = 160;
-const RESULT_BYTES = 400;
+const RESULT_BYTES = 416;
 const BOUNDS_AT = 768;
 
-/** Layout as lib/engine/kernel/vector-kernel.ts has it: per pair the net's values and 3 of the origin, two lanes each; 25 results. */
+/** Layout as lib/engine/kernel/vector-kernel.ts has it: per pair the net's values and 3 of the origin, two lanes each; 26 results. */
 function vectorSource(shape) {
   const put = (letter, first, divisors) => SUMS.map((name, i) => `  v128.store(out + ${16 * (first + i)}, ${divisors ? `f64x2.div(${letter}${name}, f64x2.splat(${DIVISORS[i]}))` : `${letter}${name}`});`).join('\n');
   const extra = shape.alongCount === 'count' ? 0 : 1;
@@ -189,6 +204,10 @@ function ${shape.name}Bounds(p: i32, tolerance: v128, reach: v128, bounds: i32):
 ${lines(vector, boundsOf(shape.name), 1)}
 }
 
+function ${shape.name}Variation(p: i32, bends: i32): void {
+${variationLines(vector, shape)}
+}
+
 export function run${capital(shape.name)}(
   pairs: i32, input: i32, output: i32, fewest: i32, most: i32, coarse: i32, forArea: i32, cutoff: f64, near: f64, calm: f64, tolerance: f64, reach: f64, rules: i32, table: i32, scratch: i32,
 ): void {
@@ -211,6 +230,7 @@ ${powersOf(shape)}
       }
     }
     nodes = max(nodes, start);
+    if (coarse > 0 || fewest < most) ${shape.name}Variation(scratch, output + 400);
     ${shape.name}Moments(scratch, rules, nodes, output);
     if (fewest === most) {
       if (coarse > 0) ${shape.name}Area(scratch, rules, coarse, output + 336);

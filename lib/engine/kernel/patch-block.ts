@@ -1,3 +1,4 @@
+import { areaError } from './node-choice';
 import { inputStride, NET_VALUES, OUTPUT_STRIDE, type FanKernel, type PatchKernel, type PatchKind } from './patch-kinds';
 import { scalarKernel } from './scalar-kernel';
 import { newVectorKernel, vectorKernel } from './vector-kernel';
@@ -6,7 +7,9 @@ const MAGNITUDE_AT = 40;
 const COARSE_AREA_AT = 42;
 const SECOND_ERROR_AT = 44;
 const FIRST_ERROR_AT = 46;
+const SURFACE_AT = 20;
 const NODES_AT = 48;
+const VARIATION_AT = 50;
 
 /** Patches of one kind that are computed together. What one block holds, the next one made over the same kernel overwrites. */
 export class PatchBlock {
@@ -94,6 +97,13 @@ export class PatchBlock {
   /** A patch's area by the coarse rule. */
   coarseArea(patch: number): number {
     return this.output[this.resultAt(patch) + COARSE_AREA_AT];
+  }
+
+  /** What a patch's area may err by, from how its two rules differ (see `areaError`). */
+  areaError(patch: number): number {
+    const { output } = this;
+    const at = this.resultAt(patch);
+    return areaError(this.kernel.kind, output[at + NODES_AT], output[at + SURFACE_AT], output[at + COARSE_AREA_AT], output[at + VARIATION_AT]);
   }
 
   /** What each of a patch's second and first moments may lack for nodes that were spared; volumes lack nothing. */

@@ -18,8 +18,8 @@ export function inputStride(kind: PatchKind): number {
   return 2 * (NET_VALUES[kind] + 3);
 }
 
-/** Doubles per pair and two lanes: ten solid and ten surface moments, magnitude, coarse area, what a second and a first moment may err by, nodes taken. */
-export const OUTPUT_STRIDE = 50;
+/** Doubles per pair and two lanes: ten solid and ten surface moments, magnitude, coarse area, what a second and a first moment may err by, nodes taken, variation of the normal. */
+export const OUTPUT_STRIDE = 52;
 
 /** A kernel of patches in pairs with its memory. */
 export interface PatchKernel {

@@ -1,7 +1,7 @@
 import type { LimitSums } from '../moments/limit-sums';
 import { MOMENTS } from '../moments/sums';
 import { mendSurface } from '../patches/mend-surface';
-import { AREA_TOLERANCE, areaError, CHOICE_TOLERANCE, NODE_RANGES } from './node-choice';
+import { AREA_TOLERANCE, CHOICE_TOLERANCE, NODE_RANGES } from './node-choice';
 import { currentKernel, PatchBlock } from './patch-block';
 import { NET_VALUES, type PatchKind } from './patch-kinds';
 
@@ -50,8 +50,7 @@ export class RegularPatches {
       const body = bodies[patch];
       const at = block.resultAt(patch);
       const area = output[at + 20];
-      const coarseArea = block.coarseArea(patch);
-      let error = areaError(area, coarseArea);
+      let error = block.areaError(patch);
       sums.solid.magnitudes[body] += block.magnitude(patch);
       sums.solid.add(body, output, at, 2);
       const second = block.secondError(patch);
@@ -62,7 +61,7 @@ export class RegularPatches {
       if (error > AREA_TOLERANCE * area) {
         block.net(patch, this.net);
         for (let i = 0; i < MOMENTS; i++) surface[i] = output[at + 20 + 2 * i];
-        error = mendSurface(kind, this.net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2], surface, coarseArea);
+        error = mendSurface(kind, this.net, origins[3 * body], origins[3 * body + 1], origins[3 * body + 2], surface, block.coarseArea(patch), error);
         sums.surface.add(body, surface, 0);
       } else sums.surface.add(body, output, at + 20, 2);
       sums.surfaceError[body] += error;

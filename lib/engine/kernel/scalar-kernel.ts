@@ -1,17 +1,18 @@
 import { netToPowers } from '../patches/bicubic-powers';
 import { gaussRule } from '../patches/gauss-rule';
-import { bicubicBounds, bicubicNodes } from './bicubic-scalar';
+import { bicubicBounds, bicubicNodes, bicubicVariation } from './bicubic-scalar';
 import { biquadraticNetToPowers } from './biquadratic-powers';
-import { biquadraticBounds, biquadraticNodes } from './biquadratic-scalar';
+import { biquadraticBounds, biquadraticNodes, biquadraticVariation } from './biquadratic-scalar';
 import { AREA_CALM, AREA_CUTOFF, AREA_NEAR, coarseOf, NODE_RANGES, nodesAfter } from './node-choice';
 import { AREA_SUMS, MOMENT_SUMS, TOTALS } from './node-sums';
 import { ALONG_EXTRA, inputStride, MOST_PAIRS, NET_VALUES, OUTPUT_STRIDE, type FanKernel, type PatchKind } from './patch-kinds';
 import { FAN_ROOM, scalarFans } from './scalar-fans';
 import { triangleNetToPowers } from './triangle-powers';
-import { triangleBounds, triangleNodes } from './triangle-scalar';
+import { triangleBounds, triangleNodes, triangleVariation } from './triangle-scalar';
 
 const TO_POWERS = { bicubic: netToPowers, biquadratic: biquadraticNetToPowers, triangle: triangleNetToPowers };
 const NODES = { bicubic: bicubicNodes, biquadratic: biquadraticNodes, triangle: triangleNodes };
+const VARIATION = { bicubic: bicubicVariation, biquadratic: biquadraticVariation, triangle: triangleVariation };
 const BOUNDS = { bicubic: bicubicBounds, biquadratic: biquadraticBounds, triangle: triangleBounds };
 
 /** What ten solid moments are sums of: ∮ f(X) det(X, X_u, X_v) is 3 + deg f times the moment. */
@@ -44,6 +45,7 @@ function powerArea(kind: PatchKind, p: Float64Array, nodes: number): number {
 const net = new Float64Array(48);
 const pair = [new Float64Array(48), new Float64Array(48)];
 const pairBounds = [new Float64Array(6), new Float64Array(6)];
+const variation = new Float64Array(1);
 const solid = new Float64Array(10);
 const surface = new Float64Array(10);
 
@@ -72,6 +74,12 @@ export function scalarKernel(kind: PatchKind): FanKernel {
       }
       if (coarseCount > 0) output[to + 42] = powerArea(kind, pair[lane], coarseCount);
       output[to + 48] = count;
+    }
+  };
+  const putVariation = (at: number): void => {
+    for (let lane = 0; lane < 2; lane++) {
+      VARIATION[kind](pair[lane], variation);
+      output[at * OUTPUT_STRIDE + 50 + lane] = variation[0];
     }
   };
   const agree = (at: number, cutoff: number): boolean => {
@@ -103,6 +111,7 @@ export function scalarKernel(kind: PatchKind): FanKernel {
     run(pairs, count, coarseCount) {
       for (let at = 0; at < pairs; at++) {
         putPowers(at);
+        if (coarseCount > 0) putVariation(at);
         runPair(at, count, coarseCount);
         putErrors(at, NONE, NONE);
       }
@@ -111,6 +120,7 @@ export function scalarKernel(kind: PatchKind): FanKernel {
       let start = fewest;
       for (let at = 0; at < pairs; at++) {
         putPowers(at);
+        putVariation(at);
         putErrors(at, NONE, NONE);
         let nodes = Math.max(start, tolerance > 0 ? enough(at, fewest, tolerance, reach) : fewest);
         runPair(at, nodes, coarseOf(kind, nodes));

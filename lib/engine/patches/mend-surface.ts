@@ -1,4 +1,4 @@
-import { AREA_TOLERANCE, areaError, coarseOf, NODE_RANGES } from '../kernel/node-choice';
+import { AREA_TOLERANCE, coarseOf, NODE_RANGES } from '../kernel/node-choice';
 import { PatchBlock, separateKernel } from '../kernel/patch-block';
 import type { PatchKind } from '../kernel/patch-kinds';
 import { applyRows } from '../schemes/sparse-rows';
@@ -23,14 +23,14 @@ const solid = new Float64Array(10);
 
 /**
  * Mends the ten surface moments about (ox, oy, oz) of a patch with the net `net` [3 point + axis], whose area by the finest rule for areas and the one it is compared with is `surface[0]` and
- * `coarseArea`: the integrand holds a root, so the error is estimated by comparing the rules, and the patch quartered until it is within `tolerance` (an area).
+ * `coarseArea` and may err by `error` (see `areaError`): the integrand holds a root, so the patch is quartered until that is within `tolerance` (an area).
  * Returns the estimated error of the area.
  */
 export function mendSurface(
-  kind: PatchKind, net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array, coarseArea: number, tolerance = AREA_TOLERANCE * surface[0],
+  kind: PatchKind, net: Float64Array, ox: number, oy: number, oz: number, surface: Float64Array, coarseArea: number, error: number,
+  tolerance = AREA_TOLERANCE * surface[0],
 ): number {
   const area = surface[0];
-  const error = areaError(area, coarseArea);
   if (!(error > tolerance)) return error;
   surface.fill(0);
   return quarter(kind, menderOf(kind), net, 0, [ox, oy, oz], { change: Math.abs(area - coarseArea), area }, tolerance, 1, surface);
@@ -42,7 +42,7 @@ export function measureSurface(kind: PatchKind, net: Float64Array, ox: number, o
   block.put(0, net, ox, oy, oz);
   runForArea(block, kind, 1);
   block.read(0, solid, surface);
-  return mendSurface(kind, net, ox, oy, oz, surface, block.coarseArea(0), tolerance);
+  return mendSurface(kind, net, ox, oy, oz, surface, block.coarseArea(0), block.areaError(0), tolerance);
 }
 
 function runForArea(block: PatchBlock, kind: PatchKind, patches: number): void {
@@ -86,7 +86,7 @@ function quarter(
     areas[i] = own[0];
     changes[i] = Math.abs(own[0] - block.coarseArea(i));
     const analytic = ANALYTIC_FALL * changes[i] * before.area <= before.change * own[0];
-    errors[i] = analytic ? areaError(own[0], block.coarseArea(i)) : changes[i];
+    errors[i] = analytic ? block.areaError(i) : changes[i];
   }
   const goOn = depth < PATIENCE || (depth < MOST_QUARTERINGS && changes[0] + changes[1] + changes[2] + changes[3] < (1 - LEAST_GAIN) * before.change);
   let error = 0;

@@ -1,4 +1,4 @@
-import { AREA_TOLERANCE, areaError, CHOICE_TOLERANCE, NODE_RANGES } from '../kernel/node-choice';
+import { AREA_TOLERANCE, CHOICE_TOLERANCE, NODE_RANGES } from '../kernel/node-choice';
 import type { PatchBlock } from '../kernel/patch-block';
 import type { PatchKind } from '../kernel/patch-kinds';
 import { SUMMED_RESULTS } from '../kernel/scalar-fans';
@@ -197,8 +197,7 @@ export class FanBatch {
   private checkPatch(patch: number, place: number): void {
     const { block, memory: { sums } } = this;
     const area = block.output[block.resultAt(place) + 2 * MOMENTS];
-    const coarseArea = block.coarseArea(place);
-    let error = areaError(area, coarseArea);
+    let error = block.areaError(place);
     const nodes = block.nodes(place);
     this.noteWorst(patch, nodes, error);
     if (nodes < NODE_RANGES[this.kit.rule.kind].exact) this.noteSpared(patch, error);
@@ -214,7 +213,7 @@ export class FanBatch {
       block.net(place, this.net);
       block.read(place, solid, surface);
       for (let m = 0; m < MOMENTS; m++) sums[to + m] -= surface[m];
-      error = mendSurface(this.kit.rule.kind, this.net, 0, 0, 0, surface, coarseArea, tolerance);
+      error = mendSurface(this.kit.rule.kind, this.net, 0, 0, 0, surface, block.coarseArea(place), error, tolerance);
       for (let m = 0; m < MOMENTS; m++) sums[to + m] += surface[m];
     }
     this.levelError += error;

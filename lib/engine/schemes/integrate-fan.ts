@@ -88,7 +88,7 @@ export function integrateFan(kit: FanKit, mesh: LevelMesh, fans: Fans, index: nu
         const magnitude = block.read(place + child, solid, surface);
         if (checked) {
           block.net(place + child, net);
-          const error = mendSurface(kind, net, ox, oy, oz, surface, block.coarseArea(place + child));
+          const error = mendSurface(kind, net, ox, oy, oz, surface, block.coarseArea(place + child), block.areaError(place + child));
           sums.surfaceError[kit.body(mesh, corners[j])] += Math.abs(at(table.surfaceWeights, k)) * error;
           if (error > worstError) {
             worstError = error;

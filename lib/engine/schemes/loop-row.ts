@@ -88,9 +88,8 @@ function sumPieces(row: TriangleRow, at: Float64Array, weights: Float64Array, [o
   for (let patch = 0; patch < pieces * at.length; patch++) {
     const weight = weights[Math.floor(patch / pieces)];
     sums.magnitude += weight * patches.read(patch, solid, surface);
-    const coarseArea = patches.coarseArea(patch);
     patches.net(patch, net);
-    sums.error += weight * mendSurface('triangle', net, ox, oy, oz, surface, coarseArea);
+    sums.error += weight * mendSurface('triangle', net, ox, oy, oz, surface, patches.coarseArea(patch), patches.areaError(patch));
     for (let i = 0; i < MOMENTS; i++) {
       sums.solid[i] += weight * solid[i];
       sums.moduli[i] += weight * Math.abs(solid[i]);

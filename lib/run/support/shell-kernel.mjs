@@ -1,5 +1,6 @@
 // What lib/run/build-kernel.mjs writes for walls: curvature terms of patches, in the dialects of the moments' kernels.
 import { FAN_ROUTINES } from './fan-routines.mjs';
+import { headless, looksOf } from './kernel-bends.mjs';
 import { pruned, scalar, statements, vector } from './kernel-dialects.mjs';
 import { AXES, middle, normal, SHAPES, side } from './kernel-shapes.mjs';
 
@@ -76,15 +77,6 @@ const shellSums = (...tags) => [
   ...numbered(TERMS).map((i) => `t${i} += ${tags.map((t) => `(${shares(t)[i]})`).join(' + ')}`),
 ];
 
-const HEADS = /^let (u|wu|rest|v|w) =/;
-const headless = (list) => list.filter((text) => !HEADS.test(text));
-
-/** Where X_u × X_v is looked at: a line's two ends, or its middle. */
-const LOOKS = {
-  square: [['0', null], ['0 - 1 / 2', '1 / 2'], ['1 / 2', '1 / 2']],
-  triangle: [['0 - 1 / 6', null], ['0 - 1 / 2', '1 / 2'], ['1 / 2', null]],
-};
-
 /**
  * To `bends`: the square of X_u × X_v in the middle; squares of how much it turns and stretches. A triangle has its differences at the corners from the middle.
  * A square has those along each side, halved, relative to the side's mean, which is what a rule in that direction meets; and the corners' mean less the middle.
@@ -98,7 +90,7 @@ function bendBlocks(dialect, shape) {
     `let r${name} = ${sumOfSquares((axis) => `${axis}g${name}`)}`,
     `bends[${++at}] := (${sumOfSquares((axis) => `${axis}f${name}`)}) / r${name}`,
   ];
-  const [first, ...others] = LOOKS[shape.name === 'triangle' ? 'triangle' : 'square'];
+  const [first, ...others] = looksOf(shape);
   const lineAt = (u) => [`let u = ${u}`, ...headless(shape.line(false))];
   const atMiddle = headless(middle(false));
   const whole = [...lineAt(first[0]), ...atMiddle, ...normal('m'), ...AXES.map((axis) => `let n${axis}c = n${axis}m`), `bends[0] := ${AXES.map((axis) => `n${axis}c * n${axis}c`).join(' + ')}`];
