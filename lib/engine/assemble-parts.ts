@@ -1,5 +1,6 @@
 import type { MeasuredComponent, MeasuredPart, SolidMoments, Three } from './measured';
 import type { Frames } from './mesh/frames';
+import { isOpenEdge } from './mesh/holes';
 import type { Bodies } from './mesh/partition';
 import type { Topology } from './mesh/topology';
 import type { CapAmounts } from './moments/caps';
@@ -16,7 +17,7 @@ const NO_VOLUME = 1e-13;
 const SHEET_CAP_SHARE = 0.25;
 const SHEET_ROUNDNESS = 0.02;
 
-/** Puts the sums into parts and components; `shells` per body where they were measured. */
+/** Puts the sums into parts and components; `shells` per body where they were measured. Holes are no part. */
 export function assembleParts(
   mesh: Topology, bodies: Bodies, blocked: Uint8Array, frames: Frames, limit: Integrated, ownCage: Integrated, caps: CapAmounts,
   shells: readonly ShellBody[] | null = null,
@@ -41,7 +42,8 @@ export function assembleParts(
     capVolume[index] += caps.volume[body];
   }
   for (let i = 0; i < parts.length; i++) describeCaps(parts[i], capArea[i], capVolume[i]);
-  return parts;
+  // Theirs is the last one, so that the others keep their numbers.
+  return bodies.holePart < 0 ? parts : parts.slice(0, bodies.holePart);
 }
 
 function emptyParts(mesh: Topology, bodies: Bodies): MeasuredPart[] {
@@ -53,9 +55,9 @@ function emptyParts(mesh: Topology, bodies: Bodies): MeasuredPart[] {
   const valence = new Int32Array(mesh.vertices);
   for (let h = 0; h < vertexOf.length; h++) valence[vertexOf[h]]++;
   for (const h of bodies.borders) {
-    if (mesh.twin[h] >= 0) continue;
     const face = mesh.faceOf[h];
-    parts[bodies.partOf[face]].openEdges++;
+    if (isOpenEdge(mesh, bodies, h)) parts[bodies.partOf[face]].openEdges++;
+    if (mesh.twin[h] >= 0) continue;
     valence[vertexOf[h + 1 === starts[face + 1] ? starts[face] : h + 1]]++;
   }
   const most = new Int32Array(parts.length);

@@ -44,7 +44,7 @@ export interface Cage {
   /** Tagged vertices and their sharpness. */
   cornerVertices: Uint32Array;
   cornerSharpness: Float32Array;
-  /** Faces that the file marks as holes: they shape the surface and are no part of it. Left out where the format knows none. */
+  /** Faces that the file marks as holes, in any order: they shape the surface and are no part of it. Left out where there are none. */
   holes?: Uint32Array;
   /** Boundary rule that the file itself asks for; null where it is silent. */
   boundary: Boundary | null;

@@ -14,13 +14,13 @@ export interface RawMoments {
 }
 
 /**
- * Signed moments of the cones from `apex` (file frame) to the limit surface of a whole manifold cage, without caps, about the file's origin.
+ * Signed moments of the cones from `apex` (file frame) to the limit surface of a whole manifold cage, holes included, without caps, about the file's origin.
  * For a closed surface they are the solid's, whatever the apex. Throws where the cage could not be resolved.
  */
 export function limitConeMoments(cage: Cage, options: Omit<MeasureOptions, 'partsBy'>, apex: Three): RawMoments {
   const { mesh } = buildTopology(cage);
   const one = new Int32Array(mesh.faces);
-  const bodies = { partNames: [''], partOf: one, bodyOf: one, bodies: 1, partOfBody: new Int32Array(1), pieceOf: one, pieces: 1, borders: findBorderEdges(mesh, one) };
+  const bodies = { partNames: [''], partOf: one, holePart: -1, toldOf: one, bodyOf: one, bodies: 1, partOfBody: new Int32Array(1), pieceOf: one, pieces: 1, borders: findBorderEdges(mesh, one) };
   const frames: Frames = {
     positions: cage.positions.map((value, i) => value - apex[i % 3]),
     pieceCentres: Float64Array.from(apex),

@@ -35,7 +35,7 @@ export interface DisplayMesh {
 
 /**
  * Triangulates the limit surface: `level` uniform refinements, then every vertex on its limit point. `polyhedral` (and a level of 0) gives the cage.
- * The cage is mended as it is for measuring. Never throws; a cage with problems is drawn as far as its faces go.
+ * The cage is mended as it is for measuring. Holes are left out. Never throws; a cage with problems is drawn as far as its faces go.
  */
 export function displayMesh(given: Cage, options: MeasureOptions, level: number): DisplayMesh {
   const { cage } = mendCage(given, options, new FindingList());
@@ -48,7 +48,7 @@ export function displayMesh(given: Cage, options: MeasureOptions, level: number)
   let fine = levelZero(mesh, local, bodies.partOf, new Uint8Array(bodies.partNames.length), options.boundary);
   if (level > 0) fine = refineForDisplay(fine, options, level);
   const smooth = options.scheme !== 'polyhedral';
-  return { ...triangulate(fine, bodies.partNames, smooth), origin };
+  return { ...triangulate(fine, bodies.holePart < 0 ? bodies.partNames : bodies.partNames.slice(0, bodies.holePart), smooth), origin };
 }
 
 /** Refines everything and moves the vertices to their limit points; a cage that its scheme cannot refine is left as it is. */
@@ -77,11 +77,16 @@ function refineForDisplay(cage: LevelMesh, options: MeasureOptions, level: numbe
   return cage;
 }
 
+/** Faces of each of the parts; those of holes, whose number is none of them, are in no list. */
+function listFaces(mesh: LevelMesh, parts: number): number[][] {
+  const lists: number[][] = Array.from({ length: parts }, () => []);
+  for (let face = 0; face < mesh.faces; face++) if (mesh.bodyOf[face] < parts) lists[mesh.bodyOf[face]].push(face);
+  return lists;
+}
+
 /** Corners of one vertex that share a normal: same part, no sharp edge between them. Numbered part by part. */
-function groupCorners(mesh: LevelMesh, parts: number, smooth: boolean): { vertexOfCorner: Int32Array; partStarts: number[] } {
+function groupCorners(mesh: LevelMesh, facesByPart: number[][], smooth: boolean): { vertexOfCorner: Int32Array; partStarts: number[] } {
   const vertexOfCorner = new Int32Array(mesh.vertexOf.length).fill(-1);
-  const facesByPart: number[][] = Array.from({ length: parts }, () => []);
-  for (let face = 0; face < mesh.faces; face++) facesByPart[mesh.bodyOf[face]].push(face);
   const partStarts = [0];
   let count = 0;
   const joins = (h: number): boolean => smooth && !isSharpForGood(mesh, h) && mesh.bodyOf[mesh.faceOf[mesh.twin[h]]] === mesh.bodyOf[mesh.faceOf[h]];
@@ -109,15 +114,14 @@ function groupCorners(mesh: LevelMesh, parts: number, smooth: boolean): { vertex
 }
 
 function triangulate(mesh: LevelMesh, partNames: string[], smooth: boolean): Omit<DisplayMesh, 'origin'> {
-  const { vertexOfCorner, partStarts } = groupCorners(mesh, partNames.length, smooth);
+  const facesByPart = listFaces(mesh, partNames.length);
+  const { vertexOfCorner, partStarts } = groupCorners(mesh, facesByPart, smooth);
   const positions = new Float32Array(3 * partStarts[partNames.length]);
   const normals = new Float32Array(positions.length);
   let triangles = 0;
-  for (let face = 0; face < mesh.faces; face++) triangles += Math.max(0, mesh.starts[face + 1] - mesh.starts[face] - 2);
+  for (const faces of facesByPart) for (const face of faces) triangles += Math.max(0, mesh.starts[face + 1] - mesh.starts[face] - 2);
   const indices = new Uint32Array(3 * triangles);
   const parts: DisplayPart[] = [];
-  const facesByPart: number[][] = partNames.map(() => []);
-  for (let face = 0; face < mesh.faces; face++) facesByPart[mesh.bodyOf[face]].push(face);
   let at = 0;
   for (let part = 0; part < partNames.length; part++) {
     const firstIndex = at;

@@ -99,7 +99,7 @@ export interface MeasuredPart {
   /** Caps over borders to other parts and over real holes: share of the closed part's area and of its |volume|; 0 where there are none. */
   capAreaShare: number;
   capVolumeShare: number;
-  /** Edges with one face only (real holes or an open sheet), as opposed to borders to other parts. */
+  /** Edges with one face only (real holes, faces that the file marks as holes, or an open sheet), as opposed to borders to other parts. */
   openEdges: number;
   /** Rough guess that an open part is meant as a sheet. */
   looksLikeSheet: boolean;

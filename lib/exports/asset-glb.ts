@@ -55,11 +55,12 @@ function partNode(document: Document, part: string, kind: 'surface' | 'cage', pr
 /** Vertex pairs of each part's edges, once an edge; a border between two parts stands in both. */
 function cageEdges(cage: Cage, partsBy: Partition): Map<string, number[]> {
   const { mesh } = buildTopology(cage);
-  const { partNames, partOf } = partitionFaces(cage, mesh, partsBy);
+  const { partNames, partOf, holePart } = partitionFaces(cage, mesh, partsBy);
   const edges = new Map<string, number[]>();
   for (let h = 0; h < mesh.vertexOf.length; h++) {
     const twin = mesh.twin[h];
     const part = partOf[mesh.faceOf[h]];
+    if (part === holePart) continue;
     if (twin >= 0 && twin < h && partOf[mesh.faceOf[twin]] === part) continue;
     const pair = [mesh.vertexOf[h], mesh.vertexOf[nextHalfEdge(mesh, h)]];
     const list = edges.get(partNames[part]);

@@ -1,4 +1,5 @@
 import type { Cage } from '../engine/cage';
+import { holeFlags } from '../engine/mesh/holes';
 import { oneLabel } from './bare-cage';
 import { checkCoordinates } from './check-coordinates';
 import { shortNames } from './distinct-names';
@@ -121,6 +122,7 @@ export function readUsdMeshes(layer: UsdLayer): Cage {
   if (cages.length === 0) throw new MeshError({ code: 'no_faces', expected: 'a mesh', detail: `expected at least one mesh with faces in the layer, found none${lost ? `. ${lost.message.replace(/\.$/, '')}` : ''}` });
   if (new Set(cages.map((cage) => cage.scheme)).size > 1) scene.notes.add('schemes_differ', '', () => 'The meshes of the file ask for different subdivision schemes; one is used for all.');
   const merged = mergeCages(cages);
+  if (holeFlags(merged)?.includes(0) === false) throw new MeshError({ code: 'no_faces', expected: 'a face that is no hole', detail: 'expected at least one face that is no hole in the layer, found none' });
   const metres = layer.metersPerUnit;
   if (metres !== null && !(metres > 0 && metres < Infinity)) throw new MeshError({ code: 'bad_unit', expected: 'a positive number for metersPerUnit', found: String(metres), detail: `expected a positive number for metersPerUnit, found ${metres}` });
   return { ...merged, metresPerUnit: metres, upAxis: layer.upAxis, warnings: [...scene.notes.list(), ...merged.warnings] };

@@ -98,7 +98,6 @@ export function usdPolygons(prim: UsdPrim, path: string): Cage {
   const boundary = textOf(prim, 'interpolateBoundary');
   const warnings = [];
   if (boundary === 'none') warnings.push(fileNote('boundary_none', `Mesh ${path} asks to leave out faces at open borders; they are measured.`));
-  if (holes.length > 0) warnings.push(fileNote('holes_measured', `Mesh ${path} marks ${holes.length} face${holes.length === 1 ? '' : 's'} as holes; they are measured like the others.`));
   return {
     ...bareCage({ positions, faceStarts, faceVertices }),
     ...readCreases(prim, vertices, path),

@@ -4,6 +4,7 @@ import { positionOf } from './diagnose';
 import { counted, placeOf, type FindingList } from './findings';
 import { halfEdgeEnds } from './match-edges';
 import { diagnoseNesting, nestedPieces } from './nesting';
+import { isOpenEdge } from './holes';
 import type { Bodies } from './partition';
 import type { PieceRelations } from './relate-pieces';
 import type { Topology } from './topology';
@@ -14,14 +15,16 @@ export function diagnoseOrientation(
 ): void {
   const firstFace = new Int32Array(bodies.bodies).fill(-1);
   for (let face = mesh.faces - 1; face >= 0; face--) firstFace[bodies.bodyOf[face]] = face;
+  const besideHoles = new Int32Array(parts.length);
   for (const h of bodies.borders) {
-    if (mesh.twin[h] >= 0) continue;
+    if (!isOpenEdge(mesh, bodies, h)) continue;
     const face = mesh.faceOf[h];
     if (blocked[bodies.bodyOf[face]] === 1) continue;
     const part = parts[bodies.partOf[face]];
+    if (mesh.twin[h] >= 0) besideHoles[bodies.partOf[face]]++;
     const edge = halfEdgeEnds(mesh, h);
     findings.add('open_border', 'problem', part.name, placeOf({ face, edge, position: positionOf(cage, edge[0]), line: cage.faceLines?.[face] ?? null }),
-      (n) => openBorderMessage(n, part));
+      (n) => openBorderMessage(n, besideHoles[bodies.partOf[face]], part));
   }
   const component = new Int32Array(parts.length);
   const nested = nestedPieces(bodies, relations);
@@ -46,8 +49,9 @@ export function diagnoseOrientation(
   diagnoseNesting(cage, mesh, bodies, relations, nested, inverted, findings);
 }
 
-function openBorderMessage(edges: number, part: MeasuredPart): string {
-  const open = `${counted(edges, 'edge has', 'edges have')} one face only`;
+function openBorderMessage(edges: number, besideHoles: number, part: MeasuredPart): string {
+  const holes = besideHoles === 0 ? '' : besideHoles === edges ? ', beside faces that are holes in the file' : `, ${besideHoles} of them beside faces that are holes in the file`;
+  const open = `${counted(edges, 'edge has', 'edges have')} one face only${holes}`;
   if (part.looksLikeSheet) return `${open}; the part looks like a sheet: set its construction to sheet, or close the surface.`;
   const share = (100 * part.capAreaShare).toPrecision(2);
   return `${open}; close the holes, whose caps make up ${share} % of the closed area, or set the construction to sheet.`;

@@ -2,7 +2,7 @@ import type { Cage } from '../cage';
 import { positionOf } from './diagnose';
 import { counted, placeOf, type FindingList } from './findings';
 import { halfEdgeEnds } from './match-edges';
-import type { Bodies } from './partition';
+import { partToldAt, type Bodies } from './partition';
 import type { Topology } from './topology';
 
 /** Doo-Sabin surfaces carry no creases and corners: says which tags of the file go unheard. */
@@ -11,7 +11,7 @@ export function warnOfSharpness(cage: Cage, mesh: Topology, bodies: Bodies, find
   for (let h = 0; h < mesh.vertexOf.length; h++) {
     const vertex = mesh.vertexOf[h];
     if (!(mesh.edgeSharpness[h] > 0) && !(mesh.vertexSharpness[vertex] > 0)) continue;
-    const part = bodies.partNames[bodies.partOf[mesh.faceOf[h]]];
+    const part = partToldAt(bodies, mesh.faceOf[h]);
     const position = positionOf(cage, vertex);
     if (mesh.edgeSharpness[h] > 0 && !(mesh.twin[h] >= 0 && mesh.twin[h] < h)) {
       findings.add('crease_not_carried', 'warning', part, placeOf({ face: mesh.faceOf[h], edge: halfEdgeEnds(mesh, h), position }),

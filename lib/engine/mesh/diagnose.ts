@@ -2,7 +2,7 @@ import type { Cage } from '../cage';
 import type { Place } from '../measured';
 import { counted, placeOf, type FindingList } from './findings';
 import { halfEdgeEnds } from './match-edges';
-import type { Bodies } from './partition';
+import { partToldAt, type Bodies } from './partition';
 import { findTurnedFaces } from './turned-faces';
 import type { EdgeDefects, Topology } from './topology';
 
@@ -17,7 +17,7 @@ export function diagnoseStructure(cage: Cage, mesh: Topology, defects: EdgeDefec
     const position = vertex === undefined ? null : positionOf(cage, vertex);
     return placeOf({ face, position, line: cage.faceLines === null ? null : cage.faceLines[face], ...fields });
   };
-  const partName = (face: number): string => bodies.partNames[bodies.partOf[face]];
+  const partName = (face: number): string | null => partToldAt(bodies, face);
 
   for (const h of defects.nonManifold) {
     const face = mesh.faceOf[h];
@@ -40,7 +40,7 @@ export function diagnoseStructure(cage: Cage, mesh: Topology, defects: EdgeDefec
     }
   }
   diagnoseFaces(cage, mesh, bad, findings, at, partName);
-  diagnoseVertices(cage, mesh, bad, bodies.partOf, joined, findings, at, partName);
+  diagnoseVertices(cage, mesh, bad, bodies.toldOf, joined, findings, at, partName);
   for (const tag of defects.strayCreases) {
     const edge: [number, number] = [cage.creaseVertices[2 * tag], cage.creaseVertices[2 * tag + 1]];
     findings.add('crease_without_edge', 'warning', null, placeOf({ edge, position: positionOf(cage, edge[0]) }),
@@ -56,8 +56,9 @@ export function positionOf(cage: Cage, vertex: number): [number, number, number]
 }
 
 type PlaceAt = (face: number, fields: Partial<Place>) => Place;
+type PartNameAt = (face: number) => string | null;
 
-function diagnoseFaces(cage: Cage, mesh: Topology, bad: Uint8Array, findings: FindingList, at: PlaceAt, partName: (face: number) => string): void {
+function diagnoseFaces(cage: Cage, mesh: Topology, bad: Uint8Array, findings: FindingList, at: PlaceAt, partName: PartNameAt): void {
   const { starts, vertexOf, faces } = mesh;
   const seenAt = new Int32Array(mesh.vertices).fill(-1);
   const crowded: number[] = [];
@@ -131,7 +132,7 @@ function touchesBad(mesh: Topology, bad: Uint8Array, face: number): boolean {
   return false;
 }
 
-function reportDuplicates(mesh: Topology, faces: number[], bad: Uint8Array, findings: FindingList, at: PlaceAt, partName: (face: number) => string): void {
+function reportDuplicates(mesh: Topology, faces: number[], bad: Uint8Array, findings: FindingList, at: PlaceAt, partName: PartNameAt): void {
   const known = new Set<string>();
   for (const face of faces.sort((a, b) => a - b)) {
     const key = Array.from(mesh.vertexOf.subarray(mesh.starts[face], mesh.starts[face + 1])).sort((a, b) => a - b).join(' ');
@@ -144,12 +145,12 @@ function reportDuplicates(mesh: Topology, faces: number[], bad: Uint8Array, find
   }
 }
 
-function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, partOf: Int32Array, joined: Int32Array, findings: FindingList, at: PlaceAt, partName: (face: number) => string): void {
+function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, toldOf: Int32Array, joined: Int32Array, findings: FindingList, at: PlaceAt, partName: PartNameAt): void {
   const { vertexOf } = mesh;
   const corners = new Int32Array(mesh.vertices);
   const visited = new Uint8Array(mesh.vertices);
   for (let h = 0; h < vertexOf.length; h++) corners[vertexOf[h]]++;
-  const told = partsToldOf(mesh, bad, partOf);
+  const told = partsToldOf(mesh, bad, toldOf);
   const gone = new Set(joined);
   for (let h = 0; h < vertexOf.length; h++) {
     const v = vertexOf[h];
@@ -157,7 +158,7 @@ function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, partOf: I
     visited[v] = 1;
     if (countFan(mesh, h, corners[v]) === corners[v]) continue;
     const face = mesh.faceOf[h];
-    if (bad[face] === 1 || told?.[v] === partOf[face]) continue;
+    if (bad[face] === 1 || told?.[v] === toldOf[face]) continue;
     bad[face] = 1;
     findings.add('non_manifold_vertex', 'problem', partName(face), at(face, { vertex: v }),
       (n) => `${counted(n, 'vertex joins', 'vertices join')} surfaces that touch in that point only; split ${n === 1 ? 'it' : 'them'} so that each surface has its own.`);
@@ -170,10 +171,10 @@ function diagnoseVertices(cage: Cage, mesh: Topology, bad: Uint8Array, partOf: I
 }
 
 /** Per vertex the part of a face there that already stands in a problem, which breaks the turn about it and says enough; -1 where there is none, null without any. */
-function partsToldOf({ starts, vertexOf, vertices }: Topology, bad: Uint8Array, partOf: Int32Array): Int32Array | null {
+function partsToldOf({ starts, vertexOf, vertices }: Topology, bad: Uint8Array, toldOf: Int32Array): Int32Array | null {
   if (!bad.includes(1)) return null;
   const told = new Int32Array(vertices).fill(-1);
-  for (let face = 0; face < bad.length; face++) if (bad[face] === 1) for (let h = starts[face]; h < starts[face + 1]; h++) told[vertexOf[h]] = partOf[face];
+  for (let face = 0; face < bad.length; face++) if (bad[face] === 1) for (let h = starts[face]; h < starts[face + 1]; h++) told[vertexOf[h]] = toldOf[face];
   return told;
 }
 

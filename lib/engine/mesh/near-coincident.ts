@@ -1,7 +1,7 @@
 import type { Cage } from '../cage';
 import { positionOf } from './diagnose';
 import { counted, placeOf, type FindingList } from './findings';
-import type { Bodies } from './partition';
+import { partToldAt, type Bodies } from './partition';
 import { nextHalfEdge, type Topology } from './topology';
 import { borderVertices, weldPairs, weldTolerance } from './weld-vertices';
 
@@ -26,7 +26,7 @@ export function diagnoseNearCoincident(cage: Cage, mesh: Topology, bodies: Bodie
   }
   for (const vertex of [...near].sort((a, b) => a - b)) {
     const face = faceAt.get(vertex) ?? 0;
-    findings.add(NEAR_COINCIDENT_VERTICES, 'warning', bodies.partNames[bodies.partOf[face]],
+    findings.add(NEAR_COINCIDENT_VERTICES, 'warning', partToldAt(bodies, face),
       placeOf({ face, vertex, position: positionOf(cage, vertex), line: cage.faceLines?.[face] ?? null }),
       (n) => `${counted(n, 'vertex on an open border lies', 'vertices on open borders lie')} on another within ${tolerance.toPrecision(2)} file units; weld ${n === 1 ? 'it' : 'them'} (an option of the import) if the surface is meant to be closed there.`);
   }

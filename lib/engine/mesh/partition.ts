@@ -1,15 +1,23 @@
 import type { Cage, FaceLabels, Partition } from '../cage';
+import { holeFlags, partsBesideHoles } from './holes';
 import type { Topology } from './topology';
 
 /** Name of the part that holds the faces without a label, or all faces where the file has no such labels. */
 export const DEFAULT_PART = 'default';
 /** Name of the one part of a file measured whole. */
 export const WHOLE_PART = 'whole';
+/** Name under which holes are kept apart; no file's, since names hold no control characters. */
+const HOLE_PART = '\u0000holes';
 
 /** Faces sorted into parts, and each part into bodies: its pieces that hang together over edges. */
 export interface Bodies {
+  /** Where the cage has holes, the last one is theirs. */
   partNames: string[];
   partOf: Int32Array;
+  /** Number of the faces that are holes, which are no part of anything; -1 without holes. Their bodies are never measured, and to other bodies they are the outside. */
+  holePart: number;
+  /** Part under which what is found at a face is told: its own; a hole's is one that it touches, -1 where there is none. */
+  toldOf: Int32Array;
   bodyOf: Int32Array;
   bodies: number;
   /** Part of each body; bodies are numbered by their first face. */
@@ -55,21 +63,28 @@ export function floodFaces(mesh: Topology, key: Int32Array | null): { of: Int32A
   return { of, count };
 }
 
-/** Sorts faces into named parts (equal names are one part, in the order of their first face) and bodies. */
+/** Sorts faces into named parts (equal names are one part, in the order of their first face) and bodies; holes lie apart from both, and belong to their pieces. */
 export function partitionFaces(cage: Cage, mesh: Topology, by: Partition): Bodies {
   const partOf = new Int32Array(mesh.faces);
   const partNames: string[] = [];
   const labels = labelsFor(cage, by);
   const pieces = floodFaces(mesh, null);
+  const holes = holeFlags(cage);
   if (by === 'piece') {
-    partOf.set(pieces.of);
-    for (let i = 0; i < pieces.count; i++) partNames.push(`piece ${i + 1}`);
+    const partOfPiece = new Int32Array(pieces.count).fill(-1);
+    for (let face = 0; face < mesh.faces; face++) {
+      if (holes?.[face] === 1) continue;
+      const piece = pieces.of[face];
+      if (partOfPiece[piece] < 0) partOfPiece[piece] = partNames.push(`piece ${partNames.length + 1}`) - 1;
+      partOf[face] = partOfPiece[piece];
+    }
   } else if (labels === null) {
-    partNames.push(by === 'whole' ? WHOLE_PART : DEFAULT_PART);
+    if (holes === null || holes.includes(0)) partNames.push(by === 'whole' ? WHOLE_PART : DEFAULT_PART);
   } else {
     const partOfName = new Map<string, number>();
     const partOfLabel = new Int32Array(labels.names.length + 1).fill(-1);
     for (let face = 0; face < mesh.faces; face++) {
+      if (holes?.[face] === 1) continue;
       const label = labels.labels[face];
       const slot = label < 0 ? labels.names.length : label;
       if (partOfLabel[slot] < 0) {
@@ -84,10 +99,19 @@ export function partitionFaces(cage: Cage, mesh: Topology, by: Partition): Bodie
       partOf[face] = partOfLabel[slot];
     }
   }
-  const { of: bodyOf, count: bodies } = by === 'piece' || partNames.length < 2 ? pieces : floodFaces(mesh, partOf);
+  const holePart = holes === null ? -1 : partNames.push(HOLE_PART) - 1;
+  if (holes !== null) for (let face = 0; face < mesh.faces; face++) if (holes[face] === 1) partOf[face] = holePart;
+  const toldOf = holes === null ? partOf : partsBesideHoles(mesh, partOf, holePart);
+  const { of: bodyOf, count: bodies } = (by === 'piece' && holes === null) || partNames.length < 2 ? pieces : floodFaces(mesh, partOf);
   const partOfBody = new Int32Array(bodies);
   for (let face = 0; face < mesh.faces; face++) partOfBody[bodyOf[face]] = partOf[face];
-  return { partNames, partOf, bodyOf, bodies, partOfBody, pieceOf: pieces.of, pieces: pieces.count, borders: findBorderEdges(mesh, bodyOf === pieces.of ? null : bodyOf) };
+  const borders = findBorderEdges(mesh, bodyOf === pieces.of ? null : bodyOf);
+  return { partNames, partOf, holePart, toldOf, bodyOf, bodies, partOfBody, pieceOf: pieces.of, pieces: pieces.count, borders };
+}
+
+/** Name of the part under which what is found at a face is told; null where the file as a whole is. */
+export function partToldAt({ partNames, toldOf }: Bodies, face: number): string | null {
+  return toldOf[face] < 0 ? null : partNames[toldOf[face]];
 }
 
 /** The half-edges across whose edge another group of faces, or nothing, lies; ascending. Without groups only those with nothing. */

@@ -1,6 +1,7 @@
 import type { Cage, FaceLabels } from '../cage';
+import { holeFlags } from './holes';
 
-/** The cage with the given faces (its own numbers, ascending) and their corners, no more than it had; labels and lines go along. */
+/** The cage with the given faces (its own numbers, ascending) and their corners, no more than it had; labels, holes and lines go along. */
 export function rebuildFaces(cage: Cage, faces: readonly number[], cornersOf: (face: number) => readonly number[]): Cage {
   const faceStarts = new Uint32Array(faces.length + 1);
   const corners = new Uint32Array(cage.faceVertices.length);
@@ -10,8 +11,10 @@ export function rebuildFaces(cage: Cage, faces: readonly number[], cornersOf: (f
     faceStarts[i + 1] = count;
   });
   const pick = (labels: FaceLabels | null): FaceLabels | null => labels && { names: labels.names, labels: Int32Array.from(faces, (face) => labels.labels[face]) };
+  const flags = holeFlags(cage);
   return {
     ...cage,
+    ...(flags === null ? {} : { holes: Uint32Array.from(faces.keys()).filter((i) => flags[faces[i]] === 1) }),
     faceStarts,
     faceVertices: corners.slice(0, count),
     groups: pick(cage.groups),

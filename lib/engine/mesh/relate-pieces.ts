@@ -50,21 +50,28 @@ export interface PieceRelations {
  * Finds which connected pieces of a cage pass through or lie inside one another, on the limit surface of the scheme. Boxes of control points hold the limit,
  * so what may meet is narrowed down refinement by refinement, and the exact test is left with the triangles of the little that remains.
  * Faces of one piece are one skin and are not tested against each other. `skipped` marks faces (1) whose pieces are left out; under Loop
- * these must include all pieces that hold other than triangles. Positions in any frame.
+ * these must include all pieces that hold other than triangles. `holes` marks faces (1) that shape the surface and are none of it. Positions in any frame.
  */
-export function relatePieces(mesh: Topology, filePositions: Float64Array, { pieceOf, pieces: count }: Bodies, skipped: Uint8Array, options: MeasureOptions): PieceRelations {
+export function relatePieces(
+  mesh: Topology, filePositions: Float64Array, { pieceOf, pieces: count }: Bodies, skipped: Uint8Array, options: MeasureOptions, holes: Uint8Array | null = null,
+): PieceRelations {
   const relations: PieceRelations = { pieceOf, firstFaces: new Int32Array(count), crossings: [], insides: [], complete: true };
-  for (let face = mesh.faces - 1; face >= 0; face--) relations.firstFaces[pieceOf[face]] = face;
+  const left = new Uint8Array(count).fill(1);
+  for (let face = mesh.faces - 1; face >= 0; face--) {
+    if (holes?.[face] === 1) continue;
+    relations.firstFaces[pieceOf[face]] = face;
+    left[pieceOf[face]] = 0;
+  }
   if (count < 2) return relations;
-  const left = new Uint8Array(count);
   for (let face = 0; face < mesh.faces; face++) if (skipped[face] === 1) left[pieceOf[face]] = 1;
   // Each piece's limit lies in the box of its own vertices: where no two of these meet, nothing else need be made.
   if (meetingPieces(vertexBoxes(mesh, filePositions, pieceOf, count), left, relations).length === 0) return relations;
   const positions = nearOrigin(filePositions);
   let level = startLimit(mesh, positions, options);
+  if (holes !== null) level.live = holes.map((hole) => 1 - hole);
   let hulls = elementHulls(level, options);
   const boxes = emptyBoxes(count);
-  for (let face = 0; face < mesh.faces; face++) growBox(boxes, 6 * pieceOf[face], hulls, 6 * face);
+  for (let face = 0; face < mesh.faces; face++) if (holes?.[face] !== 1) growBox(boxes, 6 * pieceOf[face], hulls, 6 * face);
   const pairs = meetingPieces(boxes, left, relations);
   if (pairs.length === 0) return relations;
   const involved = new Uint8Array(count);
@@ -77,7 +84,7 @@ export function relatePieces(mesh: Topology, filePositions: Float64Array, { piec
     level = refineLimit(level, options);
     hulls = elementHulls(level, options);
   }
-  const pieces = { boxes, closed: piecesClosed(mesh, pieceOf, count), volumes: cageVolumes(mesh, positions, pieceOf, count) };
+  const pieces = { boxes, closed: piecesClosed(mesh, pieceOf, count, holes), volumes: cageVolumes(mesh, positions, pieceOf, count) };
   crossPieces(pairs, pieces, limitTriangles(level, options), relations);
   return relations;
 }
@@ -185,8 +192,8 @@ function keepRay(starts: readonly number[], inner: number, outer: number, tree: 
   });
 }
 
-function piecesClosed(mesh: Topology, pieceOf: Int32Array, count: number): Uint8Array {
+function piecesClosed(mesh: Topology, pieceOf: Int32Array, count: number, holes: Uint8Array | null): Uint8Array {
   const closed = new Uint8Array(count).fill(1);
-  for (let h = 0; h < mesh.twin.length; h++) if (mesh.twin[h] < 0) closed[pieceOf[mesh.faceOf[h]]] = 0;
+  for (let h = 0; h < mesh.twin.length; h++) if (mesh.twin[h] < 0 || holes?.[mesh.faceOf[h]] === 1) closed[pieceOf[mesh.faceOf[h]]] = 0;
   return closed;
 }
