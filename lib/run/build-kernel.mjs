@@ -6,7 +6,7 @@ import { fileURLToPath } from 'node:url';
 import asc from 'assemblyscript/asc';
 import { FAN_ROUTINES } from './support/fan-routines.mjs';
 import { variationOf } from './support/kernel-bends.mjs';
-import { boundsOf, nodesOf } from './support/kernel-bounds.mjs';
+import { boundsOf, CALM_VARIATION, nodesOf, VARIATION_AT } from './support/kernel-bounds.mjs';
 import { scalar, statements, vector } from './support/kernel-dialects.mjs';
 import { shellScalarSource, shellVectorSource } from './support/shell-kernel.mjs';
 import { area, AXES, DIVISORS, middle, moments, SHAPES, side, SUMS } from './support/kernel-shapes.mjs';
@@ -230,7 +230,10 @@ ${powersOf(shape)}
       }
     }
     nodes = max(nodes, start);
-    if (coarse > 0 || fewest < most) ${shape.name}Variation(scratch, output + 400);
+    if (coarse > 0 || fewest < most) {
+      if (tolerance > 0 && i64x2.all_true(f64x2.le(v128.load(bounds + ${16 * VARIATION_AT}), f64x2.splat(${CALM_VARIATION})))) v128.store(output + 400, v128.load(bounds + ${16 * VARIATION_AT}));
+      else ${shape.name}Variation(scratch, output + 400);
+    }
     ${shape.name}Moments(scratch, rules, nodes, output);
     if (fewest === most) {
       if (coarse > 0) ${shape.name}Area(scratch, rules, coarse, output + 336);

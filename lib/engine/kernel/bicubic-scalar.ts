@@ -165,6 +165,10 @@ export function bicubicBounds(p: Float64Array, tolerance: number, reach: number,
   bounds[2] = ((0.0464863 * left8) + (0.103236 * left10)) + (0.152770 * left12);
   bounds[3] = (0.0117390 * left10) + (0.0320063 * left12);
   bounds[4] = 0.00295527 * left12;
+  const restu = (((((((((((((((((((((e11 + e12) + e13) + e20) + e20) + e21) + e21) + e22) + e22) + e23) + e23) + e30) + e30) + e30) + e31) + e31) + e31) + e32) + e32) + e32) + e33) + e33) + e33;
+  const restv = (((((((((((((((((((((e02 + e02) + e03) + e03) + e03) + e11) + e12) + e12) + e13) + e13) + e13) + e21) + e22) + e22) + e23) + e23) + e23) + e31) + e32) + e32) + e33) + e33) + e33;
+  const turned = 4 * (((e10 * restv) + (e01 * restu)) + (restu * restv));
+  bounds[7] = (turned * turned) / (((nx * nx) + (ny * ny)) + (nz * nz));
 }
 
 /** Puts the square of the most that X_u × X_v differs at a corner from the middle, relative to its length there, into `bends`. */

@@ -122,6 +122,10 @@ export function biquadraticBounds(p: Float64Array, tolerance: number, reach: num
   bounds[0] = ((tolerance * magnitude) * far) * far;
   bounds[1] = own0;
   bounds[2] = 0.0464863 * left8;
+  const restu = ((((((e11 + e12) + e20) + e20) + e21) + e21) + e22) + e22;
+  const restv = ((((((e02 + e02) + e11) + e12) + e12) + e21) + e22) + e22;
+  const turned = 4 * (((e10 * restv) + (e01 * restu)) + (restu * restv));
+  bounds[7] = (turned * turned) / (((nx * nx) + (ny * ny)) + (nz * nz));
 }
 
 /** Puts the square of the most that X_u × X_v differs at a corner from the middle, relative to its length there, into `bends`. */

@@ -44,7 +44,10 @@ function powerArea(kind: PatchKind, p: Float64Array, nodes: number): number {
 
 const net = new Float64Array(48);
 const pair = [new Float64Array(48), new Float64Array(48)];
-const pairBounds = [new Float64Array(6), new Float64Array(6)];
+/** Where among the bounds that of the normal's variation stands, and up to which it does instead of looking at the corners, as lib/run/support/kernel-bounds.mjs has it. */
+const VARIATION_AT = 7;
+const CALM_VARIATION = 0.03;
+const pairBounds = [new Float64Array(8), new Float64Array(8)];
 const variation = new Float64Array(1);
 const solid = new Float64Array(10);
 const surface = new Float64Array(10);
@@ -76,9 +79,11 @@ export function scalarKernel(kind: PatchKind): FanKernel {
       output[to + 48] = count;
     }
   };
-  const putVariation = (at: number): void => {
+  const putVariation = (at: number, bounded: boolean): void => {
+    const calm = bounded && pairBounds.every((bounds) => bounds[VARIATION_AT] <= CALM_VARIATION);
     for (let lane = 0; lane < 2; lane++) {
-      VARIATION[kind](pair[lane], variation);
+      if (calm) variation[0] = pairBounds[lane][VARIATION_AT];
+      else VARIATION[kind](pair[lane], variation);
       output[at * OUTPUT_STRIDE + 50 + lane] = variation[0];
     }
   };
@@ -111,7 +116,7 @@ export function scalarKernel(kind: PatchKind): FanKernel {
     run(pairs, count, coarseCount) {
       for (let at = 0; at < pairs; at++) {
         putPowers(at);
-        if (coarseCount > 0) putVariation(at);
+        if (coarseCount > 0) putVariation(at, false);
         runPair(at, count, coarseCount);
         putErrors(at, NONE, NONE);
       }
@@ -120,9 +125,9 @@ export function scalarKernel(kind: PatchKind): FanKernel {
       let start = fewest;
       for (let at = 0; at < pairs; at++) {
         putPowers(at);
-        putVariation(at);
         putErrors(at, NONE, NONE);
         let nodes = Math.max(start, tolerance > 0 ? enough(at, fewest, tolerance, reach) : fewest);
+        putVariation(at, tolerance > 0);
         runPair(at, nodes, coarseOf(kind, nodes));
         while (!agree(at, AREA_CUTOFF)) {
           const close = agree(at, AREA_NEAR);

@@ -193,6 +193,10 @@ export function triangleBounds(p: Float64Array, tolerance: number, reach: number
   bounds[3] = (((0.00295527 * left12) + (0.00954641 * left14)) + (0.0189758 * left16)) + (0.0300549 * left18);
   bounds[4] = ((0.000742605 * left14) + (0.00277217 * left16)) + (0.00620895 * left18);
   bounds[5] = (0.000186380 * left16) + (0.000789332 * left18);
+  const restu = ((((((((((((((e20 + e20) + e11) + e30) + e30) + e30) + e21) + e21) + e12) + (4 * e40)) + e31) + e31) + e31) + e22) + e22) + e13;
+  const restv = ((((((((((((((e11 + e02) + e02) + e21) + e12) + e12) + e03) + e03) + e03) + e31) + e22) + e22) + e13) + e13) + e13) + (4 * e04);
+  const turned = 4 * (((e10 * restv) + (e01 * restu)) + (restu * restv));
+  bounds[7] = (turned * turned) / (((nx * nx) + (ny * ny)) + (nz * nz));
 }
 
 /** Puts the square of the most that X_u × X_v differs at a corner from the middle, relative to its length there, into `bends`. */

@@ -1,9 +1,11 @@
 import { gaussRule } from '../patches/gauss-rule';
-import { chooseNodes, ruleError, UNTRUSTED_NODES } from './shell-nodes';
+import { seriesRate, type SeriesRate } from './series-rate';
+import { addRuleErrors, chooseNodes, UNTRUSTED_NODES } from './shell-nodes';
 import { addShellNode, JET, type CurvaturePeak } from './shell-terms';
 
 const jet = new Float64Array(JET);
 const row = new Float64Array(36);
+const found: SeriesRate = { rate: 0, bend: 0 };
 
 /** Quarterings after which a bend is taken as it is, its whole change counting as error. */
 const MOST_QUARTERINGS = 4;
@@ -52,8 +54,9 @@ export function addBicubicShell(powers: Float64Array, tolerance: number, out: Fl
 }
 
 function addSquare(powers: Float64Array, tolerance: number, depth: number, out: Float64Array, peak: CurvaturePeak, errors: ShellErrors): void {
-  const variation = normalVariation(powers);
-  const nodes = chooseNodes(variation, tolerance);
+  seriesRate('bicubic', powers, 0, 1, found);
+  found.rate = Math.max(found.rate, normalVariation(powers));
+  const nodes = chooseNodes(found.rate, tolerance);
   if (nodes === 0 && depth < MOST_QUARTERINGS) {
     if (isPoint(powers)) return;
     for (let i = 0; i < 4; i++) addSquare(quarterOf(powers, i & 1 ? 0.25 : -0.25, i & 2 ? 0.25 : -0.25, QUARTERS[depth]), tolerance, depth + 1, out, peak, errors);
@@ -73,7 +76,7 @@ function addSquare(powers: Float64Array, tolerance: number, depth: number, out: 
     }
   }
   if (nodes === 0) errors[0] += area;
-  else addRuleError(errors, nodes, variation, area, curvature);
+  else addRuleErrors(errors, 0, nodes, found, area, curvature, false);
 }
 
 /** Whether all of a patch lies in one point. */
@@ -86,14 +89,6 @@ export function isPoint(powers: Float64Array): boolean {
 export function addWhole(errors: ShellErrors, mean: number, gauss: number): void {
   errors[1] += Math.abs(mean);
   errors[2] += Math.abs(gauss);
-}
-
-/** Adds what a rule of `nodes` may err by on a patch of about `area`. */
-export function addRuleError(errors: ShellErrors, nodes: number, variation: number, area: number, curvature: number): void {
-  const error = area * ruleError(nodes, variation);
-  errors[0] += error;
-  errors[1] += error * curvature;
-  errors[2] += error * curvature * curvature;
 }
 
 const ENDS = [-0.5, 0.5];

@@ -1,5 +1,6 @@
 import type { BorderCurves } from '../moments/border-curves';
 import type { LevelMesh } from '../schemes/level-mesh';
+import { OWN } from '../schemes/refinement-blocks';
 
 /** One side of a patch that lies on a piece of a sharp edge of the cage. */
 export interface CreasePiece {
@@ -19,7 +20,7 @@ const LEAST_SHARE = 2 ** -18;
 export type CreaseSides = Map<number, CreasePiece[]>;
 
 /**
- * Marks both half-edges of the sharp edges between faces in the cage's `borderOf`, beside the borders, so that the integration hands their patches' sides to
+ * Marks both half-edges of the sharp edges between measured faces in the cage's `borderOf`, beside the borders, so that the integration hands their patches' sides to
  * `curves`, and collects those.
  */
 export function collectSides(cage: LevelMesh, curves: BorderCurves, coefficients: number, toPowers: (net: Float64Array, powers: Float64Array) => void): CreaseSides {
@@ -27,7 +28,7 @@ export function collectSides(cage: LevelMesh, curves: BorderCurves, coefficients
   const borders = new Set<number>();
   let marked = false;
   for (let h = 0; h < cage.twin.length; h++) {
-    if (cage.twin[h] < 0 || cage.edgeSharpness[h] !== Infinity) continue;
+    if (cage.twin[h] < 0 || cage.edgeSharpness[h] !== Infinity || cage.live[cage.faceOf[h]] !== OWN) continue;
     if (cage.borderOf[h] >= 0) borders.add(h);
     cage.borderOf[h] = h;
     marked = true;

@@ -1,8 +1,9 @@
 import { inputStride, NET_VALUES } from '../kernel/patch-kinds';
 import type { ShellErrors } from './bicubic-shell';
-import { BENDS_STRIDE, SHELL_PAIRS, TOTALS_STRIDE, type ShellKernel } from './shell-kernel';
+import { BENDS_STRIDE, POWERS_STRIDE, SHELL_PAIRS, TOTALS_STRIDE, type ShellKernel } from './shell-kernel';
 import type { ShellKit } from './shell-kits';
-import { bendVariation, chooseNodes, gaussShare, meanShare, ruleError } from './shell-nodes';
+import { seriesRate, type SeriesRate } from './series-rate';
+import { addRuleErrors, bendVariation, chooseNodes } from './shell-nodes';
 import { SHELL_TERMS, TERM_SIGNS, type CurvaturePeak } from './shell-terms';
 import { shellKernel } from './shell-vector';
 
@@ -20,7 +21,7 @@ export class ShellBlock {
   private readonly stride: number;
   private readonly areaShare: number;
   private readonly nodes = new Int32Array(2 * SHELL_PAIRS);
-  private readonly variations = new Float64Array(2 * SHELL_PAIRS);
+  private readonly rates: SeriesRate[] = Array.from({ length: 2 * SHELL_PAIRS }, () => ({ rate: 0, bend: 0 }));
   private readonly areas = new Float64Array(2 * SHELL_PAIRS);
   private readonly net: Float64Array;
   private readonly powers: Float64Array;
@@ -72,23 +73,21 @@ export class ShellBlock {
   }
 
   private choose(patch: number, tolerance: number): void {
-    const { bends } = this.kernel;
+    const { bends, kind, powers } = this.kernel;
     const at = (patch >> 1) * BENDS_STRIDE + (patch & 1);
-    const variation = bendVariation(bends, at, this.kernel.kind === 'triangle');
-    this.variations[patch] = variation;
+    const found = this.rates[patch];
+    seriesRate(kind, powers, (patch >> 1) * POWERS_STRIDE + (patch & 1), 2, found);
     this.areas[patch] = Math.sqrt(bends[at]) * this.areaShare;
-    this.nodes[patch] = chooseNodes(variation, tolerance);
+    found.rate = Math.max(found.rate, bendVariation(bends, at, kind === 'triangle'));
+    this.nodes[patch] = chooseNodes(found.rate, tolerance);
   }
 
   private addError(patch: number): void {
     const { errors, kernel } = this;
-    const at = 3 * patch;
     const nodes = kernel.counts[patch >> 1];
-    const error = this.areas[patch] * ruleError(nodes, this.variations[patch]);
     const curvature = kernel.output[this.resultAt(patch) + CURVED_AT] / 2;
-    errors[at] = error;
-    errors[at + 1] = error * curvature * meanShare(nodes);
-    errors[at + 2] = error * curvature * curvature * gaussShare(nodes);
+    errors.fill(0, 3 * patch, 3 * patch + 3);
+    addRuleErrors(errors, 3 * patch, nodes, this.rates[patch], this.areas[patch], curvature, kernel.kind === 'triangle');
   }
 
   private quarter(patch: number, tolerance: number): void {

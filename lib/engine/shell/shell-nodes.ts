@@ -1,3 +1,5 @@
+import type { SeriesRate } from './series-rate';
+
 /** Gauss nodes a direction beyond which a patch is quartered instead. */
 export const MOST_SHELL_NODES = 12;
 /** Nodes where none are trusted. */
@@ -5,7 +7,7 @@ export const UNTRUSTED_NODES = 7;
 const FEWEST_SHELL_NODES = 2;
 
 /** Relative variation of the normal vector X_u × X_v beyond which no rule is trusted. */
-const MOST_VARIATION = 0.8;
+const MOST_VARIATION = 0.95;
 
 /** Error of n nodes on [−½, ½] for t^2n: (n!)⁴ / ((2n + 1) ((2n)!)²), times 4^n since the variation is that over half the interval. */
 const RULE_ERRORS: readonly number[] = Array.from({ length: MOST_SHELL_NODES + 1 }, (_, n) => {
@@ -15,7 +17,7 @@ const RULE_ERRORS: readonly number[] = Array.from({ length: MOST_SHELL_NODES + 1
 });
 
 /** Both directions, and room for series whose coefficients grow before they fall. */
-const SAFETY = 8;
+const SAFETY = 1;
 
 /** Relative error of n nodes a direction where the normal vector varies by `variation` of its length over half the patch: the series' first power that the rule misses. */
 export function ruleError(nodes: number, variation: number): number {
@@ -25,13 +27,25 @@ export function ruleError(nodes: number, variation: number): number {
   return error;
 }
 
-/** How much more ∫ 2H errs than areas do by so many nodes: the integrand has the second power of |X_u × X_v| below, whose series' coefficients grow so. */
-export function meanShare(nodes: number): number {
+/**
+ * Adds to `errors` what ∫ N dA, ∫ 2H dA and ∫ K dA of a patch of about `area` may err by with so many nodes. `curvature` is the largest modulus met at the nodes.
+ * 2H and K hold one and two second derivatives, each a polynomial of its own that takes three powers of the rate (a triangle's two) from what the rule leaves, or at most
+ * the bend that the coefficients allow; and below them the second and third power of |X_u × X_v|, whose series' coefficients grow by the shares.
+ */
+export function addRuleErrors(errors: Float64Array | number[], at: number, nodes: number, { rate, bend }: SeriesRate, area: number, curvature: number, triangle: boolean): void {
+  const error = area * ruleError(nodes, rate);
+  const power = rate * rate * (triangle ? 1 : rate);
+  const curved = power > 0 ? Math.min(bend, curvature / power) : curvature;
+  errors[at] += error;
+  errors[at + 1] += error * curved * meanShare(nodes);
+  errors[at + 2] += error * curved * curved * gaussShare(nodes);
+}
+
+function meanShare(nodes: number): number {
   return 2 * nodes + 1;
 }
 
-/** The same for ∫ K, with the third power. */
-export function gaussShare(nodes: number): number {
+function gaussShare(nodes: number): number {
   return (nodes + 1) * (2 * nodes + 1);
 }
 

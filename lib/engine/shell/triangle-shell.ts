@@ -1,6 +1,7 @@
 import { triangleRule } from '../patches/box-spline';
-import { addRuleError, addWhole, isPoint, normalTo, type ShellErrors } from './bicubic-shell';
-import { chooseNodes, UNTRUSTED_NODES } from './shell-nodes';
+import { addWhole, isPoint, normalTo, type ShellErrors } from './bicubic-shell';
+import { seriesRate, type SeriesRate } from './series-rate';
+import { addRuleErrors, chooseNodes, UNTRUSTED_NODES } from './shell-nodes';
 import { addShellNode, JET, type CurvaturePeak } from './shell-terms';
 
 /** Exponents of s and t of the fifteen monomials, as `triangleToPowers` orders them. */
@@ -108,8 +109,10 @@ export function addTriangleShell(powers: Float64Array, tolerance: number, out: F
 }
 
 function addTriangle(powers: Float64Array, tolerance: number, depth: number, out: Float64Array, peak: CurvaturePeak, errors: ShellErrors): void {
-  const variation = normalVariation(powers);
-  const nodes = chooseNodes(variation, tolerance);
+  centreOnLines(powers, centred);
+  seriesRate('triangle', centred, 0, 1, found);
+  found.rate = Math.max(found.rate, normalVariation(powers));
+  const nodes = chooseNodes(found.rate, tolerance);
   if (nodes === 0 && depth < MOST_QUARTERINGS) {
     if (isPoint(powers)) return;
     for (const [s, t, size] of QUARTERS) addTriangle(partOf(powers, s, t, size, PARTS[depth]), tolerance, depth + 1, out, peak, errors);
@@ -126,7 +129,29 @@ function addTriangle(powers: Float64Array, tolerance: number, depth: number, out
     if (nodes === 0) addWhole(errors, out[0] - h, out[1] - k);
   }
   if (nodes === 0) errors[0] += area;
-  else addRuleError(errors, nodes, variation, area, curvature);
+  else addRuleErrors(errors, 0, nodes, found, area, curvature, true);
+}
+
+const centred = new Float64Array(45);
+const found: SeriesRate = { rate: 0, bend: 0 };
+
+/** Puts the triangle's coefficients in s^i t^j as those in u = s − ½ and v = t − (1 − s)/2, about the middle of each line of nodes, into `out`. */
+function centreOnLines(powers: Float64Array, out: Float64Array): void {
+  out.fill(0);
+  for (let monomial = 0; monomial < 15; monomial++) {
+    const i = EXPONENTS[monomial][0], j = EXPONENTS[monomial][1];
+    for (let a = 0; a <= i; a++) {
+      const ofS = binomial(i, a) * power(0.5, i - a);
+      for (let b = 0; b <= j; b++) {
+        for (let c = 0; b + c <= j; c++) {
+          const factor = ofS * binomial(j, b) * binomial(j - b, c) * power(0.25, j - b - c) * power(-0.5, c);
+          const degree = a + b + c;
+          const to = 3 * ((degree * (degree + 1)) / 2 + b);
+          for (let axis = 0; axis < 3; axis++) out[to + axis] += factor * powers[3 * monomial + axis];
+        }
+      }
+    }
+  }
 }
 
 /** Corner 0 of each quarter and its signed size; the middle one stands on its head. */

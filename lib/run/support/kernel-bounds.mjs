@@ -81,7 +81,7 @@ function product(left, right, name, list) {
 /**
  * Operations from the coefficients `p`, `tolerance` and `reach` to `bounds`: what may be left out of ∮ f(X) det(X, X_u, X_v) for a second moment at most
  * (relative to the patch's own magnitude at its middle, or to that of its area `reach` away), the norm that a first moment's bound is smaller by, then the
- * bounds for each number of nodes from the fewest on.
+ * bounds for each number of nodes from the fewest on, and the square of how much the normal varies at most.
  */
 export function boundsOf(shape) {
   const { order, across, coefficients, directions, fewest, exact, degree, places, weighted } = RULES[shape];
@@ -130,8 +130,17 @@ export function boundsOf(shape) {
     for (let d = 2 * n; d <= degree; d += 2) parts.push(`${(2 * 4 * 2 ** d * Number(leftOut(n, d))).toPrecision(6)} * left${d}`);
     list.push(`bounds[${2 + n - fewest}] := ${parts.join(' + ')}`);
   }
+  // X_u × X_v less that in the middle is at most what the other coefficients add to either derivative; as the square of its part of that.
+  for (const [name, power] of [['u', ({ i }) => i], ['v', ({ j }) => j]]) {
+    list.push(`let rest${name} = ${coefficients.filter((c) => c.i + c.j > 1 && power(c) > 0).map((c) => term(power(c), `e${c.i}${c.j}`)).join(' + ')}`);
+  }
+  list.push('let turned = 4 * (e10 * restv + e01 * restu + restu * restv)', `bounds[${VARIATION_AT}] := turned * turned / (nx * nx + ny * ny + nz * nz)`);
   return pruned(list);
 }
+
+/** Where among the bounds that of the normal's variation stands, and up to which it does instead of looking at the corners. */
+export const VARIATION_AT = 7;
+export const CALM_VARIATION = 0.03;
 
 /** Nodes that a shape's bounds are for. */
 export const nodesOf = (shape) => ({ fewest: RULES[shape].fewest, exact: RULES[shape].exact });
