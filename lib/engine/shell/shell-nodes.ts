@@ -20,7 +20,7 @@ const RULE_ERRORS: readonly number[] = Array.from({ length: MOST_SHELL_NODES + 1
 const SAFETY = 1;
 
 /** Relative error of n nodes a direction where the normal vector varies by `variation` of its length over half the patch: the series' first power that the rule misses. */
-export function ruleError(nodes: number, variation: number): number {
+function ruleError(nodes: number, variation: number): number {
   const square = variation * variation;
   let error = SAFETY * RULE_ERRORS[nodes];
   for (let i = 0; i < nodes; i++) error *= square;
