@@ -34,7 +34,7 @@ function edgesOf(cage: Cage): Map<string, number[]> {
 }
 
 /** Asserts that two measurements of the same faces agree: bodies one by one, what their caps are of them, and where they are open. */
-function expectAlike(found: MeasuredPart, wanted: MeasuredPart, size: number, tolerance: number): void {
+function expectAlike(found: MeasuredPart, wanted: MeasuredPart, size: number, tolerance: number, isStraight: boolean): void {
   expect([found.name, found.faces, found.maxValence, found.components.length]).toEqual([wanted.name, wanted.faces, wanted.maxValence, wanted.components.length]);
   found.components.forEach((component, i) => {
     const other = wanted.components[i];
@@ -47,8 +47,10 @@ function expectAlike(found: MeasuredPart, wanted: MeasuredPart, size: number, to
     expect(Math.abs(component.cage.volume - other.cage.volume)).toBeLessThan(tolerance * size ** 3);
   });
   // A cap's area is a root summed by one rule of eight nodes a piece, and a border's pieces are those of the patches on the side that gave its curve.
-  expect(Math.abs(found.capAreaShare - wanted.capAreaShare)).toBeLessThan(1e-7);
-  expect(Math.abs(found.capVolumeShare - wanted.capVolumeShare)).toBeLessThan(1e-9);
+  expect(Math.abs(found.capAreaShare - wanted.capAreaShare)).toBeLessThan(isStraight ? 1e-12 : 1e-5);
+  // Of a part that encloses next to nothing the share says nothing.
+  const enclosed = Math.abs(wanted.components.reduce((sum, { solid }) => sum + solid.volume, 0));
+  if (enclosed > 1e-3 * size ** 3) expect(Math.abs(found.capVolumeShare - wanted.capVolumeShare)).toBeLessThan(1e-9);
 }
 
 describe('faces that are holes', () => {
@@ -110,7 +112,7 @@ describe('faces that are holes', () => {
       // What the file says of the holes' groups does not matter.
       const found = measureCage(marked(grouped(cage, ['a', 'b', 'z'], labels.map((label) => (label === 2 ? 0 : label))), holes), { ...options, partsBy: 'group' });
       expect(found.parts.map((part) => part.name)).toEqual(wanted.map((part) => part.name));
-      found.parts.forEach((part, i) => expectAlike(part, wanted[i], cageSize(cage), 1e-14));
+      found.parts.forEach((part, i) => expectAlike(part, wanted[i], cageSize(cage), 1e-14, options === POLYHEDRAL));
       const rims = [...edgesOf(cage).values()].filter(([one, other]) => (labels[one] === 2) !== (labels[other] === 2));
       expect(found.parts.reduce((sum, part) => sum + part.openEdges, 0)).toBe(rims.length);
       for (const part of found.parts) {
