@@ -10,7 +10,7 @@ import { cppWay } from './cpp-way';
 
 /**
  * Size series of the engine per scheme, from a parsed cage and from a file's bytes to values, beside the plain way and patch quadrature in C++. Also written
- * to bench-results/engine.json. `--quick` leaves out what takes long; `intake` measures an import instead, `horns` what smoothing removes.
+ * to bench-results/engine.json. `--quick` leaves out what takes long; `intake` measures imports instead (`--large`: a gigabyte too; `--files=200`, `--only=small`), `horns` what smoothing removes.
  */
 interface Row {
   scheme: Scheme;
@@ -43,7 +43,8 @@ interface Series {
 
 if (process.argv.includes('intake')) {
   const { printIntake } = await import('./intake');
-  await printIntake();
+  const valueOf = (option: string): string | undefined => process.argv.find((arg) => arg.startsWith(`${option}=`))?.slice(option.length + 1);
+  await printIntake({ files: Number(valueOf('--files') ?? 2_000), large: process.argv.includes('--large'), only: valueOf('--only') ?? null });
   process.exit(0);
 }
 
