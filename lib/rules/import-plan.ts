@@ -1,6 +1,6 @@
 import type { KnownAsset } from './known-asset';
-import { placeOf, readName } from './name-pattern';
 import { MAX_ASSET_CODE, placeNames } from './place-names';
+import { readPath } from './read-path';
 import { CATEGORIES, type Category } from './states';
 
 /** What a file is called and what its sender says instead of the pattern. */
@@ -45,7 +45,7 @@ export function versionLabel(number: number, take: number): string {
  */
 export function planImport(files: readonly NamedFile[], pattern: string | null, known: readonly KnownAsset[] = []): PlannedFile[] {
   const planned = files.map((file): PlannedFile => {
-    const read = readName(file.name, pattern);
+    const { read, place } = readPath(file.name, pattern);
     const category = CATEGORIES.find((one) => one === file.category) ?? read?.category ?? 'other';
     const asset = file.asset ?? read?.asset ?? null;
     const byName = !file.asset && read !== null;
@@ -56,8 +56,8 @@ export function planImport(files: readonly NamedFile[], pattern: string | null, 
       version: file.version ?? read?.version ?? null,
       qualified: false,
       duplicate: false,
-      readName: byName ? read.asset.slice(0, MAX_ASSET_CODE) : null,
-      place: byName ? placeOf(file.name, pattern).join('/') : '',
+      readName: byName ? read.asset : null,
+      place: byName ? place : '',
     };
   });
   const free = planned.filter((file) => file.readName !== null);

@@ -1,6 +1,6 @@
 import { compareInProcessingOrder, planImport, versionLabel, type NamedFile, type PlannedFile } from './import-plan';
 import { optionsWord, type KnownAsset, type OptionsOfMeasure } from './known-asset';
-import { namesCategory } from './name-pattern';
+import { readPath } from './read-path';
 
 export const OUTCOMES = ['new_asset', 'new_version', 'next_take', 'unchanged', 'unmatched'] as const;
 export type Outcome = (typeof OUTCOMES)[number];
@@ -39,7 +39,9 @@ function standingOf(known: KnownAsset | undefined): Standing {
   const numbers: Standing['numbers'] = new Map();
   for (const number of known?.versions ?? []) numbers.set(number, { takes: (numbers.get(number)?.takes ?? 0) + 1, content: null });
   for (const { number, take, sha256, options } of known?.contents ?? []) numbers.set(number, { takes: take, content: `${sha256} ${options}` });
-  return { highest: Math.max(NO_VERSION, ...numbers.keys()), numbers };
+  let highest = NO_VERSION;
+  for (const number of numbers.keys()) highest = Math.max(highest, number);
+  return { highest, numbers };
 }
 
 /**
@@ -52,7 +54,12 @@ export function previewImport(files: readonly DroppedFile[], pattern: string | n
   const knownOf = new Map(known.map((asset) => [asset.asset, asset]));
   const lowerOf = new Map(known.map((asset) => [asset.asset.toLowerCase(), asset.asset]));
   const sharing = new Map<string, string[]>();
-  for (const { asset, name } of known) if (name !== undefined) sharing.set(name, [...(sharing.get(name) ?? []), asset]);
+  for (const { asset, name } of known) {
+    if (name === undefined) continue;
+    const others = sharing.get(name);
+    if (others) others.push(asset);
+    else sharing.set(name, [asset]);
+  }
   const standings = new Map<string, Standing>();
   const word = options === null ? null : optionsWord(options);
   const rows = new Array<PreviewRow>(files.length);
@@ -72,7 +79,7 @@ export function previewImport(files: readonly DroppedFile[], pattern: string | n
     if (otherCase !== undefined) row.warnings.push(`The show has ${otherCase}; this one differs in upper and lower case only.`);
     const others = asset || plan.qualified ? [] : (sharing.get(plan.readName ?? '') ?? []);
     if (others.length > 0) row.warnings.push(`${others.join(' and ')} ${others.length === 1 ? 'has' : 'have'} this name; without its folder the file is another asset.`);
-    row.categoryGuessed = row.outcome === 'new_asset' && !file.category && !namesCategory(file.name, pattern);
+    row.categoryGuessed = row.outcome === 'new_asset' && !file.category && !readPath(file.name, pattern).saysCategory;
     row.attention = row.warnings.length > 0 ? 1 : 0;
     rows[index] = asset ? { ...row, category: asset.category } : row;
   }

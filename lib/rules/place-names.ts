@@ -1,6 +1,5 @@
 import type { KnownAsset } from './known-asset';
-import { categoryOfFolder } from './name-pattern';
-import type { Category } from './states';
+import { categoryOf, ELSEWHERE, fitKnown, LOOSE, SUFFIX, type Place } from './known-places';
 
 export const MAX_ASSET_CODE = 128;
 
@@ -22,48 +21,6 @@ export interface PlacedName {
   elsewhere: boolean;
 }
 
-interface Place {
-  folders: readonly string[];
-  /** The folders as one text. */
-  key: string;
-  category: Category | null;
-  versions: ReadonlySet<number | null>;
-}
-
-/** How well a file's folders fit those of a known asset; whatever is above NONE is taken for it. */
-const NONE = 0;
-const ELSEWHERE = 1;
-const LOOSE = 2;
-const NEAR = 10;
-const SUFFIX = 1_000;
-const EXACT = 100_000;
-
-const categoryOf = (folders: readonly string[]): Category | null => folders.map(categoryOfFolder).findLast((found) => found !== null) ?? null;
-
-function sharedTail(a: readonly string[], b: readonly string[]): number {
-  let shared = 0;
-  while (shared < a.length && shared < b.length && a[a.length - 1 - shared] === b[b.length - 1 - shared]) shared++;
-  return shared;
-}
-
-function fit(place: Place, known: KnownAsset, isOnly: boolean): number {
-  const places = known.places?.filter((one) => one !== '') ?? [];
-  if (place.folders.length === 0) return known.asset === known.name || isOnly ? LOOSE : NONE;
-  if (places.length === 0) return LOOSE;
-  const fits = places.map((text) => {
-    const folders = text.split('/');
-    const category = categoryOf(folders);
-    if (place.category !== null && category !== null && place.category !== category) return NONE;
-    const shared = sharedTail(place.folders, folders);
-    if (text === place.key) return EXACT;
-    if (shared === Math.min(folders.length, place.folders.length)) return SUFFIX + shared;
-    if (shared > 0) return NEAR + shared;
-    const isNewNumber = [...place.versions].every((version) => version !== null && !known.versions.includes(version));
-    return isNewNumber && isOnly ? ELSEWHERE : NONE;
-  });
-  return Math.max(...fits);
-}
-
 /** Whether files of these places cannot be versions of one asset: two have one number (or none), or the folders name two categories. */
 function isContested(places: readonly Place[]): boolean {
   const versions = places.flatMap((place) => [...place.versions]);
@@ -75,17 +32,20 @@ function isContested(places: readonly Place[]): boolean {
 function qualify(name: string, places: readonly Place[], isTaken: (code: string) => boolean): string[] {
   const withoutName = places.map((place) => place.folders.filter((folder) => folder.toLowerCase() !== name.toLowerCase()));
   for (const folders of [withoutName, places.map((place) => place.folders)]) {
-    const deepest = Math.max(1, ...folders.map((one) => one.length));
+    const deepest = folders.reduce((most, one) => Math.max(most, one.length), 1);
     for (let steps = 1; steps <= deepest; steps++) {
       const codes = folders.map((one) => [...one.slice(-steps), name].join('_').slice(-MAX_ASSET_CODE));
       if (new Set(codes).size === codes.length && !codes.some(isTaken)) return codes;
     }
   }
   const used = new Set<string>();
+  const nextOf = new Map<string, number>();
   return places.map(({ folders }) => {
     const plain = [...folders, name].join('_').slice(-MAX_ASSET_CODE);
     let code = plain;
-    for (let next = 2; used.has(code) || isTaken(code); next++) code = `${plain.slice(-(MAX_ASSET_CODE - 5))}_${next}`;
+    let next = nextOf.get(plain) ?? 2;
+    for (; used.has(code) || isTaken(code); next++) code = `${plain.slice(-(MAX_ASSET_CODE - 5))}_${next}`;
+    nextOf.set(plain, next);
     used.add(code);
     return code;
   });
@@ -102,28 +62,34 @@ function placesOf(files: readonly NameToPlace[]): Place[] {
   return [...versions].map(([key, of]) => ({ key, folders: key === '' ? [] : key.split('/'), category: categoryOf(key.split('/')), versions: of })).sort((a, b) => (a.key < b.key ? -1 : 1));
 }
 
+interface Fitting {
+  place: Place;
+  score: number;
+}
+
 /** Of the places that fit one known asset, those that are taken for it: all, unless they contest it; then the best one, if there is one best. */
-function keepers(fitting: readonly { place: Place; score: number }[]): Place[] {
-  if (!isContested(fitting.map((one) => one.place))) return fitting.map((one) => one.place);
-  const best = Math.max(...fitting.map((one) => one.score));
+function keepers(fitting: readonly Fitting[]): readonly Fitting[] {
+  if (!isContested(fitting.map((one) => one.place))) return fitting;
+  const best = fitting.reduce((most, one) => Math.max(most, one.score), 0);
   const first = fitting.filter((one) => one.score === best);
-  return first.length === 1 ? [first[0].place] : [];
+  return first.length === 1 ? first : [];
 }
 
 /** One name of a drop: each of its places to an asset that is there, or to a new one. */
 function placeOneName(name: string, files: readonly NameToPlace[], known: readonly KnownAsset[], isTaken: (code: string) => boolean): Map<string, PlacedName> {
   const places = placesOf(files);
-  const wishes = new Map<KnownAsset, { place: Place; score: number }[]>();
+  const wishes = new Map<KnownAsset, Fitting[]>();
+  const fit = fitKnown(known);
   for (const place of places) {
-    const scored = known.map((asset) => ({ asset, score: fit(place, asset, known.length === 1) })).sort((a, b) => b.score - a.score);
-    const [first, second] = scored;
-    if (!first || first.score === NONE || first.score === second?.score) continue;
-    wishes.set(first.asset, [...(wishes.get(first.asset) ?? []), { place, score: first.score }]);
+    const best = fit(place);
+    if (!best) continue;
+    const fitting = wishes.get(best.asset);
+    if (fitting) fitting.push({ place, score: best.score });
+    else wishes.set(best.asset, [{ place, score: best.score }]);
   }
   const placed = new Map<string, PlacedName>();
   for (const [asset, fitting] of wishes) {
-    for (const place of keepers(fitting)) {
-      const score = fitting.find((one) => one.place === place)!.score;
+    for (const { place, score } of keepers(fitting)) {
       placed.set(place.key, { asset: asset.asset, qualified: asset.asset !== name, movedFrom: score < SUFFIX && score !== LOOSE ? (asset.places?.at(-1) ?? null) : null, elsewhere: score === ELSEWHERE });
     }
   }
@@ -146,7 +112,9 @@ export function placeNames(files: readonly NameToPlace[], known: readonly KnownA
     const names = new Set([asset.name ?? asset.asset, asset.asset]);
     for (const name of names) {
       const entry = name === (asset.name ?? asset.asset) ? { ...asset, name } : { ...asset, name, places: [] };
-      knownOf.set(name, [...(knownOf.get(name) ?? []), entry]);
+      const others = knownOf.get(name);
+      if (others) others.push(entry);
+      else knownOf.set(name, [entry]);
     }
   }
   const byName = new Map<string, NameToPlace[]>();
