@@ -84,11 +84,12 @@ export async function countAgainst(tx: Transaction, scope: UsageScope, amount: n
   }
 }
 
-/** How much of a scope's limit is left, by its count; what was counted twice makes it less than the truth. */
-export async function leftOf(db: Executor, scope: UsageScope): Promise<number> {
+/** How much of a scope's limit is left, by its count; what was counted twice makes it less than the truth. Where that is less than `enough`, the truth. */
+export async function leftOf(db: Executor, scope: UsageScope, enough = 0): Promise<number> {
   const counted = countedOf(scope);
   const [held] = await db.select().from(storageUsage).where(eq(storageUsage.scope, counted.key));
-  const used = held && held.countedAt.getTime() !== 0 ? held.bytes : await truthOf(db, counted);
+  const isCounted = held !== undefined && held.countedAt.getTime() !== 0 && counted.limit - held.bytes >= enough;
+  const used = isCounted ? held.bytes : await truthOf(db, counted);
   return Math.max(0, counted.limit - used);
 }
 

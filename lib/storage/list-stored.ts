@@ -30,12 +30,16 @@ export async function* listByFolder(folder: string): AsyncIterable<{ name: strin
 
 /** A bucket lists its keys in order, so that a folder's come together. */
 async function* gathered(all: AsyncIterable<StoredFile>, folder: string): AsyncIterable<{ name: string; files: Map<string, StoredFile> }> {
-  let held: { name: string; files: Map<string, StoredFile> } | null = null;
+  let name: string | null = null;
+  let files = new Map<string, StoredFile>();
   for await (const file of all) {
-    const [name] = file.key.slice(folder.length + 1).split('/');
-    if (held && held.name !== name) yield held;
-    if (held?.name !== name) held = { name, files: new Map() };
-    held.files.set(file.key, file);
+    const [next] = file.key.slice(folder.length + 1).split('/');
+    if (name !== null && name !== next) {
+      yield { name, files };
+      files = new Map();
+    }
+    name = next;
+    files.set(file.key, file);
   }
-  if (held) yield held;
+  if (name !== null) yield { name, files };
 }

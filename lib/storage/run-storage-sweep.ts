@@ -1,6 +1,7 @@
 import { sql } from 'drizzle-orm';
 import type { Database } from '@/db/client';
 import { log } from '@/lib/log';
+import { sweepOwnFolder } from './sweep-own-folder';
 import { sweepStorage } from './sweep-storage';
 
 const LOOK_EVERY_MS = 10 * 60_000;
@@ -15,11 +16,13 @@ async function isOurTurn(db: Database): Promise<boolean> {
   return rows.length > 0;
 }
 
-/** Sweeps the storage about every hour until stopped. */
+/** Sweeps this machine's own folder, and the storage about every hour, until stopped. */
 export function runStorageSweep(db: Database): { stop(): Promise<void> } {
   let current: Promise<void> = Promise.resolve();
   const sweep = async () => {
     try {
+      const own = await sweepOwnFolder();
+      if (own > 0) log.info({ files: own }, 'unfinished files of this machine were removed');
       if (!(await isOurTurn(db))) return;
       const swept = await sweepStorage(db);
       if (Object.values(swept).some((count) => count > 0)) log.info(swept, 'the storage was swept');
