@@ -17,8 +17,8 @@ interface AssetRenameListProps {
 
 /** The parts of one asset in question: those that geometry proposes, then the others, to be matched by hand. */
 export function AssetRenameList({ renames, mayDecide, busy, onDecide }: AssetRenameListProps) {
-  const { asset, version, proposals, absent, arrived } = renames;
-  const item = (part: string, becomes: string, decision: RenameDecision): RenameItem => ({ asset, version, part, becomes, decision });
+  const { asset, version, proposals, absent, arrived, kept_apart: keptApart } = renames;
+  const item = (part: string, becomes: string, decision: RenameDecision): RenameItem => ({ asset, version, part, becomes, decision, kept_apart: keptApart.some((pair) => pair.part === part && pair.becomes === becomes) });
   const absentOf = new Map(absent.map((part) => [part.part, part]));
   const arrivedOf = new Map(arrived.map((part) => [part.part, part]));
   const proposed = new Set(proposals.flatMap(({ part, becomes }) => [part, becomes]));

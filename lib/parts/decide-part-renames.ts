@@ -29,7 +29,8 @@ interface Decided {
  * Confirms or refuses that a part which the current version lacks is one that came since, under another name: proposed by geometry, or
  * said by hand. Confirmed, the part keeps its identity (settings, approvals, locks) and goes by the new name; locked rows stay as they are.
  * Refused, the two stay two and are not proposed again. All or nothing.
- * Errors: conflict with the failing items under `errors`, where another version is current by now, somebody else decided meanwhile, or the
+ * Errors: conflict with the failing items under `errors`, where another version is current by now, somebody else decided meanwhile (a pair that was
+ * kept apart is confirmed only by who says that they saw that), or the
  * new part has approvals, locks or overrides of its own; bad_input, forbidden, not_found.
  */
 export async function decidePartRenames(context: Context, input: DecidePartRenamesInput): Promise<{ items: { asset: string; part: string; decision: Item['decision'] }[] }> {
@@ -60,6 +61,8 @@ function resolve(item: Item, asset: FoundRenames | undefined): Decided | Pick<It
   if (!from) return { code: 'conflict', message: `${item.asset}/${item.part} is not among the parts that ${asset.version} lacks. Somebody may have decided meanwhile.` };
   if (!to) return { code: 'conflict', message: `${item.asset}/${item.becomes} is not among the parts that came since. Somebody may have decided meanwhile.` };
   if (to.first <= from.last) return { code: 'bad_input', message: `${item.asset} had both ${item.part} and ${item.becomes} in one version.` };
+  const isApart = asset.kept_apart.some((pair) => pair.part === item.part && pair.becomes === item.becomes);
+  if (item.decision === 'confirmed' && isApart && item.kept_apart !== true) return { code: 'conflict', message: `Somebody kept ${item.asset}/${item.part} and ${item.becomes} apart. Look again.` };
   const why = item.decision === 'confirmed' ? whyNotRenamed(to) : null;
   if (why !== null) return { code: 'conflict', message: `${item.asset}/${item.becomes} has values of its own. ${why}` };
   const match = asset.matches.find((one) => one.from === from.part_id && one.to === to.part_id);

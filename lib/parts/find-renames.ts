@@ -60,6 +60,10 @@ function toRenames(parts: SeenPart[], shapes: ReadonlyMap<string, ShapeComponent
     versionId,
     parts,
     matches,
+    kept_apart: [...refused].flatMap((pair) => {
+      const [part, becomes] = pair.split(' ').map((id) => nameOf.get(id));
+      return part !== undefined && becomes !== undefined ? [{ part, becomes }] : [];
+    }),
     proposals: matches.map(({ from, to, fit, others }) => ({ part: nameOf.get(from)!, becomes: nameOf.get(to)!, fit, others })),
     absent: parts.filter((part) => part.absent).map(({ part, label, has_setting, approvals, locks }) => ({ part, last_version: label, has_setting, approvals, locks })),
     arrived: parts.filter((part) => !part.absent).map(({ part, label, has_setting, approvals, locks, overrides }) => ({ part, first_version: label, has_setting, approvals, locks, overrides })),

@@ -41,6 +41,8 @@ export interface AssetRenames {
   asset: string;
   version: string;
   proposals: RenameProposal[];
+  /** Pairs that a person kept apart. */
+  kept_apart: { part: string; becomes: string }[];
   absent: AbsentPart[];
   arrived: ArrivedPart[];
 }

@@ -90,6 +90,19 @@ test('refused stays two parts and is not proposed again, in later versions neith
   expect((await rowsNow(cast)).map((row) => [row.part, row.state])).toEqual([['hull', 'unset'], ['lid', 'unset']]);
 });
 
+test('a pair that was kept apart is confirmed only by who saw that', async () => {
+  const cast = await createCrateShow();
+  await bring(cast, named(BODY, 'hull'), LID);
+  await decide(cast, 'body', 'hull', 'refused', { by: 'lead' });
+  const before = await rowsNow(cast);
+  expect((await refusal(decide(cast, 'body', 'hull', 'confirmed'))).code).toBe('conflict');
+  expect(await rowsNow(cast)).toEqual(before);
+  const [{ kept_apart: apart }] = (await listPartRenames(cast.contextOf('td'), { show: cast.show.code })).items;
+  expect(apart).toEqual([{ part: 'body', becomes: 'hull' }]);
+  await decidePartRenames(cast.contextOf('td'), { show: cast.show.code, items: [{ asset: 'crate', version: 'v002', part: 'body', becomes: 'hull', decision: 'confirmed', kept_apart: true }] });
+  expect((await rowsNow(cast)).map((row) => [row.part, row.state])).toEqual([['hull', 'measured'], ['lid', 'unset']]);
+});
+
 test('of mirrored and equal parts those in one place are matched; moved ones by shape, with the others said', async () => {
   const cast = await createCrateShow();
   const boulder = (x: number, name: string) => boxPart(name, [x, 0, 20], [x + 1, 2, 21]);
@@ -125,10 +138,9 @@ test('a newer version meanwhile, a second person, and parts that were in one ver
   expect((await refusal(decide(cast, 'nothing', 'hull', 'confirmed', { version: 'v003' }))).code).toBe('conflict');
   expect(await rowsNow(cast)).toEqual(before);
   const both = await Promise.allSettled([decide(cast, 'body', 'hull', 'confirmed', { version: 'v003' }), decide(cast, 'body', 'hull', 'refused', { by: 'lead', version: 'v003' })]);
-  // The refusal leaves the pair apart but in place, so that a confirmation after it stands; a confirmation leaves nothing to refuse.
+  // Whoever comes second saw neither the confirmation nor the refusal, and is told to look again.
   const codes = both.map((one) => (one.status === 'fulfilled' ? 'done' : (one.reason as StudioError).code));
-  expect(codes[0]).toBe('done');
-  expect(['done', 'conflict']).toContain(codes[1]);
+  expect(codes.toSorted()).toEqual(['conflict', 'done']);
   expect((await rowsNow(cast))[0].part).toBe('hull');
   const again = await Promise.allSettled([1, 2].map(() => decide(cast, 'body', 'hull', 'confirmed', { version: 'v003' })));
   expect(again.map((one) => one.status)).toEqual(['rejected', 'rejected']);

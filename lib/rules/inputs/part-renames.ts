@@ -19,6 +19,8 @@ export const decidePartRenamesInput = z.strictObject({
       part: partField,
       becomes: partField,
       decision: z.enum(RENAME_DECISIONS, `decision is one of ${RENAME_DECISIONS.join(', ')}.`),
+      /** The sender saw that somebody kept the two apart, and confirms all the same; without it that is a conflict. */
+      kept_apart: z.boolean('kept_apart is true or false.').optional(),
     }),
   ),
 });
