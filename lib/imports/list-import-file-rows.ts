@@ -35,7 +35,7 @@ export async function listImportFileRows(context: Context, input: ListImportFile
   return db.transaction(
     async (tx) => {
       const { rows } = await tx.execute<PagedRow>(sql`
-        select ${FILE_COLUMNS}, ${order.key} as sort_key, f.planned_asset, f.planned_version, ${WARNINGS} as warnings, ${FINDINGS} as findings
+        select ${FILE_COLUMNS}, ${order.key} as sort_key, f.plan ->> 'asset' as planned_asset, (f.plan ->> 'version')::integer as planned_version, ${WARNINGS} as warnings, ${FINDINGS} as findings
         from ${FILE_TABLES} where ${chosen} and ${at === null ? sql`true` : order.after(at)} order by ${order.orderBy} limit ${input.limit + 1}`);
       const page = rows.slice(0, input.limit);
       const [{ found }] = (await tx.execute<{ found: number }>(sql`select count(*)::int as found from ${FILE_TABLES} where ${chosen}`)).rows;
