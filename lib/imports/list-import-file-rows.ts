@@ -3,6 +3,7 @@ import { z } from 'zod';
 import type { Executor } from '@/db/client';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
+import { readCursor, writeCursor } from '@/lib/http/cursor-text';
 import { FILE_FILTERS, FINDINGS_SHOWN, type FileFilterCounts, type FileFinding, type ImportFilePage } from '@/lib/rules/import-answer';
 import type { ListImportFilesInput } from '@/lib/rules/inputs/list-import-files';
 import { StudioError } from '@/lib/rules/studio-error';
@@ -63,21 +64,11 @@ async function countByFilter(tx: Executor, importId: string): Promise<FileFilter
 }
 
 function encodeCursor(sort: string, last: PagedRow): string {
-  return Buffer.from(JSON.stringify([sort, last.sort_key, last.name])).toString('base64url');
+  return writeCursor([sort, last.sort_key, last.name]);
 }
 
 function decodeCursor(text: string, sort: string): { key: string; name: string } {
-  const parsed = cursorShape.safeParse(parseJson(Buffer.from(text, 'base64url').toString('utf8')));
-  if (!parsed.success) throw new StudioError('bad_input', 'cursor: This is no cursor of this list.', { field: 'cursor' });
-  const [sortedBy, key, name] = parsed.data;
+  const [sortedBy, key, name] = readCursor(text, cursorShape);
   if (sortedBy !== sort) throw new StudioError('bad_input', 'cursor: This cursor belongs to a list in another order.', { field: 'cursor' });
   return { key, name };
-}
-
-function parseJson(text: string): unknown {
-  try {
-    return JSON.parse(text);
-  } catch {
-    return null;
-  }
 }

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { readCursor, writeCursor } from '@/lib/http/cursor-text';
 import { StudioError } from '@/lib/rules/studio-error';
 
 /** Where a page ended: the sort it belongs to, the sorted value there, and the row's asset and part. */
@@ -12,22 +13,12 @@ export interface PartCursor {
 const shape = z.tuple([z.string(), z.union([z.string(), z.number(), z.null()]), z.string(), z.string()]);
 
 export function encodeCursor({ sort, value, asset, part }: PartCursor): string {
-  return Buffer.from(JSON.stringify([sort, value, asset, part])).toString('base64url');
+  return writeCursor([sort, value, asset, part]);
 }
 
 /** Throws bad_input for what this list did not give out, or gave out under another sort. */
 export function decodeCursor(text: string, sort: string): PartCursor {
-  const parsed = shape.safeParse(parseJson(Buffer.from(text, 'base64url').toString('utf8')));
-  if (!parsed.success) throw new StudioError('bad_input', 'cursor: This is no cursor of this list.', { field: 'cursor' });
-  const [sortedBy, value, asset, part] = parsed.data;
+  const [sortedBy, value, asset, part] = readCursor(text, shape);
   if (sortedBy !== sort) throw new StudioError('bad_input', 'cursor: This cursor belongs to a list in another order.', { field: 'cursor' });
   return { sort, value, asset, part };
-}
-
-function parseJson(text: string): unknown {
-  try {
-    return JSON.parse(text);
-  } catch {
-    return null;
-  }
 }

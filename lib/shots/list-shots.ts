@@ -2,13 +2,16 @@ import { sql, type SQL } from 'drizzle-orm';
 import { z } from 'zod';
 import { requireActor } from '@/lib/auth/require-actor';
 import type { Context } from '@/lib/context';
+import { readCursor, writeCursor } from '@/lib/http/cursor-text';
 import type { ListShotsInput, ShotFilter } from '@/lib/rules/inputs/list-shots';
 import type { AssetInShot, ShotPage } from '@/lib/rules/shot-detail';
 import { shotVerdict } from '@/lib/rules/shot-words';
-import { StudioError } from '@/lib/rules/studio-error';
 import { getShowAccess } from '@/lib/shows/get-show-access';
 import { shotFilter } from './shot-filter';
 import { shotStanding } from './shot-standing';
+
+/** Sequence and code of the last shot. */
+const cursorShape = z.tuple([z.string(), z.string()]);
 
 interface FoundShot extends Record<string, unknown> {
   code: string;
@@ -37,7 +40,7 @@ const ORDER = sql`s.sequence collate "C", s.code collate "C"`;
 export async function listShots(context: Context, input: ListShotsInput): Promise<ShotPage> {
   const { db, actor } = requireActor(context);
   const { show } = await getShowAccess(db, actor, input.show, 'readShow');
-  const cursor = input.cursor === undefined ? null : decodeCursor(input.cursor);
+  const cursor = input.cursor === undefined ? null : readCursor(input.cursor, cursorShape);
   const behind = cursor === null ? sql`true` : sql`(s.sequence collate "C", s.code collate "C") > (${cursor[0]}::text collate "C", ${cursor[1]}::text collate "C")`;
   const wanted = sql`${shotFilter(show.id, input)} and ${behind}`;
   const limit = sql`limit ${input.limit + 1}`;
@@ -52,20 +55,6 @@ export async function listShots(context: Context, input: ListShotsInput): Promis
   const last = page.at(-1);
   return {
     items: page.map(({ code, sequence, title, assets, locked, missing, outdated, overrides }) => ({ code, sequence, title, assets: assets ?? [], locked, missing, outdated, overrides, verdict: shotVerdict({ locked, missing, outdated }) })),
-    next_cursor: rows.length > input.limit && last ? encodeCursor(last) : null,
+    next_cursor: rows.length > input.limit && last ? writeCursor([last.sequence, last.code]) : null,
   };
-}
-
-const cursorShape = z.tuple([z.string(), z.string()]);
-
-function encodeCursor({ sequence, code }: { sequence: string; code: string }): string {
-  return Buffer.from(JSON.stringify([sequence, code])).toString('base64url');
-}
-
-function decodeCursor(text: string): [sequence: string, code: string] {
-  try {
-    return cursorShape.parse(JSON.parse(Buffer.from(text, 'base64url').toString('utf8')));
-  } catch {
-    throw new StudioError('bad_input', 'cursor: This is no cursor of this list.', { field: 'cursor' });
-  }
 }
