@@ -46,7 +46,7 @@ export async function requestJson<Answer>(
     if (init.signal?.aborted) throw error;
     throw new RequestError(0, 'not_reached', 'The server was not reached.');
   }
-  if (response.ok) return (await response.json()) as Answer;
+  if (response.ok) return (response.status === 204 ? null : await response.json()) as Answer;
   const problem = await readProblem(response);
   throw new RequestError(
     response.status,

@@ -23,6 +23,8 @@ export interface FileUpload {
   partBytes: number;
   lanes: RequestLanes;
   onProgress: (sentBytes: number) => void;
+  /** Told the address of what keeps the parts, until the file is whole. */
+  onBegun: (address: string) => void;
   onWaiting: (isWaiting: boolean) => void;
   signal: AbortSignal;
 }
@@ -64,6 +66,7 @@ async function sendPartsOnce(upload: FileUpload): Promise<void> {
   const ask = <Answer>(path: string, body: unknown): Promise<Answer> => patiently(() => requestJson<Answer>(address.base + path, { method: 'POST', body, signal }), upload);
   const begun = await ask<UploadAnswer>('/uploads', { ...address.said, bytes: file.size, sha256: hashes.sha256, part_bytes: partBytes });
   if (begun.state === 'stored') return;
+  upload.onBegun(`${address.base}/uploads/${begun.upload}`);
   // Begun elsewhere with parts of another size, by a script say, it goes on with those.
   const partHashes = begun.part_bytes === partBytes ? hashes.parts : (await hashFile(file, begun.part_bytes, () => undefined)).parts;
   const sent = new Map<number, number>(begun.parts.map((number) => [number, partLength(begun, number)]));

@@ -1,10 +1,11 @@
 'use client';
 
 import { useCallback, useDeferredValue, useEffect, useMemo, useRef, useState } from 'react';
-import type { ImportPreparation } from '@/lib/rules/import-answer';
+import type { ImportPreparation, OpenImport } from '@/lib/rules/import-answer';
 import { previewImport, worthHashing, type PreviewRow } from '@/lib/rules/import-preview';
 import type { BoundaryWord, PartitionWord, SchemeWord } from '@/lib/rules/measure-words';
 import { checkNamePattern } from '@/lib/rules/name-pattern';
+import { holdImport } from './hold-import';
 import { joinDropped, NOTHING_SAID, readBeside, whyStaying, type DroppedFile, type Said } from './desk-files';
 import { requestJson, RequestError } from './request-json';
 import { useContentHashes } from './use-content-hashes';
@@ -46,8 +47,10 @@ export function useImportDesk(preparation: ImportPreparation, onSubmitted: (impo
   const [phase, setPhase] = useState<DeskPhase>('choosing');
   const [refusal, setRefusal] = useState<string | null>(null);
   const importId = useRef<string | null>(null);
+  const letGo = useRef<(() => void) | null>(null);
+  const [unfinished, setUnfinished] = useState<readonly OpenImport[]>(preparation.open);
   const imports = `/api/v1/shows/${encodeURIComponent(preparation.show)}/imports`;
-  const { uploads, sendAll, halt } = useImportUploads();
+  const { uploads, sendAll, halt, giveUpUploads } = useImportUploads();
 
   const typed = useDeferredValue(typedPattern).trim();
   const patternFault = typed === '' ? null : checkNamePattern(typed);
@@ -94,14 +97,28 @@ export function useImportDesk(preparation: ImportPreparation, onSubmitted: (impo
     }
   }, [imports, onSubmitted]);
 
+  const own = pattern === preparation.name_pattern ? null : (pattern ?? '');
+  const continued = useMemo(() => {
+    const up = new Set(rows.filter(goesUp).map(({ path }) => path));
+    return unfinished.find((open) => isContinued(open, options, own, up)) ?? null;
+  }, [unfinished, options, own, rows]);
+
+  /** The import that this drop goes into: one that was left unfinished and holds nothing else, or a new one. */
+  const openImport = async (): Promise<string> => {
+    letGo.current = continued === null ? null : await holdImport(continued.id);
+    if (continued !== null && letGo.current !== null) return continued.id;
+    const body = { scheme: options.scheme, boundary: options.boundary, parts_by: options.partsBy, weld: options.weld, turn_faces: options.turnFaces };
+    const { id } = await requestJson<{ id: string }>(imports, { method: 'POST', body: own === null ? body : { ...body, name_pattern: pattern } });
+    letGo.current = await holdImport(id);
+    return id;
+  };
+
   /** Sends what is not there yet, then submits; with failures it stops before that. */
   const start = async () => {
     setRefusal(null);
     setPhase('sending');
     try {
-      const body = { scheme: options.scheme, boundary: options.boundary, parts_by: options.partsBy, weld: options.weld, turn_faces: options.turnFaces };
-      const own = pattern === preparation.name_pattern ? {} : { name_pattern: pattern };
-      importId.current ??= (await requestJson<{ id: string }>(imports, { method: 'POST', body: { ...body, ...own } })).id;
+      importId.current ??= await openImport();
     } catch (error) {
       setRefusal(sayOf(error, 'The import could not be opened.'));
       return setPhase('choosing');
@@ -118,6 +135,32 @@ export function useImportDesk(preparation: ImportPreparation, onSubmitted: (impo
     window.addEventListener('beforeunload', warn);
     return () => window.removeEventListener('beforeunload', warn);
   }, [phase]);
+
+  useEffect(() => () => letGo.current?.(), []);
+
+  /** Cancels an import that was not submitted; what arrived in it is left out. False, with the reason said, where that failed. */
+  const discard = async (id: string): Promise<boolean> => {
+    setRefusal(null);
+    try {
+      await requestJson(`${imports}/${id}/cancel`, { method: 'POST' });
+      setUnfinished((now) => now.filter((open) => open.id !== id));
+      return true;
+    } catch (error) {
+      setRefusal(sayOf(error, 'The import could not be discarded.'));
+      return false;
+    }
+  };
+
+  /** Ends what was begun, parts that arrived included, and goes back to the list. */
+  const giveUp = async () => {
+    const id = importId.current;
+    setPhase('submitting');
+    await giveUpUploads();
+    if (id !== null && !(await discard(id))) return setPhase('stopped');
+    letGo.current?.();
+    importId.current = null;
+    setPhase('choosing');
+  };
 
   const change = useCallback((paths: readonly string[], to: Partial<Said>) => {
     setSaid((now) => {
@@ -140,9 +183,13 @@ export function useImportDesk(preparation: ImportPreparation, onSubmitted: (impo
     setOrder,
     phase,
     refusal,
+    unfinished,
+    continued,
+    discard,
     start,
     submit,
     halt,
+    giveUp,
     change,
     remove,
     add: (dropped: readonly File[]) => setFiles((now) => joinDropped(now, dropped)),
@@ -156,6 +203,12 @@ export function useImportDesk(preparation: ImportPreparation, onSubmitted: (impo
 /** Whether a file goes up as things stand: it has an asset, or is read beside one. */
 export function goesUp({ preview, beside }: DeskRow): boolean {
   return beside !== null || (preview !== null && preview.asset !== null);
+}
+
+/** Whether an import that was left open is the one to go on with: measured the same way, and with no file that is not here. */
+function isContinued(open: OpenImport, options: DeskOptions, namePattern: string | null, paths: ReadonlySet<string>): boolean {
+  const isAlike = open.scheme === options.scheme && open.boundary === options.boundary && open.parts_by === options.partsBy && open.weld === options.weld && open.turn_faces === options.turnFaces;
+  return isAlike && open.standard && open.name_pattern === namePattern && open.names.every((name) => paths.has(name));
 }
 
 /** Path and query of a row's file; an asset that the batch decided (by its folder) is decided again by the server. */

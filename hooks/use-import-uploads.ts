@@ -51,6 +51,8 @@ export function useImportUploads() {
   const now = useRef(new Map<string, Upload>());
   const timer = useRef<ReturnType<typeof setTimeout> | null>(null);
   const controller = useRef<AbortController | null>(null);
+  /** Addresses of uploads whose parts are kept, by path. */
+  const begun = useRef(new Map<string, string>());
 
   const note = useCallback((path: string, upload: Upload | null) => {
     if (upload) now.current.set(path, upload);
@@ -92,11 +94,13 @@ export function useImportUploads() {
             sentBytes = bytes;
             tell();
           },
+          onBegun: (address) => begun.current.set(path, address),
           onWaiting: (isWaiting) => {
             waiting = isWaiting ? 1 : 0;
             tell();
           },
         });
+        begun.current.delete(path);
         note(path, { state: 'sent', sentBytes: file.size, error: null });
         return true;
       });
@@ -160,5 +164,14 @@ export function useImportUploads() {
     [],
   );
 
-  return { uploads, sendAll, halt: () => controller.current?.abort() };
+  /** Ends what is under way and removes the parts that arrived; what cannot be removed now runs out by itself. */
+  const giveUpUploads = useCallback(async () => {
+    controller.current?.abort();
+    await Promise.allSettled([...begun.current.values()].map((address) => requestJson(address, { method: 'DELETE' })));
+    begun.current.clear();
+    now.current.clear();
+    setUploads(new Map());
+  }, []);
+
+  return { uploads, sendAll, halt: () => controller.current?.abort(), giveUpUploads };
 }

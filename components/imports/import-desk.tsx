@@ -16,6 +16,7 @@ import { DeskNames } from './desk-names';
 import { DeskSettings } from './desk-settings';
 import { DeskTable } from './desk-table';
 import { DropZone } from './drop-zone';
+import { UnfinishedImports } from './unfinished-imports';
 
 const filesOf = (count: number): string => (count === 1 ? '1 file' : `${count.toLocaleString('en')} files`);
 
@@ -40,12 +41,23 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
     },
     [shown],
   );
+  const unfinished = <UnfinishedImports show={preparation.show} imports={desk.unfinished} continued={desk.continued} areFilesHere={rows.length > 0} onDiscard={desk.discard} />;
+  const refusal =
+    desk.refusal === null ? null : (
+      <p role="alert" className="text-13 text-wrong">
+        {desk.refusal}
+      </p>
+    );
   if (rows.length === 0) {
     return (
-      <div className="flex flex-col gap-5 p-4 md:p-6">
-        <DropZone limits={preparation} onFiles={desk.add} />
-        <NameRule preparation={preparation} />
-      </div>
+      <>
+        {unfinished}
+        <div className="flex flex-col gap-5 p-4 md:p-6">
+          {refusal}
+          <DropZone limits={preparation} onFiles={desk.add} />
+          <NameRule preparation={preparation} />
+        </div>
+      </>
     );
   }
   const locked = phase === 'sending' || phase === 'submitting';
@@ -56,6 +68,7 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
   const failed = rows.filter((row) => row.upload?.state === 'failed').length;
   return (
     <div className="flex min-h-0 flex-1 flex-col">
+      {phase === 'choosing' ? unfinished : null}
       <div className="flex flex-col gap-4 px-4 pt-4 md:px-6">
         <DropZone limits={preparation} onFiles={desk.add} slim disabled={locked} />
         <DeskSettings
@@ -92,18 +105,14 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
       <footer className="sticky bottom-0 flex flex-wrap items-center gap-x-5 gap-y-2 border-t border-rule bg-bench px-4 py-3 md:px-6">
         <div className="min-w-0 flex-1 basis-64">
           {locked ? (
-            <SendingWords sent={rows.filter((row) => row.upload?.state === 'sent').length} total={going.length} share={bytes === 0 ? 1 : sentBytes / bytes} />
+            <SendingWords sent={rows.filter((row) => row.upload?.state === 'sent').length} total={going.length} share={bytes === 0 ? 1 : sentBytes / bytes} isWaiting={going.some((row) => row.upload?.state === 'waiting')} />
           ) : (
             <p className="text-14 text-ink-2">
               {filesOf(going.length)}, {byteWords(bytes)}
               {rows.length > going.length ? `. ${filesOf(rows.length - going.length)} stay here.` : ''}
             </p>
           )}
-          {desk.refusal === null ? null : (
-            <p role="alert" className="text-13 text-wrong">
-              {desk.refusal}
-            </p>
-          )}
+          {refusal}
           {phase === 'stopped' && failed > 0 ? (
             <p role="alert" className="text-13 text-wrong">
               {filesOf(failed)} did not arrive.
@@ -113,6 +122,7 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
         <div className="flex flex-wrap gap-2">
           {phase === 'choosing' ? <Button look="quiet" onClick={desk.clear}>Clear the list</Button> : null}
           {phase === 'sending' ? <Button onClick={desk.halt}>Stop sending</Button> : null}
+          {phase === 'stopped' ? <Button look="quiet" onClick={() => void desk.giveUp()}>Give up</Button> : null}
           {phase === 'stopped' && rows.some((row) => row.upload?.state === 'sent') ? <Button onClick={() => void desk.submit()}>Go on with what arrived</Button> : null}
           <Button look="filled" disabled={locked || going.length === 0} onClick={() => void desk.start()}>
             {phase === 'stopped' ? 'Send the rest' : `Import ${filesOf(going.length)}`}
@@ -129,11 +139,11 @@ function withPaths(now: ReadonlySet<string>, paths: readonly string[], isChosen:
   return next;
 }
 
-function SendingWords({ sent, total, share }: { sent: number; total: number; share: number }) {
+function SendingWords({ sent, total, share, isWaiting }: { sent: number; total: number; share: number; isWaiting: boolean }) {
   return (
     <div className="flex flex-col gap-1.5">
       <p role="status" className="text-14 text-ink-2">
-        {sent.toLocaleString('en')} of {filesOf(total)} sent. Stay on this page until all are.
+        {sent.toLocaleString('en')} of {filesOf(total)} sent. {isWaiting ? 'No connection. It goes on by itself when there is one.' : 'Stay on this page until all are.'}
       </p>
       <div aria-hidden className="h-1 max-w-md bg-rule">
         <div className="h-full bg-brass" style={{ width: `${Math.min(1, share) * 100}%` }} />

@@ -6,6 +6,7 @@ import type { ImportPreparationInput } from '@/lib/rules/inputs/import-preparati
 import { getShowAccess } from '@/lib/shows/get-show-access';
 import { limitsOf } from './get-upload-limits';
 import { knownAssets } from './known-assets';
+import { openImportsOf } from './open-imports-of';
 
 /** What the import page has to know before anything goes up: how names are read, what the show has, and every limit. */
 export async function getImportPreparation(context: Context, input: ImportPreparationInput): Promise<ImportPreparation> {
@@ -27,5 +28,6 @@ export async function getImportPreparation(context: Context, input: ImportPrepar
     max_import_bytes,
     left_bytes,
     assets: await knownAssets(context.db, show.id),
+    open: await openImportsOf(context.db, show, actor.userId),
   };
 }

@@ -165,6 +165,23 @@ export interface StoredFileAnswer {
   stored: boolean;
 }
 
+/** An import that somebody opened and did not submit: what arrived in it, and the options that its files would be measured under. */
+export interface OpenImport {
+  id: string;
+  created_at: string;
+  scheme: SchemeWord;
+  boundary: BoundaryWord;
+  parts_by: PartitionWord;
+  weld: boolean;
+  turn_faces: boolean;
+  /** Its own; empty for the built-in rule, null for the show's. */
+  name_pattern: string | null;
+  /** Whether it is what a page would open today, the options above aside. */
+  standard: boolean;
+  /** Names of the files that arrived. */
+  names: string[];
+}
+
 /** What the import page knows before anything goes up. */
 export interface ImportPreparation {
   show: string;
@@ -182,4 +199,6 @@ export interface ImportPreparation {
   /** What show and studio have room for. */
   left_bytes: number;
   assets: KnownAsset[];
+  /** The reader's own that were not submitted, newest first. */
+  open: OpenImport[];
 }
