@@ -1,4 +1,3 @@
-import Link from 'next/link';
 import { ProblemShape, WarningShape } from '@/components/parts/problem-counts';
 import { REMARKS, type FileFinding, type ImportFileRow } from '@/lib/rules/import-answer';
 import { MENDS, mendOf } from '@/lib/rules/import-mends';
@@ -56,9 +55,10 @@ function FindingLine({ finding, file, show }: { finding: FileFinding; file: Impo
         <span className="sr-only">{isProblem ? 'Problem: ' : 'Warning: '}</span>
         {file.asset === null ? null : (
           <>
-            <Link className="link font-mono text-12" href={findingHref(show, file.asset, finding.part, finding.code)}>
+            {/* A load of the page, since a move within the program marks no target. */}
+            <a className="link font-mono text-12" href={findingHref(show, file.asset, finding.part, finding.code)}>
               {finding.part ?? file.asset}
-            </Link>{' '}
+            </a>{' '}
           </>
         )}
         {finding.message}
