@@ -16,7 +16,7 @@ export function QueueFacts({ waiting_files: waiting, oldest_waiting_s: oldest, w
           <>
             <p className="text-14 text-ink-2">
               {waiting.toLocaleString('en')} {waiting === 1 ? 'file' : 'files'}
-              {oldest === null ? '' : `, the first of them for ${oldest.toLocaleString('en')} s`}. Shows take turns.
+              {oldest === null ? '' : `, the first of them for ${spanWords(oldest)}`}. Shows take turns.
             </p>
             <WaitingTable shows={shows} />
           </>
@@ -33,6 +33,12 @@ export function QueueFacts({ waiting_files: waiting, oldest_waiting_s: oldest, w
       )}
     </>
   );
+}
+
+/** Seconds as somebody would say them: `90 s`, `12 min`, `5 h`. */
+function spanWords(seconds: number): string {
+  if (seconds < 120) return `${seconds} s`;
+  return seconds < 7200 ? `${Math.round(seconds / 60)} min` : `${Math.round(seconds / 3600).toLocaleString('en')} h`;
 }
 
 function WaitingTable({ shows }: { shows: readonly WaitingShow[] }) {
