@@ -17,5 +17,5 @@ export async function listPartRenames(context: Context, input: ListPartRenamesIn
   const ofImport = input.import === undefined ? sql`` : sql`and a.id in (select v.asset_id from asset_versions v join import_files f on f.id = v.import_file_id where f.import_id = ${input.import})`;
   const { rows } = await db.execute<{ id: string }>(sql`select a.id from assets a where a.show_id = ${show.id} and a.archived_at is null ${ofAsset} ${ofImport}`);
   const found = await findRenames(db, rows.map((row) => row.id));
-  return { items: found.map(({ asset, version, proposals, absent, arrived }) => ({ asset, version, proposals, absent, arrived })) };
+  return { items: found.map(({ asset, version, proposals, absent, arrived, kept_apart }) => ({ asset, version, proposals, absent, arrived, kept_apart })) };
 }
