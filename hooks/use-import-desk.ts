@@ -2,6 +2,7 @@
 
 import { useCallback, useDeferredValue, useEffect, useMemo, useRef, useState } from 'react';
 import type { ImportPreparation, OpenImport } from '@/lib/rules/import-answer';
+import { summariseArchive, unpackedPath, type ArchivePreview } from '@/lib/rules/archive-preview';
 import { previewImport, worthHashing, type PreviewRow } from '@/lib/rules/import-preview';
 import type { BoundaryWord, PartitionWord, SchemeWord } from '@/lib/rules/measure-words';
 import { checkNamePattern } from '@/lib/rules/name-pattern';
@@ -9,17 +10,27 @@ import { holdImport } from './hold-import';
 import { joinDropped, NOTHING_SAID, readBeside, whyStaying, type DroppedFile, type Said } from './desk-files';
 import { requestJson, RequestError } from './request-json';
 import { useContentHashes } from './use-content-hashes';
+import { useDroppedArchives } from './use-dropped-archives';
 import { useImportUploads, type Upload } from './use-import-uploads';
 
 export interface DeskRow extends DroppedFile {
   said: Said;
-  /** Null for a file that stays here or is read beside another. */
+  /** Null for a file that stays here, is read beside another, or is unpacked into others. */
   preview: PreviewRow | null;
+  /** What a ZIP of several files becomes. */
+  archive: ArchivePreview | null;
   /** Why it stays here. */
   stays: string | null;
   /** The mesh that reads it, where it is no asset of its own. */
   beside: string | null;
   upload: Upload | null;
+}
+
+/** A file that goes up under its own path, or what comes out of an archive under the path it will have. */
+interface Planned extends DroppedFile {
+  name: string;
+  /** Path inside the archive. */
+  entry: string | null;
 }
 
 export interface DeskOptions {
@@ -61,30 +72,54 @@ export function useImportDesk(preparation: ImportPreparation, onSubmitted: (impo
   const stays = useMemo(() => whyStaying(files, preparation), [files, preparation]);
   const going = useMemo(() => files.filter((_, index) => stays[index] === null), [files, stays]);
   const { assets } = preparation;
+  const archives = useDroppedArchives(going, preparation.extensions);
+  /** What is planned: the files that go up, and in the place of an archive what comes out of it. */
+  const planned = useMemo(
+    () =>
+      going.flatMap(({ path, file }): Planned[] => {
+        const inside = said.get(path)?.asset ? undefined : archives.get(file);
+        if (inside === undefined) return [{ path, file, name: path, entry: null }];
+        return inside.map((entry) => ({ path, file, name: unpackedPath(path, entry), entry }));
+      }),
+    [going, archives, said],
+  );
   /** As the names alone have it: the order of the rows does not jump while somebody mends them. */
-  const named = useMemo(() => previewImport(going.map(({ path }) => ({ name: path })), pattern, assets), [going, pattern, assets]);
-  const wanted = useMemo(() => worthHashing(going.map(({ file }) => file), named, assets).map((index) => going[index].file), [going, named, assets]);
+  const named = useMemo(() => previewImport(planned.map(({ name }) => ({ name })), pattern, assets), [planned, pattern, assets]);
+  const wanted = useMemo(() => {
+    const sizes = planned.map(({ file, entry }) => ({ size: entry === null ? file.size : -1 }));
+    return worthHashing(sizes, named, assets).filter((index) => planned[index].entry === null).map((index) => planned[index].file);
+  }, [planned, named, assets]);
   const hashes = useContentHashes(wanted);
   const previews = useMemo(() => {
-    const dropped = going.map(({ path, file }) => ({ name: path, ...said.get(path), sha256: hashes.get(file) ?? null }));
+    const dropped = planned.map(({ path, file, name, entry }) => (entry === null ? { name, ...said.get(path), sha256: hashes.get(file) ?? null } : { name, category: said.get(path)?.category ?? null }));
     return previewImport(dropped, pattern, assets, options.partsBy === 'joint' ? null : { ...options, triangles: 'catmark', creasing: 'uniform' });
-  }, [going, said, hashes, pattern, assets, options]);
+  }, [planned, said, hashes, pattern, assets, options]);
 
   const places = useMemo(() => {
-    const attentionOf = new Map(going.map(({ path }, index) => [path, named[index].attention]));
+    const attentionOf = new Map<string, number>();
+    planned.forEach(({ path }, index) => attentionOf.set(path, Math.max(attentionOf.get(path) ?? 0, named[index].attention)));
     const weight = (index: number): number => (stays[index] === null ? (attentionOf.get(files[index].path) ?? 0) : -1);
     const all = files.map((_, index) => index);
     return order === 'path' ? all : all.sort((a, b) => weight(b) - weight(a) || a - b);
-  }, [files, going, named, stays, order]);
+  }, [files, planned, named, stays, order]);
 
   const rows = useMemo(() => {
-    const previewOf = new Map(going.map(({ path }, index) => [path, previews[index]]));
+    const previewOf = new Map<string, PreviewRow>();
+    const insideOf = new Map<string, { entry: string; preview: PreviewRow }[]>();
+    planned.forEach(({ path, entry }, index) => {
+      if (entry === null) return previewOf.set(path, previews[index]);
+      const inside = insideOf.get(path);
+      const one = { entry, preview: previews[index] };
+      return inside ? inside.push(one) : insideOf.set(path, [one]);
+    });
     return places.map((index): DeskRow => {
       const { path, file } = files[index];
       const beside = stays[index] === null ? readBeside(path) : null;
-      return { path, file, said: said.get(path) ?? NOTHING_SAID, preview: beside === null ? (previewOf.get(path) ?? null) : null, stays: stays[index], beside, upload: uploads.get(path) ?? null };
+      const inside = insideOf.get(path);
+      const archive = inside ? summariseArchive(inside.map(({ entry }) => entry), inside.map(({ preview }) => preview)) : null;
+      return { path, file, said: said.get(path) ?? NOTHING_SAID, preview: beside === null ? (previewOf.get(path) ?? null) : null, archive, stays: stays[index], beside, upload: uploads.get(path) ?? null };
     });
-  }, [files, going, previews, places, said, stays, uploads]);
+  }, [files, planned, previews, places, said, stays, uploads]);
 
   const submit = useCallback(async () => {
     setPhase('submitting');
@@ -200,9 +235,9 @@ export function useImportDesk(preparation: ImportPreparation, onSubmitted: (impo
   };
 }
 
-/** Whether a file goes up as things stand: it has an asset, or is read beside one. */
-export function goesUp({ preview, beside }: DeskRow): boolean {
-  return beside !== null || (preview !== null && preview.asset !== null);
+/** Whether a file goes up as things stand: it has an asset, is read beside one, or is unpacked. */
+export function goesUp({ preview, archive, beside }: DeskRow): boolean {
+  return beside !== null || archive !== null || (preview !== null && preview.asset !== null);
 }
 
 /** Whether an import that was left open is the one to go on with: measured the same way, and with no file that is not here. */

@@ -9,7 +9,8 @@ import { Select } from '@/components/ui/select';
 import type { Said } from '@/hooks/desk-files';
 import type { DeskRow as Row } from '@/hooks/use-import-desk';
 import { byteWords } from '@/lib/rules/byte-words';
-import type { Outcome } from '@/lib/rules/import-preview';
+import type { ArchivePreview } from '@/lib/rules/archive-preview';
+import { OUTCOMES, type Attention, type Outcome } from '@/lib/rules/import-preview';
 import { CATEGORIES, CATEGORY_WORDS } from '@/lib/rules/states';
 import { AssetEntry, VersionEntry } from './desk-entries';
 import { FilePath } from './file-path';
@@ -114,18 +115,37 @@ export const DeskRow = memo(function DeskRow({ row, top, index, compact, locked,
   );
 });
 
-function OutcomeWords({ row: { preview, stays, beside } }: { row: Row }) {
+function OutcomeWords({ row: { preview, archive, stays, beside } }: { row: Row }) {
+  if (archive) return <Marked attention={archive.attention} words={`unpacked · ${archive.files} files`} more={archiveWords(archive)} />;
   if (!preview) {
     const [words, why] = stays === null ? [`read with ${beside}`, ''] : ['stays here', stays];
     return <Words words={words} more={why} quiet />;
   }
   const { outcome, label, attention, categoryGuessed, warnings, notes } = preview;
   const words = [OUTCOME_WORDS[outcome], outcome === 'unmatched' ? null : label, categoryGuessed ? 'category guessed' : null].filter(Boolean).join(' · ');
+  return <Marked attention={attention} words={words} more={[...warnings, ...notes].join(' ')} />;
+}
+
+const ARCHIVE_WORDS: Record<Outcome, (count: number) => string> = {
+  new_asset: (count) => (count === 1 ? '1 new asset' : `${count} new assets`),
+  new_version: (count) => (count === 1 ? '1 new version' : `${count} new versions`),
+  next_take: (count) => (count === 1 ? '1 next take' : `${count} next takes`),
+  unchanged: (count) => `${count} unchanged`,
+  unmatched: (count) => `${count} without an asset`,
+};
+
+/** What comes out of an archive, then each warning with the path inside. */
+function archiveWords({ outcomes, warnings }: ArchivePreview): string {
+  const counts = OUTCOMES.flatMap((outcome) => (outcomes.has(outcome) ? [ARCHIVE_WORDS[outcome](outcomes.get(outcome)!)] : []));
+  return [`${counts.join(', ')}.`, ...warnings.map(({ entry, words }) => `${entry}: ${words}`)].join('\n');
+}
+
+function Marked({ attention, words, more }: { attention: Attention; words: string; more: string }) {
   const Mark = attention === 2 ? CircleX : TriangleAlert;
   return (
     <div className="flex min-w-0 items-start gap-2">
       {attention === 0 ? null : <Mark aria-label={attention === 2 ? 'Decide' : 'Look'} className={cn('mt-0.5 size-3.5 shrink-0', attention === 2 ? 'text-wrong' : 'text-ink-2')} />}
-      <Words words={words} more={[...warnings, ...notes].join(' ')} quiet={attention === 0} wrong={attention === 2} />
+      <Words words={words} more={more} quiet={attention === 0} wrong={attention === 2} />
     </div>
   );
 }
