@@ -40,7 +40,7 @@ export function measureCage(given: Cage, options: MeasureOptions): MeasuredCage 
   const frames = makeFrames(mesh, cage.positions, bodies);
   const ownCage = integrateCage(mesh, frames, bodies, blocked, options.scheme === 'polyhedral');
   const cageCaps = capBodies(mesh, frames, bodies, blocked, ownCage);
-  const limit = options.scheme === 'polyhedral' ? ownCage : integrateLimit(mesh, frames, bodies, blocked, options, options.shells === true);
+  const limit = options.scheme === 'polyhedral' ? ownCage : integrateLimit(mesh, frames, bodies, blocked, options, options.shells === true, bad);
   const caps = limit === ownCage ? cageCaps : capBodies(mesh, frames, bodies, blocked, limit);
   if (!limit.resolved) {
     findings.add('not_resolved', 'problem', null, null, () => 'The surface could not be resolved by refinement; lower the sharpness of its creases.');

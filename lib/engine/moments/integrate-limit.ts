@@ -36,11 +36,11 @@ export function integrateCage(mesh: Topology, frames: Frames, bodies: Bodies, bl
   return { ...sums, resolved: true };
 }
 
-/** Integrates the limit surface about the bodies' origins. */
-export function integrateLimit(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array, options: MeasureOptions, shells = false): Integrated {
+/** Integrates the limit surface about the bodies' origins, walls too where `shells`. `bad` are faces with a structural defect, where there are any. */
+export function integrateLimit(mesh: Topology, frames: Frames, bodies: Bodies, blocked: Uint8Array, options: MeasureOptions, shells = false, bad: Uint8Array | null = null): Integrated {
   const sums = emptySums(bodies.bodies);
   const level = levelZero(mesh, frames.positions, bodies.bodyOf, blocked, options.boundary, bodies.borders);
-  if (options.scheme !== 'doo-sabin') refineHoles(level, bodies);
+  if (options.scheme !== 'doo-sabin' && level.live.includes(0)) refineBeside(level, bad);
   if (shells) watchShells(level, options.scheme, frames.origins, bodies.bodies, sums);
   if (options.scheme === 'doo-sabin') return { ...sums, resolved: integrateDooSabin(level, options.boundary, frames.origins, sums) };
   const integrate = options.scheme === 'loop' ? integrateLoop : integrateCatmullClark;
@@ -48,13 +48,15 @@ export function integrateLimit(mesh: Topology, frames: Frames, bodies: Bodies, b
   return { ...sums, resolved };
 }
 
-/** Lets holes take part in the fans of the faces beside them: these are found isolated by all of their faces. What they add to bodies of holes nobody reads. */
-function refineHoles({ starts, vertexOf, vertices, faces, live }: LevelMesh, { partOf, holePart }: Bodies): void {
-  if (holePart < 0) return;
+/**
+ * Lets holes and sound faces of blocked bodies take part in the fans of the measured faces beside them: these are found isolated by all of their faces.
+ * What they add to bodies that are not measured nobody reads.
+ */
+function refineBeside({ starts, vertexOf, vertices, faces, live }: LevelMesh, bad: Uint8Array | null): void {
   const isMeasured = new Uint8Array(vertices);
   for (let face = 0; face < faces; face++) if (live[face] === OWN) for (let h = starts[face]; h < starts[face + 1]; h++) isMeasured[vertexOf[h]] = 1;
   for (let face = 0; face < faces; face++) {
-    if (partOf[face] !== holePart) continue;
+    if (live[face] === OWN || bad?.[face] === 1) continue;
     for (let h = starts[face]; h < starts[face + 1]; h++) if (isMeasured[vertexOf[h]] === 1) live[face] = LATER;
   }
 }
