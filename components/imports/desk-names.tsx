@@ -2,7 +2,7 @@
 
 import { useId, useState } from 'react';
 import { Button } from '@/components/ui/button';
-import { Field } from '@/components/ui/field';
+import { cn } from '@/components/ui/cn';
 import { Input } from '@/components/ui/input';
 import type { DeskRow } from '@/hooks/use-import-desk';
 
@@ -24,26 +24,31 @@ export function DeskNames({ pattern, standard, rows, disabled }: DeskNamesProps)
   const standing = pattern.fault === null ? `${matched}.${pattern.isOwn ? ' For this import alone.' : ''}` : pattern.fault;
   return (
     <div className="flex flex-col gap-2">
-      <div className="flex flex-wrap items-baseline gap-x-3 gap-y-1 text-13">
-        <span className="text-ink-3">Names</span>
-        <span className="text-ink-2">{pattern.typed.trim() === '' ? 'version token and folder' : <code className="font-mono">{pattern.typed.trim()}</code>}</span>
-        {isOpen ? null : <span className={unmatched > 0 ? 'text-ink' : 'text-ink-3'}>{standing}</span>}
-        <Button size="small" look="quiet" aria-expanded={isOpen} aria-controls={id} onClick={() => setIsOpen(!isOpen)}>
+      <div className="flex items-center gap-x-3 text-13">
+        <p className="flex min-w-0 flex-wrap items-baseline gap-x-3">
+          <span className="text-ink-3">Names</span>
+          {isOpen ? null : <span className="min-w-0 break-all text-ink-2">{pattern.typed.trim() === '' ? 'version token and folder' : <code className="font-mono">{pattern.typed.trim()}</code>}</span>}
+          <span role="status" className={cn(pattern.fault !== null ? 'text-wrong' : unmatched > 0 ? 'text-ink' : 'text-ink-3', !isOpen && unmatched === 0 && 'max-sm:sr-only')}>
+            {standing}
+          </span>
+        </p>
+        <Button size="small" look="quiet" className="max-sm:-mr-2.5 max-sm:ml-auto" aria-expanded={isOpen} aria-controls={id} onClick={() => setIsOpen(!isOpen)}>
           {isOpen ? 'Close' : 'Try a pattern'}
         </Button>
       </div>
       {isOpen ? (
-        <div id={id} className="flex flex-wrap items-end gap-x-3 gap-y-2">
-          <Field label="Name pattern" hint="{asset}, {version} and {category} stand for what is read, * for anything within a folder’s name. Empty: the built-in rule." className="w-full max-w-2xl">
-            <Input className="font-mono" spellCheck={false} autoComplete="off" value={pattern.typed} disabled={disabled} aria-invalid={pattern.fault !== null || undefined} placeholder="{category}/{asset}_v{version}" onChange={(event) => pattern.type(event.target.value)} />
-          </Field>
+        <div id={id} className="grid gap-x-2 gap-y-1 sm:grid-cols-[minmax(0,42rem)_auto] sm:justify-start">
+          <label htmlFor={`${id}-pattern`} className="text-13 text-ink-2 sm:col-span-2">
+            Name pattern
+          </label>
+          <Input id={`${id}-pattern`} aria-describedby={`${id}-hint`} className="font-mono" spellCheck={false} autoComplete="off" value={pattern.typed} disabled={disabled} aria-invalid={pattern.fault !== null || undefined} placeholder="{category}/{asset}_v{version}" onChange={(event) => pattern.type(event.target.value)} />
           {pattern.typed.trim() === (standard ?? '') ? null : (
-            <Button size="small" look="quiet" disabled={disabled} onClick={() => pattern.type(standard ?? '')}>
+            <Button disabled={disabled} onClick={() => pattern.type(standard ?? '')}>
               As the show has it
             </Button>
           )}
-          <p role="status" className={pattern.fault === null ? 'w-full text-13 text-ink-2' : 'w-full text-13 text-wrong'}>
-            {standing}
+          <p id={`${id}-hint`} className="text-13 text-ink-3 sm:col-span-2">
+            {'{asset}, {version} and {category} stand for what is read, * for anything within a folder’s name. Empty: the built-in rule.'}
           </p>
         </div>
       ) : null}

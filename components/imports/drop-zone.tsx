@@ -25,7 +25,7 @@ export function DropZone({ limits, onFiles, slim = false, disabled = false }: Dr
   const folder = useRef<HTMLInputElement>(null);
   const kinds = limits.extensions.map((extension) => extension.toUpperCase()).join(', ');
   const buttons = (
-    <div className="flex flex-wrap gap-2">
+    <div className={cn('flex flex-wrap gap-2', slim && 'max-sm:w-full max-sm:*:flex-1')}>
       <Button onClick={open} disabled={disabled}>
         <Upload aria-hidden />
         Choose files
@@ -42,7 +42,7 @@ export function DropZone({ limits, onFiles, slim = false, disabled = false }: Dr
       className={cn(
         'rounded border border-dashed transition-colors duration-100',
         isDragActive ? 'border-brass bg-selected' : 'border-edge',
-        slim ? 'flex flex-wrap items-center gap-x-5 gap-y-2 px-4 py-2.5' : 'flex min-h-72 flex-col items-start justify-center gap-4 px-6 py-12 md:px-12',
+        slim ? 'flex flex-wrap items-center gap-x-5 gap-y-2 max-sm:border-none sm:px-4 sm:py-2.5' : 'flex min-h-72 flex-col items-start justify-center gap-4 px-6 py-12 md:px-12',
       )}
     >
       <div hidden>
@@ -59,7 +59,7 @@ export function DropZone({ limits, onFiles, slim = false, disabled = false }: Dr
           }}
         />
       </div>
-      <div className={slim ? 'min-w-0 flex-1 basis-60' : 'max-w-xl'}>
+      <div className={slim ? 'min-w-0 flex-1 basis-60 max-sm:hidden' : 'max-w-xl'}>
         <p className={slim ? 'text-14' : 'text-22 font-medium'}>{isProcessing ? 'Reading the folder…' : isDragActive ? 'Let go to look at them' : slim ? 'Drop more files or folders' : 'Drop cages, or a folder of them'}</p>
         <p className={cn('text-ink-2', slim ? 'text-13' : 'mt-2 text-14')}>
           {kinds}, up to {byteWords(limits.max_file_bytes)} a file, {limits.max_files.toLocaleString('en')} files and {byteWords(limits.max_import_bytes)} an import. There is room for {byteWords(limits.left_bytes)}.

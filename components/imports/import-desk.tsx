@@ -69,7 +69,7 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
   return (
     <div className="flex min-h-0 flex-1 flex-col">
       {phase === 'choosing' ? unfinished : null}
-      <div className="flex flex-col gap-4 px-4 pt-4 md:px-6">
+      <div className="flex flex-col gap-2 px-4 pt-3 sm:gap-4 sm:pt-4 md:px-6">
         <DropZone limits={preparation} onFiles={desk.add} slim disabled={locked} />
         <DeskSettings
           options={desk.options}
@@ -86,7 +86,7 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
                 {one.label}
               </Chip>
             ))}
-          <Button size="small" look="quiet" className="ml-auto shrink-0" onClick={() => desk.setOrder(desk.order === 'path' ? 'attention' : 'path')}>
+          <Button size="small" look="quiet" className="-mr-2.5 ml-auto shrink-0" onClick={() => desk.setOrder(desk.order === 'path' ? 'attention' : 'path')}>
             <ArrowDownUp aria-hidden />
             {desk.order === 'path' ? 'By path' : 'Needs a look first'}
           </Button>
@@ -119,10 +119,10 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
             </p>
           ) : null}
         </div>
-        <div className="flex flex-wrap gap-2">
-          {phase === 'choosing' ? <Button look="quiet" onClick={desk.clear}>Clear the list</Button> : null}
+        <div className="flex flex-wrap gap-2 max-sm:w-full max-sm:*:flex-1">
+          {phase === 'choosing' ? <Button onClick={desk.clear}>Clear the list</Button> : null}
           {phase === 'sending' ? <Button onClick={desk.halt}>Stop sending</Button> : null}
-          {phase === 'stopped' ? <Button look="quiet" onClick={() => void desk.giveUp()}>Give up</Button> : null}
+          {phase === 'stopped' ? <Button onClick={() => void desk.giveUp()}>Give up</Button> : null}
           {phase === 'stopped' && rows.some((row) => row.upload?.state === 'sent') ? <Button onClick={() => void desk.submit()}>Go on with what arrived</Button> : null}
           <Button look="filled" disabled={locked || going.length === 0} onClick={() => void desk.start()}>
             {phase === 'stopped' ? 'Send the rest' : `Import ${filesOf(going.length)}`}

@@ -68,7 +68,7 @@ export function previewImport(files: readonly DroppedFile[], pattern: string | n
     const [plan, file] = [planned[index], files[index]];
     const asset = plan.asset === null ? undefined : knownOf.get(plan.asset);
     if (plan.asset === null) {
-      rows[index] = { ...plan, outcome: 'unmatched', label: null, categoryGuessed: false, attention: 2, warnings: ['The name does not match the pattern. Give an asset, or leave the file out.'], notes: [] };
+      rows[index] = { ...plan, outcome: 'unmatched', label: null, categoryGuessed: false, attention: 2, warnings: ['The name does not match. Give an asset or leave it out.'], notes: [] };
       continue;
     }
     const standing = standings.get(plan.asset) ?? standingOf(asset);

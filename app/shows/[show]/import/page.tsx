@@ -15,7 +15,7 @@ export default async function ImportPage({ params }: { params: Promise<{ show: s
   const { code, archivedAt } = access.show;
   const mayImport = may(access.role, 'importCages') && archivedAt === null;
   const list = (
-    <Button asChild look="quiet">
+    <Button asChild>
       <Link href={`/shows/${code}/imports`}>Imports so far</Link>
     </Button>
   );
