@@ -116,7 +116,7 @@ export const DeskRow = memo(function DeskRow({ row, top, index, compact, locked,
 });
 
 function OutcomeWords({ row: { preview, archive, stays, beside } }: { row: Row }) {
-  if (archive) return <Marked attention={archive.attention} words={`unpacked · ${archive.files} files`} more={archiveWords(archive)} />;
+  if (archive) return <Marked attention={archive.attention} words={`unpacked · ${archive.files} files`} more={archiveWords(archive)} whole={[archiveWords(archive), ...archive.warnings.map(({ entry, words }) => `${entry}: ${words}`)].join('\n')} />;
   if (!preview) {
     const [words, why] = stays === null ? [`read with ${beside}`, ''] : ['stays here', stays];
     return <Words words={words} more={why} quiet />;
@@ -134,25 +134,28 @@ const ARCHIVE_WORDS: Record<Outcome, (count: number) => string> = {
   unmatched: (count) => `${count} without an asset`,
 };
 
-/** What comes out of an archive, then each warning with the path inside. */
+/** What comes out of an archive, and of how many there is more to know. */
 function archiveWords({ outcomes, warnings }: ArchivePreview): string {
   const counts = OUTCOMES.flatMap((outcome) => (outcomes.has(outcome) ? [ARCHIVE_WORDS[outcome](outcomes.get(outcome)!)] : []));
-  return [`${counts.join(', ')}.`, ...warnings.map(({ entry, words }) => `${entry}: ${words}`)].join('\n');
+  const first = warnings.at(0);
+  const more = first === undefined ? '' : warnings.length === 1 ? ` ${first.words}` : ` ${warnings.length} need a look.`;
+  return `${counts.join(', ')}.${more}`;
 }
 
-function Marked({ attention, words, more }: { attention: Attention; words: string; more: string }) {
+function Marked({ attention, words, more, whole }: { attention: Attention; words: string; more: string; whole?: string }) {
   const Mark = attention === 2 ? CircleX : TriangleAlert;
   return (
     <div className="flex min-w-0 items-start gap-2">
       {attention === 0 ? null : <Mark aria-label={attention === 2 ? 'Decide' : 'Look'} className={cn('mt-0.5 size-3.5 shrink-0', attention === 2 ? 'text-wrong' : 'text-ink-2')} />}
-      <Words words={words} more={more} quiet={attention === 0} wrong={attention === 2} />
+      <Words words={words} more={more} whole={whole} quiet={attention === 0} wrong={attention === 2} />
     </div>
   );
 }
 
-function Words({ words, more, quiet = false, wrong = false }: { words: string; more: string; quiet?: boolean; wrong?: boolean }) {
+/** `whole` is all there is to say where `more` is a part of it. */
+function Words({ words, more, whole = more, quiet = false, wrong = false }: { words: string; more: string; whole?: string; quiet?: boolean; wrong?: boolean }) {
   return (
-    <div className="min-w-0 text-13" title={more || undefined}>
+    <div className="min-w-0 text-13" title={whole || undefined}>
       <p className={cn('truncate', wrong ? 'text-wrong' : quiet ? 'text-ink-2' : 'text-ink')}>{words}</p>
       {more === '' ? null : <p className={cn('truncate text-12', quiet ? 'text-ink-3' : 'text-ink-2')}>{more}</p>}
     </div>

@@ -6,6 +6,7 @@ import { useCallback, useMemo, useRef, useState } from 'react';
 import { Button } from '@/components/ui/button';
 import { Chip } from '@/components/ui/chip';
 import { goesUp, useImportDesk } from '@/hooks/use-import-desk';
+import { useOnline } from '@/hooks/use-online';
 import { byteWords } from '@/lib/rules/byte-words';
 import type { ImportPreparation } from '@/lib/rules/import-answer';
 import { readName } from '@/lib/rules/name-pattern';
@@ -25,6 +26,7 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
   const router = useRouter();
   const onSubmitted = useCallback((id: string) => router.push(`/shows/${preparation.show}/imports/${id}`), [preparation.show, router]);
   const desk = useImportDesk(preparation, onSubmitted);
+  const isOnline = useOnline();
   const [filter, setFilter] = useState('all');
   const [chosen, setChosen] = useState<ReadonlySet<string>>(new Set());
   const lastChosen = useRef<string | null>(null);
@@ -105,7 +107,7 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
       <footer className="sticky bottom-0 flex flex-wrap items-center gap-x-5 gap-y-2 border-t border-rule bg-bench px-4 py-3 md:px-6">
         <div className="min-w-0 flex-1 basis-64">
           {locked ? (
-            <SendingWords sent={rows.filter((row) => row.upload?.state === 'sent').length} total={going.length} share={bytes === 0 ? 1 : sentBytes / bytes} isWaiting={going.some((row) => row.upload?.state === 'waiting')} />
+            <SendingWords sent={rows.filter((row) => row.upload?.state === 'sent').length} total={going.length} share={bytes === 0 ? 1 : sentBytes / bytes} isWaiting={!isOnline || going.some((row) => row.upload?.state === 'waiting')} />
           ) : (
             <p className="text-14 text-ink-2">
               {filesOf(going.length)}, {byteWords(bytes)}
@@ -124,9 +126,11 @@ export function ImportDesk({ preparation }: { preparation: ImportPreparation }) 
           {phase === 'sending' ? <Button onClick={desk.halt}>Stop sending</Button> : null}
           {phase === 'stopped' ? <Button onClick={() => void desk.giveUp()}>Give up</Button> : null}
           {phase === 'stopped' && rows.some((row) => row.upload?.state === 'sent') ? <Button onClick={() => void desk.submit()}>Go on with what arrived</Button> : null}
-          <Button look="filled" disabled={locked || going.length === 0} onClick={() => void desk.start()}>
-            {phase === 'stopped' ? 'Send the rest' : `Import ${filesOf(going.length)}`}
-          </Button>
+          {locked ? null : (
+            <Button look="filled" disabled={going.length === 0} onClick={() => void desk.start()}>
+              {phase === 'stopped' ? 'Send the rest' : `Import ${filesOf(going.length)}`}
+            </Button>
+          )}
         </div>
       </footer>
     </div>

@@ -25,15 +25,19 @@ export function PartRenames({ show, scope, mayDecide, waiting = false }: PartRen
   if (open.length === 0 && !isOpen) return null;
   const sure = open.flatMap((one) => one.proposals.map((proposal) => ({ one, proposal })));
   return (
-    <section aria-label="Renamed parts" className="flex flex-wrap items-center gap-x-4 gap-y-2 border-b border-rule bg-bench px-4 py-2.5 text-14 md:px-6">
-      <p className={sure.length > 0 ? 'text-ink' : 'text-ink-2'}>{standingWords(open)}</p>
-      <Button size="small" onClick={() => setIsOpen(true)}>
-        {mayDecide ? (sure.length > 0 ? 'Decide' : 'Match by hand') : 'Look'}
-      </Button>
+    <section aria-label="Renamed parts">
+      {open.length === 0 ? null : (
+        <div className="flex flex-wrap items-center gap-x-4 gap-y-2 border-b border-rule bg-bench px-4 py-2.5 text-14 md:px-6">
+          <p className={sure.length > 0 ? 'text-ink' : 'text-ink-2'}>{standingWords(open)}</p>
+          <Button size="small" onClick={() => setIsOpen(true)}>
+            {mayDecide ? (sure.length > 0 ? 'Decide' : 'Match by hand') : 'Look'}
+          </Button>
+        </div>
+      )}
       <Dialog
         open={isOpen}
         onOpenChange={setIsOpen}
-        title={sure.length > 0 ? 'Renamed parts' : 'Parts by hand'}
+        title={sure.length > 0 || open.length === 0 ? 'Renamed parts' : 'Parts by hand'}
         description="The same part keeps its mass, approvals and locks under the new name. Locked rows stay as they are."
         className="sm:w-[44rem]"
       >
