@@ -1,4 +1,5 @@
 import { byteWords } from '@/lib/rules/byte-words';
+import { extensionOf } from '@/lib/rules/file-extension';
 import type { ImportPreparation } from '@/lib/rules/import-answer';
 import { isSideFile, meshOfSideFile } from '@/lib/rules/side-files';
 import type { Category } from '@/lib/rules/states';
@@ -19,8 +20,6 @@ export interface Said {
 export const NOTHING_SAID: Said = { asset: null, version: null, category: null };
 
 export type DeskLimits = Pick<ImportPreparation, 'extensions' | 'max_file_bytes' | 'max_files' | 'max_import_bytes' | 'left_bytes'>;
-
-const extensionOf = (path: string): string => /\.([^./]+)$/.exec(path)?.[1].toLowerCase() ?? '';
 
 /** The path of a dropped file inside what was dropped. */
 function pathOf(file: File): string {

@@ -2,6 +2,7 @@
 
 import { useEffect, useRef, useState } from 'react';
 import { filesOfArchive } from '@/lib/rules/archive-preview';
+import { extensionOf } from '@/lib/rules/file-extension';
 import { listZipEntries } from '@/lib/rules/zip-entries';
 import type { DroppedFile } from './desk-files';
 
@@ -11,7 +12,7 @@ export function useDroppedArchives(files: readonly DroppedFile[], extensions: re
   const asked = useRef(new Set<File>());
   useEffect(() => {
     for (const { path, file } of files) {
-      if (!/\.zip$/i.test(path) || asked.current.has(file)) continue;
+      if (extensionOf(path) !== 'zip' || asked.current.has(file)) continue;
       asked.current.add(file);
       // What cannot be read is shown like any file: the import says what is wrong with it.
       void listZipEntries(file).catch(() => null).then((entries) => {

@@ -1,3 +1,4 @@
+import { extensionOf } from './file-extension';
 import type { Attention, Outcome, PreviewRow } from './import-preview';
 import { isSideFile } from './side-files';
 import type { ZipEntry } from './zip-entries';
@@ -12,16 +13,14 @@ export interface ArchivePreview {
   warnings: { entry: string; words: string }[];
 }
 
-const kindOf = (name: string): string => /\.([^./\\]+)$/.exec(name)?.[1].toLowerCase() ?? '';
-
 /**
  * The entries of an archive that become files of their own, in the order of their names; null where it holds one mesh, and is that mesh. As the import unpacks it,
  * except that layers which a USD file among them refers to are counted too: nobody has read it yet.
  * @param extensions of mesh files, lower case, without the dot
  */
 export function filesOfArchive(entries: readonly ZipEntry[], extensions: readonly string[]): string[] | null {
-  const meshes = entries.map(({ name }) => name).filter((name) => extensions.includes(kindOf(name)) && !isSideFile(name));
-  const isSeveral = meshes.length > 1 || meshes.some((name) => ['zip', 'usdz'].includes(kindOf(name)));
+  const meshes = entries.map(({ name }) => name).filter((name) => extensions.includes(extensionOf(name)) && !isSideFile(name));
+  const isSeveral = meshes.length > 1 || meshes.some((name) => ['zip', 'usdz'].includes(extensionOf(name)));
   return isSeveral ? meshes.sort() : null;
 }
 
